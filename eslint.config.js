@@ -26,7 +26,9 @@ const oneWay = Object.entries(floors).map(([floor, above]) => ({
           ...(floor === 'strategy'
             ? [{ regex: '^(node:|react|expo|express|drizzle|pg$|zod)', message: 'strategy/ is pure: no platform.' }]
             : []),
-          ...(floor === 'shared' ? [{ regex: '^(node:|react|expo|express|drizzle|pg$)', message: 'shared/ runs on both sides.' }] : []),
+          ...(floor === 'shared'
+            ? [{ regex: '^(node:|react|expo|express|drizzle|pg$)', message: 'shared/ runs on both sides.' }]
+            : []),
           ...(floor === 'components' || floor === 'app'
             ? [{ regex: '^mathjs', message: 'mathjs lives in strategy/rules/ and is built into a worker.' }]
             : []),

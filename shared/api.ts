@@ -1,0 +1,33 @@
+import { cardEndpoints, requestEndpoints } from './cards.ts';
+import { cornerPlanEndpoints } from './corner-plans.ts';
+import type { Endpoint } from './endpoint.ts';
+import { gradeEndpoints, machineEndpoints, nozzleEndpoints } from './machines.ts';
+import { partEndpoints } from './parts.ts';
+import { peopleEndpoints } from './people.ts';
+import { plateEndpoints } from './plates.ts';
+import { healthEndpoints, recordEndpoints } from './record.ts';
+import { reportEndpoints } from './reports.ts';
+import { sessionEndpoints } from './sessions.ts';
+import { reviewEndpoints, revisionEndpoints, strategyEndpoints } from './strategies.ts';
+
+/** Every endpoint by name, for the description and the tests that walk them all. Screens import their own noun instead. */
+export const endpoints: Readonly<Record<string, Endpoint>> = Object.fromEntries(
+  Object.entries({
+    session: sessionEndpoints,
+    person: peopleEndpoints,
+    machine: machineEndpoints,
+    nozzle: nozzleEndpoints,
+    grade: gradeEndpoints,
+    strategy: strategyEndpoints,
+    revision: revisionEndpoints,
+    review: reviewEndpoints,
+    plate: plateEndpoints,
+    card: cardEndpoints,
+    request: requestEndpoints,
+    part: partEndpoints,
+    cornerPlan: cornerPlanEndpoints,
+    report: reportEndpoints,
+    record: recordEndpoints,
+    service: healthEndpoints,
+  }).flatMap(([noun, group]) => Object.entries(group).map(([name, one]) => [`${noun}.${name}`, one as Endpoint])), // each group's endpoints are narrower
+);

@@ -1,0 +1,125 @@
+import { z } from 'zod';
+import { idSchema, instantSchema, personSchema, pointSchema, quantity, versionSchema } from './basics.ts';
+import { endpoint } from './endpoint.ts';
+import { segmentSchema } from './parts.ts';
+
+/** `ease` and `round` are named by the trade too; the plan offers them once their geometry and heat are computed. */
+export const treatments = ['loop', 'dwell', 'leave'] as const;
+export type Treatment = (typeof treatments)[number];
+
+/** Plate around the part: free skeleton on each side, m. */
+export const skeletonSchema = z.strictObject({
+  left: quantity(0, 20, '0 to 20 000 mm'),
+  right: quantity(0, 20, '0 to 20 000 mm'),
+  below: quantity(0, 20, '0 to 20 000 mm'),
+  above: quantity(0, 20, '0 to 20 000 mm'),
+});
+
+export const cornerOptionSchema = z.object({
+  treatment: z.enum(treatments),
+  fits: z.boolean(),
+  returnTemperature: z.number().nullable(), // K
+  addedTime: z.number().nullable(), // s
+  why: z.string(),
+});
+
+export const plannedCornerSchema = z.object({
+  id: z.string(),
+  contourId: z.string(),
+  at: pointSchema,
+  angle: z.number(), // rad, inside the part
+  convex: z.boolean(),
+  treatment: z.enum(treatments),
+  why: z.string(),
+  chosenBy: z.enum(['rule', 'person']),
+  /** Return temperature without a treatment, with it, and of a straight edge at this feed, K. */
+  untreated: z.number(),
+  treated: z.number(),
+  straightEdge: z.number(),
+  addedTime: z.number(), // s
+  dwell: z.number().nullable(), // s
+  loop: z
+    .object({
+      radius: z.number(),
+      extension: z.number(),
+      length: z.number(),
+      slugArea: z.number(),
+      segments: z.array(segmentSchema),
+    })
+    .nullable(),
+  options: z.array(cornerOptionSchema),
+  /** Still above the limit, or refused: said on the drawing. */
+  trouble: z.string().nullable(),
+});
+export type PlannedCorner = z.infer<typeof plannedCornerSchema>;
+
+export const cornerPlanSchema = z.object({
+  id: idSchema,
+  version: versionSchema,
+  part: z.object({ id: idSchema, name: z.string() }),
+  revision: z.object({
+    id: idSchema,
+    number: z.number().int(),
+    strategyId: idSchema,
+    strategyName: z.string(),
+    state: z.string(),
+    approved: z.boolean(),
+  }),
+  thickness: z.number(), // m
+  plateTemperature: z.number(), // K
+  skeleton: skeletonSchema,
+  overrides: z.record(z.string(), z.enum(treatments)),
+  limit: z.number(), // K
+  corners: z.array(plannedCornerSchema),
+  totals: z.object({
+    corners: z.number().int(),
+    loops: z.number().int(),
+    dwells: z.number().int(),
+    trouble: z.number().int(),
+    addedTime: z.number(), // s
+    addedLength: z.number(), // m
+    addedOxygen: z.number(), // kg
+    hottestUntreated: z.number().nullable(), // K
+    hottestTreated: z.number().nullable(), // K
+  }),
+  changedAt: instantSchema,
+  changedBy: personSchema,
+});
+export type CornerPlan = z.infer<typeof cornerPlanSchema>;
+
+const planParams = z.object({ planId: idSchema });
+const choices = {
+  plateTemperature: quantity(273.15, 900, '0 to 626 °C'),
+  thickness: quantity(1e-3, 60e-3, '1 to 60 mm'),
+  skeleton: skeletonSchema,
+  overrides: z.record(z.string().max(40), z.enum(treatments)),
+};
+
+export const cornerPlanEndpoints = {
+  get: endpoint({
+    method: 'GET',
+    path: '/api/corner-plans/:planId',
+    summary: 'A corner plan',
+    access: 'card.read',
+    params: planParams,
+    answer: cornerPlanSchema,
+  }),
+  add: endpoint({
+    method: 'POST',
+    path: '/api/corner-plans',
+    summary: 'Plan a part’s corners with a strategy revision',
+    access: 'cornerPlan.write',
+    body: z.strictObject({ id: idSchema, partId: idSchema, revisionId: idSchema, ...choices }),
+    answer: cornerPlanSchema,
+  }),
+  redo: endpoint({
+    method: 'PUT',
+    path: '/api/corner-plans/:planId',
+    summary: 'Plan again with other choices',
+    access: 'cornerPlan.write',
+    params: planParams,
+    body: z.strictObject({ revisionId: idSchema, ...choices }),
+    answer: cornerPlanSchema,
+    ifMatch: true,
+  }),
+};
