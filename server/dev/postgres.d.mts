@@ -1,0 +1,19 @@
+export type Cluster = {
+  readonly port: number;
+  superUrl(database: string): string;
+  ownerUrl(database: string): string;
+  appUrl(database: string): string;
+  stop(): void;
+  destroy(): void;
+};
+export type Secrets = {
+  readonly superuser: string;
+  readonly owner: string;
+  readonly application: string;
+  readonly session: string;
+  readonly demo: string;
+};
+export function ensurePostgres(): string;
+export function secrets(kind: 'product' | 'test'): Secrets;
+export function startCluster(given: { kind: 'product' | 'test' }): Promise<Cluster>;
+export function ensureDatabase(cluster: Cluster, name: string): Promise<{ made: boolean }>;
