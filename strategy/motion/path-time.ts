@@ -1,0 +1,101 @@
+import { pointCross, pointDot } from '../path/point.ts';
+import type { Segment } from '../path/segment.ts';
+import { segmentLength, segmentTangentAt } from '../path/segment.ts';
+import { arcFeedLimit, junctionFeedLimit } from './limits.ts';
+import type { DriveLimits } from './speed-change.ts';
+import { speedChangeDistance, speedChangeTime, speedReached } from './speed-change.ts';
+
+/** What bounds the speed along a path. */
+export type PathDrive = DriveLimits & {
+  readonly feed: number; // m/s
+  /** How far the machine may leave the path at a break of direction, m; 0, the default, stops at each. */
+  readonly junctionDeviation?: number;
+};
+
+/** Time along a path, s, its length, m, and how often the machine comes to rest on the way. */
+export type PathTime = { readonly time: number; readonly length: number; readonly stops: number };
+
+/** Breaks of direction below this are rounding, rad. */
+const smoothBreak = 1e-3;
+
+/**
+ * Time, s, along a path from rest to rest. Each arc is bounded by √(a r), each break of direction by the junction limit, and the
+ * speeds between them by acceleration and jerk, looking ahead over the whole path. Acceleration returns to 0 where the bound changes,
+ * which is on the slow side by at most a/j a change. Throws RangeError for a feed that is not positive.
+ */
+export function pathTime(path: readonly Segment[], drive: PathDrive): PathTime {
+  if (!(drive.feed > 0 && drive.feed < Infinity)) throw new RangeError(`feed ${drive.feed} m/s is outside (0, ∞)`);
+  const spans = spansOf(path, drive);
+  const speeds = lookAhead(spans, drive);
+  let time = 0;
+  let length = 0;
+  let stops = 0;
+  spans.forEach((span, i) => {
+    const from = speeds[i] ?? 0;
+    const to = speeds[i + 1] ?? 0;
+    time += spanTime(span, from, to, drive);
+    length += span.length;
+    if (i > 0 && from === 0) stops++;
+  });
+  return { time, length, stops };
+}
+
+/** Neighbouring pieces under one bound with no break between them. `entry` is the bound at its start. */
+type Span = { length: number; readonly limit: number; readonly entry: number };
+
+function spansOf(path: readonly Segment[], drive: PathDrive): Span[] {
+  const spans: Span[] = [];
+  let before: Segment | null = null;
+  for (const segment of path) {
+    const length = segmentLength(segment);
+    if (length === 0) continue;
+    const limit =
+      segment.kind === 'arc' ? Math.min(drive.feed, arcFeedLimit(drive.acceleration, segment.radius)) : drive.feed;
+    const last = spans.at(-1);
+    const entry = before ? junction(before, segment, drive) : 0;
+    if (last && last.limit === limit && entry >= limit) last.length += length;
+    else spans.push({ length, limit, entry: Math.min(entry, limit, last ? last.limit : 0) });
+    before = segment;
+  }
+  return spans;
+}
+
+function junction(before: Segment, after: Segment, drive: PathDrive): number {
+  const u = segmentTangentAt(before, 1);
+  const w = segmentTangentAt(after, 0);
+  const turn = Math.abs(Math.atan2(pointCross(u, w), pointDot(u, w)));
+  if (turn < smoothBreak) return Infinity;
+  return junctionFeedLimit(drive.acceleration, drive.junctionDeviation ?? 0, Math.PI - turn);
+}
+
+/** Speed at the start of each span and at the end of the last: forwards what can be reached, backwards what can be braked. */
+function lookAhead(spans: readonly Span[], drive: DriveLimits): number[] {
+  const speeds = [0];
+  spans.forEach((span, i) => {
+    const bound = spans[i + 1]?.entry ?? 0;
+    speeds.push(Math.min(bound, speedReached(speeds[i] ?? 0, span.length, span.limit, drive)));
+  });
+  for (let i = spans.length - 1; i >= 0; i--) {
+    const span = spans[i];
+    if (!span) continue;
+    speeds[i] = Math.min(speeds[i] ?? 0, speedReached(speeds[i + 1] ?? 0, span.length, span.limit, drive));
+  }
+  return speeds;
+}
+
+function spanTime(span: Span, from: number, to: number, drive: DriveLimits): number {
+  const cost = (peak: number) => speedChangeDistance(from, peak, drive) + speedChangeDistance(peak, to, drive);
+  let peak = span.limit;
+  if (cost(peak) > span.length) {
+    let low = Math.max(from, to);
+    let high = span.limit;
+    for (let i = 0; i < 60; i++) {
+      const middle = (low + high) / 2;
+      if (cost(middle) <= span.length) low = middle;
+      else high = middle;
+    }
+    peak = low;
+  }
+  const cruise = Math.max(0, span.length - cost(peak));
+  return speedChangeTime(peak - from, drive) + cruise / peak + speedChangeTime(to - peak, drive);
+}

@@ -1,0 +1,126 @@
+import type { Point } from './point.ts';
+import { pointAdd, pointCross, pointDistance, pointDot, pointLength, pointScale, pointSubtract } from './point.ts';
+import type { Arc, Line, Segment } from './segment.ts';
+import { arcCovers, arcPointAtAngle, segmentEnd, segmentStart } from './segment.ts';
+
+/** A least distance and the two places where it is taken, m. */
+export type Nearest = { readonly distance: number; readonly onFirst: Point; readonly onSecond: Point };
+
+/** The place of the segment nearest to a point, m. */
+export function segmentNearestPoint(segment: Segment, p: Point): Point {
+  if (segment.kind === 'line') {
+    const along = pointSubtract(segment.end, segment.start);
+    const square = pointDot(along, along);
+    if (square === 0) return segment.start;
+    const t = pointDot(pointSubtract(p, segment.start), along) / square;
+    return pointAdd(segment.start, pointScale(along, Math.min(1, Math.max(0, t))));
+  }
+  const out = pointSubtract(p, segment.centre);
+  const angle = pointLength(out) > 0 ? Math.atan2(out.y, out.x) : segment.startAngle;
+  if (arcCovers(segment, angle)) return arcPointAtAngle(segment, angle);
+  const a = segmentStart(segment);
+  const b = segmentEnd(segment);
+  return pointDistance(a, p) <= pointDistance(b, p) ? a : b;
+}
+
+/** Distance of a point from a segment, m. */
+export const segmentPointDistance = (segment: Segment, p: Point): number =>
+  pointDistance(segmentNearestPoint(segment, p), p);
+
+/** Places where two segments meet; overlapping collinear or concentric pieces give none (their ends are found by distance). */
+export function segmentMeetings(a: Segment, b: Segment): Point[] {
+  if (a.kind === 'line' && b.kind === 'line') return lineMeetsLine(a, b);
+  if (a.kind === 'line' && b.kind === 'arc') return lineMeetsArc(a, b);
+  if (a.kind === 'arc' && b.kind === 'line') return lineMeetsArc(b, a);
+  if (a.kind === 'arc' && b.kind === 'arc') return arcMeetsArc(a, b);
+  return [];
+}
+
+/**
+ * Least distance between two segments, m, exact for lines and arcs: 0 where they meet, otherwise taken at an end of one of
+ * them or, with an arc, along a line through its centre.
+ */
+export function segmentDistance(a: Segment, b: Segment): Nearest {
+  const meeting = segmentMeetings(a, b)[0];
+  if (meeting) return { distance: 0, onFirst: meeting, onSecond: meeting };
+  let best: Nearest = { distance: Infinity, onFirst: segmentStart(a), onSecond: segmentStart(b) };
+  const offer = (onFirst: Point, onSecond: Point) => {
+    const distance = pointDistance(onFirst, onSecond);
+    if (distance < best.distance) best = { distance, onFirst, onSecond };
+  };
+  for (const p of [segmentStart(a), segmentEnd(a)]) offer(p, segmentNearestPoint(b, p));
+  for (const p of [segmentStart(b), segmentEnd(b)]) offer(segmentNearestPoint(a, p), p);
+  // the common normal passes through the centre of every arc involved
+  if (a.kind === 'arc') offerThroughCentre(a, b, offer);
+  if (b.kind === 'arc') offerThroughCentre(b, a, (q, p) => offer(p, q));
+  return best;
+}
+
+function offerThroughCentre(arc: Arc, other: Segment, offer: (onArc: Point, onOther: Point) => void): void {
+  const directions: number[] = [];
+  if (other.kind === 'line') {
+    const foot = segmentNearestPoint(other, arc.centre);
+    directions.push(Math.atan2(foot.y - arc.centre.y, foot.x - arc.centre.x));
+  } else if (pointDistance(arc.centre, other.centre) > 0) {
+    directions.push(Math.atan2(other.centre.y - arc.centre.y, other.centre.x - arc.centre.x));
+  } else {
+    // concentric: the ends, which are tried already, are as near as anything
+    return;
+  }
+  for (const direction of directions) {
+    for (const angle of [direction, direction + Math.PI]) {
+      if (!arcCovers(arc, angle)) continue;
+      const onArc = arcPointAtAngle(arc, angle);
+      offer(onArc, segmentNearestPoint(other, onArc));
+    }
+  }
+}
+
+function lineMeetsLine(a: Line, b: Line): Point[] {
+  const u = pointSubtract(a.end, a.start);
+  const w = pointSubtract(b.end, b.start);
+  const denominator = pointCross(u, w);
+  if (denominator === 0) return [];
+  const between = pointSubtract(b.start, a.start);
+  const s = pointCross(between, w) / denominator;
+  const t = pointCross(between, u) / denominator;
+  return s >= 0 && s <= 1 && t >= 0 && t <= 1 ? [pointAdd(a.start, pointScale(u, s))] : [];
+}
+
+function lineMeetsArc(line: Line, arc: Arc): Point[] {
+  const u = pointSubtract(line.end, line.start);
+  const f = pointSubtract(line.start, arc.centre);
+  const a = pointDot(u, u);
+  if (a === 0) return [];
+  const b = pointDot(f, u) / a;
+  const foot = pointSubtract(f, pointScale(u, b)); // from the centre, square to the line: no cancellation
+  const inside = (arc.radius * arc.radius - pointDot(foot, foot)) / a;
+  if (inside < 0) return [];
+  const root = Math.sqrt(inside);
+  const found: Point[] = [];
+  for (const s of root === 0 ? [-b] : [-b - root, -b + root]) {
+    if (s < 0 || s > 1) continue;
+    const p = pointAdd(line.start, pointScale(u, s));
+    if (arcCovers(arc, Math.atan2(p.y - arc.centre.y, p.x - arc.centre.x))) found.push(p);
+  }
+  return found;
+}
+
+function arcMeetsArc(a: Arc, b: Arc): Point[] {
+  const between = pointSubtract(b.centre, a.centre);
+  const d = pointLength(between);
+  if (d === 0 || d > a.radius + b.radius || d < Math.abs(a.radius - b.radius)) return [];
+  const along = (d * d + a.radius * a.radius - b.radius * b.radius) / (2 * d);
+  const height = Math.sqrt(Math.max(0, a.radius * a.radius - along * along));
+  const e = pointScale(between, 1 / d);
+  const found: Point[] = [];
+  for (const side of height === 0 ? [0] : [-height, height]) {
+    const p = {
+      x: a.centre.x + along * e.x - side * e.y,
+      y: a.centre.y + along * e.y + side * e.x,
+    };
+    const covers = (arc: Arc) => arcCovers(arc, Math.atan2(p.y - arc.centre.y, p.x - arc.centre.x));
+    if (covers(a) && covers(b)) found.push(p);
+  }
+  return found;
+}

@@ -1,0 +1,42 @@
+import { loopExtension } from './loop.ts';
+
+/** Bounds of a loop's size. Lengths in m. */
+export type LoopBounds = {
+  /** The design number. */
+  readonly radius: number;
+  readonly minExtension: number;
+  readonly maxExtension: number;
+  /** Smallest arc the machine follows at cutting feed. */
+  readonly smallestArc: number;
+};
+
+export type LoopRadii =
+  { readonly kind: 'radii'; readonly radii: readonly number[] } | { readonly kind: 'none'; readonly why: string };
+
+/** Sizes tried from the design number down to the smallest allowed. */
+const steps = 8;
+
+/**
+ * Radii to try on a corner of the given angle (rad), m, largest first: the design number, or what the extension's bounds leave of it, then
+ * smaller ones in equal ratios down to the machine's smallest arc or the least extension, whichever ends first.
+ */
+export function loopRadii(angle: number, bounds: LoopBounds): LoopRadii {
+  if (!(angle > 0 && angle < Math.PI)) throw new RangeError(`corner angle ${angle} rad is outside (0, π)`);
+  const slope = Math.tan(angle / 2);
+  const least = Math.max(bounds.smallestArc, bounds.minExtension * slope);
+  const most = bounds.maxExtension * slope;
+  if (least > most) {
+    return {
+      kind: 'none',
+      why:
+        `at ${((angle * 180) / Math.PI).toFixed(0)}° an arc of ${(least * 1000).toFixed(1)} mm, the least the machine and the rules allow, ` +
+        `needs an extension of ${(loopExtension(least, angle) * 1000).toFixed(1)} mm; the rules end at ${(bounds.maxExtension * 1000).toFixed(1)} mm`,
+    };
+  }
+  const first = Math.min(most, Math.max(least, bounds.radius));
+  if (first <= least * (1 + 1e-9)) return { kind: 'radii', radii: [first] };
+  return {
+    kind: 'radii',
+    radii: Array.from({ length: steps + 1 }, (_, i) => first * (least / first) ** (i / steps)),
+  };
+}
