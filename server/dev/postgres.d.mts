@@ -1,4 +1,7 @@
 export type Cluster = {
+  /** Where the cluster lies, with its secrets. */
+  readonly folder: string;
+  readonly secrets: Secrets;
   readonly port: number;
   superUrl(database: string): string;
   ownerUrl(database: string): string;
@@ -14,6 +17,5 @@ export type Secrets = {
   readonly demo: string;
 };
 export function ensurePostgres(): string;
-export function secrets(kind: 'product' | 'test'): Secrets;
 export function startCluster(given: { kind: 'product' | 'test' }): Promise<Cluster>;
 export function ensureDatabase(cluster: Cluster, name: string): Promise<{ made: boolean }>;
