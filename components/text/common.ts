@@ -1,0 +1,31 @@
+/** Words that every page shares. */
+export const common = {
+  product: 'Cinderpath',
+  retry: 'Try again',
+  loading: 'Fetching',
+  save: 'Save',
+  cancel: 'Cancel',
+  add: 'Add',
+  none: '–',
+  loadNewest: 'Load the newest',
+  optional: 'may stay empty',
+  lostConnection: {
+    title: 'No connection',
+    detail: 'The server could not be reached. What you typed is kept; try again when the connection is back.',
+  },
+  unreadable: {
+    title: 'The answer could not be read',
+    detail: 'This page and the server may be of different versions. Reload the page; if it stays, tell the lead.',
+  },
+  unknown: {
+    title: 'Something went wrong on this page',
+    detail: 'Reload the page. What was saved before is safe.',
+  },
+  conflict: {
+    title: 'Somebody changed this meanwhile',
+    detail:
+      'What you typed is still here and has not been saved. Load the newest to see what changed; your text stays until you say so.',
+    keepMine: 'Keep my text and save over it',
+    takeTheirs: 'Drop my text and take the newest',
+  },
+} as const;

@@ -1,0 +1,5 @@
+/** Metro hands a shipped font over as an asset. */
+declare module '*.ttf' {
+  const asset: number;
+  export default asset;
+}

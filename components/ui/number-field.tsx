@@ -1,0 +1,99 @@
+import { useId, useState, type ReactNode, type Ref } from 'react';
+import { roles } from '@/components/theme/roles.ts';
+import { family } from '@/components/theme/type.ts';
+import { quantityParse, quantityText, type Dimension } from '@/strategy/units/index.ts';
+import { describedBy, Field } from './field.tsx';
+import { usualUnit, useUnitSystem } from './unit-system.ts';
+
+export type NumberFieldProps = {
+  readonly label: string;
+  readonly dimension: Dimension;
+  /** SI. Null for an empty field. */
+  readonly value: number | null;
+  /** SI; null when emptied, NaN while what is typed means nothing (so that no schema takes it). */
+  readonly onChange: (value: number | null) => void;
+  readonly onBlur?: () => void;
+  /** The unit of a number typed without one; else the usual one of the person's system. */
+  readonly unit?: string;
+  readonly hint?: ReactNode;
+  readonly error?: string;
+  readonly optional?: boolean;
+  readonly disabled?: boolean;
+  readonly name?: string;
+  readonly ref?: Ref<HTMLInputElement>;
+};
+
+/**
+ * A field for a quantity: takes "3/4 in", "12 psi", "2 min 15 s" or a plain number, says how it was understood, and hands
+ * over SI. What was typed stays as it was typed.
+ */
+export function NumberField(props: NumberFieldProps) {
+  const { label, dimension, value, onChange, onBlur, hint, error, optional, disabled, name, ref } = props;
+  const id = useId();
+  const system = useUnitSystem();
+  const unit = props.unit ?? usualUnit(dimension, system);
+  const written = (si: number | null): string =>
+    si === null || !Number.isFinite(si) ? '' : quantityText(si, dimension, system, { unit }).number;
+
+  const [typed, setTyped] = useState({ text: written(value), value, unit });
+  const [left, setLeft] = useState(false);
+  // Did the value or unit change from outside? Then the text follows; else what was typed stands.
+  if (!Object.is(typed.value, value) || typed.unit !== unit) setTyped({ text: written(value), value, unit });
+
+  const parsed = typed.text.trim() === '' ? null : quantityParse(typed.text, dimension, unit);
+  const misread = left && parsed?.kind === 'none' ? parsed.why : undefined;
+  const shownError = misread ?? error;
+  const plain = /^[\s+−-]*[\d.,]+$/.test(typed.text.trim());
+  const understood = parsed?.kind === 'ok' && !plain ? `understood: ${parsed.understood}` : undefined;
+  const shownHint = understood ?? hint;
+
+  return (
+    <Field id={id} label={label} hint={shownHint} error={shownError} optional={optional}>
+      <span style={{ position: 'relative', display: 'block' }}>
+        <input
+          id={id}
+          ref={ref}
+          name={name}
+          className="cp-control"
+          // A full keyboard is needed for fractions and units, so the field is text; phones show digits first.
+          type="text"
+          inputMode={dimension === 'length' && system === 'inch' ? 'text' : 'decimal'}
+          autoComplete="off"
+          disabled={disabled}
+          value={typed.text}
+          aria-invalid={shownError !== undefined}
+          aria-describedby={`${describedBy(id, shownHint, shownError) ?? ''} ${id}-unit`.trim()}
+          onChange={(event) => {
+            const text = event.target.value;
+            const next = text.trim() === '' ? null : quantityParse(text, dimension, unit);
+            const si = next === null ? null : next.kind === 'ok' ? next.value : Number.NaN;
+            setTyped({ text, value: si, unit });
+            onChange(si);
+          }}
+          onBlur={() => {
+            setLeft(true);
+            onBlur?.();
+          }}
+          style={{ paddingRight: 76, fontFamily: family.figure, fontSize: 19, fontVariantNumeric: 'tabular-nums' }}
+        />
+        <span
+          id={`${id}-unit`}
+          style={{
+            position: 'absolute',
+            right: 13,
+            top: 0,
+            bottom: 0,
+            display: 'flex',
+            alignItems: 'center',
+            pointerEvents: 'none',
+            fontFamily: family.label,
+            fontSize: 17,
+            color: roles.softInk,
+          }}
+        >
+          {unit}
+        </span>
+      </span>
+    </Field>
+  );
+}

@@ -1,0 +1,118 @@
+import type { ReactNode } from 'react';
+import { StyleSheet, Text, type TextStyle } from 'react-native';
+import { roles } from '@/components/theme/roles.ts';
+import type { Role } from '@/components/theme/tokens.ts';
+import { family, size } from '@/components/theme/type.ts';
+
+/** Roles that text may have. */
+export type TextRole = Extract<Role, 'ink' | 'softInk' | 'ember' | 'onEmber' | 'cold' | 'hot' | 'good' | 'wrong'>;
+
+type TextProps = {
+  readonly children: ReactNode;
+  readonly tone?: TextRole;
+  readonly id?: string;
+  readonly align?: 'left' | 'center' | 'right';
+  /** Cut after so many lines. */
+  readonly lines?: number;
+};
+
+const toned = (tone: TextRole | undefined, align: TextProps['align']): TextStyle => ({
+  ...(tone === undefined ? {} : { color: roles[tone] }),
+  ...(align === undefined ? {} : { textAlign: align }),
+});
+
+/** A heading; `level` is its place in the page, not its size (1 the page's name). */
+export function Heading({ children, level = 2, tone, id, align, lines }: TextProps & { readonly level?: 1 | 2 | 3 }) {
+  return (
+    <Text
+      role="heading"
+      aria-level={level}
+      nativeID={id}
+      numberOfLines={lines}
+      style={[styles.heading, size[`heading${level}`], toned(tone, align)]}
+    >
+      {children}
+    </Text>
+  );
+}
+
+/** A small label in lower case, as on a drawing. */
+export function Label({ children, tone, id, align, lines }: TextProps) {
+  return (
+    <Text nativeID={id} numberOfLines={lines} style={[styles.label, toned(tone, align)]}>
+      {children}
+    </Text>
+  );
+}
+
+/** Text for reading. `large` on operators' pages. */
+export function Body({
+  children,
+  tone,
+  id,
+  align,
+  lines,
+  strong = false,
+  large = false,
+}: TextProps & { readonly strong?: boolean; readonly large?: boolean }) {
+  return (
+    <Text
+      nativeID={id}
+      numberOfLines={lines}
+      style={[styles.body, large && size.bodyLarge, strong && styles.strong, toned(tone, align)]}
+    >
+      {children}
+    </Text>
+  );
+}
+
+/** What stands in the second place. */
+export function Small({ children, tone, id, align, lines, strong = false }: TextProps & { readonly strong?: boolean }) {
+  return (
+    <Text
+      nativeID={id}
+      numberOfLines={lines}
+      style={[styles.small, strong && styles.strong, strong && styles.ink, toned(tone, align)]}
+    >
+      {children}
+    </Text>
+  );
+}
+
+/** A number with its unit. Give the number as it is to be read (see strategy/units), not as it is stored. */
+export function Figure({
+  value,
+  unit,
+  tone,
+  large = false,
+  align,
+}: {
+  readonly value: string | number;
+  readonly unit?: string;
+  readonly tone?: TextRole;
+  readonly large?: boolean;
+  readonly align?: TextProps['align'];
+}) {
+  return (
+    <Text style={[styles.figure, large && size.figureLarge, toned(tone, align)]}>
+      {value}
+      {unit === undefined || unit === '' ? null : (
+        <Text style={[styles.unit, large && styles.unitLarge, tone !== undefined && { color: roles[tone] }]}>
+          {unit === '°' ? unit : `\u00a0${unit}`}
+        </Text>
+      )}
+    </Text>
+  );
+}
+
+const styles = StyleSheet.create({
+  heading: { fontFamily: family.figure, color: roles.ink, fontVariant: ['tabular-nums'] },
+  label: { fontFamily: family.label, color: roles.softInk, ...size.label },
+  body: { fontFamily: family.reading, color: roles.ink, ...size.body, fontVariant: ['tabular-nums'] },
+  small: { fontFamily: family.reading, color: roles.softInk, ...size.small, fontVariant: ['tabular-nums'] },
+  strong: { fontFamily: family.readingStrong },
+  ink: { color: roles.ink },
+  figure: { fontFamily: family.figure, color: roles.ink, ...size.figure, fontVariant: ['tabular-nums'] },
+  unit: { fontSize: 17 },
+  unitLarge: { fontSize: 20 },
+});
