@@ -1,5 +1,4 @@
-import { useEffect, useId, useState } from 'react';
-import type { ReactNode } from 'react';
+import { useEffect, useId, useRef, useState, type ReactNode } from 'react';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import { Button } from './button.tsx';
@@ -142,12 +141,11 @@ function Picker({
 }
 
 function Preview({ file }: { readonly file: File }) {
-  const [url, setUrl] = useState<string | null>(null);
+  const image = useRef<HTMLImageElement>(null);
   useEffect(() => {
     const made = URL.createObjectURL(file);
-    setUrl(made);
+    if (image.current !== null) image.current.src = made;
     return () => URL.revokeObjectURL(made);
   }, [file]);
-  if (url === null) return null;
-  return <img src={url} alt="" style={{ width: 96, height: 72, objectFit: 'cover', borderRadius: 2 }} />;
+  return <img ref={image} alt="" style={{ width: 96, height: 72, objectFit: 'cover', borderRadius: 2 }} />;
 }

@@ -1,0 +1,6 @@
+/** Key roots that more than one noun invalidates: a decision on a revision shows in all of them. */
+export const strategiesRoot = ['strategies'] as const;
+export const revisionsRoot = ['revisions'] as const;
+export const reviewsRoot = ['reviews'] as const;
+export const cardsRoot = ['cards'] as const;
+export const partsRoot = ['parts'] as const;
