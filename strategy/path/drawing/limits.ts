@@ -1,0 +1,12 @@
+/** What a drawing may be at most; beyond it is refused before it costs anything. */
+export const drawingLimits = {
+  /** 10 MiB. */
+  bytes: 10 * 1024 * 1024,
+  /** Pieces of geometry after all inserts are resolved. */
+  entities: 200_000,
+  /** Blocks within blocks. */
+  insertDepth: 16,
+  /** Control points or vertices of one entity. */
+  points: 100_000,
+  splineDegree: 25,
+} as const;
