@@ -6,6 +6,7 @@ export const common = {
   save: 'Save',
   cancel: 'Cancel',
   add: 'Add',
+  close: 'Close',
   none: '–',
   loadNewest: 'Load the newest',
   optional: 'may stay empty',

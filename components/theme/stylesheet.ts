@@ -21,6 +21,7 @@ body{background:var(--ground);color:var(--ink);font-family:${family.reading};mar
 *,*::before,*::after{box-sizing:border-box}
 :focus-visible{outline:3px solid var(--cold)!important;outline-offset:2px}
 a{color:inherit;text-decoration:none}
+main:focus{outline:none!important}
 .cp-control{font-family:${family.reading};font-size:17px;line-height:24px;color:var(--ink);background:var(--sheet);border:1px solid var(--ink);border-radius:3px;min-height:48px;padding:11px 12px;width:100%;margin:0;appearance:none}
 .cp-control::placeholder{color:var(--softInk);opacity:1}
 .cp-control:disabled,.cp-control[readonly]{background:transparent;border-style:dashed}
@@ -28,11 +29,11 @@ a{color:inherit;text-decoration:none}
 select.cp-control{padding-right:40px;background-image:linear-gradient(45deg,transparent 50%,var(--ink) 50%),linear-gradient(135deg,var(--ink) 50%,transparent 50%);background-position:right 20px center,right 14px center;background-size:6px 6px;background-repeat:no-repeat}
 .cp-button{font-family:${family.readingStrong};font-size:17px;line-height:22px;min-height:48px;min-width:48px;padding:12px 18px;border-radius:3px;border:1px solid var(--ink);background:transparent;color:var(--ink);cursor:pointer;text-align:center;margin:0}
 .cp-button:hover{background:var(--touched)}
-.cp-button[data-kind=main]{background:var(--ember);border-color:var(--ember);color:var(--onEmber)}
-.cp-button[data-kind=main]:hover{background:var(--emberDeep);border-color:var(--emberDeep)}
-.cp-button[data-kind=quiet]{border-color:transparent;text-decoration:underline;text-decoration-color:var(--softInk);text-underline-offset:4px;padding-inline:10px}
-.cp-button[data-size=large]{font-size:20px;line-height:26px;min-height:64px;padding:16px 22px}
-.cp-button[data-size=gloved]{font-size:22px;line-height:28px;min-height:96px;padding:20px 24px}
+.cp-button.cp-main{background:var(--ember);border-color:var(--ember);color:var(--onEmber)}
+.cp-button.cp-main:hover{background:var(--emberDeep);border-color:var(--emberDeep)}
+.cp-button.cp-quiet{border-color:transparent;text-decoration:underline;text-decoration-color:var(--softInk);text-underline-offset:4px;padding-inline:10px}
+.cp-button.cp-large{font-size:20px;line-height:26px;min-height:64px;padding:16px 22px}
+.cp-button.cp-gloved{font-size:22px;line-height:28px;min-height:96px;padding:20px 24px}
 .cp-button:disabled{cursor:default;opacity:1;color:var(--softInk);background:transparent;border:1px dashed var(--softInk)}
 .cp-row:hover{background:var(--touched)}
 .cp-tick{appearance:none;flex:none;width:28px;height:28px;margin:0;border:2px solid var(--ink);border-radius:3px;background:var(--sheet);display:grid;place-content:center;cursor:pointer}

@@ -40,9 +40,7 @@ export function Button({
     <button
       ref={ref}
       type={submit ? 'submit' : 'button'}
-      className="cp-button"
-      data-kind={kind}
-      data-size={size}
+      className={`cp-button cp-${kind} cp-${size}`}
       disabled={disabled}
       aria-disabled={busy || undefined}
       aria-busy={busy || undefined}

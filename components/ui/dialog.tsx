@@ -12,6 +12,7 @@ export function Dialog({
   children,
   actions,
   closable = true,
+  closeLabel = 'Not now',
 }: {
   readonly title: string;
   readonly open: boolean;
@@ -19,8 +20,9 @@ export function Dialog({
   readonly children: ReactNode;
   /** Beside the way out, the last one first. */
   readonly actions?: ReactNode;
-  /** Escape and "Not now" lead out of it. */
+  /** Escape and a button lead out of it. */
   readonly closable?: boolean;
+  readonly closeLabel?: string;
 }) {
   const ref = useRef<HTMLDialogElement>(null);
   const id = useId();
@@ -49,7 +51,7 @@ export function Dialog({
           {closable || actions !== undefined ? (
             <div style={{ marginTop: space.s }}>
               <Row justify="flex-end">
-                {closable ? <Button label="Not now" onPress={onClose} /> : null}
+                {closable ? <Button label={closeLabel} onPress={onClose} /> : null}
                 {actions}
               </Row>
             </div>

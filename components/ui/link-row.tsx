@@ -1,8 +1,9 @@
-import { Link, type Href } from 'expo-router';
+import type { Href } from 'expo-router';
 import type { ReactNode } from 'react';
 import { View } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import { space } from '@/components/theme/space.ts';
+import { PlainLink } from './link.tsx';
 import { Mark } from './mark.tsx';
 
 /** A row of a list that opens something; at least 56 px high. `left` is its picture (a core), `right` a figure. */
@@ -21,7 +22,7 @@ export function LinkRow({
   readonly spoken?: string;
 }) {
   return (
-    <Link href={href} className="cp-row" aria-label={spoken} style={{ display: 'flex', width: '100%' }}>
+    <PlainLink href={href} className="cp-row" spoken={spoken} style={{ display: 'flex', width: '100%' }}>
       <View
         style={{
           flex: 1,
@@ -41,7 +42,7 @@ export function LinkRow({
           <Mark name="forward" size={18} />
         </span>
       </View>
-    </Link>
+    </PlainLink>
   );
 }
 
