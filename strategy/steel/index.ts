@@ -11,5 +11,5 @@ export {
   PLATE_TEMPERATURE_RANGE,
 } from './iron.ts';
 export { HOT_CONDUCTIVITY, HOT_DIFFUSIVITY, kerfConductionFactor, kerfConductionHeat } from './kerf-conduction.ts';
-export { oxidation, type Oxidation, type Oxide } from './oxidation.ts';
+export { oxidation, OXYGEN_MOLAR_MASS, type Oxidation, type Oxide } from './oxidation.ts';
 export { STEEL_DENSITY, steelConductivity, steelDiffusivity, steelEnthalpy, steelSpecificHeat } from './plate-steel.ts';

@@ -1,0 +1,50 @@
+export {
+  DEFAULT_RESERVE_RULES,
+  pierceChecks,
+  type CheckState,
+  type PierceCheck,
+  type PierceCheckId,
+  type PierceCheckInput,
+  type ReserveRules,
+} from './checks.ts';
+export { peakRiseAroundLine, peakRiseAroundPoint } from './crater.ts';
+export { pierceStageDefaults } from './defaults.ts';
+export {
+  CHOKING_GAUGE_PRESSURE,
+  criticalFlowFactor,
+  criticalPressureRatio,
+  OXYGEN_NORMAL_DENSITY,
+  oxygenMassFlow,
+} from './oxygen-flow.ts';
+export {
+  PIERCE_DEFAULTS,
+  PIERCE_MODEL_VERSION,
+  pierceParameters,
+  pierceParameterTable,
+  type PierceParameterName,
+  type PierceParameterRow,
+  type PierceParameters,
+} from './parameters.ts';
+export {
+  piercePredict,
+  THICKEST_PLATE,
+  type Breakthrough,
+  type PierceInput,
+  type PierceLedger,
+  type PiercePrediction,
+  type PierceStageResult,
+  type PierceStall,
+} from './predict.ts';
+export { effectiveDuty, pulseTrain, type PulseTrain } from './pulse.ts';
+export { routineTime, stageMeanPower, stagePulses, stageQuantitiesAt } from './stage-math.ts';
+export { LONGEST_STAGE, MOST_STAGES, stageProblems, type StageProblem } from './stage-problems.ts';
+export type { Stage, StageQuantities } from './stage.ts';
+export {
+  COLD_PLATE_TEMPERATURE,
+  pierceReserve,
+  strategyPrediction,
+  type Reserve,
+  type StrategyInput,
+  type StrategyOutcome,
+  type StrategyPrediction,
+} from './strategy-prediction.ts';

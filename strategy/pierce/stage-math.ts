@@ -1,0 +1,39 @@
+import type { Stage, StageQuantities } from './stage.ts';
+
+/** The six quantities at a part (0…1) of a stage. */
+export function stageQuantitiesAt(stage: Stage, part: number): StageQuantities {
+  const { from, to } = stage;
+  return {
+    standoff: between(from.standoff, to.standoff, part),
+    focusPosition: between(from.focusPosition, to.focusPosition, part),
+    peakPower: between(from.peakPower, to.peakPower, part),
+    duty: between(from.duty, to.duty, part),
+    pulseFrequency:
+      from.pulseFrequency === null || to.pulseFrequency === null
+        ? null
+        : between(from.pulseFrequency, to.pulseFrequency, part),
+    oxygenPressure: between(from.oxygenPressure, to.oxygenPressure, part),
+  };
+}
+
+/** Mean power over a stage as set, W: the mean of peak × duty, both linear in time. */
+export function stageMeanPower({ from, to }: Stage): number {
+  const ends = 2 * (from.peakPower * from.duty + to.peakPower * to.duty);
+  const crossed = from.peakPower * to.duty + to.peakPower * from.duty;
+  return (ends + crossed) / 6;
+}
+
+/** Pulses in a stage; none when the power is continuous. Not rounded. */
+export function stagePulses({ duration, from, to }: Stage): number {
+  if (from.pulseFrequency === null || to.pulseFrequency === null) return 0;
+  return ((from.pulseFrequency + to.pulseFrequency) / 2) * duration;
+}
+
+/** Time of the whole routine, s. */
+export function routineTime(stages: readonly Stage[]): number {
+  return stages.reduce((sum, stage) => sum + stage.duration, 0);
+}
+
+function between(from: number, to: number, part: number): number {
+  return from + (to - from) * part;
+}

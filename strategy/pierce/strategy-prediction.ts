@@ -1,0 +1,130 @@
+import type { MachineProfile, Nozzle } from '../machine.ts';
+import type { PierceParameters } from './parameters.ts';
+import {
+  piercePredict,
+  type Breakthrough,
+  type PiercePrediction,
+  type PierceStageResult,
+  type PierceStall,
+} from './predict.ts';
+import type { Stage } from './stage.ts';
+
+export type StrategyInput = {
+  readonly stages: readonly Stage[];
+  /** Thinnest and thickest plate the strategy is for, m. */
+  readonly thickness: { readonly min: number; readonly max: number };
+  /** K; 20 °C without it. */
+  readonly coldPlateTemperature?: number;
+  /** Hottest plate the strategy is good for, K. */
+  readonly hottestPlateTemperature: number;
+  readonly profile: MachineProfile;
+  readonly nozzle: Nozzle;
+  readonly parameters?: Partial<PierceParameters>;
+};
+
+/** Routine time ÷ breakthrough time, without unit; or why there is none. */
+export type Reserve = { readonly kind: 'ok'; readonly value: number } | { readonly kind: 'none'; readonly why: string };
+
+/** How the pierce goes on the thickest plate at one temperature. */
+export type StrategyOutcome = {
+  readonly plateTemperature: number; // K
+  readonly breakthrough: Breakthrough;
+  readonly reserve: Reserve;
+  readonly trace: PiercePrediction['trace'];
+  readonly stalls: readonly PierceStall[];
+  readonly perStage: readonly PierceStageResult[];
+};
+
+/** What a strategy revision stores beside its content. Plain JSON. */
+export type StrategyPrediction = {
+  readonly modelVersion: string;
+  readonly thickness: { readonly min: number; readonly max: number };
+  readonly routineTime: number; // s
+  readonly cold: StrategyOutcome;
+  readonly hot: StrategyOutcome;
+  /** On the thinnest plate, hottest, m. */
+  readonly craterRadius: number;
+  /** Greatest eruption index on the thinnest plate, hottest, and the stage it falls in. */
+  readonly eruption: { readonly index: number; readonly stage: number };
+  /** On the thickest plate, cold: the longest burning one. */
+  readonly energy: PiercePrediction['energy'];
+  readonly heatLeft: number; // J
+  readonly oxygenUsed: number; // kg
+  readonly pulses: number;
+  readonly meanPower: number; // W
+  readonly peakPower: number; // W
+};
+
+/** 20 °C: the cold plate that the reserve is defined on, K. */
+export const COLD_PLATE_TEMPERATURE = 293.15;
+
+/**
+ * What a staged pierce does over the range of plates it is for: breakthrough and reserve on the thickest, cold and hot; crater
+ * and eruption on the thinnest, hot. RangeError as from `piercePredict`, for a range upside down, and for a hottest plate that
+ * is colder than the cold one.
+ */
+export function strategyPrediction(input: StrategyInput): StrategyPrediction {
+  const { stages, thickness, profile, nozzle, hottestPlateTemperature } = input;
+  const coldPlateTemperature = input.coldPlateTemperature ?? COLD_PLATE_TEMPERATURE;
+  if (!(thickness.min <= thickness.max)) {
+    throw new RangeError(`thickness range [${thickness.min}, ${thickness.max}] m is upside down`);
+  }
+  if (!(hottestPlateTemperature >= coldPlateTemperature)) {
+    throw new RangeError(
+      `hottest plate ${hottestPlateTemperature} K is colder than the cold plate ${coldPlateTemperature} K`,
+    );
+  }
+  const at = (plate: number, plateTemperature: number): PiercePrediction =>
+    piercePredict({
+      stages,
+      thickness: plate,
+      plateTemperature,
+      profile,
+      nozzle,
+      ...(input.parameters === undefined ? {} : { parameters: input.parameters }),
+    });
+  const cold = at(thickness.max, coldPlateTemperature);
+  const hot = at(thickness.max, hottestPlateTemperature);
+  const thinHot = thickness.min === thickness.max ? hot : at(thickness.min, hottestPlateTemperature);
+  return {
+    modelVersion: cold.modelVersion,
+    thickness: { min: thickness.min, max: thickness.max },
+    routineTime: cold.routineTime,
+    cold: outcome(cold, coldPlateTemperature),
+    hot: outcome(hot, hottestPlateTemperature),
+    craterRadius: thinHot.craterRadius,
+    eruption: worstEruption(thinHot.perStage),
+    energy: cold.energy,
+    heatLeft: cold.heatLeft,
+    oxygenUsed: cold.oxygenUsed,
+    pulses: cold.pulses,
+    meanPower: cold.meanPower,
+    peakPower: cold.peakPower,
+  };
+}
+
+/** Reserve of one prediction: routine time ÷ breakthrough time, or why there is none. */
+export function pierceReserve(prediction: Pick<PiercePrediction, 'breakthrough' | 'routineTime'>): Reserve {
+  const { breakthrough, routineTime } = prediction;
+  if (breakthrough.kind === 'none') return { kind: 'none', why: breakthrough.why };
+  return { kind: 'ok', value: routineTime / breakthrough.time };
+}
+
+function outcome(prediction: PiercePrediction, plateTemperature: number): StrategyOutcome {
+  return {
+    plateTemperature,
+    breakthrough: prediction.breakthrough,
+    reserve: pierceReserve(prediction),
+    trace: prediction.trace,
+    stalls: prediction.stalls,
+    perStage: prediction.perStage,
+  };
+}
+
+function worstEruption(perStage: readonly PierceStageResult[]): { readonly index: number; readonly stage: number } {
+  let worst = { index: 0, stage: 0 };
+  perStage.forEach(({ eruptionIndex }, stage) => {
+    if (eruptionIndex > worst.index) worst = { index: eruptionIndex, stage };
+  });
+  return worst;
+}
