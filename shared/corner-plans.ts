@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { idSchema, instantSchema, personSchema, pointSchema, quantity, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
-import { segmentSchema } from './parts.ts';
+import { contourSchema, segmentSchema } from './parts.ts';
 
 /** `ease` and `round` are named by the trade too; the plan offers them once their geometry and heat are computed. */
 export const treatments = ['loop', 'dwell', 'leave'] as const;
@@ -56,7 +56,8 @@ export type PlannedCorner = z.infer<typeof plannedCornerSchema>;
 export const cornerPlanSchema = z.object({
   id: idSchema,
   version: versionSchema,
-  part: z.object({ id: idSchema, name: z.string() }),
+  /** With its contours: an operator reads the plan's drawing, and has no access to parts. */
+  part: z.object({ id: idSchema, name: z.string(), contours: z.array(contourSchema) }),
   revision: z.object({
     id: idSchema,
     number: z.number().int(),
