@@ -5,6 +5,9 @@ import { quantityText } from '../units/index.ts';
 export type DialReading =
   { readonly kind: 'ok'; readonly typed: number } | { readonly kind: 'none'; readonly why: string };
 
+/** A position at the very end of the dial's travel is not outside it for rounding, m. */
+const ROUNDING = 1e-9;
+
 /**
  * The number to type at the machine, m, for a focus position (m above the plate's top) at a standoff (m); none, with a
  * sentence, when it lies outside what the dial takes. RangeError when an argument is not finite or the scale's slope is zero.
@@ -12,14 +15,15 @@ export type DialReading =
 export function dialForFocus(scale: FocusScale, focusPosition: number, standoff: number): DialReading {
   finite('focus position', focusPosition);
   const typed = (focusPosition - atDialZero(scale, standoff)) / slopeOf(scale);
-  if (typed < scale.minDial || typed > scale.maxDial) {
+  if (typed < scale.minDial - ROUNDING || typed > scale.maxDial + ROUNDING) {
     const position = millimetres(focusPosition);
     return {
       kind: 'none',
       why: `Focus ${position} would need ${millimetres(typed)} on the dial, which takes ${millimetres(scale.minDial)} to ${millimetres(scale.maxDial)}.`,
     };
   }
-  return { kind: 'ok', typed: typed === 0 ? 0 : typed };
+  const within = Math.min(Math.max(typed, scale.minDial), scale.maxDial);
+  return { kind: 'ok', typed: within === 0 ? 0 : within };
 }
 
 /**

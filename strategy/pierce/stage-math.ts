@@ -1,8 +1,9 @@
 import type { Stage, StageQuantities } from './stage.ts';
 
-/** The six quantities at a part (0…1) of a stage. */
-export function stageQuantitiesAt(stage: Stage, part: number): StageQuantities {
+/** The six quantities at a part (0…1) of a stage; a part that rounding put outside counts as the end. */
+export function stageQuantitiesAt(stage: Stage, at: number): StageQuantities {
   const { from, to } = stage;
+  const part = Math.min(Math.max(at, 0), 1);
   return {
     standoff: between(from.standoff, to.standoff, part),
     focusPosition: between(from.focusPosition, to.focusPosition, part),
@@ -35,5 +36,6 @@ export function routineTime(stages: readonly Stage[]): number {
 }
 
 function between(from: number, to: number, part: number): number {
-  return from + (to - from) * part;
+  // This form never leaves the two ends, however it rounds: a pressure ramped to zero does not become negative.
+  return from * (1 - part) + to * part;
 }

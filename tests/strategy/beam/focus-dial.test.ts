@@ -52,6 +52,20 @@ describe('focus position and the machine’s own dial', () => {
     );
   });
 
+  it('takes the position at the very end of its travel, however the division rounds', () => {
+    const metre = fc.double({ min: 0.0001, max: 0.02, noNaN: true });
+    fc.assert(
+      fc.property(metre, metre, (dial, standoff) => {
+        const scale: FocusScale = { reference: 'nozzle', offset: 0.0003, slope: -2.2, minDial: -dial, maxDial: dial };
+        for (const end of [-dial, dial]) {
+          const reading = dialForFocus(scale, focusForDial(scale, end, standoff), standoff);
+          expect(reading.kind === 'ok' && Math.abs(reading.typed - end)).toBeLessThan(1e-12);
+          expect(reading.kind === 'ok' && Math.abs(reading.typed)).toBeLessThanOrEqual(dial);
+        }
+      }),
+    );
+  });
+
   it('refuses a scale without slope and numbers that are none', () => {
     expect(() => dialForFocus({ ...reversed, slope: 0 }, 0.005, 0.001)).toThrow(/slope 0/);
     expect(() => dialForFocus(reversed, Number.NaN, 0.001)).toThrow(RangeError);
