@@ -1,7 +1,7 @@
 import { useId, type CSSProperties, type ReactNode, type Ref } from 'react';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
-import { describedBy, Field, FieldError, fieldIds } from './field.tsx';
+import { describedBy, Field, FieldError, fieldIds, largeControl } from './field.tsx';
 
 export type ChoiceOption<V extends string> = { readonly value: V; readonly label: string; readonly hint?: string };
 
@@ -19,6 +19,8 @@ export type ChoiceProps<V extends string> = {
   /** Shown in a list while nothing is chosen. */
   readonly placeholder?: string;
   readonly name?: string;
+  /** For a gloved hand: taller, with larger letters. */
+  readonly large?: boolean;
   readonly ref?: Ref<HTMLSelectElement & HTMLInputElement>;
 };
 
@@ -38,16 +40,18 @@ function ListChoice<V extends string>({
   disabled,
   placeholder = 'Choose',
   name,
+  large = false,
   ref,
 }: ChoiceProps<V>) {
   const id = useId();
   return (
-    <Field id={id} label={label} hint={hint} error={error}>
+    <Field id={id} label={label} hint={hint} error={error} large={large}>
       <select
         id={id}
         ref={ref}
         name={name}
         className="cp-control"
+        style={large ? largeControl : undefined}
         value={value ?? ''}
         disabled={disabled}
         aria-invalid={error !== undefined}
@@ -83,6 +87,7 @@ function RadioChoice<V extends string>({
   hint,
   error,
   disabled,
+  large = false,
   ref,
 }: ChoiceProps<V>) {
   const id = useId();
@@ -90,7 +95,7 @@ function RadioChoice<V extends string>({
   const segments = kind === 'segments';
   return (
     <fieldset style={styles.set} aria-describedby={describedBy(id, hint, error)} disabled={disabled}>
-      <legend style={styles.legend}>{label}</legend>
+      <legend style={large ? { ...styles.legend, fontSize: 18, lineHeight: '24px' } : styles.legend}>{label}</legend>
       <div style={segments ? styles.segments : styles.radios}>
         {options.map((option, index) => {
           const input = (
@@ -111,9 +116,9 @@ function RadioChoice<V extends string>({
               <span>{option.label}</span>
             </label>
           ) : (
-            <label key={option.value} style={styles.radio}>
+            <label key={option.value} style={large ? { ...styles.radio, ...styles.radioLarge } : styles.radio}>
               {input}
-              <span style={styles.words}>
+              <span style={large ? { ...styles.words, fontSize: 20, lineHeight: '28px' } : styles.words}>
                 {option.label}
                 {option.hint === undefined ? null : <span style={styles.optionHint}>{option.hint}</span>}
               </span>
@@ -144,6 +149,7 @@ const styles = {
   segments: { display: 'flex' },
   radios: { display: 'flex', flexDirection: 'column' },
   radio: { display: 'flex', alignItems: 'flex-start', gap: 12, padding: '10px 0', minHeight: 48, cursor: 'pointer' },
+  radioLarge: { alignItems: 'center', minHeight: 64 },
   words: {
     display: 'flex',
     flexDirection: 'column',

@@ -12,6 +12,7 @@ export function Field({
   hint,
   error,
   optional = false,
+  large = false,
   children,
 }: {
   readonly id: string;
@@ -19,12 +20,14 @@ export function Field({
   readonly hint?: ReactNode;
   readonly error?: string;
   readonly optional?: boolean;
+  /** On operators' pages: larger, and nothing in soft ink. */
+  readonly large?: boolean;
   readonly children: ReactNode;
 }) {
   const ids = fieldIds(id);
   return (
     <div style={styles.field}>
-      <label htmlFor={id} style={styles.label}>
+      <label htmlFor={id} style={large ? { ...styles.label, ...largeText } : styles.label}>
         {label}
         {optional ? <span style={styles.optional}> (may stay empty)</span> : null}
       </label>
@@ -51,6 +54,11 @@ export const describedBy = (id: string, hint: ReactNode, error: string | undefin
   const list = [...(hint === undefined || hint === '' ? [] : [ids.hint]), ...(error === undefined ? [] : [ids.error])];
   return list.length === 0 ? undefined : list.join(' ');
 };
+
+const largeText = { fontSize: 18, lineHeight: '24px', color: roles.ink } as const;
+
+/** A control for a gloved hand. */
+export const largeControl = { minHeight: 64, fontSize: 24, lineHeight: '32px' } as const satisfies CSSProperties;
 
 const text: CSSProperties = { marginTop: 4, fontFamily: family.reading, fontSize: 15, lineHeight: '20px' };
 const styles = {

@@ -40,7 +40,11 @@ export function InlineNumber({
   const system = useUnitSystem();
   const unit = givenUnit ?? usualUnit(dimension, system);
   const written = (si: number) => quantityText(si, dimension, system, { unit, sign }).number;
-  const [typed, setTyped] = useState({ text: unread ?? written(value), value: unread === undefined ? value : Number.NaN, unit });
+  const [typed, setTyped] = useState({
+    text: unread ?? written(value),
+    value: unread === undefined ? value : Number.NaN,
+    unit,
+  });
   // Was the number changed from outside, or is it shown in another unit? Then the text follows.
   if (unread === undefined && (typed.value !== value || typed.unit !== unit)) {
     setTyped({ text: written(value), value, unit });

@@ -2,7 +2,7 @@ import { useId, useState, type ReactNode, type Ref } from 'react';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import { quantityParse, quantityText, type Dimension } from '@/strategy/units/index.ts';
-import { describedBy, Field } from './field.tsx';
+import { describedBy, Field, largeControl } from './field.tsx';
 import { usualUnit, useUnitSystem } from './unit-system.ts';
 
 export type NumberFieldProps = {
@@ -20,6 +20,8 @@ export type NumberFieldProps = {
   readonly optional?: boolean;
   readonly disabled?: boolean;
   readonly name?: string;
+  /** For a gloved hand: taller, with larger letters. */
+  readonly large?: boolean;
   readonly ref?: Ref<HTMLInputElement>;
 };
 
@@ -28,7 +30,20 @@ export type NumberFieldProps = {
  * over SI. What was typed stays as it was typed.
  */
 export function NumberField(props: NumberFieldProps) {
-  const { label, dimension, value, onChange, onBlur, hint, error, optional, disabled, name, ref } = props;
+  const {
+    label,
+    dimension,
+    value,
+    onChange,
+    onBlur,
+    hint,
+    error,
+    optional,
+    disabled,
+    name,
+    large = false,
+    ref,
+  } = props;
   const id = useId();
   const system = useUnitSystem();
   const unit = props.unit ?? usualUnit(dimension, system);
@@ -48,7 +63,7 @@ export function NumberField(props: NumberFieldProps) {
   const shownHint = understood ?? hint;
 
   return (
-    <Field id={id} label={label} hint={shownHint} error={shownError} optional={optional}>
+    <Field id={id} label={label} hint={shownHint} error={shownError} optional={optional} large={large}>
       <span style={{ position: 'relative', display: 'block' }}>
         <input
           id={id}
@@ -74,7 +89,13 @@ export function NumberField(props: NumberFieldProps) {
             setLeft(true);
             onBlur?.();
           }}
-          style={{ paddingRight: 76, fontFamily: family.figure, fontSize: 19, fontVariantNumeric: 'tabular-nums' }}
+          style={{
+            paddingRight: 76,
+            fontFamily: family.figure,
+            fontSize: 19,
+            fontVariantNumeric: 'tabular-nums',
+            ...(large ? largeControl : {}),
+          }}
         />
         <span
           id={`${id}-unit`}

@@ -8,7 +8,13 @@ export function Sentence({ children }: { readonly children: ReactNode }) {
 }
 
 /** Words of a sentence in a second voice: what follows from the numbers. */
-export function Aside({ children, tone = 'softInk' }: { readonly children: ReactNode; readonly tone?: 'softInk' | 'cold' | 'hot' }) {
+export function Aside({
+  children,
+  tone = 'softInk',
+}: {
+  readonly children: ReactNode;
+  readonly tone?: 'softInk' | 'cold' | 'hot';
+}) {
   return <span style={{ ...styles.aside, color: roles[tone] }}>{children}</span>;
 }
 

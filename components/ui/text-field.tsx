@@ -1,5 +1,5 @@
 import { useId, type InputHTMLAttributes, type ReactNode, type Ref } from 'react';
-import { describedBy, Field } from './field.tsx';
+import { describedBy, Field, largeControl } from './field.tsx';
 
 export type TextFieldProps = {
   readonly label: string;
@@ -17,6 +17,8 @@ export type TextFieldProps = {
   readonly autoCapitalize?: 'none' | 'characters' | 'sentences';
   readonly placeholder?: string;
   readonly name?: string;
+  /** For a gloved hand: taller, with larger letters. */
+  readonly large?: boolean;
   readonly ref?: Ref<HTMLInputElement & HTMLTextAreaElement>;
 };
 
@@ -38,6 +40,7 @@ export function TextField({
   autoCapitalize,
   placeholder,
   name,
+  large = false,
   ref,
 }: TextFieldProps) {
   const id = useId();
@@ -54,7 +57,7 @@ export function TextField({
     onBlur,
   };
   return (
-    <Field id={id} label={label} hint={hint} error={error} optional={optional}>
+    <Field id={id} label={label} hint={hint} error={error} optional={optional} large={large}>
       {rows === undefined ? (
         <input
           {...shared}
@@ -62,6 +65,7 @@ export function TextField({
           autoComplete={autoComplete ?? 'off'}
           autoCapitalize={autoCapitalize ?? (kind === 'text' ? undefined : 'none')}
           spellCheck={kind === 'text' ? undefined : false}
+          style={large ? largeControl : undefined}
           onChange={(event) => onChange(event.target.value)}
         />
       ) : (
@@ -69,7 +73,7 @@ export function TextField({
           {...shared}
           rows={rows}
           onChange={(event) => onChange(event.target.value)}
-          style={{ resize: 'vertical' }}
+          style={{ resize: 'vertical', ...(large ? largeControl : {}) }}
         />
       )}
     </Field>
