@@ -25,8 +25,6 @@ export const common = {
   conflict: {
     title: 'Somebody changed this meanwhile',
     detail:
-      'What you typed is still here and has not been saved. Load the newest to see what changed; your text stays until you say so.',
-    keepMine: 'Keep my text and save over it',
-    takeTheirs: 'Drop my text and take the newest',
+      'What you typed is still here and has not been saved. Load the newest to see it; your text stays in the fields.',
   },
 } as const;

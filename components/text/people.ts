@@ -1,0 +1,30 @@
+export const peopleText = {
+  title: 'People',
+  add: 'Add a person',
+  list: 'People of this plant',
+  ended: 'No longer here',
+  fetching: 'Fetching the people',
+  empty: {
+    title: 'Nobody yet',
+    words: 'Whoever works with strategies, parts or plates here gets an account of their own.',
+  },
+  fields: {
+    name: 'Name',
+    mail: 'Mail address',
+    role: 'Role',
+    mayApprove: 'May approve strategies',
+    mayApproveHint: 'Never those the person has written in.',
+    password: 'First password',
+    passwordHint: 'Handed over in person. Who has an account in another plant already keeps the password they know.',
+  },
+  change: 'Change',
+  changeOf: (name: string) => `Change ${name}`,
+  save: 'Save',
+  grant: 'may approve',
+  you: 'you',
+  end: 'End the membership',
+  endTitle: (name: string) => `End the membership of ${name}?`,
+  endWords:
+    'The person is signed out here at once and finds this plant no more. What they wrote and decided stays in the record under their name.',
+  resume: 'Let in again',
+} as const;

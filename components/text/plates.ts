@@ -1,0 +1,51 @@
+import type { Plate } from '@/shared/plates.ts';
+
+export const surfaceNames: Record<Plate['surface'], string> = {
+  bright: 'Bright',
+  'mill scale': 'Mill scale',
+  rust: 'Rust',
+  primer: 'Primer',
+};
+
+export const platesText = {
+  title: 'Plates',
+  add: 'Book a plate in',
+  search: 'Tag',
+  searchHint: 'The whole tag or part of it, as painted on the plate',
+  list: 'Plates in the yard',
+  fetching: 'Fetching the plates',
+  empty: {
+    title: 'No plates are booked in',
+    words: 'A booked plate is found by its tag at the machine, with its grade, heat and measured thickness.',
+  },
+  noneFound: (tag: string) => `No plate’s tag holds “${tag}”`,
+  noneFoundWords: 'Look at the paint again, or ask for a card by grade and thickness at the machine.',
+  heat: (number: string) => `heat ${number}`,
+  measured: (text: string) => `measured ${text}`,
+  fields: {
+    tag: 'Tag',
+    tagHint: 'As it is painted or labelled on the plate',
+    grade: 'Grade',
+    gradeHint: 'As the certificate says',
+    heatNumber: 'Heat number',
+    nominal: 'Nominal thickness',
+    nominalHint: 'As ordered: strategies are matched by it',
+    measured: 'Measured thickness',
+    measuredHint: 'Measured at an edge, scale scraped off. The card computes with it.',
+    surface: 'Surface',
+    certificate: 'Certificate',
+    length: 'Length',
+    width: 'Width',
+  },
+  identity: 'What it is',
+  state: 'How it is',
+  correct: 'Save the correction',
+  correctTitle: 'Correct this plate',
+  book: 'Book it in',
+  saved: 'Saved.',
+  cards: 'Its card',
+  cardsWords: 'Which strategy is approved for this plate, on',
+  eyebrow: 'Plate in the yard',
+  block: 'Plate',
+  noMachines: 'No machine is known here yet.',
+} as const;

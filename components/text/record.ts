@@ -1,0 +1,52 @@
+/** What was done, in words. An event without its own words is shown by its name. */
+const events: Readonly<Record<string, string>> = {
+  'session.started': 'signed in',
+  'session.ended': 'signed out',
+  'session.plantChosen': 'came to this plant',
+  'person.added': 'added a person',
+  'person.changed': 'changed a person',
+  'person.ended': 'ended a membership',
+  'machine.added': 'added a machine',
+  'machine.revised': 'wrote a machine’s revision',
+  'nozzle.added': 'added a nozzle',
+  'grade.added': 'added a grade',
+  'plate.added': 'booked a plate in',
+  'plate.changed': 'corrected a plate',
+  'strategy.added': 'began a strategy',
+  'revision.drafted': 'began a draft',
+  'revision.saved': 'saved a draft',
+  'revision.submitted': 'handed a revision in',
+  'revision.approved': 'approved a revision',
+  'revision.returned': 'returned a revision',
+  'revision.withdrawn': 'withdrew a revision',
+  'revision.superseded': 'superseded a revision',
+  'part.added': 'kept a part',
+  'cornerPlan.added': 'planned corners',
+  'cornerPlan.redone': 'planned corners again',
+  'report.added': 'reported trouble',
+  'report.closed': 'closed a report',
+  'request.added': 'asked for a strategy',
+};
+
+export const eventText = (event: string): string => events[event] ?? event;
+
+export const recordText = {
+  title: 'Record',
+  words:
+    'Who decided what, in order. Each entry carries a hash over itself and the one before it, so that none can be changed or taken out unseen.',
+  list: 'Entries, newest first',
+  fetching: 'Fetching the record',
+  empty: { title: 'Nothing is recorded yet', words: 'The first thing that somebody does in this plant stands here.' },
+  somebody: 'The service',
+  older: 'Older entries',
+  check: 'Check the chain',
+  checking: 'Recomputing every hash',
+  whole: (entries: number) =>
+    entries === 1 ? 'The one entry fits its hash.' : `All ${entries} entries fit their hashes and each other.`,
+  broken: (sequence: number, why: string) => `The chain breaks at entry ${sequence}: ${why}`,
+  brokenTitle: 'The record was tampered with or damaged',
+  wholeTitle: 'The record is whole',
+  facts: 'Facts',
+  open: 'Open',
+  hash: 'hash',
+} as const;

@@ -1,0 +1,28 @@
+export const reviewsText = {
+  title: 'Reviews',
+  list: 'Waiting for a decision',
+  fetching: 'Fetching what waits for a decision',
+  empty: {
+    title: 'Nothing waits for a decision',
+    words: 'A draft that an engineer hands in stands here until a second person approves or returns it.',
+  },
+  revision: (number: number) => `revision ${number}`,
+  submitted: (by: string, when: string) => `Handed in by ${by}, ${when}`,
+  reserve: (cold: string, hot: string) => `reserve ${cold} cold, ${hot} hot`,
+  own: 'You wrote part of it: a second person must decide.',
+  yours: 'You may decide.',
+  noGrant: 'Deciding needs the lead’s grant.',
+  trouble: (count: number) => (count === 1 ? '1 open report' : `${count} open reports`),
+  asked: {
+    title: 'Asked for at the machine',
+    words: 'Plates that came to a machine and had no approved strategy.',
+    list: 'Strategies asked for',
+    fetching: 'Fetching what was asked for',
+    empty: 'Nothing was asked for.',
+    by: (who: string, when: string) => `${who}, ${when}`,
+    answered: 'A strategy is approved by now',
+    open: 'Still none',
+    begin: 'Begin a strategy',
+    tag: (tag: string) => `plate ${tag}`,
+  },
+} as const;
