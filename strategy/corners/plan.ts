@@ -256,7 +256,9 @@ function loopOption(found: Case, context: Context): Candidate {
     });
     if (fit.kind === 'none') {
       const tried =
-        sizes.radii.length > 1 ? `, and down to ${millimetres(sizes.radii.at(-1) ?? radius)} something always is` : '';
+        sizes.radii.length > 1
+          ? `, and down to ${millimetres(sizes.radii.at(-1) ?? radius)} something is in the way`
+          : '';
       first ??= refused('loop', `at ${millimetres(radius)} radius ${fit.why}${tried}`, fit.at);
       continue;
     }
@@ -361,7 +363,7 @@ function decideByRule(found: Case, candidates: readonly Candidate[], sharp: bool
     return {
       chosen: leave,
       why: `${degrees(found.corner.angle)} is not below the ${degrees(rules.treatBelowAngle)} from which corners are treated`,
-      problem: `${leave.why}, yet the angle is above the rule's`,
+      problem: `${leave.why}, yet the angle is above the one from which corners are treated`,
     };
   }
   const under = candidates.filter((c) => c.fits && c.treatment !== 'leave' && (c.returnWith ?? Infinity) <= limit);
@@ -375,7 +377,10 @@ function decideByRule(found: Case, candidates: readonly Candidate[], sharp: bool
     ) ?? leave;
   return {
     chosen: coolest,
-    why: `nothing that fits stays under the limit; ${coolest.treatment} leaves the coolest tip`,
+    why:
+      coolest.treatment === 'leave'
+        ? `${leave.why}, and neither a loop nor a dwell is possible here`
+        : `nothing that fits stays under the limit; the ${coolest.treatment} leaves the coolest tip`,
     problem: `the tip returns at ${celsius(coolest.returnWith ?? found.without)}, over the limit of ${celsius(limit)}: ${candidates
       .filter((c) => c.treatment !== 'leave')
       .map((c) => c.why)

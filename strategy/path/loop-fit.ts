@@ -1,6 +1,6 @@
 import Flatbush from 'flatbush';
 import type { Contour } from './contour.ts';
-import { contourContains } from './contour.ts';
+import { contourBox, contourContains } from './contour.ts';
 import type { Nearest } from './distance.ts';
 import { segmentDistance } from './distance.ts';
 import type { Loop } from './loop.ts';
@@ -13,7 +13,11 @@ import { segmentBox, segmentLength, segmentPart, segmentStart } from './segment.
 export type Obstacle = { readonly contourId: string; readonly name: string; readonly segment: Segment };
 
 /** All finished edges of a plate with an index of their boxes. */
-export type ObstacleField = { readonly obstacles: readonly Obstacle[]; readonly index: Flatbush | null };
+export type ObstacleField = {
+  readonly contours: readonly { readonly name: string; readonly contour: Contour; readonly box: Box }[];
+  readonly obstacles: readonly Obstacle[];
+  readonly index: Flatbush | null;
+};
 
 /** The field of finished edges of contours; `name` is how a sentence calls the contour ("hole 3"). */
 export function obstacleField(
@@ -22,14 +26,15 @@ export function obstacleField(
   const obstacles = contours.flatMap(({ id, name, contour }) =>
     contour.segments.map((segment) => ({ contourId: id, name, segment })),
   );
-  if (obstacles.length === 0) return { obstacles, index: null };
+  const boxed = contours.map(({ name, contour }) => ({ name, contour, box: contourBox(contour) }));
+  if (obstacles.length === 0) return { contours: boxed, obstacles, index: null };
   const index = new Flatbush(obstacles.length);
   for (const { segment } of obstacles) {
     const box = segmentBox(segment);
     index.add(box.minX, box.minY, box.maxX, box.maxY);
   }
   index.finish();
-  return { obstacles, index };
+  return { contours: boxed, obstacles, index };
 }
 
 /** What a loop is tried against. Lengths in m. */
@@ -74,6 +79,9 @@ export function loopFits(loop: Loop, around: LoopSurroundings): LoopFit {
   if (outside)
     return blocked('plate', outside, `the loop would come within ${millimetres(around.clearance)} of the plate's edge`);
 
+  const within = materialAt(around.field, segmentStart(loop.segments[0]));
+  if (within) return blocked('contour', segmentStart(loop.segments[0]), `the corner lies within ${within}`);
+
   const { index, obstacles } = around.field;
   for (const { segment, besideCorner } of index ? pieces : []) {
     const widest = needed + around.kerfWidth;
@@ -104,6 +112,17 @@ export function loopFits(loop: Loop, around: LoopSurroundings): LoopFit {
     }
   }
   return { kind: 'fits' };
+}
+
+/** Name of the smallest contour around a place that is steel to be kept, or null where it is scrap: inside an even number of contours. */
+function materialAt({ contours }: ObstacleField, p: Point): string | null {
+  const around = contours.filter(
+    ({ contour, box }) =>
+      p.x >= box.minX && p.x <= box.maxX && p.y >= box.minY && p.y <= box.maxY && contourContains(contour, p),
+  );
+  if (around.length % 2 === 0) return null;
+  const area = (box: Box) => (box.maxX - box.minX) * (box.maxY - box.minY);
+  return around.reduce((least, c) => (area(c.box) < area(least.box) ? c : least)).name;
 }
 
 /** The loop in pieces; those marked run beside the corner, where the part can be no farther than the kerf is wide. */
@@ -148,7 +167,7 @@ const blocked = (what: LoopBlock, at: Point, why: string): LoopFit => ({ kind: '
 
 const room = (found: Nearest, taken: number): string =>
   found.distance > taken
-    ? `only ${millimetres(found.distance - taken)} would stay between the kerfs`
+    ? `only ${millimetres(found.distance - taken)} would stay between them`
     : 'the loop would cut into it';
 
 const millimetres = (length: number): string => `${(length * 1000).toFixed(1)} mm`;

@@ -39,8 +39,8 @@ export const circleOf = (centre: Point, radius: number): Arc => arcOf(centre, ra
  */
 export function segmentFromBulge(start: Point, end: Point, bulge: number): Segment {
   const chord = pointDistance(start, end);
-  // a sagitta below a billionth of the chord is rounding, and its centre would lie at infinity
-  if (Math.abs(bulge) < 1e-9 || chord === 0) return lineBetween(start, end);
+  // a sagitta below a millionth of the chord is rounding, and a centre that far away costs the ends their digits
+  if (Math.abs(bulge) < 1e-6 || chord === 0) return lineBetween(start, end);
   const sweep = 4 * Math.atan(bulge);
   const radius = (chord * (1 + bulge * bulge)) / (4 * Math.abs(bulge));
   // signed distance of the centre from the chord's middle, to the left of the chord
