@@ -1,4 +1,4 @@
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { PIERCE_DEFAULTS, piercePredict, type Stage } from '../../../strategy/pierce/index.ts';
 import { netRemovalHeat } from '../../../strategy/pierce/parameters.ts';

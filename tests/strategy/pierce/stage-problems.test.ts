@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { piercePredict, stageProblems, type Stage, type StageQuantities } from '../../../strategy/pierce/index.ts';
 import { FOUR_KILOWATT } from '../../support/machines.ts';
 import { conditions, input, threeRamps } from './support.ts';

@@ -1,4 +1,4 @@
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import type { PierceInput, PierceParameters, Stage, StageQuantities } from '../../../strategy/pierce/index.ts';
 import { meltingEnthalpy, STEEL_DENSITY } from '../../../strategy/steel/index.ts';
 import { NOZZLE_1_5, TEN_KILOWATT } from '../../support/machines.ts';

@@ -1,0 +1,208 @@
+import {
+  DEFAULT_RESERVE_RULES,
+  PIERCE_DEFAULTS,
+  peakRiseAroundLine,
+  peakRiseAroundPoint,
+  piercePredict,
+  pulseTrain,
+  type Stage,
+} from '../../strategy/pierce/index.ts';
+import { netRemovalHeat } from '../../strategy/pierce/parameters.ts';
+import { meltingEnthalpy, meltingEnthalpyPerVolume, STEEL_DENSITY } from '../../strategy/steel/index.ts';
+import { NOZZLE_1_5, TEN_KILOWATT } from '../support/machines.ts';
+import { outsideChecks, type OutsideCheck } from './check.ts';
+
+const FORMULA = 'computed from a published formula' as const;
+const DEFINITION = 'definition; pulse formulary';
+const NIST = 'NIST Chemistry WebBook, iron (Chase 1998): 10.2 J/mm³ to melt';
+
+const PULSES = [
+  [6000, 0.25, 100, 1500, 15, 2.5],
+  [3000, 0.4, 200, 1200, 6, 2],
+  [12_000, 0.1, 500, 1200, 2.4, 0.2],
+] as const;
+
+outsideChecks(
+  'pulses',
+  PULSES.flatMap(([peakPower, duty, pulseFrequency, mean, energy, on]) => {
+    const train = () => pulseTrain({ peakPower, duty, pulseFrequency });
+    const name = `${peakPower / 1000} kW, ${duty * 100} %, ${pulseFrequency} Hz`;
+    const one = (part: string, unit: string, expected: number, got: () => number): OutsideCheck => ({
+      id: `U01-${peakPower}-${part}`,
+      what: `${part} of ${name}`,
+      unit,
+      got,
+      expected,
+      tolerance: { rel: 1e-6 },
+      source: DEFINITION,
+      standing: FORMULA,
+    });
+    return [
+      one('mean', 'W', mean, () => train().meanPower),
+      one('energy', 'J', energy, () => train().pulseEnergy ?? Number.NaN),
+      one('on-time', 'ms', on, () => (train().onTime ?? Number.NaN) * 1e3),
+    ];
+  }),
+);
+
+/** Energy to melt a volume of iron from 25 °C, J/m³, from the NIST enthalpy of the liquid. */
+const NIST_MELTING = 10.2e9;
+
+/** Energy to melt a cylinder out of a plate, J; diameter and thickness in m. */
+function leastEnergy(diameter: number, thickness: number): number {
+  return meltingEnthalpyPerVolume(298.15) * (Math.PI / 4) * diameter ** 2 * thickness;
+}
+
+/** Continuous power of so many watts, long enough. */
+function flat(power: number): readonly Stage[] {
+  const set = {
+    standoff: 0.006,
+    focusPosition: 0,
+    peakPower: power,
+    duty: 1,
+    pulseFrequency: null,
+    oxygenPressure: 0.6e5,
+  };
+  return [{ duration: 60, from: set, to: set }];
+}
+
+/** Predicted pierce of 6 mm with a bore of 1 mm, s. */
+function predictedTime(power: number): number {
+  const { breakthrough } = piercePredict({
+    stages: flat(power),
+    thickness: 0.006,
+    plateTemperature: 298.15,
+    profile: TEN_KILOWATT,
+    nozzle: NOZZLE_1_5,
+    parameters: { boreRadius: 0.5e-3, spotFollowing: 0 },
+  });
+  if (breakthrough.kind === 'none') throw new Error(breakthrough.why);
+  return breakthrough.time;
+}
+
+outsideChecks('least energy and time of a pierce', [
+  ...(
+    [
+      [0.6, 57.6796411199],
+      [1, 160.221225333],
+      [2, 640.884901332],
+    ] as const
+  ).map(([diameter, expected]): OutsideCheck => ({
+    id: `P01-${diameter}`,
+    what: `least energy for a ${diameter} mm hole in 20 mm`,
+    unit: 'J',
+    got: () => leastEnergy(diameter * 1e-3, 0.02),
+    expected,
+    tolerance: { rel: 0.005 },
+    source: NIST,
+    standing: FORMULA,
+  })),
+  ...(
+    [
+      [500, 0.801106126665],
+      [1000, 0.400553063333],
+      [2000, 0.200276531666],
+    ] as const
+  ).map(([power, expected]): OutsideCheck => ({
+    id: `P02-${power}`,
+    what: `least time for a 1 mm hole in 20 mm with 40 % of ${power} W`,
+    unit: 's',
+    got: () => leastEnergy(1e-3, 0.02) / (PIERCE_DEFAULTS.coupling * power),
+    expected,
+    tolerance: { rel: 0.005 },
+    source: NIST,
+    standing: FORMULA,
+  })),
+  ...[500, 1000, 2000, 4000].map((power): OutsideCheck => ({
+    id: `P02-bound-${power}`,
+    what: `predicted time for 6 mm with a 1 mm bore and ${power} W, against bare melting`,
+    unit: 's',
+    got: () => predictedTime(power),
+    expected: (NIST_MELTING * (Math.PI / 4) * 1e-3 ** 2 * 0.006) / (0.4 * power),
+    tolerance: { bound: 'at least' },
+    source: `${NIST}: a lower bound of any pierce that oxidation does not feed`,
+    standing: FORMULA,
+  })),
+]);
+
+outsideChecks('the ledger in the pierce', [
+  {
+    id: 'O06-pierce',
+    what: 'energy per removed volume with the default parameters, cold plate',
+    unit: 'J/mm³',
+    got: () => ((meltingEnthalpy(293.15) + PIERCE_DEFAULTS.expulsionHeat) * STEEL_DENSITY) / 1e9,
+    expected: 26,
+    tolerance: { rel: 0.15 },
+    source: 'Fomin et al., J. Appl. Mech. Tech. Phys. 58 (2017), abstract (cutting)',
+    standing: 'published',
+  },
+  {
+    id: 'O07-pierce',
+    what: 'of that from the laser where oxygen is ample',
+    unit: 'J/mm³',
+    got: () => (netRemovalHeat(PIERCE_DEFAULTS, 293.15) * STEEL_DENSITY) / 1e9,
+    expected: 12,
+    tolerance: { abs: 1 },
+    source: 'Golyshev et al., Quantum Electron. 45 (2015), abstract (cutting): 11…13 J/mm³',
+    standing: 'published',
+  },
+  {
+    id: 'R01',
+    what: 'reserve asked for on a cold plate',
+    unit: '',
+    got: () => DEFAULT_RESERVE_RULES.cold,
+    expected: 2,
+    tolerance: { abs: 0 },
+    source: 'common practice: a careful production pierce is through at about half of its routine; no source',
+    standing: 'common practice',
+  },
+]);
+
+/** k 45 W/(m K), c 600 J/(kg K), ρ 7850 kg/m³: simple-model values of ENV 1993-1-2:1995, from memory. */
+const CAPACITY = 7850 * 600;
+const SOURCES_MAXIMUM =
+  'instantaneous source (Carslaw & Jaeger, Conduction of Heat in Solids, 2nd ed., 10.3(1) and chapter 10) evaluated at its best moment';
+
+outsideChecks('greatest temperature around a pierce', [
+  ...(
+    [
+      [200, 5, 50.01490265642507],
+      [200, 3, 231.55047526122715],
+      [50, 2, 195.37071350166048],
+    ] as const
+  ).map(([heat, millimetres, expected]): OutsideCheck => ({
+    id: `C01-${heat}-${millimetres}`,
+    what: `rise ${millimetres} mm from ${heat} J at a point of the surface`,
+    unit: 'K',
+    got: () => peakRiseAroundPoint(heat, millimetres * 1e-3, CAPACITY),
+    expected,
+    tolerance: { rel: 1e-9 },
+    source: SOURCES_MAXIMUM,
+    standing: FORMULA,
+  })),
+  ...(
+    [
+      [10, 74.5857726424448],
+      [5, 298.3430905697792],
+    ] as const
+  ).map(([millimetres, expected]): OutsideCheck => ({
+    id: `C02-${millimetres}`,
+    what: `rise ${millimetres} mm from 6 kJ along a line through 20 mm`,
+    unit: 'K',
+    got: () => peakRiseAroundLine(6000 / 0.02, millimetres * 1e-3, CAPACITY),
+    expected,
+    tolerance: { rel: 1e-9 },
+    source: SOURCES_MAXIMUM,
+    standing: FORMULA,
+  })),
+  {
+    id: 'H29-bound',
+    what: 'greatest rise 10 mm from 6 kJ along a line through 20 mm, against the rise after 5 s',
+    unit: 'K',
+    got: () => peakRiseAroundLine(6000 / 0.02, 0.01, CAPACITY),
+    expected: 62.870670747,
+    tolerance: { bound: 'at least' },
+    source: 'instantaneous line source 5 s after 6 kJ in 20 mm: 62.87 K at 10 mm (Carslaw & Jaeger, 10.3(1))',
+    standing: FORMULA,
+  },
+]);
