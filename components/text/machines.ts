@@ -105,6 +105,7 @@ export const profileText = {
   },
   bed: {
     title: 'Bed',
+    tables: 'Tables',
     length: { label: 'Length' },
     width: { label: 'Width' },
     shuttleTable: { label: 'A second table is loaded while the first is cut' },
