@@ -62,6 +62,6 @@ export function outsideChecks(title: string, checks: readonly OutsideCheck[]): v
 }
 
 function report(result: OutsideResult): void {
-  const file: string | undefined = env.OUTSIDE_REPORT;
-  if (file !== undefined && file !== '') appendFileSync(file, `${JSON.stringify(result)}\n`);
+  const file: unknown = env.OUTSIDE_REPORT;
+  if (typeof file === 'string' && file !== '') appendFileSync(file, `${JSON.stringify(result)}\n`);
 }
