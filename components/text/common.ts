@@ -27,4 +27,10 @@ export const common = {
     detail:
       'What you typed is still here and has not been saved. Load the newest to see it; your text stays in the fields.',
   },
+  newest: {
+    title: 'The newest is loaded',
+    words:
+      'The sheet above shows what the other person saved. The fields still hold your text; saving now puts it in place of theirs.',
+    take: 'Drop my text and take theirs',
+  },
 } as const;

@@ -1,0 +1,36 @@
+import { useState } from 'react';
+import { roles } from '@/components/theme/roles.ts';
+import { Notice } from './notice.tsx';
+
+/** A picture at its own shape, as wide as there is room; a tap opens it whole. Says so when it cannot be fetched. */
+export function Picture({
+  address,
+  width,
+  height,
+  words,
+  lost,
+}: {
+  readonly address: string;
+  /** px */
+  readonly width: number;
+  readonly height: number;
+  /** What it shows, for who doesn't see it. */
+  readonly words: string;
+  readonly lost: string;
+}) {
+  const [failed, setFailed] = useState(false);
+  if (failed) return <Notice kind="wrong">{lost}</Notice>;
+  return (
+    <a href={address} target="_blank" rel="noreferrer" style={{ display: 'block' }}>
+      <img
+        src={address}
+        alt={words}
+        width={width}
+        height={height}
+        loading="lazy"
+        onError={() => setFailed(true)}
+        style={{ display: 'block', width: '100%', maxWidth: width, height: 'auto', background: roles.steelFill }}
+      />
+    </a>
+  );
+}
