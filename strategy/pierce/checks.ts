@@ -226,8 +226,8 @@ function idleCheck(stages: readonly Stage[], outcome: StrategyOutcome): PierceCh
   );
 }
 
-function eruptionCheck({ eruption, thickness, hot }: StrategyPrediction): PierceCheck {
-  const facts = `stage ${eruption.stage + 1} comes to ${numberText(eruption.index, 2)} of what throws the melt out, on ${millimetres(thickness.min)} at ${degrees(hot.plateTemperature)}`;
+function eruptionCheck({ eruption }: StrategyPrediction): PierceCheck {
+  const facts = `stage ${eruption.stage + 1} comes to ${numberText(eruption.index, 2)} of what throws the melt out, on ${millimetres(eruption.thickness)} at ${degrees(eruption.plateTemperature)}`;
   if (eruption.index >= 1) {
     return check('eruption', 'wrong', `It erupts: ${facts}. Less mean power or shorter pulses there.`, [
       eruption.stage,
@@ -241,7 +241,7 @@ function eruptionCheck({ eruption, thickness, hot }: StrategyPrediction): Pierce
 
 function craterCheck(prediction: StrategyPrediction, leadInLength: number | undefined): PierceCheck {
   const radius = prediction.craterRadius;
-  const facts = `The crater is about ${millimetres(2 * radius)} wide on the thinnest, hottest plate`;
+  const facts = `The crater is about ${millimetres(2 * radius)} wide at worst`;
   if (leadInLength === undefined) return check('crater', 'ok', `${facts}.`);
   const leadIn = `a lead-in of ${millimetres(leadInLength)}`;
   if (radius >= leadInLength) return check('crater', 'wrong', `${facts} and reaches the contour over ${leadIn}.`);

@@ -44,6 +44,7 @@ export {
   pierceReserve,
   strategyPrediction,
   type Reserve,
+  type StrategyEruption,
   type StrategyInput,
   type StrategyOutcome,
   type StrategyPrediction,

@@ -35,6 +35,13 @@ export type StrategyOutcome = {
   readonly perStage: readonly PierceStageResult[];
 };
 
+export type StrategyEruption = {
+  readonly index: number;
+  readonly stage: number;
+  readonly thickness: number; // m
+  readonly plateTemperature: number; // K
+};
+
 /** What a strategy revision stores beside its content. Plain JSON. */
 export type StrategyPrediction = {
   readonly modelVersion: string;
@@ -42,10 +49,10 @@ export type StrategyPrediction = {
   readonly routineTime: number; // s
   readonly cold: StrategyOutcome;
   readonly hot: StrategyOutcome;
-  /** On the thinnest plate, hottest, m. */
+  /** Widest of the three cases predicted, m: thinnest and hottest, thickest and hottest, thickest and cold. */
   readonly craterRadius: number;
-  /** Greatest eruption index on the thinnest plate, hottest, and the stage it falls in. */
-  readonly eruption: { readonly index: number; readonly stage: number };
+  /** Greatest eruption index of the three cases, with the stage and the plate it falls on. */
+  readonly eruption: StrategyEruption;
   /** On the thickest plate, cold: the longest burning one. */
   readonly energy: PiercePrediction['energy'];
   readonly heatLeft: number; // J
@@ -59,9 +66,10 @@ export type StrategyPrediction = {
 export const COLD_PLATE_TEMPERATURE = 293.15;
 
 /**
- * What a staged pierce does over the range of plates it is for: breakthrough and reserve on the thickest, cold and hot; crater
- * and eruption on the thinnest, hot. RangeError as from `piercePredict`, for a range upside down, and for a hottest plate that
- * is colder than the cold one.
+ * What a staged pierce does over the range of plates it is for: breakthrough and reserve on the thickest, cold and hot. Crater and
+ * eruption are worst on the thinnest and hottest as long as the same stages act; but a thick or cold plate is still closed when
+ * a later, stronger stage begins, so the worst of all three cases is taken. RangeError as from `piercePredict`, for a range
+ * upside down, and for a hottest plate that is colder than the cold one.
  */
 export function strategyPrediction(input: StrategyInput): StrategyPrediction {
   const { stages, thickness, profile, nozzle, hottestPlateTemperature } = input;
@@ -92,8 +100,12 @@ export function strategyPrediction(input: StrategyInput): StrategyPrediction {
     routineTime: cold.routineTime,
     cold: outcome(cold, coldPlateTemperature),
     hot: outcome(hot, hottestPlateTemperature),
-    craterRadius: thinHot.craterRadius,
-    eruption: worstEruption(thinHot.perStage),
+    craterRadius: Math.max(thinHot.craterRadius, hot.craterRadius, cold.craterRadius),
+    eruption: worstEruption([
+      { prediction: thinHot, thickness: thickness.min, plateTemperature: hottestPlateTemperature },
+      { prediction: hot, thickness: thickness.max, plateTemperature: hottestPlateTemperature },
+      { prediction: cold, thickness: thickness.max, plateTemperature: coldPlateTemperature },
+    ]),
     energy: cold.energy,
     heatLeft: cold.heatLeft,
     oxygenUsed: cold.oxygenUsed,
@@ -121,10 +133,22 @@ function outcome(prediction: PiercePrediction, plateTemperature: number): Strate
   };
 }
 
-function worstEruption(perStage: readonly PierceStageResult[]): { readonly index: number; readonly stage: number } {
-  let worst = { index: 0, stage: 0 };
-  perStage.forEach(({ eruptionIndex }, stage) => {
-    if (eruptionIndex > worst.index) worst = { index: eruptionIndex, stage };
-  });
-  return worst;
+type PierceCase = {
+  readonly prediction: PiercePrediction;
+  readonly thickness: number;
+  readonly plateTemperature: number;
+};
+
+function worstEruption(cases: readonly PierceCase[]): StrategyEruption {
+  const all = cases.flatMap(({ prediction, thickness, plateTemperature }) =>
+    prediction.perStage.map(({ eruptionIndex }, stage) => ({
+      index: eruptionIndex,
+      stage,
+      thickness,
+      plateTemperature,
+    })),
+  );
+  const [first, ...others] = all;
+  if (first === undefined) throw new RangeError('a pierce without stages has no eruption index');
+  return others.reduce((worst, next) => (next.index > worst.index ? next : worst), first);
 }

@@ -47,15 +47,35 @@ function everywhere(stages: readonly Stage[], changed: Partial<StageQuantities>)
 const GOOD = pierceStageDefaults(TEN_KILOWATT, 0.02);
 
 describe('the prediction of a strategy', () => {
+  const at = (stages: readonly Stage[], thickness: number, plateTemperature: number) =>
+    piercePredict(input(stages, { thickness, plateTemperature }));
+  const worst = (stages: readonly Stage[], thickness: number, plateTemperature: number) =>
+    Math.max(...at(stages, thickness, plateTemperature).perStage.map(({ eruptionIndex }) => eruptionIndex));
+
   it('judges reserve at the thickest plate, crater and eruption at the thinnest and hottest', () => {
     const prediction = predicted(GOOD);
-    const at = (thickness: number, plateTemperature: number) =>
-      piercePredict(input(GOOD, { thickness, plateTemperature }));
-    expect(prediction.cold.breakthrough).toEqual(at(0.02, 293.15).breakthrough);
-    expect(prediction.hot.breakthrough).toEqual(at(0.02, HOT).breakthrough);
-    expect(prediction.cold.reserve).toEqual(pierceReserve(at(0.02, 293.15)));
-    expect(prediction.craterRadius).toBe(at(0.018, HOT).craterRadius);
-    expect(prediction.eruption.index).toBe(Math.max(...at(0.018, HOT).perStage.map((s) => s.eruptionIndex)));
+    expect(prediction.cold.breakthrough).toEqual(at(GOOD, 0.02, 293.15).breakthrough);
+    expect(prediction.hot.breakthrough).toEqual(at(GOOD, 0.02, HOT).breakthrough);
+    expect(prediction.cold.reserve).toEqual(pierceReserve(at(GOOD, 0.02, 293.15)));
+    expect(prediction.craterRadius).toBe(at(GOOD, 0.018, HOT).craterRadius);
+    expect(prediction.eruption).toMatchObject({ index: worst(GOOD, 0.018, HOT), stage: 0, plateTemperature: HOT });
+    expect(prediction.eruption.thickness).toBeCloseTo(0.018, 12);
+  });
+
+  it('sees the eruption of a late, strong stage that only a thick cold plate is still closed for', () => {
+    // Through 8 mm hot before the strong stage begins, but not through 20 mm cold.
+    const stages = [...held(950, 5), ...continuous(held(8000, 5))];
+    const prediction = strategyPrediction({
+      stages,
+      thickness: { min: 0.008, max: 0.02 },
+      hottestPlateTemperature: HOT,
+      profile: TEN_KILOWATT,
+      nozzle: NOZZLE_1_5,
+    });
+    expect(worst(stages, 0.008, HOT)).toBeLessThan(1);
+    expect(prediction.eruption).toMatchObject({ stage: 1, thickness: 0.02 });
+    expect(prediction.eruption.index).toBeGreaterThan(1);
+    expect(prediction.craterRadius).toBeGreaterThan(at(stages, 0.008, HOT).craterRadius);
   });
 
   it('has no reserve, and a reason, when the hole is never through', () => {
