@@ -1,0 +1,121 @@
+import { View } from 'react-native';
+import { cornerText, treatmentText } from '@/components/text/corners.ts';
+import { roles } from '@/components/theme/roles.ts';
+import { space } from '@/components/theme/space.ts';
+import { Button } from '@/components/ui/button.tsx';
+import { Divider } from '@/components/ui/divider.tsx';
+import { Notice } from '@/components/ui/notice.tsx';
+import { Panel } from '@/components/ui/panel.tsx';
+import { Row, Stack } from '@/components/ui/stack.tsx';
+import { Body, Figure, Heading, Small } from '@/components/ui/text.tsx';
+import { useUnitSystem } from '@/components/ui/unit-system.ts';
+import type { PlannedCorner, Treatment } from '@/shared/corner-plans.ts';
+import { quantityText } from '@/strategy/units/index.ts';
+import { TemperatureFigure } from './temperature-scale.tsx';
+import { TreatmentBadge } from './treatment-badge.tsx';
+
+type CornerSheetProps = {
+  corner: PlannedCorner;
+  number: number;
+  /** K */
+  limit: number;
+  /** None for who only reads. */
+  onOverride: ((treatment: Treatment | null) => void) | null;
+  busy: boolean;
+  onClose: () => void;
+};
+
+/** All about one corner: angle, return temperature without and with its treatment, what else would do and why not. */
+export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }: CornerSheetProps) {
+  const system = useUnitSystem();
+  const length = (metres: number) => quantityText(metres, 'length', system).text;
+  const seconds = (value: number) => quantityText(value, 'time', system).text;
+  const facts: { label: string; kelvin?: number; text?: string }[] = [
+    { label: cornerText.without, kelvin: corner.untreated },
+    { label: cornerText.with, kelvin: corner.treated },
+    { label: cornerText.straight, kelvin: corner.straightEdge },
+    { label: cornerText.limit, kelvin: limit },
+    { label: cornerText.added, text: seconds(corner.addedTime) },
+    ...(corner.loop
+      ? [
+          {
+            label: cornerText.loopSize,
+            text: cornerText.loopOf(
+              length(corner.loop.radius),
+              length(corner.loop.extension),
+              length(corner.loop.length),
+            ),
+          },
+          { label: cornerText.slug, text: cornerText.slugArea(corner.loop.slugArea) },
+        ]
+      : []),
+    ...(corner.dwell === null ? [] : [{ label: cornerText.dwellFor, text: seconds(corner.dwell) }]),
+  ];
+  return (
+    <Panel>
+      <Row justify="space-between" wrap={false} align="flex-start">
+        <Row gap="s" wrap={false}>
+          <TreatmentBadge treatment={corner.treatment} trouble={corner.trouble !== null} size={44} />
+          <Stack gap="hair">
+            <Small>{cornerText.row(number)}</Small>
+            <Heading level={2}>{`${treatmentText[corner.treatment]}, ${cornerText.angle(corner.angle)}`}</Heading>
+          </Stack>
+        </Row>
+        <Button kind="quiet" label={cornerText.close} onPress={onClose} />
+      </Row>
+      {corner.trouble !== null && <Notice kind="caution">{corner.trouble}</Notice>}
+      <Body>{`${cornerText.chosenBy[corner.chosenBy]} ${corner.why}`}</Body>
+      <View>
+        {facts.map((fact) => (
+          <View key={fact.label} style={factRow}>
+            <Small>{fact.label}</Small>
+            {fact.kelvin === undefined ? <Small strong>{fact.text}</Small> : <TemperatureFigure kelvin={fact.kelvin} />}
+          </View>
+        ))}
+      </View>
+      <Heading level={3}>{cornerText.options}</Heading>
+      {corner.options.map((option) => (
+        <Stack key={option.treatment} gap="xs">
+          <Divider />
+          <Row justify="space-between" gap="s">
+            <Row gap="s" wrap={false}>
+              <TreatmentBadge treatment={option.treatment} />
+              <Stack gap="hair">
+                <Body strong>{treatmentText[option.treatment]}</Body>
+                <Small>{option.fits ? cornerText.fits : cornerText.doesNotFit}</Small>
+              </Stack>
+            </Row>
+            <Row gap="m" wrap={false}>
+              {option.returnTemperature !== null && <TemperatureFigure kelvin={option.returnTemperature} />}
+              {option.addedTime !== null && <Figure value={`+${seconds(option.addedTime)}`} />}
+            </Row>
+          </Row>
+          <Body>{option.why}</Body>
+          {onOverride && option.treatment !== corner.treatment && (
+            <Row>
+              <Button
+                label={cornerText.choose(option.treatment)}
+                busy={busy}
+                disabled={!option.fits}
+                onPress={() => onOverride(option.treatment)}
+              />
+            </Row>
+          )}
+        </Stack>
+      ))}
+      {onOverride && corner.chosenBy === 'person' && (
+        <Button kind="quiet" label={cornerText.byRule} busy={busy} onPress={() => onOverride(null)} />
+      )}
+    </Panel>
+  );
+}
+
+const factRow = {
+  flexDirection: 'row',
+  justifyContent: 'space-between',
+  alignItems: 'center',
+  gap: space.m,
+  minHeight: 32,
+  borderBottomWidth: 1,
+  borderBottomColor: roles.rule,
+} as const;

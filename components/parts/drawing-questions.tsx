@@ -1,0 +1,123 @@
+import { useState } from 'react';
+import { partsText, sizeBoth } from '@/components/text/parts.ts';
+import { Choice } from '@/components/ui/choice.tsx';
+import { NumberField } from '@/components/ui/number-field.tsx';
+import { Panel } from '@/components/ui/panel.tsx';
+import { Stack } from '@/components/ui/stack.tsx';
+import { Body, Heading, Small } from '@/components/ui/text.tsx';
+import { Tick } from '@/components/ui/tick.tsx';
+import { useUnitSystem } from '@/components/ui/unit-system.ts';
+import { drawingAnswersSchema, type DrawingAnswers, type DrawingReadingWire } from '@/shared/parts.ts';
+
+type DrawingQuestionsProps = {
+  reading: DrawingReadingWire;
+  answers: DrawingAnswers;
+  /** The drawing is read again with these. */
+  onAnswer: (answers: DrawingAnswers) => void;
+};
+
+type Question<K> = Extract<DrawingReadingWire['questions'][number], { kind: K }>;
+
+/** What the drawing doesn't say by itself: its unit, what to do about gaps, which layers to take. Answers can be changed until it is kept. */
+export function DrawingQuestions({ reading, answers, onAnswer }: DrawingQuestionsProps) {
+  const system = useUnitSystem();
+  // a question that was answered is no longer asked by the next reading, and stays here to be answered otherwise
+  const unitAsked = useLastAsked(reading.questions.find((one): one is Question<'unit'> => one.kind === 'unit'));
+  const gapsAsked = useLastAsked(reading.questions.find((one): one is Question<'gaps'> => one.kind === 'gaps'));
+  const [otherGap, setOtherGap] = useState(false);
+  const several = reading.layers.length > 1;
+  if (!unitAsked && !gapsAsked && !several) return null;
+
+  const largest = Math.max(0, ...(gapsAsked?.gaps ?? []).map(({ size }) => size));
+  const gapChoice = otherGap ? 'other' : answers.gapTolerance === undefined ? 'leave' : 'close';
+  const withGap = (gapTolerance: number | undefined) => {
+    const { gapTolerance: _before, ...rest } = answers;
+    onAnswer(gapTolerance === undefined ? rest : { ...rest, gapTolerance });
+  };
+
+  return (
+    <Panel title={partsText.questions}>
+      {unitAsked && (
+        <Stack gap="s">
+          <Body>{unitAsked.why}</Body>
+          <Choice
+            kind="radios"
+            label={partsText.unitQuestion}
+            options={unitAsked.readings.map(({ unit, width, height }) => ({
+              value: unit,
+              label: partsText.unitOption(unit),
+              hint: sizeBoth(width, height),
+            }))}
+            value={answers.unit ?? null}
+            onChange={(unit) => onAnswer({ ...answers, unit })}
+          />
+        </Stack>
+      )}
+      {gapsAsked && (
+        <Stack gap="s">
+          <Heading level={3}>{partsText.gapQuestion}</Heading>
+          <Body>{gapsAsked.why}</Body>
+          <Small>{partsText.gapsFound(gapsAsked.gaps.length, largest, system)}</Small>
+          <Choice
+            kind="radios"
+            label={partsText.gapQuestion}
+            options={[
+              { value: 'leave', label: partsText.gapOption.leave, hint: partsText.gapOption.leaveHint },
+              {
+                value: 'close',
+                label: partsText.gapOption.close(gapsAsked.closesAt, system),
+                hint: partsText.gapOption.closeHint,
+              },
+              { value: 'other', label: partsText.gapOption.other },
+            ]}
+            value={gapChoice}
+            onChange={(choice) => {
+              setOtherGap(choice === 'other');
+              if (choice === 'leave') withGap(undefined);
+              if (choice === 'close') withGap(gapsAsked.closesAt);
+            }}
+          />
+          {otherGap && <OtherGap value={answers.gapTolerance ?? gapsAsked.closesAt} onGap={withGap} />}
+        </Stack>
+      )}
+      {several && (
+        <Stack gap="hair">
+          <Heading level={3}>{partsText.layers}</Heading>
+          {reading.layers.map((layer) => (
+            <Tick
+              key={layer.name}
+              label={partsText.layer(layer.name, layer.pieces)}
+              checked={layer.taken}
+              onChange={(take) => {
+                const taken = reading.layers.filter((one) => (one.name === layer.name ? take : one.taken));
+                onAnswer({ ...answers, layers: taken.map(({ name }) => name) });
+              }}
+            />
+          ))}
+        </Stack>
+      )}
+    </Panel>
+  );
+}
+
+function OtherGap({ value, onGap }: { value: number; onGap: (metres: number) => void }) {
+  const [typed, setTyped] = useState<number | null>(value);
+  const read = drawingAnswersSchema.shape.gapTolerance.safeParse(typed ?? Number.NaN);
+  return (
+    <NumberField
+      label={partsText.gapSize}
+      dimension="length"
+      value={typed}
+      onChange={setTyped}
+      error={read.success ? undefined : read.error.issues[0]?.message}
+      // read again when the field is left, not at every digit
+      onBlur={() => read.success && read.data !== undefined && onGap(read.data)}
+    />
+  );
+}
+
+function useLastAsked<Q>(now: Q | undefined): Q | undefined {
+  const [last, setLast] = useState(now);
+  if (now !== undefined && now !== last) setLast(now);
+  return now ?? last;
+}

@@ -1,0 +1,293 @@
+import { useQuery } from '@tanstack/react-query';
+import { useEffect, useMemo, useReducer, useState, type ReactNode } from 'react';
+import { View } from 'react-native';
+import { machinesQuery } from '@/components/data/machines.ts';
+import { nozzlesQuery } from '@/components/data/nozzles.ts';
+import { isProblem } from '@/components/data/problem.ts';
+import { useRevisionSave } from '@/components/data/revisions.ts';
+import { momentText } from '@/components/text/moments.ts';
+import { revisionText } from '@/components/text/pierce.ts';
+import { useLayout } from '@/components/theme/layout.ts';
+import { roles } from '@/components/theme/roles.ts';
+import { space } from '@/components/theme/space.ts';
+import { Button } from '@/components/ui/button.tsx';
+import { Dialog } from '@/components/ui/dialog.tsx';
+import { Divider } from '@/components/ui/divider.tsx';
+import { ErrorNotice } from '@/components/ui/error-notice.tsx';
+import { EstimateNote } from '@/components/ui/estimate-note.tsx';
+import { Notice } from '@/components/ui/notice.tsx';
+import { Panel } from '@/components/ui/panel.tsx';
+import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
+import { Body, Small } from '@/components/ui/text.tsx';
+import type { Revision } from '@/shared/strategies.ts';
+import { CheckList } from './check-list.tsx';
+import { CornerRulesSentence } from './corner-rules-sentence.tsx';
+import { CutSentence } from './cut-sentence.tsx';
+import { DraftProvider } from './draft-context.tsx';
+import { contentSame, draftOf, draftProblems, draftReduce } from './draft.ts';
+import { GoodFor } from './good-for.tsx';
+import { History } from './history.tsx';
+import { forgetDraft, keepDraft, keptDraft } from './kept-drafts.ts';
+import { SectionPanel } from './section-panel.tsx';
+import { stageEnds } from './section-layout.ts';
+import { StageSentence } from './stage-sentence.tsx';
+import { usePrediction } from './use-prediction.ts';
+
+type RevisionEditorProps = {
+  revision: Revision;
+  userId: string;
+  /** May write strategies at all; a draft is the only thing that can be written in. */
+  mayWrite: boolean;
+  /** Fetches the revision as it stands on the server. */
+  refetch: () => Promise<Revision | null>;
+  /** Decisions that may be taken; a draft is handed over saved. */
+  decisions: (saved: () => Promise<Revision | null>) => ReactNode;
+};
+
+/** The pierce designer: section, lanes and title block; the stages as sentences; checks; cut and corners. Read-only once handed in. */
+export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions }: RevisionEditorProps) {
+  const { wide } = useLayout();
+  const readOnly = revision.state !== 'draft' || !mayWrite;
+  const before = readOnly ? null : keptDraft(userId, revision.id);
+  // the version this draft was made from: what If-Match says, also after somebody else has saved
+  const [base, setBase] = useState({ version: before?.version ?? revision.version, content: revision.content });
+  const [restored] = useState(before !== null);
+  const [draft, dispatch] = useReducer(draftReduce, before?.draft ?? draftOf(revision.content));
+  const [chosen, setChosen] = useState<number | null>(null);
+  const [dropping, setDropping] = useState(false);
+  const save = useRevisionSave();
+
+  const problems = useMemo(() => draftProblems(draft), [draft]);
+  const dirty = !contentSame(draft.content, base.content) || Object.keys(draft.typed).length > 0;
+
+  // Has it been changed elsewhere while nothing was typed here? Then the newest is shown.
+  if (!dirty && revision.version !== base.version && !save.isPending) {
+    setBase({ version: revision.version, content: revision.content });
+    dispatch({ do: 'load', content: revision.content });
+  }
+  useEffect(() => {
+    if (readOnly) return undefined;
+    if (dirty) keepDraft(userId, revision.id, base.version, draft);
+    else forgetDraft(userId, revision.id);
+    if (!dirty) return undefined;
+    const warn = (event: BeforeUnloadEvent) => event.preventDefault();
+    window.addEventListener('beforeunload', warn);
+    return () => window.removeEventListener('beforeunload', warn);
+  }, [readOnly, dirty, userId, revision.id, base.version, draft]);
+
+  const machines = useQuery(machinesQuery());
+  const nozzles = useQuery(nozzlesQuery());
+  const machine = machines.data?.find(({ revisions }) =>
+    revisions.some(({ id }) => id === draft.content.machineRevisionId),
+  );
+  const machineRevision = machine?.revisions.find(({ id }) => id === draft.content.machineRevisionId);
+  const nozzle = nozzles.data?.find(({ id }) => id === draft.content.nozzleId) ?? null;
+  const live = usePrediction(draft.content, problems.size === 0, machineRevision?.profile ?? null, nozzle, {
+    prediction: revision.prediction,
+    content: revision.content,
+    behind: false,
+  });
+  // a revision that can't be changed shows what was decided on, not what today's model would say
+  const shown = readOnly ? { prediction: revision.prediction, content: revision.content, behind: false } : live;
+
+  const saveNow = async (version: number): Promise<Revision | null> => {
+    try {
+      const saved = await save.mutateAsync({ revision: { id: revision.id, version }, content: draft.content });
+      setBase({ version: saved.version, content: saved.content });
+      return saved;
+    } catch {
+      return null; // said by the mutation's own error below
+    }
+  };
+  const saved = async () => (dirty ? saveNow(base.version) : revision);
+  const conflict = isProblem(save.error, 'stale');
+  const problemCount = problems.size;
+
+  const saveBar = !readOnly && (
+    <Stack gap="s">
+      {dirty && (
+        <Small strong>
+          {restored && !save.isPending ? revisionText.restored : revisionText.unsaved}
+          {problemCount > 0 ? ` ${revisionText.wrongFields(problemCount)}` : ''}
+        </Small>
+      )}
+      {save.isSuccess && !dirty && (
+        <View role="status">
+          <Small>{revisionText.saved}</Small>
+        </View>
+      )}
+      {conflict ? (
+        <Notice kind="caution" title={revisionText.conflict.title} live>
+          <Body>{revisionText.conflict.detail}</Body>
+          <Row>
+            <Button
+              label={revisionText.conflict.mine}
+              busy={save.isPending}
+              onPress={async () => {
+                const theirs = await refetch();
+                if (theirs) await saveNow(theirs.version);
+              }}
+            />
+            <Button
+              label={revisionText.conflict.theirs}
+              onPress={async () => {
+                const theirs = await refetch();
+                if (!theirs) return;
+                setBase({ version: theirs.version, content: theirs.content });
+                dispatch({ do: 'load', content: theirs.content });
+                save.reset();
+              }}
+            />
+          </Row>
+        </Notice>
+      ) : (
+        save.error !== null && <ErrorNotice error={save.error} onRetry={() => void saveNow(base.version)} />
+      )}
+      <Row>
+        <Button
+          kind={dirty ? 'main' : 'plain'}
+          label={revisionText.save}
+          busy={save.isPending}
+          disabled={!dirty || problemCount > 0}
+          onPress={() => void saveNow(base.version)}
+        />
+        {dirty && <Button kind="quiet" label={revisionText.drop} onPress={() => setDropping(true)} />}
+        {decisions(saved)}
+      </Row>
+    </Stack>
+  );
+
+  const ends = stageEnds(shown.content.stages);
+  const cold = shown.prediction.cold.breakthrough;
+  const throughStage = cold.kind === 'ok' ? ends.findIndex((end) => cold.value <= end + 1e-9) : -1;
+  const throughIn = (index: number): string | null => {
+    if (cold.kind !== 'ok' || index !== throughStage || shown.behind) return null;
+    const start = (ends[index] ?? 0) - (shown.content.stages[index]?.duration ?? 0);
+    return revisionText.throughHere(cold.value - start);
+  };
+
+  const section = (
+    <Stack gap="s">
+      {shown.behind && (
+        <Notice kind="plain" live>
+          {revisionText.behind}
+        </Notice>
+      )}
+      <SectionPanel
+        live={shown}
+        content={draft.content}
+        machine={machine && machineRevision ? { name: machine.name, revisionNumber: machineRevision.number } : null}
+        nozzle={nozzle}
+        chosen={chosen}
+      />
+    </Stack>
+  );
+  const stages = (
+    <Panel title={revisionText.stages}>
+      {draft.content.stages.map((stage, index) => (
+        <Stack key={draft.stageKeys[index]} gap="s">
+          {index > 0 && <Divider />}
+          <StageSentence index={index} stage={stage} through={throughIn(index)} onChoose={() => setChosen(index)} />
+        </Stack>
+      ))}
+    </Panel>
+  );
+  const checks = (
+    <Panel title={revisionText.checks}>
+      <CheckList checks={shown.prediction.checks} />
+    </Panel>
+  );
+  const conditions = (
+    <>
+      <Panel title={revisionText.goodFor}>
+        <GoodFor />
+      </Panel>
+      <Panel title={revisionText.cut}>
+        <CutSentence />
+      </Panel>
+      <Panel title={revisionText.cornerRules}>
+        <CornerRulesSentence />
+      </Panel>
+    </>
+  );
+  const history = (
+    <Panel title={revisionText.history}>
+      <Small>
+        {revisionText.by(revision.touchedBy.map(({ name }) => name).join(', '), momentText(revision.changedAt))}
+      </Small>
+      <History revision={revision} />
+    </Panel>
+  );
+  return (
+    <DraftProvider value={{ draft, dispatch, problems, readOnly, scale: machineRevision?.profile.focusScale ?? null }}>
+      {wide ? (
+        <Row align="flex-start" wrap={false} gap="xl">
+          <Cell grow={5}>
+            <Stack gap="l">
+              {section}
+              {conditions}
+              <EstimateNote />
+            </Stack>
+          </Cell>
+          <Cell grow={4}>
+            <Stack gap="l">
+              {saveBar || decisions(saved)}
+              {checks}
+              {stages}
+              {history}
+            </Stack>
+          </Cell>
+        </Row>
+      ) : (
+        <Stack gap="l">
+          {readOnly && decisions(saved)}
+          {section}
+          {checks}
+          {stages}
+          {conditions}
+          {history}
+          <EstimateNote />
+          {!readOnly && <StickyBar>{saveBar}</StickyBar>}
+        </Stack>
+      )}
+      <Dialog
+        title={revisionText.dropTitle}
+        open={dropping}
+        onClose={() => setDropping(false)}
+        actions={
+          <Button
+            kind="main"
+            label={revisionText.drop}
+            onPress={() => {
+              setDropping(false);
+              setBase({ version: revision.version, content: revision.content });
+              dispatch({ do: 'load', content: revision.content });
+              save.reset();
+            }}
+          />
+        }
+      >
+        <Body>{revisionText.dropMeaning}</Body>
+      </Dialog>
+    </DraftProvider>
+  );
+}
+
+/** What must stay at hand on a phone, above the page's lower edge. */
+function StickyBar({ children }: { children: ReactNode }) {
+  return (
+    <div
+      data-print="hide"
+      style={{
+        position: 'sticky',
+        bottom: 0,
+        zIndex: 5,
+        background: roles.ground,
+        borderTop: `1px solid ${roles.ink}`,
+        paddingBlock: space.m,
+      }}
+    >
+      {children}
+    </div>
+  );
+}

@@ -1,0 +1,327 @@
+import { useId, useState } from 'react';
+import { View } from 'react-native';
+import { roles } from '@/components/theme/roles.ts';
+import { family } from '@/components/theme/type.ts';
+import { laneText, sectionText, sectionWords } from '@/components/text/pierce.ts';
+import type { Condition, Prediction } from '@/shared/strategies.ts';
+import type { Stage } from '@/strategy/pierce/stage.ts';
+import { quantityIn, type UnitSystem } from '@/strategy/units/index.ts';
+import { centreLine, HatchPattern } from './hatch.tsx';
+import { Lane, laneHeight } from './lane.tsx';
+import { niceTicks } from './nice-ticks.ts';
+import {
+  dimensionSpan,
+  fittingLabel,
+  laneNames,
+  polylineData,
+  stageEnds,
+  traceUntilThrough,
+  type LaneName,
+} from './section-layout.ts';
+
+type SectionViewProps = {
+  prediction: Prediction;
+  stages: readonly Stage[];
+  system: UnitSystem;
+  /** Lanes under the section, from the top; all of them when nothing is said. */
+  lanes?: readonly LaneName[];
+  /** The stage being edited. */
+  chosen?: number | null;
+  /** Height of the plate's section, px. */
+  depth?: number;
+};
+
+/** Depth against time, the plate in section, for a cold and a hot plate, with lanes for what the machine is told. */
+export function SectionView({
+  prediction,
+  stages,
+  system,
+  lanes = laneNames,
+  chosen = null,
+  depth = 250,
+}: SectionViewProps) {
+  const [measured, setMeasured] = useState(720);
+  const id = useId().replace(/\W/g, '');
+  const { cold, hot, routineTime } = prediction;
+  const width = Math.max(280, measured);
+  const left = 50;
+  const right = width - 14;
+  const top = 28;
+  const bottom = top + depth;
+  const lanesTop = bottom + 2 * dimensionRow + 18;
+  const lanesBottom = lanesTop + lanes.length * laneHeight;
+  const height = lanesBottom + 30;
+
+  const x = (time: number) => left + (time / Math.max(routineTime, 1e-9)) * (right - left);
+  const y = (z: number) => top + (z / cold.thickness) * depth;
+  const ends = stageEnds(stages);
+  const trace = (condition: Condition) =>
+    traceUntilThrough(condition).map((p) => ({ x: x(p.time), y: y((p.depth / condition.thickness) * cold.thickness) }));
+  const coldTrace = trace(cold);
+  const coldEnd = cold.breakthrough.kind === 'ok' ? x(cold.breakthrough.value) : right;
+  const lengthUnit = system === 'metric' ? 'mm' : 'in';
+  const depthTicks = niceTicks(quantityIn(cold.thickness, 'length', lengthUnit), depth > 200 ? 5 : 4);
+  const timeTicks = niceTicks(routineTime, width > 560 ? 7 : 4);
+
+  return (
+    <View onLayout={(event) => setMeasured(Math.round(event.nativeEvent.layout.width) || 720)}>
+      <svg
+        width="100%"
+        height={height}
+        viewBox={`0 0 ${width} ${height}`}
+        role="img"
+        aria-label={sectionWords(prediction, stages, system)}
+      >
+        <defs>
+          <HatchPattern id={`${id}steel`} spacing={9} colour={roles.steelLine} weight={0.9} />
+          <HatchPattern id={`${id}spare`} spacing={10} colour={roles.ember} weight={1} falling />
+          <clipPath id={`${id}plate`}>
+            <rect x={left} y={top} width={right - left} height={depth} />
+          </clipPath>
+        </defs>
+
+        {/* the steel still standing below the bore, at each moment */}
+        <g clipPath={`url(#${id}plate)`}>
+          <path
+            d={`${polylineData(coldTrace)}L${coldEnd} ${bottom}L${left} ${bottom}Z`}
+            fill={roles.steelFill}
+            stroke="none"
+          />
+          <path
+            d={`${polylineData(coldTrace)}L${coldEnd} ${bottom}L${left} ${bottom}Z`}
+            fill={`url(#${id}steel)`}
+            stroke="none"
+          />
+          {cold.breakthrough.kind === 'ok' && (
+            <rect
+              data-testid="section-reserve"
+              x={coldEnd}
+              y={top}
+              width={Math.max(0, right - coldEnd)}
+              height={depth}
+              fill={`url(#${id}spare)`}
+              fillOpacity={0.55}
+            />
+          )}
+        </g>
+        {chosen !== null && ends[chosen] !== undefined && (
+          <rect
+            x={x((ends[chosen] ?? 0) - (stages[chosen]?.duration ?? 0))}
+            y={top}
+            width={x(stages[chosen]?.duration ?? 0) - left}
+            height={lanesBottom - top - 12}
+            fill={roles.ember}
+            fillOpacity={0.08}
+          />
+        )}
+
+        {ends.map((end, index) => {
+          const from = x(end - (stages[index]?.duration ?? 0));
+          const label = fittingLabel(x(end) - from, sectionText.stage(index + 1));
+          return (
+            <g key={index}>
+              {label !== null && (
+                <text
+                  x={(from + x(end)) / 2}
+                  y={17}
+                  textAnchor="middle"
+                  fontFamily={family.label}
+                  fontSize={14}
+                  fill={index === chosen ? roles.ember : roles.ink}
+                >
+                  {label}
+                </text>
+              )}
+              {index < ends.length - 1 && (
+                <line
+                  data-testid="section-boundary"
+                  x1={x(end)}
+                  x2={x(end)}
+                  y1={6}
+                  y2={lanesBottom - 12}
+                  stroke={roles.softInk}
+                  strokeWidth={1}
+                  strokeDasharray={centreLine}
+                />
+              )}
+            </g>
+          );
+        })}
+
+        <line x1={left} x2={right} y1={top} y2={top} stroke={roles.ink} strokeWidth={2.4} />
+        <line x1={left} x2={right} y1={bottom} y2={bottom} stroke={roles.ink} strokeWidth={2.4} />
+        <path d={polylineData(trace(hot))} fill="none" stroke={roles.hot} strokeWidth={2} strokeDasharray="7 5" />
+        <path d={polylineData(coldTrace)} fill="none" stroke={roles.cold} strokeWidth={2.6} />
+        {cold.breakthrough.kind === 'ok' && (
+          <circle
+            data-testid="section-through-cold"
+            cx={coldEnd}
+            cy={bottom}
+            r={5.5}
+            fill={roles.cold}
+            stroke={roles.sheet}
+            strokeWidth={1}
+          />
+        )}
+        {hot.breakthrough.kind === 'ok' && (
+          <circle
+            data-testid="section-through-hot"
+            cx={x(hot.breakthrough.value)}
+            cy={bottom}
+            r={5.5}
+            fill={roles.sheet}
+            stroke={roles.hot}
+            strokeWidth={2.2}
+          />
+        )}
+
+        {depthTicks.map((tick) => (
+          <g key={tick}>
+            <line
+              x1={left - 5}
+              x2={left}
+              y1={y(tick * quantityOne(lengthUnit))}
+              y2={y(tick * quantityOne(lengthUnit))}
+              stroke={roles.softInk}
+              strokeWidth={1}
+            />
+            <text
+              x={left - 9}
+              y={y(tick * quantityOne(lengthUnit)) + 5}
+              textAnchor="end"
+              fontFamily={family.figure}
+              fontSize={14}
+              fill={roles.ink}
+            >
+              {tick}
+            </text>
+          </g>
+        ))}
+        <text
+          transform={`translate(14 ${(top + bottom) / 2}) rotate(-90)`}
+          textAnchor="middle"
+          fontFamily={family.label}
+          fontSize={14}
+          fill={roles.softInk}
+        >
+          {`${sectionText.depth}, ${lengthUnit}`}
+        </text>
+
+        <DimensionRow
+          condition={cold}
+          plate={sectionText.cold}
+          colour={roles.cold}
+          x={x}
+          end={right}
+          y={bottom + dimensionRow}
+          routineTime={routineTime}
+        />
+        <DimensionRow
+          condition={hot}
+          plate={sectionText.plateAt(hot.plateTemperature, system)}
+          colour={roles.hot}
+          x={x}
+          end={right}
+          y={bottom + 2 * dimensionRow}
+          routineTime={routineTime}
+          dashed
+        />
+
+        {lanes.map((lane, index) => (
+          <Lane
+            key={lane}
+            lane={lane}
+            label={laneText[lane].name}
+            stages={stages}
+            system={system}
+            x={x}
+            left={left}
+            right={right}
+            top={lanesTop + index * laneHeight}
+            chosen={chosen}
+          />
+        ))}
+
+        {timeTicks.map((tick) => (
+          <text
+            key={tick}
+            x={x(tick)}
+            y={lanesBottom + 18}
+            textAnchor={x(tick) > right - 12 ? 'end' : 'middle'}
+            fontFamily={family.figure}
+            fontSize={14}
+            fill={roles.ink}
+          >
+            {`${tick} s`}
+          </text>
+        ))}
+      </svg>
+    </View>
+  );
+}
+
+/** Height of one dimension line with its lettering, px. */
+const dimensionRow = 26;
+
+const quantityOne = (unit: 'mm' | 'in') => (unit === 'mm' ? 1e-3 : 0.0254);
+
+type DimensionRowProps = {
+  condition: Condition;
+  plate: string;
+  colour: string;
+  x: (time: number) => number;
+  end: number;
+  y: number;
+  routineTime: number;
+  dashed?: boolean;
+};
+
+/** Time to breakthrough and time in reserve, as dimension lines with oblique ticks. */
+function DimensionRow({ condition, plate, colour, x, end, y, routineTime, dashed = false }: DimensionRowProps) {
+  const through = condition.breakthrough;
+  const spans =
+    through.kind === 'ok'
+      ? [
+          dimensionSpan(x(0), x(through.value), sectionText.through(plate, through.value)),
+          dimensionSpan(x(through.value), end, sectionText.inReserve(routineTime - through.value)),
+        ]
+      : [dimensionSpan(x(0), end, sectionText.notThrough(plate))];
+  return (
+    <g>
+      {spans.map((span) => (
+        <g key={span.from}>
+          {span.gap && (
+            <rect x={span.gap.from} y={y - 11} width={span.gap.to - span.gap.from} height={20} fill={roles.sheet} />
+          )}
+          <path
+            d={
+              span.gap
+                ? `M${span.from} ${y}H${span.gap.from}M${span.gap.to} ${y}H${span.to}`
+                : `M${span.from} ${y}H${span.to}`
+            }
+            stroke={colour}
+            strokeWidth={1.2}
+            strokeDasharray={dashed ? '7 5' : undefined}
+          />
+          <path
+            d={[span.from, span.to].map((at) => `M${at - 5} ${y + 5}L${at + 5} ${y - 5}`).join('')}
+            stroke={colour}
+            strokeWidth={1.6}
+          />
+          {span.text !== null && (
+            <text
+              x={(span.from + span.to) / 2}
+              y={y + 5}
+              textAnchor="middle"
+              fontFamily={family.label}
+              fontSize={14}
+              fill={colour}
+            >
+              {span.text}
+            </text>
+          )}
+        </g>
+      ))}
+    </g>
+  );
+}

@@ -1,0 +1,188 @@
+import { useQuery } from '@tanstack/react-query';
+import { useRouter } from 'expo-router';
+import { useState } from 'react';
+import { newId } from '@/components/data/call.ts';
+import { gradesQuery } from '@/components/data/grades.ts';
+import { machinesQuery } from '@/components/data/machines.ts';
+import { nozzlesQuery } from '@/components/data/nozzles.ts';
+import { useStrategyAdd } from '@/components/data/strategies.ts';
+import { Page } from '@/components/shell/page.tsx';
+import { common } from '@/components/text/common.ts';
+import { goodForText, nozzleWords, strategiesText, thicknessRangeText } from '@/components/text/pierce.ts';
+import { Button } from '@/components/ui/button.tsx';
+import { Choice } from '@/components/ui/choice.tsx';
+import { Empty } from '@/components/ui/empty.tsx';
+import { ErrorNotice } from '@/components/ui/error-notice.tsx';
+import { EstimateNote } from '@/components/ui/estimate-note.tsx';
+import { Form } from '@/components/ui/form.tsx';
+import { ThicknessField } from '@/components/ui/form-fields.tsx';
+import { NumberField } from '@/components/ui/number-field.tsx';
+import { Panel } from '@/components/ui/panel.tsx';
+import { Progress } from '@/components/ui/progress.tsx';
+import { Cell, Row } from '@/components/ui/stack.tsx';
+import { Body } from '@/components/ui/text.tsx';
+import { TextField } from '@/components/ui/text-field.tsx';
+import { useUnitSystem } from '@/components/ui/unit-system.ts';
+import { nameSchema } from '@/shared/basics.ts';
+import type { Machine, NozzleRow } from '@/shared/machines.ts';
+import { strategyContentSchema } from '@/shared/strategies.ts';
+import { firstContent } from './first-content.ts';
+
+const choicesSchema = strategyContentSchema.pick({
+  machineRevisionId: true,
+  gradeGroup: true,
+  nozzleId: true,
+  thickness: true,
+  hottestPlate: true,
+});
+
+/** Begins a strategy: for which machine, grade group, thickness and nozzle. The draft starts with stages worked out for them. */
+export function StrategyNewScreen() {
+  const machines = useQuery(machinesQuery());
+  const nozzles = useQuery(nozzlesQuery());
+  const grades = useQuery(gradesQuery());
+  const failed = [machines, nozzles, grades].find((query) => query.isError);
+  const ready = machines.data && nozzles.data && grades.data;
+  return (
+    <Page title={strategiesText.newTitle} measure="reading">
+      {failed ? (
+        <ErrorNotice error={failed.error} onRetry={() => void failed.refetch()} />
+      ) : !ready ? (
+        <Progress label={common.loading} />
+      ) : machines.data.length === 0 || nozzles.data.length === 0 || grades.data.length === 0 ? (
+        <Empty title={strategiesText.lacking}>{strategiesText.lackingHint}</Empty>
+      ) : (
+        <NewForm
+          machines={machines.data}
+          nozzles={nozzles.data}
+          groups={[...new Set(grades.data.map((grade) => grade.group))]}
+        />
+      )}
+      <EstimateNote />
+    </Page>
+  );
+}
+
+type NewFormProps = { machines: readonly Machine[]; nozzles: readonly NozzleRow[]; groups: readonly string[] };
+
+function NewForm({ machines, nozzles, groups }: NewFormProps) {
+  const router = useRouter();
+  const system = useUnitSystem();
+  const add = useStrategyAdd();
+  const [ids] = useState(() => ({ id: newId(), revisionId: newId() }));
+  const [machineRevisionId, setMachine] = useState<string | null>(
+    machines.length === 1 ? (machines[0]?.revisions[0]?.id ?? null) : null,
+  );
+  const [gradeGroup, setGroup] = useState<string | null>(groups.length === 1 ? (groups[0] ?? null) : null);
+  const [nozzleId, setNozzle] = useState<string | null>(nozzles.length === 1 ? (nozzles[0]?.id ?? null) : null);
+  const [min, setMin] = useState<number | null>(null);
+  const [max, setMax] = useState<number | null>(null);
+  const [hottestPlate, setHottest] = useState<number | null>(273.15 + 200);
+  const [typedName, setName] = useState<string | null>(null);
+  const [sent, setSent] = useState(false);
+
+  const machine = machines.find(({ revisions }) => revisions.some(({ id }) => id === machineRevisionId));
+  const profile = machine?.revisions.find(({ id }) => id === machineRevisionId)?.profile;
+  const nozzle = nozzles.find(({ id }) => id === nozzleId);
+  const known = machine && gradeGroup !== null && min !== null && max !== null;
+  const range = known && Number.isFinite(min) && Number.isFinite(max) ? thicknessRangeText({ min, max }, system) : null;
+  const suggested =
+    machine && gradeGroup !== null && range ? strategiesText.suggested(gradeGroup, range, machine.name) : '';
+  const name = typedName ?? suggested;
+
+  const read = choicesSchema.safeParse({
+    machineRevisionId,
+    gradeGroup,
+    nozzleId,
+    thickness: { min: min ?? Number.NaN, max: max ?? Number.NaN },
+    hottestPlate: hottestPlate ?? Number.NaN,
+  });
+  const nameRead = nameSchema.safeParse(name);
+  const errorOf = (path: string): string | undefined => {
+    if (!sent) return undefined;
+    if (path === 'name') return nameRead.success ? undefined : nameRead.error.issues[0]?.message;
+    const issue = read.success ? undefined : read.error.issues.find((one) => one.path.join('.') === path);
+    if (!issue) return undefined;
+    return path in strategiesText.missing
+      ? strategiesText.missing[path as keyof typeof strategiesText.missing]
+      : issue.message; // `in` has just said so
+  };
+  const begin = () => {
+    setSent(true);
+    if (!read.success || !nameRead.success || !profile || !nozzle) return;
+    add.mutate(
+      { ...ids, name: nameRead.data, content: firstContent(read.data, profile, nozzle) },
+      { onSuccess: () => router.replace(`/revisions/${ids.revisionId}`) },
+    );
+  };
+
+  return (
+    <Form onSubmit={begin} label={strategiesText.newTitle}>
+      <Panel>
+        <Choice
+          kind="list"
+          label={goodForText.machine}
+          options={machines.flatMap(({ name: of, revisions }) =>
+            revisions.map(({ id, number }) => ({ value: id, label: goodForText.machineRevision(of, number) })),
+          )}
+          value={machineRevisionId}
+          onChange={setMachine}
+          error={errorOf('machineRevisionId')}
+        />
+        <Choice
+          kind={groups.length > 4 ? 'list' : 'segments'}
+          label={goodForText.gradeGroup}
+          options={groups.map((group) => ({ value: group, label: group }))}
+          value={gradeGroup}
+          onChange={setGroup}
+          error={errorOf('gradeGroup')}
+        />
+        <Row align="flex-start">
+          <Cell least={160}>
+            <ThicknessField
+              label={goodForText.label.min}
+              value={min}
+              onChange={setMin}
+              hint={strategiesText.minHint}
+              error={errorOf('thickness.min')}
+            />
+          </Cell>
+          <Cell least={160}>
+            <ThicknessField
+              label={goodForText.label.max}
+              value={max}
+              onChange={setMax}
+              hint={strategiesText.maxHint}
+              error={errorOf('thickness.max')}
+            />
+          </Cell>
+        </Row>
+        <NumberField
+          label={goodForText.label.hottestPlate}
+          dimension="temperature"
+          value={hottestPlate}
+          onChange={setHottest}
+          error={errorOf('hottestPlate')}
+        />
+        <Choice
+          kind="list"
+          label={goodForText.nozzle}
+          options={nozzles.map((one) => ({ value: one.id, label: nozzleWords(one, system) }))}
+          value={nozzleId}
+          onChange={setNozzle}
+          error={errorOf('nozzleId')}
+        />
+      </Panel>
+      <TextField
+        label={strategiesText.name}
+        hint={strategiesText.nameHint}
+        value={name}
+        onChange={setName}
+        error={errorOf('name')}
+      />
+      <Body tone="softInk">{strategiesText.defaults}</Body>
+      {add.isError && <ErrorNotice error={add.error} />}
+      <Button kind="main" submit label={strategiesText.begin} busy={add.isPending} />
+    </Form>
+  );
+}

@@ -1,0 +1,81 @@
+import type { PlannedCorner, Treatment } from '@/shared/corner-plans.ts';
+import { numberText, quantityText, type UnitSystem } from '@/strategy/units/index.ts';
+
+export const treatmentText: Readonly<Record<Treatment, string>> = { loop: 'Loop', dwell: 'Dwell', leave: 'Leave' };
+
+export const cornerText = {
+  scale: 'Temperature scale: temper and glow of steel',
+  page: 'Corner plan',
+  drawing: (part: string, plan: { corners: number; loops: number; dwells: number; trouble: number }) =>
+    `Drawing of ${part} on its plate with ${count(plan.corners, 'corner')}: ${count(plan.loops, 'loop')}, ${count(plan.dwells, 'dwell')}, ${
+      plan.trouble === 0 ? 'no trouble' : `${plan.trouble} in trouble`
+    }. The list beside it says the same.`,
+  corners: 'Corners',
+  none: 'This part has no corner below the angle that the rules treat.',
+  row: (number: number) => `Corner ${number}`,
+  angle: (radians: number) => `${quantityText(radians, 'angle', 'metric').text} inside the part`,
+  chooseOne: 'Choose a corner on the drawing or in the list to see what was decided there and why.',
+  without: 'without treatment',
+  with: 'as planned',
+  straight: 'straight edge beside it',
+  added: 'added time',
+  limit: 'limit',
+  loopSize: 'loop',
+  loopOf: (radius: string, extension: string, length: string) =>
+    `radius ${radius}, runs on ${extension}, ${length} long`,
+  slugArea: (squareMetres: number) => `${numberText(squareMetres * 1e6, 0)} mm²`,
+  slug: 'slug that falls',
+  dwellFor: 'wait',
+  chosenBy: { rule: 'Chosen by the rules.', person: 'Chosen by hand.' },
+  options: 'What else would do',
+  fits: 'fits',
+  doesNotFit: 'does not fit',
+  choose: (treatment: Treatment) => `Choose ${treatmentText[treatment].toLowerCase()}`,
+  byRule: 'Leave it to the rules',
+  close: 'All corners',
+  settings: 'Plan again',
+  settingsSave: 'Plan with these',
+  operator: 'Read only: the programmer changes the plan.',
+  notApproved: (state: string) =>
+    `This plan uses a strategy revision that is not approved (${state}). It is not shown on a card.`,
+  stale: 'Somebody planned these corners again meanwhile. What you typed is still here.',
+  takeTheirs: 'Show their plan',
+  replanMine: 'Plan again with mine',
+  plateTemperature: 'Plate temperature',
+  thickness: 'Thickness',
+  skeleton: { left: 'Left', right: 'Right', below: 'Below', above: 'Above' },
+  skeletonTitle: 'Free skeleton around the part',
+  skeletonHint: 'Plate that may be cut into on each side; loops need it.',
+  strategy: 'Strategy revision',
+  chooseStrategy: 'Choose the strategy revision.',
+  revisionOption: (name: string, number: number, state: string) =>
+    `${name}, revision ${number} (${state.toLowerCase()})`,
+  overrides: (number: number) => `${count(number, 'corner')} chosen by hand`,
+  clearOverrides: 'Leave all corners to the rules',
+  badge: 'Signs',
+  trouble: 'Trouble',
+  block: {
+    part: 'part',
+    strategy: 'strategy',
+    corners: 'corners',
+    loops: 'loops',
+    dwells: 'dwells',
+    trouble: 'in trouble',
+    time: 'added time',
+    length: 'added path',
+    oxygen: 'added oxygen',
+    untreated: 'hottest untreated',
+    treated: 'hottest as planned',
+  },
+} as const;
+
+export function count(number: number, one: string): string {
+  return `${number} ${number === 1 ? one : `${one}s`}`;
+}
+
+/** A corner in one sentence, for its row's name. */
+export function cornerWords(corner: PlannedCorner, number: number, system: UnitSystem): string {
+  const hot = (kelvin: number) => quantityText(kelvin, 'temperature', system).text;
+  const plan = `${treatmentText[corner.treatment].toLowerCase()}, back at ${hot(corner.treated)} instead of ${hot(corner.untreated)}`;
+  return `Corner ${number}, ${cornerText.angle(corner.angle)}: ${plan}${corner.trouble === null ? '' : `. Trouble: ${corner.trouble}`}`;
+}
