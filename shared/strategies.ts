@@ -129,7 +129,7 @@ export const checkSchema = z.object({
 });
 export type Check = z.infer<typeof checkSchema>;
 
-/** The model's whole answer for a revision: reserve at the thickest, crater and eruption at the thinnest and hottest. */
+/** The model's whole answer for a revision: reserve at the thickest; crater and eruption the worst of thinnest and thickest, cold and hot. */
 export const predictionSchema = z.object({
   modelVersion: z.string(),
   routineTime: z.number(), // s

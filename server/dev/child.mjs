@@ -14,7 +14,9 @@ export function runToEnd(file, env) {
     child.stdout.on('data', (chunk) => (output += chunk));
     child.stderr.on('data', (chunk) => (output += chunk));
     child.on('error', reject);
-    child.on('close', (code) => (code === 0 ? resolve(output) : reject(new SetupProblem(`${file} failed:\n${output.slice(-4000)}`))));
+    child.on('close', (code) =>
+      code === 0 ? resolve(output) : reject(new SetupProblem(`${file} failed:\n${output.slice(-4000)}`)),
+    );
   });
 }
 

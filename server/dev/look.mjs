@@ -33,14 +33,22 @@ await runCommand(async () => {
         const noise = [];
         page.on('pageerror', (error) => noise.push(`page error: ${error.message}`));
         page.on('console', (message) => message.type() === 'error' && noise.push(`console: ${message.text()}`));
-        const routes = who ? await signedInRoutes(page, who) : [['sign-in', '/sign-in'], ['not-found', '/no-such-page']];
+        const routes = who
+          ? await signedInRoutes(page, who)
+          : [
+              ['sign-in', '/sign-in'],
+              ['not-found', '/no-such-page'],
+            ];
         for (const theme of themes) {
           await page.emulateMedia({ colorScheme: theme === 'night' ? 'dark' : 'light' });
           for (const [name, url] of routes) {
             if (only.length && !only.some((word) => `${who ?? 'stranger'}-${name}`.includes(word))) continue;
             await page.goto(url, { waitUntil: 'networkidle' });
             await page.waitForTimeout(150);
-            await page.screenshot({ path: path.join(out, `${who ?? 'stranger'}-${name}-${size}-${theme}.png`), fullPage: true });
+            await page.screenshot({
+              path: path.join(out, `${who ?? 'stranger'}-${name}-${size}-${theme}.png`),
+              fullPage: true,
+            });
             count += 1;
             for (const line of noise.splice(0)) say(`${who ?? 'stranger'} ${url} ${size} ${theme}: ${line}`);
           }
@@ -76,14 +84,22 @@ await runCommand(async () => {
     ];
     for (const machine of machines.slice(0, 2)) {
       for (const plate of plates.slice(0, 2)) {
-        routes.push([`card-${machine.name}-${plate.tag}`.replace(/[^\w-]+/g, '-'), `/card?machineId=${machine.id}&tag=${encodeURIComponent(plate.tag)}`]);
+        routes.push([
+          `card-${machine.name}-${plate.tag}`.replace(/[^\w-]+/g, '-'),
+          `/card?machineId=${machine.id}&tag=${encodeURIComponent(plate.tag)}`,
+        ]);
       }
     }
     routes.push(['plates', '/plates'], ['machines', '/machines']);
     if (plates[0]) routes.push(['plate', `/plates/${plates[0].id}`]);
     if (machines[0]) routes.push(['machine', `/machines/${machines[0].id}`]);
     if (who === 'operator') return routes;
-    routes.push(['strategies', '/strategies'], ['parts', '/parts'], ['part-new', '/parts/new'], ['plate-new', '/plates/new']);
+    routes.push(
+      ['strategies', '/strategies'],
+      ['parts', '/parts'],
+      ['part-new', '/parts/new'],
+      ['plate-new', '/plates/new'],
+    );
     for (const state of ['draft', 'inReview', 'approved']) {
       const found = strategies.find((one) => one.latest.state === state);
       if (found) routes.push([`revision-${state}`, `/revisions/${found.latest.id}`]);
@@ -95,7 +111,12 @@ await runCommand(async () => {
       if (part.cornerPlans[0]) routes.push(['corner-plan', `/corner-plans/${part.cornerPlans[0].id}`]);
     }
     if (who === 'programmer') return routes;
-    routes.push(['strategy-new', '/strategies/new'], ['machine-new', '/machines/new'], ['reviews', '/reviews'], ['reports', '/reports']);
+    routes.push(
+      ['strategy-new', '/strategies/new'],
+      ['machine-new', '/machines/new'],
+      ['reviews', '/reviews'],
+      ['reports', '/reports'],
+    );
     if (reports[0]) routes.push(['report', `/reports/${reports[0].id}`]);
     if (who === 'lead') routes.push(['people', '/people'], ['record', '/record']);
     return routes;

@@ -10,9 +10,13 @@ await runCommand(async () => {
   const { runTool } = await import('./tool.mjs');
   const report = path.join(houseFolder(), 'outside.jsonl');
   fs.rmSync(report, { force: true });
-  const code = await runTool('vitest', ['run', '--project', 'node', '--reporter=dot', 'tests/outside'], { OUTSIDE_REPORT: report });
+  const code = await runTool('vitest', ['run', '--project', 'node', '--reporter=dot', 'tests/outside'], {
+    OUTSIDE_REPORT: report,
+  });
   const lines = fs.existsSync(report) ? fs.readFileSync(report, 'utf8').trim().split('\n') : [];
-  const checks = lines.map((line) => JSON.parse(line)).sort((a, b) => String(a.id).localeCompare(String(b.id), 'en', { numeric: true }));
+  const checks = lines
+    .map((line) => JSON.parse(line))
+    .sort((a, b) => String(a.id).localeCompare(String(b.id), 'en', { numeric: true }));
   for (const one of checks) {
     const figures = `${JSON.stringify(one.got)} against ${JSON.stringify(one.expected)} ${one.unit}`;
     say(`${one.ok ? 'ok    ' : 'FAILED'} ${one.id}  ${one.what}: ${figures}  [${one.standing}] ${one.source}`);

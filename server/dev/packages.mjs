@@ -14,8 +14,14 @@ export function ensurePackages() {
   say('Installing packages from the lock file: one to two minutes the first time …');
   const npm = process.env.npm_execpath;
   const [command, first] = npm?.endsWith('.js') ? [process.execPath, [npm]] : ['npm', []];
-  const done = spawnSync(command, [...first, 'ci', '--no-audit', '--no-fund', '--loglevel=error'], { cwd: root, stdio: 'inherit' });
-  if (done.status !== 0) throw new SetupProblem('The packages could not be installed: see npm’s lines above. Is the npm registry reachable?');
+  const done = spawnSync(command, [...first, 'ci', '--no-audit', '--no-fund', '--loglevel=error'], {
+    cwd: root,
+    stdio: 'inherit',
+  });
+  if (done.status !== 0)
+    throw new SetupProblem(
+      'The packages could not be installed: see npm’s lines above. Is the npm registry reachable?',
+    );
   fs.writeFileSync(stamp, wanted);
   say(`Packages installed in ${seconds(since)}.`);
 }

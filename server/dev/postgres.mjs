@@ -16,7 +16,9 @@ const oldest = 15;
 function findPrograms() {
   const base = '/usr/lib/postgresql';
   const versions = fs.existsSync(base) ? fs.readdirSync(base).map(Number) : [];
-  const newest = versions.filter((version) => version >= oldest && fs.existsSync(`${base}/${version}/bin/initdb`)).sort((a, b) => b - a)[0];
+  const newest = versions
+    .filter((version) => version >= oldest && fs.existsSync(`${base}/${version}/bin/initdb`))
+    .sort((a, b) => b - a)[0];
   return newest === undefined ? null : `${base}/${newest}/bin`;
 }
 
@@ -32,7 +34,10 @@ export function ensurePostgres() {
       fs.writeFileSync(config, 'create_main_cluster = false\n');
     }
   }
-  installDebian(['postgresql'], `PostgreSQL ${oldest} or newer is needed and not here.`, ['-o', 'Dpkg::Options::=--force-confold']);
+  installDebian(['postgresql'], `PostgreSQL ${oldest} or newer is needed and not here.`, [
+    '-o',
+    'Dpkg::Options::=--force-confold',
+  ]);
   const now = findPrograms();
   if (!now) throw new SetupProblem(`PostgreSQL ${oldest} or newer is needed; Debian’s package brought an older one.`);
   return now;
@@ -121,7 +126,12 @@ export async function startCluster({ kind }) {
   } catch (error) {
     throw new SetupProblem(`The database folder ${folder} can't be made: ${error.message}`);
   }
-  if (!fs.existsSync(path.join(data, 'PG_VERSION'))) fs.rmSync(path.join(folder, 'secrets.json'), { force: true });
+  const made = fs.existsSync(path.join(data, 'PG_VERSION'));
+  const known = fs.existsSync(path.join(folder, 'secrets.json'));
+  if (made && !known) {
+    throw new SetupProblem(`The passwords of the database in ${folder} are gone. Put secrets.json back, or delete the folder to start anew.`);
+  }
+  if (!made) fs.rmSync(path.join(folder, 'secrets.json'), { force: true });
   const words = clusterSecrets(folder);
   if (isRoot) spawnSync('chown', ['-R', 'postgres:postgres', folder]);
   fs.chmodSync(folder, 0o700);
@@ -140,7 +150,8 @@ export async function startCluster({ kind }) {
       ...['--encoding=UTF8', '--locale=C.UTF-8', '--no-instructions', ...(kind === 'test' ? ['--no-sync'] : [])],
     ]);
     fs.rmSync(passwordFile, { force: true });
-    if (made.status !== 0) throw new SetupProblem(`The database cluster could not be made:\n${made.stdout}${made.stderr}`);
+    if (made.status !== 0)
+      throw new SetupProblem(`The database cluster could not be made:\n${made.stdout}${made.stderr}`);
     fs.renameSync(staged, data);
   }
   if (!server) {
@@ -155,7 +166,8 @@ export async function startCluster({ kind }) {
     for (let tries = 0; started.status !== 0 && tries < 50; tries += 1) {
       // Another start may have won the race for the lock.
       server = running(data);
-      if (server && run(`${programs}/pg_isready`, ['-q', '-h', '127.0.0.1', '-p', String(server.port)]).status === 0) break;
+      if (server && run(`${programs}/pg_isready`, ['-q', '-h', '127.0.0.1', '-p', String(server.port)]).status === 0)
+        break;
       await new Promise((resolve) => setTimeout(resolve, 100));
     }
     if (!server) {

@@ -26,7 +26,8 @@ function close() {
 
 await runCommand(async () => {
   const [major, minor] = process.versions.node.split('.').map(Number);
-  if (major < 20 || (major === 20 && minor < 19)) throw new SetupProblem(`Node 20.19 or newer is needed; this is ${process.versions.node}.`);
+  if (major < 20 || (major === 20 && minor < 19))
+    throw new SetupProblem(`Node 20.19 or newer is needed; this is ${process.versions.node}.`);
   for (const signal of ['SIGINT', 'SIGTERM']) {
     process.once(signal, () => {
       say('\nStopping …');
@@ -68,7 +69,8 @@ function onlyOnce() {
     } catch {
       // It is gone: killed, or the machine restarted.
     }
-    if (command.includes('server/dev/start.mjs')) throw new SetupProblem(`Cinderpath runs from this folder already (process ${other}). Stop it first.`);
+    if (command.includes('server/dev/start.mjs'))
+      throw new SetupProblem(`Cinderpath runs from this folder already (process ${other}). Stop it first.`);
   }
   fs.writeFileSync(file, String(process.pid));
   opened.push(['The lock', () => fs.rmSync(file, { force: true })]);
@@ -77,7 +79,8 @@ function onlyOnce() {
 /** Databases and files of somebody else's: migrated, never seeded. */
 async function realServices() {
   for (const name of ['DATABASE_OWNER_URL', 'S3_BUCKET', 'SESSION_SECRET']) {
-    if (!process.env[name]) throw new SetupProblem(`With DATABASE_URL set, ${name} is needed too: see README.md, “Real services”.`);
+    if (!process.env[name])
+      throw new SetupProblem(`With DATABASE_URL set, ${name} is needed too: see README.md, “Real services”.`);
   }
   const { runToEnd } = await import('./child.mjs');
   await runToEnd('db/migrate.ts', {});

@@ -28,17 +28,25 @@ await runCommand(async () => {
     const { runTool } = await import('./tool.mjs');
     const report = path.join(houseFolder(), 'tests.json');
     fs.rmSync(report, { force: true });
-    const code = await runTool('vitest', ['run', '--reporter=default', '--reporter=json', `--outputFile.json=${report}`], {
-      TEST_SUPER_URL: cluster.superUrl('postgres'),
-      TEST_OWNER_URL: cluster.ownerUrl('postgres'),
-      TEST_APP_URL: cluster.appUrl('postgres'),
-    });
-    const tests = fs.existsSync(report) ? JSON.parse(fs.readFileSync(report, 'utf8')) : { numPassedTests: 0, numFailedTests: 1 };
+    const code = await runTool(
+      'vitest',
+      ['run', '--reporter=default', '--reporter=json', `--outputFile.json=${report}`],
+      {
+        TEST_SUPER_URL: cluster.superUrl('postgres'),
+        TEST_OWNER_URL: cluster.ownerUrl('postgres'),
+        TEST_APP_URL: cluster.appUrl('postgres'),
+      },
+    );
+    const tests = fs.existsSync(report)
+      ? JSON.parse(fs.readFileSync(report, 'utf8'))
+      : { numPassedTests: 0, numFailedTests: 1 };
     const skipped = (tests.numPendingTests ?? 0) + (tests.numTodoTests ?? 0);
     // A file that could not even be loaded, or an unhandled rejection, fails the run without failing a test.
     const broken = code !== 0 && tests.numFailedTests === 0 ? 1 : 0;
     const failed = tests.numFailedTests + broken + checks.failed.length;
-    say(`\nEverything took ${seconds(since)}.${checks.failed.length ? ` Failed checks: ${checks.failed.join(', ')}.` : ''}`);
+    say(
+      `\nEverything took ${seconds(since)}.${checks.failed.length ? ` Failed checks: ${checks.failed.join(', ')}.` : ''}`,
+    );
     say(`${tests.numPassedTests + checks.passed} passed, ${failed} failed${skipped ? `, ${skipped} skipped` : ''}`);
     if (failed > 0) process.exitCode = 1;
   } finally {

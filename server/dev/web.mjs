@@ -4,7 +4,19 @@ import path from 'node:path';
 import { houseFolder, root, sourcesHash } from './folders.mjs';
 import { say, seconds, SetupProblem } from './say.mjs';
 
-const sources = ['app', 'components', 'strategy', 'shared', 'public', 'assets', 'app.json', 'metro.config.cjs', 'package-lock.json', 'tsconfig.json', 'babel.config.cjs'];
+const sources = [
+  'app',
+  'components',
+  'strategy',
+  'shared',
+  'public',
+  'assets',
+  'app.json',
+  'metro.config.cjs',
+  'package-lock.json',
+  'tsconfig.json',
+  'babel.config.cjs',
+];
 export const webFolder = path.join(root, 'dist');
 const stamp = path.join(webFolder, '.built-from');
 
@@ -21,7 +33,14 @@ export async function buildWeb() {
     process.execPath,
     [path.join(root, 'node_modules/expo/bin/cli'), 'export', '-p', 'web', '--output-dir', next],
     // The bundler's cache stays inside the project: another person's cache in the shared folder could not be written.
-    { ...process.env, CI: '1', EXPO_OFFLINE: '1', EXPO_NO_TELEMETRY: '1', NODE_ENV: 'production', TMPDIR: houseFolder('bundler') },
+    {
+      ...process.env,
+      CI: '1',
+      EXPO_OFFLINE: '1',
+      EXPO_NO_TELEMETRY: '1',
+      NODE_ENV: 'production',
+      TMPDIR: houseFolder('bundler'),
+    },
   );
   clearInterval(tell);
   if (code !== 0) throw new SetupProblem(`The web app could not be built:\n${output.slice(-4000)}`);
