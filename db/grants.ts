@@ -15,7 +15,7 @@ export const tableGrants: Readonly<Record<string, readonly string[]>> = {
     'SELECT',
     'INSERT',
     `UPDATE (state, version, content, machine_id, machine_revision_id, grade_group, gas, nozzle_id, thickness_min, thickness_max,
-      hottest_plate, prediction, model_version, changed_at, changed_by)`,
+      hottest_plate, prediction, model_version, core, changed_at, changed_by)`,
   ],
   revision_authors: ['SELECT', 'INSERT'],
   reviews: ['SELECT', 'INSERT'],

@@ -13,7 +13,7 @@ import {
 import { endpoint } from './endpoint.ts';
 import { limits } from './limits.ts';
 
-export const drawingUnits = ['mm', 'cm', 'm', 'inch', 'foot'] as const;
+export const drawingUnits = ['mm', 'cm', 'dm', 'm', 'km', 'µm', 'inch', 'foot', 'yard', 'mil'] as const;
 
 export const segmentSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('line'), start: pointSchema, end: pointSchema }),
@@ -65,6 +65,8 @@ export const drawingReadingSchema = z.object({
   repaired: z.array(z.object({ what: z.string(), count: z.number().int() })),
   /** Largest distance between a curve and the arcs that stand for it, m. */
   deviation: z.number(),
+  /** Places where contours cross each other or themselves: such a drawing is no part yet. */
+  crossings: z.array(pointSchema).default([]),
   questions: z.array(drawingQuestionSchema),
 });
 export type DrawingReadingWire = z.infer<typeof drawingReadingSchema>;

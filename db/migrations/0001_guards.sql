@@ -49,10 +49,10 @@ BEGIN
   END IF;
   IF (old.state <> 'draft' OR new.state <> old.state)
     AND (new.content, new.machine_id, new.machine_revision_id, new.grade_group, new.gas, new.nozzle_id, new.thickness_min,
-         new.thickness_max, new.hottest_plate, new.prediction, new.model_version)
+         new.thickness_max, new.hottest_plate, new.prediction, new.model_version, new.core)
       IS DISTINCT FROM
         (old.content, old.machine_id, old.machine_revision_id, old.grade_group, old.gas, old.nozzle_id, old.thickness_min,
-         old.thickness_max, old.hottest_plate, old.prediction, old.model_version) THEN
+         old.thickness_max, old.hottest_plate, old.prediction, old.model_version, old.core) THEN
     RAISE EXCEPTION 'content never changes once handed in' USING ERRCODE = 'CP001';
   END IF;
   IF new.state <> old.state AND (old.state, new.state) NOT IN (

@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm';
-import { check, foreignKey, index, integer, jsonb, pgTable, primaryKey, text, uuid } from 'drizzle-orm/pg-core';
+import { check, doublePrecision, foreignKey, index, integer, jsonb, pgTable, primaryKey, text, uuid } from 'drizzle-orm/pg-core';
 import type { DrawingAnswers, DrawingReadingWire } from '../../shared/parts.ts';
 import { instant, plantId } from './columns.ts';
 import { files } from './files.ts';
@@ -16,6 +16,11 @@ export const parts = pgTable(
     fileId: uuid().notNull(),
     answers: jsonb().$type<DrawingAnswers>().notNull(),
     reading: jsonb().$type<DrawingReadingWire>().notNull(),
+    /** What a list tells of the reading, so that it needn't read the whole. */
+    width: doublePrecision().notNull(), // m
+    height: doublePrecision().notNull(), // m
+    outlines: integer().notNull(),
+    holes: integer().notNull(),
     version: integer().notNull().default(1),
     addedAt: instant().notNull().defaultNow(),
     addedBy: uuid().notNull(),

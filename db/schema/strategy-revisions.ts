@@ -20,6 +20,13 @@ import { memberships } from './memberships.ts';
 import { nozzles } from './nozzles.ts';
 import { strategies } from './strategies.ts';
 
+export type Core = {
+  readonly reserveCold: number | null;
+  readonly reserveHot: number | null;
+  /** Depth at each stage's end on a cold plate, as a share of the thickness. */
+  readonly bands: readonly number[];
+};
+
 /**
  * The content whole as JSON, since it is read and judged whole; beside it, as columns, what rows are found and kept apart by.
  * A check holds the two together. After submission neither can change (trigger).
@@ -45,6 +52,8 @@ export const strategyRevisions = pgTable(
     hottestPlate: doublePrecision().notNull(), // K
     prediction: jsonb().$type<Prediction>().notNull(),
     modelVersion: text().notNull(),
+    /** What a list draws of the prediction, so that it needn't read the whole. */
+    core: jsonb().$type<Core>().notNull(),
     changedAt: instant().notNull().defaultNow(),
     changedBy: uuid().notNull(),
   },

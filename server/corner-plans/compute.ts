@@ -1,0 +1,107 @@
+import type { z } from 'zod';
+import type { CornerPlan, cornerPlanEndpoints, PlannedCorner } from '../../shared/corner-plans.ts';
+import type { DrawingReadingWire } from '../../shared/parts.ts';
+import type { StrategyContent } from '../../shared/strategies.ts';
+import type { CornerPlan as Computed, PlannedCorner as ComputedCorner } from '../../strategy/corners/index.ts';
+import type { MachineProfile } from '../../strategy/machine.ts';
+import { oxygenMassFlow, PIERCE_DEFAULTS } from '../../strategy/pierce/index.ts';
+import type { DrawingReader } from '../drawings/reader.ts';
+
+/** What the programmer chose. */
+export type Choices = Omit<z.output<NonNullable<(typeof cornerPlanEndpoints.redo)['body']>>, 'revisionId'>;
+
+export type PlanSource = {
+  readonly reading: DrawingReadingWire;
+  readonly content: StrategyContent;
+  readonly profile: MachineProfile;
+  readonly nozzleDiameter: number; // m
+};
+
+/** The part's corners planned with a strategy's rules and cut, on a plate that leaves the skeleton asked for. */
+export async function computePlan(
+  drawings: DrawingReader,
+  { reading, content, profile, nozzleDiameter }: PlanSource,
+  choices: Choices,
+): Promise<Pick<CornerPlan, 'limit' | 'corners' | 'totals'>> {
+  const { bounds, contours } = reading;
+  const { skeleton } = choices;
+  const plan = await drawings.plan({
+    contours: contours.map(({ id, role, segments }) => ({ id, role, contour: { segments } })),
+    plate: {
+      min: { x: bounds.min.x - skeleton.left, y: bounds.min.y - skeleton.below },
+      max: { x: bounds.max.x + skeleton.right, y: bounds.max.y + skeleton.above },
+    },
+    rules: content.cornerRules,
+    cut: content.cut,
+    profile: { axes: profile.axes, smallestArc: profile.smallestArc },
+    thickness: choices.thickness,
+    plateTemperature: choices.plateTemperature,
+    overrides: choices.overrides,
+  });
+  const chosen = new Set(Object.keys(choices.overrides));
+  return {
+    limit: content.cornerRules.returnTemperatureLimit,
+    corners: plan.corners.map((corner) => presentCorner(corner, chosen)),
+    totals: presentTotals(
+      plan,
+      oxygenMassFlow(nozzleDiameter, content.cut.oxygenPressure, PIERCE_DEFAULTS.dischargeCoefficient),
+    ),
+  };
+}
+
+function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): PlannedCorner {
+  const { loop } = corner;
+  return {
+    id: corner.id,
+    contourId: corner.contourId,
+    at: corner.point,
+    angle: corner.angle,
+    convex: corner.convex,
+    treatment: corner.treatment,
+    why: corner.why,
+    chosenBy: chosen.has(corner.id) ? 'person' : 'rule',
+    untreated: corner.returnWithout,
+    treated: corner.returnWith,
+    straightEdge: corner.straightEdge,
+    addedTime: corner.addedTime,
+    dwell: corner.dwell?.duration ?? null,
+    loop: loop
+      ? {
+          radius: loop.radius,
+          extension: loop.extension,
+          length: loop.length,
+          slugArea: loop.slug?.area ?? 0,
+          segments: [...loop.segments],
+        }
+      : null,
+    options: corner.options.map(({ treatment, fits, returnWith, addedTime, why }) => ({
+      treatment,
+      fits,
+      returnTemperature: returnWith,
+      addedTime,
+      why,
+    })),
+    trouble: corner.problem ?? null,
+  };
+}
+
+/** `oxygenFlow` in kg/s: the jet burns on through loops and blows on through dwells. */
+function presentTotals({ totals }: Computed, oxygenFlow: number): CornerPlan['totals'] {
+  return {
+    corners: totals.corners,
+    loops: totals.loops,
+    dwells: totals.dwells,
+    trouble: totals.problems,
+    addedTime: totals.addedTime,
+    addedLength: totals.addedLength,
+    addedOxygen: totals.addedTime * oxygenFlow,
+    hottestUntreated: totals.hottestUntreated,
+    hottestTreated: totals.hottestReturn,
+  };
+}
+
+/** Every corner a person could have chosen for: overrides for others are refused rather than forgotten. */
+export const unknownOverrides = (corners: readonly PlannedCorner[], overrides: Choices['overrides']): string[] => {
+  const known = new Set(corners.map(({ id }) => id));
+  return Object.keys(overrides).filter((id) => !known.has(id));
+};

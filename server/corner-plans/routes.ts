@@ -1,0 +1,161 @@
+import type { Transaction } from '../../db/database.ts';
+import { inPlant } from '../../db/database.ts';
+import { cornerPlanEndpoints, type CornerPlan } from '../../shared/corner-plans.ts';
+import { drawingReadingSchema } from '../../shared/parts.ts';
+import { AppError, notFound } from '../errors.ts';
+import { findNozzle } from '../nozzles/routes.ts';
+import { namesOf } from '../people/names.ts';
+import { note } from '../record/note.ts';
+import type { Mount } from '../route.ts';
+import type { Services } from '../services.ts';
+import { computePlan, unknownOverrides, type Choices, type PlanSource } from './compute.ts';
+import { addCornerPlan, findCornerPlan, lockCornerPlan, planSources, replaceCornerPlan } from './repository.ts';
+
+export function cornerPlanRoutes({ route, services }: Mount): void {
+  // An operator reads a plan only while its strategy is approved, like the card that lists it.
+  route(cornerPlanEndpoints.get, async ({ tx, actor, params }) =>
+    replyWith(tx, params.planId, actor.role === 'operator'),
+  );
+
+  // Planning takes seconds for a part of many corners: not while a transaction is open. Part and revision content never change.
+  route(
+    cornerPlanEndpoints.add,
+    async ({ actor, body }) => {
+      const source = await inPlant(
+        services.database,
+        actor.plantId,
+        (tx) => sourceOf(tx, body.partId, body.revisionId),
+        'read',
+      );
+      return { value: await planned(services, source, choicesOf(body)) };
+    },
+    async ({ tx, actor, body, prepared: computed }) => {
+      await addCornerPlan(tx, {
+        plantId: actor.plantId,
+        id: body.id,
+        partId: body.partId,
+        changedBy: actor.userId,
+        revisionId: body.revisionId,
+        ...choicesOf(body),
+        ...computed,
+      });
+      await note(
+        tx,
+        actor,
+        'cornerPlan.added',
+        { kind: 'cornerPlan', id: body.id },
+        {
+          partId: body.partId,
+          revisionId: body.revisionId,
+          ...choicesOf(body),
+        },
+      );
+      return { ...(await replyWith(tx, body.id)), status: 201 };
+    },
+  );
+
+  route(
+    cornerPlanEndpoints.redo,
+    async ({ actor, params, body }) => {
+      const { seen, source } = await inPlant(
+        services.database,
+        actor.plantId,
+        async (tx) => {
+          const found = await findCornerPlan(tx, params.planId);
+          if (!found) throw notFound('There is no such corner plan');
+          return { seen: found.plan.version, source: await sourceOf(tx, found.part.id, body.revisionId) };
+        },
+        'read',
+      );
+      return { value: { seen, computed: await planned(services, source, choicesOf(body)) } };
+    },
+    async ({ tx, actor, params, body, unchanged, prepared: { seen, computed } }) => {
+      const row = await lockCornerPlan(tx, params.planId);
+      if (!row) throw notFound('There is no such corner plan');
+      unchanged(row.version);
+      // The version that was planned from: the caller's If-Match and this say the same, or it is stale.
+      if (row.version !== seen) throw new AppError('stale', 'Somebody changed this meanwhile. Read it again.');
+      const choices = { revisionId: body.revisionId, ...choicesOf(body) };
+      await replaceCornerPlan(tx, row, { ...choices, ...computed }, actor.userId);
+      await note(
+        tx,
+        actor,
+        'cornerPlan.redone',
+        { kind: 'cornerPlan', id: row.id },
+        {
+          version: row.version + 1,
+          ...choices,
+        },
+      );
+      return replyWith(tx, row.id);
+    },
+  );
+}
+
+const choicesOf = ({ plateTemperature, thickness, skeleton, overrides }: Choices): Choices => ({
+  plateTemperature,
+  thickness,
+  skeleton,
+  overrides,
+});
+
+async function sourceOf(tx: Transaction, partId: string, revisionId: string): Promise<PlanSource> {
+  const { part, revision } = await planSources(tx, partId, revisionId);
+  if (!part) throw notFound('There is no such part');
+  if (!revision) throw notFound('There is no such revision');
+  const nozzle = await findNozzle(tx, revision.content.nozzleId);
+  if (!nozzle) throw notFound('There is no such nozzle');
+  return {
+    reading: drawingReadingSchema.parse(part.reading),
+    content: revision.content,
+    profile: revision.profile,
+    nozzleDiameter: nozzle.diameter,
+  };
+}
+
+async function planned(services: Services, source: PlanSource, choices: Choices) {
+  const computed = await computePlan(services.drawings, source, choices);
+  const unknown = unknownOverrides(computed.corners, choices.overrides);
+  if (unknown.length > 0) {
+    throw new AppError('invalid-fields', 'The part has no such corner.', {
+      errors: unknown.map((id) => ({ pointer: `/overrides/${id}`, detail: 'The part has no such corner.' })),
+    });
+  }
+  return computed;
+}
+
+async function replyWith(
+  tx: Transaction,
+  id: string,
+  onlyApproved = false,
+): Promise<{ body: CornerPlan; version: number }> {
+  const found = await findCornerPlan(tx, id);
+  if (!found || (onlyApproved && found.revision.state !== 'approved')) throw notFound('There is no such corner plan');
+  const { plan, part, revision, strategyName } = found;
+  const names = await namesOf(tx);
+  return {
+    version: plan.version,
+    body: {
+      id: plan.id,
+      version: plan.version,
+      part: { id: part.id, name: part.name, contours: part.reading.contours },
+      revision: {
+        id: revision.id,
+        number: revision.number,
+        strategyId: revision.strategyId,
+        strategyName,
+        state: revision.state,
+        approved: revision.state === 'approved',
+      },
+      thickness: plan.thickness,
+      plateTemperature: plan.plateTemperature,
+      skeleton: plan.skeleton,
+      overrides: plan.overrides,
+      limit: plan.limit,
+      corners: plan.corners,
+      totals: plan.totals,
+      changedAt: plan.changedAt.toISOString(),
+      changedBy: names(plan.changedBy),
+    },
+  };
+}

@@ -1,0 +1,69 @@
+import { URL } from 'node:url';
+import type { DrawingAnswers, DrawingReadingWire } from '../../shared/parts.ts';
+import type { CornerPlan, CornerPlanRequest } from '../../strategy/corners/index.ts';
+import type { ProblemCode } from '../../shared/errors.ts';
+import { AppError } from '../errors.ts';
+import { createPool, WorkerRefusal } from '../workers/pool.ts';
+
+export type DrawingQuestion =
+  | { readonly kind: 'read'; readonly bytes: Uint8Array; readonly answers: DrawingAnswers }
+  | { readonly kind: 'plan'; readonly request: CornerPlanRequest };
+export type DrawingAnswer =
+  | { readonly kind: 'reading'; readonly reading: DrawingReadingWire }
+  | { readonly kind: 'none'; readonly why: string }
+  | { readonly kind: 'plan'; readonly plan: CornerPlan };
+
+/** Reads drawings and plans corners away from the thread that answers requests, within a time and a memory. */
+export type DrawingReader = {
+  /** 422 with a sentence when the file is no drawing that can be read. */
+  read(bytes: Uint8Array, answers: DrawingAnswers): Promise<DrawingReadingWire>;
+  plan(request: CornerPlanRequest): Promise<CornerPlan>;
+  close(): Promise<void>;
+};
+
+/** Time for one drawing, s. The largest real ones take a tenth of it. */
+const readSeconds = 5;
+/** Time for one plan, s. */
+const planSeconds = 20;
+
+export function createDrawingReader(): DrawingReader {
+  const module = new URL('./drawing.worker.ts', import.meta.url);
+  const common = { module, threads: 1, waiting: 20, memory: 384 };
+  // Two threads and not one queue: a long plan must not keep a drawing waiting.
+  const reads = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: readSeconds * 1000 });
+  const plans = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: planSeconds * 1000 });
+  return {
+    read: async (bytes, answers) => {
+      const answer = await reads.ask({ kind: 'read', bytes, answers }).catch((error: unknown) => {
+        throw asRefusal(
+          error,
+          'bad-drawing',
+          `The drawing could not be read within ${readSeconds} s. Draw the part alone and export it again.`,
+        );
+      });
+      if (answer.kind === 'none') throw new AppError('bad-drawing', answer.why);
+      if (answer.kind !== 'reading') throw new Error('the drawing worker answered another question');
+      return answer.reading;
+    },
+    plan: async (request) => {
+      const answer = await plans.ask({ kind: 'plan', request }).catch((error: unknown) => {
+        throw asRefusal(
+          error,
+          'unavailable',
+          `The corners could not be planned within ${planSeconds} s: the part has too many of them for one plan.`,
+        );
+      });
+      if (answer.kind !== 'plan') throw new Error('the drawing worker answered another question');
+      return answer.plan;
+    },
+    close: async () => {
+      await Promise.all([reads.close(), plans.close()]);
+    },
+  };
+}
+
+function asRefusal(error: unknown, code: ProblemCode, tooLong: string): unknown {
+  if (!(error instanceof WorkerRefusal)) return error;
+  if (error.why === 'busy') return new AppError('unavailable', 'Too many drawings at once.', { retryAfter: 5 });
+  return new AppError(code, tooLong);
+}
