@@ -55,7 +55,7 @@ export type ReturnTemperature = {
  * which is too little once both sides of a narrow part are cut. Throws RangeError for a dwell below 0.
  */
 export function returnTemperature(question: ReturnQuestion): ReturnTemperature {
-  const { corner, treatment, cut, plateTemperature } = question;
+  const { treatment, cut, plateTemperature } = question;
   const withTreatment = returnOf(question);
   const without = treatment.kind === 'leave' ? withTreatment : returnOf({ ...question, treatment: { kind: 'leave' } });
   const straightEdge = straightEdgeReturn(cut, plateTemperature, question.properties);

@@ -9,4 +9,8 @@ export const drawingLimits = {
   /** Control points or vertices of one entity. */
   points: 100_000,
   splineDegree: 25,
+  /** Lines and arcs all curves together may become. */
+  segments: 500_000,
+  /** Farthest place from the origin, m. */
+  reach: 1e4,
 } as const;

@@ -16,7 +16,7 @@ import { drawingLimits } from './limits.ts';
 import type { ContourRole } from './nest.ts';
 import { nestContours } from './nest.ts';
 import { DrawingRefusal } from './refusal.ts';
-import { shapeMap, shapeSegments } from './shape.ts';
+import { shapeMap, shapeReach, shapeSegments } from './shape.ts';
 import { tagsOf } from './tags.ts';
 import type { DrawingUnit } from './unit.ts';
 import { headerUnit, plausibleSize, unitLength } from './unit.ts';
@@ -152,12 +152,17 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
   }
 
   let deviation = 0;
+  let count = 0;
   const all = drawn.paths
     .filter(({ layer }) => taken(layer))
     .map(({ shapes, layer }): Piece => {
       const segments = shapes.flatMap((shape) => {
-        const fit = shapeSegments(shapeMap({ a: scale, b: 0, c: 0, d: scale, e: 0, f: 0 }, shape), curveTolerance);
+        const scaled = shapeMap({ a: scale, b: 0, c: 0, d: scale, e: 0, f: 0 }, shape);
+        if (!(shapeReach(scaled) <= drawingLimits.reach)) throw new DrawingRefusal(tooFar(unit));
+        const fit = shapeSegments(scaled, curveTolerance);
         deviation = Math.max(deviation, fit.deviation);
+        count += fit.segments.length;
+        if (count > drawingLimits.segments) throw new DrawingRefusal(tooFine);
         return fit.segments;
       });
       return { segments, layer };
@@ -231,6 +236,10 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
     ),
   };
 }
+
+const tooFar = (unit: DrawingUnit): string =>
+  `Read in ${unit}, a place of the drawing lies more than 10 km away. Correct the unit or move the part to the origin.`;
+const tooFine = `The drawing becomes more than ${drawingLimits.segments} lines and arcs. Draw the part alone and export again.`;
 
 const none = (why: string, gaps?: readonly Gap[]): NoDrawing => ({
   kind: 'none',

@@ -45,6 +45,18 @@ export function shapeMap(m: Affine, shape: Shape): Shape {
   }
 }
 
+/** An upper bound of how far the shape's places lie from the origin, in its unit. */
+export function shapeReach(shape: Shape): number {
+  switch (shape.kind) {
+    case 'line':
+      return Math.max(pointLength(shape.from), pointLength(shape.to));
+    case 'conic':
+      return pointLength(shape.centre) + pointLength(shape.u) + pointLength(shape.v);
+    case 'spline':
+      return shape.points.reduce((most, p) => Math.max(most, pointLength(p)), 0);
+  }
+}
+
 /** Lines and arcs within `tolerance` of the shape, and how far they really are from it at most (0 when exact). Same unit throughout. */
 export function shapeSegments(shape: Shape, tolerance: number): { segments: Segment[]; deviation: number } {
   switch (shape.kind) {

@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import path from 'node:path';
-import DxfParser from 'dxf-parser';
-import fc from 'fast-check';
+import SecondReader from 'dxf-parser';
+import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { DrawingAnswers, DrawingReading } from '../../../strategy/path/drawing/index.ts';
 import { drawingLimits, drawingRead } from '../../../strategy/path/drawing/index.ts';
@@ -28,6 +28,11 @@ function refusal(name: string, answers?: DrawingAnswers): string {
   const result = drawingRead(bytesOf(name), answers);
   if (result.kind === 'drawing') throw new Error(`${name} was read`);
   return result.why;
+}
+/** The refusal of bytes, or what is asked about them. */
+function said(bytes: Uint8Array): string {
+  const result = drawingRead(bytes);
+  return result.kind === 'none' ? result.why : result.questions.map((q) => q.why).join(' ');
 }
 const roles = (r: DrawingReading) => r.contours.map((c) => c.role);
 const millimetres = (r: DrawingReading) =>
@@ -68,9 +73,9 @@ describe('the bearing plate', () => {
     const inch = reading('bearing-plate-inch.dxf');
     expect([inch.unit, inch.unitAsked]).toEqual(['inch', false]);
     expect(millimetres(inch)).toEqual([0, 0, 300, 200]);
-    expect(inch.contours.map((c) => contourLength(c.contour))).toEqual(
-      plate.contours.map((c) => expect.closeTo(contourLength(c.contour), 6) as unknown),
-    );
+    inch.contours.forEach((c, i) => {
+      expect(contourLength(c.contour)).toBeCloseTo(contourLength(plate.contours[i]?.contour ?? { segments: [] }), 9);
+    });
   });
 
   it('without a unit is read in mm for the time being, and the question shows both sizes', () => {
@@ -88,9 +93,7 @@ describe('the bearing plate', () => {
   });
 
   it('that states inches and calls itself metric is asked about', () => {
-    expect(reading('bearing-plate-inch-but-metric.dxf').questions).toMatchObject([
-      { kind: 'unit', why: expect.stringContaining('states inch but calls itself metric') as unknown },
-    ]);
+    expect(said(bytesOf('bearing-plate-inch-but-metric.dxf'))).toContain('states inch but calls itself metric');
   });
 
   it('far too small or far too large is asked about', () => {
@@ -98,17 +101,10 @@ describe('the bearing plate', () => {
       /(\$INSUNITS\n\s*70\n)4/,
       '$113',
     );
-    const small = drawingRead(textBytes(asMicrometres));
-    expect(small).toMatchObject({
-      unit: 'µm',
-      unitAsked: true,
-      questions: [{ why: expect.stringContaining('only 0.30 mm') as unknown }],
-    });
+    expect(drawingRead(textBytes(asMicrometres))).toMatchObject({ unit: 'µm', unitAsked: true });
+    expect(said(textBytes(asMicrometres))).toContain('only 0.30 mm');
     const asMetres = asMicrometres.replace(/(\$INSUNITS\n\s*70\n)13/, '$16');
-    expect(drawingRead(textBytes(asMetres))).toMatchObject({
-      unit: 'm',
-      questions: [{ why: expect.stringContaining('is 300 m') as unknown }],
-    });
+    expect(said(textBytes(asMetres))).toContain('is 300 m');
   });
 
   it('as a binary file is the same to the last bit', () => {
@@ -175,7 +171,8 @@ describe('the bracket', () => {
     const closed = reading('bracket-gap.dxf', { gapTolerance: question.tolerance });
     expect(roles(closed)).toEqual(['outer', 'hole']);
     expect(closed.gapTolerance).toBe(question.tolerance);
-    expect(closed.repaired).toMatchObject([{ what: 'gap closed', size: expect.closeTo(5e-5, 12) as unknown }]);
+    expect(closed.repaired.map((r) => r.what)).toEqual(['gap closed']);
+    expect(closed.repaired[0]?.size).toBeCloseTo(5e-5, 12);
   });
 
   it('with nothing else closed is refused with the tolerance that would do', () => {
@@ -250,7 +247,8 @@ describe('the foot plate of the oldest format', () => {
     expect(roles(plate)).toEqual(['outer', 'hole', 'hole']);
     const [outline, left, right] = plate.contours.map((c) => contourBox(c.contour));
     expect(outline?.maxY).toBeCloseTo(0.16, 12);
-    expect([left?.minX, left?.maxX]).toEqual([expect.closeTo(0.031, 12), expect.closeTo(0.049, 12)]);
+    expect(left?.minX).toBeCloseTo(0.031, 12);
+    expect(left?.maxX).toBeCloseTo(0.049, 12);
     expect(right?.minX).toBeCloseTo(0.151, 12);
   });
 });
@@ -279,19 +277,13 @@ describe('a file that is no drawing', () => {
     const broken = [...good];
     const at = broken.indexOf('173.205081');
     broken[at] = 'far';
-    expect(drawingRead(textBytes(broken.join('\n')))).toMatchObject({
-      why: expect.stringContaining(`line ${at + 1} but "far"`) as unknown,
-    });
+    expect(said(textBytes(broken.join('\n')))).toContain(`line ${at + 1} but "far"`);
     broken.splice(at, 1);
-    expect(drawingRead(textBytes(broken.join('\n')))).toMatchObject({
-      why: expect.stringContaining('should hold a DXF group code') as unknown,
-    });
+    expect(said(textBytes(broken.join('\n')))).toContain('should hold a DXF group code');
   });
 
   it('is refused beyond the limits of size, entities and points', () => {
-    expect(drawingRead(new Uint8Array(drawingLimits.bytes + 1))).toMatchObject({
-      why: expect.stringContaining('at most 10 MiB') as unknown,
-    });
+    expect(said(new Uint8Array(drawingLimits.bytes + 1))).toContain('at most 10 MiB');
     const bolt = [
       '0',
       'SECTION',
@@ -336,13 +328,17 @@ describe('a file that is no drawing', () => {
       '0',
       'EOF',
     ];
-    expect(drawingRead(textBytes([...bolt, ...array].join('\n')))).toMatchObject({
-      why: expect.stringContaining('more than 200000 entities') as unknown,
-    });
+    expect(said(textBytes([...bolt, ...array].join('\n')))).toContain('more than 200000 entities');
     const huge = array.map((word) => (word === '400' ? '30000' : word));
-    expect(drawingRead(textBytes([...bolt, ...huge].join('\n')))).toMatchObject({
-      why: expect.stringContaining('30000 × 30000 times') as unknown,
-    });
+    expect(said(textBytes([...bolt, ...huge].join('\n')))).toContain('30000 × 30000 times');
+  });
+
+  it('is refused when a place lies beyond all plates, before anything is computed with it', () => {
+    const far = readFileSync(path.join(folder, 'bollard-base.dxf'), 'utf8').replace(
+      /\n11\n50\n|\n 11\n50\n/,
+      '\n 11\n1e200\n',
+    );
+    expect(said(textBytes(far))).toContain('more than 10 km away');
   });
 
   it('throws only for a caller who gives a tolerance below 0', () => {
@@ -359,18 +355,25 @@ describe('a file that is no drawing', () => {
     ];
     const spoilt = fc.record({
       name: fc.constantFrom(...names),
-      edits: fc.array(fc.tuple(fc.double({ min: 0, max: 0.9999, noNaN: true }), fc.oneof(fc.integer({ min: 48, max: 57 }), fc.integer({ min: 0, max: 255 }))), {
-        minLength: 1,
-        maxLength: 3,
-      }),
+      edits: fc.array(
+        fc.tuple(
+          fc.integer({ min: 0, max: 9999 }),
+          fc.oneof(fc.integer({ min: 48, max: 57 }), fc.integer({ min: 0, max: 255 })),
+        ),
+        {
+          minLength: 1,
+          maxLength: 3,
+        },
+      ),
       keep: fc.oneof(fc.constant(1), fc.double({ min: 0.2, max: 1, noNaN: true })),
     });
     let read = 0;
     let refused = 0;
     fc.assert(
-      fc.property(spoilt, ({ name, edits, keep }) => {
+      // the ends of a range are tried less, since the first bytes alone decide that a file is no DXF at all
+      fc.property(fc.noBias(spoilt), ({ name, edits, keep }) => {
         const bytes = bytesOf(name).slice();
-        for (const [share, value] of edits) bytes[Math.floor(share * bytes.length)] = value;
+        for (const [share, value] of edits) bytes[Math.floor((share / 10_000) * bytes.length)] = value;
         const result = drawingRead(bytes.slice(0, Math.ceil(keep * bytes.length)));
         if (result.kind === 'none') {
           refused++;
@@ -388,8 +391,8 @@ describe('a file that is no drawing', () => {
       }),
       { numRuns: 600 },
     );
-    expect(read).toBeGreaterThan(20);
-    expect(refused).toBeGreaterThan(20);
+    expect(read).toBeGreaterThan(100);
+    expect(refused).toBeGreaterThan(100);
   });
 });
 
@@ -397,7 +400,7 @@ describe('entity counts', () => {
   it.each(['bearing-plate.dxf', 'lifting-lug.dxf', 'bracket.dxf', 'bollard-base.dxf', 'bracket-duplicates.dxf'])(
     'of %s are those of an independent reader',
     (name) => {
-      const other = new DxfParser().parseSync(readFileSync(path.join(folder, name), 'utf8'));
+      const other = new SecondReader().parseSync(readFileSync(path.join(folder, name), 'utf8'));
       const counts: Record<string, number> = {};
       for (const { type } of other?.entities ?? []) counts[type] = (counts[type] ?? 0) + 1;
       expect(reading(name).entityCounts).toEqual(counts);

@@ -1,6 +1,6 @@
 import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
-import DxfParser from 'dxf-parser';
+import SecondReader from 'dxf-parser';
 import { describe, expect, it } from 'vitest';
 import type { DrawingReading } from '../../../strategy/path/drawing/index.ts';
 import { drawingRead, unitLength } from '../../../strategy/path/drawing/index.ts';
@@ -117,10 +117,8 @@ describe.skipIf(!there)('a real drawing', () => {
   });
 
   it('tilted out of the plane is refused by that name', () => {
-    expect(drawingRead(bytesOf(byId(tilted)))).toMatchObject({
-      kind: 'none',
-      why: expect.stringContaining('30 POLYLINE tilted out of the plane') as unknown,
-    });
+    const r = drawingRead(bytesOf(byId(tilted)));
+    expect(r.kind === 'none' && r.why).toContain('30 POLYLINE tilted out of the plane');
   });
 
   it('in binary is its twin in text', () => {
@@ -161,7 +159,7 @@ describe.skipIf(!there)('a real drawing', () => {
 function parsedByOther(text: string): Record<string, number> | null {
   let entities: readonly { type: string }[] | undefined;
   try {
-    entities = new DxfParser().parseSync(text)?.entities;
+    entities = new SecondReader().parseSync(text)?.entities;
   } catch {
     // it refuses some files, which is why it is only a cross-check
     return null;

@@ -1,6 +1,6 @@
-import fc from 'fast-check';
+import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import type { Contour, LoopSurroundings } from '../../../strategy/path/index.ts';
+import type { Contour, LoopSurroundings, Point } from '../../../strategy/path/index.ts';
 import {
   contourArea,
   contourContains,
@@ -23,7 +23,6 @@ import {
   segmentStart,
   segmentTangentAt,
 } from '../../../strategy/path/index.ts';
-import type { Point } from '../../../strategy/path/index.ts';
 
 const polygon = (points: readonly Point[]): Contour => ({
   segments: points.map((p, i) => lineBetween(p, points[(i + 1) % points.length] ?? p)),
@@ -156,9 +155,8 @@ describe('whether a loop fits', () => {
     const blocked = loopFits(loop, around([square, neighbour(needed - 1e-5)]));
     expect(blocked).toMatchObject({ kind: 'none', what: 'contour' });
     expect(blocked.kind === 'none' && blocked.why).toContain('contour 2 is in the way: only 2.0 mm');
-    expect(loopFits(loop, around([square, neighbour(5e-3)]))).toMatchObject({
-      why: expect.stringContaining('cut into it'),
-    });
+    const through = loopFits(loop, around([square, neighbour(5e-3)]));
+    expect(through.kind === 'none' && through.why).toContain('cut into it');
   });
 
   it('is no at the edge of the plate, whether a rectangle or an outline', () => {

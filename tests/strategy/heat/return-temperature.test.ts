@@ -1,0 +1,173 @@
+import * as fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import type { ReturnTreatment } from '../../../strategy/heat/index.ts';
+import {
+  leftOutStretch,
+  measuringPlace,
+  movingLine,
+  returnTemperature,
+  straightEdgeReturn,
+} from '../../../strategy/heat/index.ts';
+import type { LoopCorner, Segment } from '../../../strategy/path/index.ts';
+import {
+  contourCorners,
+  cornerOfPath,
+  lineBetween,
+  loopAt,
+  pointDistance,
+  pointRotate,
+  segmentRotate,
+} from '../../../strategy/path/index.ts';
+
+const cut = { feed: 0.7 / 60, kerfWidth: 8e-4, heatIntoPlate: 1.1e7 };
+const cold = 293.15;
+const properties = { conductivity: 32, density: 7850, specificHeat: 32 / (7850 * 8e-6) };
+
+const tip = (degrees: number): LoopCorner => {
+  const angle = (degrees * Math.PI) / 180;
+  return {
+    point: { x: 0, y: 0 },
+    incoming: { x: 1, y: 0 },
+    outgoing: { x: Math.cos(Math.PI - angle), y: Math.sin(Math.PI - angle) },
+    angle,
+  };
+};
+const at = (degrees: number, treatment: ReturnTreatment = { kind: 'leave' }, plateTemperature = cold) =>
+  returnTemperature({ corner: tip(degrees), treatment, cut, plateTemperature, properties });
+const loop = (degrees: number, radius: number): ReturnTreatment => ({
+  kind: 'loop',
+  loop: loopAt(tip(degrees), radius),
+});
+
+describe('the return temperature', () => {
+  it('is taken 1.5 mm inside the finished tip, on the bisector', () => {
+    const square = {
+      segments: [
+        lineBetween({ x: 0, y: 0 }, { x: 0.1, y: 0 }),
+        lineBetween({ x: 0.1, y: 0 }, { x: 0.1, y: 0.1 }),
+        lineBetween({ x: 0.1, y: 0.1 }, { x: 0, y: 0 }),
+      ],
+    };
+    for (const corner of contourCorners(square)) {
+      const place = measuringPlace({ ...corner, point: cornerOfPath(corner, cut.kerfWidth) }, cut.kerfWidth);
+      expect(pointDistance(place, corner.point)).toBeCloseTo(1.5e-3, 12);
+    }
+  });
+
+  it('of a straight edge is the moving source with its last 2 mm taken off', () => {
+    const q = cut.heatIntoPlate * cut.feed;
+    const aside = cut.kerfWidth / 2 + 1.5e-3;
+    const alpha = properties.conductivity / (properties.density * properties.specificHeat);
+    // what the last 2 mm add, by a plain sum
+    let last = 0;
+    const steps = 20_000;
+    for (let i = 0; i < steps; i++) {
+      const age = (((i + 0.5) / steps) * leftOutStretch) / cut.feed;
+      const square = (cut.feed * age) ** 2 + aside * aside;
+      last +=
+        ((q / (4 * Math.PI * properties.conductivity * age)) * Math.exp(-square / (4 * alpha * age)) * leftOutStretch) /
+        cut.feed /
+        steps;
+    }
+    const whole = movingLine(q, cut.feed, { ahead: 0, aside }, properties);
+    expect(straightEdgeReturn(cut, cold, properties)).toBeCloseTo(cold + whole - last, 3);
+  });
+
+  it('of a corner that is nearly straight is that of the straight edge', () => {
+    const { without, straightEdge, excess } = at(179.9);
+    expect(without).toBeCloseTo(straightEdge, 0);
+    expect(excess).toBeCloseTo(without - straightEdge, 9);
+  });
+
+  it('grows as the tip gets sharper, and with the heat in proportion', () => {
+    const rises = [150, 120, 90, 60, 45, 30].map((degrees) => at(degrees).without);
+    expect([...rises].sort((a, b) => a - b)).toEqual(rises);
+    const twice = returnTemperature({
+      corner: tip(60),
+      treatment: { kind: 'leave' },
+      cut: { ...cut, heatIntoPlate: 2 * cut.heatIntoPlate },
+      plateTemperature: cold,
+      properties,
+    });
+    expect(twice.without - cold).toBeCloseTo(2 * (at(60).without - cold), 6);
+  });
+
+  it('on a hot plate is higher by what the plate is hotter, and its excess is the same', () => {
+    const [a, b] = [at(60), at(60, { kind: 'leave' }, cold + 150)];
+    expect(b.without - a.without).toBeCloseTo(150, 9);
+    expect(b.excess).toBeCloseTo(a.excess, 9);
+  });
+
+  it('falls with the size of a loop and with the length of a dwell, and never below the plate', () => {
+    for (const degrees of [30, 60, 90]) {
+      const loops = [2e-3, 3e-3, 5e-3, 8e-3].map((r) => at(degrees, loop(degrees, r)).withTreatment);
+      expect([...loops].sort((a, b) => b - a)).toEqual(loops);
+      const dwells = [0.5, 1, 2, 4, 8].map((duration) => at(degrees, { kind: 'dwell', duration }).withTreatment);
+      expect([...dwells].sort((a, b) => b - a)).toEqual(dwells);
+      for (const t of [...loops, ...dwells]) expect(t).toBeGreaterThan(cold);
+    }
+  });
+
+  it('is without treatment the same whichever treatment is asked about, and without a wait that of leaving the corner', () => {
+    expect(at(60, loop(60, 3e-3)).without).toBeCloseTo(at(60).withTreatment, 9);
+    expect(at(60, { kind: 'dwell', duration: 0 }).withTreatment).toBeCloseTo(at(60).without, 9);
+  });
+
+  it('does not change when the corner and what was cut before it are turned together', () => {
+    const corner = tip(60);
+    const before = [
+      lineBetween({ x: -0.05, y: 0.03 }, { x: -0.05, y: 0 }),
+      lineBetween({ x: -0.05, y: 0 }, { x: 0, y: 0 }),
+    ];
+    fc.assert(
+      fc.property(fc.double({ min: -4, max: 4, noNaN: true }), (angle) => {
+        const turned = {
+          ...corner,
+          incoming: pointRotate(corner.incoming, angle),
+          outgoing: pointRotate(corner.outgoing, angle),
+        };
+        const ask = (c: LoopCorner, path: readonly Segment[]) =>
+          returnTemperature({
+            corner: c,
+            before: path,
+            treatment: { kind: 'loop', loop: loopAt(c, 3e-3) },
+            cut,
+            plateTemperature: cold,
+            properties,
+          });
+        const [a, b] = [
+          ask(corner, before),
+          ask(
+            turned,
+            before.map((s) => segmentRotate(s, angle)),
+          ),
+        ];
+        expect(b.withTreatment).toBeCloseTo(a.withTreatment, 6);
+        expect(b.without).toBeCloseTo(a.without, 6);
+      }),
+    );
+  });
+
+  it('counts an edge cut shortly before: a narrow strip returns hotter than a lone corner', () => {
+    const strip = [
+      lineBetween({ x: -0.1, y: 6e-3 }, { x: -6e-3, y: 6e-3 }),
+      lineBetween({ x: -6e-3, y: 6e-3 }, { x: -6e-3, y: 0 }),
+      lineBetween({ x: -6e-3, y: 0 }, { x: 0, y: 0 }),
+    ];
+    const ask = (before: typeof strip) =>
+      returnTemperature({
+        corner: tip(90),
+        before,
+        treatment: { kind: 'leave' },
+        cut,
+        plateTemperature: cold,
+        properties,
+      }).without;
+    expect(ask(strip)).toBeGreaterThan(ask(strip.slice(2)));
+  });
+
+  it('refuses a plate below absolute zero and a dwell below 0', () => {
+    expect(() => at(60, { kind: 'dwell', duration: -1 })).toThrow(/dwell -1 s/);
+    expect(() => at(60, { kind: 'leave' }, 0)).toThrow(/temperature 0 K/);
+  });
+});
