@@ -64,7 +64,7 @@ function content(plant: string, wish: Wish): StrategyContent {
     },
     cornerRules: {
       treatBelowAngle: radians(100),
-      returnTemperatureLimit: celsius(300),
+      returnTemperatureLimit: celsius(130),
       loop: {
         allowed: true,
         radius: wish.loopRadius / 1000,
