@@ -45,7 +45,7 @@ export function CardScreen({
         {unknown ? (
           <>
             <Body large>{cardText.unknownTag.detail}</Body>
-            <ButtonLink size="large" fill href="/at-the-machine" label={cardText.other} />
+            <ButtonLink size="large" fill href="/at-the-machine" label={cardText.again} />
             <PlateByHand
               onPlate={(group, micrometres) =>
                 router.push(cardAddress({ machineId, tag: null, gradeGroup: group, thickness: micrometres }))

@@ -22,8 +22,14 @@ export function FigureCells({ cells, label }: { cells: readonly FigureCell[]; la
 }
 
 const styles = {
-  cells: { display: 'flex', flexWrap: 'wrap', columnGap: 16, rowGap: 12, margin: 0 },
-  cell: { flex: '1 1 150px', minWidth: 0 },
+  cells: {
+    display: 'grid',
+    gridTemplateColumns: 'repeat(auto-fill, minmax(min(150px, 100%), 1fr))',
+    columnGap: 16,
+    rowGap: 12,
+    margin: 0,
+  },
+  cell: { minWidth: 0 },
   label: { fontFamily: family.label, fontSize: 18, lineHeight: '23px', color: roles.ink },
   value: { margin: 0 },
 } as const satisfies Record<string, CSSProperties>;

@@ -157,8 +157,8 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
       eyebrow={cornerText.page}
       aside={
         <>
-          {trouble}
-          {panel}
+          {wide && trouble}
+          {wide && panel}
           {settings}
         </>
       }
@@ -177,6 +177,9 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
         height={wide ? 560 : 360}
       />
       <Legend />
+      {/* on a phone a corner's sheet follows the drawing it was tapped on */}
+      {!wide && trouble}
+      {!wide && panel}
       <Totals plan={plan} />
       <TemperatureScale />
       <EstimateNote />

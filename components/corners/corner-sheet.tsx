@@ -1,5 +1,5 @@
 import { View } from 'react-native';
-import { cornerText, treatmentText } from '@/components/text/corners.ts';
+import { asSentence, cornerText, treatmentText } from '@/components/text/corners.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { space } from '@/components/theme/space.ts';
 import { Button } from '@/components/ui/button.tsx';
@@ -63,8 +63,8 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
         </Row>
         <Button kind="quiet" label={cornerText.close} onPress={onClose} />
       </Row>
-      {corner.trouble !== null && <Notice kind="caution">{corner.trouble}</Notice>}
-      <Body>{`${cornerText.chosenBy[corner.chosenBy]} ${corner.why}`}</Body>
+      {corner.trouble !== null && <Notice kind="caution">{asSentence(corner.trouble)}</Notice>}
+      <Body>{`${cornerText.chosenBy[corner.chosenBy]} ${asSentence(corner.why)}`}</Body>
       <View>
         {facts.map((fact) => (
           <View key={fact.label} style={factRow}>
@@ -90,11 +90,11 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
               {option.addedTime !== null && <Figure value={`+${seconds(option.addedTime)}`} />}
             </Row>
           </Row>
-          <Body>{option.why}</Body>
+          <Body>{asSentence(option.why)}</Body>
           {onOverride && option.treatment !== corner.treatment && (
             <Row>
               <Button
-                label={cornerText.choose(option.treatment)}
+                label={cornerText.choose[option.treatment]}
                 busy={busy}
                 disabled={!option.fits}
                 onPress={() => onOverride(option.treatment)}

@@ -1,6 +1,7 @@
 import { useId } from 'react';
 import { View } from 'react-native';
 import { cornerText } from '@/components/text/corners.ts';
+import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { temperatureColour, temperatureStops, temperatureWord } from '@/components/theme/temperature.ts';
 import { family } from '@/components/theme/type.ts';
@@ -9,16 +10,21 @@ import { Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import { kelvinFromCelsius, quantityText } from '@/strategy/units/index.ts';
 
-const cell = 84;
 const rowHeight = 66;
 
-/** The one scale of temperature, from the steel's temper and glow; a step a name, with its figure. Wraps where the page is narrow. */
+/** The one scale of temperature, from the steel's temper and glow; a step a name, with its figure; in two rows on a phone. */
 export function TemperatureScale() {
   const system = useUnitSystem();
+  const { wide } = useLayout();
   const named = temperatureStops.filter(({ celsius }) => celsius !== 200);
   return (
     <View role="group" aria-label={cornerText.scale}>
-      <div style={{ display: 'flex', flexWrap: 'wrap' }}>
+      <div
+        style={{
+          display: 'grid',
+          gridTemplateColumns: `repeat(${wide ? named.length : named.length / 2}, minmax(0, 1fr))`,
+        }}
+      >
         {named.map((stop, index) => (
           <ScaleStep
             key={stop.celsius}
@@ -36,7 +42,7 @@ export function TemperatureScale() {
 function ScaleStep({ from, to, name, figure }: { from: string; to: string; name: string; figure: string }) {
   const id = useId().replace(/\W/g, '');
   return (
-    <div style={{ flex: `1 0 ${cell}px`, height: rowHeight, minWidth: cell }}>
+    <div style={{ height: rowHeight }}>
       <svg width="100%" height={16} aria-hidden="true" style={{ display: 'block' }}>
         <defs>
           <linearGradient id={id}>

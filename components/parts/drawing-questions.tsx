@@ -60,7 +60,7 @@ export function DrawingQuestions({ reading, answers, onAnswer }: DrawingQuestion
           <Small>{partsText.gapsFound(gapsAsked.gaps.length, largest, system)}</Small>
           <Choice
             kind="radios"
-            label={partsText.gapQuestion}
+            label={partsText.gapWhat}
             options={[
               { value: 'leave', label: partsText.gapOption.leave, hint: partsText.gapOption.leaveHint },
               {

@@ -193,5 +193,13 @@ export function DrawingView({
 
 const styles = StyleSheet.create({
   sheet: { backgroundColor: roles.sheet, borderWidth: 1, borderColor: roles.rule },
-  buttons: { position: 'absolute', right: 8, top: 8, gap: 8, alignItems: 'flex-end' },
+  // below the drawing, so that nothing is ever covered
+  buttons: {
+    flexDirection: 'row',
+    gap: 8,
+    padding: 8,
+    justifyContent: 'flex-end',
+    borderTopWidth: 1,
+    borderTopColor: roles.rule,
+  },
 });

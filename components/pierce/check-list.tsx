@@ -1,33 +1,54 @@
-import { checkStateText } from '@/components/text/pierce.ts';
+import { useState } from 'react';
+import { checksText, checkStateText } from '@/components/text/pierce.ts';
 import { roles } from '@/components/theme/roles.ts';
+import { Button } from '@/components/ui/button.tsx';
 import { Mark } from '@/components/ui/mark.tsx';
 import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Body } from '@/components/ui/text.tsx';
 import type { Check } from '@/shared/strategies.ts';
 
 const tone = { ok: roles.good, caution: roles.hot, wrong: roles.wrong } as const;
-const order = { wrong: 0, caution: 1, ok: 2 } as const;
 
-/** What the checks found, the worst first; each with its sign and a sentence. */
-export function CheckList({ checks, large = false }: { checks: readonly Check[]; large?: boolean }) {
+/** What the checks found: what is not in order first and always in sight, the rest when asked for. */
+export function CheckList({ checks }: { checks: readonly Check[] }) {
+  const [open, setOpen] = useState(false);
+  const wrong = checks.filter(({ state }) => state === 'wrong');
+  const cautions = checks.filter(({ state }) => state === 'caution');
+  const ok = checks.filter(({ state }) => state === 'ok');
+  const clear = wrong.length + cautions.length === 0;
   return (
     <Stack gap="s">
-      {[...checks]
-        .sort((a, b) => order[a.state] - order[b.state])
-        .map((check) => (
-          <Row key={check.id} gap="m" align="flex-start" wrap={false}>
-            <span
-              role="img"
-              aria-label={checkStateText[check.state]}
-              style={{ color: tone[check.state], display: 'inline-flex', paddingTop: 1 }}
-            >
-              <Mark name={check.state} />
-            </span>
-            <Stack grow>
-              <Body large={large}>{check.sentence}</Body>
-            </Stack>
-          </Row>
-        ))}
+      {clear && <Line state="ok" sentence={checksText.allInOrder(ok.length)} />}
+      {[...wrong, ...cautions, ...(open ? ok : [])].map((check, index) => (
+        <Line key={`${check.id} ${index}`} state={check.state} sentence={check.sentence} />
+      ))}
+      {ok.length > 0 && (
+        <Row>
+          <Button
+            kind="quiet"
+            expanded={open}
+            label={open ? checksText.hide : checksText.inOrder(ok.length)}
+            onPress={() => setOpen(!open)}
+          />
+        </Row>
+      )}
     </Stack>
+  );
+}
+
+function Line({ state, sentence }: Omit<Check, 'id'>) {
+  return (
+    <Row gap="m" align="flex-start" wrap={false}>
+      <span
+        role="img"
+        aria-label={checkStateText[state]}
+        style={{ color: tone[state], display: 'inline-flex', paddingTop: 1 }}
+      >
+        <Mark name={state} />
+      </span>
+      <Stack grow>
+        <Body>{sentence}</Body>
+      </Stack>
+    </Row>
   );
 }

@@ -3,7 +3,7 @@ import { family } from '@/components/theme/type.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
 import { quantityIn, type Dimension, type UnitSystem } from '@/strategy/units/index.ts';
 import { niceCeiling } from './nice-ticks.ts';
-import { lanePoints, polylineData, type LaneName } from './section-layout.ts';
+import { lanePoints, letteringWidth, polylineData, type LaneName } from './section-layout.ts';
 
 /** Height of a lane with the line its name stands on, px. */
 export const laneHeight = 92;
@@ -44,10 +44,13 @@ export function Lane({ lane, label, stages, system, x, left, right, top, chosen 
   // the zero line has its figure only where it stands clear of the ends' figures
   const zeroClear = floor < 0 && y(floor) - y(0) > 15 && y(0) - y(most) > 15;
   const levels = zeroClear ? [floor, 0, most] : [floor, most];
+  const name = `${label}, ${unit}`;
   return (
     <g>
+      {/* a stage's boundary passes behind the name */}
+      <rect x={left} y={top} width={letteringWidth(name) + 8} height={18} fill={roles.sheet} />
       <text x={left} y={top + 14} fontFamily={family.label} fontSize={14} fill={roles.softInk}>
-        {`${label}, ${unit}`}
+        {name}
       </text>
       {levels.map((value) => (
         <g key={value}>

@@ -33,6 +33,15 @@ import { stageEnds } from './section-layout.ts';
 import { StageSentence } from './stage-sentence.tsx';
 import { usePrediction } from './use-prediction.ts';
 
+/** How a draft stands when somebody decides about it. */
+export type DraftStanding = {
+  readonly dirty: boolean;
+  /** Every number can be read and is in its range. */
+  readonly sound: boolean;
+  /** The revision with everything typed saved; null when that failed. */
+  readonly saved: () => Promise<Revision | null>;
+};
+
 type RevisionEditorProps = {
   revision: Revision;
   userId: string;
@@ -40,8 +49,8 @@ type RevisionEditorProps = {
   mayWrite: boolean;
   /** Fetches the revision as it stands on the server. */
   refetch: () => Promise<Revision | null>;
-  /** Decisions that may be taken; a draft is handed over saved. */
-  decisions: (saved: () => Promise<Revision | null>) => ReactNode;
+  /** Decisions that may be taken. */
+  decisions: (draft: DraftStanding) => ReactNode;
 };
 
 /** The pierce designer: section, lanes and title block; the stages as sentences; checks; cut and corners. Read-only once handed in. */
@@ -99,9 +108,13 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
       return null; // said by the mutation's own error below
     }
   };
-  const saved = async () => (dirty ? saveNow(base.version) : revision);
   const conflict = isProblem(save.error, 'stale');
   const problemCount = problems.size;
+  const standing: DraftStanding = {
+    dirty,
+    sound: problemCount === 0,
+    saved: async () => (dirty ? saveNow(base.version) : revision),
+  };
 
   const saveBar = !readOnly && (
     <Stack gap="s">
@@ -152,7 +165,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
           onPress={() => void saveNow(base.version)}
         />
         {dirty && <Button kind="quiet" label={revisionText.drop} onPress={() => setDropping(true)} />}
-        {decisions(saved)}
+        {decisions(standing)}
       </Row>
     </Stack>
   );
@@ -225,14 +238,14 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
           <Cell grow={5}>
             <Stack gap="l">
               {section}
+              {checks}
               {conditions}
               <EstimateNote />
             </Stack>
           </Cell>
           <Cell grow={4}>
             <Stack gap="l">
-              {saveBar || decisions(saved)}
-              {checks}
+              {saveBar || decisions(standing)}
               {stages}
               {history}
             </Stack>
@@ -240,7 +253,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
         </Row>
       ) : (
         <Stack gap="l">
-          {readOnly && decisions(saved)}
+          {readOnly && decisions(standing)}
           {section}
           {checks}
           {stages}

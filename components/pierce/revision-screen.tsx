@@ -24,7 +24,7 @@ import { Body } from '@/components/ui/text.tsx';
 import { can, may, type Actor } from '@/shared/policy.ts';
 import type { Revision } from '@/shared/strategies.ts';
 import { DecisionDialog, type Decision } from './decision-dialog.tsx';
-import { RevisionEditor } from './revision-editor.tsx';
+import { RevisionEditor, type DraftStanding } from './revision-editor.tsx';
 import { StateMark } from './state-mark.tsx';
 
 /** One revision: the pierce designer while it is a draft, the reviewed numbers after. */
@@ -46,7 +46,7 @@ export function RevisionScreen({ id }: { id: string }) {
           userId={actor.userId}
           mayWrite={may(actor, 'strategy.write')}
           refetch={async () => (await revision.refetch()).data ?? null}
-          decisions={(saved) => <Decisions revision={revision.data} actor={actor} saved={saved} />}
+          decisions={(draft) => <Decisions revision={revision.data} actor={actor} draft={draft} />}
         />
       </Page>
     );
@@ -62,15 +62,10 @@ export function RevisionScreen({ id }: { id: string }) {
   );
 }
 
-type DecisionsProps = {
-  revision: Revision;
-  actor: Actor;
-  /** The draft with everything typed saved, or null when that failed. */
-  saved: () => Promise<Revision | null>;
-};
+type DecisionsProps = { revision: Revision; actor: Actor; draft: DraftStanding };
 
 /** What may be decided now, by whoever looks at it. */
-function Decisions({ revision, actor, saved }: DecisionsProps) {
+function Decisions({ revision, actor, draft }: DecisionsProps) {
   const [decision, setDecision] = useState<Decision | null>(null);
   const mutations = {
     submit: useRevisionSubmit(),
@@ -82,7 +77,7 @@ function Decisions({ revision, actor, saved }: DecisionsProps) {
   const touchedBy = revision.touchedBy.map((person) => person.id);
   const verdict = can(actor, 'review.decide', { touchedBy });
   const decide = async (which: Decision, words: string) => {
-    const seen = which === 'submit' ? await saved() : revision;
+    const seen = which === 'submit' ? await draft.saved() : revision;
     if (!seen) return setDecision(null); // why is said beside the save button
     mutations[which].mutate({ revision: seen, words }, { onSuccess: () => setDecision(null) });
   };
@@ -95,7 +90,12 @@ function Decisions({ revision, actor, saved }: DecisionsProps) {
     <Stack gap="m">
       <Row>
         {revision.state === 'draft' && may(actor, 'strategy.write') && (
-          <Button label={revisionText.submit} onPress={() => open('submit')} />
+          <Button
+            kind={draft.dirty ? 'plain' : 'main'}
+            label={revisionText.submit}
+            disabled={!draft.sound}
+            onPress={() => open('submit')}
+          />
         )}
         {revision.state === 'inReview' && verdict.ok && (
           <>

@@ -210,6 +210,7 @@ export function SectionView({
         <DimensionRow
           condition={cold}
           plate={sectionText.cold}
+          short={sectionText.coldShort}
           colour={roles.cold}
           x={x}
           end={right}
@@ -219,6 +220,7 @@ export function SectionView({
         <DimensionRow
           condition={hot}
           plate={sectionText.plateAt(hot.plateTemperature, system)}
+          short={sectionText.short(hot.plateTemperature, system)}
           colour={roles.hot}
           x={x}
           end={right}
@@ -268,6 +270,7 @@ const quantityOne = (unit: 'mm' | 'in') => (unit === 'mm' ? 1e-3 : 0.0254);
 type DimensionRowProps = {
   condition: Condition;
   plate: string;
+  short: string;
   colour: string;
   x: (time: number) => number;
   end: number;
@@ -277,12 +280,12 @@ type DimensionRowProps = {
 };
 
 /** Time to breakthrough and time in reserve, as dimension lines with oblique ticks. */
-function DimensionRow({ condition, plate, colour, x, end, y, routineTime, dashed = false }: DimensionRowProps) {
+function DimensionRow({ condition, plate, short, colour, x, end, y, routineTime, dashed = false }: DimensionRowProps) {
   const through = condition.breakthrough;
   const spans =
     through.kind === 'ok'
       ? [
-          dimensionSpan(x(0), x(through.value), sectionText.through(plate, through.value)),
+          dimensionSpan(x(0), x(through.value), sectionText.through(plate, short, through.value)),
           dimensionSpan(x(through.value), end, sectionText.inReserve(routineTime - through.value)),
         ]
       : [dimensionSpan(x(0), end, sectionText.notThrough(plate))];

@@ -33,7 +33,7 @@ export const cardText = {
   byHand: 'Plate given by hand',
   what: (grade: string, micrometres: number, system: UnitSystem) =>
     `${grade}, ${quantityText(micrometres * 1e-6, 'length', system).text}`,
-  group: (group: string) => `grade group ${group}`,
+  group: (group: string) => `Grade group ${group}`,
   measured: (micrometres: number, system: UnitSystem) =>
     `measured ${quantityText(micrometres * 1e-6, 'length', system).text}`,
   approved: (number: number) => `Approved, revision ${number}`,
@@ -100,6 +100,7 @@ export const cardText = {
     title: (tag: string) => `No plate “${tag}” is booked in`,
     detail: 'Look at the tag again, or give the grade and the thickness by hand.',
   },
+  again: 'Type the tag again',
   other: 'Another plate',
 } as const;
 

@@ -30,7 +30,7 @@ export const cornerText = {
   options: 'What else would do',
   fits: 'fits',
   doesNotFit: 'does not fit',
-  choose: (treatment: Treatment) => `Choose ${treatmentText[treatment].toLowerCase()}`,
+  choose: { loop: 'Choose the loop', dwell: 'Choose the dwell', leave: 'Leave it as it is' },
   byRule: 'Leave it to the rules',
   close: 'All corners',
   settings: 'Plan again',
@@ -72,6 +72,10 @@ export const cornerText = {
 export function count(number: number, one: string): string {
   return `${number} ${number === 1 ? one : `${one}s`}`;
 }
+
+/** The planner's reasons are clauses; on the screen they are sentences. */
+export const asSentence = (clause: string): string =>
+  `${clause.charAt(0).toUpperCase()}${clause.slice(1)}${/[.!?]$/.test(clause) ? '' : '.'}`;
 
 /** A corner in one sentence, for its row's name. */
 export function cornerWords(corner: PlannedCorner, number: number, system: UnitSystem): string {

@@ -57,6 +57,7 @@ export const partsText = {
   unitQuestion: 'In which unit is it drawn?',
   unitOption: (unit: DrawingUnit) => unitNames[unit],
   gapQuestion: 'Gaps in the outlines',
+  gapWhat: 'What should become of them?',
   gapOption: {
     leave: 'Leave them open',
     leaveHint: 'What does not close bounds nothing and is not cut.',

@@ -17,6 +17,7 @@ export const peopleText = {
     password: 'First password',
     passwordHint: 'Handed over in person. Who has an account in another plant already keeps the password they know.',
   },
+  roles: 'Who may do what',
   change: 'Change',
   changeOf: (name: string) => `Change ${name}`,
   save: 'Save',

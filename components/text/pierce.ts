@@ -1,8 +1,10 @@
 import type { Check, Condition, Prediction, Revision, RevisionState } from '@/shared/strategies.ts';
-import { numberText, quantityText, type UnitSystem } from '@/strategy/units/index.ts';
+import { quantityText, type UnitSystem } from '@/strategy/units/index.ts';
 import type { LaneName } from '@/components/pierce/section-layout.ts';
 
-export const reserveText = (reserve: number | null): string => (reserve === null ? 'none' : numberText(reserve, 2));
+export const reserveText = (reserve: number | null): string =>
+  // cut off, not rounded: 1.996 does not reach 2.00
+  reserve === null ? 'none' : (Math.floor(reserve * 100 + 1e-6) / 100).toFixed(2);
 
 const secondsText = (seconds: number): string => quantityText(seconds, 'time', 'metric').text;
 
@@ -25,9 +27,9 @@ export const sectionText = {
   stage: (number: number) => [`stage ${number}`, `${number}`],
   lanes: 'Show under the section',
   /** Wordings of the dimension lines, the longest that fits is drawn. */
-  through: (plate: string, seconds: number) => [
+  through: (plate: string, short: string, seconds: number) => [
     `${plate}: through after ${secondsText(seconds)}`,
-    `through ${secondsText(seconds)}`,
+    `${short}: ${secondsText(seconds)}`,
     secondsText(seconds),
   ],
   inReserve: (seconds: number) => [
@@ -37,6 +39,8 @@ export const sectionText = {
   ],
   notThrough: (plate: string) => [`${plate}: not through within the routine`, 'not through'],
   cold: 'cold plate',
+  coldShort: 'cold',
+  short: (kelvin: number, system: UnitSystem) => quantityText(kelvin, 'temperature', system).text,
   coldAt: (kelvin: number, system: UnitSystem) => `Cold plate, ${quantityText(kelvin, 'temperature', system).text}`,
   hotAt: (kelvin: number, system: UnitSystem) => `Plate at ${quantityText(kelvin, 'temperature', system).text}`,
   plateAt: (kelvin: number, system: UnitSystem) => `plate at ${quantityText(kelvin, 'temperature', system).text}`,
@@ -81,6 +85,12 @@ export const stateText: Readonly<Record<RevisionState, string>> = {
 /** The word for a state that came as plain text. */
 export const stateWord = (state: string): string =>
   Object.entries(stateText).find(([name]) => name === state)?.[1] ?? state;
+
+export const checksText = {
+  inOrder: (number: number) => (number === 1 ? 'Show the one in order' : `Show the ${number} in order`),
+  hide: 'Hide what is in order',
+  allInOrder: (number: number) => `All ${number} checks are in order.`,
+} as const;
 
 export const checkStateText: Readonly<Record<Check['state'], string>> = {
   ok: 'In order',

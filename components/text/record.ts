@@ -39,6 +39,7 @@ export const recordText = {
   empty: { title: 'Nothing is recorded yet', words: 'The first thing that somebody does in this plant stands here.' },
   somebody: 'The service',
   older: 'Older entries',
+  chain: 'Is it whole?',
   check: 'Check the chain',
   checking: 'Recomputing every hash',
   whole: (entries: number) =>

@@ -32,7 +32,11 @@ export function Field({
         {optional ? <span style={styles.optional}> (may stay empty)</span> : null}
       </label>
       {children}
-      <span id={ids.hint} style={hint === undefined || hint === '' ? undefined : styles.hint} aria-live="polite">
+      <span
+        id={ids.hint}
+        style={hint === undefined || hint === '' ? undefined : large ? { ...styles.hint, ...largeText } : styles.hint}
+        aria-live="polite"
+      >
         {hint}
       </span>
       <FieldError id={ids.error} error={error} />

@@ -1,4 +1,5 @@
 import { useId, useState, type CSSProperties } from 'react';
+import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import { quantityParse, quantityText, type Dimension } from '@/strategy/units/index.ts';
@@ -38,6 +39,8 @@ export function InlineNumber({
 }: InlineNumberProps) {
   const id = useId();
   const system = useUnitSystem();
+  // a finger's height on a phone, a line's on a desk
+  const minHeight = useLayout().wide ? 38 : 48;
   const unit = givenUnit ?? usualUnit(dimension, system);
   const written = (si: number) => quantityText(si, dimension, system, { unit, sign }).number;
   const [typed, setTyped] = useState({
@@ -63,7 +66,7 @@ export function InlineNumber({
   const note = error ?? understood;
   return (
     <span style={styles.whole}>
-      <span style={{ ...styles.box, ...(error === undefined ? {} : styles.boxWrong) }}>
+      <label style={{ ...styles.box, ...(error === undefined ? {} : styles.boxWrong), minHeight }}>
         <input
           aria-label={`${label}, ${unit}`}
           aria-invalid={error !== undefined}
@@ -85,15 +88,14 @@ export function InlineNumber({
               onUnread(text);
             }
           }}
-          style={{ ...styles.input, width: `calc(${Math.min(16, Math.max(2, typed.text.length))}ch + 6px)` }}
+          style={{ ...styles.input, minHeight, width: `calc(${Math.min(16, Math.max(1, typed.text.length))}ch + 5px)` }}
         />
         <Unit unit={unit} />
-      </span>
+      </label>
       <span
         id={id}
         aria-live="polite"
-        hidden={note === undefined}
-        style={error === undefined ? styles.note : styles.wrong}
+        style={note === undefined ? undefined : error === undefined ? styles.note : styles.wrong}
       >
         {note}
       </span>
@@ -118,15 +120,18 @@ const styles = {
   whole: { display: 'inline-flex', flexDirection: 'column', maxWidth: '100%', verticalAlign: 'middle' },
   box: {
     display: 'inline-flex',
+    alignSelf: 'flex-start',
     alignItems: 'center',
-    minHeight: 48,
-    borderBottom: `2px dotted ${roles.ember}`,
-    borderRadius: 0,
+    cursor: 'text',
+    // the underline stands close below the figures, not at the edge of what is touched
+    backgroundImage: `repeating-linear-gradient(90deg, ${roles.ember} 0 2px, transparent 2px 5px)`,
+    backgroundSize: '100% 2px',
+    backgroundPosition: 'left calc(50% + 14px)',
+    backgroundRepeat: 'no-repeat',
   },
-  boxWrong: { borderBottom: `2px solid ${roles.wrong}` },
+  boxWrong: { backgroundImage: `linear-gradient(${roles.wrong}, ${roles.wrong})` },
   input: {
     ...figure,
-    minHeight: 46,
     padding: '0 2px',
     border: 0,
     borderRadius: 0,

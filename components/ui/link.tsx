@@ -64,7 +64,7 @@ export function ButtonLink({
     <PlainLink
       href={href}
       className={`cp-button cp-${kind} cp-${size}`}
-      style={{ display: 'block', width: fill ? '100%' : undefined }}
+      style={{ display: 'flex', alignItems: 'center', justifyContent: 'center', width: fill ? '100%' : undefined }}
       onFollow={onFollow}
     >
       {label}

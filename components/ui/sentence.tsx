@@ -1,4 +1,5 @@
 import type { CSSProperties, ReactNode } from 'react';
+import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 
@@ -29,7 +30,12 @@ export function InlineButton({
   readonly onPress: () => void;
 }) {
   return (
-    <button type="button" aria-label={spoken} onClick={onPress} style={styles.button}>
+    <button
+      type="button"
+      aria-label={spoken}
+      onClick={onPress}
+      style={{ ...styles.button, minHeight: useLayout().wide ? 38 : 48 }}
+    >
       {label}
     </button>
   );
@@ -51,7 +57,6 @@ const styles = {
     color: roles.softInk,
     background: 'transparent',
     border: 0,
-    minHeight: 48,
     minWidth: 44,
     padding: '0 8px',
     margin: 0,

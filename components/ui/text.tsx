@@ -21,15 +21,23 @@ const toned = (tone: TextRole | undefined, align: TextProps['align']): TextStyle
   ...(align === undefined ? {} : { textAlign: align }),
 });
 
-/** A heading; `level` is its place in the page, not its size (1 the page's name). */
-export function Heading({ children, level = 2, tone, id, align, lines }: TextProps & { readonly level?: 1 | 2 | 3 }) {
+/** A heading; `level` is its place in the page (1 the page's name), `look` its size where that differs. */
+export function Heading({
+  children,
+  level = 2,
+  look = level,
+  tone,
+  id,
+  align,
+  lines,
+}: TextProps & { readonly level?: 1 | 2 | 3; readonly look?: 1 | 2 | 3 }) {
   return (
     <Text
       role="heading"
       aria-level={level}
       nativeID={id}
       numberOfLines={lines}
-      style={[styles.heading, size[`heading${level}`], toned(tone, align)]}
+      style={[styles.heading, size[`heading${look}`], toned(tone, align)]}
     >
       {children}
     </Text>
