@@ -1,4 +1,3 @@
-import Flatbush from 'flatbush';
 import type { Point } from '../point.ts';
 import { pointCross, pointDistance, pointDot } from '../point.ts';
 import type { Segment } from '../segment.ts';
@@ -56,7 +55,7 @@ function endPoint(at: { edge: Edge; end: 0 | 1 } | undefined): Point {
   return pieceEnds(at.edge.piece)[at.end];
 }
 
-/** Cluster number of every end (two a piece): ends within the tolerance of each other share one. */
+/** Cluster number of every end (two a piece): ends within the tolerance of each other share one, and so do chains of such ends. */
 function clusterEnds(pieces: readonly Piece[], tolerance: number): number[] {
   const ends = pieces.flatMap(pieceEnds);
   const parent = ends.map((_, i) => i);
@@ -69,18 +68,80 @@ function clusterEnds(pieces: readonly Piece[], tolerance: number): number[] {
     }
     return at;
   };
-  if (ends.length > 0) {
-    const index = new Flatbush(ends.length);
-    for (const p of ends) index.add(p.x, p.y, p.x, p.y);
-    index.finish();
-    ends.forEach((p, i) => {
-      for (const k of index.search(p.x - tolerance, p.y - tolerance, p.x + tolerance, p.y + tolerance)) {
-        const q = ends[k];
-        if (k > i && q && pointDistance(p, q) <= tolerance) parent[root(k)] = root(i);
+  // in cells this small all ends are within the tolerance of each other, so that thousands of ends in one place cost no more than others
+  const cell = tolerance > 0 ? tolerance / Math.SQRT2 : 1;
+  const column = (value: number) => (tolerance > 0 ? Math.floor(value / cell) : value);
+  const keyOf = cellKeys(ends.map((p) => ({ x: column(p.x), y: column(p.y) })));
+  const cells = new Map<string | number, number[]>();
+  ends.forEach((p, i) => {
+    const key = keyOf(column(p.x), column(p.y));
+    const here = cells.get(key);
+    if (here) {
+      parent[i] = root(here[0] ?? i);
+      here.push(i);
+    } else cells.set(key, [i]);
+  });
+  if (tolerance === 0) return ends.map((_, i) => root(i));
+  for (const here of cells.values()) {
+    const first = ends[here[0] ?? 0];
+    if (!first) continue;
+    const [cx, cy] = [column(first.x), column(first.y)];
+    // each pair of cells once
+    for (const [dx, dy] of neighbourCells) {
+      const there = cells.get(keyOf(cx + dx, cy + dy));
+      if (there && root(here[0] ?? 0) !== root(there[0] ?? 0) && anyWithin(ends, here, there, tolerance)) {
+        parent[root(there[0] ?? 0)] = root(here[0] ?? 0);
       }
-    });
+    }
   }
   return ends.map((_, i) => root(i));
+}
+
+/** A key of its own for every cell: one number where all columns and rows fit into one, which is far cheaper than text. */
+function cellKeys(cells: readonly Point[]): (column: number, row: number) => string | number {
+  let [minX, maxX, minY, maxY] = [Infinity, -Infinity, Infinity, -Infinity];
+  for (const { x, y } of cells) {
+    minX = Math.min(minX, x);
+    maxX = Math.max(maxX, x);
+    minY = Math.min(minY, y);
+    maxY = Math.max(maxY, y);
+  }
+  // two cells of margin all round for the neighbours
+  const [columns, rows] = [maxX - minX + 5, maxY - minY + 5];
+  const whole = cells.every(({ x, y }) => Number.isInteger(x) && Number.isInteger(y));
+  if (!whole || !(columns * rows < Number.MAX_SAFE_INTEGER)) return (column, row) => `${column},${row}`;
+  return (column, row) => (column - minX + 2) * rows + (row - minY + 2);
+}
+
+/** Cells of half the plane that can hold an end within the tolerance, up to two away. */
+const neighbourCells: readonly (readonly [number, number])[] = [
+  [1, 0],
+  [2, 0],
+  [-2, 1],
+  [-1, 1],
+  [0, 1],
+  [1, 1],
+  [2, 1],
+  [-2, 2],
+  [-1, 2],
+  [0, 2],
+  [1, 2],
+  [2, 2],
+];
+
+function anyWithin(
+  ends: readonly Point[],
+  here: readonly number[],
+  there: readonly number[],
+  tolerance: number,
+): boolean {
+  return here.some((i) => {
+    const p = ends[i];
+    return there.some((k) => {
+      const q = ends[k];
+      return p !== undefined && q !== undefined && pointDistance(p, q) <= tolerance;
+    });
+  });
 }
 
 function incidence(edges: readonly Edge[]): Map<number, { edge: Edge; end: 0 | 1 }[]> {
@@ -160,7 +221,16 @@ function stepSegments({ edge, reversed }: Step): Segment[] {
   return reversed ? edge.piece.segments.map(segmentReverse).reverse() : [...edge.piece.segments];
 }
 
-function choose(from: Step, ways: readonly { edge: Edge; end: 0 | 1 }[], used: ReadonlySet<Edge>): Step | null {
+/** Where more than this many ends meet, no way on is better than another: the first free one is taken. */
+const crowd = 32;
+
+function choose(from: Step, ways: { edge: Edge; end: 0 | 1 }[], used: ReadonlySet<Edge>): Step | null {
+  if (ways.length > crowd) {
+    for (let way = ways.pop(); way; way = ways.pop()) {
+      if (!used.has(way.edge)) return { edge: way.edge, reversed: way.end === 1 };
+    }
+    return null;
+  }
   const free = ways.filter(({ edge }) => !used.has(edge));
   const sameLayer = free.filter(({ edge }) => edge.piece.layer === from.edge.piece.layer);
   const candidates = (sameLayer.length > 0 ? sameLayer : free).map(({ edge, end }): Step => ({

@@ -10,7 +10,7 @@ export const drawingLimits = {
   points: 100_000,
   splineDegree: 25,
   /** Lines and arcs all curves together may become. */
-  segments: 500_000,
+  segments: 300_000,
   /** Farthest place from the origin, m. */
   reach: 1e4,
 } as const;

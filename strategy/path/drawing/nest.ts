@@ -25,23 +25,28 @@ export function nestContours(contours: readonly Contour[]): Nested[] {
   index.finish();
 
   const bySize = contours.map((_, i) => i).sort((a, b) => (areas[b] ?? 0) - (areas[a] ?? 0) || a - b);
-  const rank = new Map(bySize.map((i, k) => [i, k]));
+  const rank = new Int32Array(contours.length);
+  bySize.forEach((i, k) => {
+    rank[i] = k;
+  });
   const parents: (number | null)[] = contours.map(() => null);
   const depths: number[] = contours.map(() => 0);
   for (const i of bySize) {
     const contour = contours[i];
     const box = boxes[i];
     if (!contour || !box) continue;
-    const around = index
-      .search(box.minX, box.minY, box.maxX, box.maxY)
-      .filter((k) => (rank.get(k) ?? 0) < (rank.get(i) ?? 0))
-      .sort((a, b) => (rank.get(b) ?? 0) - (rank.get(a) ?? 0));
+    const own = rank[i] ?? 0;
+    const larger = Int32Array.from(
+      index.search(box.minX, box.minY, box.maxX, box.maxY, (k) => (rank[k] ?? 0) < own),
+      (k) => rank[k] ?? 0,
+    ).sort();
     // the smallest of those around it
-    const parent = around.find((k) => {
-      const outer = contours[k];
-      const outerBox = boxes[k];
-      return outer !== undefined && outerBox !== undefined && lies(contour, box, outer, outerBox);
-    });
+    let parent: number | undefined;
+    for (let k = larger.length - 1; k >= 0 && parent === undefined; k--) {
+      const candidate = bySize[larger[k] ?? 0] ?? 0;
+      const [outer, outerBox] = [contours[candidate], boxes[candidate]];
+      if (outer && outerBox && lies(contour, box, outer, outerBox)) parent = candidate;
+    }
     if (parent === undefined) continue;
     parents[i] = parent;
     depths[i] = (depths[parent] ?? 0) + 1;
