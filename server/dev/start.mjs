@@ -48,7 +48,7 @@ await runCommand(async () => {
   if (closing) return void (await server.stop());
   say('');
   say(`Cinderpath is at ${server.address}   (ready in ${seconds(since)}; Ctrl-C stops it)`);
-  if (env.DEMO_PASSWORD) sayAccounts(env.DEMO_PASSWORD);
+  if (env.DEMO_PASSWORD) await sayAccounts(server.address);
   const code = await server.ended;
   if (!closing) {
     await close();
@@ -112,9 +112,11 @@ async function privateServices() {
   return env;
 }
 
-function sayAccounts(password) {
+async function sayAccounts(address) {
+  const answer = await fetch(`${address}/api/welcome`);
+  const { demo } = await answer.json();
+  if (!demo) return;
   say('');
-  say('Demo plants are filled in. Sign in as (password for all: ' + password + '):');
-  const accounts = JSON.parse(fs.readFileSync(new URL('./demo-accounts.json', import.meta.url), 'utf8'));
-  for (const { mail, role, plant } of accounts) say(`  ${mail.padEnd(34)} ${role.padEnd(24)} ${plant}`);
+  say(`Demo plants are filled in. Sign in as (password for all: ${demo.password}):`);
+  for (const { mail, role, plant } of demo.accounts) say(`  ${mail.padEnd(34)} ${role.padEnd(24)} ${plant}`);
 }
