@@ -128,4 +128,5 @@ const signed = (position: number, system: UnitSystem): string =>
   quantityText(position, 'length', system, { sign: true }).text;
 
 /** A number as typed at the machine: millimetres without the unit, since the dial shows none. */
-const dialText = (typed: number): string => quantityText(typed, 'length', 'metric', { unit: 'mm', sign: true }).number;
+const dialText = (typed: number): string =>
+  quantityText(typed, 'length', 'metric', { unit: 'mm', decimals: 2, sign: true }).number;

@@ -4,7 +4,6 @@ import { newId } from '@/components/data/call.ts';
 import { useMachineAdd } from '@/components/data/machines.ts';
 import { Page } from '@/components/shell/page.tsx';
 import { machinesText } from '@/components/text/machines.ts';
-import { EstimateNote } from '@/components/ui/estimate-note.tsx';
 import { FocusCheck } from './focus-check.tsx';
 import { blankMachine, MachineForm } from './machine-form.tsx';
 
@@ -14,7 +13,7 @@ export function MachineNewScreen() {
   const router = useRouter();
   const [ids] = useState(() => ({ id: newId(), revisionId: newId() }));
   return (
-    <Page title={machinesText.newTitle} aside={<FocusCheck />}>
+    <Page title={machinesText.newTitle} aside={<FocusCheck />} estimates>
       <MachineForm
         start={blankMachine}
         named
@@ -25,7 +24,6 @@ export function MachineNewScreen() {
           add.mutate({ ...ids, ...given }, { onSuccess: (machine) => router.replace(`/machines/${machine.id}`) })
         }
       />
-      <EstimateNote />
     </Page>
   );
 }

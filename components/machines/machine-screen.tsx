@@ -9,7 +9,6 @@ import { machinesText } from '@/components/text/machines.ts';
 import { momentText } from '@/components/text/moments.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
-import { EstimateNote } from '@/components/ui/estimate-note.tsx';
 import { Notice } from '@/components/ui/notice.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
 import { Sheet } from '@/components/ui/sheet.tsx';
@@ -54,10 +53,9 @@ function MachineSheet({ machine }: { readonly machine: Machine }) {
 
   if (revising) {
     return (
-      <Page title={machinesText.reviseTitle(machine.name, newest.number + 1)} aside={<FocusCheck />}>
+      <Page title={machinesText.reviseTitle(machine.name, newest.number + 1)} aside={<FocusCheck />} estimates>
         <Body>{machinesText.reviseWords}</Body>
         <MachineReviseForm machine={machine} from={shown} onDone={() => setRevising(false)} />
-        <EstimateNote />
       </Page>
     );
   }
@@ -76,6 +74,7 @@ function MachineSheet({ machine }: { readonly machine: Machine }) {
           <FocusCheck />
         </>
       }
+      estimates
     >
       {shown === newest ? null : (
         <Notice kind="caution" title={machinesText.older(shown.number)}>
@@ -86,7 +85,6 @@ function MachineSheet({ machine }: { readonly machine: Machine }) {
       )}
       <Block revision={shown} />
       <ProfileView profile={shown.profile} />
-      <EstimateNote />
     </Page>
   );
 }

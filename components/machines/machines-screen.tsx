@@ -66,7 +66,9 @@ function MachineRow({ machine, system }: { readonly machine: Machine; readonly s
       href={`/machines/${machine.id}`}
       right={power === null ? null : <Figure value={power.number} unit={power.unit} />}
     >
-      <Heading level={3}>{machine.name}</Heading>
+      <Heading level={2} look={3}>
+        {machine.name}
+      </Heading>
       {newest === undefined || bed === undefined ? null : (
         <>
           <Body>

@@ -3,12 +3,14 @@ import { profileText } from '@/components/text/machines.ts';
 import { Columns } from '@/components/ui/columns.tsx';
 import { FormNumber, FormTick } from '@/components/ui/form-fields.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
+import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { MachineFormIn, MachineFormOut } from './machine-form.tsx';
 
 type Bound = { readonly control: Control<MachineFormIn, unknown, MachineFormOut> };
 
 /** Every number of the profile but the focus dial's, in groups from the source to the bed. */
 export function ProfileFields({ control }: Bound) {
+  const metres = useUnitSystem() === 'metric' ? 'm' : 'ft';
   const { source, optics, standoff, oxygen, axes, bed } = profileText;
   return (
     <>
@@ -112,8 +114,8 @@ export function ProfileFields({ control }: Bound) {
       </Panel>
       <Panel title={bed.title}>
         <Columns>
-          <FormNumber control={control} name="profile.bed.length" dimension="length" {...bed.length} />
-          <FormNumber control={control} name="profile.bed.width" dimension="length" {...bed.width} />
+          <FormNumber control={control} name="profile.bed.length" dimension="length" unit={metres} {...bed.length} />
+          <FormNumber control={control} name="profile.bed.width" dimension="length" unit={metres} {...bed.width} />
         </Columns>
         <FormTick control={control} name="profile.bed.shuttleTable" label={bed.shuttleTable.label} />
       </Panel>

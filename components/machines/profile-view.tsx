@@ -12,6 +12,7 @@ export function ProfileView({ profile }: { readonly profile: MachineProfile }) {
   const system = useUnitSystem();
   const shown = (value: number, dimension: Dimension, unit?: string) =>
     quantityText(value, dimension, system, unit === undefined ? {} : { unit }).text;
+  const metres = system === 'metric' ? 'm' : 'ft';
   const { source, optics, focusScale, standoff, oxygen, axes, bed } = profileText;
   return (
     <Columns least={340}>
@@ -81,8 +82,8 @@ export function ProfileView({ profile }: { readonly profile: MachineProfile }) {
       <Panel title={bed.title}>
         <Facts
           items={[
-            { label: bed.length.label, value: shown(profile.bed.length, 'length') },
-            { label: bed.width.label, value: shown(profile.bed.width, 'length') },
+            { label: bed.length.label, value: shown(profile.bed.length, 'length', metres) },
+            { label: bed.width.label, value: shown(profile.bed.width, 'length', metres) },
             {
               label: bed.tables,
               value: profile.bed.shuttleTable ? machinesText.shuttle : machinesText.noShuttle,

@@ -14,6 +14,7 @@ import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Heading, Small } from '@/components/ui/text.tsx';
 import type { Member } from '@/shared/people.ts';
 import { PersonChangeDialog } from './person-change-dialog.tsx';
+import { RolesPanel } from './roles-panel.tsx';
 import { PersonNewDialog } from './person-new-dialog.tsx';
 
 /** Who may do what in this plant. */
@@ -27,7 +28,7 @@ export function PeopleScreen() {
   const add = <Button kind="main" label={peopleText.add} onPress={() => setAdding(true)} />;
 
   return (
-    <Page title={peopleText.title} measure="reading" actions={add}>
+    <Page title={peopleText.title} actions={add} aside={<RolesPanel />}>
       {people.isPending ? (
         <Progress label={peopleText.fetching} />
       ) : people.data === undefined ? (

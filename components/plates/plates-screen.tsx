@@ -68,7 +68,9 @@ function PlateRow({ plate, system }: { readonly plate: Plate; readonly system: U
   ];
   return (
     <LinkRow href={`/plates/${plate.id}`} right={<Figure value={nominal.number} unit={nominal.unit} />}>
-      <Heading level={3}>{plate.tag}</Heading>
+      <Heading level={2} look={3}>
+        {plate.tag}
+      </Heading>
       <Body>{`${plate.grade.name}, ${surfaceNames[plate.surface].toLowerCase()}`}</Body>
       {more.length === 0 ? null : <Small>{more.join(', ')}</Small>}
     </LinkRow>

@@ -4,13 +4,16 @@ import { recordText } from '@/components/text/record.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { Notice } from '@/components/ui/notice.tsx';
+import { Panel } from '@/components/ui/panel.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
+import { Body } from '@/components/ui/text.tsx';
 
 /** Asks the server to recompute the hash chain, and says what came out. */
 export function ChainCheck() {
   const check = useQuery(recordCheckQuery());
   return (
-    <>
+    <Panel title={recordText.chain}>
+      <Body>{recordText.words}</Body>
       {check.isFetching ? (
         <Progress label={recordText.checking} />
       ) : check.isError ? (
@@ -24,9 +27,7 @@ export function ChainCheck() {
           {recordText.broken(check.data.broken.sequence, check.data.broken.why)}
         </Notice>
       )}
-      <div>
-        <Button label={recordText.check} busy={check.isFetching} onPress={() => void check.refetch()} />
-      </div>
-    </>
+      <Button label={recordText.check} busy={check.isFetching} onPress={() => void check.refetch()} />
+    </Panel>
   );
 }

@@ -7,7 +7,6 @@ import { Empty } from '@/components/ui/empty.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { Rows } from '@/components/ui/link-row.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
-import { Body } from '@/components/ui/text.tsx';
 import { ChainCheck } from './chain-check.tsx';
 import { EntryRow } from './entry-row.tsx';
 
@@ -16,9 +15,7 @@ export function RecordScreen() {
   const record = useInfiniteQuery(recordQuery());
   const entries = record.data?.pages.flat() ?? [];
   return (
-    <Page title={recordText.title} measure="reading">
-      <Body>{recordText.words}</Body>
-      <ChainCheck />
+    <Page title={recordText.title} asideFirst aside={<ChainCheck />}>
       {record.isPending ? (
         <Progress label={recordText.fetching} />
       ) : record.data === undefined ? (

@@ -9,6 +9,7 @@ import { LinkRow, Rows } from '@/components/ui/link-row.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
 import { Stack } from '@/components/ui/stack.tsx';
 import { Body, Heading, Small } from '@/components/ui/text.tsx';
+import { KindsPanel } from './kinds-panel.tsx';
 import type { Report } from '@/shared/reports.ts';
 
 /** What went wrong at the machines: the open ones, then those that somebody has looked into. */
@@ -17,7 +18,12 @@ export function ReportsScreen() {
   const open = reports.data?.filter((report) => report.closed === null) ?? [];
   const closed = reports.data?.filter((report) => report.closed !== null) ?? [];
   return (
-    <Page title={reportsText.title} measure="reading">
+    <Page
+      title={reportsText.title}
+      aside={
+        reports.data === undefined || reports.data.length === 0 ? undefined : <KindsPanel reports={reports.data} />
+      }
+    >
       {reports.isPending ? (
         <Progress label={reportsText.fetching} />
       ) : reports.data === undefined ? (

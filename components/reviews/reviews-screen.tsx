@@ -8,7 +8,6 @@ import { reviewsText } from '@/components/text/reviews.ts';
 import { thicknessRangeText } from '@/components/text/thickness.ts';
 import { Empty } from '@/components/ui/empty.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
-import { EstimateNote } from '@/components/ui/estimate-note.tsx';
 import { LinkRow, Rows } from '@/components/ui/link-row.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
 import { Body, Heading, Small } from '@/components/ui/text.tsx';
@@ -27,7 +26,7 @@ export function ReviewsScreen() {
   const actor = useActor();
   const system = useUnitSystem();
   return (
-    <Page title={reviewsText.title} aside={<RequestsSection />}>
+    <Page title={reviewsText.title} aside={<RequestsSection />} estimates>
       {reviews.isPending ? (
         <Progress label={reviewsText.fetching} />
       ) : reviews.data === undefined ? (
@@ -41,7 +40,6 @@ export function ReviewsScreen() {
           ))}
         </Rows>
       )}
-      <EstimateNote />
     </Page>
   );
 }

@@ -59,11 +59,17 @@ type Around = { readonly session: Session; readonly pathname: string };
 function Rail({ session, pathname }: Around) {
   const [open, setOpen] = useState(false);
   return (
-    <div style={styles.rail}>
+    <header style={styles.rail}>
       <Brand />
       <Places session={session} pathname={pathname} />
       <div style={{ marginTop: 'auto', paddingTop: 24 }}>
-        <button type="button" className="cp-button cp-quiet" style={styles.you} onClick={() => setOpen(true)}>
+        <button
+          type="button"
+          aria-haspopup="dialog"
+          className="cp-button cp-quiet"
+          style={styles.you}
+          onClick={() => setOpen(true)}
+        >
           <span style={{ display: 'block' }}>{session.user.name}</span>
           <span style={styles.whose}>{`${roleNames[session.role]}, ${session.plant.name}`}</span>
         </button>
@@ -71,7 +77,7 @@ function Rail({ session, pathname }: Around) {
       <Dialog title={shell.you} open={open} onClose={() => setOpen(false)} closeLabel={common.close}>
         <Settings session={session} onDone={() => setOpen(false)} />
       </Dialog>
-    </div>
+    </header>
   );
 }
 
@@ -79,7 +85,7 @@ function Bar({ session, pathname }: Around) {
   const [open, setOpen] = useState(false);
   const close = () => setOpen(false);
   return (
-    <div style={styles.bar}>
+    <header style={styles.bar}>
       <Brand />
       <Button kind="quiet" mark="menu" label={shell.menu} expanded={open} onPress={() => setOpen(true)} />
       <Dialog title={shell.menu} open={open} onClose={close} closeLabel={shell.closeMenu}>
@@ -87,7 +93,7 @@ function Bar({ session, pathname }: Around) {
         <Divider />
         <Settings session={session} onDone={close} />
       </Dialog>
-    </div>
+    </header>
   );
 }
 

@@ -2,6 +2,7 @@ import type { ReactNode } from 'react';
 import { View } from 'react-native';
 import { useLayout } from '@/components/theme/layout.ts';
 import { space } from '@/components/theme/space.ts';
+import { EstimateNote } from '@/components/ui/estimate-note.tsx';
 import { Heading, Label } from '@/components/ui/text.tsx';
 
 /**
@@ -15,6 +16,8 @@ export function Page({
   aside,
   children,
   measure = 'full',
+  asideFirst = false,
+  estimates = false,
 }: {
   readonly title?: string;
   /** A small line above the name. */
@@ -23,6 +26,10 @@ export function Page({
   readonly aside?: ReactNode;
   readonly children: ReactNode;
   readonly measure?: 'full' | 'reading';
+  /** On a phone the second pane comes above, for what would be lost below a long list. */
+  readonly asideFirst?: boolean;
+  /** There are numbers on it: the caution stands below them. */
+  readonly estimates?: boolean;
 }) {
   const { wide } = useLayout();
   return (
@@ -38,7 +45,6 @@ export function Page({
     >
       {title === undefined && actions === undefined ? null : (
         <View
-          role="banner"
           style={{
             flexDirection: 'row',
             flexWrap: 'wrap',
@@ -60,13 +66,20 @@ export function Page({
       {aside === undefined ? (
         children
       ) : (
-        <View style={{ flexDirection: wide ? 'row' : 'column', gap: wide ? space.xl : space.l, alignItems: 'stretch' }}>
+        <View
+          style={{
+            flexDirection: wide ? 'row' : asideFirst ? 'column-reverse' : 'column',
+            gap: wide ? space.xl : space.l,
+            alignItems: 'stretch',
+          }}
+        >
           <View style={{ flexGrow: 1, flexShrink: 1, flexBasis: wide ? 0 : 'auto', minWidth: 0, gap: space.l }}>
             {children}
           </View>
           <View style={{ width: wide ? 380 : '100%', gap: space.l }}>{aside}</View>
         </View>
       )}
+      {estimates ? <EstimateNote /> : null}
     </View>
   );
 }

@@ -64,7 +64,12 @@ export function ButtonLink({
     <PlainLink
       href={href}
       className={`cp-button cp-${kind} cp-${size}`}
-      style={{ display: 'flex', alignItems: 'center', justifyContent: 'center', width: fill ? '100%' : undefined }}
+      style={{
+        display: fill ? 'flex' : 'inline-flex',
+        alignItems: 'center',
+        justifyContent: 'center',
+        width: fill ? '100%' : undefined,
+      }}
       onFollow={onFollow}
     >
       {label}

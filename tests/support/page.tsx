@@ -69,9 +69,9 @@ export const problem = (
   detail = 'Because.',
   errors?: readonly { pointer: string; detail: string }[],
 ): Response =>
-  new Response(
-    JSON.stringify({ type: `urn:problem:${code}`, code, detail, errors, ...problemCodes[code] }),
-    { status: problemCodes[code].status, headers: { 'content-type': 'application/problem+json' } },
-  );
+  new Response(JSON.stringify({ type: `urn:problem:${code}`, code, detail, errors, ...problemCodes[code] }), {
+    status: problemCodes[code].status,
+    headers: { 'content-type': 'application/problem+json' },
+  });
 
 export const offline = (): Error => new TypeError('Failed to fetch');
