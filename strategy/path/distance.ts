@@ -80,7 +80,8 @@ function lineMeetsLine(a: Line, b: Line): Point[] {
   const u = pointSubtract(a.end, a.start);
   const w = pointSubtract(b.end, b.start);
   const denominator = pointCross(u, w);
-  if (denominator === 0) return [];
+  // parallel but for rounding? Then the quotients below mean nothing, and the ends are as near as anything
+  if (Math.abs(denominator) <= 1e-12 * pointLength(u) * pointLength(w)) return [];
   const between = pointSubtract(b.start, a.start);
   const s = pointCross(between, w) / denominator;
   const t = pointCross(between, u) / denominator;

@@ -143,6 +143,18 @@ describe('the distance between two pieces', () => {
     );
   });
 
+  // the legs of two loops on one edge's line: rounding made them meet where neither is
+  it('of two lines on one line that do not overlap is the gap between them', () => {
+    const a = lineBetween({ x: 0.0283, y: -0.004330127018922195 }, { x: 0.0208, y: -2.2204460492503136e-19 });
+    const b = lineBetween(
+      { x: -0.010399999999999994, y: 0.018013328398716326 },
+      { x: -0.017899999999999992, y: 0.02234345541763852 },
+    );
+    const gap = Math.hypot(0.0208 + 0.0104, 0.018013328398716326);
+    expect(segmentDistance(a, b).distance).toBeCloseTo(gap, 12);
+    expect(segmentDistance(b, a).distance).toBeCloseTo(gap, 12);
+  });
+
   it('between a circle and a circle inside it is the ring between them', () => {
     const outer = circleOf({ x: 0, y: 0 }, 0.05);
     expect(segmentDistance(outer, circleOf({ x: 0.01, y: 0 }, 0.02)).distance).toBeCloseTo(0.02, 12);

@@ -1,0 +1,77 @@
+import type { Candidate, Case, CornerTreatment } from './case.ts';
+import { leaveOption } from './options.ts';
+import type { CornerRules } from './rules.ts';
+import { celsius, degrees, seconds } from './say.ts';
+
+/** The treatment chosen, why, and what must be looked at. */
+export type Decision = { readonly chosen: Candidate; readonly why: string; readonly problem?: string };
+
+/** What the programmer asked for when it fits; otherwise, and when nothing was asked, what the rule gives. */
+export function decide(
+  found: Case,
+  candidates: readonly Candidate[],
+  asked: CornerTreatment | undefined,
+  sharp: boolean,
+  rules: CornerRules,
+): Decision {
+  const limit = rules.returnTemperatureLimit;
+  const automatic = decideByRule(found, candidates, sharp, rules);
+  if (!asked) return automatic;
+  const wanted = candidates.find((c) => c.treatment === asked);
+  if (!wanted?.fits) {
+    return {
+      ...automatic,
+      why: `${asked} was asked for and does not fit; ${automatic.why}`,
+      problem: `${asked} asked for by the programmer is refused: ${wanted?.why ?? 'it is not possible here'}`,
+    };
+  }
+  const chosen = { chosen: wanted, why: `asked for by the programmer: ${wanted.why}` };
+  if ((wanted.returnWith ?? 0) <= limit || !found.corner.convex) return chosen;
+  return {
+    ...chosen,
+    problem: `with the treatment asked for the tip returns at ${celsius(wanted.returnWith ?? 0)}, over the limit of ${celsius(limit)}`,
+  };
+}
+
+function decideByRule(found: Case, candidates: readonly Candidate[], sharp: boolean, rules: CornerRules): Decision {
+  const limit = rules.returnTemperatureLimit;
+  const leave = candidates.find((c) => c.treatment === 'leave') ?? leaveOption(found, rules);
+  // concave? More steel than a straight edge carries the heat away
+  if (!found.corner.convex)
+    return { chosen: leave, why: 'the corner is concave: more steel than a straight edge carries the heat away' };
+  if (found.without <= limit) return { chosen: leave, why: leave.why };
+  if (!sharp) {
+    return {
+      chosen: leave,
+      why: `${degrees(found.corner.angle)} is not below the ${degrees(rules.treatBelowAngle)} from which corners are treated`,
+      problem: `${leave.why}, yet the angle is above the one from which corners are treated`,
+    };
+  }
+  const under = candidates.filter((c) => c.fits && c.treatment !== 'leave' && (c.returnWith ?? Infinity) <= limit);
+  const quickest = least(under, (c) => c.addedTime ?? Infinity);
+  if (quickest)
+    return { chosen: quickest, why: `${leave.why}; ${quickest.why}, for ${seconds(quickest.addedTime ?? 0)} more` };
+  const coolest =
+    least(
+      candidates.filter((c) => c.fits),
+      (c) => c.returnWith ?? Infinity,
+    ) ?? leave;
+  return {
+    chosen: coolest,
+    why:
+      coolest.treatment === 'leave'
+        ? `${leave.why}, and neither a loop nor a dwell is possible here`
+        : `nothing that fits stays under the limit; the ${coolest.treatment} leaves the coolest tip`,
+    problem: `the tip returns at ${celsius(coolest.returnWith ?? found.without)}, over the limit of ${celsius(limit)}: ${candidates
+      .filter((c) => c.treatment !== 'leave')
+      .map((c) => c.why)
+      .join('; ')}`,
+  };
+}
+
+function least<T>(items: readonly T[], measure: (item: T) => number): T | undefined {
+  return items.reduce<T | undefined>(
+    (best, item) => (best === undefined || measure(item) < measure(best) ? item : best),
+    undefined,
+  );
+}
