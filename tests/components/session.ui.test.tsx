@@ -141,7 +141,9 @@ describe('a plate card', () => {
   const asked = { machineId: ids.machine, tag: 'B-2207' };
   function Card() {
     const card = useQuery(cardQuery(asked));
-    return <p>{card.data === undefined ? (card.isError ? 'failed' : 'fetching') : card.data.kept ? 'kept' : 'fresh'}</p>;
+    return (
+      <p>{card.data === undefined ? (card.isError ? 'failed' : 'fetching') : card.data.kept ? 'kept' : 'fresh'}</p>
+    );
   }
 
   it('is read from this device when the server is out of reach, and says so', async () => {
