@@ -53,14 +53,21 @@ export function PartNewScreen() {
   const suggested = file ? file.name.replace(/\.[^.]+$/, '').slice(0, limits.name) : '';
   const name = nameSchema.safeParse(typedName ?? suggested);
   const gaps = reading?.questions.find((question) => question.kind === 'gaps');
+  const crossings = reading?.crossings;
   const marks = useMemo(
-    () =>
-      (gaps?.gaps ?? []).map(({ at }, index) => ({
-        id: String(index),
+    () => [
+      ...(crossings ?? []).map((at, index) => ({
+        id: `crossing ${index}`,
+        at,
+        draw: <path d="M-8 -8 8 8M-8 8 8 -8" fill="none" stroke={roles.wrong} strokeWidth={2.6} />,
+      })),
+      ...(gaps?.gaps ?? []).map(({ at }, index) => ({
+        id: `gap ${index}`,
         at,
         draw: <circle r={9} fill="none" stroke={roles.hot} strokeWidth={2.4} />,
       })),
-    [gaps],
+    ],
+    [gaps, crossings],
   );
   const refusal = !reading
     ? null
@@ -68,7 +75,9 @@ export function PartNewScreen() {
       ? partsText.nothingClosed
       : reading.unit === null
         ? partsText.unitFirst
-        : null;
+        : reading.crossings.length > 0
+          ? partsText.crossing(reading.crossings.length)
+          : null;
   const keep = () => {
     setSent(true);
     if (!file || !reading || refusal !== null || !name.success) return;
@@ -119,6 +128,9 @@ export function PartNewScreen() {
     <Page title={partsText.newTitle} aside={reading ? form : undefined}>
       {picker}
       {state}
+      {reading && reading.crossings.length > 0 && (
+        <Notice kind="wrong">{partsText.crossing(reading.crossings.length)}</Notice>
+      )}
       {reading && (
         <Stack gap="m">
           <DrawingView

@@ -16,6 +16,7 @@ import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { EstimateNote } from '@/components/ui/estimate-note.tsx';
 import { Form } from '@/components/ui/form.tsx';
 import { ThicknessField } from '@/components/ui/form-fields.tsx';
+import { Notice } from '@/components/ui/notice.tsx';
 import { NumberField } from '@/components/ui/number-field.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
@@ -80,6 +81,7 @@ function NewForm({ machines, nozzles, groups }: NewFormProps) {
   const [hottestPlate, setHottest] = useState<number | null>(273.15 + 200);
   const [typedName, setName] = useState<string | null>(null);
   const [sent, setSent] = useState(false);
+  const [beyond, setBeyond] = useState(false);
 
   const machine = machines.find(({ revisions }) => revisions.some(({ id }) => id === machineRevisionId));
   const profile = machine?.revisions.find(({ id }) => id === machineRevisionId)?.profile;
@@ -110,8 +112,11 @@ function NewForm({ machines, nozzles, groups }: NewFormProps) {
   const begin = () => {
     setSent(true);
     if (!read.success || !nameRead.success || !profile || !nozzle) return;
+    const content = begun(() => firstContent(read.data, profile, nozzle));
+    setBeyond(content === null);
+    if (content === null) return;
     add.mutate(
-      { ...ids, name: nameRead.data, content: firstContent(read.data, profile, nozzle) },
+      { ...ids, name: nameRead.data, content },
       { onSuccess: () => router.replace(`/revisions/${ids.revisionId}`) },
     );
   };
@@ -181,8 +186,23 @@ function NewForm({ machines, nozzles, groups }: NewFormProps) {
         error={errorOf('name')}
       />
       <Body tone="softInk">{strategiesText.defaults}</Body>
+      {beyond && (
+        <Notice kind="wrong" live>
+          {strategiesText.beyond}
+        </Notice>
+      )}
       {add.isError && <ErrorNotice error={add.error} />}
       <Button kind="main" submit label={strategiesText.begin} busy={add.isPending} />
     </Form>
   );
+}
+
+/** The first content, or null where the model can't follow the machine that far. */
+function begun<T>(work: () => T): T | null {
+  try {
+    return work();
+  } catch (error) {
+    if (error instanceof RangeError) return null;
+    throw error;
+  }
 }

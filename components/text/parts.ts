@@ -80,6 +80,8 @@ export const partsText = {
   name: 'Name of the part',
   keep: 'Keep as a part',
   unitFirst: 'Answer the unit first: the size of the part depends on it.',
+  crossing: (places: number) =>
+    `Outlines cross each other at ${count(places, 'place')}, marked with an X. Mend the drawing and choose it again.`,
   nothingClosed: 'Nothing in this drawing closes, so there is no part to keep.',
   needFile: 'Choose a drawing.',
   block: {

@@ -344,6 +344,8 @@ export const strategiesText = {
   block: { plate: 'plate', machine: 'machine', approved: 'approved', none: 'none' },
   newTitle: 'New strategy',
   begin: 'Begin the draft',
+  beyond:
+    'No first stages could be worked out for this machine, nozzle and thickness. Choose a thinner plate or look at the machine’s limits.',
   name: 'Name',
   nameHint: 'Suggested from what is chosen; change it as you like.',
   minHint: 'the range holds this',

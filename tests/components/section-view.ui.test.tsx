@@ -1,0 +1,92 @@
+import { render, screen } from '@testing-library/react';
+import { describe, expect, it } from 'vitest';
+import { niceCeiling, niceTicks } from '@/components/pierce/nice-ticks.ts';
+import { dimensionSpan, lanePoints, letteringWidth, traceUntilThrough } from '@/components/pierce/section-layout.ts';
+import { SectionView } from '@/components/pierce/section-view.tsx';
+import type { Prediction } from '@/shared/strategies.ts';
+import { content, prediction } from './strategy-fixtures.ts';
+
+const notThrough: Prediction = {
+  ...prediction,
+  cold: {
+    ...prediction.cold,
+    breakthrough: { kind: 'none', why: 'It stalls at 13 mm.' },
+    reserve: { kind: 'none', why: 'It stalls at 13 mm.' },
+    trace: { time: [0, 5, 10], depth: [0, 0.011, 0.013] },
+  },
+};
+
+describe('the section', () => {
+  it('says in words all that it draws: thickness, stages, breakthrough and reserve, cold and hot', () => {
+    render(<SectionView prediction={prediction} stages={content.stages} system="metric" />);
+    const words = screen.getByRole('img').getAttribute('aria-label') ?? '';
+    expect(words).toContain('22 mm plate');
+    expect(words).toContain('4 stages');
+    expect(words).toMatch(/Cold plate at 20 °C: through after [\d.]+ s, reserve 2\.\d\d/);
+    expect(words).toMatch(/Plate at 200 °C: through after [\d.]+ s, reserve 2\.\d\d/);
+  });
+
+  it.each([
+    ['a pierce with reserve', prediction],
+    ['a pierce that is not through', notThrough],
+  ])('has only finite numbers in it for %s', (_what, shown) => {
+    const { container } = render(<SectionView prediction={shown} stages={content.stages} system="inch" />);
+    expect(container.innerHTML).not.toMatch(/NaN|Infinity|undefined/);
+  });
+
+  it('says that a stalled pierce is not through, and draws neither its breakthrough nor a reserve', () => {
+    render(<SectionView prediction={notThrough} stages={content.stages} system="metric" />);
+    expect(screen.getByRole('img').getAttribute('aria-label')).toContain('not through. It stalls at 13 mm.');
+    expect(screen.queryByTestId('section-through-cold')).toBeNull();
+    expect(screen.queryByTestId('section-reserve')).toBeNull();
+    expect(screen.getByTestId('section-through-hot')).toBeTruthy();
+  });
+
+  it('has a boundary between stages and knots at both ends of each', () => {
+    render(<SectionView prediction={prediction} stages={content.stages} system="metric" lanes={['standoff']} />);
+    expect(screen.getAllByTestId('section-boundary')).toHaveLength(content.stages.length - 1);
+    expect(screen.getAllByTestId('lane-knot')).toHaveLength(2 * content.stages.length);
+  });
+});
+
+describe('the layout of the section', () => {
+  it('keeps a dimension’s lettering between its ticks, or leaves it away', () => {
+    for (const room of [10, 40, 90, 150, 300]) {
+      const span = dimensionSpan(100, 100 + room, ['cold plate: through after 8.04 s', 'cold: 8.04 s', '8.04 s']);
+      if (span.text === null || !span.gap) continue;
+      expect(span.gap.from).toBeGreaterThan(span.from);
+      expect(span.gap.to).toBeLessThan(span.to);
+      expect(span.gap.to - span.gap.from).toBeGreaterThan(letteringWidth(span.text));
+    }
+    expect(dimensionSpan(0, 20, ['8.04 s']).text).toBeNull();
+    expect(dimensionSpan(0, 300, ['long', 's']).text).toBe('long');
+  });
+
+  it('ends the trace at the bottom of the plate, at the moment of breakthrough', () => {
+    const last = traceUntilThrough(prediction.cold).at(-1);
+    expect(last?.depth).toBe(prediction.cold.thickness);
+    expect(prediction.cold.breakthrough).toEqual({ kind: 'ok', value: last?.time });
+  });
+
+  it('draws mean power as peak times duty, between the knots too', () => {
+    const [first] = content.stages;
+    if (!first) throw new Error('the draft has a stage');
+    const ramp = {
+      duration: 2,
+      from: { ...first.from, peakPower: 1000, duty: 0.2 },
+      to: { ...first.to, peakPower: 3000, duty: 0.6 },
+    };
+    const points = lanePoints([ramp], 'meanPower');
+    expect(points[0]?.value).toBeCloseTo(200);
+    expect(points.at(-1)?.value).toBeCloseTo(1800);
+    expect(points.find(({ time }) => time === 1)?.value).toBeCloseTo(2000 * 0.4);
+  });
+
+  it('puts ticks at round values that stay on the axis', () => {
+    expect(niceTicks(22, 5)).toEqual([0, 5, 10, 15, 20]);
+    expect(niceTicks(0.866, 5)).toEqual([0, 0.2, 0.4, 0.6, 0.8]);
+    expect(niceTicks(0, 5)).toEqual([0]);
+    expect(niceCeiling(2.55)).toBe(3);
+    expect(niceCeiling(0.7)).toBeCloseTo(0.8);
+  });
+});

@@ -1,0 +1,117 @@
+import { screen, waitFor } from '@testing-library/react';
+import { userEvent } from '@testing-library/user-event';
+import { afterEach, describe, expect, it, vi } from 'vitest';
+import { StrategiesScreen, strategyMatches } from '@/components/pierce/strategies-screen.tsx';
+import { StrategyNewScreen } from '@/components/pierce/strategy-new-screen.tsx';
+import type { StrategySummary } from '@/shared/strategies.ts';
+import { strategyContentSchema } from '@/shared/strategies.ts';
+import { router } from '../support/expo-router.tsx';
+import { ids, json, offline, serveWith, show } from '../support/page.tsx';
+import { grades, machine, nozzle, revisionOf } from './strategy-fixtures.ts';
+
+afterEach(() => vi.unstubAllGlobals());
+
+const summary = (more: Partial<StrategySummary> = {}): StrategySummary => ({
+  id: ids.strategy,
+  name: 'Bearing plate',
+  machine: { id: ids.machine, name: 'No. 2, 10 kW' },
+  gradeGroup: 'S355',
+  thickness: { min: 18_000, max: 22_000 },
+  latest: {
+    id: ids.revision,
+    number: 4,
+    state: 'inReview',
+    changedAt: '2031-03-03T14:02:00Z',
+    changedBy: { id: ids.user, name: 'Engineer' },
+    reserveCold: 2.3,
+    reserveHot: null,
+    bands: [0.3, 1],
+  },
+  approved: { id: ids.other, number: 3 },
+  openReports: 2,
+  ...more,
+});
+
+describe('the list of strategies', () => {
+  it('says where each stands in words: state, the approved one beside it, reserves, open reports', async () => {
+    serveWith(() => json({ items: [summary()] }));
+    show(<StrategiesScreen />, 'engineer');
+    const row = await screen.findByRole('link', { name: /S355, 18–22 mm/ });
+    for (const words of [
+      'In review, revision 4',
+      'revision 3 is approved',
+      'reserve 2.30 cold, none hot',
+      '2 open reports',
+    ]) {
+      expect(row.textContent).toContain(words);
+    }
+  });
+
+  it('finds by words and by a thickness that the range holds', () => {
+    const found = (text: string) => strategyMatches(summary(), text, 'metric');
+    expect(found('bearing s355')).toBe(true);
+    expect(found('20 mm')).toBe(true);
+    expect(found('18')).toBe(true);
+    expect(found('22.0 mm')).toBe(false);
+    expect(found('lug')).toBe(false);
+    expect(strategyMatches(summary(), '0.75 in', 'inch')).toBe(true);
+  });
+
+  it('shows an empty plant how to begin, and a programmer no closed door', async () => {
+    serveWith(() => json({ items: [] }));
+    const first = show(<StrategiesScreen />, 'engineer');
+    expect(await screen.findByText('No strategy yet')).toBeTruthy();
+    expect(screen.getAllByRole('link', { name: 'New strategy' }).length).toBeGreaterThan(0);
+    first.unmount();
+    show(<StrategiesScreen />, 'programmer');
+    await screen.findByText('No strategy yet');
+    expect(screen.queryByRole('link', { name: 'New strategy' })).toBeNull();
+  });
+
+  it('says that there is no connection, and fetches again when asked', async () => {
+    let up = false;
+    serveWith(() => (up ? json({ items: [summary()] }) : offline()));
+    show(<StrategiesScreen />, 'engineer');
+    const retry = await screen.findByRole('button', { name: 'Try again' }, { timeout: 8000 });
+    up = true;
+    await userEvent.click(retry);
+    expect(await screen.findByRole('link', { name: /S355, 18–22 mm/ })).toBeTruthy();
+  });
+});
+
+describe('a new strategy', () => {
+  it('suggests a name, begins with stages the machine can run, and opens the draft', async () => {
+    const requests = serveWith(({ method, path, body }) => {
+      if (path === '/api/machines') return json({ items: [machine] });
+      if (path === '/api/nozzles') return json({ items: [nozzle] });
+      if (path === '/api/grades') return json({ items: grades });
+      const given = body as { id: string; revisionId: string; name: string }; // the client's own request
+      return method === 'POST'
+        ? json({
+            id: given.id,
+            version: 1,
+            name: given.name,
+            revisions: [revisionOf({ id: given.revisionId, strategyId: given.id, number: 1 })],
+          })
+        : json({ items: [] });
+    });
+    show(<StrategyNewScreen />, 'engineer');
+    await userEvent.click(await screen.findByRole('button', { name: 'Begin the draft' }));
+    expect(screen.getByText('Choose the grade group.')).toBeTruthy();
+
+    await userEvent.click(screen.getByRole('radio', { name: 'S355' }));
+    await userEvent.type(screen.getByRole('textbox', { name: 'Thinnest plate' }), '18');
+    await userEvent.type(screen.getByRole('textbox', { name: 'Thickness the range ends before' }), '22');
+    expect(screen.getByRole<HTMLInputElement>('textbox', { name: 'Name' }).value).toBe('S355, 18–22 mm, No. 2, 10 kW');
+    await userEvent.click(screen.getByRole('button', { name: 'Begin the draft' }));
+    await waitFor(() => expect(router.replace).toHaveBeenCalledWith(expect.stringMatching(/^\/revisions\//)));
+    const sent = requests.find(({ method }) => method === 'POST')?.body as { content: unknown };
+    const content = strategyContentSchema.parse(sent.content);
+    expect(content.thickness).toEqual({ min: 18_000, max: 22_000 });
+    expect(content.stages.length).toBeGreaterThan(2);
+    const limits = machine.revisions[0]?.profile;
+    for (const { from, to } of content.stages) {
+      expect(Math.max(from.peakPower, to.peakPower)).toBeLessThanOrEqual(limits?.source.maxPower ?? 0);
+    }
+  });
+});
