@@ -17,7 +17,7 @@ export function quantity(min: number, max: number, shown: string) {
 
 /** Whole micrometres of plate thickness. */
 export const thicknessSchema = z
-  .number()
+  .number({ error: 'Give a thickness within 1 to 60 mm.' })
   .int('Thickness is kept in whole micrometres.')
   .min(limits.thicknessMin, 'Thickness must be within 1 to 60 mm.')
   .max(limits.thicknessMax, 'Thickness must be within 1 to 60 mm.');

@@ -9,7 +9,7 @@ export const tagSchema = z.string().trim().min(1, 'Type the plate’s tag.').max
 
 const plateFields = {
   tag: tagSchema,
-  gradeId: idSchema,
+  gradeId: z.uuid('Choose the grade.'),
   heatNumber: z.string().trim().max(60),
   nominalThickness: thicknessSchema,
   measuredThickness: thicknessSchema.nullable(),

@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod';
-import { useEffect } from 'react';
+import { useEffect, type ReactNode } from 'react';
 import { useForm, type DefaultValues } from 'react-hook-form';
 import { z } from 'zod';
 import { applyFieldProblems } from '@/components/data/field-problems.ts';
@@ -43,6 +43,7 @@ export function MachineForm({
   busy,
   onSubmit,
   onCancel,
+  notice,
 }: {
   readonly start: DefaultValues<MachineFormIn>;
   /** The name is asked for. */
@@ -52,6 +53,8 @@ export function MachineForm({
   readonly error: unknown;
   readonly busy: boolean;
   readonly onSubmit: (given: MachineFormOut) => void;
+  /** What must be read before sending again: it stands where the eyes are after sending. */
+  readonly notice?: ReactNode;
   readonly onCancel?: { readonly label: string; readonly press: () => void };
 }) {
   const form = useForm<MachineFormIn, unknown, MachineFormOut>({
@@ -86,6 +89,7 @@ export function MachineForm({
         />
       </Panel>
       {error === null ? null : <ErrorNotice error={error} />}
+      {notice}
       <Row>
         <Button kind="main" label={action} submit busy={busy} />
         {onCancel === undefined ? null : <Button label={onCancel.label} onPress={onCancel.press} />}

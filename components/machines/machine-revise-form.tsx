@@ -38,27 +38,29 @@ export function MachineReviseForm({
   };
 
   return (
-    <>
-      {stale ? <ConflictNotice onLoad={() => void loadNewest()} /> : null}
-      {newer === null ? null : (
-        <Notice kind="caution" live>
-          {machinesText.newer(newer.number, newer.madeBy.name)}
-        </Notice>
-      )}
-      <MachineForm
-        start={{ name: machine.name, profile: from.profile, note: '' }}
-        named={false}
-        action={machinesText.saveRevision(seen.number + 1)}
-        error={stale ? null : revise.error}
-        busy={revise.isPending}
-        onSubmit={({ profile, note }) =>
-          revise.mutate(
-            { machineId: machine.id, version: seen.version, body: { id, profile, note } },
-            { onSuccess: onDone },
-          )
-        }
-        onCancel={{ label: common.cancel, press: onDone }}
-      />
-    </>
+    <MachineForm
+      start={{ name: machine.name, profile: from.profile, note: '' }}
+      named={false}
+      action={machinesText.saveRevision(seen.number + 1)}
+      error={stale ? null : revise.error}
+      busy={revise.isPending}
+      onSubmit={({ profile, note }) =>
+        revise.mutate(
+          { machineId: machine.id, version: seen.version, body: { id, profile, note } },
+          { onSuccess: onDone },
+        )
+      }
+      notice={
+        <>
+          {stale ? <ConflictNotice onLoad={() => void loadNewest()} /> : null}
+          {newer === null ? null : (
+            <Notice kind="caution" live>
+              {machinesText.newer(newer.number, newer.madeBy.name)}
+            </Notice>
+          )}
+        </>
+      }
+      onCancel={{ label: common.cancel, press: onDone }}
+    />
   );
 }

@@ -30,46 +30,49 @@ export function PlateCorrectForm({ plate }: { readonly plate: Plate }) {
   };
 
   return (
-    <>
-      {stale ? <ConflictNotice onLoad={() => void loadNewest()} /> : null}
-      {newer === null ? null : (
-        <Notice kind="caution" title={common.newest.title} live>
-          <Body>{common.newest.words}</Body>
-          <Row>
-            <Button
-              label={common.newest.take}
-              onPress={() => {
-                setBegun({ from: newer, round: begun.round + 1 });
-                setNewer(null);
-              }}
-            />
-          </Row>
-        </Notice>
-      )}
-      {change.isSuccess && !stale ? (
-        <Notice kind="ok" live>
-          {platesText.saved}
-        </Notice>
-      ) : null}
-      <PlateForm
-        key={begun.round}
-        start={formOf(begun.from)}
-        action={platesText.correct}
-        error={stale ? null : change.error}
-        busy={change.isPending}
-        onSubmit={(body) =>
-          change.mutate(
-            { plateId: plate.id, version: seen, body },
-            {
-              onSuccess: (saved) => {
-                setSeen(saved.version);
-                setNewer(null);
-              },
+    <PlateForm
+      key={begun.round}
+      start={formOf(begun.from)}
+      action={platesText.correct}
+      error={stale ? null : change.error}
+      busy={change.isPending}
+      onSubmit={(body) =>
+        change.mutate(
+          { plateId: plate.id, version: seen, body },
+          {
+            onSuccess: (saved) => {
+              setSeen(saved.version);
+              setNewer(null);
             },
-          )
-        }
-      />
-    </>
+          },
+        )
+      }
+      notice={
+        <>
+          {' '}
+          {stale ? <ConflictNotice onLoad={() => void loadNewest()} /> : null}
+          {newer === null ? null : (
+            <Notice kind="caution" title={common.newest.title} live>
+              <Body>{common.newest.words}</Body>
+              <Row>
+                <Button
+                  label={common.newest.take}
+                  onPress={() => {
+                    setBegun({ from: newer, round: begun.round + 1 });
+                    setNewer(null);
+                  }}
+                />
+              </Row>
+            </Notice>
+          )}
+          {change.isSuccess && !stale ? (
+            <Notice kind="ok" live>
+              {platesText.saved}
+            </Notice>
+          ) : null}
+        </>
+      }
+    />
   );
 }
 

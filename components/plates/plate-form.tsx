@@ -1,6 +1,6 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useQuery } from '@tanstack/react-query';
-import { useEffect } from 'react';
+import { useEffect, type ReactNode } from 'react';
 import { useForm, type DefaultValues } from 'react-hook-form';
 import type { z } from 'zod';
 import { applyFieldProblems } from '@/components/data/field-problems.ts';
@@ -37,6 +37,7 @@ export function PlateForm({
   error,
   busy,
   onSubmit,
+  notice,
 }: {
   readonly start: DefaultValues<PlateFormIn>;
   readonly action: string;
@@ -44,6 +45,8 @@ export function PlateForm({
   readonly error: unknown;
   readonly busy: boolean;
   readonly onSubmit: (given: PlateFormOut) => void;
+  /** What must be read before sending again: it stands where the eyes are after sending. */
+  readonly notice?: ReactNode;
 }) {
   const grades = useQuery(gradesQuery());
   const form = useForm<PlateFormIn, unknown, PlateFormOut>({
@@ -101,6 +104,7 @@ export function PlateForm({
         />
       </Panel>
       {error === null ? null : <ErrorNotice error={error} />}
+      {notice}
       <Row>
         <Button kind="main" label={action} submit busy={busy} />
       </Row>

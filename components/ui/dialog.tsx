@@ -1,4 +1,4 @@
-import { useEffect, useId, useRef, type ReactNode } from 'react';
+import { useId, useLayoutEffect, useRef, type ReactNode } from 'react';
 import { space } from '@/components/theme/space.ts';
 import { Button } from './button.tsx';
 import { Row, Stack } from './stack.tsx';
@@ -26,11 +26,12 @@ export function Dialog({
 }) {
   const ref = useRef<HTMLDialogElement>(null);
   const id = useId();
-  useEffect(() => {
+  useLayoutEffect(() => {
     const dialog = ref.current;
-    if (dialog === null) return;
-    if (open && !dialog.open) dialog.showModal();
-    if (!open && dialog.open) dialog.close();
+    if (dialog === null || !open) return;
+    dialog.showModal();
+    // Before the element leaves the page, so that the browser gives the focus back to where it came from.
+    return () => dialog.close();
   }, [open]);
   return (
     <dialog
