@@ -7,7 +7,7 @@ export type Transaction = Parameters<Parameters<Database['transaction']>[0]>[0];
 
 const databaseOn = (pool: pg.Pool) => drizzle(pool, { casing: 'snake_case' });
 
-export type OpenDatabase = { readonly database: Database; readonly pool: pg.Pool; close(): Promise<void> };
+export type OpenDatabase = { readonly database: Database; readonly pool: pg.Pool; readonly close: () => Promise<void> };
 
 /** A pool of connections. A lost idle connection is told to `onLost`; the pool makes new ones by itself. */
 export function openDatabase(url: string, onLost: (error: Error) => void, connections = 10): OpenDatabase {

@@ -54,7 +54,9 @@ async function giveRights(client: pg.Client, applicationRole: string): Promise<v
 
 // Run as a program?
 if (process.argv[1] && realpathSync(process.argv[1]) === fileURLToPath(import.meta.url)) {
-  const { DATABASE_OWNER_URL: ownerUrl, DATABASE_URL: applicationUrl } = process.env;
+  const env = process.env as Readonly<Record<string, string | undefined>>; // the app framework's types make it any
+  const ownerUrl = env.DATABASE_OWNER_URL;
+  const applicationUrl = env.DATABASE_URL;
   if (!ownerUrl || !applicationUrl) {
     console.error('Set DATABASE_OWNER_URL (who owns the tables) and DATABASE_URL (who the application is).');
     process.exit(2);

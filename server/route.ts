@@ -33,7 +33,7 @@ export type PlantCall<E extends Endpoint> = Given<E> & {
 export type Call<E extends Endpoint, P = null> = PlantCall<E> & {
   readonly tx: Transaction;
   /** 412 unless the caller saw this version of the row. */
-  unchanged(version: number): void;
+  readonly unchanged: (version: number) => void;
   readonly prepared: P;
 };
 
@@ -48,10 +48,12 @@ export type Prepare<E extends Endpoint, P> = (call: PlantCall<E>) => Promise<{ v
 export type Mount = {
   readonly services: Services;
   /** For anyone. */
-  open<E extends Endpoint>(endpoint: E, act: (call: OpenCall<E>) => Promise<Reply<E>>): void;
+  readonly open: <E extends Endpoint>(endpoint: E, act: (call: OpenCall<E>) => Promise<Reply<E>>) => void;
   /** For a signed-in person whose role allows it, in one transaction that sees their plant. */
-  route<E extends Endpoint>(endpoint: E, act: (call: Call<E>) => Promise<Reply<E>>): void;
-  route<E extends Endpoint, P>(endpoint: E, prepare: Prepare<E, P>, act: (call: Call<E, P>) => Promise<Reply<E>>): void;
+  readonly route: {
+    <E extends Endpoint>(endpoint: E, act: (call: Call<E>) => Promise<Reply<E>>): void;
+    <E extends Endpoint, P>(endpoint: E, prepare: Prepare<E, P>, act: (call: Call<E, P>) => Promise<Reply<E>>): void;
+  };
 };
 
 export function mountOn(router: Router, services: Services): Mount {
@@ -177,7 +179,7 @@ async function readBody(
   await new Promise<void>((resolve, reject) => {
     json(request, response, (error?: unknown) => {
       if (!error) resolve();
-      else reject(error instanceof Error ? error : new Error(String(error)));
+      else reject(error instanceof Error ? error : new Error('the body could not be read', { cause: error }));
     });
   });
   return { file: null, data: request.body as unknown }; // typed as any by Express

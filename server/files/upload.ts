@@ -53,7 +53,6 @@ function parseJson(text: string): unknown {
 /** A file's own name, fit to be shown: no folders, no control characters, not endless. */
 function safeName(name: string): string {
   const last = name.split(/[\\/]/).at(-1) ?? '';
-  // eslint-disable-next-line no-control-regex -- control characters are what is taken out
   const clean = last.replace(/[\u0000-\u001f\u007f]/g, '').trim();
   return clean === '' ? 'unnamed' : clean.slice(-255);
 }

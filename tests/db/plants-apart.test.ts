@@ -99,7 +99,8 @@ describe('as the application’s role', () => {
         await owner.query('begin');
         await owner.query("select set_config('app.plant_id', $1, true)", [theirs.id]);
         const { rows } = await owner.query<Record<string, unknown>>(
-          `select to_jsonb(t) as row from ${table} t limit 1`,
+          `select to_jsonb(t) as row from ${table} t where plant_id = $1 limit 1`,
+          [theirs.id],
         );
         return rows[0]?.row;
       });
@@ -109,7 +110,7 @@ describe('as the application’s role', () => {
       await expect(
         asApp(ours.id, (app) =>
           app.query(
-            `insert into ${table} (${columns.join(', ')}) select ${columns.join(', ')} from jsonb_populate_record(null::${table}, $1)`,
+            `insert into ${table} (${columns.join(', ')}) select ${columns.join(', ')} from jsonb_populate_record(null::public.${table}, $1)`,
             [copy],
           ),
         ),

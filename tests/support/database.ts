@@ -34,7 +34,11 @@ async function clone(name: string, template: string): Promise<TestDatabase> {
     ownerUrl: urlFor('TEST_OWNER_URL', name),
     appUrl: urlFor('TEST_APP_URL', name),
     superUrl: urlFor('TEST_SUPER_URL', name),
-    drop: () => asOwner(async (owner) => void (await owner.query(`drop database if exists ${name} with (force)`))),
+    // As superuser: a backend of the application's may still be on its way out, and the owner may not end it.
+    drop: () =>
+      connected(urlFor('TEST_SUPER_URL', 'postgres'), async (superuser) => {
+        await superuser.query(`drop database if exists ${name} with (force)`);
+      }),
   };
 }
 
@@ -81,7 +85,8 @@ async function asOwner(work: (owner: pg.Client) => Promise<void>): Promise<void>
 }
 
 function urlFor(variable: 'TEST_OWNER_URL' | 'TEST_APP_URL' | 'TEST_SUPER_URL', database: string): string {
-  const given = process.env[variable];
+  const env = process.env as Readonly<Record<string, string | undefined>>; // the app framework's types make it any
+  const given = env[variable];
   if (!given) throw new Error(`${variable} is not set: the tests' cluster was not started`);
   const url = new URL(given);
   url.pathname = `/${database}`;

@@ -155,7 +155,7 @@ export function callerOn(server: http.Server, cookie: string | null): Caller {
         // what the server answered: the tests look at it
         body: parsed as never,
         problem: (isProblem ? parsed : {}) as Answer<unknown>['problem'],
-        headers: response.headers as Record<string, string>,
+        headers: response.headers,
         version: Number(/^"(\d+)"$/.exec(response.headers.etag ?? '')?.[1] ?? Number.NaN),
         bytes: Buffer.isBuffer(response.body) ? response.body : Buffer.alloc(0),
       };
