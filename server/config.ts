@@ -40,6 +40,10 @@ export function readConfig(env: Environment): Config {
   if (Boolean(env.S3_ACCESS_KEY_ID) !== Boolean(env.S3_SECRET_ACCESS_KEY)) {
     wrong.push('S3_ACCESS_KEY_ID and S3_SECRET_ACCESS_KEY go together');
   }
+  const host = env.HOST || '127.0.0.1';
+  if (!env.TLS_CERT && !['127.0.0.1', '::1', 'localhost'].includes(host)) {
+    wrong.push(`HOST ${host} is reachable from outside, which needs TLS_CERT and TLS_KEY`);
+  }
   const config: Config = {
     databaseUrl: needed('DATABASE_URL'),
     s3: {
@@ -52,7 +56,7 @@ export function readConfig(env: Environment): Config {
           ? { accessKeyId: env.S3_ACCESS_KEY_ID, secretAccessKey: env.S3_SECRET_ACCESS_KEY }
           : undefined,
     },
-    host: env.HOST || '127.0.0.1',
+    host,
     port,
     tls:
       env.TLS_CERT && env.TLS_KEY ? { cert: fileOf('TLS_CERT', env, wrong), key: fileOf('TLS_KEY', env, wrong) } : null,

@@ -143,8 +143,12 @@ function listen(server: http.Server, { host, port }: Config): Promise<void> {
 /** Takes no more, lets what is running finish. */
 function stopListening(server: http.Server): Promise<void> {
   return new Promise((resolve) => {
-    server.close(() => resolve());
-    server.closeIdleConnections();
+    // A connection that was busy and is kept open afterwards would hold us until its browser lets go.
+    const sweep = setInterval(() => server.closeIdleConnections(), 50);
+    server.close(() => {
+      clearInterval(sweep);
+      resolve();
+    });
   });
 }
 

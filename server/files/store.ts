@@ -27,6 +27,9 @@ export type FileStore = {
   close(): void;
 };
 
+// The SDK warns at every start that its releases from 2027 on want a newer Node: a matter for whoever updates packages.
+process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= 'true';
+
 export function createFileStore({ endpoint, region, bucket, credentials }: Config['s3']): FileStore {
   const client = new S3Client({
     region,

@@ -2,7 +2,10 @@ import type { URL } from 'node:url';
 import { Worker } from 'node:worker_threads';
 import { startWorker } from './start-worker.ts';
 
-export type WorkerPool<Q, A> = { ask(question: Q): Promise<A>; close(): Promise<void> };
+export type WorkerPool<Q, A> = {
+  readonly ask: (question: Q) => Promise<A>;
+  readonly close: () => Promise<void>;
+};
 
 /** What a thread sends back: the answer, or what its code threw. */
 export type WorkerMessage<A> =

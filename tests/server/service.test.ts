@@ -98,6 +98,12 @@ describe('starting', () => {
     expect(readConfig(good)).toMatchObject({ host: '127.0.0.1', port: 8080, tls: null, demoPassword: null });
   });
 
+  test('opens to other machines only with a certificate', () => {
+    expect(() => readConfig({ ...good, HOST: '0.0.0.0' })).toThrow(
+      'HOST 0.0.0.0 is reachable from outside, which needs TLS_CERT',
+    );
+  });
+
   test('is refused for a role that could see every plant', async () => {
     for (const url of [database.ownerUrl, database.superUrl]) {
       const opened = openDatabase(url, () => undefined);
