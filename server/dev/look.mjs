@@ -65,12 +65,16 @@ await runCommand(async () => {
   /** Every route this person can open, ids taken from the demo plant. */
   async function signedInRoutes(page, who) {
     const accounts = (await (await page.request.get('/api/welcome')).json()).demo.accounts;
-    const account = accounts.find((one) => one.role === who);
+    const account = accounts.find((one) => one.role === who && one.mail.endsWith('@quay.example'));
     const signedIn = await page.request.post('/api/sessions', {
       data: { mail: account.mail, password: stack.password },
       headers: { origin: stack.address },
     });
     if (!signedIn.ok()) throw new Error(`${who} can't sign in: ${await signedIn.text()}`);
+    // Somebody who works in both plants is looked at in the first.
+    const { memberships } = await signedIn.json();
+    const quay = memberships.find((one) => one.plantName.startsWith('Quay'));
+    await page.request.put('/api/sessions/current/plant', { data: { plantId: quay.plantId }, headers: { origin: stack.address } });
     const items = async (url) => {
       const answer = await page.request.get(url);
       return answer.ok() ? (await answer.json()).items : [];
@@ -86,7 +90,7 @@ await runCommand(async () => {
       for (const plate of plates.slice(0, 2)) {
         routes.push([
           `card-${machine.name}-${plate.tag}`.replace(/[^\w-]+/g, '-'),
-          `/card?machineId=${machine.id}&tag=${encodeURIComponent(plate.tag)}`,
+          `/card?machine=${machine.id}&tag=${encodeURIComponent(plate.tag)}`,
         ]);
       }
     }
