@@ -1,7 +1,7 @@
 import { dialForFocus } from '../beam/index.ts';
 import type { MachineProfile } from '../machine.ts';
 import { celsiusFromKelvin, numberText, quantityText, type Dimension } from '../units/index.ts';
-import { HEATING_CAPACITY, peakRiseAroundLine } from './crater.ts';
+import { CRATER_SHARE, leadInNeeded, pierceWarmth } from './lead-in.ts';
 import { pulseTrain } from './pulse.ts';
 import type { Stage, StageQuantities } from './stage.ts';
 import type { StrategyOutcome, StrategyPrediction } from './strategy-prediction.ts';
@@ -18,8 +18,10 @@ export type PierceCheckId =
   | 'reserve-hot'
   | 'stall'
   | 'idle-stage'
+  | 'jump'
   | 'eruption'
-  | 'crater';
+  | 'crater'
+  | 'lead-in';
 
 export type CheckState = 'ok' | 'caution' | 'wrong';
 
@@ -44,11 +46,14 @@ export type PierceCheckInput = {
   /** Length of the lead-in from the pierce to the contour, m, where one is known. */
   readonly leadInLength?: number;
   readonly rules?: ReserveRules;
+  /** Widest crater the plant accepts, as a radius in m, where it has said so. */
+  readonly widestCrater?: number;
 };
 
-/** From this much of the eruption's bound, or of the lead-in's length, it is a matter of luck. Own choice. */
-const ERUPTION_CAUTION = 0.8;
-const CRATER_CAUTION = 0.7;
+/** From this much of the eruption's limit it is a matter of luck. Own choice. */
+export const ERUPTION_CAUTION = 0.8;
+/** Steps between stages that are more than a machine follows or the melt bears at once. Common practice and own choice, no source. */
+export const STEEPEST_STEP = { power: 1.5, standoff: 4e-3, focus: 4e-3, pressure: 0.5e5 } as const;
 /** A pulse of fewer rise times than this is mostly ramp. Own choice. */
 const ON_TIME_CAUTION = 5;
 
@@ -105,8 +110,10 @@ export function pierceChecks(input: PierceCheckInput): readonly PierceCheck[] {
     reserveCheck('reserve-hot', prediction, prediction.hot, rules.hot),
     stallCheck(prediction.cold),
     idleCheck(stages, prediction.cold),
+    jumpCheck(stages),
     eruptionCheck(prediction),
-    craterCheck(prediction, input.leadInLength),
+    craterCheck(prediction, input.widestCrater),
+    leadInCheck(prediction, input.leadInLength),
   ];
 }
 
@@ -226,36 +233,91 @@ function idleCheck(stages: readonly Stage[], outcome: StrategyOutcome): PierceCh
   );
 }
 
-function eruptionCheck({ eruption }: StrategyPrediction): PierceCheck {
-  const facts = `stage ${eruption.stage + 1} comes to ${numberText(eruption.index, 2)} of what throws the melt out, on ${millimetres(eruption.thickness)} at ${degrees(eruption.plateTemperature)}`;
-  if (eruption.index >= 1) {
-    return check('eruption', 'wrong', `It erupts: ${facts}. Less mean power or shorter pulses there.`, [
-      eruption.stage,
-    ]);
+function jumpCheck(stages: readonly Stage[]): PierceCheck {
+  const found = stages.flatMap((stage, index) => {
+    const before = stages[index - 1];
+    const step = before === undefined ? undefined : steepStep(before.to, stage.from);
+    return step === undefined ? [] : [{ index, step }];
+  });
+  const [first] = found;
+  if (first === undefined) return check('jump', 'ok', 'The stages join without a steep step.');
+  const also = found.length === 1 ? '' : ` (and ${found.length - 1} more)`;
+  return check(
+    'jump',
+    'caution',
+    `From stage ${first.index} to stage ${first.index + 1} ${first.step}${also}: ramp it.`,
+    found.map(({ index }) => index),
+  );
+}
+
+/** The first thing that jumps too far between the end of a stage and the start of the next. */
+function steepStep(end: StageQuantities, start: StageQuantities): string | undefined {
+  const powers = [end.peakPower * end.duty, start.peakPower * start.duty] as const;
+  const told = (what: string, dimension: Dimension, from: number, to: number, sign: boolean) =>
+    `${what} jumps from ${quantityText(from, dimension, 'metric', { sign }).text} to ${quantityText(to, dimension, 'metric', { sign }).text}`;
+  const far = (from: number, to: number, most: number) => Math.abs(to - from) > most * (1 + 1e-9);
+  // Less power at once harms nothing.
+  if (powers[1] > STEEPEST_STEP.power * powers[0] * (1 + 1e-9)) {
+    return `${told('mean power', 'power', ...powers, false)}, more than the melt bears at once`;
   }
-  if (eruption.index >= ERUPTION_CAUTION) {
-    return check('eruption', 'caution', `Close to erupting: ${facts}.`, [eruption.stage]);
+  if (far(end.standoff, start.standoff, STEEPEST_STEP.standoff)) {
+    return `${told('the nozzle', 'length', end.standoff, start.standoff, false)} above the plate, which takes the axis time`;
+  }
+  if (far(end.focusPosition, start.focusPosition, STEEPEST_STEP.focus)) {
+    return `${told('the focus', 'length', end.focusPosition, start.focusPosition, true)}, which takes the lens time`;
+  }
+  if (far(end.oxygenPressure, start.oxygenPressure, STEEPEST_STEP.pressure)) {
+    return `${told('oxygen', 'pressure', end.oxygenPressure, start.oxygenPressure, false)}, which takes the gas time`;
+  }
+  return undefined;
+}
+
+function eruptionCheck({ eruption }: StrategyPrediction): PierceCheck {
+  const facts = `in stage ${eruption.stage + 1} the melt of a pulse fills ${percent(eruption.index)} of the bore, and ${percent(eruption.limit)} throws it out, on ${millimetres(eruption.thickness)} at ${degrees(eruption.plateTemperature)}`;
+  const stages = [eruption.stage];
+  if (eruption.index >= eruption.limit) {
+    return check('eruption', 'wrong', `It erupts: ${facts}. Less mean power or shorter pulses there.`, stages);
+  }
+  if (eruption.index >= ERUPTION_CAUTION * eruption.limit) {
+    return check('eruption', 'caution', `Close to erupting: ${facts}.`, stages);
   }
   return check('eruption', 'ok', `No eruption: ${facts}.`);
 }
 
-function craterCheck(prediction: StrategyPrediction, leadInLength: number | undefined): PierceCheck {
-  const radius = prediction.craterRadius;
-  const facts = `The crater is about ${millimetres(2 * radius)} wide at worst`;
-  if (leadInLength === undefined) return check('crater', 'ok', `${facts}.`);
-  const leadIn = `a lead-in of ${millimetres(leadInLength)}`;
-  if (radius >= leadInLength) return check('crater', 'wrong', `${facts} and reaches the contour over ${leadIn}.`);
-  if (radius >= CRATER_CAUTION * leadInLength) {
-    return check('crater', 'caution', `${facts}: close to the contour over ${leadIn}.`);
+function craterCheck(prediction: StrategyPrediction, widest: number | undefined): PierceCheck {
+  const facts = `The crater is about ${millimetres(2 * prediction.craterRadius)} wide at worst`;
+  if (widest === undefined) return check('crater', 'ok', `${facts}.`);
+  if (prediction.craterRadius > widest) {
+    return check('crater', 'wrong', `${facts}, more than the ${millimetres(2 * widest)} accepted.`);
   }
-  // All the pierce's heat at once along the hole: an upper bound of what the lead-in's end sees.
-  const rise = peakRiseAroundLine(prediction.heatLeft / prediction.thickness.max, leadInLength, HEATING_CAPACITY);
-  const warmer = quantityText(rise, 'temperatureDifference', 'metric').text;
-  return check(
-    'crater',
-    'ok',
-    `${facts} and stays clear of the contour over ${leadIn}, whose end the pierce warms by ${warmer} at most.`,
-  );
+  return check('crater', 'ok', `${facts}, at most the ${millimetres(2 * widest)} accepted.`);
+}
+
+function leadInCheck(prediction: StrategyPrediction, length: number | undefined): PierceCheck {
+  const { craterRadius, heat, hot } = prediction;
+  const needed = leadInNeeded({ craterRadius, heat, plateTemperature: hot.plateTemperature });
+  const crater = `a crater ${millimetres(craterRadius)} in radius`;
+  if (length === undefined) {
+    if (needed.kind === 'none') return check('lead-in', 'caution', needed.why);
+    return check('lead-in', 'ok', `A lead-in must be at least ${needed.sentence}.`);
+  }
+  const leadIn = `The lead-in of ${millimetres(length)}`;
+  if (!(craterRadius < length)) {
+    return check('lead-in', 'wrong', `${leadIn} is shorter than ${crater}: the contour is damaged where it begins.`);
+  }
+  if (craterRadius > CRATER_SHARE * length) {
+    return check('lead-in', 'caution', `${leadIn} hardly clears ${crater}.`);
+  }
+  const warmer = quantityText(pierceWarmth(heat, length), 'temperatureDifference', 'metric').text;
+  if (needed.kind === 'none') return check('lead-in', 'caution', needed.why);
+  if (length < needed.length) {
+    return check(
+      'lead-in',
+      'caution',
+      `${leadIn} begins the contour where the pierce warms the plate by up to ${warmer}: it should be ${needed.sentence}.`,
+    );
+  }
+  return check('lead-in', 'ok', `${leadIn} clears ${crater}; the pierce warms its end by ${warmer} at most.`);
 }
 
 function check(id: PierceCheckId, state: CheckState, sentence: string, stages: readonly number[] = []): PierceCheck {
@@ -268,6 +330,10 @@ function stageName(index: number): string {
 
 function millimetres(value: number): string {
   return quantityText(Math.round(value * 1e4) / 1e4, 'length', 'metric').text;
+}
+
+function percent(value: number): string {
+  return quantityText(value, 'ratio', 'metric').text;
 }
 
 function milliseconds(value: number): string {

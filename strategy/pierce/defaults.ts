@@ -1,6 +1,6 @@
 import { focusForDial } from '../beam/index.ts';
 import type { MachineProfile, Nozzle } from '../machine.ts';
-import { boreMoment, boreMomentEmpty, boreOf } from './bore.ts';
+import { boreMoment, boreMomentEmpty, boreOf, boreSet, SET_SIZE } from './bore.ts';
 import { PIERCE_DEFAULTS } from './parameters.ts';
 import { piercePredict, THICKEST_PLATE } from './predict.ts';
 import { routineTime } from './stage-math.ts';
@@ -137,9 +137,10 @@ function knotQuantitiesAt(
     oxygenPressure: clamped(knot.pressure, oxygen.minPressure, oxygen.maxPressure),
   };
   const most = POWER_SHARE * source.maxPower;
+  const places = new Float64Array(SET_SIZE);
   const speedAt = (peakPower: number, duty: number) => {
-    boreMoment(bore, { ...set, peakPower, duty }, knot.part * thickness, moment);
-    return moment.speed;
+    boreSet(places, { ...set, peakPower, duty });
+    return boreMoment(bore, places, knot.part * thickness, moment);
   };
   const target = knot.speed * slowness;
 

@@ -10,6 +10,15 @@ export {
 export { peakRiseAroundLine, peakRiseAroundPoint } from './crater.ts';
 export { pierceStageDefaults } from './defaults.ts';
 export {
+  DEFAULT_START_TEMPERATURE,
+  leadInNeeded,
+  pierceWarmth,
+  type LeadInInput,
+  type LeadInNeeded,
+  type PierceHeat,
+} from './lead-in.ts';
+export { pierceMechanismTable, type PierceMechanism } from './mechanisms.ts';
+export {
   CHOKING_GAUGE_PRESSURE,
   criticalFlowFactor,
   criticalPressureRatio,
@@ -26,15 +35,18 @@ export {
   type PierceParameters,
 } from './parameters.ts';
 export {
+  pierceOutline,
   piercePredict,
   THICKEST_PLATE,
   type Breakthrough,
   type PierceInput,
-  type PierceLedger,
+  type PierceOutline,
   type PiercePrediction,
   type PierceStageResult,
   type PierceStall,
+  type StallCause,
 } from './predict.ts';
+export type { PierceLedger } from './run.ts';
 export { effectiveDuty, pulseTrain, type PulseTrain } from './pulse.ts';
 export { routineTime, stageMeanPower, stagePulses, stageQuantitiesAt } from './stage-math.ts';
 export { LONGEST_STAGE, MOST_STAGES, stageProblems, type StageProblem } from './stage-problems.ts';

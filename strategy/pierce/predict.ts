@@ -1,11 +1,24 @@
 import type { MachineProfile, Nozzle } from '../machine.ts';
-import { HOT_DIFFUSIVITY, PLATE_TEMPERATURE_RANGE } from '../steel/index.ts';
+import { PLATE_TEMPERATURE_RANGE } from '../steel/index.ts';
 import { numberText, quantityText } from '../units/index.ts';
-import { boreMoment, boreMomentEmpty, boreMomentThrough, boreOf, type Bore, type BoreMoment } from './bore.ts';
-import { HEATING_CAPACITY, radiusOfPeakAroundPoint } from './crater.ts';
-import { integrate } from './integrate.ts';
+import {
+  BOTTOM_LIGHT,
+  boreMoment,
+  boreMomentEmpty,
+  boreOf,
+  boreSet,
+  CONDUCTION,
+  EMITTED,
+  PAUSES,
+  SET_SIZE,
+  WALL,
+  WALL_LIGHT,
+  type Bore,
+} from './bore.ts';
 import { PIERCE_MODEL_VERSION, pierceParameters, type PierceParameters } from './parameters.ts';
-import { routineTime, stageMeanPower, stagePulses, stageQuantitiesAt } from './stage-math.ts';
+import { effectiveDuty } from './pulse.ts';
+import { pierceRun, type PierceLedger, type PierceRun, type RunStep } from './run.ts';
+import { routineTime, stageMeanPower, stagePulses, stageQuantitiesAt, stagesPeakPower } from './stage-math.ts';
 import { stageProblems } from './stage-problems.ts';
 import type { Stage } from './stage.ts';
 
@@ -23,12 +36,16 @@ export type Breakthrough =
   | { readonly kind: 'through'; readonly time: number; readonly stage: number }
   | { readonly kind: 'none'; readonly why: string; readonly depth: number };
 
+/** What keeps the bottom from moving: pulses that never reach their peak, pauses that freeze it, a beam wider than the bore, or power. */
+export type StallCause = 'rise' | 'pauses' | 'focus' | 'power';
+
 /** A time during which the bottom stands still. */
 export type PierceStall = {
   readonly stage: number;
   readonly time: number;
   readonly duration: number;
   readonly depth: number;
+  readonly cause: StallCause;
   readonly why: string;
 };
 
@@ -38,18 +55,6 @@ export type PierceStageResult = {
   readonly meanPower: number;
   /** Greatest in the stage before breakthrough; 0 when the hole is through before it. */
   readonly eruptionIndex: number;
-};
-
-/** Where the heat came from and went over the whole routine, J; what came is what went. */
-export type PierceLedger = {
-  readonly absorbed: number;
-  readonly oxidation: number;
-  readonly melt: number;
-  readonly superheat: number;
-  readonly conduction: number;
-  readonly pauses: number;
-  /** Lost by the hot wall and absorbed by it as light. */
-  readonly wall: number;
 };
 
 export type PiercePrediction = {
@@ -83,29 +88,6 @@ const SHORTEST_STALL = 0.1;
 /** Points of the trace without the breakthrough. */
 const TRACE_POINTS = 160;
 
-/** Depth over which the bottom's heat still reaches the mouth, m, and how far heat at the mouth spreads. Own estimate. */
-const CRATER_SCALE = 3e-3;
-/** Time for which heat near the mouth counts, s: what a point source needs to spread over the scale. */
-const CRATER_MEMORY = CRATER_SCALE ** 2 / (6 * HOT_DIFFUSIVITY);
-
-/** Error of the depth allowed for a step, m. */
-const DEPTH_TOLERANCE = 1e-9;
-
-/** Places in the state that is integrated. */
-const DEPTH = 0;
-const EMITTED = 1;
-const BOTTOM_LIGHT = 2;
-const WALL_LIGHT = 3;
-const OXIDATION = 4;
-const MELT = 5;
-const EXPULSION = 6;
-const CONDUCTION = 7;
-const PAUSES = 8;
-const WALL = 9;
-const OXYGEN = 10;
-const CRATER_HEAT = 11;
-const STATE_SIZE = 12;
-
 /**
  * Depth over time of a staged pierce, the moment it is through, and where the heat goes. Depth follows the heat balance at the
  * bottom (`boreMoment`), integrated stage by stage with the breakthrough located to rounding. The first heating of the
@@ -115,166 +97,104 @@ const STATE_SIZE = 12;
  */
 export function piercePredict(input: PierceInput): PiercePrediction {
   const { stages, thickness } = input;
-  const problems = stageProblems(stages);
-  const [problem] = problems;
+  const bore = boreFor(input);
+  const total = routineTime(stages);
+  const trace = traceWatch(total, thickness);
+  const stalls = stallWatch(bore, stages);
+  const run = pierceRun(bore, stages, thickness, (stage, start, from, fromSpeed, end, to, toSpeed) => {
+    trace.step(start, from, fromSpeed, end, to, toSpeed);
+    stalls.step(stage, start, from, fromSpeed, end, to, toSpeed);
+  });
+  stalls.close(run.through?.time ?? total);
+  if (run.through !== null) trace.through(run.through.time);
+  const { ledger } = run;
+  return {
+    modelVersion: PIERCE_MODEL_VERSION,
+    breakthrough: breakthroughOf(run, thickness),
+    routineTime: total,
+    trace: trace.result(),
+    energy: { emitted: run.emitted, absorbed: ledger.absorbed },
+    oxidationHeat: ledger.oxidation,
+    pulses: Math.round(stages.reduce((pulses, stage) => pulses + stagePulses(stage), 0)),
+    meanPower: stages.reduce((energy, stage) => energy + stageMeanPower(stage) * stage.duration, 0) / total,
+    peakPower: stagesPeakPower(stages),
+    oxygenUsed: run.oxygenUsed,
+    stalls: stalls.result(),
+    heatLeft: heatLeftOf(ledger),
+    perStage: stages.map((stage, index) => ({
+      depthAtEnd: run.depths[index] ?? 0,
+      meanPower: stageMeanPower(stage),
+      eruptionIndex: run.eruptions[index] ?? 0,
+    })),
+    craterRadius: run.craterRadius,
+    ledger,
+  };
+}
+
+/** A prediction without its trace, its stalls and its sentences: what fits and searches ask for by the hundred thousand. */
+export type PierceOutline = {
+  /** Moment the hole is through, s; null when it never is. */
+  readonly breakthroughTime: number | null;
+  readonly routineTime: number; // s
+  readonly depth: number; // m, at the end of the routine
+  readonly craterRadius: number; // m
+  /** Greatest of all stages before breakthrough. */
+  readonly eruptionIndex: number;
+  readonly oxygenUsed: number; // kg
+  readonly heatLeft: number; // J
+  readonly ledger: PierceLedger;
+};
+
+/**
+ * The same numbers as `piercePredict` gives, to the last bit, at a fraction of its time: nothing is drawn and nothing told.
+ * RangeError as there.
+ */
+export function pierceOutline(input: PierceInput): PierceOutline {
+  return pierceOutlineOf(boreFor(input), input.stages, input.thickness);
+}
+
+/** `pierceOutline` for what has been found good already. */
+export function pierceOutlineOf(bore: Bore, stages: readonly Stage[], thickness: number): PierceOutline {
+  const run = pierceRun(bore, stages, thickness);
+  let eruptionIndex = 0;
+  for (const index of run.eruptions) if (index > eruptionIndex) eruptionIndex = index;
+  return {
+    breakthroughTime: run.through === null ? null : run.through.time,
+    routineTime: run.routineTime,
+    depth: run.depth,
+    craterRadius: run.craterRadius,
+    eruptionIndex,
+    oxygenUsed: run.oxygenUsed,
+    heatLeft: heatLeftOf(run.ledger),
+    ledger: run.ledger,
+  };
+}
+
+/** What stays the same through a prediction, after all of its input was found good. RangeError as from `piercePredict`. */
+export function boreFor(input: PierceInput): Bore {
+  const { stages, thickness, plateTemperature } = input;
+  const [problem] = stageProblems(stages);
   if (problem !== undefined) throw new RangeError(`${problem.path}: ${problem.problem}`);
   if (!(thickness > 0 && thickness <= THICKEST_PLATE)) {
     throw new RangeError(`thickness ${thickness} m is outside (0, ${THICKEST_PLATE}] m`);
   }
   const { min, max } = PLATE_TEMPERATURE_RANGE;
-  if (!(input.plateTemperature >= min && input.plateTemperature <= max)) {
-    throw new RangeError(`plate temperature ${input.plateTemperature} K is outside [${min}, ${max}] K`);
+  if (!(plateTemperature >= min && plateTemperature <= max)) {
+    throw new RangeError(`plate temperature ${plateTemperature} K is outside [${min}, ${max}] K`);
   }
-  const parameters = pierceParameters(input.parameters);
-  const bore = boreOf(input.profile, input.nozzle, input.plateTemperature, parameters);
-  const crater = craterWatch(bore);
-
-  const total = routineTime(stages);
-  const trace = traceWatch(total, thickness);
-  const stalls = stallWatch();
-  const state = new Float64Array(STATE_SIZE);
-  const moment = boreMomentEmpty();
-  const perStage: PierceStageResult[] = [];
-  let through: { readonly time: number; readonly stage: number } | undefined;
-  let stageStart = 0;
-  let lastSpeed = 0;
-
-  stages.forEach((stage, index) => {
-    const stageEnd = stageStart + stage.duration;
-    let eruption = 0;
-    const setAt = (time: number) => stageQuantitiesAt(stage, (time - stageStart) / stage.duration);
-    const look = (time: number, depth: number): BoreMoment => {
-      boreMoment(bore, setAt(time), depth, moment);
-      return moment;
-    };
-    const options = {
-      tolerance: DEPTH_TOLERANCE,
-      firstStep: stage.duration / 64,
-      // The crater's heat fades with its own time, which an explicit step must not exceed by much.
-      longestStep: Math.min(stage.duration / 12, CRATER_MEMORY),
-    };
-
-    let from = stageStart;
-    if (through === undefined) {
-      const watch = {
-        step: (
-          start: number,
-          startState: Float64Array,
-          startSlope: Float64Array,
-          end: number,
-          endState: Float64Array,
-          endSlope: Float64Array,
-        ) => {
-          const startDepth = startState[DEPTH] ?? 0;
-          const endDepth = endState[DEPTH] ?? 0;
-          trace.step(start, startDepth, startSlope[DEPTH] ?? 0, end, endDepth, endSlope[DEPTH] ?? 0);
-          if (start === stageStart) eruption = Math.max(eruption, look(start, startDepth).eruptionIndex);
-          look(end, endDepth);
-          eruption = Math.max(eruption, moment.eruptionIndex);
-          crater.see(moment.boreRadius, endState[CRATER_HEAT] ?? 0);
-          stalls.step(index, start, startSlope[DEPTH] ?? 0, end, endDepth, moment);
-          lastSpeed = moment.speed;
-        },
-      };
-      const result = integrate(
-        (time, at, slope) => {
-          const depth = Math.max(0, at[DEPTH] ?? 0);
-          boreMoment(bore, setAt(time), depth, moment);
-          slopes(moment, parameters, at, slope);
-        },
-        state,
-        stageStart,
-        stageEnd,
-        { ...options, stopAt: thickness },
-        watch,
-      );
-      if (result.reached) {
-        state[DEPTH] = thickness;
-        through = { time: result.time, stage: index };
-        trace.through(result.time);
-        from = result.time;
-      }
-      stalls.close(result.time);
-    }
-    if (through !== undefined && from < stageEnd) {
-      integrate(
-        (time, _at, slope) => {
-          boreMomentThrough(bore, setAt(time), thickness, moment);
-          slopes(moment, parameters, state, slope);
-          slope[CRATER_HEAT] = 0;
-        },
-        state,
-        from,
-        stageEnd,
-        { ...options, stopAt: Number.POSITIVE_INFINITY },
-        { step: () => undefined },
-      );
-    }
-    perStage.push({ depthAtEnd: state[DEPTH] ?? 0, meanPower: stageMeanPower(stage), eruptionIndex: eruption });
-    stageStart = stageEnd;
-  });
-
-  const sum = (place: number): number => state[place] ?? 0;
-  const absorbed = sum(BOTTOM_LIGHT) + sum(WALL_LIGHT);
-  const wall = sum(WALL) + sum(WALL_LIGHT);
-  return {
-    modelVersion: PIERCE_MODEL_VERSION,
-    breakthrough:
-      through === undefined
-        ? { kind: 'none', why: notThrough(sum(DEPTH), thickness, lastSpeed, total), depth: sum(DEPTH) }
-        : { kind: 'through', time: through.time, stage: through.stage },
-    routineTime: total,
-    trace: trace.result(),
-    energy: { emitted: sum(EMITTED), absorbed },
-    oxidationHeat: sum(OXIDATION),
-    pulses: Math.round(stages.reduce((pulses, stage) => pulses + stagePulses(stage), 0)),
-    meanPower: stages.reduce((energy, stage) => energy + stageMeanPower(stage) * stage.duration, 0) / total,
-    peakPower: Math.max(...stages.flatMap((stage) => [stage.from.peakPower, stage.to.peakPower])),
-    oxygenUsed: sum(OXYGEN),
-    stalls: stalls.result(),
-    heatLeft: sum(CONDUCTION) + sum(PAUSES) + wall,
-    perStage,
-    craterRadius: crater.radius(),
-    ledger: {
-      absorbed,
-      oxidation: sum(OXIDATION),
-      melt: sum(MELT),
-      superheat: sum(EXPULSION),
-      conduction: sum(CONDUCTION),
-      pauses: sum(PAUSES),
-      wall,
-    },
-  };
+  return boreOf(input.profile, input.nozzle, plateTemperature, pierceParameters(input.parameters));
 }
 
-function slopes(moment: BoreMoment, parameters: PierceParameters, state: Float64Array, slope: Float64Array): void {
-  slope[DEPTH] = moment.speed;
-  slope[EMITTED] = moment.emitted;
-  slope[BOTTOM_LIGHT] = moment.bottomLight;
-  slope[WALL_LIGHT] = moment.wallLight;
-  slope[OXIDATION] = moment.oxidation;
-  slope[MELT] = moment.melt;
-  slope[EXPULSION] = moment.expulsion;
-  slope[CONDUCTION] = moment.conduction;
-  slope[PAUSES] = moment.pauses;
-  slope[WALL] = moment.wall;
-  slope[OXYGEN] = moment.oxygenFlow;
-  // Heat at the mouth, fading as it spreads: what the plate conducts while the hole is shallow, and what of the melt falls
-  // back beside it, the more the nearer the pierce is to erupting.
-  const conducted = (moment.conduction + moment.pauses + moment.wall) * Math.exp(-(state[DEPTH] ?? 0) / CRATER_SCALE);
-  const fallen = (moment.melt + moment.expulsion) * Math.min(1, parameters.backfallShare * moment.eruptionIndex);
-  slope[CRATER_HEAT] = conducted + fallen - (state[CRATER_HEAT] ?? 0) / CRATER_MEMORY;
+function heatLeftOf(ledger: PierceLedger): number {
+  return ledger.conduction + ledger.pauses + ledger.wall;
 }
 
-/** Collects the crater's radius: where the greatest temperature passes melting, and at least the bore itself. */
-function craterWatch(bore: Bore) {
-  let widest = 0;
+function breakthroughOf(run: PierceRun, thickness: number): Breakthrough {
+  if (run.through !== null) return { kind: 'through', time: run.through.time, stage: run.through.stage };
   return {
-    see(boreRadius: number, heat: number): void {
-      const molten = radiusOfPeakAroundPoint(Math.max(0, heat), bore.temperatureRise, HEATING_CAPACITY);
-      widest = Math.max(widest, molten, boreRadius);
-    },
-    radius: () => widest,
+    kind: 'none',
+    why: notThrough(run.depth, thickness, run.lastSpeed, run.routineTime),
+    depth: run.depth,
   };
 }
 
@@ -314,35 +234,72 @@ function traceWatch(total: number, thickness: number) {
 }
 
 /** Collects the times during which the bottom stands still. */
-function stallWatch() {
-  type Open = { stage: number; time: number; depth: number; why: string };
+function stallWatch(bore: Bore, stages: readonly Stage[]) {
+  type Open = Pick<PierceStall, 'stage' | 'time' | 'depth' | 'cause' | 'why'>;
   const found: PierceStall[] = [];
   let open: Open | undefined;
   const close = (at: number) => {
     if (open !== undefined && at - open.time >= SHORTEST_STALL) found.push({ ...open, duration: at - open.time });
     open = undefined;
   };
-  return {
-    step(stage: number, start: number, startSpeed: number, end: number, depth: number, moment: BoreMoment): void {
-      const stands = moment.speed < STALL_SPEED;
-      const stood = startSpeed < STALL_SPEED;
-      // Where the speed, straight between both ends, passes the bound.
-      const crossing =
-        stands === stood ? start : start + ((STALL_SPEED - startSpeed) / (moment.speed - startSpeed)) * (end - start);
-      if (stands && open === undefined) open = { stage, time: crossing, depth, why: standsStill(depth, moment) };
-      if (!stands) {
-        if (stood && open === undefined) open = { stage, time: start, depth, why: standsStill(depth, moment) };
-        close(crossing);
-      }
-    },
-    close,
-    result: () => found,
+  const ends = stages.map(({ duration }) => duration);
+  const startOf = (stage: number) => ends.slice(0, stage).reduce((sum, duration) => sum + duration, 0);
+  const begin = (stage: number, time: number, depth: number): Open => {
+    const cause = stallCause(bore, stages, stage, time - startOf(stage), depth);
+    return { stage, time, depth, ...cause };
   };
+  const step: RunStep = (stage, start, from, fromSpeed, end, to, toSpeed) => {
+    const stands = toSpeed < STALL_SPEED;
+    const stood = fromSpeed < STALL_SPEED;
+    // Where the speed, straight between both ends, passes the bound.
+    const crossing =
+      stands === stood ? start : start + ((STALL_SPEED - fromSpeed) / (toSpeed - fromSpeed)) * (end - start);
+    if (stands && open === undefined) open = begin(stage, crossing, to);
+    if (!stands) {
+      if (stood && open === undefined) open = begin(stage, start, from);
+      close(crossing);
+    }
+  };
+  return { step, close, result: () => found };
 }
 
-function standsStill(depth: number, moment: BoreMoment): string {
-  const lost = moment.conduction + moment.pauses + moment.wall;
-  return `The bottom stands still at ${millimetres(depth)}: of ${watts(moment.emitted)} mean power ${watts(moment.bottomLight)} are absorbed there, and the plate conducts ${watts(lost)} away.`;
+/** A pulse of which less than this part counts is too short; pauses that cost this part of all losses are too long. Own choice. */
+const PULSE_COUNTS = 0.6;
+const PAUSES_COST = 0.3;
+/** Less than this part of the light enters the bore: the beam is wider than the bore at the top. Own choice. */
+const LIGHT_ENTERS = 0.6;
+
+/** What stands in the way at a moment of a stage, in numbers and in a sentence. */
+function stallCause(
+  bore: Bore,
+  stages: readonly Stage[],
+  stage: number,
+  time: number,
+  depth: number,
+): Pick<PierceStall, 'cause' | 'why'> {
+  const now = stages[stage];
+  if (now === undefined) throw new RangeError(`there is no stage ${stage}`);
+  const quantities = stageQuantitiesAt(now, time / now.duration);
+  const set = new Float64Array(SET_SIZE);
+  const moment = boreMomentEmpty();
+  boreSet(set, quantities);
+  boreMoment(bore, set, depth, moment);
+  const flow = (place: number) => moment[place] ?? 0;
+  const lost = flow(CONDUCTION) + flow(PAUSES) + flow(WALL);
+  const facts = `The bottom stands still at ${millimetres(depth)}: of ${watts(flow(EMITTED))} mean power ${watts(flow(BOTTOM_LIGHT))} are absorbed there, and the plate conducts ${watts(lost)} away.`;
+
+  const { duty, pulseFrequency } = quantities;
+  if (pulseFrequency !== null && effectiveDuty(duty, pulseFrequency, bore.riseTime) < PULSE_COUNTS * duty) {
+    return { cause: 'rise', why: `${facts} The pulses are over before the source has risen: lower the frequency.` };
+  }
+  if (flow(PAUSES) > PAUSES_COST * lost) {
+    return { cause: 'pauses', why: `${facts} It freezes in the pauses: raise the frequency or the duty.` };
+  }
+  const enters = (flow(BOTTOM_LIGHT) + flow(WALL_LIGHT)) / (bore.parameters.coupling * flow(EMITTED));
+  if (enters < LIGHT_ENTERS) {
+    return { cause: 'focus', why: `${facts} The beam is wider than the bore at the top: bring the focus nearer.` };
+  }
+  return { cause: 'power', why: `${facts} Light fades with depth: the mean power must grow.` };
 }
 
 function notThrough(depth: number, thickness: number, speed: number, total: number): string {

@@ -20,12 +20,12 @@ export function pulseTrain(set: Pick<StageQuantities, 'peakPower' | 'duty' | 'pu
 /**
  * Mean time the beam counts as fully on, as a share of all time. The power is taken to rise linearly over the source's rise
  * time and to fall at once, so a pulse loses half a rise time; one shorter than the rise never reaches its peak and counts
- * on²/(2·rise). Continuous power loses nothing. Frequency in Hz, rise time in s.
+ * on²/(2·rise). After a pause shorter than the rise the power has not fallen all the way, and the loss shrinks with the pause, to
+ * nothing at duty 1. Frequency in Hz, rise time in s.
  */
 export function effectiveDuty(duty: number, frequency: number, riseTime: number): number {
-  // Is the duty 1? Then the beam never goes off, whatever the frequency.
-  if (duty >= 1) return 1;
   const onTime = duty / frequency;
-  const counted = onTime >= riseTime ? onTime - riseTime / 2 : (onTime * onTime) / (2 * riseTime);
-  return counted * frequency;
+  const pause = (1 - duty) / frequency;
+  const loss = onTime >= riseTime ? riseTime / 2 : onTime - (onTime * onTime) / (2 * riseTime);
+  return (onTime - (pause >= riseTime ? loss : (loss * pause) / riseTime)) * frequency;
 }

@@ -35,6 +35,11 @@ export function routineTime(stages: readonly Stage[]): number {
   return stages.reduce((sum, stage) => sum + stage.duration, 0);
 }
 
+/** Greatest peak power of all stages, W. */
+export function stagesPeakPower(stages: readonly Stage[]): number {
+  return Math.max(...stages.flatMap(({ from, to }) => [from.peakPower, to.peakPower]));
+}
+
 function between(from: number, to: number, part: number): number {
   // This form never leaves the two ends, however it rounds: a pressure ramped to zero does not become negative.
   return from * (1 - part) + to * part;

@@ -1,5 +1,6 @@
 import type { MachineProfile, Nozzle } from '../machine.ts';
-import type { PierceParameters } from './parameters.ts';
+import type { PierceHeat } from './lead-in.ts';
+import { pierceParameters, type PierceParameters } from './parameters.ts';
 import {
   piercePredict,
   type Breakthrough,
@@ -37,6 +38,8 @@ export type StrategyOutcome = {
 
 export type StrategyEruption = {
   readonly index: number;
+  /** Index from which the melt is thrown out. */
+  readonly limit: number;
   readonly stage: number;
   readonly thickness: number; // m
   readonly plateTemperature: number; // K
@@ -56,6 +59,8 @@ export type StrategyPrediction = {
   /** On the thickest plate, cold: the longest burning one. */
   readonly energy: PiercePrediction['energy'];
   readonly heatLeft: number; // J
+  /** Most heat per metre of thickness in the three cases, J/m, and the time it is given off in: what warms the lead-in. */
+  readonly heat: PierceHeat;
   readonly oxygenUsed: number; // kg
   readonly pulses: number;
   readonly meanPower: number; // W
@@ -94,6 +99,11 @@ export function strategyPrediction(input: StrategyInput): StrategyPrediction {
   const cold = at(thickness.max, coldPlateTemperature);
   const hot = at(thickness.max, hottestPlateTemperature);
   const thinHot = thickness.min === thickness.max ? hot : at(thickness.min, hottestPlateTemperature);
+  const cases: readonly PierceCase[] = [
+    { prediction: thinHot, thickness: thickness.min, plateTemperature: hottestPlateTemperature },
+    { prediction: hot, thickness: thickness.max, plateTemperature: hottestPlateTemperature },
+    { prediction: cold, thickness: thickness.max, plateTemperature: coldPlateTemperature },
+  ];
   return {
     modelVersion: cold.modelVersion,
     thickness: { min: thickness.min, max: thickness.max },
@@ -101,11 +111,11 @@ export function strategyPrediction(input: StrategyInput): StrategyPrediction {
     cold: outcome(cold, coldPlateTemperature),
     hot: outcome(hot, hottestPlateTemperature),
     craterRadius: Math.max(thinHot.craterRadius, hot.craterRadius, cold.craterRadius),
-    eruption: worstEruption([
-      { prediction: thinHot, thickness: thickness.min, plateTemperature: hottestPlateTemperature },
-      { prediction: hot, thickness: thickness.max, plateTemperature: hottestPlateTemperature },
-      { prediction: cold, thickness: thickness.max, plateTemperature: coldPlateTemperature },
-    ]),
+    eruption: { ...worstEruption(cases), limit: pierceParameters(input.parameters).eruptionLimit },
+    heat: {
+      perLength: Math.max(...cases.map((one) => one.prediction.heatLeft / one.thickness)),
+      duration: cold.routineTime,
+    },
     energy: cold.energy,
     heatLeft: cold.heatLeft,
     oxygenUsed: cold.oxygenUsed,
@@ -139,7 +149,7 @@ type PierceCase = {
   readonly plateTemperature: number;
 };
 
-function worstEruption(cases: readonly PierceCase[]): StrategyEruption {
+function worstEruption(cases: readonly PierceCase[]): Omit<StrategyEruption, 'limit'> {
   const all = cases.flatMap(({ prediction, thickness, plateTemperature }) =>
     prediction.perStage.map(({ eruptionIndex }, stage) => ({
       index: eruptionIndex,

@@ -56,6 +56,14 @@ describe('pulses', () => {
     expect(longer).toBeCloseTo(shorter, 9);
   });
 
+  it('lose less as the pause becomes shorter than the rise, and nothing more at duty 100 %', () => {
+    const rise = 50e-6;
+    const loss = (pause: number) => 1 - pause * 1000 - effectiveDuty(1 - pause * 1000, 1000, rise);
+    expect(loss(2 * rise)).toBeCloseTo(rise * 500, 12);
+    expect(loss(rise / 2)).toBeCloseTo(rise * 250, 12);
+    expect(loss(1e-12)).toBeCloseTo(0, 8);
+  });
+
   it('have no on-time and no energy of their own when the power is continuous', () => {
     expect(pulseTrain({ peakPower: 3000, duty: 1, pulseFrequency: null })).toEqual({
       meanPower: 3000,

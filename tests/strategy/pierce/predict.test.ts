@@ -199,8 +199,9 @@ describe('each of the six quantities acts', () => {
     const gentle = piercePredict(input(held(600, 5)));
     const flat = piercePredict(input(continuous(held(1500, 5))));
     const brute = piercePredict(input(continuous(held(4000, 5))));
-    expect(gentle.perStage[0]?.eruptionIndex ?? 9).toBeLessThan(0.6);
-    expect(brute.perStage[0]?.eruptionIndex ?? 0).toBeGreaterThan(2);
+    expect(gentle.perStage[0]?.eruptionIndex ?? 9).toBeLessThan(PIERCE_DEFAULTS.eruptionLimit);
+    expect(flat.perStage[0]?.eruptionIndex ?? 0).toBeGreaterThan(PIERCE_DEFAULTS.eruptionLimit);
+    expect(brute.perStage[0]?.eruptionIndex ?? 0).toBeGreaterThan(2 * PIERCE_DEFAULTS.eruptionLimit);
     expect(flat.craterRadius).toBeGreaterThan(gentle.craterRadius);
     expect(brute.craterRadius).toBeGreaterThan(flat.craterRadius);
   });

@@ -64,7 +64,7 @@ describe('the prediction of a strategy', () => {
 
   it('sees the eruption of a late, strong stage that only a thick cold plate is still closed for', () => {
     // Through 8 mm hot before the strong stage begins, but not through 20 mm cold.
-    const stages = [...held(950, 5), ...continuous(held(8000, 5))];
+    const stages = [...held(900, 6), ...continuous(held(8000, 5))];
     const prediction = strategyPrediction({
       stages,
       thickness: { min: 0.008, max: 0.02 },
@@ -72,9 +72,9 @@ describe('the prediction of a strategy', () => {
       profile: TEN_KILOWATT,
       nozzle: NOZZLE_1_5,
     });
-    expect(worst(stages, 0.008, HOT)).toBeLessThan(1);
+    expect(worst(stages, 0.008, HOT)).toBeLessThan(prediction.eruption.limit);
     expect(prediction.eruption).toMatchObject({ stage: 1, thickness: 0.02 });
-    expect(prediction.eruption.index).toBeGreaterThan(1);
+    expect(prediction.eruption.index).toBeGreaterThan(prediction.eruption.limit);
     expect(prediction.craterRadius).toBeGreaterThan(at(stages, 0.008, HOT).craterRadius);
   });
 
@@ -199,7 +199,7 @@ describe('what an engineer would say', () => {
     [
       'eruption',
       continuous(held(4000, 20)),
-      /^It erupts: stage 1 comes to \d\.\d+ of what throws the melt out, on 18 mm at 150 °C/,
+      /^It erupts: in stage 1 the melt of a pulse fills \d+\.\d % of the bore, and 7 % throws it out, on 18 mm at 150 °C/,
     ],
   ])('%s: objects with the numbers', (id, stages, sentence) => {
     const found = checked(stages, id);
@@ -225,17 +225,72 @@ describe('what an engineer would say', () => {
     expect(found.sentence).toMatch(/^Stages 5, 6 begin after the hole is through at \d+\.\d s/);
   });
 
-  it('the crater against the lead-in', () => {
-    expect(checked(GOOD, 'crater', { leadInLength: 0.008 })).toMatchObject({
+  it('the lead-in against the crater and the heat', () => {
+    expect(checked(GOOD, 'lead-in', { leadInLength: 0.02 })).toMatchObject({
       state: 'ok',
-      sentence: /stays clear.*warms by \d+ K at most/,
+      sentence: /clears a crater .* warms its end by \d+ K at most/,
     });
-    expect(checked(GOOD, 'crater', { leadInLength: 0.001 })).toMatchObject({ state: 'caution' });
-    expect(checked(GOOD, 'crater', { leadInLength: 0.0005 })).toMatchObject({
+    expect(checked(GOOD, 'lead-in', { leadInLength: 0.003 })).toMatchObject({
+      state: 'caution',
+      sentence: /begins the contour where the pierce warms the plate by up to \d+ K: it should be .* below 250 °C/,
+    });
+    expect(checked(GOOD, 'lead-in', { leadInLength: 0.001 })).toMatchObject({
+      state: 'caution',
+      sentence: /hardly clears/,
+    });
+    expect(checked(GOOD, 'lead-in', { leadInLength: 0.0005 })).toMatchObject({
       state: 'wrong',
-      sentence: /reaches the contour/,
+      sentence: /is shorter than a crater .* contour is damaged/,
     });
+    expect(checked(GOOD, 'lead-in')).toMatchObject({
+      state: 'ok',
+      sentence: /^A lead-in must be at least \d+(\.\d)? mm/,
+    });
+  });
+
+  it('the crater against the widest a plant accepts', () => {
+    const prediction = predicted(GOOD);
+    const crater = (widestCrater: number) =>
+      pierceChecks({ stages: GOOD, prediction, profile: TEN_KILOWATT, widestCrater }).find(({ id }) => id === 'crater');
+    expect(crater(prediction.craterRadius)).toMatchObject({ state: 'ok', sentence: /at most the .* accepted/ });
+    expect(crater(0.0005)).toMatchObject({ state: 'wrong', sentence: /more than the 1 mm accepted/ });
     expect(checked(GOOD, 'crater')).toMatchObject({ state: 'ok' });
+  });
+
+  it.each<[string, (first: Stage, second: Stage) => readonly Stage[], RegExp]>([
+    [
+      'mean power',
+      (a, b) => [a, { ...b, from: { ...b.from, peakPower: a.to.peakPower * 2 } }],
+      /^From stage 1 to stage 2 mean power jumps from .* kW to .* kW, more than the melt bears at once: ramp it\.$/,
+    ],
+    [
+      'the nozzle',
+      (a, b) => [a, { ...b, from: { ...b.from, standoff: a.to.standoff + 0.005 } }],
+      /the nozzle jumps from 8 mm to 13 mm above the plate/,
+    ],
+    [
+      'the focus',
+      (a, b) => [a, { ...b, from: { ...b.from, focusPosition: -0.001 } }],
+      /the focus jumps from \+5 mm to −1 mm/,
+    ],
+    [
+      'oxygen',
+      (a, b) => [a, { ...b, from: { ...b.from, oxygenPressure: 2e5 } }],
+      /oxygen jumps from 0\.5 bar to 2 bar/,
+    ],
+  ])('a jump of %s from one stage to the next', (_, changed, sentence) => {
+    const [first, second, ...others] = GOOD;
+    if (first === undefined || second === undefined) throw new Error('no stages');
+    expect(checked([...changed(first, second), ...others], 'jump')).toMatchObject({
+      state: 'caution',
+      stages: [1],
+      sentence,
+    });
+    expect(checked(GOOD, 'jump').state).toBe('ok');
+  });
+
+  it('less power from one stage to the next is no jump', () => {
+    expect(checked([...held(3000, 5), ...held(900, 20)], 'jump').state).toBe('ok');
   });
 
   it('a dial in its own numbers', () => {

@@ -63,6 +63,7 @@ export const PLAIN: Partial<PierceParameters> = {
   burntShare: 0,
   expulsionHeat: 12e9 / STEEL_DENSITY - meltingEnthalpy(293.15),
   conductivity: 135 / (4 * 0.75e-3 * (1809 - 293.15)),
+  deepConduction: 0,
   wallShare: 0,
   pauseLoss: 0,
 };
