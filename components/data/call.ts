@@ -45,11 +45,6 @@ export async function apiCall<E extends Endpoint>(endpoint: E, options: CallOpti
   return parsed.data as AnswerOf<E>; // the endpoint's own schema has just said so
 }
 
-/** The bytes of an endpoint that answers with a file. */
-export async function apiBytes<E extends Endpoint>(endpoint: E, options: CallOptions<E>): Promise<Blob> {
-  return (await send(endpoint, options)).blob();
-}
-
 /** Address of a GET endpoint, for an image or a download. */
 export function apiAddress<E extends Endpoint>(endpoint: E, options: { query?: QueryOf<E> } & Params<E>): string {
   return addressOf(endpoint, options);

@@ -1,6 +1,6 @@
 import type { Href } from 'expo-router';
 import { momentText } from '@/components/text/moments.ts';
-import { eventText, recordText } from '@/components/text/record.ts';
+import { eventText, recordText, subjectText } from '@/components/text/record.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import { TextLink } from '@/components/ui/link.tsx';
@@ -24,7 +24,7 @@ export function EntryRow({ entry }: { readonly entry: RecordEntry }) {
           <Small>{momentText(entry.at)}</Small>
           {page === null ? null : (
             <Small>
-              <TextLink href={page}>{`${recordText.open}: ${entry.subject.kind}`}</TextLink>
+              <TextLink href={page}>{`${recordText.open}: ${subjectText(entry.subject.kind)}`}</TextLink>
             </Small>
           )}
           <details>

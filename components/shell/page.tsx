@@ -32,6 +32,16 @@ export function Page({
   readonly estimates?: boolean;
 }) {
   const { wide } = useLayout();
+  const first = (
+    <View key="first" style={{ flexGrow: 1, flexShrink: 1, flexBasis: wide ? 0 : 'auto', minWidth: 0, gap: space.l }}>
+      {children}
+    </View>
+  );
+  const second = (
+    <View key="second" style={{ width: wide ? 380 : '100%', gap: space.l }}>
+      {aside}
+    </View>
+  );
   return (
     <View
       style={{
@@ -66,17 +76,9 @@ export function Page({
       {aside === undefined ? (
         children
       ) : (
-        <View
-          style={{
-            flexDirection: wide ? 'row' : asideFirst ? 'column-reverse' : 'column',
-            gap: wide ? space.xl : space.l,
-            alignItems: 'stretch',
-          }}
-        >
-          <View style={{ flexGrow: 1, flexShrink: 1, flexBasis: wide ? 0 : 'auto', minWidth: 0, gap: space.l }}>
-            {children}
-          </View>
-          <View style={{ width: wide ? 380 : '100%', gap: space.l }}>{aside}</View>
+        <View style={{ flexDirection: wide ? 'row' : 'column', gap: wide ? space.xl : space.l, alignItems: 'stretch' }}>
+          {/* in the order in which they are read, with keys so that turning a tablet begins nothing afresh */}
+          {asideFirst && !wide ? [second, first] : [first, second]}
         </View>
       )}
       {estimates ? <EstimateNote /> : null}

@@ -3,13 +3,10 @@ export const common = {
   product: 'Cinderpath',
   retry: 'Try again',
   loading: 'Fetching',
-  save: 'Save',
   cancel: 'Cancel',
-  add: 'Add',
   close: 'Close',
   none: '–',
   loadNewest: 'Load the newest',
-  optional: 'may stay empty',
   lostConnection: {
     title: 'No connection',
     detail: 'The server could not be reached. What you typed is kept; try again when the connection is back.',

@@ -40,7 +40,6 @@ export const platesText = {
   identity: 'What it is',
   state: 'How it is',
   correct: 'Save the correction',
-  correctTitle: 'Correct this plate',
   book: 'Book it in',
   saved: 'Saved.',
   cards: 'Its card',

@@ -1,32 +1,32 @@
 /** What was done, in words. An event without its own words is shown by its name. */
 const events: Readonly<Record<string, string>> = {
-  'session.started': 'signed in',
-  'session.ended': 'signed out',
-  'session.plantChosen': 'came to this plant',
-  'person.added': 'added a person',
-  'person.changed': 'changed a person',
-  'person.ended': 'ended a membership',
+  'member.added': 'added a person',
+  'member.changed': 'changed what a person may do',
   'machine.added': 'added a machine',
-  'machine.revised': 'wrote a machine’s revision',
+  'machine.revised': 'wrote a machine’s next revision',
   'nozzle.added': 'added a nozzle',
   'grade.added': 'added a grade',
   'plate.added': 'booked a plate in',
   'plate.changed': 'corrected a plate',
   'strategy.added': 'began a strategy',
-  'revision.drafted': 'began a draft',
+  'revision.begun': 'began a draft',
   'revision.saved': 'saved a draft',
   'revision.submitted': 'handed a revision in',
   'revision.approved': 'approved a revision',
   'revision.returned': 'returned a revision',
   'revision.withdrawn': 'withdrew a revision',
-  'revision.superseded': 'superseded a revision',
+  'revision.superseded': 'put a revision in place of another',
   'part.added': 'kept a part',
   'cornerPlan.added': 'planned corners',
   'cornerPlan.redone': 'planned corners again',
-  'report.added': 'reported trouble',
+  'report.made': 'reported trouble',
   'report.closed': 'closed a report',
-  'request.added': 'asked for a strategy',
+  'request.made': 'asked for a strategy',
 };
+
+/** What an entry is about, in words. */
+const subjects: Readonly<Record<string, string>> = { cornerPlan: 'corner plan', member: 'person' };
+export const subjectText = (kind: string): string => subjects[kind] ?? kind;
 
 export const eventText = (event: string): string => events[event] ?? event;
 

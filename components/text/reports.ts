@@ -12,7 +12,8 @@ export const troubleNames: Record<Report['kind'], string> = {
 export const reportsText = {
   title: 'Reports',
   kinds: 'What goes wrong',
-  kindCount: (open: number, all: number) => (open === 0 ? `${all}` : `${all}, ${open} open`),
+  kindCount: (open: number, all: number) =>
+    open === 0 ? `${all}` : open === all ? `${all} open` : `${all}, ${open} open`,
   open: 'Open',
   closed: 'Closed',
   fetching: 'Fetching the reports',
