@@ -11,7 +11,10 @@ export default function Html({ children }: PropsWithChildren) {
         <meta name="viewport" content="width=device-width, initial-scale=1, viewport-fit=cover" />
         <meta name="theme-color" media="(prefers-color-scheme: light)" content={light.ground} />
         <meta name="theme-color" media="(prefers-color-scheme: dark)" content={night.ground} />
-        <meta name="description" content="Staged pierces and corners for thick plate, approved and found again at the machine." />
+        <meta
+          name="description"
+          content="Staged pierces and corners for thick plate, approved and found again at the machine."
+        />
         <link rel="icon" href="/favicon.ico" sizes="32x32" />
         <link rel="icon" href="/icon.svg" type="image/svg+xml" />
         <link rel="apple-touch-icon" href="/apple-touch-icon.png" />
