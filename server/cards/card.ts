@@ -1,10 +1,11 @@
 import type { Card } from '../../shared/cards.ts';
-import { cardEstimate, type CardEstimate } from '../../shared/prediction.ts';
+import type { CardEstimate } from '../../shared/prediction.ts';
 import type { Plate } from '../../shared/plates.ts';
 import type { Check, StrategyContent } from '../../shared/strategies.ts';
 import { dialForFocus } from '../../strategy/beam/index.ts';
 import type { FocusScale } from '../../strategy/machine.ts';
 import { DEFAULT_RESERVE_RULES } from '../../strategy/pierce/index.ts';
+import { estimatesFor } from './estimates.ts';
 import type { Approved } from './repository.ts';
 
 type Match = Extract<Card['match'], { kind: 'approved' }>;
@@ -31,8 +32,7 @@ export function cardMatch(facts: CardFacts): Match {
     nozzle: { type: nozzle.type, diameter: nozzle.diameter },
     thickness,
   };
-  const cold = cardEstimate(judged);
-  const hot = cardEstimate({ ...judged, plateTemperature: content.hottestPlate });
+  const { cold, hot } = estimatesFor(approval, judged);
   const stages = content.stages.map(({ duration, from, to }) => ({
     duration,
     from: { ...from, dial: dialOf(scale, from) },

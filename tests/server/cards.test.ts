@@ -4,7 +4,7 @@ import { cardEndpoints, requestEndpoints } from '../../shared/cards.ts';
 import { machineEndpoints } from '../../shared/machines.ts';
 import { plateEndpoints } from '../../shared/plates.ts';
 import { cardEstimate } from '../../shared/prediction.ts';
-import { revisionEndpoints } from '../../shared/strategies.ts';
+import { revisionEndpoints, strategyEndpoints } from '../../shared/strategies.ts';
 import { FOUR_KILOWATT, TEN_KILOWATT } from '../support/machines.ts';
 import {
   made,
@@ -210,4 +210,31 @@ describe('a request for a missing strategy', () => {
     const { body: list } = await made(engineer.call(requestEndpoints.list));
     expect(list.items.find(({ id }) => id === body.id)?.answered).toBe(true);
   });
+});
+
+test('two plants whose revisions have the same id each get their own numbers', async () => {
+  const id = newId();
+  const names = [`twin-${id.slice(-6)}-a`, `twin-${id.slice(-6)}-b`];
+  const times: number[] = [];
+  for (const [index, name] of names.entries()) {
+    const twin = await makePlant(server, name);
+    const engineer = await twin.as('engineer');
+    const lead = await twin.as('lead');
+    const stages = twin.content.stages.map((stage) => ({ ...stage, duration: stage.duration * (1 + index) }));
+    const strategyId = newId();
+    await made(
+      engineer.call(strategyEndpoints.add, {
+        body: { id: strategyId, revisionId: id, name, content: { ...twin.content, stages } },
+      }),
+    );
+    const params = { revisionId: id };
+    const { version } = await made(engineer.call(revisionEndpoints.submit, { params, body: {}, version: 1 }));
+    await made(lead.call(revisionEndpoints.approve, { params, body: {}, version }));
+    const { body } = await made(
+      (await twin.as('operator')).call(cardEndpoints.get, { query: { machineId: twin.machineId, tag: twin.plateTag } }),
+    );
+    if (body.match.kind !== 'approved') throw new Error(body.match.why);
+    times.push(body.match.routineTime);
+  }
+  expect(times[1]).toBeCloseTo(2 * (times[0] ?? 0), 9);
 });
