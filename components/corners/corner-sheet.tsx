@@ -6,7 +6,7 @@ import { Button } from '@/components/ui/button.tsx';
 import { Divider } from '@/components/ui/divider.tsx';
 import { Notice } from '@/components/ui/notice.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
-import { Row, Stack } from '@/components/ui/stack.tsx';
+import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Figure, Heading, Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { PlannedCorner, Treatment } from '@/shared/corner-plans.ts';
@@ -54,9 +54,9 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
   return (
     <Panel>
       <Row justify="space-between" wrap={false} align="flex-start">
-        <Row gap="s" wrap={false}>
+        <Row gap="s" wrap={false} grow>
           <TreatmentBadge treatment={corner.treatment} trouble={corner.trouble !== null} size={44} />
-          <Stack gap="hair">
+          <Stack gap="hair" grow>
             <Small>{cornerText.row(number)}</Small>
             <Heading level={2}>{`${treatmentText[corner.treatment]}, ${cornerText.angle(corner.angle)}`}</Heading>
           </Stack>
@@ -68,8 +68,18 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
       <View>
         {facts.map((fact) => (
           <View key={fact.label} style={factRow}>
-            <Small>{fact.label}</Small>
-            {fact.kelvin === undefined ? <Small strong>{fact.text}</Small> : <TemperatureFigure kelvin={fact.kelvin} />}
+            <Cell>
+              <Small>{fact.label}</Small>
+            </Cell>
+            {fact.kelvin === undefined ? (
+              <View style={factText}>
+                <Small strong align="right">
+                  {fact.text}
+                </Small>
+              </View>
+            ) : (
+              <TemperatureFigure kelvin={fact.kelvin} />
+            )}
           </View>
         ))}
       </View>
@@ -119,3 +129,5 @@ const factRow = {
   borderBottomWidth: 1,
   borderBottomColor: roles.rule,
 } as const;
+
+const factText = { flexShrink: 1, maxWidth: '65%' } as const;

@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useRouter } from 'expo-router';
-import { useMemo, useState } from 'react';
+import { useState } from 'react';
 import { PlanForm } from '@/components/corners/plan-form.tsx';
 import { newId } from '@/components/data/call.ts';
 import { useCornerPlanAdd } from '@/components/data/corner-plans.ts';
@@ -9,19 +9,15 @@ import { useActor } from '@/components/shell/actor.tsx';
 import { Page } from '@/components/shell/page.tsx';
 import { common } from '@/components/text/common.ts';
 import { momentText } from '@/components/text/moments.ts';
-import { partsText, sizeText } from '@/components/text/parts.ts';
-import { useLayout } from '@/components/theme/layout.ts';
+import { partsText } from '@/components/text/parts.ts';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { LinkRow, Rows } from '@/components/ui/link-row.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
-import { Sheet } from '@/components/ui/sheet.tsx';
 import { Body, Small } from '@/components/ui/text.tsx';
-import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { Part } from '@/shared/parts.ts';
 import { may } from '@/shared/policy.ts';
-import { contourCorners } from '@/strategy/path/index.ts';
-import { DrawingView } from './drawing-view.tsx';
+import { PartDrawing } from './part-drawing.tsx';
 import { ReadingNotes } from './reading-notes.tsx';
 
 /** Skeleton and plate that planning starts with: what a nest usually leaves around a part. Own choice. */
@@ -50,14 +46,6 @@ export function PartScreen({ id }: { id: string }) {
 
 function PartOf({ part }: { part: Part }) {
   const actor = useActor();
-  const { wide } = useLayout();
-  const system = useUnitSystem();
-  const { reading } = part;
-  const { min, max } = reading.bounds;
-  const corners = useMemo(
-    () => reading.contours.reduce((sum, contour) => sum + contourCorners(contour).length, 0),
-    [reading.contours],
-  );
   const aside = (
     <>
       <Panel title={partsText.plansTitle}>
@@ -83,40 +71,14 @@ function PartOf({ part }: { part: Part }) {
   );
   return (
     <Page title={part.name} eyebrow={partsText.one} aside={aside}>
-      <DrawingView
-        label={partsText.drawing(part.name, reading, system)}
-        contours={reading.contours}
-        open={reading.openChains}
-        height={wide ? 560 : 340}
-      />
-      <Sheet
-        label={part.name}
-        cells={[
-          { label: partsText.block.size, value: sizeText(max.x - min.x, max.y - min.y, system), share: 2 },
-          {
-            label: partsText.block.outlines,
-            value: String(reading.contours.filter(({ role }) => role === 'outer').length),
-          },
-          {
-            label: partsText.block.holes,
-            value: String(reading.contours.filter(({ role }) => role === 'hole').length),
-          },
-          { label: partsText.block.corners, value: String(corners) },
-          {
-            label: partsText.block.unit,
-            value: reading.unit === null ? common.none : partsText.unitOption(reading.unit),
-            share: 1.5,
-          },
-          { label: partsText.block.file, value: part.fileName, share: 2 },
-        ]}
-      />
+      <PartDrawing part={part} />
       <Body>
         <a className="cp-link" href={partFileAddress(part.id)} download={part.fileName}>
           {partsText.download}
         </a>
       </Body>
       <Small>{`${part.addedBy.name}, ${momentText(part.addedAt)}`}</Small>
-      <ReadingNotes reading={reading} />
+      <ReadingNotes reading={part.reading} />
     </Page>
   );
 }

@@ -33,7 +33,7 @@ type SectionPanelProps = {
 
 /** The section with its lanes, and the title block that says what it is of. On a phone one lane at a time. */
 export function SectionPanel({ live, content, machine, nozzle, chosen }: SectionPanelProps) {
-  const { wide } = useLayout();
+  const { wide, width } = useLayout();
   const system = useUnitSystem();
   const [lane, setLane] = useState<LaneName>('meanPower');
   const { prediction } = live;
@@ -58,6 +58,8 @@ export function SectionPanel({ live, content, machine, nozzle, chosen }: Section
       {!wide && (
         <Choice
           label={sectionText.lanes}
+          // four words beside each other need this much
+          kind={width < 372 ? 'list' : 'segments'}
           options={laneNames.map((name) => ({ value: name, label: laneText[name].short }))}
           value={lane}
           onChange={setLane}

@@ -1,8 +1,9 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
-import { strategiesQuery } from '@/components/data/strategies.ts';
+import { strategiesQuery, strategyQuery } from '@/components/data/strategies.ts';
 import { useActor } from '@/components/shell/actor.tsx';
 import { Page } from '@/components/shell/page.tsx';
+import { common } from '@/components/text/common.ts';
 import { strategiesText, thicknessRangeText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
@@ -11,9 +12,10 @@ import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { ButtonLink } from '@/components/ui/link.tsx';
 import { LinkRow, Rows } from '@/components/ui/link-row.tsx';
 import { Mark } from '@/components/ui/mark.tsx';
+import { PressRow } from '@/components/ui/press-row.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
 import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
-import { Heading, Small } from '@/components/ui/text.tsx';
+import { Figure, Heading, Small } from '@/components/ui/text.tsx';
 import { TextField } from '@/components/ui/text-field.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import { may } from '@/shared/policy.ts';
@@ -21,16 +23,44 @@ import type { StrategySummary } from '@/shared/strategies.ts';
 import type { UnitSystem } from '@/strategy/units/index.ts';
 import { Core } from './core.tsx';
 import { StateMark } from './state-mark.tsx';
+import { RevisionRows, StandingSection } from './strategy-parts.tsx';
 
-/** All strategies of the plant, each with its core, where it stands and its reserves. */
+/** All strategies of the plant, each with its core, where it stands and its reserves; on a wide screen the chosen one's section beside. */
 export function StrategiesScreen() {
   const actor = useActor();
+  const { wide } = useLayout();
   const system = useUnitSystem();
   const strategies = useQuery(strategiesQuery());
   const [sought, setSought] = useState('');
+  const [chosen, setChosen] = useState<string | null>(null);
   const mayWrite = actor !== null && may(actor, 'strategy.write');
   const begin = mayWrite && <ButtonLink kind="main" href="/strategies/new" label={strategiesText.new} />;
   const found = (strategies.data ?? []).filter((one) => strategyMatches(one, sought, system));
+  const shown = found.find(({ id }) => id === chosen) ?? found[0];
+
+  const list = (
+    <Stack gap="l">
+      <TextField kind="search" label={strategiesText.search} value={sought} onChange={setSought} />
+      {found.length === 0 ? (
+        <Empty title={strategiesText.noneFound(sought)} />
+      ) : (
+        <Rows label={strategiesText.list}>
+          {found.map((one) => {
+            const core = <Core bands={one.latest.bands} reserve={one.latest.reserveCold} size={48} silent />;
+            return wide ? (
+              <PressRow key={one.id} chosen={one.id === shown?.id} left={core} onPress={() => setChosen(one.id)}>
+                <StrategyFacts strategy={one} system={system} />
+              </PressRow>
+            ) : (
+              <LinkRow key={one.id} href={`/strategies/${one.id}`} left={core}>
+                <StrategyFacts strategy={one} system={system} />
+              </LinkRow>
+            );
+          })}
+        </Rows>
+      )}
+    </Stack>
+  );
 
   return (
     <Page title={strategiesText.title} actions={begin || undefined}>
@@ -39,19 +69,13 @@ export function StrategiesScreen() {
           <Empty title={strategiesText.empty} action={begin}>
             {strategiesText.emptyHint}
           </Empty>
+        ) : wide ? (
+          <Row align="flex-start" wrap={false} gap="xl">
+            <Cell grow={2}>{list}</Cell>
+            <Cell grow={3}>{shown && <StrategyPane key={shown.id} id={shown.id} />}</Cell>
+          </Row>
         ) : (
-          <Stack gap="l">
-            <TextField kind="search" label={strategiesText.search} value={sought} onChange={setSought} />
-            {found.length === 0 ? (
-              <Empty title={strategiesText.noneFound(sought)} />
-            ) : (
-              <Rows label={strategiesText.list}>
-                {found.map((one) => (
-                  <StrategyRow key={one.id} strategy={one} system={system} />
-                ))}
-              </Rows>
-            )}
-          </Stack>
+          list
         )
       ) : strategies.isError ? (
         <ErrorNotice error={strategies.error} onRetry={() => void strategies.refetch()} />
@@ -62,18 +86,37 @@ export function StrategiesScreen() {
   );
 }
 
-function StrategyRow({ strategy, system }: { strategy: StrategySummary; system: UnitSystem }) {
-  const { wide } = useLayout();
-  const { latest, approved } = strategy;
-  const what = (
-    <Stack gap="hair">
-      <Heading level={3}>{`${strategy.gradeGroup}, ${thicknessRangeText(strategy.thickness, system)}`}</Heading>
-      <Small strong>{strategy.machine.name}</Small>
-      <Small>{strategy.name}</Small>
+/** The chosen strategy beside the list: its section and its revisions. */
+function StrategyPane({ id }: { id: string }) {
+  const strategy = useQuery(strategyQuery(id));
+  if (!strategy.data) {
+    return strategy.isError ? (
+      <ErrorNotice error={strategy.error} onRetry={() => void strategy.refetch()} />
+    ) : (
+      <Progress label={common.loading} />
+    );
+  }
+  return (
+    <Stack gap="l">
+      <Row justify="space-between">
+        <Stack grow>
+          <Heading level={2}>{strategy.data.name}</Heading>
+        </Stack>
+        <ButtonLink href={`/strategies/${id}`} label={strategiesText.open} />
+      </Row>
+      <StandingSection strategy={strategy.data} />
+      <RevisionRows strategy={strategy.data} />
     </Stack>
   );
-  const stand = (
+}
+
+function StrategyFacts({ strategy, system }: { strategy: StrategySummary; system: UnitSystem }) {
+  const { latest, approved } = strategy;
+  return (
     <Stack gap="hair">
+      <Figure value={`${strategy.gradeGroup}, ${thicknessRangeText(strategy.thickness, system)}`} />
+      <Small strong>{strategy.machine.name}</Small>
+      <Small>{strategy.name}</Small>
       <StateMark small state={latest.state} detail={strategiesText.revision(latest.number)} />
       {approved && approved.id !== latest.id && <Small>{strategiesText.alsoApproved(approved.number)}</Small>}
       <Small>{strategiesText.reserves(latest.reserveCold, latest.reserveHot)}</Small>
@@ -86,24 +129,6 @@ function StrategyRow({ strategy, system }: { strategy: StrategySummary; system: 
         </Row>
       )}
     </Stack>
-  );
-  return (
-    <LinkRow
-      href={`/strategies/${strategy.id}`}
-      left={<Core bands={latest.bands} reserve={latest.reserveCold} size={48} silent />}
-    >
-      {wide ? (
-        <Row align="flex-start" wrap={false} gap="xl">
-          <Cell grow={3}>{what}</Cell>
-          <Cell grow={2}>{stand}</Cell>
-        </Row>
-      ) : (
-        <Stack gap="xs">
-          {what}
-          {stand}
-        </Stack>
-      )}
-    </LinkRow>
   );
 }
 

@@ -95,6 +95,7 @@ export const partsText = {
   },
   corners: (number: number) => `${number}`,
   download: 'Download the drawing as it came',
+  open: 'Open the part',
   plansTitle: 'Corner plans',
   noPlans: 'No corner plan yet.',
   planRow: (strategy: string, number: number) => `${strategy}, revision ${number}`,

@@ -341,7 +341,7 @@ export const strategiesText = {
   tail: 'Revisions, the newest first',
   one: 'Strategy',
   changed: (when: string) => `Changed ${when}`,
-  block: { plate: 'plate', machine: 'machine', approved: 'approved', none: 'none' },
+  open: 'Open the strategy',
   newTitle: 'New strategy',
   begin: 'Begin the draft',
   beyond:

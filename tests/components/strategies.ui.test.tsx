@@ -1,6 +1,6 @@
 import { screen, waitFor } from '@testing-library/react';
 import { userEvent } from '@testing-library/user-event';
-import { afterEach, describe, expect, it, vi } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { StrategiesScreen, strategyMatches } from '@/components/pierce/strategies-screen.tsx';
 import { StrategyNewScreen } from '@/components/pierce/strategy-new-screen.tsx';
 import type { StrategySummary } from '@/shared/strategies.ts';
@@ -9,7 +9,14 @@ import { router } from '../support/expo-router.tsx';
 import { ids, json, offline, serveWith, show } from '../support/page.tsx';
 import { grades, machine, nozzle, revisionOf } from './strategy-fixtures.ts';
 
-afterEach(() => vi.unstubAllGlobals());
+const usualWidth = window.innerWidth;
+beforeEach(() => {
+  window.innerWidth = 390;
+});
+afterEach(() => {
+  window.innerWidth = usualWidth;
+  vi.unstubAllGlobals();
+});
 
 const summary = (more: Partial<StrategySummary> = {}): StrategySummary => ({
   id: ids.strategy,
@@ -45,6 +52,29 @@ describe('the list of strategies', () => {
     ]) {
       expect(row.textContent).toContain(words);
     }
+  });
+
+  it('shows the chosen strategy’s section beside the list on a wide screen', async () => {
+    window.innerWidth = 1440;
+    const second = summary({ id: ids.other, name: 'Lifting lug', gradeGroup: 'S275' });
+    serveWith(({ path }) => {
+      if (path === '/api/strategies') return json({ items: [summary(), second] });
+      const lug = path.endsWith(ids.other);
+      return json({
+        id: lug ? ids.other : ids.strategy,
+        version: 2,
+        name: lug ? 'Lifting lug' : 'Bearing plate',
+        revisions: [revisionOf()],
+      });
+    });
+    show(<StrategiesScreen />, 'engineer');
+    expect(await screen.findByRole('heading', { name: 'Bearing plate' })).toBeTruthy();
+    expect(screen.getByRole('img', { name: /^Section of a 22 mm plate/ })).toBeTruthy();
+    await userEvent.click(screen.getByRole('button', { name: /S275, 18–22 mm/ }));
+    expect(await screen.findByRole('heading', { name: 'Lifting lug' })).toBeTruthy();
+    expect(screen.getByRole('link', { name: 'Open the strategy' }).getAttribute('href')).toBe(
+      `/strategies/${ids.other}`,
+    );
   });
 
   it('finds by words and by a thickness that the range holds', () => {
