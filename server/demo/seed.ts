@@ -60,7 +60,8 @@ export async function seedDemo(env: Environment): Promise<void> {
   const door = await listenPrivately(app);
   try {
     await foundPlants(ownerUrl, await passwords.hash(password));
-    for (const plant of ['quay', 'upland'] as const) await fillPlant(plant, door.base, password);
+    // The plate hall last: who works in both is met there, since signing in leads to where one was last.
+    for (const plant of ['upland', 'quay'] as const) await fillPlant(plant, door.base, password);
   } finally {
     await door.close();
     await Promise.all([close(), passwords.close(), drawings.close()]);
