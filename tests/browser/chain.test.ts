@@ -109,7 +109,7 @@ describe('the whole chain, walked by four people', () => {
     await programmer.page.goto('/parts/new');
     await programmer.page.getByLabel('Drawing', { exact: true }).setInputFiles(chain.drawing);
     await programmer.page.getByLabel('Name of the part').fill(chain.part);
-    await programmer.page.getByRole('button', { name: 'Keep the part' }).click();
+    await programmer.page.getByRole('button', { name: 'Keep as a part' }).click();
     await programmer.page.waitForURL(/\/parts\/[0-9a-f-]{36}$/);
     await programmer.page
       .getByLabel('Strategy revision')
@@ -218,8 +218,9 @@ describe('the whole chain, walked by four people', () => {
     );
     expect(reports).toEqual([{ words, pictured: true }]);
     const events = await one(
-      `select e.event from record e join strategies s on e.facts ->> 'strategyId' = s.id::text or e.subject_id = s.id
-       where s.name = $1 order by e.sequence`,
+      `select e.event from record e where e.subject_id in (
+         select r.id::text from strategy_revisions r join strategies s on s.id = r.strategy_id where s.name = $1
+       ) order by e.sequence`,
       [strategy],
     );
     expect(events.map(({ event }) => event)).toEqual(
@@ -248,7 +249,7 @@ describe('the whole chain, walked by four people', () => {
   async function askFor(page: Page, tag: string) {
     await page.goto('/at-the-machine');
     const machine = page.getByRole('button', { name: 'No. 2, 10 kW' });
-    const field = page.getByLabel('Plate tag');
+    const field = page.getByRole('textbox', { name: 'Plate tag' });
     await machine.or(field).first().waitFor();
     if (await machine.isVisible()) await machine.click();
     await field.fill(tag);
@@ -257,5 +258,5 @@ describe('the whole chain, walked by four people', () => {
 });
 
 async function choose(page: Page, label: string, option: string) {
-  await page.getByRole('group', { name: label }).getByText(option, { exact: true }).click();
+  await page.getByRole('group', { name: label }).getByRole('radio', { name: option, exact: true }).check();
 }
