@@ -23,6 +23,7 @@ import { Body, Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import { treatments, type CornerPlan, type Treatment } from '@/shared/corner-plans.ts';
 import { may } from '@/shared/policy.ts';
+import type { Point } from '@/strategy/path/index.ts';
 import { quantityText } from '@/strategy/units/index.ts';
 import { CornerList } from './corner-list.tsx';
 import { CornerSheet } from './corner-sheet.tsx';
@@ -69,7 +70,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
   const marks = plan.corners.map((corner) => ({
     id: corner.id,
     at: corner.at,
-    off: inward.get(corner.id),
+    off: badgeOff(inward.get(corner.id), corner.angle),
     weight: corner.trouble !== null ? 2 : corner.treatment === 'leave' ? 0 : 1,
     draw: <BadgeShape treatment={corner.treatment} trouble={corner.trouble !== null} chosen={corner.id === chosen} />,
   }));
@@ -185,6 +186,12 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
       <EstimateNote />
     </Page>
   );
+}
+
+/** The narrower the tip, the further in its badge stands, so that it lies on the steel; within twice the usual distance. */
+function badgeOff(inward: Point | undefined, angle: number): Point | undefined {
+  const further = Math.min(2, Math.max(1, Math.SQRT1_2 / Math.sin(Math.min(angle, Math.PI) / 2)));
+  return inward && { x: inward.x * further, y: inward.y * further };
 }
 
 function Legend() {

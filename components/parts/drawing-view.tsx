@@ -43,7 +43,7 @@ type DrawingViewProps = {
 
 /** Drawing units an own metre of path text holds: millimetres keep three digits at a micrometre. */
 const textScale = 1000;
-const markOff = 17;
+const markOff = 22;
 
 /** The part as a technical drawing: outline, section hatch, holes, centre lines; moved and enlarged by touch, wheel, keys and buttons. */
 export function DrawingView({

@@ -29,9 +29,9 @@ export function usePanZoom(
   const fitView = windowFit(box, frame, fitMargin);
   const view = moved ?? fitView;
   const bounds = { least: fitView.scale * 0.5, most: Math.max(fitView.scale * 60, 40_000) };
-  const latest = useRef({ view, frame, bounds, onTap });
+  const latest = useRef({ view, moved, frame, bounds, onTap });
   useEffect(() => {
-    latest.current = { view, frame, bounds, onTap };
+    latest.current = { view, moved, frame, bounds, onTap };
   });
 
   useEffect(() => {
@@ -39,6 +39,7 @@ export function usePanZoom(
     if (!element) return undefined;
     const pointers = new Map<number, Point>();
     let travelled = 0;
+    let before: ViewWindow | null = null;
     const show = (next: ViewWindow) => {
       latest.current = { ...latest.current, view: next };
       setMoved(next);
@@ -54,14 +55,17 @@ export function usePanZoom(
     const middle = () => ({ x: latest.current.frame.width / 2, y: latest.current.frame.height / 2 });
 
     const down = (event: PointerEvent) => {
-      if (pointers.size === 0) travelled = 0;
+      if (pointers.size === 0) {
+        travelled = 0;
+        before = latest.current.moved;
+      }
       pointers.set(event.pointerId, placeOf(event));
     };
     const move = (event: PointerEvent) => {
-      const before = pointers.get(event.pointerId);
-      if (!before) return;
+      const was = pointers.get(event.pointerId);
+      if (!was) return;
       const now = placeOf(event);
-      const step = Math.hypot(now.x - before.x, now.y - before.y);
+      const step = Math.hypot(now.x - was.x, now.y - was.y);
       if (step === 0) return;
       travelled += step;
       if (travelled > tapSlack && !element.hasPointerCapture(event.pointerId)) {
@@ -71,12 +75,12 @@ export function usePanZoom(
       pointers.set(event.pointerId, now);
       if (travelled <= tapSlack) return;
       if (!other) {
-        show(windowPan(latest.current.view, now.x - before.x, now.y - before.y));
+        show(windowPan(latest.current.view, now.x - was.x, now.y - was.y));
         return;
       }
       const apart = Math.hypot(now.x - other.x, now.y - other.y);
-      const wasApart = Math.hypot(before.x - other.x, before.y - other.y);
-      show(windowPan(latest.current.view, (now.x - before.x) / 2, (now.y - before.y) / 2));
+      const wasApart = Math.hypot(was.x - other.x, was.y - other.y);
+      show(windowPan(latest.current.view, (now.x - was.x) / 2, (now.y - was.y) / 2));
       if (wasApart > 0) zoom({ x: (now.x + other.x) / 2, y: (now.y + other.y) / 2 }, apart / wasApart);
     };
     const up = (event: PointerEvent) => {
@@ -84,7 +88,10 @@ export function usePanZoom(
       if (known && pointers.size === 0 && travelled <= tapSlack)
         latest.current.onTap(placeOf(event), latest.current.view);
     };
-    const cancel = (event: PointerEvent) => pointers.delete(event.pointerId);
+    // the browser has taken the finger to scroll the page: then the drawing was not meant
+    const cancel = (event: PointerEvent) => {
+      if (pointers.delete(event.pointerId) && pointers.size === 0) setMoved(before);
+    };
     const wheel = (event: WheelEvent) => {
       // does the page need the wheel to scroll? then the drawing takes it only once it was clicked, or with the control key
       const page = document.documentElement;

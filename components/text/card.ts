@@ -7,7 +7,6 @@ type Approved = Extract<Card['match'], { kind: 'approved' }>;
 export const atTheMachineText = {
   title: 'At the machine',
   machine: 'Which machine?',
-  standingAt: 'machine',
   otherMachine: 'Another machine',
   noMachines: 'No machine yet',
   noMachinesHint: 'An engineer adds the machine first.',
@@ -38,7 +37,6 @@ export const cardText = {
     `measured ${quantityText(micrometres * 1e-6, 'length', system).text}`,
   approved: (number: number) => `Approved, revision ${number}`,
   approvedBy: (who: string, when: string) => `by ${who}, ${when}`,
-  strategy: (name: string) => `Strategy: ${name}`,
   asOf: (when: string, ago: string) => `as of ${when}, ${ago}`,
   kept: {
     title: 'No connection: this card was kept on this device',
@@ -60,19 +58,16 @@ export const cardText = {
     oxygen: (pascal: number, system: UnitSystem) =>
       `Oxygen on, ready for up to ${quantityText(pascal, 'pressure', system).text}`,
   },
-  stages: 'The pierce',
   stage: (number: number) => `Stage ${number}`,
   dial: 'focus, number to type',
   standoff: 'standoff',
   peak: 'peak power',
   duty: 'duty',
-  mean: 'mean power',
   pulses: 'pulses',
   continuous: 'continuous',
   oxygen: 'oxygen',
   feed: 'feed',
   kerf: 'kerf width',
-  routine: 'whole pierce',
   cut: 'The cut',
   corners: 'Corner plans',
   noCorners: 'No corner plan uses this revision.',
@@ -86,7 +81,6 @@ export const cardText = {
   reserve: (kelvin: number, system: UnitSystem) =>
     `reserve, plate at ${quantityText(kelvin, 'temperature', system).text}`,
   notThrough: 'not through',
-  crater: 'crater radius',
   wrong: 'It went wrong',
   none: {
     title: 'No approved strategy',

@@ -52,7 +52,6 @@ export const cornerText = {
     `${name}, revision ${number} (${state.toLowerCase()})`,
   overrides: (number: number) => `${count(number, 'corner')} chosen by hand`,
   clearOverrides: 'Leave all corners to the rules',
-  badge: 'Signs',
   trouble: 'Trouble',
   block: {
     part: 'part',

@@ -93,7 +93,6 @@ export const partsText = {
     file: 'file',
     added: 'added',
   },
-  corners: (number: number) => `${number}`,
   download: 'Download the drawing as it came',
   open: 'Open the part',
   plansTitle: 'Corner plans',

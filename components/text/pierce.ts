@@ -23,7 +23,6 @@ export const laneText: Readonly<Record<LaneName, { name: string; short: string }
 
 export const sectionText = {
   depth: 'depth',
-  time: 'time',
   stage: (number: number) => [`stage ${number}`, `${number}`],
   lanes: 'Show under the section',
   /** Wordings of the dimension lines, the longest that fits is drawn. */
@@ -48,7 +47,11 @@ export const sectionText = {
 
 /** One plate temperature of the prediction in a sentence. */
 export function conditionWords(plate: string, condition: Condition): string {
-  if (condition.breakthrough.kind === 'none') return `${plate}: not through. ${condition.breakthrough.why}`;
+  if (condition.breakthrough.kind === 'none') {
+    // most reasons begin with the words themselves
+    const why = condition.breakthrough.why.replace(/^not through[:.,]?\s*/i, '');
+    return `${plate}: not through. ${why.charAt(0).toUpperCase()}${why.slice(1)}`;
+  }
   const through = `${plate}: through after ${secondsText(condition.breakthrough.value)}`;
   return condition.reserve.kind === 'ok'
     ? `${through}, reserve ${reserveText(condition.reserve.value)}.`
