@@ -66,7 +66,7 @@ export const cutConditionsSchema = z
 
 export const cornerRulesSchema = z.strictObject({
   treatBelowAngle: quantity(1 * degree, 180 * degree, '1 to 180°'),
-  returnTemperatureLimit: quantity(kelvin + 20, kelvin + 1200, '20 to 1200 °C'),
+  returnExcessLimit: quantity(1, 1200, '1 to 1200 K'),
   loop: z
     .strictObject({
       allowed: z.boolean(),
@@ -79,7 +79,11 @@ export const cornerRulesSchema = z.strictObject({
       path: ['maxExtension'],
       error: 'The longest extension must not be below the shortest.',
     }),
-  dwell: z.strictObject({ allowed: z.boolean(), maxDuration: quantity(0.1, 120, '0.1 to 120 s') }),
+  dwell: z.strictObject({
+    allowed: z.boolean(),
+    maxDuration: quantity(0.1, 120, '0.1 to 120 s'),
+    restart: quantity(0, 60, '0 to 60 s'),
+  }),
 }) satisfies z.ZodType<CornerRules>;
 
 export const thicknessRangeSchema = z

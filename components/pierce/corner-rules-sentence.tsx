@@ -43,14 +43,15 @@ export function CornerRulesSentence() {
         />{' '}
         {cornerRulesText.above}{' '}
         <DraftNumber
-          field="cornerRules.returnTemperatureLimit"
-          label={cornerRulesText.label.returnTemperatureLimit}
-          dimension="temperature"
-          value={rules.returnTemperatureLimit}
-          onValue={(returnTemperatureLimit) =>
-            change((before) => ({ ...before, returnTemperatureLimit }), 'cornerRules.returnTemperatureLimit')
+          field="cornerRules.returnExcessLimit"
+          label={cornerRulesText.label.returnExcessLimit}
+          dimension="temperatureDifference"
+          value={rules.returnExcessLimit}
+          onValue={(returnExcessLimit) =>
+            change((before) => ({ ...before, returnExcessLimit }), 'cornerRules.returnExcessLimit')
           }
-        />
+        />{' '}
+        {cornerRulesText.hotter}
       </Sentence>
       <Tick
         label={cornerRulesText.loops}
@@ -83,6 +84,16 @@ export function CornerRulesSentence() {
                 (before) => ({ ...before, dwell: { ...before.dwell, maxDuration } }),
                 'cornerRules.dwell.maxDuration',
               )
+            }
+          />{' '}
+          {cornerRulesText.restart}{' '}
+          <DraftNumber
+            field="cornerRules.dwell.restart"
+            label={cornerRulesText.label.restart}
+            dimension="time"
+            value={rules.dwell.restart}
+            onValue={(restart) =>
+              change((before) => ({ ...before, dwell: { ...before.dwell, restart } }), 'cornerRules.dwell.restart')
             }
           />
         </Sentence>

@@ -61,7 +61,7 @@ function firstCut(profile: MachineProfile, thickness: number): CutConditions {
 function firstCornerRules(profile: MachineProfile): CornerRules & StrategyContent['cornerRules'] {
   return {
     treatBelowAngle: (120 * Math.PI) / 180,
-    returnTemperatureLimit: 273.15 + 250,
+    returnExcessLimit: 70,
     loop: {
       allowed: true,
       radius: Math.max(5e-3, profile.smallestArc),
@@ -69,7 +69,7 @@ function firstCornerRules(profile: MachineProfile): CornerRules & StrategyConten
       maxExtension: 15e-3,
       clearance: 2e-3,
     },
-    dwell: { allowed: true, maxDuration: 6 },
+    dwell: { allowed: true, maxDuration: 6, restart: 2 },
   };
 }
 

@@ -182,7 +182,8 @@ export const cutText = {
 
 export const cornerRulesText = {
   below: 'Treat a corner below',
-  above: 'inside the part when the cut comes back to more than',
+  above: 'inside the part when the cut comes back to a tip more than',
+  hotter: 'hotter than a straight edge.',
   loops: 'Loops may be used',
   radius: 'Arc of radius',
   extension: ', run on past the corner by',
@@ -190,14 +191,16 @@ export const cornerRulesText = {
   clearance: ', clear of everything by',
   dwells: 'Dwells may be used',
   longest: 'Wait at most',
+  restart: '; getting the cut going again costs',
   label: {
     treatBelowAngle: 'Corners below this angle are treated',
-    returnTemperatureLimit: 'Highest return temperature left untreated',
+    returnExcessLimit: 'Excess over a straight edge left untreated',
     radius: 'Radius of the loop',
     minExtension: 'Shortest run past the corner',
     maxExtension: 'Longest run past the corner',
     clearance: 'Clearance of the loop',
     maxDuration: 'Longest dwell',
+    restart: 'Restart after a dwell',
   },
 } as const;
 

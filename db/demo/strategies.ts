@@ -64,7 +64,7 @@ function content(plant: string, wish: Wish): StrategyContent {
     },
     cornerRules: {
       treatBelowAngle: radians(100),
-      returnTemperatureLimit: celsius(130),
+      returnExcessLimit: 70,
       loop: {
         allowed: true,
         radius: wish.loopRadius / 1000,
@@ -72,7 +72,7 @@ function content(plant: string, wish: Wish): StrategyContent {
         maxExtension: 0.03,
         clearance: 0.002,
       },
-      dwell: { allowed: true, maxDuration: 12 },
+      dwell: { allowed: true, maxDuration: 12, restart: 2 },
     },
   };
 }

@@ -40,7 +40,7 @@ export async function computePlan(
   });
   const chosen = new Set(Object.keys(choices.overrides));
   return {
-    limit: content.cornerRules.returnTemperatureLimit,
+    limit: plan.limit,
     corners: plan.corners.map((corner) => presentCorner(corner, chosen)),
     totals: presentTotals(
       plan,

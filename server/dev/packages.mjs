@@ -8,7 +8,7 @@ const stamp = path.join(root, 'node_modules', '.installed-from');
 
 /** Installs the packages when the lock file changed since the last time (or never was). Node built-ins only. */
 export function ensurePackages() {
-  const wanted = `${sourcesHash(['package.json', 'package-lock.json'])} node ${process.versions.modules}`;
+  const wanted = `${sourcesHash(['package-lock.json'])} node ${process.versions.modules}`;
   if (fs.existsSync(stamp) && fs.readFileSync(stamp, 'utf8') === wanted) return;
   const since = Date.now();
   say('Installing packages from the lock file: one to two minutes the first time …');

@@ -48,6 +48,8 @@ export type Context = {
   readonly field: ObstacleField;
   readonly plate: Box | Contour | null;
   readonly straightEdge: number;
+  /** What the straight edge and the excess allowed make, K. */
+  readonly limit: number;
   readonly placed: { name: string; loop: Loop }[];
 };
 

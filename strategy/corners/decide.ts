@@ -13,9 +13,9 @@ export function decide(
   asked: CornerTreatment | undefined,
   sharp: boolean,
   rules: CornerRules,
+  limit: number,
 ): Decision {
-  const limit = rules.returnTemperatureLimit;
-  const automatic = decideByRule(found, candidates, sharp, rules);
+  const automatic = decideByRule(found, candidates, sharp, rules, limit);
   if (!asked) return automatic;
   const wanted = candidates.find((c) => c.treatment === asked);
   if (!wanted?.fits) {
@@ -33,9 +33,14 @@ export function decide(
   };
 }
 
-function decideByRule(found: Case, candidates: readonly Candidate[], sharp: boolean, rules: CornerRules): Decision {
-  const limit = rules.returnTemperatureLimit;
-  const leave = candidates.find((c) => c.treatment === 'leave') ?? leaveOption(found, rules);
+function decideByRule(
+  found: Case,
+  candidates: readonly Candidate[],
+  sharp: boolean,
+  rules: CornerRules,
+  limit: number,
+): Decision {
+  const leave = candidates.find((c) => c.treatment === 'leave') ?? leaveOption(found, limit);
   // concave? More steel than a straight edge carries the heat away
   if (!found.corner.convex)
     return { chosen: leave, why: 'the corner is concave: more steel than a straight edge carries the heat away' };

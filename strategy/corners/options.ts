@@ -9,18 +9,17 @@ import { pointAdd, pointScale, pointSubtract } from '../path/point.ts';
 import { lineBetween } from '../path/segment.ts';
 import type { Candidate, Case, Context, CornerPlanRequest, CornerTreatment } from './case.ts';
 import { leastDwell } from './dwell.ts';
-import type { CornerRules } from './rules.ts';
 import { celsius, millimetres, seconds } from './say.ts';
 
 /** Leaving the corner as it is. */
-export function leaveOption({ without }: Case, rules: CornerRules): Candidate {
-  const under = without <= rules.returnTemperatureLimit;
+export function leaveOption({ without }: Case, limit: number): Candidate {
+  const under = without <= limit;
   return {
     treatment: 'leave',
     fits: true,
     returnWith: without,
     addedTime: 0,
-    why: `untreated the tip returns at ${celsius(without)}, ${under ? 'under' : 'over'} the limit of ${celsius(rules.returnTemperatureLimit)}`,
+    why: `untreated the tip returns at ${celsius(without)}, ${under ? 'under' : 'over'} the limit of ${celsius(limit)}`,
   };
 }
 
@@ -100,24 +99,24 @@ function loopAddedTime(corner: LoopCorner, loop: Loop, { cut, profile }: CornerP
   return pathTime([edgeIn, ...loop.segments, edgeOut], drive).time - pathTime([edgeIn, edgeOut], drive).time;
 }
 
-/** The least wait that brings the tip under the limit, or the longest allowed. */
+/** The least wait that brings the tip under the limit, or the longest allowed; the restart adds time, and its cooling is left out. */
 export function dwellOption(found: Case, context: Context): Candidate {
   const { rules, cut, plateTemperature, properties } = context.request;
   if (!rules.dwell.allowed) return refused('dwell', 'the corner rules of this strategy allow no dwell');
   const { onPath, before } = found;
   const after = (duration: number) =>
     returnOf({ corner: onPath, before, treatment: { kind: 'dwell', duration }, cut, plateTemperature, properties });
-  const duration = leastDwell(after, rules.returnTemperatureLimit, rules.dwell.maxDuration);
+  const duration = leastDwell(after, context.limit, rules.dwell.maxDuration);
   if (duration === 0) return refused('dwell', 'the tip is under the limit without waiting');
   const returnWith = after(duration);
   return {
     treatment: 'dwell',
     fits: true,
     returnWith,
-    addedTime: duration,
+    addedTime: duration + rules.dwell.restart,
     why:
-      returnWith <= rules.returnTemperatureLimit
-        ? `after waiting ${seconds(duration)} the tip is at ${celsius(returnWith)}`
+      returnWith <= context.limit
+        ? `after waiting ${seconds(duration)} the tip is at ${celsius(returnWith)}; ${seconds(rules.dwell.restart)} more get the cut going again`
         : `after ${seconds(duration)}, the longest wait allowed, the tip is still at ${celsius(returnWith)}`,
     dwell: duration,
   };

@@ -67,7 +67,12 @@ export type CornerPlanTotals = {
   readonly hottestUntreated: number | null;
 };
 
-export type CornerPlan = { readonly corners: readonly PlannedCorner[]; readonly totals: CornerPlanTotals };
+export type CornerPlan = {
+  /** A straight edge's return temperature and the excess allowed over it, K. */
+  readonly limit: number;
+  readonly corners: readonly PlannedCorner[];
+  readonly totals: CornerPlanTotals;
+};
 
 /** Path before a corner whose heat is counted, m. */
 const countedPath = 0.3;
@@ -75,24 +80,26 @@ const countedPath = 0.3;
 /**
  * The corner plan: for every corner of the contours the treatment it gets, why, the return temperatures (K) and the added time (s).
  *
- * A tip below the rules' angle whose return temperature is above the limit is treated; of what fits and stays under the limit, the least added time wins.
+ * A tip below the rules' angle that returns hotter than a straight edge by more than the rules' excess is treated; of what fits and stays under the limit, the least added time wins.
  * What the programmer asked for is followed when it fits; a loop that does not fit stays refused, with the reason. Corners are taken in the order of the
  * contours, and each loop placed is an obstacle to the next. Throws RangeError for a thickness, feed or temperature that is not positive.
  */
 export function cornerPlan(request: CornerPlanRequest): CornerPlan {
   const { contours, cut, plateTemperature, thickness } = request;
   if (!(thickness > 0)) throw new RangeError(`thickness ${thickness} m is outside (0, ∞)`);
+  const straightEdge = straightEdgeReturn(cut, plateTemperature, request.properties);
   const context: Context = {
     request,
     field: obstacleField(contours.map(({ id, contour, role }) => ({ id, contour, name: `${roleName[role]} ${id}` }))),
     plate: plateOf(request.plate),
-    straightEdge: straightEdgeReturn(cut, plateTemperature, request.properties),
+    straightEdge,
+    limit: straightEdge + request.rules.returnExcessLimit,
     placed: [],
   };
   const corners = contours.flatMap((contour) =>
     contourCorners(contour.contour).map((corner) => planCorner(contour, corner, context)),
   );
-  return { corners, totals: totalsOf(corners, request) };
+  return { limit: context.limit, corners, totals: totalsOf(corners, request) };
 }
 
 const roleName = { outer: 'outline', hole: 'hole', island: 'island' } as const;
@@ -113,9 +120,9 @@ function planCorner(contour: PlanContour, corner: Corner, context: Context): Pla
 
   const asked = overrides?.[id];
   const sharp = corner.convex && corner.angle < rules.treatBelowAngle;
-  const candidates: Candidate[] = [leaveOption(found, rules)];
+  const candidates: Candidate[] = [leaveOption(found, context.limit)];
   if (sharp || (asked && asked !== 'leave')) candidates.push(loopOption(found, context), dwellOption(found, context));
-  const { chosen, why, problem } = decide(found, candidates, asked, sharp, rules);
+  const { chosen, why, problem } = decide(found, candidates, asked, sharp, rules, context.limit);
   if (chosen.loop) context.placed.push({ name: `the loop of corner ${id}`, loop: chosen.loop });
 
   const returnWith = chosen.returnWith ?? without;

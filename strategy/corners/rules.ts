@@ -2,8 +2,8 @@
 export type CornerRules = {
   /** Corners whose angle inside the part is below this are treated, rad. */
   readonly treatBelowAngle: number;
-  /** Return temperature above which a corner is treated, K. */
-  readonly returnTemperatureLimit: number;
+  /** How much hotter than a straight edge the tip may be when the cut comes back to it, before it is treated, K. */
+  readonly returnExcessLimit: number;
   readonly loop: {
     readonly allowed: boolean;
     /** The design number: radius of the loop's arc, m. The extension follows, e = r / tan(β/2). */
@@ -18,6 +18,8 @@ export type CornerRules = {
     readonly allowed: boolean;
     /** Longest wait accepted, s. */
     readonly maxDuration: number;
+    /** What getting the cut going again costs beside the wait: the beam was off at the finished edge, s. */
+    readonly restart: number;
   };
 };
 

@@ -176,7 +176,7 @@ describe('the whole chain, walked by four people', () => {
         .click();
       await page.getByText(words).waitFor();
       await expect
-        .poll(() => page.evaluate(() => [...document.images].some((image) => image.naturalWidth === 1600)))
+        .poll(() => page.evaluate(() => Array.from(document.images).some((image) => image.naturalWidth === 1600)))
         .toBe(true);
     }
 

@@ -171,7 +171,8 @@ describe('a corner plan', () => {
       programmer.call(cornerPlanEndpoints.add, { body: { id: planId, partId, revisionId, ...choices } }),
     );
     expect(body.corners.length).toBe(body.totals.corners);
-    expect(body.limit).toBe(plant.content.cornerRules.returnTemperatureLimit);
+    const edge = body.corners[0]?.straightEdge ?? Number.NaN;
+    expect(body.limit).toBeCloseTo(edge + plant.content.cornerRules.returnExcessLimit, 9);
     expect(body.part.contours.length).toBeGreaterThan(0);
     const treated = body.corners.find(({ treatment }) => treatment !== 'leave');
     if (!treated) throw new Error('the rules treat no corner of the bracket');

@@ -66,9 +66,9 @@ export function testContent(
     stages: [...stages],
     cornerRules: {
       treatBelowAngle: 1.75,
-      returnTemperatureLimit: 400,
+      returnExcessLimit: 50,
       loop: { allowed: true, radius: 0.004, minExtension: 0.002, maxExtension: 0.03, clearance: 0.002 },
-      dwell: { allowed: true, maxDuration: 12 },
+      dwell: { allowed: true, maxDuration: 12, restart: 2 },
     },
     ...change,
   };

@@ -2,7 +2,14 @@ import { readFileSync } from 'node:fs';
 import path from 'node:path';
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import type { CornerPlan, CornerPlanRequest, CornerRules, PlannedCorner } from '../../../strategy/corners/index.ts';
+import { straightEdgeReturn } from '../../../strategy/heat/index.ts';
+import type {
+  CornerPlan,
+  CornerPlanRequest,
+  CornerRules,
+  CutConditions,
+  PlannedCorner,
+} from '../../../strategy/corners/index.ts';
 import { cornerPlan, leastDwell } from '../../../strategy/corners/index.ts';
 import type { Contour, Point } from '../../../strategy/path/index.ts';
 import {
@@ -34,27 +41,31 @@ const wedge = polygon([
 ]);
 
 const degrees = (angle: number) => (angle * Math.PI) / 180;
+const cut: CutConditions = {
+  feed: 0.7 / 60,
+  peakPower: 4000,
+  duty: 1,
+  pulseFrequency: null,
+  oxygenPressure: 7e4,
+  standoff: 1e-3,
+  focusPosition: 5e-3,
+  kerfWidth: 8e-4,
+  heatIntoPlate: 1.1e7,
+};
+/** What the limits below are measured against, K. */
+const straightEdge = straightEdgeReturn(cut, 293.15);
+const limit = 273.15 + 160;
 const rules: CornerRules = {
   treatBelowAngle: degrees(100),
-  returnTemperatureLimit: 273.15 + 160,
+  returnExcessLimit: limit - straightEdge,
   loop: { allowed: true, radius: 5e-3, minExtension: 2e-3, maxExtension: 1.2e-2, clearance: 2e-3 },
-  dwell: { allowed: false, maxDuration: 4 },
+  dwell: { allowed: false, maxDuration: 4, restart: 0 },
 };
 const request: CornerPlanRequest = {
   contours: [{ id: '1', contour: square, role: 'outer' }],
   plate: null,
   rules,
-  cut: {
-    feed: 0.7 / 60,
-    peakPower: 4000,
-    duty: 1,
-    pulseFrequency: null,
-    oxygenPressure: 7e4,
-    standoff: 1e-3,
-    focusPosition: 5e-3,
-    kerfWidth: 8e-4,
-    heatIntoPlate: 1.1e7,
-  },
+  cut,
   profile: { axes: { maxFeed: 1, acceleration: 2, jerk: 50 }, smallestArc: 1e-3 },
   thickness: 0.019,
   plateTemperature: 293.15,
@@ -72,8 +83,8 @@ describe('the corner plan of a square', () => {
     expect(corners.map((c) => c.id)).toEqual(['c1-0', 'c1-1', 'c1-2', 'c1-3']);
     for (const corner of corners) {
       expect(corner.treatment).toBe('loop');
-      expect(corner.returnWithout).toBeGreaterThan(rules.returnTemperatureLimit);
-      expect(corner.returnWith).toBeLessThanOrEqual(rules.returnTemperatureLimit);
+      expect(corner.returnWithout).toBeGreaterThan(limit);
+      expect(corner.returnWith).toBeLessThanOrEqual(limit);
       expect(corner.excess).toBeCloseTo(corner.returnWith - corner.straightEdge, 9);
       expect(corner.problem).toBeUndefined();
       expect(corner.loop?.radius).toBeCloseTo(5e-3, 12);
@@ -92,7 +103,7 @@ describe('the corner plan of a square', () => {
   });
 
   it('leaves them when they stay under the limit, and says so', () => {
-    const corner = first(plan({ rules: { ...rules, returnTemperatureLimit: 273.15 + 300 } }));
+    const corner = first(plan({ rules: { ...rules, returnExcessLimit: 273.15 + 300 - straightEdge } }));
     expect([corner.treatment, corner.addedTime, corner.returnWith]).toEqual(['leave', 0, corner.returnWithout]);
     expect(corner.why).toContain('under the limit of 300 °C');
   });
@@ -104,30 +115,47 @@ describe('the corner plan of a square', () => {
   });
 
   it('takes the wait when it costs less than the loop, and the loop when it costs less', () => {
-    const waiting = first(plan({ rules: { ...rules, dwell: { allowed: true, maxDuration: 4 } } }));
+    const waiting = first(plan({ rules: { ...rules, dwell: { allowed: true, maxDuration: 4, restart: 0 } } }));
     expect(waiting.treatment).toBe('dwell');
-    expect(waiting.returnWith).toBeLessThanOrEqual(rules.returnTemperatureLimit);
+    expect(waiting.returnWith).toBeLessThanOrEqual(limit);
     expect(waiting.addedTime).toBe(waiting.dwell?.duration);
     const strict = {
       ...rules,
-      returnTemperatureLimit: 273.15 + 139,
-      dwell: { allowed: true, maxDuration: 4 },
+      returnExcessLimit: 273.15 + 139 - straightEdge,
+      dwell: { allowed: true, maxDuration: 4, restart: 0 },
       loop: { ...rules.loop, radius: 5e-3 },
     };
-    const looped = first(plan({ rules: { ...strict, returnTemperatureLimit: first(plan()).returnWith + 0.5 } }));
+    const looped = first(
+      plan({ rules: { ...strict, returnExcessLimit: first(plan()).returnWith + 0.5 - straightEdge } }),
+    );
     const quickest = looped.options
       .filter((o) => o.fits && o.treatment !== 'leave')
       .sort((a, b) => (a.addedTime ?? 0) - (b.addedTime ?? 0))[0];
     expect(looped.treatment).toBe(quickest?.treatment);
   });
 
+  it('counts what getting the cut going again costs: a short wait may then lose to a loop', () => {
+    const quick = first(plan({ rules: { ...rules, dwell: { allowed: true, maxDuration: 4, restart: 0 } } }));
+    const slow = first(plan({ rules: { ...rules, dwell: { allowed: true, maxDuration: 4, restart: 5 } } }));
+    expect([quick.treatment, slow.treatment]).toEqual(['dwell', 'loop']);
+    const waiting = slow.options.find(({ treatment }) => treatment === 'dwell');
+    expect(waiting?.addedTime).toBeCloseTo(quick.addedTime + 5, 9);
+  });
+
+  it('judges by the excess over a straight edge: a hotter plate alone makes no corner worse', () => {
+    const cold = plan();
+    const hot = plan({ plateTemperature: 293.15 + 60 });
+    expect(hot.limit - cold.limit).toBeCloseTo(60, 9);
+    expect(hot.corners.map(({ treatment }) => treatment)).toEqual(cold.corners.map(({ treatment }) => treatment));
+  });
+
   it('waits no longer than needed: a hundredth of a second less is too hot', () => {
-    const { dwell } = first(plan({ rules: { ...rules, dwell: { allowed: true, maxDuration: 4 } } }));
+    const { dwell } = first(plan({ rules: { ...rules, dwell: { allowed: true, maxDuration: 4, restart: 0 } } }));
     const shorter = plan({
       rules: {
         ...rules,
         loop: { ...rules.loop, allowed: false },
-        dwell: { allowed: true, maxDuration: (dwell?.duration ?? 0) - 0.01 },
+        dwell: { allowed: true, maxDuration: (dwell?.duration ?? 0) - 0.01, restart: 0 },
       },
     });
     expect(first(shorter).problem).toContain('the longest wait allowed');
@@ -182,7 +210,7 @@ describe('room for a loop', () => {
   it('is found with a smaller radius where the design number does not fit, and the sentence says why', () => {
     // 5 mm radius reaches 10 mm past the corner, and takes half a kerf twice and the clearance
     const plate = { min: { x: -0.1, y: -0.1 }, max: { x: 0.2 + 9e-3, y: 0.3 } };
-    const corner = plan({ plate, rules: { ...rules, returnTemperatureLimit: 273.15 + 175 } }).corners.find(
+    const corner = plan({ plate, rules: { ...rules, returnExcessLimit: 273.15 + 175 - straightEdge } }).corners.find(
       (c) => pointDistance(c.point, { x: 0.2, y: 0.2 }) < 1e-9,
     );
     expect(corner?.treatment).toBe('loop');
@@ -246,14 +274,14 @@ describe('what the programmer asks for', () => {
   });
 
   it('is followed: a loop on a corner that would need none', () => {
-    const cool = { ...rules, returnTemperatureLimit: 273.15 + 300 };
+    const cool = { ...rules, returnExcessLimit: 273.15 + 300 - straightEdge };
     const corner = first(plan({ rules: cool, overrides: { 'c1-0': 'loop' } }));
     expect([corner.treatment, corner.problem]).toEqual(['loop', undefined]);
   });
 
   it('is refused where it does not fit, with the reason, and the rule decides', () => {
     const plate = { min: { x: -3e-3, y: -3e-3 }, max: { x: 0.203, y: 0.203 } };
-    const dwelling = { ...rules, dwell: { allowed: true, maxDuration: 4 } };
+    const dwelling = { ...rules, dwell: { allowed: true, maxDuration: 4, restart: 0 } };
     const corner = first(plan({ plate, rules: dwelling, overrides: { 'c1-0': 'loop' } }));
     expect(corner.treatment).toBe('dwell');
     expect(corner.problem).toMatch(/^loop asked for by the programmer is refused: .*plate's edge/);
