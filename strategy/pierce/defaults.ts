@@ -35,8 +35,8 @@ const THREE_STAGES_BELOW = 0.01;
 const FOCUS_POSITION = 0.005;
 
 /** Share of the source's greatest power that a default uses, and the longest duty that is still pulsed. */
-const POWER_SHARE = 0.95;
-const LONGEST_DUTY = 0.9;
+export const POWER_SHARE = 0.95;
+export const LONGEST_DUTY = 0.9;
 
 /** Routine over predicted breakthrough, with room for the rules of 2.0 cold and 2.2 hot. */
 const ROUTINE_OVER_BREAKTHROUGH = 2.3;
@@ -170,10 +170,14 @@ function knotQuantitiesAt(
   return { quantities: { ...set, peakPower: Math.max(most, source.minPower), duty }, enough };
 }
 
-/** The usual focus position, or the nearest that the dial reaches at this standoff. */
-function reachableFocus({ focusScale }: MachineProfile, standoff: number): number {
+/** A wished focus position, or the nearest that the dial reaches at this standoff, m. */
+export function reachableFocus(
+  { focusScale }: MachineProfile,
+  standoff: number,
+  wished: number = FOCUS_POSITION,
+): number {
   const ends = [focusScale.minDial, focusScale.maxDial].map((typed) => focusForDial(focusScale, typed, standoff));
-  return clamped(FOCUS_POSITION, Math.min(...ends), Math.max(...ends));
+  return clamped(wished, Math.min(...ends), Math.max(...ends));
 }
 
 /** Least value in [low, high] for which a monotone condition holds, given that it holds at `high`. */

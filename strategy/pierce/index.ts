@@ -46,8 +46,12 @@ export {
   type PierceStall,
   type StallCause,
 } from './predict.ts';
+export type { ProposalLimits, ProposalRule } from './propose-judge.ts';
+export { piercePropose, type PierceProposal, type ProposalObstacle, type ProposeInput } from './propose.ts';
+export { pierceResults, type PierceResults } from './results.ts';
 export type { PierceLedger } from './run.ts';
 export { effectiveDuty, pulseTrain, type PulseTrain } from './pulse.ts';
+export { pierceSensitivity, type SensitivityCase, type SensitivityRow } from './sensitivity.ts';
 export { routineTime, stageMeanPower, stagePulses, stageQuantitiesAt } from './stage-math.ts';
 export { LONGEST_STAGE, MOST_STAGES, stageProblems, type StageProblem } from './stage-problems.ts';
 export type { Stage, StageQuantities } from './stage.ts';

@@ -17,7 +17,7 @@ import {
 } from './bore.ts';
 import { PIERCE_MODEL_VERSION, pierceParameters, type PierceParameters } from './parameters.ts';
 import { effectiveDuty } from './pulse.ts';
-import { pierceRun, type PierceLedger, type PierceRun, type RunStep } from './run.ts';
+import { pierceRun, STALL_SPEED, type PierceLedger, type PierceRun, type RunStep } from './run.ts';
 import { routineTime, stageMeanPower, stagePulses, stageQuantitiesAt, stagesPeakPower } from './stage-math.ts';
 import { stageProblems } from './stage-problems.ts';
 import type { Stage } from './stage.ts';
@@ -81,8 +81,7 @@ export type PiercePrediction = {
 /** Thickest plate the model takes, m. Beyond 40 mm it is extrapolated well outside what its sources cover. */
 export const THICKEST_PLATE = 0.06;
 
-/** Speed below which the bottom counts as standing still, m/s, and for how long it must, s. */
-const STALL_SPEED = 0.05e-3;
+/** For how long the bottom must stand still to be told, s. */
 const SHORTEST_STALL = 0.1;
 
 /** Points of the trace without the breakthrough. */
@@ -185,7 +184,7 @@ export function boreFor(input: PierceInput): Bore {
   return boreOf(input.profile, input.nozzle, plateTemperature, pierceParameters(input.parameters));
 }
 
-function heatLeftOf(ledger: PierceLedger): number {
+export function heatLeftOf(ledger: PierceLedger): number {
   return ledger.conduction + ledger.pauses + ledger.wall;
 }
 

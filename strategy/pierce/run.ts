@@ -52,6 +52,8 @@ export type PierceRun = {
   /** Depth at the end of the routine, m, and the bottom's speed when last seen, m/s. */
   readonly depth: number;
   readonly lastSpeed: number;
+  /** Time before breakthrough during which the bottom stood still, s. */
+  readonly stood: number;
   /** For each stage: depth at its end, m, and greatest eruption index in it before breakthrough. */
   readonly depths: Float64Array;
   readonly eruptions: Float64Array;
@@ -75,6 +77,9 @@ export type RunStep = (
 /** Time for which heat near the mouth counts, s: what a point source needs to spread over the crater's scale. */
 const CRATER_MEMORY = CRATER_SCALE ** 2 / (6 * HOT_DIFFUSIVITY);
 
+/** Speed below which the bottom counts as standing still, m/s. */
+export const STALL_SPEED = 0.05e-3;
+
 /** Error of the depth allowed for a step, m. */
 const DEPTH_TOLERANCE = 1e-10;
 
@@ -90,10 +95,16 @@ const REST_WEIGHTS = [
 const REST_PIECES = 3;
 
 /**
- * Carries a staged pierce through its routine. Stages and thickness must have been found good; nothing is checked and nothing is
- * allocated from step to step, since fits and searches call this by the hundred thousand.
+ * Carries a staged pierce through its routine. Stages and thickness must have been found good; nothing is checked and no record
+ * or list is made from step to step, since fits and searches call this by the hundred thousand.
  */
-export function pierceRun(bore: Bore, stages: readonly Stage[], thickness: number, watch?: RunStep): PierceRun {
+export function pierceRun(
+  bore: Bore,
+  stages: readonly Stage[],
+  thickness: number,
+  watch?: RunStep,
+  tolerance = DEPTH_TOLERANCE,
+): PierceRun {
   const room = integrateRoom(MOMENT_SIZE, FLOWS);
   const { nodes, sums } = room;
   const end = nodes.subarray(6 * MOMENT_SIZE);
@@ -105,6 +116,7 @@ export function pierceRun(bore: Bore, stages: readonly Stage[], thickness: numbe
   let through: { readonly time: number; readonly stage: number } | null = null;
   let depth = 0;
   let lastSpeed = 0;
+  let stood = 0;
   let stage = 0;
   let stageStart = 0;
   let duration = 1;
@@ -140,6 +152,7 @@ export function pierceRun(bore: Bore, stages: readonly Stage[], thickness: numbe
     const bore1 = end[BORE_RADIUS] ?? 0;
     widestBore = Math.max(widestBore, bore0, bore1);
     lastSpeed = v1;
+    if (v0 < STALL_SPEED && v1 < STALL_SPEED) stood += h;
     if (watch !== undefined) watch(stage, from, z0, v0, to, z1, v1);
   };
 
@@ -153,7 +166,7 @@ export function pierceRun(bore: Bore, stages: readonly Stage[], thickness: numbe
     let from = stageStart;
     if (through === null) {
       const options = {
-        tolerance: DEPTH_TOLERANCE,
+        tolerance,
         firstStep: duration / 32,
         // The mouth's heat fades with its own time, which a step must not exceed.
         longestStep: Math.min(duration / LEAST_STEPS, CRATER_MEMORY),
@@ -195,6 +208,7 @@ export function pierceRun(bore: Bore, stages: readonly Stage[], thickness: numbe
     routineTime: stageStart,
     depth,
     lastSpeed,
+    stood,
     depths,
     eruptions,
     craterRadius: Math.max(widestBore, molten),

@@ -1,30 +1,8 @@
-import { leadInNeeded, type StrategyPrediction } from '../pierce/index.ts';
+import type { PierceResults } from '../pierce/index.ts';
 import type { Dimension } from '../units/index.ts';
 
 /** A result that a house rule can speak of. */
-export type HouseRuleName =
-  | 'reserveCold'
-  | 'reserveHot'
-  | 'breakthroughCold'
-  | 'breakthroughHot'
-  | 'routineTime'
-  | 'craterRadius'
-  | 'leadInLength'
-  | 'eruptionIndex'
-  | 'eruptionLimit'
-  | 'meanPower'
-  | 'peakPower'
-  | 'energy'
-  | 'heatLeft'
-  | 'heatPerThickness'
-  | 'oxygenUsed'
-  | 'pulses'
-  | 'stageCount'
-  | 'stalls'
-  | 'thicknessMin'
-  | 'thicknessMax'
-  | 'coldPlate'
-  | 'hottestPlate';
+export type HouseRuleName = keyof PierceResults;
 
 export type HouseRuleRow = {
   readonly name: HouseRuleName;
@@ -61,40 +39,8 @@ export const houseRuleTable: readonly HouseRuleRow[] = [
   row('hottestPlate', 'temperature', '<= 200 degC', 'hottest plate the strategy is good for'),
 ];
 
-/** A value for every name, SI; null where there is none, such as the reserve of a pierce that is never through. */
-export type HouseRuleResults = Readonly<Record<HouseRuleName, number | null>>;
-
-/** The named results of a prediction. */
-export function houseRuleResults(prediction: StrategyPrediction): HouseRuleResults {
-  const { cold, hot, heat, craterRadius } = prediction;
-  const through = ({ breakthrough }: typeof cold) => (breakthrough.kind === 'through' ? breakthrough.time : null);
-  const reserve = ({ reserve: found }: typeof cold) => (found.kind === 'ok' ? found.value : null);
-  const leadIn = leadInNeeded({ craterRadius, heat, plateTemperature: hot.plateTemperature });
-  return {
-    reserveCold: reserve(cold),
-    reserveHot: reserve(hot),
-    breakthroughCold: through(cold),
-    breakthroughHot: through(hot),
-    routineTime: prediction.routineTime,
-    craterRadius,
-    leadInLength: leadIn.kind === 'ok' ? leadIn.length : null,
-    eruptionIndex: prediction.eruption.index,
-    eruptionLimit: prediction.eruption.limit,
-    meanPower: prediction.meanPower,
-    peakPower: prediction.peakPower,
-    energy: prediction.energy.emitted,
-    heatLeft: prediction.heatLeft,
-    heatPerThickness: heat.perLength,
-    oxygenUsed: prediction.oxygenUsed,
-    pulses: prediction.pulses,
-    stageCount: cold.perStage.length,
-    stalls: cold.stalls.length,
-    thicknessMin: prediction.thickness.min,
-    thicknessMax: prediction.thickness.max,
-    coldPlate: cold.plateTemperature,
-    hottestPlate: hot.plateTemperature,
-  };
-}
+/** A value for every name, SI; null where there is none. `pierceResults` has them from a prediction. */
+export type HouseRuleResults = PierceResults;
 
 function row(
   name: HouseRuleName,

@@ -40,6 +40,12 @@ function flow(millimetres: number, bar: number): number {
   return oxygenMassFlow(millimetres * 1e-3, bar * 1e5, 1);
 }
 
+/** The choked formula where it does not hold: p·A·C*·√(M/RT). */
+function choked(millimetres: number, bar: number): number {
+  const area = (Math.PI / 4) * (millimetres * 1e-3) ** 2;
+  return (area * (101_325 + bar * 1e5) * criticalFlowFactor()) / Math.sqrt((8.314462618 / 31.9988e-3) * 293.15);
+}
+
 /** Throat Reynolds number of a 1.5 mm nozzle at 1 bar, viscosity 2.03e-5 Pa·s. */
 function throatReynolds(): number {
   return (4 * flow(1.5, 1)) / (Math.PI * 1.5e-3 * 2.03e-5);
@@ -108,6 +114,22 @@ outsideChecks('oxygen flow', [
       standing: FORMULA,
     },
   ]),
+  ...(
+    [
+      [0.3, 1.17],
+      [0.5, 1.047],
+      [0.7, 1.009],
+    ] as const
+  ).map(([bar, expected]): OutsideCheck => ({
+    id: `G03-over-${bar}`,
+    what: `what the choked formula alone would claim at ${bar} bar, over what flows`,
+    unit: '',
+    got: () => choked(1.5, bar) / flow(1.5, bar),
+    expected,
+    tolerance: { abs: 0.005 },
+    source: ISENTROPIC,
+    standing: FORMULA,
+  })),
   {
     id: 'G05',
     what: 'density of oxygen at normal state, ideal gas',

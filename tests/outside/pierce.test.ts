@@ -3,10 +3,22 @@ import {
   PIERCE_DEFAULTS,
   peakRiseAroundLine,
   peakRiseAroundPoint,
+  pierceParameters,
   piercePredict,
+  pierceWarmth,
   pulseTrain,
+  type PierceParameters,
   type Stage,
 } from '../../strategy/pierce/index.ts';
+import {
+  boreMoment,
+  boreMomentEmpty,
+  boreOf,
+  boreSet,
+  CONDUCTION,
+  SET_SIZE,
+  WALL,
+} from '../../strategy/pierce/bore.ts';
 import { netRemovalHeat } from '../../strategy/pierce/parameters.ts';
 import { meltingEnthalpy, meltingEnthalpyPerVolume, STEEL_DENSITY } from '../../strategy/steel/index.ts';
 import { NOZZLE_1_5, TEN_KILOWATT } from '../support/machines.ts';
@@ -158,6 +170,62 @@ outsideChecks('the ledger in the pierce', [
   },
 ]);
 
+/** Flows at one moment of a continuous pierce with a bore of a radius, at a depth, in m. */
+function flowsAt(radius: number, depth: number, parameters: Partial<PierceParameters>): Float64Array {
+  const all = pierceParameters({ ...parameters, boreRadius: radius, spotFollowing: 0 });
+  const bore = boreOf(TEN_KILOWATT, NOZZLE_1_5, 293.15, all);
+  const set = new Float64Array(SET_SIZE);
+  const moment = boreMomentEmpty();
+  const [stage] = flat(90_000);
+  if (stage === undefined) throw new Error('no stage');
+  boreSet(set, stage.from);
+  boreMoment(bore, set, depth, moment);
+  return moment;
+}
+
+const HOT_BORE =
+  'hot cylinder in an infinite plate, 4πkdΔT/X·(1 − π²/6X²), X = ln(4αt/a²) − 0.577 (Carslaw & Jaeger, Conduction of Heat in Solids, 2nd ed., chapter 13, from memory)';
+
+outsideChecks('what the plate conducts away in a pierce', [
+  {
+    id: 'H-disk',
+    what: 'disk of 0.75 mm at melting on a half-space, k 30 W/(m K), plate at 20 °C',
+    unit: 'W',
+    got: () => flowsAt(0.75e-3, 0, {})[CONDUCTION] ?? Number.NaN,
+    expected: 4 * 30 * 0.75e-3 * (1809 - 293.15),
+    tolerance: { rel: 1e-9 },
+    source:
+      'steady disk on a half-space, 4kaΔT (Carslaw & Jaeger, Conduction of Heat in Solids, 2nd ed., chapter 8), seen quoted',
+    standing: FORMULA,
+  },
+  {
+    id: 'H-bore-1s',
+    what: 'whole wall of a 1 mm bore in 20 mm kept at melting, taken for 3 s, against the loss after 1 s',
+    unit: 'kW',
+    got: () => wallLoss(),
+    expected: 2.5,
+    tolerance: { bound: 'at most' },
+    source: HOT_BORE,
+    standing: FORMULA,
+  },
+  {
+    id: 'H-bore-5s',
+    what: 'the same against the loss after 5 s',
+    unit: 'kW',
+    got: () => wallLoss(),
+    expected: 1.9,
+    tolerance: { bound: 'at least' },
+    source: HOT_BORE,
+    standing: FORMULA,
+  },
+]);
+
+/** Loss of the whole wall, kW: the model takes a share of it, and the loss is linear in that share. */
+function wallLoss(): number {
+  const share = 0.3;
+  return (flowsAt(0.5e-3, 0.02, { wallShare: share, attenuationLength: 0.06 })[WALL] ?? Number.NaN) / share / 1e3;
+}
+
 /** k 45 W/(m K), c 600 J/(kg K), ρ 7850 kg/m³: simple-model values of ENV 1993-1-2:1995, from memory. */
 const CAPACITY = 7850 * 600;
 const SOURCES_MAXIMUM =
@@ -195,6 +263,26 @@ outsideChecks('greatest temperature around a pierce', [
     source: SOURCES_MAXIMUM,
     standing: FORMULA,
   })),
+  {
+    id: 'C03-slow',
+    what: 'greatest rise 10 mm from 6 kJ given off along a line through 20 mm in 10 s, against the same at once',
+    unit: 'K',
+    got: () => pierceWarmth({ perLength: 6000 / 0.02, duration: 10 }, 0.01),
+    expected: peakRiseAroundLine(6000 / 0.02, 0.01, STEEL_DENSITY * 529.8),
+    tolerance: { bound: 'at most' },
+    source: `${SOURCES_MAXIMUM}; c at 200 °C 529.8 J/(kg K), EN 1993-1-2:2005, 3.4.1.2`,
+    standing: FORMULA,
+  },
+  {
+    id: 'C03-at-once',
+    what: 'the same given off in 1 ms',
+    unit: 'K',
+    got: () => pierceWarmth({ perLength: 6000 / 0.02, duration: 1e-3 }, 0.01),
+    expected: 6000 / 0.02 / (Math.PI * Math.E * 7850 * 529.8 * 0.01 ** 2),
+    tolerance: { rel: 1e-3 },
+    source: `${SOURCES_MAXIMUM}; c at 200 °C 529.8 J/(kg K), EN 1993-1-2:2005, 3.4.1.2`,
+    standing: FORMULA,
+  },
   {
     id: 'H29-bound',
     what: 'greatest rise 10 mm from 6 kJ along a line through 20 mm, against the rise after 5 s',

@@ -1,11 +1,10 @@
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { pierceStageDefaults, strategyPrediction } from '../../../strategy/pierce/index.ts';
+import { pierceResults, pierceStageDefaults, strategyPrediction } from '../../../strategy/pierce/index.ts';
 import {
   houseRuleHolds,
   houseRuleMiss,
   houseRuleRead,
-  houseRuleResults,
   houseRuleTable,
   LONGEST_RULE,
   type HouseRuleResults,
@@ -94,7 +93,7 @@ describe('a house rule', () => {
   it('gets every result from a prediction', () => {
     const thickness = { min: 0.018, max: 0.02 };
     const stages = pierceStageDefaults(TEN_KILOWATT, thickness.max);
-    const results = houseRuleResults(
+    const results = pierceResults(
       strategyPrediction({
         stages,
         thickness,

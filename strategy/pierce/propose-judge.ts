@@ -1,0 +1,217 @@
+import { ERUPTION_CAUTION, STEEPEST_STEP, type ReserveRules } from './checks.ts';
+import type { Bore } from './bore.ts';
+import { leadInNeeded } from './lead-in.ts';
+import { heatLeftOf } from './predict.ts';
+import { planStages, type Frame, type Plan } from './propose-plan.ts';
+import type { PierceResults } from './results.ts';
+import { pierceRun, type PierceRun } from './run.ts';
+import { routineTime, stageMeanPower, stagePulses, stagesPeakPower } from './stage-math.ts';
+import { LONGEST_STAGE } from './stage-problems.ts';
+import type { Stage } from './stage.ts';
+
+/** A house rule as the designer sees it. */
+export type ProposalRule = {
+  /** What the lead wrote beside it. */
+  readonly sentence: string;
+  /** How far it is from holding, without unit: 0 when it holds. The nearer the smaller, so that a search finds the way. */
+  readonly miss: (results: PierceResults) => number;
+};
+
+/** Limits beside the reserve; each may be left out. SI. */
+export type ProposalLimits = {
+  /** Widest crater, as a radius. */
+  readonly craterRadius?: number;
+  /** Greatest share of the bore that a pulse's melt may fill; four fifths of what throws it out without it. */
+  readonly eruptionIndex?: number;
+  readonly routineTime?: number;
+  readonly peakPower?: number;
+  /** Lead-in that there is room for. */
+  readonly leadInLength?: number;
+};
+
+/** What one candidate is judged by. */
+export type Brief = {
+  readonly thickness: { readonly min: number; readonly max: number };
+  readonly coldPlate: number; // K
+  readonly hottestPlate: number; // K
+  readonly cold: Bore;
+  readonly hot: Bore;
+  readonly reserve: ReserveRules;
+  readonly limits: ProposalLimits & { readonly eruptionIndex: number };
+  readonly rules: readonly ProposalRule[];
+};
+
+/** What a proposal may miss. The first four are what makes a routine sound, the others are what was asked for. */
+export const MISSES = [
+  'through',
+  'idle',
+  'stall',
+  'jump',
+  'reserve-cold',
+  'reserve-hot',
+  'eruption',
+  'crater',
+  'routine-time',
+  'lead-in',
+] as const;
+export type MissId = (typeof MISSES)[number];
+/** Places from here on are the rules', in their order. */
+export const FIRST_RULE = MISSES.length;
+
+export type Judged = {
+  readonly plan: Plan;
+  readonly stages: readonly Stage[];
+  readonly routineTime: number; // s
+  /** How far each limit is missed, in its own measure; 0 when it is kept. In the order of MISSES, then the rules. */
+  readonly misses: Float64Array;
+  /** Sum of the misses. */
+  readonly missed: number;
+  /** Figures that a sentence about a missed limit needs. */
+  readonly figures: { readonly eruptionIndex: number; readonly craterRadius: number; readonly depth: number };
+};
+
+/** Error of the depth in a step that a search bears, m: its figures are asked again exactly in the end. */
+const SEARCH_TOLERANCE = 1e-7;
+/** Limits are kept by this much while searching, so that exact figures keep them too. */
+const SEARCH_MARGIN = 0.004;
+/** Long enough a hold to see whether it ever gets through, s. */
+const LONG_HOLD = 60;
+const SHORTEST_HOLD = 0.1;
+
+/**
+ * A plan judged: its stages with the hold as long as the reserve asks for, and what it misses. Undefined when it is no better than a
+ * routine of `beat` s and nothing more needed to be known.
+ */
+export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number, exact = false): Judged | undefined {
+  const tolerance = exact ? undefined : SEARCH_TOLERANCE;
+  const margin = exact ? 1 : 1 - SEARCH_MARGIN;
+  const { thickness, reserve, limits } = brief;
+  const misses = new Float64Array(FIRST_RULE + brief.rules.length);
+  const miss = (id: MissId, by: number) => {
+    misses[MISSES.indexOf(id)] = by > 0 ? by : 0;
+  };
+
+  const trial = planStages(frame, plan, LONG_HOLD);
+  const ramps = frame.holds ? routineTime(trial.slice(0, -1)) : routineTime(trial);
+  const shortest = frame.holds ? ramps + SHORTEST_HOLD : ramps;
+  if (shortest >= beat) return undefined;
+  const cold = pierceRun(brief.cold, trial, thickness.max, undefined, tolerance);
+  const throughCold = cold.through?.time ?? null;
+  if (throughCold !== null && frame.holds && reserve.cold * throughCold >= beat) return undefined;
+  if (throughCold === null && beat < Number.POSITIVE_INFINITY) return undefined;
+  const hot = pierceRun(brief.hot, trial, thickness.max, undefined, tolerance);
+  const throughHot = hot.through?.time ?? null;
+
+  const wished = Math.max(shortest, reserve.cold * (throughCold ?? 0), reserve.hot * (throughHot ?? 0));
+  // To the next tenth of a second, with room for the last digit.
+  const total = frame.holds ? (Math.ceil(wished * 10 - 1e-7) + plan.extra) / 10 : ramps;
+  if (total >= beat) return undefined;
+  const hold = Math.min(LONGEST_STAGE, Number((total - ramps).toFixed(6)));
+  const stages = frame.holds ? planStages(frame, plan, hold) : trial;
+
+  if (throughCold === null) miss('through', 1 + (thickness.max - cold.depth) / thickness.max);
+  else {
+    const lastBegins = routineTime(stages.slice(0, -1));
+    // Who gives stages decides when they end.
+    if (!frame.given) miss('idle', lastBegins / throughCold - margin);
+    if (!frame.holds) {
+      miss('reserve-cold', (reserve.cold * throughCold) / total - 1);
+      miss('reserve-hot', throughHot === null ? 1 : (reserve.hot * throughHot) / total - 1);
+    }
+  }
+  miss('stall', cold.stood > 0.05 ? 0.1 + cold.stood / LONG_HOLD : 0);
+  miss('jump', steepest(frame, stages));
+  const eruptionIndex = Math.max(greatest(cold.eruptions), greatest(hot.eruptions));
+  const craterRadius = Math.max(cold.craterRadius, hot.craterRadius);
+  miss('eruption', eruptionIndex / (limits.eruptionIndex * margin) - 1);
+  if (limits.craterRadius !== undefined) miss('crater', craterRadius / (limits.craterRadius * margin) - 1);
+  if (limits.routineTime !== undefined) miss('routine-time', total / (limits.routineTime * (1 + 1e-9)) - 1);
+
+  // What needs the routine's very end is asked only of what could be the answer, or for want of a better one.
+  if (throughCold !== null && (brief.rules.length > 0 || limits.leadInLength !== undefined)) {
+    const results = resultsOf(brief, stages, tolerance);
+    if (limits.leadInLength !== undefined) {
+      miss('lead-in', results.leadInLength === null ? 1 : results.leadInLength / (limits.leadInLength * margin) - 1);
+    }
+    brief.rules.forEach((rule, index) => {
+      const by = rule.miss(results);
+      // A rule that cannot be said counts as one missed by half.
+      misses[FIRST_RULE + index] = Number.isFinite(by) ? Math.max(0, by) : 0.5;
+    });
+  } else {
+    brief.rules.forEach((_, index) => {
+      misses[FIRST_RULE + index] = throughCold === null ? 0.5 : 0;
+    });
+  }
+  return {
+    plan,
+    stages,
+    routineTime: total,
+    misses,
+    missed: misses.reduce((sum, by) => sum + by, 0),
+    figures: { eruptionIndex, craterRadius, depth: cold.depth },
+  };
+}
+
+/** The named results of stages, without a trace. The same as `pierceResults` gives from a whole prediction. */
+export function resultsOf(brief: Brief, stages: readonly Stage[], tolerance?: number): PierceResults {
+  const { thickness, coldPlate, hottestPlate } = brief;
+  const cold = pierceRun(brief.cold, stages, thickness.max, undefined, tolerance);
+  const hot = pierceRun(brief.hot, stages, thickness.max, undefined, tolerance);
+  const thin =
+    thickness.min === thickness.max ? hot : pierceRun(brief.hot, stages, thickness.min, undefined, tolerance);
+  const total = routineTime(stages);
+  const heatOf = (run: PierceRun, plate: number) => heatLeftOf(run.ledger) / plate;
+  const perLength = Math.max(heatOf(cold, thickness.max), heatOf(hot, thickness.max), heatOf(thin, thickness.min));
+  const craterRadius = Math.max(cold.craterRadius, hot.craterRadius, thin.craterRadius);
+  const leadIn = leadInNeeded({ craterRadius, heat: { perLength, duration: total }, plateTemperature: hottestPlate });
+  return {
+    reserveCold: cold.through === null ? null : total / cold.through.time,
+    reserveHot: hot.through === null ? null : total / hot.through.time,
+    breakthroughCold: cold.through?.time ?? null,
+    breakthroughHot: hot.through?.time ?? null,
+    routineTime: total,
+    craterRadius,
+    leadInLength: leadIn.kind === 'ok' ? leadIn.length : null,
+    eruptionIndex: Math.max(greatest(cold.eruptions), greatest(hot.eruptions), greatest(thin.eruptions)),
+    eruptionLimit: brief.cold.parameters.eruptionLimit,
+    meanPower: stages.reduce((energy, stage) => energy + stageMeanPower(stage) * stage.duration, 0) / total,
+    peakPower: stagesPeakPower(stages),
+    energy: cold.emitted,
+    heatLeft: heatLeftOf(cold.ledger),
+    heatPerThickness: perLength,
+    oxygenUsed: cold.oxygenUsed,
+    pulses: Math.round(stages.reduce((pulses, stage) => pulses + stagePulses(stage), 0)),
+    stageCount: stages.length,
+    stalls: cold.stood > 0.05 ? 1 : 0,
+    thicknessMin: thickness.min,
+    thicknessMax: thickness.max,
+    coldPlate,
+    hottestPlate,
+  };
+}
+
+/** Four fifths of the index that throws the melt out: from there it is cautioned about. */
+export function usualEruptionLimit({ parameters }: Bore): number {
+  return ERUPTION_CAUTION * parameters.eruptionLimit;
+}
+
+/** By how much the steepest step of power that a plan made is too steep; steps between given stages are their maker's. */
+function steepest(frame: Frame, stages: readonly Stage[]): number {
+  let most = 0;
+  for (let index = 1; index < stages.length; index++) {
+    if (frame.slots[index] !== null && frame.slots[index - 1] !== null) continue;
+    const end = stages[index - 1]?.to;
+    const start = stages[index]?.from;
+    if (end === undefined || start === undefined || end === start) continue;
+    const ratio = (start.peakPower * start.duty) / (end.peakPower * end.duty);
+    most = Math.max(most, ratio / STEEPEST_STEP.power - 1);
+  }
+  return most;
+}
+
+function greatest(of: Float64Array): number {
+  let most = 0;
+  for (const value of of) if (value > most) most = value;
+  return most;
+}
