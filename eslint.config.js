@@ -32,6 +32,14 @@ const oneWay = Object.entries(floors).map(([floor, above]) => ({
           ...(floor === 'components' || floor === 'app'
             ? [{ regex: '^mathjs', message: 'mathjs lives in strategy/rules/ and is built into a worker.' }]
             : []),
+          ...(floor === 'components' || floor === 'app' || floor === 'shared'
+            ? [
+                {
+                  regex: 'strategy/rules/(index|rule|understand)\\.ts$',
+                  message: 'This brings mathjs into the first bundle. The names alone are in strategy/rules/names.ts.',
+                },
+              ]
+            : []),
         ],
       },
     ],

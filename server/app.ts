@@ -10,6 +10,7 @@ import { cardRoutes } from './cards/routes.ts';
 import { cornerPlanRoutes } from './corner-plans/routes.ts';
 import { AppError, errorHandler, notFound } from './errors.ts';
 import { gradeRoutes } from './grades/routes.ts';
+import { houseRuleRoutes } from './house-rules/routes.ts';
 import { machineRoutes } from './machines/routes.ts';
 import { nozzleRoutes } from './nozzles/routes.ts';
 import { partRoutes } from './parts/routes.ts';
@@ -40,6 +41,7 @@ export function apiRouter(services: Services): Router {
   strategyRoutes(mount);
   revisionRoutes(mount);
   reviewRoutes(mount);
+  houseRuleRoutes(mount);
   plateRoutes(mount);
   cardRoutes(mount);
   requestRoutes(mount);

@@ -110,6 +110,7 @@ function alreadyThere(constraint: string): string {
   if (constraint.includes('tag')) return 'A plate with this tag is booked in already.';
   if (constraint.includes('name')) return 'Something with this name is there already.';
   if (constraint.includes('person')) return 'This person belongs to the plant already.';
+  if (constraint.includes('house_rules_expression')) return 'A rule that says just this is in force already.';
   if (constraint.includes('draft')) return 'This strategy has a draft already.';
   return 'Something with this id is there already.';
 }

@@ -1,6 +1,7 @@
 import { cardEndpoints, requestEndpoints } from './cards.ts';
 import { cornerPlanEndpoints } from './corner-plans.ts';
 import type { Endpoint } from './endpoint.ts';
+import { houseRuleEndpoints } from './house-rules.ts';
 import { gradeEndpoints, machineEndpoints, nozzleEndpoints } from './machines.ts';
 import { partEndpoints } from './parts.ts';
 import { peopleEndpoints } from './people.ts';
@@ -21,6 +22,7 @@ export const endpoints: Readonly<Record<string, Endpoint>> = Object.fromEntries(
     strategy: strategyEndpoints,
     revision: revisionEndpoints,
     review: reviewEndpoints,
+    houseRule: houseRuleEndpoints,
     plate: plateEndpoints,
     card: cardEndpoints,
     request: requestEndpoints,

@@ -12,6 +12,10 @@ export const limits = {
   tag: 40,
   /** Stages in one pierce. */
   stages: 20,
+  /** A house rule's expression and its sentence, characters; and how many rules a plant keeps in force. */
+  ruleExpression: 200,
+  ruleSentence: 300,
+  rules: 50,
   /** A drawing's file, bytes. */
   drawingBytes: 10 * 1024 * 1024,
   /** A photo as it comes from a phone, bytes. */

@@ -46,6 +46,8 @@ const byRole = {
   'review.read': engineersUp,
   /** Approve, return or withdraw; see `can` for the grant and for one's own work. */
   'review.decide': engineersUp,
+  /** House rules: what every pierce of the plant must keep. Whoever reads strategies reads them. */
+  'rule.write': leads,
   'people.manage': leads,
   'plant.manage': leads,
   'record.read': leads,

@@ -1,13 +1,18 @@
 import type { MachineProfile, Nozzle } from '../strategy/machine.ts';
 import {
   COLD_PLATE_TEMPERATURE,
+  DEFAULT_RESERVE_RULES,
   pierceChecks,
   piercePredict,
   pierceReserve,
+  pierceResults,
   strategyPrediction,
   type PiercePrediction,
+  type PierceResults,
   type PierceStall,
+  type ReserveRules,
   type StrategyOutcome,
+  type StrategyPrediction,
 } from '../strategy/pierce/index.ts';
 import type { Condition, Prediction, StrategyContent } from './strategies.ts';
 
@@ -23,14 +28,9 @@ export type Judged = {
  * What the model says of a strategy's content: the same in the browser, for instant feedback, as on the server, which stores it.
  * Throws RangeError where the model can't follow (see `strategyPrediction`).
  */
-export function predictionOf({ content, profile, nozzle }: Judged): Prediction {
-  const outcome = strategyPrediction({
-    stages: content.stages,
-    thickness: { min: metres(content.thickness.min), max: metres(content.thickness.max) },
-    hottestPlateTemperature: content.hottestPlate,
-    profile,
-    nozzle,
-  });
+export function predictionOf(judged: Judged, reserve: ReserveRules = DEFAULT_RESERVE_RULES): Prediction {
+  const { content, profile } = judged;
+  const outcome = outcomeOf(judged);
   return {
     modelVersion: outcome.modelVersion,
     routineTime: outcome.routineTime,
@@ -42,12 +42,44 @@ export function predictionOf({ content, profile, nozzle }: Judged): Prediction {
     meanPower: outcome.meanPower,
     peakPower: outcome.peakPower,
     oxygenUsed: outcome.oxygenUsed,
-    checks: pierceChecks({ stages: content.stages, prediction: outcome, profile }).map(({ id, state, sentence }) => ({
-      id,
-      state,
-      sentence,
-    })),
+    checks: pierceChecks({ stages: content.stages, prediction: outcome, profile, rules: reserve }).map(
+      ({ id, state, sentence }) => ({ id, state, sentence }),
+    ),
   };
+}
+
+/** The results that house rules speak of, SI. RangeError as `predictionOf`. */
+export function namedResultsOf(judged: Judged): PierceResults {
+  return pierceResults(outcomeOf(judged));
+}
+
+/**
+ * The least reserves that a plant's rules ask for, cold and hot, as far as they say it plainly (`reserveCold >= 2`); the strictest
+ * of several. Without such a rule the usual ones stand.
+ */
+export function reserveRulesOf(expressions: readonly string[]): ReserveRules {
+  const least = (name: string, usual: number): number => {
+    const plain = new RegExp(`^\\s*${name}\\s*(?:>=|>|≥)\\s*(\\d+(?:\\.\\d+)?)\\s*$`);
+    const asked = expressions.flatMap((expression) => {
+      const found = plain.exec(expression);
+      return found === null ? [] : [Number(found[1])];
+    });
+    return asked.length === 0 ? usual : Math.max(...asked);
+  };
+  return {
+    cold: least('reserveCold', DEFAULT_RESERVE_RULES.cold),
+    hot: least('reserveHot', DEFAULT_RESERVE_RULES.hot),
+  };
+}
+
+function outcomeOf({ content, profile, nozzle }: Judged): StrategyPrediction {
+  return strategyPrediction({
+    stages: content.stages,
+    thickness: { min: metres(content.thickness.min), max: metres(content.thickness.max) },
+    hottestPlateTemperature: content.hottestPlate,
+    profile,
+    nozzle,
+  });
 }
 
 /** What the card says for the plate in hand: through after how long, with which reserve, how wide the crater. */

@@ -13,6 +13,7 @@ import {
   wordsSchema,
 } from './basics.ts';
 import { endpoint } from './endpoint.ts';
+import { houseRuleVerdictSchema } from './house-rules.ts';
 import { limits } from './limits.ts';
 
 const mm = 1e-3;
@@ -169,6 +170,8 @@ export const revisionSchema = z.object({
   state: z.enum(revisionStates),
   content: strategyContentSchema,
   prediction: predictionSchema,
+  /** What the plant's rules say: of a draft today, of what was handed in as they stood then. */
+  houseRules: z.array(houseRuleVerdictSchema),
   machine: z.object({ id: idSchema, name: z.string(), revisionNumber: z.number().int() }),
   nozzle: z.object({ id: idSchema, name: z.string(), type: z.enum(['single', 'double']), diameter: z.number() }),
   touchedBy: z.array(personSchema),

@@ -13,6 +13,7 @@ import {
   uniqueIndex,
   uuid,
 } from 'drizzle-orm/pg-core';
+import type { HouseRuleVerdict } from '../../shared/house-rules.ts';
 import type { Prediction, RevisionState, StrategyContent } from '../../shared/strategies.ts';
 import { instant, plantId } from './columns.ts';
 import { machineRevisions } from './machine-revisions.ts';
@@ -54,6 +55,8 @@ export const strategyRevisions = pgTable(
     modelVersion: text().notNull(),
     /** What a list draws of the prediction, so that it needn't read the whole. */
     core: jsonb().$type<Core>().notNull(),
+    /** What the plant's rules said when it was handed in; null while it is a draft, which is judged each time it is read. */
+    houseRules: jsonb().$type<readonly HouseRuleVerdict[]>(),
     changedAt: instant().notNull().defaultNow(),
     changedBy: uuid().notNull(),
   },
@@ -109,6 +112,10 @@ export const strategyRevisions = pgTable(
     check(
       'strategy_revisions_thickness',
       sql`${t.thicknessMin} >= 1000 and ${t.thicknessMin} < ${t.thicknessMax} and ${t.thicknessMax} <= 60000`,
+    ),
+    check(
+      'strategy_revisions_keeps_what_blocks',
+      sql`${t.houseRules} is null or not jsonb_path_exists(${t.houseRules}, '$[*] ? (@.blocks == true && @.state != "holds")')`,
     ),
     check(
       'strategy_revisions_columns_are_content',

@@ -4,7 +4,7 @@ import type { Plate } from '../../shared/plates.ts';
 import type { Check, StrategyContent } from '../../shared/strategies.ts';
 import { dialForFocus } from '../../strategy/beam/index.ts';
 import type { FocusScale } from '../../strategy/machine.ts';
-import { DEFAULT_RESERVE_RULES } from '../../strategy/pierce/index.ts';
+import type { ReserveRules } from '../../strategy/pierce/index.ts';
 import { estimatesFor } from './estimates.ts';
 import type { Approved } from './repository.ts';
 
@@ -15,6 +15,8 @@ export type CardFacts = {
   readonly newestMachineRevision: number;
   readonly approvedBy: string;
   readonly plate: Plate | null;
+  /** Least reserves that the plant asks for. */
+  readonly reserve: ReserveRules;
   readonly nominalThickness: number; // µm
   readonly cornerPlans: Match['cornerPlans'];
 };
@@ -56,7 +58,7 @@ export function cardMatch(facts: CardFacts): Match {
       ...measuredCaution(plate, content),
       ...dialCautions([...stages.flatMap(({ from, to }) => [from.dial, to.dial]), cut.dial]),
       ...machineCaution(machineRevision.number, newestMachineRevision),
-      ...reserveCautions(cold, hot),
+      ...reserveCautions(cold, hot, facts.reserve),
       {
         id: 'estimate',
         state: 'caution',
@@ -120,13 +122,13 @@ function machineCaution(number: number, newest: number): Check[] {
 }
 
 /** The approver saw the reserve at the thickest of the range; this is the plate in hand. */
-function reserveCautions(cold: CardEstimate, hot: CardEstimate): Check[] {
+function reserveCautions(cold: CardEstimate, hot: CardEstimate, rules: ReserveRules): Check[] {
   const cases = [
-    { id: 'reserve-cold', on: 'a cold plate', least: DEFAULT_RESERVE_RULES.cold, estimate: cold },
+    { id: 'reserve-cold', on: 'a cold plate', least: rules.cold, estimate: cold },
     {
       id: 'reserve-hot',
       on: `a plate at ${celsius(hot.plateTemperature)}`,
-      least: DEFAULT_RESERVE_RULES.hot,
+      least: rules.hot,
       estimate: hot,
     },
   ];

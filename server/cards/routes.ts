@@ -1,7 +1,9 @@
 import type { Transaction } from '../../db/database.ts';
 import { cardEndpoints, type Card } from '../../shared/cards.ts';
+import { reserveRulesOf } from '../../shared/prediction.ts';
 import { plansWith } from '../corner-plans/repository.ts';
 import { notFound } from '../errors.ts';
+import { rulesInForce } from '../house-rules/repository.ts';
 import { findMachine } from '../machines/repository.ts';
 import { namesOf } from '../people/names.ts';
 import { findPlateByTag, presentPlate } from '../plates/repository.ts';
@@ -52,11 +54,13 @@ async function matchFor(
   }
   const names = await namesOf(tx);
   const plans = await plansWith(tx, [found.revision.id]);
+  const rules = await rulesInForce(tx);
   return cardMatch({
     found,
     newestMachineRevision,
     approvedBy: names(found.approval.approvedBy).name,
     plate,
+    reserve: reserveRulesOf(rules.map(({ expression }) => expression)),
     nominalThickness: wanted.nominalThickness,
     cornerPlans: plans.map(({ id, partId, partName, totals }) => ({
       id,

@@ -15,7 +15,8 @@ export type Subject = {
     | 'request'
     | 'part'
     | 'cornerPlan'
-    | 'report';
+    | 'report'
+    | 'houseRule';
   readonly id: string;
 };
 

@@ -1,7 +1,8 @@
 import type { Transaction } from '../../db/database.ts';
-import { predictionOf, type Judged } from '../../shared/prediction.ts';
+import { predictionOf, reserveRulesOf, type Judged } from '../../shared/prediction.ts';
 import type { Prediction, StrategyContent } from '../../shared/strategies.ts';
 import { AppError } from '../errors.ts';
+import { rulesInForce } from '../house-rules/repository.ts';
 import { findMachineRevision } from '../machines/repository.ts';
 import { findNozzle } from '../nozzles/routes.ts';
 import { contentColumns } from './repository.ts';
@@ -16,13 +17,21 @@ export async function judged(tx: Transaction, content: StrategyContent): Promise
   ];
   if (!machine || !nozzle) throw new AppError('invalid-fields', errors[0]?.detail ?? '', { errors });
   const given = { content, profile: machine.profile, nozzle: { type: nozzle.type, diameter: nozzle.diameter } };
-  return contentColumns(content, machine.machineId, predicted(given));
+  const rules = await rulesInForce(tx);
+  return contentColumns(
+    content,
+    machine.machineId,
+    predicted(
+      given,
+      rules.map(({ expression }) => expression),
+    ),
+  );
 }
 
 /** The model refuses what it can't follow with a RangeError that says why: then the content is at fault, not the server. */
-function predicted(given: Judged): Prediction {
+function predicted(given: Judged, rules: readonly string[]): Prediction {
   try {
-    return predictionOf(given);
+    return predictionOf(given, reserveRulesOf(rules));
   } catch (error) {
     if (!(error instanceof RangeError)) throw error;
     const detail = `The model can’t follow this pierce: ${error.message}.`;

@@ -1,10 +1,12 @@
 import type { Person } from '../../shared/basics.ts';
+import type { HouseRuleVerdict } from '../../shared/house-rules.ts';
 import type { Revision } from '../../shared/strategies.ts';
 import type { WholeRevision } from './repository.ts';
 
 export function presentRevision(
   { revision, strategyName, machine, nozzle, authors, reviews }: WholeRevision,
   names: (userId: string) => Person,
+  houseRules: readonly HouseRuleVerdict[],
 ): Revision {
   return {
     id: revision.id,
@@ -15,6 +17,7 @@ export function presentRevision(
     state: revision.state,
     content: revision.content,
     prediction: revision.prediction,
+    houseRules: [...houseRules],
     machine: { id: machine.id, name: machine.name, revisionNumber: machine.revisionNumber },
     nozzle: { id: nozzle.id, name: nozzle.name, type: nozzle.type, diameter: nozzle.diameter },
     touchedBy: authors.map(names),

@@ -8,6 +8,7 @@ import { reviews } from '../../db/schema/reviews.ts';
 import { revisionAuthors } from '../../db/schema/revision-authors.ts';
 import { strategies } from '../../db/schema/strategies.ts';
 import { strategyRevisions } from '../../db/schema/strategy-revisions.ts';
+import type { HouseRuleVerdict } from '../../shared/house-rules.ts';
 import type { Prediction, StrategyContent } from '../../shared/strategies.ts';
 import { coreOf } from './core.ts';
 
@@ -136,10 +137,18 @@ export async function moveRevision(
   revision: RevisionRow,
   state: RevisionRow['state'],
   by: string,
+  /** What the rules said, when it is handed in. */
+  houseRules?: readonly HouseRuleVerdict[],
 ): Promise<void> {
   await tx
     .update(strategyRevisions)
-    .set({ state, version: revision.version + 1, changedAt: sql`now()`, changedBy: by })
+    .set({
+      state,
+      version: revision.version + 1,
+      changedAt: sql`now()`,
+      changedBy: by,
+      ...(houseRules === undefined ? {} : { houseRules }),
+    })
     .where(eq(strategyRevisions.id, revision.id));
 }
 

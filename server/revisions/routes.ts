@@ -1,8 +1,10 @@
 import { v7 as newId } from 'uuid';
 import type { Transaction } from '../../db/database.ts';
+import { verdictBlocks, type HouseRuleVerdict } from '../../shared/house-rules.ts';
 import { can, type Actor } from '../../shared/policy.ts';
 import { revisionEndpoints, type RevisionState } from '../../shared/strategies.ts';
 import { AppError, notFound } from '../errors.ts';
+import { houseRulesOf } from '../house-rules/verdicts.ts';
 import { namesOf } from '../people/names.ts';
 import { note } from '../record/note.ts';
 import type { Mount } from '../route.ts';
@@ -42,8 +44,14 @@ export function revisionRoutes({ route }: Mount): void {
     const revision = await locked(tx, params.revisionId);
     unchanged(revision.version);
     mustBe(revision, 'draft', 'Only a draft can be handed in.');
-    await decide(tx, actor, revision, { state: 'inReview', verdict: 'submitted', words: body.words });
-    await note(tx, actor, 'revision.submitted', subject(revision), { version: revision.version, words: body.words });
+    const houseRules = await houseRulesOf(tx, revision);
+    mustKeep(houseRules);
+    await decide(tx, actor, revision, { state: 'inReview', verdict: 'submitted', words: body.words, houseRules });
+    await note(tx, actor, 'revision.submitted', subject(revision), {
+      version: revision.version,
+      words: body.words,
+      houseRules: houseRules.map(({ ruleId, expression, state }) => ({ ruleId, expression, state })),
+    });
     return replyWithRevision(tx, revision.id);
   });
 
@@ -99,7 +107,8 @@ export function revisionRoutes({ route }: Mount): void {
 export async function replyWithRevision(tx: Transaction, id: string) {
   const [whole] = await wholeRevisions(tx, { id });
   if (!whole) throw notFound('There is no such revision');
-  return { body: presentRevision(whole, await namesOf(tx)), version: whole.revision.version };
+  const houseRules = await houseRulesOf(tx, whole.revision);
+  return { body: presentRevision(whole, await namesOf(tx), houseRules), version: whole.revision.version };
 }
 
 const subject = ({ id }: RevisionRow) => ({ kind: 'revision', id }) as const;
@@ -128,6 +137,18 @@ function mustBe(revision: RevisionRow, state: RevisionState, why: string): void 
   if (revision.state !== state) throw new AppError('wrong-state', `It is ${inWords[revision.state]}. ${why}`);
 }
 
+/** A rule that blocks must hold: where nothing can be said of it, nobody can say that it does. */
+function mustKeep(verdicts: readonly HouseRuleVerdict[]): void {
+  const inTheWay = verdicts.filter(verdictBlocks);
+  if (inTheWay.length === 0) return;
+  const errors = inTheWay.map(({ ruleId, sentence, why }) => ({
+    pointer: `/houseRules/${ruleId}`,
+    detail: `${sentence} ${why}`,
+  }));
+  const what = errors.length === 1 ? 'A house rule is not kept:' : `${errors.length} house rules are not kept:`;
+  throw new AppError('wrong-state', `${what} ${errors.map(({ detail }) => detail).join(' ')}`, { errors });
+}
+
 async function decide(
   tx: Transaction,
   actor: Actor,
@@ -136,9 +157,10 @@ async function decide(
     state: RevisionState;
     verdict: 'submitted' | 'approved' | 'returned' | 'withdrawn' | 'superseded';
     words: string;
+    houseRules?: readonly HouseRuleVerdict[];
   },
 ): Promise<void> {
-  await moveRevision(tx, revision, to.state, actor.userId);
+  await moveRevision(tx, revision, to.state, actor.userId, to.houseRules);
   await addReview(tx, {
     plantId: actor.plantId,
     id: newId(),

@@ -1,6 +1,7 @@
 import type { Transaction } from '../../db/database.ts';
-import { strategyEndpoints } from '../../shared/strategies.ts';
+import { strategyEndpoints, type Revision } from '../../shared/strategies.ts';
 import { AppError, notFound } from '../errors.ts';
+import { houseRulesOf } from '../house-rules/verdicts.ts';
 import { namesOf } from '../people/names.ts';
 import { note } from '../record/note.ts';
 import { judged } from '../revisions/judge.ts';
@@ -101,13 +102,16 @@ async function replyWith(tx: Transaction, id: string) {
   const strategy = await findStrategy(tx, id);
   if (!strategy) throw notFound('There is no such strategy');
   const names = await namesOf(tx);
-  const revisions = await wholeRevisions(tx, { strategyId: id });
+  const revisions: Revision[] = [];
+  for (const whole of await wholeRevisions(tx, { strategyId: id })) {
+    revisions.push(presentRevision(whole, names, await houseRulesOf(tx, whole.revision)));
+  }
   return {
     body: {
       id: strategy.id,
       version: strategy.version,
       name: strategy.name,
-      revisions: revisions.map((one) => presentRevision(one, names)),
+      revisions,
     },
     version: strategy.version,
   };

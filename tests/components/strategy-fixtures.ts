@@ -64,6 +64,7 @@ export const revisionOf = (more: Partial<Revision> = {}): Revision => ({
   state: 'draft',
   content,
   prediction,
+  houseRules: [],
   machine: { id: ids.machine, name: machine.name, revisionNumber: 7 },
   nozzle,
   touchedBy: [person],

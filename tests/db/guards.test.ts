@@ -188,6 +188,79 @@ describe('an approval', () => {
   });
 });
 
+describe('a house rule', () => {
+  const rewrite = `update house_rules set expression = expression || ' ', version = version + 1, changed_by = $1`;
+
+  test('is there from a plant’s founding, twice on the reserve, and neither blocks before the lead says so', async () => {
+    const rows = await inPlant(server.database.appUrl, async (client) => {
+      const found = await client.query<{ expression: string; blocks: boolean; changed_by: string | null }>(
+        'select expression, blocks, changed_by from house_rules order by expression',
+      );
+      return found.rows;
+    });
+    expect(rows).toEqual([
+      { expression: 'reserveCold >= 2', blocks: false, changed_by: null },
+      { expression: 'reserveHot >= 2.2', blocks: false, changed_by: null },
+    ]);
+  });
+
+  test.each([
+    ['stays itself', 'update house_rules set id = gen_random_uuid(), version = version + 1, changed_by = $1'],
+    ['takes its next version with each change', 'update house_rules set blocks = true, changed_by = $1'],
+    ['is changed by somebody', 'update house_rules set blocks = ($1::uuid is null), version = version + 1'],
+    ['is never taken away', 'delete from house_rules where $1::uuid is not null'],
+  ])('%s, whoever writes', async (_law, statement) => {
+    await expect(
+      inPlant(server.database.ownerUrl, (client) => client.query(statement, [plant.userId('lead')])),
+    ).rejects.toThrow(/stays itself and takes its next version|is changed by somebody|never changed or taken away/);
+  });
+
+  test('that ended stays as it was', async () => {
+    await inPlant(server.database.ownerUrl, async (client) => {
+      const by = [plant.userId('lead')];
+      await client.query('update house_rules set ended_at = now(), version = version + 1, changed_by = $1', by);
+      await expect(client.query(rewrite, by)).rejects.toThrow('a house rule that ended stays as it was');
+    });
+  });
+
+  test('begins in force', async () => {
+    await expect(
+      inPlant(server.database.appUrl, (client) =>
+        client.query(
+          `insert into house_rules (plant_id, id, expression, sentence, ended_at) values ($1, $2, 'stalls == 0', 'None.', now())`,
+          [plant.id, newId()],
+        ),
+      ),
+    ).rejects.toThrow('begins in force');
+  });
+
+  test('said something of a revision handed in that never changes, whoever writes', async () => {
+    const submitted = await makeSubmitted(plant, { gradeGroup: 'judged' });
+    for (const url of [server.database.appUrl, server.database.ownerUrl]) {
+      await expect(
+        inPlant(url, (client) =>
+          client.query(`update strategy_revisions set house_rules = '[]' where id = $1`, [submitted.id]),
+        ),
+      ).rejects.toThrow('what the house rules said never changes once handed in');
+    }
+  });
+
+  test.each(['broken', 'unclear'])('that blocks and is %s can’t be among what was handed in', async (state) => {
+    const draft = await makeDraft(plant);
+    await expect(
+      inPlant(server.database.appUrl, (client) =>
+        client.query(`update strategy_revisions set state = 'inReview', house_rules = $2 where id = $1`, [
+          draft.id,
+          JSON.stringify([
+            { blocks: true, state: 'holds' },
+            { blocks: true, state },
+          ]),
+        ]),
+      ),
+    ).rejects.toThrow('strategy_revisions_keeps_what_blocks');
+  });
+});
+
 describe('what was said and done', () => {
   test.each(['reviews', 'record', 'revision_authors', 'machine_revisions'])(
     '%s are never changed, by the owner either',
@@ -202,14 +275,19 @@ describe('what was said and done', () => {
     },
   );
 
-  test.each(['reviews', 'record', 'record_heads', 'revision_authors', 'approvals', 'strategy_revisions'])(
-    '%s are never emptied',
-    async (table) => {
-      await expect(
-        inPlant(server.database.ownerUrl, (client) => client.query(`truncate ${table} cascade`)),
-      ).rejects.toThrow('never changed or taken away');
-    },
-  );
+  test.each([
+    'reviews',
+    'record',
+    'record_heads',
+    'revision_authors',
+    'approvals',
+    'strategy_revisions',
+    'house_rules',
+  ])('%s are never emptied', async (table) => {
+    await expect(
+      inPlant(server.database.ownerUrl, (client) => client.query(`truncate ${table} cascade`)),
+    ).rejects.toThrow('never changed or taken away');
+  });
 
   test('the record’s number, time and hashes are not the writer’s to choose', async () => {
     await expect(

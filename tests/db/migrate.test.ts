@@ -1,7 +1,12 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import path from 'node:path';
+import { v7 as newId } from 'uuid';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { migrateDatabase, roleOf } from '../../db/migrate.ts';
 import { tableGrants } from '../../db/grants.ts';
 import { connected, emptyDatabase, type TestDatabase } from '../support/database.ts';
+
+const migrations = path.join(import.meta.dirname, '../../db/migrations');
 
 let database: TestDatabase;
 beforeAll(async () => {
@@ -16,6 +21,40 @@ test('an empty database is brought up to date, and a second time changes nothing
   await migrateDatabase(database.ownerUrl, role);
   expect(await shape(database.ownerUrl)).toEqual(before);
   expect(before.length).toBeGreaterThan(100);
+});
+
+test('a plant from before house rules gets the usual ones on the reserve, as a new one does', async () => {
+  const older = await emptyDatabase();
+  try {
+    const expressions = await connected(older.ownerUrl, async (owner) => {
+      const files = readdirSync(migrations)
+        .filter((file) => file.endsWith('.sql'))
+        .sort();
+      const at = files.findIndex((file) => file.includes('house-rules'));
+      expect(at).toBeGreaterThan(0);
+      const run = async (some: readonly string[]) => {
+        for (const file of some) await owner.query(readFileSync(path.join(migrations, file), 'utf8'));
+      };
+      await run(files.slice(0, at));
+      const [before, after] = [newId(), newId()];
+      await owner.query(`insert into plants (id, name) values ($1, 'Before')`, [before]);
+      await run(files.slice(at));
+      await owner.query(`insert into plants (id, name) values ($1, 'After')`, [after]);
+      const found: string[][] = [];
+      for (const plant of [before, after]) {
+        await owner.query("select set_config('app.plant_id', $1, false)", [plant]);
+        const { rows } = await owner.query<{ expression: string }>('select expression from house_rules order by 1');
+        found.push(rows.map(({ expression }) => expression));
+      }
+      return found;
+    });
+    expect(expressions).toEqual([
+      ['reserveCold >= 2', 'reserveHot >= 2.2'],
+      ['reserveCold >= 2', 'reserveHot >= 2.2'],
+    ]);
+  } finally {
+    await older.drop();
+  }
 });
 
 test('the owner of the tables is refused as the application', async () => {

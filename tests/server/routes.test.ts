@@ -7,6 +7,7 @@ import { apiRouter } from '../../server/app.ts';
 import { endpoints } from '../../shared/api.ts';
 import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
 import type { Endpoint } from '../../shared/endpoint.ts';
+import { houseRuleEndpoints } from '../../shared/house-rules.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { can, roles, type Role } from '../../shared/policy.ts';
 import { reportEndpoints } from '../../shared/reports.ts';
@@ -168,6 +169,16 @@ async function picture(): Promise<Buffer> {
     .toBuffer();
 }
 
+let rules = 0;
+/** A rule that says what no other says. */
+const newRule = () => ({ expression: `stageCount <= ${20 + ++rules}`, sentence: 'Few stages.', blocks: false });
+const makeRule = async (plant: TestPlant): Promise<Asked> => {
+  const id = newId();
+  const lead = await plant.as('lead');
+  const { version } = await made(lead.call(houseRuleEndpoints.add, { body: { id, ...newRule() } }));
+  return { params: { ruleId: id }, version };
+};
+
 let ranges = 0;
 /** A grade group nobody used yet, so that approvals don't meet. */
 const fresh = () => ({ gradeGroup: `group ${++ranges}` });
@@ -247,6 +258,12 @@ const matrix: Readonly<Record<string, Cell>> = {
     return { params: { revisionId: id }, body: { words: 'It erupts.' }, version };
   },
   'review.list': () => ({}),
+  'houseRule.list': () => ({}),
+  'houseRule.example': () => ({}),
+  'houseRule.read': () => ({ body: { expression: 'reserveHot >= 2' } }),
+  'houseRule.add': () => ({ body: { id: newId(), ...newRule() } }),
+  'houseRule.change': async ({ plant }) => ({ ...(await makeRule(plant)), body: newRule() }),
+  'houseRule.end': ({ plant }) => makeRule(plant),
   'plate.list': () => ({}),
   'plate.get': ({ plant }) => ({ params: { plateId: plant.plateId } }),
   'plate.add': ({ plant }) => ({ body: { id: newId(), ...testPlate(plant.gradeId) } }),

@@ -1,0 +1,74 @@
+import type { Transaction } from '../../db/database.ts';
+import type { HouseRuleVerdict } from '../../shared/house-rules.ts';
+import { namedResultsOf } from '../../shared/prediction.ts';
+import type { StrategyContent } from '../../shared/strategies.ts';
+import { houseRuleHolds, houseRuleRead, houseRuleTable, type HouseRuleResults } from '../../strategy/rules/index.ts';
+import { numberText, quantityText } from '../../strategy/units/index.ts';
+import { findMachineRevision } from '../machines/repository.ts';
+import { findNozzle } from '../nozzles/routes.ts';
+import type { RevisionRow } from '../revisions/repository.ts';
+import { rulesInForce, type HouseRuleRow } from './repository.ts';
+
+/** What is known of a pierce; or why nothing is. */
+export type NamedResults =
+  { readonly kind: 'ok'; readonly results: HouseRuleResults } | { readonly kind: 'none'; readonly why: string };
+
+/** What the rules say of a revision: of a draft those in force now, of what was handed in those it was handed in under. */
+export async function houseRulesOf(
+  tx: Transaction,
+  revision: Pick<RevisionRow, 'state' | 'content' | 'houseRules'>,
+): Promise<readonly HouseRuleVerdict[]> {
+  // Handed in before there were house rules?
+  if (revision.state !== 'draft') return revision.houseRules ?? [];
+  const rules = await rulesInForce(tx);
+  if (rules.length === 0) return [];
+  const named = await namedResults(tx, revision.content);
+  return rules.map((rule) => verdictOf(rule, named));
+}
+
+/** The named results of a content, as the model has them today. */
+export async function namedResults(tx: Transaction, content: StrategyContent): Promise<NamedResults> {
+  const machine = await findMachineRevision(tx, content.machineRevisionId);
+  const nozzle = await findNozzle(tx, content.nozzleId);
+  // The revision's foreign keys say that both are there.
+  if (!machine || !nozzle) throw new Error('a revision’s machine or nozzle is not there');
+  try {
+    const { type, diameter } = nozzle;
+    return { kind: 'ok', results: namedResultsOf({ content, profile: machine.profile, nozzle: { type, diameter } }) };
+  } catch (error) {
+    // A draft that an older model could follow, and this one can't.
+    if (!(error instanceof RangeError)) throw error;
+    return { kind: 'none', why: `The model can’t follow this pierce: ${error.message}.` };
+  }
+}
+
+export function verdictOf(
+  { id, expression, sentence, blocks }: Pick<HouseRuleRow, 'id' | 'expression' | 'sentence' | 'blocks'>,
+  named: NamedResults,
+): HouseRuleVerdict {
+  return { ruleId: id, expression, sentence, blocks, ...judgement(expression, named) };
+}
+
+/** Whether a rule holds and by which values; `unclear` with the reason where nothing can be said. Never throws. */
+export function judgement(expression: string, named: NamedResults): Pick<HouseRuleVerdict, 'state' | 'why'> {
+  if (named.kind === 'none') return { state: 'unclear', why: named.why };
+  const found = houseRuleHolds(expression, named.results);
+  if (found.kind === 'none') return { state: 'unclear', why: found.why };
+  const read = houseRuleRead(expression);
+  const values = (read.kind === 'ok' ? read.uses : []).map((name) => {
+    const row = houseRuleTable.find((one) => one.name === name);
+    const value = named.results[name];
+    return value === null || row === undefined
+      ? `there is no ${name}`
+      : `${name} is ${valueText(value, row.dimension)}`;
+  });
+  return { state: found.holds ? 'holds' : 'broken', why: `Here ${values.join(', ')}.` };
+}
+
+type Dimension = (typeof houseRuleTable)[number]['dimension'];
+
+/** Plain numbers are cut off, not rounded: 1.9996 does not reach 2. */
+const valueText = (value: number, dimension: Dimension): string =>
+  dimension === 'count'
+    ? numberText(Math.trunc(value * 1000 + Math.sign(value) * 1e-6) / 1000, 3)
+    : quantityText(value, dimension, 'metric').text;
