@@ -39,7 +39,7 @@ export function CutSentence() {
           <>
             {` ${cutText.duty} `}
             <CutNumber name="duty" dimension="ratio" />
-            <Aside>{` ${cutText.mean(quantityText(cut.peakPower * cut.duty, 'power', system).text)}`}</Aside>
+            <Aside>{` ${cutText.mean(quantityText(cut.peakPower * cut.duty, 'power', system, { figures: 3 }).text)}`}</Aside>
             {` ${cutText.pulses} `}
             <CutNumber name="pulseFrequency" dimension="frequency" />
             {!readOnly && (

@@ -2,11 +2,12 @@ import { createContext, use, type Dispatch, type ReactNode } from 'react';
 import { InlineNumber } from '@/components/ui/inline-number.tsx';
 import type { FocusScale } from '@/strategy/machine.ts';
 import type { Dimension } from '@/strategy/units/index.ts';
-import type { Draft, DraftAction } from './draft.ts';
+import type { HistoryAction } from './draft-history.ts';
+import type { Draft } from './draft.ts';
 
 export type DraftEditing = {
   readonly draft: Draft;
-  readonly dispatch: Dispatch<DraftAction>;
+  readonly dispatch: Dispatch<HistoryAction>;
   /** What is not right yet, by field. */
   readonly problems: ReadonlyMap<string, string>;
   readonly readOnly: boolean;

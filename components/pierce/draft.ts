@@ -1,5 +1,5 @@
 import { strategyContentSchema, type StrategyContent } from '@/shared/strategies.ts';
-import type { Stage, StageQuantities } from '@/strategy/pierce/stage.ts';
+import { stageQuantitiesAt, type Stage, type StageQuantities } from '@/strategy/pierce/index.ts';
 
 /**
  * A strategy being edited. `content` holds every number that could be read, in range or not; `typed` the texts that are no number yet,
@@ -20,8 +20,11 @@ export type DraftAction =
   | { do: 'ramp'; index: number; quantity: RampQuantity; end: 'from' | 'to' | 'both'; value: number; field?: string }
   | { do: 'add'; at: number }
   | { do: 'duplicate'; index: number }
+  | { do: 'split'; index: number }
   | { do: 'remove'; index: number }
-  | { do: 'move'; index: number; by: -1 | 1 };
+  | { do: 'move'; index: number; by: -1 | 1 }
+  /** All stages at once: a knot moved, a proposal taken. */
+  | { do: 'stages'; change: (stages: readonly Stage[]) => readonly Stage[]; field?: string };
 
 /** Any of a stage's quantities. */
 export type RampQuantity = keyof StageQuantities;
@@ -62,6 +65,17 @@ export function draftReduce(draft: Draft, action: DraftAction): Draft {
       const same = draft.content.stages[action.index];
       return same ? withStageAt(draft, action.index + 1, same) : draft;
     }
+    case 'split': {
+      // both halves lie on the lines of the whole
+      const whole = draft.content.stages[action.index];
+      if (!whole) return draft;
+      const middle = stageQuantitiesAt(whole, 0.5);
+      const half = whole.duration / 2;
+      const second = withStageAt(draft, action.index + 1, { duration: half, from: middle, to: whole.to });
+      return withStages(second, (stages) =>
+        stages.map((stage, i) => (i === action.index ? { duration: half, from: whole.from, to: middle } : stage)),
+      );
+    }
     case 'remove': {
       if (draft.content.stages.length < 2) return draft;
       const key = draft.stageKeys[action.index];
@@ -77,6 +91,23 @@ export function draftReduce(draft: Draft, action: DraftAction): Draft {
       return {
         ...withStages(draft, (stages) => swapped(stages, action.index, to)),
         stageKeys: swapped(draft.stageKeys, action.index, to),
+      };
+    }
+    case 'stages': {
+      const stages = action.change(draft.content.stages).map(({ duration, from, to }) => ({
+        duration,
+        from: { ...from },
+        to: { ...to },
+      }));
+      const kept = stages.length === draft.stageKeys.length;
+      const typed = Object.entries(draft.typed).filter(
+        ([field]) => !draft.stageKeys.some((key) => field.startsWith(`${key}.`)),
+      );
+      return {
+        content: { ...draft.content, stages },
+        stageKeys: kept ? draft.stageKeys : stages.map((_, index) => `s${draft.nextKey + index}`),
+        typed: Object.fromEntries(typed),
+        nextKey: kept ? draft.nextKey : draft.nextKey + stages.length,
       };
     }
   }

@@ -1,48 +1,41 @@
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
-import { quantityIn, type Dimension, type UnitSystem } from '@/strategy/units/index.ts';
-import { niceCeiling } from './nice-ticks.ts';
+import type { UnitSystem } from '@/strategy/units/index.ts';
+import { laneKnots } from './knots.ts';
+import { laneNumber, laneUnit, laneY, type LaneScale } from './lane-scale.ts';
 import { lanePoints, letteringWidth, polylineData, type LaneName } from './section-layout.ts';
-
-/** Height of a lane with the line its name stands on, px. */
-export const laneHeight = 92;
-const nameRow = 24;
-const box = 52;
-
-const measures: Readonly<Record<LaneName, { dimension: Dimension; metric: string; inch: string }>> = {
-  standoff: { dimension: 'length', metric: 'mm', inch: 'in' },
-  focusPosition: { dimension: 'length', metric: 'mm', inch: 'in' },
-  meanPower: { dimension: 'power', metric: 'kW', inch: 'kW' },
-  oxygenPressure: { dimension: 'pressure', metric: 'bar', inch: 'psi' },
-};
 
 type LaneProps = {
   lane: LaneName;
   label: string;
   stages: readonly Stage[];
+  /** Courses to compare with, dotted. */
+  ghosts: readonly (readonly Stage[])[];
+  scale: LaneScale;
   system: UnitSystem;
   x: (time: number) => number;
   left: number;
   right: number;
   top: number;
+  box: number;
   chosen: number | null;
+  /** Its knots are drawn here, and not by the layer that moves them. */
+  knots: boolean;
 };
 
 /** One quantity over the pierce, its knots where stages begin and end. Its name has a line of its own above, so no knot runs into it. */
-export function Lane({ lane, label, stages, system, x, left, right, top, chosen }: LaneProps) {
-  const { dimension, [system]: unit } = measures[lane];
-  const points = lanePoints(stages, lane).map((point) => ({
-    ...point,
-    value: quantityIn(point.value, dimension, unit),
-  }));
-  const most = niceCeiling(Math.max(0, ...points.map((point) => point.value)));
-  const least = Math.min(0, ...points.map((point) => point.value));
-  const floor = least < 0 ? -niceCeiling(-least) : 0;
-  const y = (value: number) => top + nameRow + box - ((value - floor) / (most - floor)) * box;
-  const at = points.map((point) => ({ ...point, x: x(point.time), y: y(point.value) }));
+export function Lane(props: LaneProps) {
+  const { lane, label, stages, ghosts, scale, system, x, left, right, top, box, chosen, knots } = props;
+  const unit = laneUnit(lane, system);
+  const { floor, most } = scale;
+  const yOf = (value: number) => laneY(value, scale, top, box);
+  const course = (of: readonly Stage[]) =>
+    polylineData(
+      lanePoints(of, lane).map(({ time, value }) => ({ x: x(time), y: yOf(laneNumber(value, lane, system)) })),
+    );
   // the zero line has its figure only where it stands clear of the ends' figures
-  const zeroClear = floor < 0 && y(floor) - y(0) > 15 && y(0) - y(most) > 15;
+  const zeroClear = floor < 0 && yOf(floor) - yOf(0) > 15 && yOf(0) - yOf(most) > 15;
   const levels = zeroClear ? [floor, 0, most] : [floor, most];
   const name = `${label}, ${unit}`;
   return (
@@ -54,10 +47,10 @@ export function Lane({ lane, label, stages, system, x, left, right, top, chosen 
       </text>
       {levels.map((value) => (
         <g key={value}>
-          <line x1={left} x2={right} y1={y(value)} y2={y(value)} stroke={roles.rule} strokeWidth={1} />
+          <line x1={left} x2={right} y1={yOf(value)} y2={yOf(value)} stroke={roles.rule} strokeWidth={1} />
           <text
             x={left - 9}
-            y={y(value) + 5}
+            y={yOf(value) + 5}
             textAnchor="end"
             fontFamily={family.figure}
             fontSize={14}
@@ -67,23 +60,35 @@ export function Lane({ lane, label, stages, system, x, left, right, top, chosen 
           </text>
         </g>
       ))}
-      <path d={polylineData(at)} fill="none" stroke={roles.ink} strokeWidth={1.8} />
-      {at.map(
-        (point, index) =>
-          point.knot && (
+      {ghosts.map((ghost, index) => (
+        <path
+          key={index}
+          data-testid="lane-ghost"
+          d={course(ghost)}
+          fill="none"
+          stroke={roles.softInk}
+          strokeWidth={1.6}
+          strokeDasharray="1.5 3.5"
+        />
+      ))}
+      <path d={course(stages)} fill="none" stroke={roles.ink} strokeWidth={1.8} />
+      {knots &&
+        laneKnots(stages, lane).map((knot, index) => {
+          const marked = knot.ends.some(({ stage }) => stage === chosen);
+          return (
             <rect
               key={index}
               data-testid="lane-knot"
-              x={point.x - 4.5}
-              y={point.y - 4.5}
+              x={x(knot.time) - 4.5}
+              y={yOf(laneNumber(knot.value, lane, system)) - 4.5}
               width={9}
               height={9}
-              fill={point.knot.stage === chosen ? roles.ember : roles.sheet}
-              stroke={point.knot.stage === chosen ? roles.ember : roles.ink}
+              fill={marked ? roles.ember : roles.sheet}
+              stroke={marked ? roles.ember : roles.ink}
               strokeWidth={1.6}
             />
-          ),
-      )}
+          );
+        })}
     </g>
   );
 }

@@ -5,7 +5,10 @@ import { machinesQuery } from '@/components/data/machines.ts';
 import { nozzlesQuery } from '@/components/data/nozzles.ts';
 import { isProblem } from '@/components/data/problem.ts';
 import { useRevisionSave } from '@/components/data/revisions.ts';
+import { strategyQuery } from '@/components/data/strategies.ts';
 import { momentText } from '@/components/text/moments.ts';
+import { compareText, compareWords, historyText, proposeText } from '@/components/text/pierce-designer.ts';
+import { depthsAtEnds, type Explained } from '@/components/text/pierce-explain.ts';
 import { revisionText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
@@ -19,19 +22,31 @@ import { Notice } from '@/components/ui/notice.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Small } from '@/components/ui/text.tsx';
-import type { Revision } from '@/shared/strategies.ts';
+import { Tick } from '@/components/ui/tick.tsx';
+import { useUnitSystem } from '@/components/ui/unit-system.ts';
+import { predictionOf } from '@/shared/prediction.ts';
+import type { Prediction, Revision, StrategyContent } from '@/shared/strategies.ts';
+import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
+import type { Stage } from '@/strategy/pierce/stage.ts';
 import { CheckList } from './check-list.tsx';
 import { CornerRulesSentence } from './corner-rules-sentence.tsx';
 import { CutSentence } from './cut-sentence.tsx';
 import { DraftProvider } from './draft-context.tsx';
-import { contentSame, draftOf, draftProblems, draftReduce } from './draft.ts';
+import { historyOf, historyReduce } from './draft-history.ts';
+import { contentSame, draftOf, draftProblems } from './draft.ts';
+import { ExplainDialog } from './explain.tsx';
+import type { Ghost } from './ghost.ts';
 import { GoodFor } from './good-for.tsx';
 import { History } from './history.tsx';
 import { forgetDraft, keepDraft, keptDraft } from './kept-drafts.ts';
-import { SectionPanel } from './section-panel.tsx';
+import { ProposePanel, type ProposalGround } from './propose-panel.tsx';
+import { SectionPanel, type SectionEdit } from './section-panel.tsx';
 import { stageEnds } from './section-layout.ts';
+import { SensitivityPanel } from './sensitivity-panel.tsx';
 import { StageSentence } from './stage-sentence.tsx';
 import { usePrediction } from './use-prediction.ts';
+import { useProposal, type ProposalState } from './use-proposal.ts';
+import { useUndoKeys } from './use-undo-keys.ts';
 
 /** How a draft stands when somebody decides about it. */
 export type DraftStanding = {
@@ -61,9 +76,15 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
   // the version this draft was made from: what If-Match says, also after somebody else has saved
   const [base, setBase] = useState({ version: before?.version ?? revision.version, content: revision.content });
   const [restored] = useState(before !== null);
-  const [draft, dispatch] = useReducer(draftReduce, before?.draft ?? draftOf(revision.content));
+  const [steps, dispatch] = useReducer(historyReduce, before?.draft ?? draftOf(revision.content), historyOf);
+  const { draft } = steps;
   const [chosen, setChosen] = useState<number | null>(null);
   const [dropping, setDropping] = useState(false);
+  const [comparing, setComparing] = useState(false);
+  const [proposing, setProposing] = useState(false);
+  const [explained, setExplained] = useState<Explained | null>(null);
+  const system = useUnitSystem();
+  const proposal = useProposal();
   const save = useRevisionSave();
 
   const problems = useMemo(() => draftProblems(draft), [draft]);
@@ -98,6 +119,48 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
   });
   // a revision that can't be changed shows what was decided on, not what today's model would say
   const shown = readOnly ? { prediction: revision.prediction, content: revision.content, behind: false } : live;
+
+  useUndoKeys(!readOnly, dispatch);
+  const profile = machineRevision?.profile ?? null;
+  const strategy = useQuery(strategyQuery(revision.strategyId));
+  const former = strategy.data?.revisions
+    .filter(({ number }) => number < revision.number)
+    .reduce<Revision | null>((newest, one) => (newest && newest.number > one.number ? newest : one), null);
+
+  const ground = useMemo<ProposalGround | null>(
+    () => (problems.size === 0 && profile && nozzle ? groundOf(draft.content, profile, nozzle) : null),
+    [problems, draft.content, profile, nozzle],
+  );
+  // made for another plate, machine or nozzle than stands here now: it is no proposal any more
+  const outdated = proposal.state.kind === 'answered' && ground !== null && !groundSame(ground, proposal.state.input);
+  const proposalState: ProposalState = outdated ? { kind: 'idle' } : proposal.state;
+  const answered = proposalState.kind === 'answered' ? proposalState : null;
+  const proposedStages = answered
+    ? answered.proposal.kind === 'ok'
+      ? answered.proposal.stages
+      : answered.proposal.nearest
+    : null;
+  const proposed = useMemo(
+    () => (proposedStages && profile && nozzle ? predictedOf(live.content, proposedStages, profile, nozzle) : null),
+    [proposedStages, live.content, profile, nozzle],
+  );
+  const ghosts = useMemo<readonly Ghost[]>(
+    () => [
+      ...(comparing && former
+        ? [ghostOf(compareText.label(former.number), former.content.stages, former.prediction)]
+        : []),
+      ...(proposed && proposedStages && answered
+        ? [
+            ghostOf(
+              answered.proposal.kind === 'ok' ? proposeText.label : proposeText.nearestLabel,
+              proposedStages,
+              proposed,
+            ),
+          ]
+        : []),
+    ],
+    [comparing, former, proposed, proposedStages, answered],
+  );
 
   const saveNow = async (version: number): Promise<Revision | null> => {
     try {
@@ -179,6 +242,76 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
     return revisionText.throughHere(cold.value - start);
   };
 
+  const edit: SectionEdit | null =
+    readOnly || live.behind || !profile || !nozzle
+      ? null
+      : {
+          profile,
+          nozzle,
+          onStages: (change, field) => dispatch({ do: 'stages', change, field }),
+          onSettle: () => dispatch({ do: 'settle' }),
+          onChoose: setChosen,
+        };
+  const depths = depthsAtEnds(shown.prediction, shown.content);
+  const depthOf = (index: number) => {
+    const depth = depths[index];
+    return depth === undefined || shown.behind ? null : depth;
+  };
+
+  const bar = (!readOnly || former) && (
+    <Stack gap="xs">
+      <View role="group" aria-label={historyText.bar}>
+        <Row gap="s">
+          {!readOnly && (
+            <>
+              <Button
+                label={historyText.undo}
+                disabled={steps.past.length === 0}
+                onPress={() => dispatch({ do: 'undo' })}
+              />
+              <Button
+                label={historyText.redo}
+                disabled={steps.future.length === 0}
+                onPress={() => dispatch({ do: 'redo' })}
+              />
+              <Button label={proposeText.open} expanded={proposing} onPress={() => setProposing(!proposing)} />
+            </>
+          )}
+          {former && <Tick label={compareText.toggle(former.number)} checked={comparing} onChange={setComparing} />}
+        </Row>
+      </View>
+      {comparing && former && (
+        <View role="status">
+          <Small>{compareWords(compareText.label(former.number), former.prediction, shown.prediction)}</Small>
+        </View>
+      )}
+    </Stack>
+  );
+  const proposePanel = proposing && !readOnly && (
+    <ProposePanel
+      ground={ground}
+      stages={draft.content.stages}
+      stageKeys={draft.stageKeys}
+      state={proposalState}
+      proposed={proposed}
+      now={shown.prediction}
+      onBegin={proposal.begin}
+      onCancel={proposal.clear}
+      onAccept={(stages) => {
+        dispatch({ do: 'stages', change: () => stages });
+        proposal.clear();
+        setProposing(false);
+      }}
+      onClose={() => {
+        proposal.clear();
+        setProposing(false);
+      }}
+    />
+  );
+  const sensitivity = profile && nozzle && !shown.behind && (
+    <SensitivityPanel content={shown.content} profile={profile} nozzle={nozzle} />
+  );
+
   const section = (
     <Stack gap="s">
       {shown.behind && (
@@ -192,6 +325,8 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
         machine={machine && machineRevision ? { name: machine.name, revisionNumber: machineRevision.number } : null}
         nozzle={nozzle}
         chosen={chosen}
+        ghosts={ghosts}
+        edit={edit}
       />
     </Stack>
   );
@@ -200,7 +335,14 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
       {draft.content.stages.map((stage, index) => (
         <Stack key={draft.stageKeys[index]} gap="s">
           {index > 0 && <Divider />}
-          <StageSentence index={index} stage={stage} through={throughIn(index)} onChoose={() => setChosen(index)} />
+          <StageSentence
+            index={index}
+            stage={stage}
+            through={throughIn(index)}
+            depth={depthOf(index)}
+            onExplainDepth={() => setExplained({ name: 'depth', stage: index })}
+            onChoose={() => setChosen(index)}
+          />
         </Stack>
       ))}
     </Panel>
@@ -233,36 +375,50 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
   );
   return (
     <DraftProvider value={{ draft, dispatch, problems, readOnly, scale: machineRevision?.profile.focusScale ?? null }}>
-      {wide ? (
-        <Row align="flex-start" wrap={false} gap="xl">
-          <Cell grow={5}>
-            <Stack gap="l">
-              {section}
-              {checks}
-              {conditions}
-              <EstimateNote />
-            </Stack>
-          </Cell>
-          <Cell grow={4}>
-            <Stack gap="l">
-              {saveBar || decisions(standing)}
-              {stages}
-              {history}
-            </Stack>
-          </Cell>
-        </Row>
-      ) : (
-        <Stack gap="l">
-          {readOnly && decisions(standing)}
-          {section}
-          {checks}
-          {stages}
-          {conditions}
-          {history}
-          <EstimateNote />
-          {!readOnly && <StickyBar>{saveBar}</StickyBar>}
-        </Stack>
-      )}
+      {/* whoever leaves a field has finished a step */}
+      <div onBlur={() => dispatch({ do: 'settle' })}>
+        {wide ? (
+          <Row align="flex-start" wrap={false} gap="xl">
+            <Cell grow={5}>
+              <Stack gap="l">
+                {bar}
+                {section}
+                {checks}
+                {sensitivity}
+                {conditions}
+                <EstimateNote />
+              </Stack>
+            </Cell>
+            <Cell grow={4}>
+              <Stack gap="l">
+                {saveBar || decisions(standing)}
+                {proposePanel}
+                {stages}
+                {history}
+              </Stack>
+            </Cell>
+          </Row>
+        ) : (
+          <Stack gap="l">
+            {readOnly && decisions(standing)}
+            {bar}
+            {proposePanel}
+            {section}
+            {checks}
+            {stages}
+            {sensitivity}
+            {conditions}
+            {history}
+            <EstimateNote />
+            {!readOnly && <StickyBar>{saveBar}</StickyBar>}
+          </Stack>
+        )}
+      </div>
+      <ExplainDialog
+        explained={explained}
+        from={{ prediction: shown.prediction, content: shown.content, nozzle, system }}
+        onClose={() => setExplained(null)}
+      />
       <Dialog
         title={revisionText.dropTitle}
         open={dropping}
@@ -285,6 +441,40 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
     </DraftProvider>
   );
 }
+
+const groundOf = (content: StrategyContent, profile: MachineProfile, nozzle: Nozzle): ProposalGround => ({
+  profile,
+  nozzle: { type: nozzle.type, diameter: nozzle.diameter },
+  thickness: { min: content.thickness.min * 1e-6, max: content.thickness.max * 1e-6 },
+  hottestPlateTemperature: content.hottestPlate,
+});
+
+const groundSame = (a: ProposalGround, b: ProposalGround): boolean =>
+  JSON.stringify([a.profile, a.nozzle, a.thickness, a.hottestPlateTemperature]) ===
+  JSON.stringify([b.profile, b.nozzle, b.thickness, b.hottestPlateTemperature]);
+
+/** What other stages would come to in the same strategy; null where the model can't follow. */
+function predictedOf(
+  content: StrategyContent,
+  stages: readonly Stage[],
+  profile: MachineProfile,
+  nozzle: Nozzle,
+): Prediction | null {
+  try {
+    const own = stages.map(({ duration, from, to }) => ({ duration, from: { ...from }, to: { ...to } }));
+    return predictionOf({ content: { ...content, stages: own }, profile, nozzle });
+  } catch (error) {
+    if (error instanceof RangeError) return null;
+    throw error;
+  }
+}
+
+const ghostOf = (label: string, stages: readonly Stage[], { routineTime, cold }: Prediction): Ghost => ({
+  label,
+  stages,
+  routineTime,
+  cold,
+});
 
 /** What must stay at hand on a phone, above the page's lower edge. */
 function StickyBar({ children }: { children: ReactNode }) {

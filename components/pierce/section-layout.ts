@@ -35,7 +35,9 @@ export function dimensionSpan(from: number, to: number, wordings: readonly strin
 }
 
 /** The trace up to the moment of breakthrough, each point finite. */
-export function traceUntilThrough(condition: Condition): { time: number; depth: number }[] {
+export function traceUntilThrough(
+  condition: Pick<Condition, 'trace' | 'breakthrough' | 'thickness'>,
+): { time: number; depth: number }[] {
   const { time, depth } = condition.trace;
   const through = condition.breakthrough.kind === 'ok' ? condition.breakthrough.value : Infinity;
   const points: { time: number; depth: number }[] = [];

@@ -1,11 +1,12 @@
-import { useState } from 'react';
+import { useMemo, useRef, useState } from 'react';
 import { useLayout } from '@/components/theme/layout.ts';
 import { space } from '@/components/theme/space.ts';
+import { knotText } from '@/components/text/pierce-designer.ts';
+import { resultLabel, resultValue, type Explained } from '@/components/text/pierce-explain.ts';
 import {
   conditionWords,
   laneText,
   nozzleWords,
-  reserveText,
   revisionText,
   sectionText,
   thicknessRangeText,
@@ -16,44 +17,110 @@ import { Sheet } from '@/components/ui/sheet.tsx';
 import { Stack } from '@/components/ui/stack.tsx';
 import { Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
-import type { StrategyContent } from '@/shared/strategies.ts';
+import type { NozzleRow } from '@/shared/machines.ts';
+import { predictionOf } from '@/shared/prediction.ts';
+import type { Prediction, StrategyContent } from '@/shared/strategies.ts';
+import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
+import type { Stage } from '@/strategy/pierce/stage.ts';
 import { quantityText } from '@/strategy/units/index.ts';
+import { ExplainDialog, ResultButton, ResultGrid } from './explain.tsx';
+import type { Ghost } from './ghost.ts';
+import { KnotEditor } from './knot-editor.tsx';
+import type { KnotEditing } from './knot-layer.tsx';
+import { targetMoved, targetValue, type Target } from './knots.ts';
 import { laneNames, type LaneName } from './section-layout.ts';
 import { SectionView } from './section-view.tsx';
 import type { LivePrediction } from './use-prediction.ts';
+
+/** What the drawing changes when something in it is moved. */
+export type SectionEdit = {
+  readonly profile: MachineProfile;
+  readonly nozzle: Nozzle;
+  readonly onStages: (change: (stages: readonly Stage[]) => readonly Stage[], field: string) => void;
+  readonly onSettle: () => void;
+  readonly onChoose: (stage: number) => void;
+};
 
 type SectionPanelProps = {
   live: LivePrediction;
   /** As it stands on the screen, for the title block. */
   content: StrategyContent;
   machine: { name: string; revisionNumber: number } | null;
-  nozzle: { name: string; type: 'single' | 'double'; diameter: number } | null;
+  nozzle: (Nozzle & Pick<NozzleRow, 'name'>) | null;
   chosen: number | null;
+  ghosts?: readonly Ghost[];
+  /** Null where the numbers can't be changed now. */
+  edit?: SectionEdit | null;
 };
 
 /** The section with its lanes, and the title block that says what it is of. On a phone one lane at a time. */
-export function SectionPanel({ live, content, machine, nozzle, chosen }: SectionPanelProps) {
+export function SectionPanel({ live, content, machine, nozzle, chosen, ghosts, edit = null }: SectionPanelProps) {
   const { wide, width } = useLayout();
   const system = useUnitSystem();
   const [lane, setLane] = useState<LaneName>('meanPower');
-  const { prediction } = live;
-  const reserve = (which: 'cold' | 'hot') => {
-    const { reserve: one } = prediction[which];
-    return reserveText(one.kind === 'ok' ? one.value : null);
-  };
+  const [chosenTarget, setTarget] = useState<Target | null>(null);
+  const [explained, setExplained] = useState<Explained | null>(null);
+  const [preview, setPreview] = useFrameState<{ target: Target; value: number } | null>(null);
+
+  const lanes = wide ? laneNames : [lane];
+  // while something is dragged only this panel is drawn anew; the form gets the number when it is let go
+  const dragged = useMemo(() => (preview && edit ? previewed(live, preview, edit) : null), [live, preview, edit]);
+  const shown = dragged ?? live;
+  const { prediction } = shown;
+  const { stages } = shown.content;
+  const inSight = (target: Target) => target.kind === 'duration' || lanes.includes(target.lane);
+  const target =
+    chosenTarget && inSight(chosenTarget) && targetValue(stages, chosenTarget) !== null ? chosenTarget : null;
+
+  const editing: KnotEditing | undefined = edit
+    ? {
+        profile: edit.profile,
+        target,
+        onTarget: (next) => {
+          setTarget(next);
+          edit.onChoose(next.stage);
+        },
+        onPreview: setPreview,
+        onCommit: (moved, value) =>
+          edit.onStages((before) => targetMoved(before, moved, value), `knot ${JSON.stringify(moved)}`),
+        onSettle: edit.onSettle,
+      }
+    : undefined;
+
+  const from = { prediction, content: shown.content, nozzle, system };
+  const reserve = (name: 'reserveCold' | 'reserveHot') => (
+    <ResultButton
+      label={resultLabel[name]}
+      value={resultValue(name, prediction, system)}
+      onPress={() => setExplained({ name })}
+    />
+  );
   return (
     <Stack gap="m">
       <Panel flush>
         <div style={{ padding: wide ? space.l : space.s, paddingBottom: space.s }}>
           <SectionView
             prediction={prediction}
-            stages={live.content.stages}
+            stages={stages}
             system={system}
-            lanes={wide ? laneNames : [lane]}
+            lanes={lanes}
             chosen={chosen}
             depth={wide ? 260 : 190}
+            laneBox={wide ? 56 : 110}
+            ghosts={ghosts}
+            held={dragged ? live.content.stages : undefined}
+            editing={editing}
           />
         </div>
+        {editing && (
+          <div style={{ padding: wide ? space.l : space.m, paddingTop: 0 }}>
+            {target ? (
+              <KnotEditor key={JSON.stringify(target)} {...{ editing, target, stages, system }} />
+            ) : (
+              <Small>{knotText.none}</Small>
+            )}
+          </div>
+        )}
       </Panel>
       {!wide && (
         <Choice
@@ -88,18 +155,65 @@ export function SectionPanel({ live, content, machine, nozzle, chosen }: Section
             : []),
           ...(nozzle ? [{ label: revisionText.block.nozzle, value: nozzleWords(nozzle, system), share: 1.5 }] : []),
           { label: revisionText.block.goodTo, value: quantityText(content.hottestPlate, 'temperature', system).text },
-          { label: revisionText.block.cold, value: reserve('cold') },
-          { label: revisionText.block.hot, value: reserve('hot') },
+          { label: revisionText.block.cold, value: reserve('reserveCold') },
+          { label: revisionText.block.hot, value: reserve('reserveHot') },
         ]}
       />
-      <Sheet
-        label={revisionText.block.energy}
-        cells={[
-          { label: revisionText.block.crater, value: quantityText(prediction.craterRadius, 'length', system).text },
-          { label: revisionText.block.energy, value: quantityText(prediction.energy, 'energy', system).text },
-          { label: revisionText.block.oxygen, value: quantityText(prediction.oxygenUsed, 'mass', system).text },
-        ]}
+      <ResultGrid
+        names={['throughCold', 'throughHot', 'crater', 'eruption', 'meanPower', 'energy', 'oxygen']}
+        from={from}
+        onExplain={setExplained}
       />
+      <ExplainDialog explained={explained} from={from} onClose={() => setExplained(null)} />
     </Stack>
   );
+}
+
+/** The drawing as it would be if what is dragged were let go now; with the last prediction where the model can't follow. */
+function previewed(
+  live: LivePrediction,
+  { target, value }: { target: Target; value: number },
+  { profile, nozzle }: SectionEdit,
+): LivePrediction {
+  const stages = targetMoved(live.content.stages, target, value).map(({ duration, from, to }) => ({
+    duration,
+    from: { ...from },
+    to: { ...to },
+  }));
+  const content = { ...live.content, stages };
+  return { prediction: predicted(content, profile, nozzle) ?? live.prediction, content, behind: false };
+}
+
+function predicted(content: StrategyContent, profile: MachineProfile, nozzle: Nozzle): Prediction | null {
+  try {
+    return predictionOf({ content, profile, nozzle });
+  } catch (error) {
+    if (error instanceof RangeError) return null;
+    throw error;
+  }
+}
+
+/** State that is drawn at most once a frame however often it is set; null is drawn at once. */
+function useFrameState<T>(first: T | null): [T | null, (next: T | null) => void] {
+  const [state, setState] = useState(first);
+  const waiting = useRef<{ frame: number; next: T } | null>(null);
+  const set = (next: T | null) => {
+    if (next === null) {
+      if (waiting.current) cancelAnimationFrame(waiting.current.frame);
+      waiting.current = null;
+      setState(null);
+      return;
+    }
+    if (waiting.current) {
+      waiting.current.next = next;
+      return;
+    }
+    const frame = requestAnimationFrame(() => {
+      const last = waiting.current;
+      waiting.current = null;
+      if (last) setState(last.next);
+    });
+    waiting.current = { frame, next };
+  };
+  return [state, set];
 }

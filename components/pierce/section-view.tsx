@@ -2,17 +2,23 @@ import { useId, useState } from 'react';
 import { View } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
+import { knotText } from '@/components/text/pierce-designer.ts';
 import { laneText, sectionText, sectionWords } from '@/components/text/pierce.ts';
 import type { Condition, Prediction } from '@/shared/strategies.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
 import { quantityIn, type UnitSystem } from '@/strategy/units/index.ts';
+import type { Ghost } from './ghost.ts';
 import { centreLine, HatchPattern } from './hatch.tsx';
-import { Lane, laneHeight } from './lane.tsx';
+import { KnotLayer, type KnotEditing } from './knot-layer.tsx';
+import { laneScale } from './lane-scale.ts';
+import { Lane } from './lane.tsx';
 import { niceTicks } from './nice-ticks.ts';
+import { dimensionRow, sectionGeometry } from './section-geometry.ts';
 import {
   dimensionSpan,
   fittingLabel,
   laneNames,
+  letteringWidth,
   polylineData,
   stageEnds,
   traceUntilThrough,
@@ -29,6 +35,14 @@ type SectionViewProps = {
   chosen?: number | null;
   /** Height of the plate's section, px. */
   depth?: number;
+  /** Height of a lane's drawn range, px. */
+  laneBox?: number;
+  /** Pierces to compare with. */
+  ghosts?: readonly Ghost[];
+  /** Stages whose scales must be held as well: those from before a drag, so that nothing jumps under the finger. */
+  held?: readonly Stage[];
+  /** The knots can be moved; without it they are drawn only. */
+  editing?: KnotEditing;
 };
 
 /** Depth against time, the plate in section, for a cold and a hot plate, with lanes for what the machine is told. */
@@ -39,44 +53,60 @@ export function SectionView({
   lanes = laneNames,
   chosen = null,
   depth = 250,
+  laneBox = 52,
+  ghosts = noGhosts,
+  held,
+  editing,
 }: SectionViewProps) {
   const [measured, setMeasured] = useState(720);
   const id = useId().replace(/\W/g, '');
   const { cold, hot, routineTime } = prediction;
-  const width = Math.max(280, measured);
-  const left = 50;
-  const right = width - 14;
-  const top = 28;
-  const bottom = top + depth;
-  const lanesTop = bottom + 2 * dimensionRow + 18;
-  const lanesBottom = lanesTop + lanes.length * laneHeight;
-  const height = lanesBottom + 30;
-
-  const x = (time: number) => left + (time / Math.max(routineTime, 1e-9)) * (right - left);
-  const y = (z: number) => top + (z / cold.thickness) * depth;
   const ends = stageEnds(stages);
+  const timeSpan = Math.max(
+    ends.at(-1) ?? 0,
+    routineTime,
+    ...(held ? [stageEnds(held).at(-1) ?? 0] : []),
+    ...ghosts.map((ghost) => ghost.routineTime),
+  );
+  const geometry = sectionGeometry({
+    measured,
+    depth,
+    lanes: lanes.length,
+    box: laneBox,
+    timeSpan,
+    editable: editing !== undefined,
+  });
+  const { width, height, left, right, top, bottom, lanesBottom, x } = geometry;
+  const end = x(routineTime);
+  const y = (z: number) => top + (z / cold.thickness) * depth;
+  const courses = [stages, ...(held ? [held] : []), ...ghosts.map((ghost) => ghost.stages)];
+  const scales = lanes.map((lane) => laneScale(courses, lane, system));
   const trace = (condition: Condition) =>
     traceUntilThrough(condition).map((p) => ({ x: x(p.time), y: y((p.depth / condition.thickness) * cold.thickness) }));
   const coldTrace = trace(cold);
-  const coldEnd = cold.breakthrough.kind === 'ok' ? x(cold.breakthrough.value) : right;
+  const coldEnd = cold.breakthrough.kind === 'ok' ? x(cold.breakthrough.value) : end;
   const lengthUnit = system === 'metric' ? 'mm' : 'in';
   const depthTicks = niceTicks(quantityIn(cold.thickness, 'length', lengthUnit), depth > 200 ? 5 : 4);
-  const timeTicks = niceTicks(routineTime, width > 560 ? 7 : 4);
+  const timeTicks = niceTicks(timeSpan, width > 560 ? 7 : 4);
 
   return (
-    <View onLayout={(event) => setMeasured(Math.round(event.nativeEvent.layout.width) || 720)}>
+    <View
+      style={{ position: 'relative' }}
+      onLayout={(event) => setMeasured(Math.round(event.nativeEvent.layout.width) || 720)}
+    >
       <svg
         width="100%"
         height={height}
         viewBox={`0 0 ${width} ${height}`}
         role="img"
         aria-label={sectionWords(prediction, stages, system)}
+        style={{ display: 'block' }}
       >
         <defs>
           <HatchPattern id={`${id}steel`} spacing={9} colour={roles.steelLine} weight={0.9} />
           <HatchPattern id={`${id}spare`} spacing={10} colour={roles.ember} weight={1} falling />
           <clipPath id={`${id}plate`}>
-            <rect x={left} y={top} width={right - left} height={depth} />
+            <rect x={left} y={top} width={Math.max(0, end - left)} height={depth} />
           </clipPath>
         </defs>
 
@@ -97,7 +127,7 @@ export function SectionView({
               data-testid="section-reserve"
               x={coldEnd}
               y={top}
-              width={Math.max(0, right - coldEnd)}
+              width={Math.max(0, end - coldEnd)}
               height={depth}
               fill={`url(#${id}spare)`}
               fillOpacity={0.55}
@@ -148,8 +178,11 @@ export function SectionView({
           );
         })}
 
-        <line x1={left} x2={right} y1={top} y2={top} stroke={roles.ink} strokeWidth={2.4} />
-        <line x1={left} x2={right} y1={bottom} y2={bottom} stroke={roles.ink} strokeWidth={2.4} />
+        {ghosts.map((ghost) => (
+          <GhostTrace key={ghost.label} ghost={ghost} thickness={cold.thickness} {...{ x, y, bottom, right }} />
+        ))}
+        <line x1={left} x2={end} y1={top} y2={top} stroke={roles.ink} strokeWidth={2.4} />
+        <line x1={left} x2={end} y1={bottom} y2={bottom} stroke={roles.ink} strokeWidth={2.4} />
         <path d={polylineData(trace(hot))} fill="none" stroke={roles.hot} strokeWidth={2} strokeDasharray="7 5" />
         <path d={polylineData(coldTrace)} fill="none" stroke={roles.cold} strokeWidth={2.6} />
         {cold.breakthrough.kind === 'ok' && (
@@ -213,7 +246,7 @@ export function SectionView({
           short={sectionText.coldShort}
           colour={roles.cold}
           x={x}
-          end={right}
+          end={end}
           y={bottom + dimensionRow}
           routineTime={routineTime}
         />
@@ -223,7 +256,7 @@ export function SectionView({
           short={sectionText.short(hot.plateTemperature, system)}
           colour={roles.hot}
           x={x}
-          end={right}
+          end={end}
           y={bottom + 2 * dimensionRow}
           routineTime={routineTime}
           dashed
@@ -233,14 +266,23 @@ export function SectionView({
           <Lane
             key={lane}
             lane={lane}
-            label={laneText[lane].name}
+            // a chosen knot's value stands in the same line and needs the room
+            label={
+              editing?.target?.kind === 'knot' && editing.target.lane === lane
+                ? knotText.laneShort(lane)
+                : laneText[lane].name
+            }
             stages={stages}
+            ghosts={ghosts.map((ghost) => ghost.stages)}
+            scale={scales[index] ?? { floor: 0, most: 1 }}
             system={system}
             x={x}
             left={left}
             right={right}
-            top={lanesTop + index * laneHeight}
+            top={geometry.laneTop(index)}
+            box={laneBox}
             chosen={chosen}
+            knots={editing === undefined}
           />
         ))}
 
@@ -248,7 +290,7 @@ export function SectionView({
           <text
             key={tick}
             x={x(tick)}
-            y={lanesBottom + 18}
+            y={geometry.timeBase}
             textAnchor={x(tick) > right - 12 ? 'end' : 'middle'}
             fontFamily={family.figure}
             fontSize={14}
@@ -258,12 +300,64 @@ export function SectionView({
           </text>
         ))}
       </svg>
+      {editing && (
+        <svg
+          width="100%"
+          height={height}
+          viewBox={`0 0 ${width} ${height}`}
+          role="group"
+          aria-label={knotText.layer}
+          // only what can be taken hold of takes touches: the page scrolls under all the rest
+          style={{ position: 'absolute', left: 0, top: 0, pointerEvents: 'none', overflow: 'visible' }}
+        >
+          <g pointerEvents="all">
+            <KnotLayer {...{ editing, stages, lanes, scales, geometry, system }} />
+          </g>
+        </svg>
+      )}
     </View>
   );
 }
 
-/** Height of one dimension line with its lettering, px. */
-const dimensionRow = 26;
+const noGhosts: readonly Ghost[] = [];
+
+type GhostTraceProps = {
+  ghost: Ghost;
+  thickness: number;
+  x: (time: number) => number;
+  y: (depth: number) => number;
+  bottom: number;
+  right: number;
+};
+
+/** Another pierce's depth on a cold plate, thin and dotted, with its name where it ends. */
+function GhostTrace({ ghost, thickness, x, y, bottom, right }: GhostTraceProps) {
+  const points = traceUntilThrough(ghost.cold).map((p) => ({
+    x: x(p.time),
+    y: y((p.depth / ghost.cold.thickness) * thickness),
+  }));
+  const last = points.at(-1);
+  if (!last) return null;
+  const width = letteringWidth(ghost.label) + 8;
+  const from = Math.max(0, Math.min(right - width, last.x + 8));
+  const base = Math.min(last.y, bottom) - 8;
+  return (
+    <g data-testid="section-ghost">
+      <path
+        d={polylineData(points)}
+        fill="none"
+        stroke={roles.ink}
+        strokeWidth={1.6}
+        strokeDasharray="1.5 3.5"
+        strokeLinecap="round"
+      />
+      <rect x={from} y={base - 14} width={width} height={19} fill={roles.sheet} />
+      <text x={from + 4} y={base} fontFamily={family.label} fontSize={14} fill={roles.ink}>
+        {ghost.label}
+      </text>
+    </g>
+  );
+}
 
 const quantityOne = (unit: 'mm' | 'in') => (unit === 'mm' ? 1e-3 : 0.0254);
 

@@ -1,5 +1,7 @@
 import { useState } from 'react';
 import { View } from 'react-native';
+import { depthText, splitText } from '@/components/text/pierce-designer.ts';
+import { explainText } from '@/components/text/pierce-explain.ts';
 import { editorText, stageText } from '@/components/text/pierce.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { InlineNumber } from '@/components/ui/inline-number.tsx';
@@ -19,18 +21,23 @@ type StageSentenceProps = {
   stage: Stage;
   /** Said when the pierce gets through during this stage. */
   through: string | null;
+  /** Depth at its end, m, while it is known. */
+  depth: number | null;
+  onExplainDepth: () => void;
   onChoose: () => void;
 };
 
 /** One stage told as sentences whose numbers are edited where they stand. */
-export function StageSentence({ index, stage, through, onChoose }: StageSentenceProps) {
+export function StageSentence({ index, stage, through, depth, onExplainDepth, onChoose }: StageSentenceProps) {
   const { draft, dispatch, readOnly, scale } = useDraft();
   const system = useUnitSystem();
   const [acting, setActing] = useState(false);
   const key = draft.stageKeys[index] ?? '';
   const number = index + 1;
   const count = draft.content.stages.length;
-  const mean = [stage.from, stage.to].map((at) => quantityText(at.peakPower * at.duty, 'power', system).text);
+  const mean = [stage.from, stage.to].map(
+    (at) => quantityText(at.peakPower * at.duty, 'power', system, { figures: 3 }).text,
+  );
   const dial = scale ? [stage.from, stage.to].map((at) => dialForFocus(scale, at.focusPosition, at.standoff)) : [];
   const firstDial = dial[0];
   const lastDial = dial[1];
@@ -99,9 +106,19 @@ export function StageSentence({ index, stage, through, onChoose }: StageSentence
           </Sentence>
         )}
         <Clause index={index} stage={stage} quantity="oxygenPressure" dimension="pressure" />
-        {through !== null && (
+        {(through !== null || depth !== null) && (
           <Sentence>
-            <Aside tone="cold">{through}</Aside>
+            {through !== null && <Aside tone="cold">{through}</Aside>}
+            {depth !== null && through === null && (
+              <InlineButton
+                label={depthText.atEnd(quantityText(depth, 'length', system).text)}
+                spoken={explainText.spoken(
+                  stageText.name(number),
+                  depthText.atEnd(quantityText(depth, 'length', system).text),
+                )}
+                onPress={onExplainDepth}
+              />
+            )}
           </Sentence>
         )}
         {!readOnly && (
@@ -128,6 +145,13 @@ export function StageSentence({ index, stage, through, onChoose }: StageSentence
                   spoken={editorText.duplicateSpoken(number)}
                   disabled={count >= limits.stages}
                   onPress={() => dispatch({ do: 'duplicate', index })}
+                />
+                <Button
+                  kind="quiet"
+                  label={splitText.split}
+                  spoken={splitText.splitSpoken(number)}
+                  disabled={count >= limits.stages}
+                  onPress={() => dispatch({ do: 'split', index })}
                 />
                 <Button
                   kind="quiet"

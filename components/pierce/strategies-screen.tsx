@@ -63,7 +63,7 @@ export function StrategiesScreen() {
   );
 
   return (
-    <Page title={strategiesText.title} actions={begin || undefined}>
+    <Page title={strategiesText.title} actions={begin || undefined} estimates>
       {strategies.data ? (
         strategies.data.length === 0 ? (
           <Empty title={strategiesText.empty} action={begin}>

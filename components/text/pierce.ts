@@ -6,7 +6,8 @@ export const reserveText = (reserve: number | null): string =>
   // cut off, not rounded: 1.996 does not reach 2.00
   reserve === null ? 'none' : (Math.floor(reserve * 100 + 1e-6) / 100).toFixed(2);
 
-const secondsText = (seconds: number): string => quantityText(seconds, 'time', 'metric').text;
+/** A predicted time: three figures say all that an estimate knows. */
+const secondsText = (seconds: number): string => quantityText(seconds, 'time', 'metric', { figures: 3 }).text;
 
 /** What the core shows, for who doesn't see it. */
 export const coreWords = (stages: number, reserve: number | null): string =>

@@ -42,10 +42,17 @@ describe('the section', () => {
     expect(screen.getByTestId('section-through-hot')).toBeTruthy();
   });
 
-  it('has a boundary between stages and knots at both ends of each', () => {
-    render(<SectionView prediction={prediction} stages={content.stages} system="metric" lanes={['standoff']} />);
+  it('has a boundary between stages, one knot where two stages meet, and two where they meet in a step', () => {
+    const { rerender } = render(
+      <SectionView prediction={prediction} stages={content.stages} system="metric" lanes={['standoff']} />,
+    );
     expect(screen.getAllByTestId('section-boundary')).toHaveLength(content.stages.length - 1);
-    expect(screen.getAllByTestId('lane-knot')).toHaveLength(2 * content.stages.length);
+    expect(screen.getAllByTestId('lane-knot')).toHaveLength(content.stages.length + 1);
+    const stepping = content.stages.map((stage, index) =>
+      index === 0 ? { ...stage, to: { ...stage.to, standoff: stage.to.standoff + 2e-3 } } : stage,
+    );
+    rerender(<SectionView prediction={prediction} stages={stepping} system="metric" lanes={['standoff']} />);
+    expect(screen.getAllByTestId('lane-knot')).toHaveLength(content.stages.length + 2);
   });
 });
 

@@ -1,0 +1,254 @@
+import { useState } from 'react';
+import { View } from 'react-native';
+import { compareWords, proposeText } from '@/components/text/pierce-designer.ts';
+import { resultLabel, resultValue } from '@/components/text/pierce-explain.ts';
+import { Button } from '@/components/ui/button.tsx';
+import { Columns } from '@/components/ui/columns.tsx';
+import { Facts } from '@/components/ui/facts.tsx';
+import { Notice } from '@/components/ui/notice.tsx';
+import { NumberField } from '@/components/ui/number-field.tsx';
+import { Panel } from '@/components/ui/panel.tsx';
+import { Progress } from '@/components/ui/progress.tsx';
+import { Row, Stack } from '@/components/ui/stack.tsx';
+import { Body, Heading, Small } from '@/components/ui/text.tsx';
+import { Tick } from '@/components/ui/tick.tsx';
+import { useUnitSystem } from '@/components/ui/unit-system.ts';
+import type { Prediction } from '@/shared/strategies.ts';
+import { DEFAULT_RESERVE_RULES, type ProposeInput, type Stage } from '@/strategy/pierce/index.ts';
+import { quantityText } from '@/strategy/units/index.ts';
+import type { ProposalState } from './use-proposal.ts';
+
+/** What every proposal starts from: machine, nozzle and plates. */
+export type ProposalGround = Pick<ProposeInput, 'profile' | 'nozzle' | 'thickness' | 'hottestPlateTemperature'>;
+
+type ProposePanelProps = {
+  /** Null while machine or nozzle are not known, or a number is wrong. */
+  ground: ProposalGround | null;
+  stages: readonly Stage[];
+  stageKeys: readonly string[];
+  state: ProposalState;
+  /** What the proposed (or nearest) stages come to, and what there is now. */
+  proposed: Prediction | null;
+  now: Prediction;
+  onBegin: (input: ProposeInput) => void;
+  onCancel: () => void;
+  onAccept: (stages: readonly Stage[]) => void;
+  onClose: () => void;
+};
+
+/** Asks the designer for a routine, around stages that are kept; its answer is looked at before it is taken. */
+export function ProposePanel(props: ProposePanelProps) {
+  const { ground, stages, stageKeys, state, proposed, now, onBegin, onCancel, onAccept, onClose } = props;
+  const [cold, setCold] = useState<number | null>(DEFAULT_RESERVE_RULES.cold);
+  const [hot, setHot] = useState<number | null>(DEFAULT_RESERVE_RULES.hot);
+  const [longest, setLongest] = useState<number | null>(null);
+  const [crater, setCrater] = useState<number | null>(null);
+  const [leadIn, setLeadIn] = useState<number | null>(null);
+  const [limiting, setLimiting] = useState(false);
+  const [kept, setKept] = useState<ReadonlySet<string>>(new Set());
+
+  const reserveError = (value: number | null) =>
+    value !== null && value >= 1 && value <= 20 ? undefined : proposeText.reserveRange;
+  const limitError = (value: number | null) =>
+    value === null || (value > 0 && Number.isFinite(value)) ? undefined : proposeText.positive;
+  const sound = [reserveError(cold), reserveError(hot), ...[longest, crater, leadIn].map(limitError)].every(
+    (error) => error === undefined,
+  );
+  const begin = () => {
+    if (!ground || !sound || cold === null || hot === null) return;
+    const pinned = stages.map((stage, index) => (kept.has(stageKeys[index] ?? '') ? stage : null));
+    onBegin({
+      ...ground,
+      reserve: { cold, hot },
+      limits: {
+        ...(longest === null ? {} : { routineTime: longest }),
+        ...(crater === null ? {} : { craterRadius: crater }),
+        ...(leadIn === null ? {} : { leadInLength: leadIn }),
+      },
+      ...(pinned.some((stage) => stage !== null) ? { pinned } : {}),
+    });
+  };
+
+  return (
+    <Panel title={proposeText.title}>
+      <Body>{proposeText.meaning}</Body>
+      <Columns least={200}>
+        <NumberField
+          label={proposeText.cold}
+          dimension="ratio"
+          unit="×"
+          value={cold}
+          onChange={setCold}
+          error={reserveError(cold)}
+        />
+        <NumberField
+          label={proposeText.hot}
+          dimension="ratio"
+          unit="×"
+          value={hot}
+          onChange={setHot}
+          error={reserveError(hot)}
+        />
+      </Columns>
+      <Row>
+        <Button
+          kind="quiet"
+          expanded={limiting}
+          label={limiting ? proposeText.fewer : proposeText.more}
+          onPress={() => {
+            setLimiting(!limiting);
+            // limits that are not in sight must not bind
+            setLongest(null);
+            setCrater(null);
+            setLeadIn(null);
+          }}
+        />
+      </Row>
+      {limiting && (
+        <Columns least={200}>
+          <NumberField
+            optional
+            label={proposeText.longest}
+            dimension="time"
+            value={longest}
+            onChange={setLongest}
+            error={limitError(longest)}
+          />
+          <NumberField
+            optional
+            label={proposeText.crater}
+            dimension="length"
+            value={crater}
+            onChange={setCrater}
+            error={limitError(crater)}
+          />
+          <NumberField
+            optional
+            label={proposeText.leadIn}
+            dimension="length"
+            value={leadIn}
+            onChange={setLeadIn}
+            error={limitError(leadIn)}
+          />
+        </Columns>
+      )}
+      <View role="group" aria-label={proposeText.keep}>
+        <Heading level={3}>{proposeText.keep}</Heading>
+        <Small>{proposeText.keepHint}</Small>
+        <Columns least={110} gap={0}>
+          {stages.map((stage, index) => {
+            const key = stageKeys[index] ?? '';
+            return (
+              <Tick
+                key={key}
+                label={proposeText.keepStage(index + 1)}
+                hint={quantityText(stage.duration, 'time', 'metric').text}
+                checked={kept.has(key)}
+                onChange={(keep) => setKept(withOrWithout(kept, key, keep))}
+              />
+            );
+          })}
+        </Columns>
+      </View>
+      {!ground && <Notice kind="plain">{proposeText.unsound}</Notice>}
+      {state.kind === 'working' ? (
+        <Stack gap="s">
+          <Progress label={proposeText.working} value={state.share} />
+          <Row>
+            <Button label={proposeText.cancel} onPress={onCancel} />
+          </Row>
+        </Stack>
+      ) : (
+        <Row>
+          <Button
+            kind={state.kind === 'answered' ? 'plain' : 'main'}
+            label={state.kind === 'answered' ? proposeText.again : proposeText.begin}
+            disabled={!ground || !sound}
+            onPress={begin}
+          />
+          <Button kind="quiet" label={proposeText.close} onPress={onClose} />
+        </Row>
+      )}
+      {state.kind === 'refused' && (
+        <Notice kind="wrong" title={proposeText.refused} live>
+          {state.why}
+        </Notice>
+      )}
+      {state.kind === 'answered' && (
+        <Answer state={state} proposed={proposed} now={now} onAccept={onAccept} onDismiss={onCancel} />
+      )}
+    </Panel>
+  );
+}
+
+type AnswerProps = {
+  state: ProposalState & { kind: 'answered' };
+  proposed: Prediction | null;
+  now: Prediction;
+  onAccept: (stages: readonly Stage[]) => void;
+  onDismiss: () => void;
+};
+
+function Answer({ state: { proposal }, proposed, now, onAccept, onDismiss }: AnswerProps) {
+  const system = useUnitSystem();
+  if (proposal.kind === 'none') {
+    const gives = proposal.inTheWay.map(({ sentence }) => sentence);
+    return (
+      <Notice kind="caution" title={proposeText.none} live>
+        {gives.length === 0 ? (
+          <Body>{proposal.why}</Body>
+        ) : (
+          <>
+            <Body strong>{proposeText.gives}</Body>
+            {gives.map((sentence) => (
+              <Body key={sentence}>{sentence}</Body>
+            ))}
+          </>
+        )}
+        <Small>{proposeText.nearest}</Small>
+        {proposed && <Beside proposed={proposed} now={now} system={system} />}
+        <Row>
+          <Button label={proposeText.takeNearest} onPress={() => onAccept(proposal.nearest)} />
+          <Button kind="quiet" label={proposeText.dismiss} onPress={onDismiss} />
+        </Row>
+      </Notice>
+    );
+  }
+  const time = quantityText(proposal.prediction.routineTime, 'time', system).text;
+  return (
+    <Notice kind="ok" title={proposeText.proposed(proposal.stages.length, time)} live>
+      <Small>{proposeText.drawn}</Small>
+      {proposed && (
+        <>
+          <Body>{compareWords(proposeText.now, now, proposed)}</Body>
+          <Beside proposed={proposed} now={now} system={system} />
+        </>
+      )}
+      <Row>
+        <Button kind="main" label={proposeText.accept} onPress={() => onAccept(proposal.stages)} />
+        <Button kind="quiet" label={proposeText.dismiss} onPress={onDismiss} />
+      </Row>
+    </Notice>
+  );
+}
+
+const compared = ['throughCold', 'reserveCold', 'reserveHot', 'crater', 'eruption', 'oxygen'] as const;
+
+/** The proposal's numbers, yours in brackets. */
+function Beside({ proposed, now, system }: { proposed: Prediction; now: Prediction; system: 'metric' | 'inch' }) {
+  return (
+    <Facts
+      items={compared.map((name) => ({
+        label: resultLabel[name],
+        value: `${resultValue(name, proposed, system)} (${proposeText.now} ${resultValue(name, now, system)})`,
+      }))}
+    />
+  );
+}
+
+function withOrWithout(set: ReadonlySet<string>, key: string, wanted: boolean): ReadonlySet<string> {
+  const next = new Set(set);
+  if (wanted) next.add(key);
+  else next.delete(key);
+  return next;
+}

@@ -1,0 +1,36 @@
+import { useEffect, useRef, useState } from 'react';
+import type { PierceProposal, ProposeInput } from '@/strategy/pierce/index.ts';
+import { proposalRun } from './proposal-run.ts';
+
+export type ProposalState =
+  | { readonly kind: 'idle' }
+  | { readonly kind: 'working'; readonly share: number }
+  | { readonly kind: 'refused'; readonly why: string }
+  | {
+      readonly kind: 'answered';
+      readonly proposal: Exclude<PierceProposal, { kind: 'stopped' }>;
+      readonly input: ProposeInput;
+    };
+
+/** The designer's search as state: begin it, stop it, put its answer away. It stops when the page is left. */
+export function useProposal() {
+  const [state, setState] = useState<ProposalState>({ kind: 'idle' });
+  const stop = useRef<(() => void) | null>(null);
+  useEffect(() => () => stop.current?.(), []);
+  const clear = () => {
+    stop.current?.();
+    stop.current = null;
+    setState({ kind: 'idle' });
+  };
+  const begin = (input: ProposeInput) => {
+    stop.current?.();
+    setState({ kind: 'working', share: 0 });
+    stop.current = proposalRun(input, {
+      onProgress: (share) => setState({ kind: 'working', share }),
+      onDone: (proposal) =>
+        setState(proposal.kind === 'stopped' ? { kind: 'idle' } : { kind: 'answered', proposal, input }),
+      onRefused: (why) => setState({ kind: 'refused', why }),
+    });
+  };
+  return { state, begin, clear };
+}

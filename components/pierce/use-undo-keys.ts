@@ -1,0 +1,18 @@
+import { useEffect, type Dispatch } from 'react';
+
+/** Ctrl or Cmd with Z takes a step back, with Shift as well (or Y) it does it again; free texts and dialogs keep their own. */
+export function useUndoKeys(enabled: boolean, dispatch: Dispatch<{ do: 'undo' } | { do: 'redo' }>): void {
+  useEffect(() => {
+    if (!enabled) return undefined;
+    const pressed = (event: KeyboardEvent) => {
+      if (!(event.ctrlKey || event.metaKey) || event.altKey) return;
+      const key = event.key.toLowerCase();
+      if (key !== 'z' && !(key === 'y' && !event.shiftKey)) return;
+      if (event.target instanceof Element && event.target.closest('textarea, dialog')) return;
+      event.preventDefault();
+      dispatch({ do: key === 'y' || event.shiftKey ? 'redo' : 'undo' });
+    };
+    window.addEventListener('keydown', pressed);
+    return () => window.removeEventListener('keydown', pressed);
+  }, [enabled, dispatch]);
+}

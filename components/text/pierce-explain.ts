@@ -1,0 +1,338 @@
+import { bandsOfStored } from '@/shared/prediction.ts';
+import type { Condition, Prediction, StrategyContent } from '@/shared/strategies.ts';
+import type { Nozzle } from '@/strategy/machine.ts';
+import {
+  DEFAULT_RESERVE_RULES,
+  pierceParameterTable,
+  PIERCE_DEFAULTS,
+  type PierceParameterName,
+  type PierceParameterRow,
+} from '@/strategy/pierce/index.ts';
+import { numberText, quantityText, type UnitSystem } from '@/strategy/units/index.ts';
+import { reserveText } from './pierce.ts';
+
+/** A result that can be asked how it comes about. */
+export type ResultName =
+  | 'throughCold'
+  | 'throughHot'
+  | 'reserveCold'
+  | 'reserveHot'
+  | 'crater'
+  | 'eruption'
+  | 'energy'
+  | 'oxygen'
+  | 'meanPower'
+  | 'depth';
+
+export type Explained =
+  { readonly name: Exclude<ResultName, 'depth'> } | { readonly name: 'depth'; readonly stage: number };
+
+export type Explanation = {
+  readonly title: string;
+  readonly value: string;
+  /** What it is. */
+  readonly what: string;
+  /** The formula in words. */
+  readonly formula: string;
+  readonly inputs: readonly { readonly label: string; readonly value: string }[];
+  readonly parameters: readonly PierceParameterName[];
+  readonly source: string;
+};
+
+export type ExplainedFrom = {
+  readonly prediction: Prediction;
+  /** The content the prediction is of. */
+  readonly content: StrategyContent;
+  readonly nozzle: Nozzle | null;
+  readonly system: UnitSystem;
+};
+
+export const explainText = {
+  spoken: (label: string, value: string) => `${label}: ${value}. How it is worked out`,
+  formula: 'How it is worked out',
+  inputs: 'From these numbers',
+  parameters: 'What the model had to assume',
+  origin: (origin: string) => `Origin: ${origin}.`,
+  source: 'Source',
+  model: (version: string) => `Model ${version}. An estimate until a test cut on this machine confirms it.`,
+  results: 'Results',
+  hint: 'Press a result to see how it is worked out.',
+} as const;
+
+export const resultLabel: Readonly<Record<Exclude<ResultName, 'depth'>, string>> = {
+  throughCold: 'through, cold',
+  throughHot: 'through, hot',
+  reserveCold: 'reserve, cold',
+  reserveHot: 'reserve, hot',
+  crater: 'crater radius',
+  eruption: 'eruption',
+  energy: 'laser energy',
+  oxygen: 'oxygen used',
+  meanPower: 'mean power',
+};
+
+export function resultValue(name: Exclude<ResultName, 'depth'>, prediction: Prediction, system: UnitSystem): string {
+  const through = ({ breakthrough }: Condition) =>
+    breakthrough.kind === 'ok' ? quantityText(breakthrough.value, 'time', system).text : 'never';
+  const reserve = ({ reserve: one }: Condition) => reserveText(one.kind === 'ok' ? one.value : null);
+  switch (name) {
+    case 'throughCold':
+      return through(prediction.cold);
+    case 'throughHot':
+      return through(prediction.hot);
+    case 'reserveCold':
+      return reserve(prediction.cold);
+    case 'reserveHot':
+      return reserve(prediction.hot);
+    case 'crater':
+      return quantityText(prediction.craterRadius, 'length', system).text;
+    case 'eruption':
+      return quantityText(prediction.eruptionIndex / PIERCE_DEFAULTS.eruptionLimit, 'ratio', 'metric', {
+        unit: '%',
+        decimals: 0,
+      }).text;
+    case 'energy':
+      return quantityText(prediction.energy, 'energy', system).text;
+    case 'oxygen':
+      return quantityText(prediction.oxygenUsed, 'mass', system).text;
+    case 'meanPower':
+      return quantityText(prediction.meanPower, 'power', system).text;
+  }
+}
+
+/** Depth on a cold plate at the end of each stage, m. */
+export const depthsAtEnds = (prediction: Prediction, content: StrategyContent): number[] =>
+  bandsOfStored(
+    prediction,
+    content.stages.map(({ duration }) => duration),
+  ).map((share) => share * prediction.cold.thickness);
+
+const depthParameters: readonly PierceParameterName[] = [
+  'coupling',
+  'attenuationLength',
+  'boreRadius',
+  'guidedShare',
+  'burntShare',
+  'oxygenUse',
+  'oxygenDepth',
+  'jetSpread',
+  'expulsionHeat',
+  'conductivity',
+  'deepConduction',
+  'wallShare',
+  'remeltTime',
+  'pauseLoss',
+];
+const depthFormula =
+  'The bottom sinks as fast as the heat that reaches it melts steel: laser that is coupled in and not lost on the way down, plus the heat of the iron that burns with the oxygen arriving there, less what is conducted away from the bottom; divided by the heat to melt and throw out the steel of the bore’s cross-section. Adding this up over the stages gives the depth.';
+const depthSource =
+  'Beam width by ISO 11146; heat of steel by EN 1993-1-2:2005 and NIST data; energy to cut with oxygen by Fomin et al. 2017 and Golyshev et al. 2015 (abstracts); conduction from a disk, 4·k·a·ΔT (Carslaw and Jaeger).';
+
+/** What a result is and how it comes about, with the numbers it was worked out from. */
+export function explanationOf(explained: Explained, from: ExplainedFrom): Explanation {
+  const { prediction, content, nozzle, system } = from;
+  const length = (value: number) => quantityText(value, 'length', system).text;
+  const time = (value: number) => quantityText(value, 'time', system).text;
+  const power = (value: number) => quantityText(value, 'power', system).text;
+  const temperature = (value: number) => quantityText(value, 'temperature', system).text;
+  const { cold, hot, routineTime } = prediction;
+  const stageCount = { label: 'Stages', value: String(content.stages.length) };
+  const routine = { label: 'Routine, all stages together', value: time(routineTime) };
+  const plate = (condition: Condition) => [
+    { label: 'Thickness judged, the thickest', value: length(condition.thickness) },
+    { label: 'Temperature of the plate', value: temperature(condition.plateTemperature) },
+  ];
+  const fitted = nozzle ? [{ label: 'Nozzle', value: `${nozzle.type}, ${length(nozzle.diameter)}` }] : [];
+  const title =
+    explained.name === 'depth' ? `Depth at the end of stage ${explained.stage + 1}` : resultTitle[explained.name];
+  const value =
+    explained.name === 'depth'
+      ? length(depthsAtEnds(prediction, content)[explained.stage] ?? 0)
+      : resultValue(explained.name, prediction, system);
+  const head = { title, value };
+
+  switch (explained.name) {
+    case 'throughCold':
+    case 'throughHot': {
+      const condition = explained.name === 'throughCold' ? cold : hot;
+      return {
+        ...head,
+        what:
+          condition.breakthrough.kind === 'ok'
+            ? 'The moment the bottom of the bore reaches the underside of the thickest plate.'
+            : `The bottom never reaches the underside. ${condition.breakthrough.why}`,
+        formula: depthFormula,
+        inputs: [
+          ...plate(condition),
+          stageCount,
+          routine,
+          { label: 'Mean power', value: power(prediction.meanPower) },
+          ...fitted,
+        ],
+        parameters: depthParameters,
+        source: depthSource,
+      };
+    }
+    case 'depth': {
+      const stage = content.stages[explained.stage];
+      const mean = (at: { peakPower: number; duty: number }) => power(at.peakPower * at.duty);
+      return {
+        ...head,
+        what: 'How far down the bottom of the bore is when this stage ends, on the thickest cold plate.',
+        formula: depthFormula,
+        inputs: [
+          ...plate(cold),
+          ...(stage
+            ? [
+                { label: 'Mean power where the stage begins', value: mean(stage.from) },
+                { label: 'and where it ends', value: mean(stage.to) },
+                { label: 'The stage lasts', value: time(stage.duration) },
+              ]
+            : []),
+          ...fitted,
+        ],
+        parameters: depthParameters,
+        source: depthSource,
+      };
+    }
+    case 'reserveCold':
+    case 'reserveHot': {
+      const condition = explained.name === 'reserveCold' ? cold : hot;
+      const rule = explained.name === 'reserveCold' ? DEFAULT_RESERVE_RULES.cold : DEFAULT_RESERVE_RULES.hot;
+      return {
+        ...head,
+        what:
+          condition.reserve.kind === 'ok'
+            ? 'How many times over the routine lasts until the hole is through. At 1 it would be through at the very last moment.'
+            : `There is none. ${condition.reserve.why}`,
+        formula:
+          'Routine time divided by the time to breakthrough on the thickest plate. Cut off after two figures, not rounded up.',
+        inputs: [
+          routine,
+          {
+            label: 'Through after',
+            value: condition.breakthrough.kind === 'ok' ? time(condition.breakthrough.value) : 'never',
+          },
+          ...plate(condition),
+          { label: 'Asked for, common practice', value: reserveText(rule) },
+        ],
+        parameters: ['coupling', 'attenuationLength', 'boreRadius'],
+        source:
+          'Definition of this product. A hot plate is through sooner, but its pierces scatter and erupt more, so more is asked of it: common practice, no source.',
+      };
+    }
+    case 'crater':
+      return {
+        ...head,
+        what: 'How far around the pierce the surface melts or is spattered: the widest of thinnest and thickest plate, cold and hot. The lead-in must be longer.',
+        formula:
+          'The heat left at the top is taken as released at once in a point of a thick plate; the radius is where its greatest temperature still reaches melting. It is never less than the bore at the top, and melt thrown out by an eruption adds its heat.',
+        inputs: [
+          {
+            label: 'Thickness of the plates',
+            value: `${length(content.thickness.min * 1e-6)} to ${length(content.thickness.max * 1e-6)}`,
+          },
+          { label: 'Hottest plate', value: temperature(content.hottestPlate) },
+          { label: 'Laser energy', value: quantityText(prediction.energy, 'energy', system).text },
+          { label: 'Greatest peak power', value: power(prediction.peakPower) },
+        ],
+        parameters: ['boreRadius', 'spotFollowing', 'meltSpeed', 'eruptionLimit', 'backfallShare'],
+        source: 'Instantaneous point source, greatest temperature at a distance (Carslaw and Jaeger, 2nd ed., 10.2).',
+      };
+    case 'eruption':
+      return {
+        ...head,
+        what: 'How near the pierce comes to throwing its melt out in one burst: the melt of one pulse against the bore it has to leave by, as a share of the most that it bears. From 100 % it is thrown out.',
+        formula:
+          'Melt made by one pulse divided by the bore’s cross-section times its depth and one bore radius; the greatest before breakthrough, over the thinnest and thickest plate, cold and hot.',
+        inputs: [
+          { label: 'Greatest filling of the bore by a pulse', value: percent(prediction.eruptionIndex) },
+          { label: 'Filling from which it is thrown out', value: percent(PIERCE_DEFAULTS.eruptionLimit) },
+          { label: 'Greatest peak power', value: power(prediction.peakPower) },
+          { label: 'Slowest pulses', value: slowestPulses(content, system) },
+        ],
+        parameters: ['eruptionLimit', 'meltSpeed', 'boreRadius', 'coupling'],
+        source: 'Own measure; the limit is to be fitted to test cuts, no source.',
+      };
+    case 'energy':
+      return {
+        ...head,
+        what: 'What the laser sends out over the whole routine, on the thickest cold plate.',
+        formula:
+          'Peak power times duty, added up over all stages; what the source loses while it rises is left out of each pulse.',
+        inputs: [routine, stageCount, { label: 'Mean power as set', value: power(prediction.meanPower) }],
+        parameters: [],
+        source: 'Pulse arithmetic: mean power is peak power times pulse length times frequency.',
+      };
+    case 'oxygen':
+      return {
+        ...head,
+        what: 'What flows through the nozzle over the whole routine.',
+        formula:
+          'Nozzle area times the flow of a gas into open air at the pressure set, stage by stage, times its duration. Above about 0.9 bar the nozzle chokes and the flow grows in proportion to the absolute pressure.',
+        inputs: [routine, ...fitted, { label: 'Oxygen pressure', value: pressures(content, system) }],
+        parameters: ['dischargeCoefficient'],
+        source: 'Isentropic nozzle flow (Saint-Venant and Wantzel), critical flow as in ISO 9300.',
+      };
+    case 'meanPower':
+      return {
+        ...head,
+        what: 'The power of the whole routine, evened out over its time.',
+        formula:
+          'Peak power times duty, averaged over every stage by its duration; both go in straight lines within a stage.',
+        inputs: [
+          routine,
+          { label: 'Greatest peak power', value: power(prediction.peakPower) },
+          ...content.stages.map((stage, index) => ({
+            label: `Stage ${index + 1}, from and to`,
+            value: `${power(stage.from.peakPower * stage.from.duty)}, ${power(stage.to.peakPower * stage.to.duty)}`,
+          })),
+        ],
+        parameters: [],
+        source: 'Pulse arithmetic: mean power is peak power times duty.',
+      };
+  }
+}
+
+const resultTitle: Readonly<Record<Exclude<ResultName, 'depth'>, string>> = {
+  throughCold: 'Through on a cold plate',
+  throughHot: 'Through on the hottest plate',
+  reserveCold: 'Reserve on a cold plate',
+  reserveHot: 'Reserve on the hottest plate',
+  crater: 'Crater radius',
+  eruption: 'Eruption',
+  energy: 'Laser energy',
+  oxygen: 'Oxygen used',
+  meanPower: 'Mean power',
+};
+
+/** A parameter of the model as it stands in its table. */
+export function parameterRow(name: PierceParameterName, system: UnitSystem) {
+  const row = pierceParameterTable.find((one) => one.name === name);
+  return row ? { meaning: row.meaning, value: parameterValue(row, system), origin: row.origin } : null;
+}
+
+function parameterValue({ default: value, unit }: PierceParameterRow, system: UnitSystem): string {
+  if (unit === '') return percentOr(value);
+  if (unit === 'm') return quantityText(value, 'length', system).text;
+  if (unit === 's') return quantityText(value, 'time', system).text;
+  if (unit === 'J/kg') return `${numberText(value / 1e3, 0)} kJ/kg`;
+  return `${numberText(value, 2)} ${unit}`;
+}
+
+const percent = (value: number) => quantityText(value, 'ratio', 'metric').text;
+/** Shares up to one in per cent, factors as they are. */
+const percentOr = (value: number) => (value < 1 ? percent(value) : numberText(value, 2));
+
+function slowestPulses(content: StrategyContent, system: UnitSystem): string {
+  const all = content.stages.flatMap(({ from, to }) => [from.pulseFrequency, to.pulseFrequency]);
+  const pulsed = all.filter((one) => one !== null);
+  return pulsed.length === 0 ? 'continuous' : quantityText(Math.min(...pulsed), 'frequency', system).text;
+}
+
+function pressures(content: StrategyContent, system: UnitSystem): string {
+  const all = content.stages.flatMap(({ from, to }) => [from.oxygenPressure, to.oxygenPressure]);
+  const least = quantityText(Math.min(...all), 'pressure', system);
+  const most = quantityText(Math.max(...all), 'pressure', system);
+  return least.text === most.text ? most.text : `${least.number} to ${most.text}`;
+}
