@@ -2,7 +2,7 @@ import fs from 'node:fs';
 import { startServer } from './child.mjs';
 import { startFakeS3 } from './fake-s3.mjs';
 import { houseFolder } from './folders.mjs';
-import { ensureDatabase } from './postgres.mjs';
+import { dropDatabase, ensureDatabase } from './postgres.mjs';
 import { prepareDatabase } from './prepare.mjs';
 import { webFolder } from './web.mjs';
 
@@ -35,6 +35,7 @@ export async function startDemoStack({ cluster, database }) {
     stop: async () => {
       await server.stop();
       await s3.stop();
+      await dropDatabase(cluster, database);
       fs.rmSync(houseFolder(folder), { recursive: true, force: true });
     },
   };

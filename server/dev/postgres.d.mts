@@ -19,3 +19,5 @@ export type Secrets = {
 export function ensurePostgres(): string;
 export function startCluster(given: { kind: 'product' | 'test' }): Promise<Cluster>;
 export function ensureDatabase(cluster: Cluster, name: string): Promise<{ made: boolean }>;
+/** Drops a database, whoever is still connected to it. */
+export function dropDatabase(cluster: Cluster, name: string): Promise<void>;

@@ -129,7 +129,9 @@ export async function startCluster({ kind }) {
   const made = fs.existsSync(path.join(data, 'PG_VERSION'));
   const known = fs.existsSync(path.join(folder, 'secrets.json'));
   if (made && !known) {
-    throw new SetupProblem(`The passwords of the database in ${folder} are gone. Put secrets.json back, or delete the folder to start anew.`);
+    throw new SetupProblem(
+      `The passwords of the database in ${folder} are gone. Put secrets.json back, or delete the folder to start anew.`,
+    );
   }
   if (!made) fs.rmSync(path.join(folder, 'secrets.json'), { force: true });
   const words = clusterSecrets(folder);
@@ -224,6 +226,18 @@ export async function ensureDatabase(cluster, name) {
     const { rowCount } = await client.query('SELECT 1 FROM pg_database WHERE datname = $1', [name]);
     if (!rowCount) await client.query(`CREATE DATABASE ${client.escapeIdentifier(name)} OWNER cinderpath_owner`);
     return { made: !rowCount };
+  } finally {
+    await client.end();
+  }
+}
+
+/** Drops a database, whoever is still connected to it. */
+export async function dropDatabase(cluster, name) {
+  const { default: pg } = await import('pg');
+  const client = new pg.Client({ connectionString: cluster.superUrl('postgres') });
+  await client.connect();
+  try {
+    await client.query(`DROP DATABASE IF EXISTS ${client.escapeIdentifier(name)} WITH (FORCE)`);
   } finally {
     await client.end();
   }
