@@ -4,7 +4,7 @@ import { Choice } from '@/components/ui/choice.tsx';
 import { NumberField } from '@/components/ui/number-field.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Stack } from '@/components/ui/stack.tsx';
-import { Body, Heading, Small } from '@/components/ui/text.tsx';
+import { Body, Heading } from '@/components/ui/text.tsx';
 import { Tick } from '@/components/ui/tick.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import { drawingAnswersSchema, type DrawingAnswers, type DrawingReadingWire } from '@/shared/parts.ts';
@@ -15,6 +15,9 @@ type DrawingQuestionsProps = {
   /** The drawing is read again with these. */
   onAnswer: (answers: DrawingAnswers) => void;
 };
+
+/** Least tolerance that is taken, m. */
+const leastGap = 1e-9;
 
 type Question<K> = Extract<DrawingReadingWire['questions'][number], { kind: K }>;
 
@@ -28,12 +31,11 @@ export function DrawingQuestions({ reading, answers, onAnswer }: DrawingQuestion
   const several = reading.layers.length > 1;
   if (!unitAsked && !gapsAsked && !several) return null;
 
-  const largest = Math.max(0, ...(gapsAsked?.gaps ?? []).map(({ size }) => size));
-  const gapChoice = otherGap ? 'other' : answers.gapTolerance === undefined ? 'leave' : 'close';
-  const withGap = (gapTolerance: number | undefined) => {
-    const { gapTolerance: _before, ...rest } = answers;
-    onAnswer(gapTolerance === undefined ? rest : { ...rest, gapTolerance });
-  };
+  // Leaving them open is an answer too: a tolerance just below the narrowest.
+  const narrowest = Math.min(Infinity, ...(gapsAsked?.gaps ?? []).map(({ size }) => size));
+  const answered = answers.gapTolerance;
+  const gapChoice = otherGap ? 'other' : answered === undefined ? null : answered < narrowest ? 'leave' : 'close';
+  const withGap = (gapTolerance: number) => onAnswer({ ...answers, gapTolerance });
 
   return (
     <Panel title={partsText.questions}>
@@ -49,7 +51,12 @@ export function DrawingQuestions({ reading, answers, onAnswer }: DrawingQuestion
               hint: sizeBoth(width, height),
             }))}
             value={answers.unit ?? null}
-            onChange={(unit) => onAnswer({ ...answers, unit })}
+            onChange={(unit) => {
+              // a gap is as wide as the unit makes it: what was said about it before means nothing now
+              const { gapTolerance: _before, ...rest } = answers;
+              setOtherGap(false);
+              onAnswer({ ...rest, unit });
+            }}
           />
         </Stack>
       )}
@@ -57,7 +64,6 @@ export function DrawingQuestions({ reading, answers, onAnswer }: DrawingQuestion
         <Stack gap="s">
           <Heading level={3}>{partsText.gapQuestion}</Heading>
           <Body>{gapsAsked.why}</Body>
-          <Small>{partsText.gapsFound(gapsAsked.gaps.length, largest, system)}</Small>
           <Choice
             kind="radios"
             label={partsText.gapWhat}
@@ -73,7 +79,7 @@ export function DrawingQuestions({ reading, answers, onAnswer }: DrawingQuestion
             value={gapChoice}
             onChange={(choice) => {
               setOtherGap(choice === 'other');
-              if (choice === 'leave') withGap(undefined);
+              if (choice === 'leave') withGap(Math.max(narrowest * 0.999, leastGap));
               if (choice === 'close') withGap(gapsAsked.closesAt);
             }}
           />

@@ -50,7 +50,7 @@ export const partsText = {
     `${count(part.outlines, 'outline')}, ${count(part.holes, 'hole')}`,
   plans: (number: number) => (number === 0 ? 'no corner plan' : count(number, 'corner plan')),
   file: 'Drawing',
-  fileHint: 'DXF, at most 10 MB. It is read here and kept only when you say so.',
+  fileHint: 'DXF, at most 10 MiB. It is read here and kept only when you say so.',
   reading: 'Reading the drawing',
   rereading: 'Reading it again with your answers',
   questions: 'Questions',
@@ -61,13 +61,12 @@ export const partsText = {
   gapOption: {
     leave: 'Leave them open',
     leaveHint: 'What does not close bounds nothing and is not cut.',
-    close: (metres: number, system: UnitSystem) => `Close gaps of up to ${quantityText(metres, 'length', system).text}`,
+    close: (metres: number, system: UnitSystem) =>
+      `Close gaps of up to ${quantityText(metres, 'length', system, { figures: 3 }).text}`,
     closeHint: 'Look at the marked places first: a gap may be a piece that is missing.',
     other: 'Close gaps up to another size',
   },
   gapSize: 'Largest gap to close',
-  gapsFound: (number: number, largest: number, system: UnitSystem) =>
-    `${count(number, 'gap')}, the largest ${quantityText(largest, 'length', system).text}`,
   layers: 'Layers to take',
   layer: (name: string, pieces: number) => `${name} (${count(pieces, 'piece')})`,
   noted: 'What was read',
@@ -79,10 +78,13 @@ export const partsText = {
   allTaken: 'Everything in the drawing was taken as it stands.',
   name: 'Name of the part',
   keep: 'Keep as a part',
+  gapsFirst: 'Say what should become of the gaps first.',
   unitFirst: 'Answer the unit first: the size of the part depends on it.',
   crossing: (places: number) =>
     `Outlines cross each other at ${count(places, 'place')}, marked with an X. Mend the drawing and choose it again.`,
-  nothingClosed: 'Nothing in this drawing closes, so there is no part to keep.',
+  nothingClosed:
+    'Nothing in this drawing closes yet, so there is no part to keep. Close its gaps, or mend the drawing and choose it again.',
+  tooLarge: 'Draw the part alone, without its sheet and the parts around it, and export it again.',
   needFile: 'Choose a drawing.',
   block: {
     size: 'size',

@@ -79,6 +79,12 @@ const bytesOf = (file: UploadedFile | null): Uint8Array => file?.bytes ?? new Ui
 
 /** A part is kept only when nothing about its drawing is left to guess. */
 function mustBeDecided(reading: DrawingReadingWire, answers: DrawingAnswers): void {
+  if (reading.contours.length === 0) {
+    throw new AppError(
+      'bad-drawing',
+      'No outline of the drawing is closed. Close its gaps with a tolerance, or close the outline in the drawing and export it again.',
+    );
+  }
   if (reading.crossings.length > 0) {
     const places = reading.crossings.length === 1 ? 'one place' : `${reading.crossings.length} places`;
     throw new AppError(

@@ -7,6 +7,8 @@ export type QuantityTextOptions = {
   readonly unit?: string;
   /** Exactly so many decimals; without it up to the usual number, trailing zeros left out. */
   readonly decimals?: number;
+  /** Instead of decimals: at most so many significant figures, trailing zeros left out; figures before the point all stay. */
+  readonly figures?: number;
   /** Write the plus of a positive number, as for a focus position. */
   readonly sign?: boolean;
 };
@@ -34,9 +36,9 @@ export function quantityText(
   const shown: Unit = unitOf(dimension, options.unit ?? usual.unit);
   const inUnit = siTo(value, shown);
   const number =
-    options.decimals === undefined
-      ? trimmed(inUnit, options.unit === undefined ? usual.decimals : decimalsFor(inUnit))
-      : inUnit.toFixed(options.decimals);
+    options.decimals !== undefined
+      ? inUnit.toFixed(options.decimals)
+      : trimmed(inUnit, decimalsOf(inUnit, options, options.unit === undefined ? usual.decimals : decimalsFor(inUnit)));
   const symbol = unitSymbol(shown);
   const signed = withSign(number, options.sign === true);
   return { number: signed, unit: symbol, text: joined(signed, symbol) };
@@ -66,6 +68,12 @@ function withSign(number: string, plus: boolean): string {
   if (isZero) return bare;
   if (number.startsWith('-')) return MINUS + bare;
   return plus ? `+${bare}` : bare;
+}
+
+/** Decimals that leave the figures asked for, toFixed's hundred at most; the usual ones when none are asked for. */
+function decimalsOf(value: number, { figures }: QuantityTextOptions, usual: number): number {
+  if (figures === undefined || value === 0) return usual;
+  return Math.min(100, Math.max(0, figures - 1 - Math.floor(Math.log10(Math.abs(value)))));
 }
 
 /** Decimals that leave about four significant figures, for a unit that the reader chose. */

@@ -74,6 +74,7 @@ export type DrawingQuestion =
     }
   | { readonly kind: 'layers'; readonly why: string; readonly layers: readonly string[] };
 
+/** None of the contours may be closed yet: then the gaps that keep them open are asked about. */
 export type DrawingReading = {
   readonly kind: 'drawing';
   readonly unit: DrawingUnit;
@@ -97,7 +98,7 @@ export type DrawingReading = {
   readonly crossings: readonly Point[];
 };
 
-export type NoDrawing = { readonly kind: 'none'; readonly why: string; readonly gaps?: readonly Gap[] };
+export type NoDrawing = { readonly kind: 'none'; readonly why: string };
 
 /** Ellipses and splines are followed within this, m. */
 const curveTolerance = 1e-5;
@@ -182,8 +183,9 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
     repaired.push(...joined.repaired);
     return { contour: { segments: joined.segments }, layer: chain.layer };
   });
-  const gaps = nearGaps(chains.open, diagonal);
-  if (closed.length === 0) return noContour(chains.open, gaps, unit);
+  // Ends that lie within the tolerance and were still not joined meet where the way was chosen: a wider one would not join them.
+  const gaps = nearGaps(chains.open, diagonal).filter(({ size }) => size > gapTolerance);
+  if (closed.length === 0 && gaps.length === 0) return noContour(chains.open, unit);
 
   const contours = nestContours(closed.map(({ contour }) => contour)).map(
     ({ contour, depth, role, parent }, i): DrawingContour => ({
@@ -241,11 +243,7 @@ const tooFar = (unit: DrawingUnit): string =>
   `Read in ${unit}, a place of the drawing lies more than 10 km away. Correct the unit or move the part to the origin.`;
 const tooFine = `The drawing becomes more than ${drawingLimits.segments} lines and arcs. Draw the part alone and export again.`;
 
-const none = (why: string, gaps?: readonly Gap[]): NoDrawing => ({
-  kind: 'none',
-  why,
-  ...(gaps && gaps.length > 0 ? { gaps } : {}),
-});
+const none = (why: string): NoDrawing => ({ kind: 'none', why });
 
 function implausible(bounds: Box, unit: DrawingUnit): string | null {
   const largest = Math.max(bounds.maxX - bounds.minX, bounds.maxY - bounds.minY);
@@ -295,17 +293,10 @@ function nothingDrawn(
   return `The drawing holds no lines, arcs or curves to cut${found ? `, only ${found}` : ''}. Export the part's outline.`;
 }
 
-function noContour(open: readonly Chain[], gaps: readonly Gap[], unit: DrawingUnit): NoDrawing {
+function noContour(open: readonly Chain[], unit: DrawingUnit): NoDrawing {
   const start = open[0]?.segments[0];
   const where = start ? placeIn(segmentStart(start), unit) : 'the drawing';
   const chains = open.length === 1 ? 'its one line of pieces is open' : `all ${open.length} lines of pieces are open`;
-  if (gaps.length > 0) {
-    const widest = gaps.reduce((most, gap) => Math.max(most, gap.size), 0);
-    return none(
-      `The drawing has no closed contour: ${chains}. With a gap tolerance of ${millimetres(widest)} ${gaps.length === 1 ? 'one gap' : `${gaps.length} gaps`} would close, the first at ${placeIn(gaps[0]?.at ?? { x: 0, y: 0 }, unit)}. Set that tolerance or close it in the drawing.`,
-      gaps,
-    );
-  }
   return none(
     `The drawing has no closed contour: ${chains}, the first from ${where}. Close the outline in the drawing and export again.`,
   );
