@@ -19,8 +19,8 @@ export function CardNone({ card, why, requested }: { card: Card; why: string; re
   return (
     <>
       <Notice kind="caution" title={cardText.none.title} large>
-        <Body large>{cardText.none.plain}</Body>
         <Body large>{why}</Body>
+        <Body large>{cardText.none.plain}</Body>
       </Notice>
       {asked ? (
         <Notice kind="ok" title={cardText.none.asked} large live>

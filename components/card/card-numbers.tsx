@@ -19,6 +19,7 @@ type Approved = Extract<Card['match'], { kind: 'approved' }>;
 export function CardNumbers({ match }: { match: Approved }) {
   const system = useUnitSystem();
   const seconds = (value: number) => quantityText(value, 'time', system);
+  const about = (value: number) => quantityText(value, 'time', system, { figures: 3 });
   const cutTrouble = dialTrouble(match.cut.dial);
   return (
     <Stack gap="l">
@@ -75,7 +76,7 @@ export function CardNumbers({ match }: { match: Approved }) {
         <FigureCells
           label={cardText.estimates}
           cells={[match.cold, match.hot].flatMap(({ plateTemperature, breakthrough, reserve }) => {
-            const through = breakthrough === null ? null : seconds(breakthrough);
+            const through = breakthrough === null ? null : about(breakthrough);
             return [
               {
                 label: cardText.through(plateTemperature, system),

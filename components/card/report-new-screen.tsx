@@ -7,7 +7,7 @@ import { reportText } from '@/components/text/card.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Choice } from '@/components/ui/choice.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
-import { PhotoPicker } from '@/components/ui/file-picker.tsx';
+import { fits, PhotoPicker } from '@/components/ui/file-picker.tsx';
 import { Form } from '@/components/ui/form.tsx';
 import { ButtonLink } from '@/components/ui/link.tsx';
 import { Notice } from '@/components/ui/notice.tsx';
@@ -46,7 +46,7 @@ export function ReportNewScreen({ revisionId, machineId, plateId = null, thickne
   }
   const send = () => {
     setSent(true);
-    if (kind === null) return;
+    if (kind === null || (photo && !fits(photo, limits.photoBytes))) return;
     add.mutate({ body: { id, revisionId, machineId, plateId, thickness, kind, words }, photo });
   };
   return (
@@ -62,7 +62,14 @@ export function ReportNewScreen({ revisionId, machineId, plateId = null, thickne
           error={sent && kind === null ? reportText.chooseKind : undefined}
         />
         <TextField large optional rows={3} label={reportText.words} value={words} onChange={setWords} />
-        <PhotoPicker optional label={reportText.photo} file={photo} onChange={setPhoto} maxBytes={limits.photoBytes} />
+        <PhotoPicker
+          optional
+          label={reportText.photo}
+          file={photo}
+          onChange={setPhoto}
+          maxBytes={limits.photoBytes}
+          tooLarge={reportText.tooLarge}
+        />
         {add.isError && <ErrorNotice error={add.error} />}
         <Button kind="main" size="gloved" fill submit label={reportText.send} busy={add.isPending} />
       </Form>

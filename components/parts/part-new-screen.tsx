@@ -2,13 +2,14 @@ import { useRouter } from 'expo-router';
 import { useMemo, useState } from 'react';
 import { newId } from '@/components/data/call.ts';
 import { useDrawingRead, usePartAdd } from '@/components/data/parts.ts';
+import { isProblem } from '@/components/data/problem.ts';
 import { Page } from '@/components/shell/page.tsx';
 import { partsText, sizeText } from '@/components/text/parts.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
-import { FilePicker } from '@/components/ui/file-picker.tsx';
+import { FilePicker, fits } from '@/components/ui/file-picker.tsx';
 import { Form } from '@/components/ui/form.tsx';
 import { Notice } from '@/components/ui/notice.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
@@ -48,7 +49,7 @@ export function PartNewScreen() {
     setSent(false);
     add.reset();
     read.reset();
-    if (chosen) readWith(chosen, {});
+    if (chosen && fits(chosen, limits.drawingBytes)) readWith(chosen, {});
   };
   const suggested = file ? file.name.replace(/\.[^.]+$/, '').slice(0, limits.name) : '';
   const name = nameSchema.safeParse(typedName ?? suggested);
@@ -77,7 +78,9 @@ export function PartNewScreen() {
         ? partsText.unitFirst
         : reading.crossings.length > 0
           ? partsText.crossing(reading.crossings.length)
-          : null;
+          : gaps && answers.gapTolerance === undefined
+            ? partsText.gapsFirst
+            : null;
   const keep = () => {
     setSent(true);
     if (!file || !reading || refusal !== null || !name.success) return;
@@ -95,13 +98,20 @@ export function PartNewScreen() {
       onChange={choose}
       accept=".dxf"
       maxBytes={limits.drawingBytes}
+      tooLarge={partsText.tooLarge}
       error={sent && !file ? partsText.needFile : undefined}
     />
   );
   const state = (
     <>
       {read.isPending && <Progress label={reading ? partsText.rereading : partsText.reading} />}
-      {read.isError && <ErrorNotice error={read.error} onRetry={file ? () => readWith(file, answers) : undefined} />}
+      {read.isError && (
+        <ErrorNotice
+          error={read.error}
+          // a drawing that was refused is refused again: it must be mended and chosen anew
+          onRetry={file && !isProblem(read.error, 'bad-drawing') ? () => readWith(file, answers) : undefined}
+        />
+      )}
     </>
   );
   const form = reading && file && (

@@ -73,7 +73,7 @@ export const cardText = {
   noCorners: 'No corner plan uses this revision.',
   cornerPlan: (plan: Approved['cornerPlans'][number]) =>
     `${count(plan.corners, 'corner')}: ${count(plan.loops, 'loop')}, ${count(plan.dwells, 'dwell')}; adds ${
-      quantityText(plan.addedTime, 'time', 'metric').text
+      quantityText(plan.addedTime, 'time', 'metric', { figures: 3 }).text
     }`,
   estimates: 'Estimates for this plate',
   through: (kelvin: number, system: UnitSystem) =>
@@ -84,7 +84,7 @@ export const cardText = {
   wrong: 'It went wrong',
   none: {
     title: 'No approved strategy',
-    plain: 'There is no approved strategy for this plate on this machine. Do not cut by another plate’s card.',
+    plain: 'Do not cut by another plate’s card.',
     ask: 'Ask the engineers',
     asked: 'The engineers have been asked.',
     askedHint: 'They see the plate, the machine and your words. Look here again later.',
@@ -112,6 +112,7 @@ export const reportText = {
   chooseKind: 'Choose what happened.',
   words: 'In your words',
   photo: 'Picture',
+  tooLarge: 'Take a smaller picture, or send the words without one.',
   send: 'Tell the engineers',
   sent: 'Sent',
   sentHint: 'The engineers have your report. Thank you for telling them.',

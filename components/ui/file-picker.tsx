@@ -12,17 +12,27 @@ export type FilePickerProps = {
   readonly onChange: (file: File | null) => void;
   /** As an input's `accept`, e.g. '.dxf,.svg'. */
   readonly accept?: string;
-  /** Refused above this, before it is sent. */
+  /** A larger one stays chosen, and the picker says that it can't be taken; the screen sends none that is not `fits`. */
   readonly maxBytes?: number;
+  /** What to do about a file that is too large. */
+  readonly tooLarge?: string;
   readonly hint?: ReactNode;
   readonly error?: string;
   readonly optional?: boolean;
   readonly disabled?: boolean;
 };
 
-/** Size of a file as people read it: "418 kB". */
-export const fileSize = (bytes: number): string =>
-  bytes < 1000 ? `${bytes} B` : bytes < 1e6 ? `${Math.round(bytes / 1e3)} kB` : `${(bytes / 1e6).toFixed(1)} MB`;
+const kibi = 1024;
+
+/** Size of a file as people read it: "418 KiB". Limits are whole in these units, so a file just above one never reads the same. */
+export const fileSize = (bytes: number): string => {
+  if (bytes < kibi) return `${bytes} B`;
+  if (bytes < kibi * kibi) return `${Math.ceil(bytes / kibi)} KiB`;
+  return `${(Math.ceil((bytes / kibi / kibi) * 10) / 10).toFixed(1).replace(/\.0$/, '')} MiB`;
+};
+
+/** Whether a chosen file is small enough to be sent. */
+export const fits = (file: File, maxBytes: number): boolean => file.size <= maxBytes;
 
 /** Chooses a file, by picking or by dropping it; says its name and size. */
 export function FilePicker(props: FilePickerProps) {
@@ -49,6 +59,7 @@ function Picker({
   maxBytes,
   hint,
   error,
+  tooLarge = '',
   optional,
   disabled,
   words,
@@ -59,16 +70,13 @@ function Picker({
 }) {
   const id = useId();
   const [over, setOver] = useState(false);
-  const [tooLarge, setTooLarge] = useState<string | null>(null);
-  const shownError = tooLarge ?? error;
+  const shownError =
+    file !== null && maxBytes !== undefined && !fits(file, maxBytes)
+      ? `“${file.name}” has ${fileSize(file.size)}; at most ${fileSize(maxBytes)} are taken. ${tooLarge}`.trim()
+      : error;
 
   const take = (chosen: File | null | undefined) => {
     if (chosen === null || chosen === undefined) return; // the file dialog was closed: what was chosen stays
-    if (maxBytes !== undefined && chosen.size > maxBytes) {
-      setTooLarge(`“${chosen.name}” has ${fileSize(chosen.size)}; at most ${fileSize(maxBytes)} are taken.`);
-      return;
-    }
-    setTooLarge(null);
     onChange(chosen);
   };
 

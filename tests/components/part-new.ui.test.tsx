@@ -61,12 +61,51 @@ const sent = (body: unknown): unknown => {
 };
 
 describe('adding a part', () => {
-  it('keeps the file chosen when it can’t be read, says what is wrong, and reads it again when asked', async () => {
-    let up = false;
-    serveWith(() => (up ? json(reading) : problem('bad-drawing', 'Line 212 ends within a polyline.')));
+  it('keeps the file chosen when it can’t be read and says what is wrong; the same file is not worth another try', async () => {
+    serveWith(() => problem('bad-drawing', 'Line 212 ends within a polyline.'));
     show(<PartNewScreen />, 'programmer');
     await choose();
     expect(await screen.findByText('Line 212 ends within a polyline.')).toBeTruthy();
+    expect(screen.getByText('bracket 12.dxf')).toBeTruthy();
+    expect(screen.queryByRole('button', { name: 'Try again' })).toBeNull();
+  });
+
+  it('keeps a file of more than 10 MiB chosen, says so, and does not send it', async () => {
+    const requests = serveWith(() => json(reading));
+    show(<PartNewScreen />, 'programmer');
+    const large = new File(['0'], 'nest.dxf');
+    Object.defineProperty(large, 'size', { value: 10 * 1024 * 1024 + 1 });
+    await userEvent.upload(screen.getByLabelText('Drawing'), large);
+    expect(screen.getByText(/“nest\.dxf” has 10\.1 MiB; at most 10 MiB are taken\. Draw the part alone/)).toBeTruthy();
+    expect(screen.getByText('nest.dxf')).toBeTruthy();
+    expect(requests).toHaveLength(0);
+  });
+
+  it('keeps a part with gaps only when it was said what should become of them, and leaving them open is an answer', async () => {
+    const gaps = {
+      kind: 'gaps',
+      why: 'One gap of 0.4 mm.',
+      gaps: [{ at: { x: 0, y: 0 }, size: 4e-4 }],
+      closesAt: 4.1e-4,
+    };
+    const requests = serveWith(() => json({ ...reading, questions: [gaps] }));
+    show(<PartNewScreen />, 'programmer');
+    await choose();
+    await userEvent.click(await screen.findByRole('button', { name: 'Keep as a part' }));
+    expect(await screen.findByText('Say what should become of the gaps first.')).toBeTruthy();
+    expect(requests).toHaveLength(1);
+    await userEvent.click(screen.getByRole('radio', { name: /Leave them open/ }));
+    await waitFor(() => expect(requests).toHaveLength(2));
+    expect(sent(requests[1]?.body)).toEqual({ gapTolerance: expect.closeTo(4e-4, 6) as unknown }); // vitest types matchers as any
+    expect(screen.getByRole<HTMLInputElement>('radio', { name: /Leave them open/ }).checked).toBe(true);
+  });
+
+  it('keeps the file chosen when the connection is lost, and reads it again when asked', async () => {
+    let up = false;
+    serveWith(() => (up ? json(reading) : offline()));
+    show(<PartNewScreen />, 'programmer');
+    await choose();
+    expect(await screen.findByText('No connection')).toBeTruthy();
     expect(screen.getByText('bracket 12.dxf')).toBeTruthy();
     up = true;
     await userEvent.click(screen.getByRole('button', { name: 'Try again' }));
