@@ -4,6 +4,7 @@ import { Core } from '@/components/pierce/core.tsx';
 import { useActor } from '@/components/shell/actor.tsx';
 import { Page } from '@/components/shell/page.tsx';
 import { momentText } from '@/components/text/moments.ts';
+import { reserveText } from '@/components/text/pierce.ts';
 import { reviewsText } from '@/components/text/reviews.ts';
 import { thicknessRangeText } from '@/components/text/thickness.ts';
 import { Empty } from '@/components/ui/empty.tsx';
@@ -15,7 +16,7 @@ import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import { reviewEndpoints } from '@/shared/strategies.ts';
 import type { AnswerOf } from '@/shared/endpoint.ts';
 import { can, type Actor } from '@/shared/policy.ts';
-import { numberText, type UnitSystem } from '@/strategy/units/index.ts';
+import type { UnitSystem } from '@/strategy/units/index.ts';
 import { RequestsSection } from './requests-section.tsx';
 
 type Waiting = AnswerOf<typeof reviewEndpoints.list>['items'][number];
@@ -56,7 +57,6 @@ function WaitingRow({
   const { latest } = waiting;
   const verdict =
     actor === null ? null : can(actor, 'review.decide', { touchedBy: waiting.touchedBy.map((person) => person.id) });
-  const reserve = (value: number | null) => (value === null ? 'none' : numberText(value, 2));
   return (
     <LinkRow
       href={`/revisions/${latest.id}`}
@@ -64,7 +64,7 @@ function WaitingRow({
     >
       <Heading level={2}>{`${waiting.gradeGroup}, ${thicknessRangeText(waiting.thickness, system)}`}</Heading>
       <Body>{`${waiting.name}, ${reviewsText.revision(latest.number)}, ${waiting.machine.name}`}</Body>
-      <Small>{reviewsText.reserve(reserve(latest.reserveCold), reserve(latest.reserveHot))}</Small>
+      <Small>{reviewsText.reserve(reserveText(latest.reserveCold), reserveText(latest.reserveHot))}</Small>
       <Small>{reviewsText.submitted(waiting.submittedBy.name, momentText(waiting.submittedAt))}</Small>
       {waiting.openReports === 0 ? null : <Small tone="hot">{reviewsText.trouble(waiting.openReports)}</Small>}
       {verdict === null ? null : verdict.ok ? (
