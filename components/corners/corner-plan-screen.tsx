@@ -245,9 +245,15 @@ function Totals({ plan }: { plan: CornerPlan }) {
           { label: cornerText.block.loops, value: String(totals.loops) },
           { label: cornerText.block.dwells, value: String(totals.dwells) },
           { label: cornerText.block.trouble, value: String(totals.trouble) },
-          { label: cornerText.block.time, value: quantityText(totals.addedTime, 'time', system).text },
-          { label: cornerText.block.length, value: quantityText(totals.addedLength, 'length', system).text },
-          { label: cornerText.block.oxygen, value: quantityText(totals.addedOxygen, 'mass', system).text },
+          { label: cornerText.block.time, value: quantityText(totals.addedTime, 'time', system, { figures: 3 }).text },
+          {
+            label: cornerText.block.length,
+            value: quantityText(totals.addedLength, 'length', system, { figures: 3 }).text,
+          },
+          {
+            label: cornerText.block.oxygen,
+            value: quantityText(totals.addedOxygen, 'mass', system, { figures: 3 }).text,
+          },
           { label: cornerText.block.untreated, value: hot(totals.hottestUntreated) },
           { label: cornerText.block.treated, value: hot(totals.hottestTreated) },
         ]}

@@ -28,8 +28,8 @@ type CornerSheetProps = {
 /** All about one corner: angle, return temperature without and with its treatment, what else would do and why not. */
 export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }: CornerSheetProps) {
   const system = useUnitSystem();
-  const length = (metres: number) => quantityText(metres, 'length', system).text;
-  const seconds = (value: number) => quantityText(value, 'time', system).text;
+  const length = (metres: number) => quantityText(metres, 'length', system, { figures: 3 }).text;
+  const seconds = (value: number) => quantityText(value, 'time', system, { figures: 3 }).text;
   const facts: { label: string; kelvin?: number; text?: string }[] = [
     { label: cornerText.without, kelvin: corner.untreated },
     { label: cornerText.with, kelvin: corner.treated },

@@ -70,7 +70,7 @@ function PartOf({ part }: { part: Part }) {
     </>
   );
   return (
-    <Page title={part.name} eyebrow={partsText.one} aside={aside}>
+    <Page title={part.name} eyebrow={partsText.one} aside={aside} estimates>
       <PartDrawing part={part} />
       <Body>
         <a className="cp-link" href={partFileAddress(part.id)} download={part.fileName}>

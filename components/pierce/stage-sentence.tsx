@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { View } from 'react-native';
 import { depthText, splitText } from '@/components/text/pierce-designer.ts';
-import { explainText } from '@/components/text/pierce-explain.ts';
+import { estimate, explainText } from '@/components/text/pierce-explain.ts';
 import { editorText, stageText } from '@/components/text/pierce.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { InlineNumber } from '@/components/ui/inline-number.tsx';
@@ -111,10 +111,10 @@ export function StageSentence({ index, stage, through, depth, onExplainDepth, on
             {through !== null && <Aside tone="cold">{through}</Aside>}
             {depth !== null && through === null && (
               <InlineButton
-                label={depthText.atEnd(quantityText(depth, 'length', system).text)}
+                label={depthText.atEnd(quantityText(depth, 'length', system, estimate).text)}
                 spoken={explainText.spoken(
                   stageText.name(number),
-                  depthText.atEnd(quantityText(depth, 'length', system).text),
+                  depthText.atEnd(quantityText(depth, 'length', system, estimate).text),
                 )}
                 onPress={onExplainDepth}
               />

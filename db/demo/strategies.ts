@@ -60,7 +60,8 @@ function content(plant: string, wish: Wish): StrategyContent {
       focusPosition: wish.focus / 1000,
       kerfWidth: 0.0006 + to * 1e-5,
       // About 6.5 J/mm² at 1 m/min, less when faster: half of what conduction takes goes with the root of the time.
-      heatIntoPlate: 6.5e6 / Math.sqrt(wish.feed),
+      // J/m², in the three figures somebody would type
+      heatIntoPlate: Number((6.5e6 / Math.sqrt(wish.feed)).toPrecision(3)),
     },
     cornerRules: {
       treatBelowAngle: radians(100),
