@@ -24,8 +24,8 @@ export function ProfileView({ profile }: { readonly profile: MachineProfile }) {
             { label: focusScale.slope.label, value: numberText(profile.focusScale.slope, 3) },
             { label: focusScale.offset.label, value: shown(profile.focusScale.offset, 'length') },
             {
-              label: `${focusScale.minDial.label}, ${focusScale.maxDial.label.toLowerCase()}`,
-              value: `${quantityText(profile.focusScale.minDial, 'length', 'metric').number}, ${shown(profile.focusScale.maxDial, 'length', 'mm')}`,
+              label: focusScale.dialRange,
+              value: `${quantityText(profile.focusScale.minDial, 'length', 'metric').number} to ${shown(profile.focusScale.maxDial, 'length', 'mm')}`,
             },
           ]}
         />

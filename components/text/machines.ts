@@ -65,6 +65,7 @@ export const profileText = {
       label: 'Travel per millimetre typed',
       hint: 'Negative when the focus moves the other way: −2.2 means that +1 moves it 2.2 mm down',
     },
+    dialRange: 'Numbers the dial takes',
     minDial: { label: 'Least number the dial takes' },
     maxDial: { label: 'Greatest number the dial takes' },
     example: 'So it reads',

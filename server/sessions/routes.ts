@@ -74,7 +74,7 @@ export function sessionRoutes({ open, route, services }: Mount): void {
   });
 }
 
-const wrongCredentials = () => new AppError('wrong-credentials', 'Mail address or password is wrong.');
+const wrongCredentials = () => new AppError('wrong-credentials', 'Type both again; capitals count in the password.');
 
 /** Signing in again with a session at hand ends that one: nobody comes back to it. */
 async function endFormer({ database, tokens }: Services, token: string | null): Promise<void> {
