@@ -1,3 +1,4 @@
+import Svg, { Defs, G, Path, Pattern, Rect, Text as SvgText } from 'react-native-svg';
 import { profileText } from '@/components/text/machines.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
@@ -54,7 +55,7 @@ function FocusLadder({ scale, system }: { readonly scale: FocusScale; readonly s
     typed: dialForFocus(scale, position, standoff),
   }));
   return (
-    <svg
+    <Svg
       viewBox={`0 0 320 ${height}`}
       role="img"
       aria-label={`${text.drawing}: ${rows
@@ -65,58 +66,58 @@ function FocusLadder({ scale, system }: { readonly scale: FocusScale; readonly s
         .join('; ')}`}
       style={{ width: '100%', maxWidth: 360 }}
     >
-      <defs>
-        <pattern id="focus-steel" width="9" height="9" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
-          <path d="M0 0V9" stroke={roles.steelLine} strokeWidth={1} />
-        </pattern>
-      </defs>
-      <rect x={96} y={plateTop} width={128} height={height - plateTop} fill={roles.steelFill} />
-      <rect x={96} y={plateTop} width={128} height={height - plateTop} fill="url(#focus-steel)" />
-      <path
+      <Defs>
+        <Pattern id="focus-steel" width="9" height="9" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
+          <Path d="M0 0V9" stroke={roles.steelLine} strokeWidth={1} />
+        </Pattern>
+      </Defs>
+      <Rect x={96} y={plateTop} width={128} height={height - plateTop} fill={roles.steelFill} />
+      <Rect x={96} y={plateTop} width={128} height={height - plateTop} fill="url(#focus-steel)" />
+      <Path
         d={`M96 ${plateTop}H224M96 ${plateTop}V${height}M224 ${plateTop}V${height}`}
         stroke={roles.ink}
         strokeWidth={2}
       />
       {/* the beam's two edges, drawn through the example's waist */}
-      <path
+      <Path
         d={beam(rows.find((row) => row.position === example)?.y ?? plateTop, height)}
         fill={roles.ember}
         fillOpacity={0.14}
         stroke={roles.ember}
         strokeWidth={1.5}
       />
-      <g fontFamily={family.label} fontSize={14} fill={roles.softInk}>
-        <text x={86} y={18} textAnchor="end">
+      <G fontFamily={family.label} fontSize={14} fill={roles.softInk}>
+        <SvgText x={86} y={18} textAnchor="end">
           {text.position}
-        </text>
-        <text x={234} y={18}>
+        </SvgText>
+        <SvgText x={234} y={18}>
           {text.type}
-        </text>
-      </g>
-      <g fontFamily={family.figure} fontSize={17} style={{ fontVariantNumeric: 'tabular-nums' }}>
+        </SvgText>
+      </G>
+      <G fontFamily={family.figure} fontSize={17}>
         {rows.map((row) => (
-          <g key={row.position} fill={row.position === example ? roles.ember : roles.ink}>
-            <path
+          <G key={row.position} fill={row.position === example ? roles.ember : roles.ink}>
+            <Path
               d={`M92 ${row.y}H102M218 ${row.y}H228`}
               stroke={row.position === example ? roles.ember : roles.ink}
               strokeWidth={1.2}
             />
-            <text x={86} y={row.y + 6} textAnchor="end">
+            <SvgText x={86} y={row.y + 6} textAnchor="end">
               {signed(row.position, system)}
-            </text>
+            </SvgText>
             {row.typed.kind === 'ok' ? (
-              <text x={234} y={row.y + 6}>
+              <SvgText x={234} y={row.y + 6}>
                 {dialText(row.typed.typed)}
-              </text>
+              </SvgText>
             ) : (
-              <text x={234} y={row.y + 5} fill={roles.softInk} fontFamily={family.label} fontSize={14}>
+              <SvgText x={234} y={row.y + 5} fill={roles.softInk} fontFamily={family.label} fontSize={14}>
                 {text.outOfReach}
-              </text>
+              </SvgText>
             )}
-          </g>
+          </G>
         ))}
-      </g>
-    </svg>
+      </G>
+    </Svg>
   );
 }
 

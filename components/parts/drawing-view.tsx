@@ -1,5 +1,6 @@
 import { useId, useMemo, useRef, type ReactNode } from 'react';
 import { StyleSheet, View } from 'react-native';
+import Svg, { Circle, Defs, G, Path, Rect } from 'react-native-svg';
 import { centreLine, HatchPattern } from '@/components/pierce/hatch.tsx';
 import { drawingText } from '@/components/text/parts.ts';
 import { roles } from '@/components/theme/roles.ts';
@@ -111,12 +112,12 @@ export function DrawingView({
         // whole drawing in view: a finger scrolls the page; enlarged: it moves the drawing
         style={{ overflow: 'hidden', width: '100%', height, touchAction: fitted ? 'pan-y' : 'none' }}
       >
-        <svg width="100%" height={height} role="img" aria-label={label}>
-          <defs>
+        <Svg width="100%" height={height} role="img" aria-label={label}>
+          <Defs>
             <HatchPattern id={`${id}steel`} spacing={9} colour={roles.steelLine} weight={0.9} scale={1 / zoom} />
-          </defs>
+          </Defs>
           {plate && corner && (
-            <rect
+            <Rect
               x={corner.x}
               y={corner.y}
               width={(plate.maxX - plate.minX) * view.scale}
@@ -126,9 +127,9 @@ export function DrawingView({
               strokeWidth={1.4}
             />
           )}
-          <g transform={`translate(${place.x} ${place.y}) scale(${zoom})`}>
-            <path d={texts.part} fill={roles.steelFill} fillRule="evenodd" />
-            <path
+          <G transform={`translate(${place.x} ${place.y}) scale(${zoom})`}>
+            <Path d={texts.part} fill={roles.steelFill} fillRule="evenodd" />
+            <Path
               d={texts.part}
               fill={`url(#${id}steel)`}
               fillRule="evenodd"
@@ -138,7 +139,7 @@ export function DrawingView({
               vectorEffect="non-scaling-stroke"
             />
             {texts.open !== '' && (
-              <path
+              <Path
                 d={texts.open}
                 fill="none"
                 stroke={roles.hot}
@@ -148,9 +149,9 @@ export function DrawingView({
               />
             )}
             {texts.loops.map((loop) => (
-              <path
+              <Path
                 key={loop.id}
-                data-testid="drawing-loop"
+                testID="drawing-loop"
                 d={loop.data}
                 fill="none"
                 stroke={roles.ember}
@@ -158,7 +159,7 @@ export function DrawingView({
                 vectorEffect="non-scaling-stroke"
               />
             ))}
-          </g>
+          </G>
           {texts.circles.map(({ centre, radius }, index) => {
             const at = windowToFrame(view, frame, centre);
             const reach = radius * view.scale;
@@ -166,7 +167,7 @@ export function DrawingView({
             if (reach < 9) return null;
             const arm = reach + Math.min(14, reach * 0.3);
             return (
-              <path
+              <Path
                 key={index}
                 d={`M${at.x - arm} ${at.y}h${2 * arm}M${at.x} ${at.y - arm}v${2 * arm}`}
                 stroke={roles.softInk}
@@ -176,11 +177,11 @@ export function DrawingView({
             );
           })}
           {placed.map((mark) => (
-            <g key={mark.id} data-testid="drawing-mark" transform={`translate(${mark.x} ${mark.y})`}>
-              {mark.full ? marks.find(({ id: own }) => own === mark.id)?.draw : <circle r={3} fill={roles.ink} />}
-            </g>
+            <G key={mark.id} testID="drawing-mark" transform={`translate(${mark.x} ${mark.y})`}>
+              {mark.full ? marks.find(({ id: own }) => own === mark.id)?.draw : <Circle r={3} fill={roles.ink} />}
+            </G>
           ))}
-        </svg>
+        </Svg>
       </div>
       <View style={styles.buttons}>
         <Button label="+" spoken={drawingText.larger} onPress={() => zoomBy(1.5)} />

@@ -1,5 +1,6 @@
 import { useRouter } from 'expo-router';
 import { useMemo, useState } from 'react';
+import { Circle, Path } from 'react-native-svg';
 import { newId } from '@/components/data/call.ts';
 import { useDrawingRead, usePartAdd } from '@/components/data/parts.ts';
 import { isProblem } from '@/components/data/problem.ts';
@@ -60,12 +61,12 @@ export function PartNewScreen() {
       ...(crossings ?? []).map((at, index) => ({
         id: `crossing ${index}`,
         at,
-        draw: <path d="M-8 -8 8 8M-8 8 8 -8" fill="none" stroke={roles.wrong} strokeWidth={2.6} />,
+        draw: <Path d="M-8 -8 8 8M-8 8 8 -8" fill="none" stroke={roles.wrong} strokeWidth={2.6} />,
       })),
       ...(gaps?.gaps ?? []).map(({ at }, index) => ({
         id: `gap ${index}`,
         at,
-        draw: <circle r={9} fill="none" stroke={roles.hot} strokeWidth={2.4} />,
+        draw: <Circle r={9} fill="none" stroke={roles.hot} strokeWidth={2.4} />,
       })),
     ],
     [gaps, crossings],

@@ -1,3 +1,4 @@
+import Svg, { G, Line, Path, Rect } from 'react-native-svg';
 import { roles } from '@/components/theme/roles.ts';
 import { coreWords } from '@/components/text/pierce.ts';
 import { hatchData } from './hatch.tsx';
@@ -30,14 +31,14 @@ export function Core({ bands, reserve, size, silent = false }: CoreProps) {
   const spacing = Math.max(3.5, size / 9);
   const label = coreWords(shares.length, reserve);
   return (
-    <svg
+    <Svg
       width={size}
       height={deep + most}
       viewBox={`0 0 ${size} ${deep + most}`}
       {...(silent ? { 'aria-hidden': true } : { role: 'img', 'aria-label': label })}
     >
-      <rect x={0} y={0} width={size} height={deep} fill={roles.steelFill} />
-      <path
+      <Rect x={0} y={0} width={size} height={deep} fill={roles.steelFill} />
+      <Path
         d={
           hatchData(0, 0, bore.x, deep, spacing) +
           hatchData(bore.x + bore.width, 0, size - bore.x - bore.width, deep, spacing)
@@ -45,12 +46,12 @@ export function Core({ bands, reserve, size, silent = false }: CoreProps) {
         stroke={roles.steelLine}
         strokeWidth={1}
       />
-      <g>
-        <rect x={bore.x} y={0} width={bore.width} height={deep} fill={roles.sheet} />
+      <G>
+        <Rect x={bore.x} y={0} width={bore.width} height={deep} fill={roles.sheet} />
         {shares.map((band, index) => (
-          <rect
+          <Rect
             key={band.to}
-            data-testid="core-band"
+            testID="core-band"
             x={bore.x}
             y={band.from * deep}
             width={bore.width}
@@ -60,7 +61,7 @@ export function Core({ bands, reserve, size, silent = false }: CoreProps) {
           />
         ))}
         {shares.slice(0, -1).map((band) => (
-          <line
+          <Line
             key={band.to}
             x1={bore.x}
             x2={bore.x + bore.width}
@@ -70,13 +71,13 @@ export function Core({ bands, reserve, size, silent = false }: CoreProps) {
             strokeWidth={1.5}
           />
         ))}
-      </g>
-      <path
+      </G>
+      <Path
         d={`M${bore.x} 0V${deep}M${bore.x + bore.width} 0V${deep}`}
         stroke={roles.ink}
         strokeWidth={Math.max(1, size / 44)}
       />
-      <path
+      <Path
         d={`M0.75 0.75H${bore.x}M${bore.x + bore.width} 0.75H${size - 0.75}M0.75 ${deep - 0.75}H${through ? bore.x : size - 0.75}M${
           bore.x + bore.width
         } ${deep - 0.75}H${size - 0.75}`}
@@ -84,14 +85,14 @@ export function Core({ bands, reserve, size, silent = false }: CoreProps) {
         strokeWidth={Math.max(1.5, size / 32)}
       />
       {tail > 0 && (
-        <path
-          data-testid="core-reserve"
+        <Path
+          testID="core-reserve"
           d={hatchData(bore.x, deep + 2, bore.width, tail, Math.max(3.5, size / 11))}
           stroke={roles.ember}
           strokeWidth={Math.max(1.25, size / 40)}
         />
       )}
-    </svg>
+    </Svg>
   );
 }
 

@@ -1,3 +1,4 @@
+import { Line, Pattern } from 'react-native-svg';
 /** Centre line of the drawing office: long, short, short, short. */
 export const centreLine = '14 4 3 4 3 4 3 4';
 
@@ -29,14 +30,14 @@ type HatchProps = { id: string; spacing: number; colour: string; weight?: number
 export function HatchPattern({ id, spacing, colour, weight = 1, falling = false, scale = 1 }: HatchProps) {
   const turn = falling ? -45 : 45;
   return (
-    <pattern
+    <Pattern
       id={id}
       width={spacing}
       height={spacing}
       patternUnits="userSpaceOnUse"
       patternTransform={`scale(${scale}) rotate(${turn})`}
     >
-      <line x1={spacing / 2} y1={0} x2={spacing / 2} y2={spacing} stroke={colour} strokeWidth={weight} />
-    </pattern>
+      <Line x1={spacing / 2} y1={0} x2={spacing / 2} y2={spacing} stroke={colour} strokeWidth={weight} />
+    </Pattern>
   );
 }

@@ -1,3 +1,4 @@
+import Svg, { Path } from 'react-native-svg';
 import { Row } from '@/components/ui/stack.tsx';
 import { Body, Small } from '@/components/ui/text.tsx';
 import { roles } from '@/components/theme/roles.ts';
@@ -28,10 +29,10 @@ export function StateMark({
   const words = detail === undefined ? stateText[state] : `${stateText[state]}, ${detail}`;
   return (
     <Row gap="s" wrap={false}>
-      <svg width={18} height={18} viewBox="0 0 18 18" aria-hidden="true" style={{ flex: 'none' }}>
-        {filled !== undefined && <path d={filled} fill={colour} />}
-        <path d={outline} fill="none" stroke={colour} strokeWidth={1.8} />
-      </svg>
+      <Svg width={18} height={18} viewBox="0 0 18 18" aria-hidden style={{ flexShrink: 0 }}>
+        {filled !== undefined && <Path d={filled} fill={colour} />}
+        <Path d={outline} fill="none" stroke={colour} strokeWidth={1.8} />
+      </Svg>
       {small ? <Small strong>{words}</Small> : <Body>{words}</Body>}
     </Row>
   );

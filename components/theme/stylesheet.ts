@@ -20,6 +20,7 @@ body{background:var(--ground);color:var(--ink);font-family:${family.reading};mar
 #root{min-height:100%}
 *,*::before,*::after{box-sizing:border-box}
 :focus-visible{outline:3px solid var(--cold)!important;outline-offset:2px}
+svg text{font-variant-numeric:tabular-nums}
 a{color:inherit;text-decoration:none}
 main:focus{outline:none!important}
 .cp-control{font-family:${family.reading};font-size:17px;line-height:24px;color:var(--ink);background:var(--sheet);border:1px solid var(--ink);border-radius:3px;min-height:48px;padding:11px 12px;width:100%;margin:0;appearance:none}

@@ -18,6 +18,7 @@ export const size = {
   heading3: { fontSize: 20, lineHeight: 25 },
   heading2: { fontSize: 24, lineHeight: 29 },
   heading1: { fontSize: 32, lineHeight: 36 },
+  figureSmall: { fontSize: 16, lineHeight: 20 },
   figure: { fontSize: 22, lineHeight: 27 },
   figureLarge: { fontSize: 28, lineHeight: 33 },
 } as const;

@@ -1,3 +1,7 @@
+import Svg, { Path } from 'react-native-svg';
+import { roles } from '@/components/theme/roles.ts';
+import type { Role } from '@/components/theme/tokens.ts';
+
 /** Small drawn signs, told apart by shape. They take the colour of the text around them and say nothing by themselves. */
 const drawings = {
   /** The caution owns the triangle. */
@@ -18,20 +22,28 @@ const drawings = {
 
 export type MarkName = keyof typeof drawings;
 
-export function Mark({ name, size = 24 }: { readonly name: MarkName; readonly size?: number }) {
+/** `tone` is its colour where it differs from the text around it. */
+export function Mark({
+  name,
+  size = 24,
+  tone,
+}: {
+  readonly name: MarkName;
+  readonly size?: number;
+  readonly tone?: Role;
+}) {
   return (
-    <svg
+    <Svg
       width={size}
       height={size}
       viewBox="0 0 24 24"
       fill="none"
-      stroke="currentColor"
+      stroke={tone === undefined ? 'currentColor' : roles[tone]}
       strokeWidth={2}
-      aria-hidden="true"
-      focusable="false"
-      style={{ flex: 'none' }}
+      aria-hidden
+      style={{ flexShrink: 0 }}
     >
-      <path d={drawings[name]} />
-    </svg>
+      <Path d={drawings[name]} />
+    </Svg>
   );
 }

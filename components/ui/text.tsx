@@ -93,16 +93,19 @@ export function Figure({
   unit,
   tone,
   large = false,
+  small = false,
   align,
 }: {
   readonly value: string | number;
   readonly unit?: string;
   readonly tone?: TextRole;
+  /** Beside a drawing, no larger than its labels. */
+  readonly small?: boolean;
   readonly large?: boolean;
   readonly align?: TextProps['align'];
 }) {
   return (
-    <Text style={[styles.figure, large && size.figureLarge, toned(tone, align)]}>
+    <Text style={[styles.figure, large && size.figureLarge, small && size.figureSmall, toned(tone, align)]}>
       {value}
       {unit === undefined || unit === '' ? null : (
         <Text style={[styles.unit, large && styles.unitLarge, tone !== undefined && { color: roles[tone] }]}>
