@@ -12,39 +12,40 @@ const floors = {
   app: ['server', 'db', 'tests'],
   server: ['app', 'components', 'tests'],
 };
-const oneWay = Object.entries(floors).map(([floor, above]) => ({
-  files: [`${floor}/**/*.{ts,tsx}`],
-  rules: {
-    'no-restricted-imports': [
-      'error',
-      {
-        patterns: [
-          {
-            regex: `^(@/|(\\.\\./)+)(${above.join('|')})/`,
-            message: `${floor}/ may not import from ${above.join(', ')}: imports run one way.`,
-          },
-          ...(floor === 'strategy'
-            ? [{ regex: '^(node:|react|expo|express|drizzle|pg$|zod)', message: 'strategy/ is pure: no platform.' }]
-            : []),
-          ...(floor === 'shared'
-            ? [{ regex: '^(node:|react|expo|express|drizzle|pg$)', message: 'shared/ runs on both sides.' }]
-            : []),
-          ...(floor === 'components' || floor === 'app'
-            ? [{ regex: '^mathjs', message: 'mathjs lives in strategy/rules/ and is built into a worker.' }]
-            : []),
-          ...(floor === 'components' || floor === 'app' || floor === 'shared'
-            ? [
-                {
-                  regex: 'strategy/rules/(index|rule|understand)\\.ts$',
-                  message: 'This brings mathjs into the first bundle. The names alone are in strategy/rules/names.ts.',
-                },
-              ]
-            : []),
-        ],
-      },
-    ],
-  },
-}));
+const fence = (floor, above, inPage) => ({
+  'no-restricted-imports': [
+    'error',
+    {
+      patterns: [
+        {
+          regex: `^(@/|(\\.\\./)+)(${above.join('|')})/`,
+          message: `${floor}/ may not import from ${above.join(', ')}: imports run one way.`,
+        },
+        ...(floor === 'strategy'
+          ? [{ regex: '^(node:|react|expo|express|drizzle|pg$|zod)', message: 'strategy/ is pure: no platform.' }]
+          : []),
+        ...(floor === 'shared'
+          ? [{ regex: '^(node:|react|expo|express|drizzle|pg$)', message: 'shared/ runs on both sides.' }]
+          : []),
+        ...(floor === 'components' || floor === 'app'
+          ? [{ regex: '^mathjs', message: 'mathjs lives in strategy/rules/ and is built into a worker.' }]
+          : []),
+        ...(inPage
+          ? [
+              {
+                regex: 'strategy/rules/(index|rule|understand)\\.ts$',
+                message: 'This brings mathjs into the first bundle. The names alone are in strategy/rules/names.ts.',
+              },
+            ]
+          : []),
+      ],
+    },
+  ],
+});
+const oneWay = Object.entries(floors).flatMap(([floor, above]) => [
+  { files: [`${floor}/**/*.{ts,tsx}`], rules: fence(floor, above, ['components', 'app', 'shared'].includes(floor)) },
+  { files: [`${floor}/**/*.worker.ts`], rules: fence(floor, above, false) },
+]);
 
 const node = {
   process: 'readonly',

@@ -1,6 +1,7 @@
 import { queryOptions, useMutation, useQueryClient, type QueryClient } from '@tanstack/react-query';
 import { revisionEndpoints, type Revision, type StrategyContent } from '@/shared/strategies.ts';
 import { apiCall } from './call.ts';
+import { isProblem } from './problem.ts';
 import { cardsRoot, reviewsRoot, revisionsRoot as root, strategiesRoot } from './roots.ts';
 
 export const revisionQuery = (revisionId: string) =>
@@ -40,6 +41,10 @@ function useDecision(endpoint: (typeof revisionEndpoints)['submit' | 'approve' |
       await settle(client, revision);
       // Approving supersedes another revision, so the others are asked for again too.
       await client.invalidateQueries({ queryKey: root });
+    },
+    onError: async (error) => {
+      // What is in its way may have come since it was read, as a house rule may.
+      if (isProblem(error, 'wrong-state')) await client.invalidateQueries({ queryKey: root });
     },
   });
 }

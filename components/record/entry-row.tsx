@@ -55,6 +55,8 @@ function pageOf({ kind, id }: RecordEntry['subject']): Href | null {
       return `/corner-plans/${id}`;
     case 'report':
       return `/reports/${id}`;
+    case 'houseRule':
+      return '/house-rules';
     default:
       return null;
   }

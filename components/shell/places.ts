@@ -14,6 +14,7 @@ const places: readonly Place[] = [
   place('/plates', shell.menuOf.plates, 'plate.read'),
   place('/machines', shell.menuOf.machines, 'machine.read'),
   place('/reports', shell.menuOf.reports, 'report.read'),
+  place('/house-rules', shell.menuOf.houseRules, 'rule.write'),
   place('/people', shell.menuOf.people, 'people.manage'),
   place('/record', shell.menuOf.record, 'record.read'),
 ];

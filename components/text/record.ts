@@ -21,11 +21,18 @@ const events: Readonly<Record<string, string>> = {
   'cornerPlan.redone': 'planned corners again',
   'report.made': 'reported trouble',
   'report.closed': 'closed a report',
+  'houseRule.added': 'added a house rule',
+  'houseRule.changed': 'rewrote a house rule',
+  'houseRule.ended': 'ended a house rule',
   'request.made': 'asked for a strategy',
 };
 
 /** What an entry is about, in words. */
-const subjects: Readonly<Record<string, string>> = { cornerPlan: 'corner plan', member: 'person' };
+const subjects: Readonly<Record<string, string>> = {
+  cornerPlan: 'corner plan',
+  member: 'person',
+  houseRule: 'house rule',
+};
 export const subjectText = (kind: string): string => subjects[kind] ?? kind;
 
 export const eventText = (event: string): string => events[event] ?? event;

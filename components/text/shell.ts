@@ -47,6 +47,7 @@ export const shell = {
     machines: 'Machines',
     reports: 'Reports',
     people: 'People',
+    houseRules: 'House rules',
     record: 'Record',
   },
 } as const;
@@ -76,6 +77,7 @@ export const titles = {
   report: 'Report',
   reportNew: 'It went wrong',
   people: 'People',
+  houseRules: 'House rules',
   record: 'Record',
   notFound: 'Nothing here',
 } as const;

@@ -3,6 +3,7 @@ import { fileURLToPath, URL } from 'node:url';
 import pg from 'pg';
 import { pino } from 'pino';
 import { openDatabase } from '../../db/database.ts';
+import { demoHouseRules } from '../../db/demo/house-rules.ts';
 import { demoGrades, demoNozzles, demoPlates } from '../../db/demo/materials.ts';
 import { demoMachines } from '../../db/demo/machines.ts';
 import { demoCornerPlans, demoParts } from '../../db/demo/parts.ts';
@@ -11,6 +12,7 @@ import { demoMembers, demoPlants } from '../../db/demo/people.ts';
 import { demoStrategies, type DemoStrategy } from '../../db/demo/strategies.ts';
 import { requestEndpoints } from '../../shared/cards.ts';
 import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
+import { houseRuleEndpoints } from '../../shared/house-rules.ts';
 import { gradeEndpoints, machineEndpoints, nozzleEndpoints } from '../../shared/machines.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { peopleEndpoints } from '../../shared/people.ts';
@@ -124,6 +126,11 @@ async function fillPlant(plant: Plant, base: string, password: string): Promise<
     const { mail, name, role, mayApprove } = member;
     const id = demoId(`member ${plant} ${mail}`);
     await lead.call(peopleEndpoints.add, { body: { id, mail, name, role, mayApprove, password } });
+  }
+  // Before the strategies: what is handed in is judged by them.
+  const rules = (await lead.call(houseRuleEndpoints.list))?.items ?? [];
+  for (const rule of demoHouseRules[plant]) {
+    if (!rules.some(({ id }) => id === rule.id)) await lead.call(houseRuleEndpoints.add, { body: rule });
   }
   const engineer = await as('engineer@quay.example');
   await addMaterials(engineer, plant);

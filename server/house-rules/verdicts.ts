@@ -1,9 +1,8 @@
 import type { Transaction } from '../../db/database.ts';
-import type { HouseRuleVerdict } from '../../shared/house-rules.ts';
+import { houseRuleValueText, type HouseRuleVerdict } from '../../shared/house-rules.ts';
 import { namedResultsOf } from '../../shared/prediction.ts';
 import type { StrategyContent } from '../../shared/strategies.ts';
-import { houseRuleHolds, houseRuleRead, houseRuleTable, type HouseRuleResults } from '../../strategy/rules/index.ts';
-import { numberText, quantityText } from '../../strategy/units/index.ts';
+import { houseRuleHolds, houseRuleRead, type HouseRuleResults } from '../../strategy/rules/index.ts';
 import { findMachineRevision } from '../machines/repository.ts';
 import { findNozzle } from '../nozzles/routes.ts';
 import type { RevisionRow } from '../revisions/repository.ts';
@@ -56,19 +55,8 @@ export function judgement(expression: string, named: NamedResults): Pick<HouseRu
   if (found.kind === 'none') return { state: 'unclear', why: found.why };
   const read = houseRuleRead(expression);
   const values = (read.kind === 'ok' ? read.uses : []).map((name) => {
-    const row = houseRuleTable.find((one) => one.name === name);
     const value = named.results[name];
-    return value === null || row === undefined
-      ? `there is no ${name}`
-      : `${name} is ${valueText(value, row.dimension)}`;
+    return value === null ? `there is no ${name}` : `${name} is ${houseRuleValueText(name, value, 'metric')}`;
   });
   return { state: found.holds ? 'holds' : 'broken', why: `Here ${values.join(', ')}.` };
 }
-
-type Dimension = (typeof houseRuleTable)[number]['dimension'];
-
-/** Plain numbers are cut off, not rounded: 1.9996 does not reach 2. */
-const valueText = (value: number, dimension: Dimension): string =>
-  dimension === 'count'
-    ? numberText(Math.trunc(value * 1000 + Math.sign(value) * 1e-6) / 1000, 3)
-    : quantityText(value, dimension, 'metric').text;

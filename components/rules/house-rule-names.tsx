@@ -1,0 +1,50 @@
+import { useQuery } from '@tanstack/react-query';
+import { houseRuleExampleQuery } from '@/components/data/house-rules.ts';
+import { houseRulesText } from '@/components/text/house-rules.ts';
+import { Button } from '@/components/ui/button.tsx';
+import { ErrorNotice } from '@/components/ui/error-notice.tsx';
+import { Rows } from '@/components/ui/link-row.tsx';
+import { Progress } from '@/components/ui/progress.tsx';
+import { Row, Stack } from '@/components/ui/stack.tsx';
+import { Body, Heading, Small } from '@/components/ui/text.tsx';
+import { useUnitSystem } from '@/components/ui/unit-system.ts';
+import { houseRuleValueText } from '@/shared/house-rules.ts';
+import { houseRuleTable, type HouseRuleName } from '@/strategy/rules/names.ts'; // the folder's face would bring the reader of expressions along
+
+/** Every name a rule may use, how a limit on it is written, and what it comes to on a revision of this plant. */
+export function HouseRuleNames({ onPick }: { readonly onPick: (name: HouseRuleName) => void }) {
+  const example = useQuery(houseRuleExampleQuery());
+  const system = useUnitSystem();
+  const valueOf = (name: HouseRuleName): string | null => {
+    const found = example.data?.results.find((one) => one.name === name);
+    if (found === undefined) return null;
+    return found.value === null ? houseRulesText.noValue : houseRuleValueText(name, found.value, system);
+  };
+  return (
+    <Stack gap="s">
+      <Heading level={3}>{houseRulesText.names}</Heading>
+      {example.isPending ? (
+        <Progress label={houseRulesText.namesFetching} />
+      ) : example.isError ? (
+        <ErrorNotice error={example.error} onRetry={() => void example.refetch()} />
+      ) : (
+        <Small>
+          {example.data === null || example.data === undefined
+            ? houseRulesText.namesWithout
+            : houseRulesText.namesAt(example.data.strategyName, example.data.number)}
+        </Small>
+      )}
+      <Rows label={houseRulesText.names}>
+        {houseRuleTable.map(({ name, meaning, example: way }) => (
+          <div key={name} style={{ padding: '4px 4px 8px' }}>
+            <Row justify="space-between" wrap={false}>
+              <Button kind="quiet" label={name} spoken={houseRulesText.put(name)} onPress={() => onPick(name)} />
+              {valueOf(name) === null ? null : <Body strong>{valueOf(name)}</Body>}
+            </Row>
+            <Small>{houseRulesText.as(meaning, way)}</Small>
+          </div>
+        ))}
+      </Rows>
+    </Stack>
+  );
+}
