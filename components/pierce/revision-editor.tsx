@@ -6,6 +6,8 @@ import { nozzlesQuery } from '@/components/data/nozzles.ts';
 import { isProblem } from '@/components/data/problem.ts';
 import { useRevisionSave } from '@/components/data/revisions.ts';
 import { strategyQuery } from '@/components/data/strategies.ts';
+import { HouseRuleList } from '@/components/rules/house-rule-list.tsx';
+import { houseRulesText } from '@/components/text/house-rules.ts';
 import { momentText } from '@/components/text/moments.ts';
 import { compareText, compareWords, historyText, proposeText } from '@/components/text/pierce-designer.ts';
 import { depthsAtEnds, type Explained } from '@/components/text/pierce-explain.ts';
@@ -348,9 +350,14 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
     </Panel>
   );
   const checks = (
-    <Panel title={revisionText.checks}>
-      <CheckList checks={shown.prediction.checks} />
-    </Panel>
+    <>
+      <Panel title={revisionText.checks}>
+        <CheckList checks={shown.prediction.checks} />
+      </Panel>
+      <Panel title={houseRulesText.title}>
+        <HouseRuleList verdicts={revision.houseRules} behind={dirty} />
+      </Panel>
+    </>
   );
   const conditions = (
     <>
