@@ -14,7 +14,7 @@ import { Body, Heading, Small } from '@/components/ui/text.tsx';
 import { Tick } from '@/components/ui/tick.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { Prediction } from '@/shared/strategies.ts';
-import { DEFAULT_RESERVE_RULES, type ProposeInput, type Stage } from '@/strategy/pierce/index.ts';
+import type { ProposeInput, ReserveRules, Stage } from '@/strategy/pierce/index.ts';
 import { quantityText } from '@/strategy/units/index.ts';
 import type { ProposalState } from './use-proposal.ts';
 
@@ -24,6 +24,8 @@ export type ProposalGround = Pick<ProposeInput, 'profile' | 'nozzle' | 'thicknes
 type ProposePanelProps = {
   /** Null while machine or nozzle are not known, or a number is wrong. */
   ground: ProposalGround | null;
+  /** The least reserves the plant asks for: where the wish begins. */
+  rules: ReserveRules;
   stages: readonly Stage[];
   stageKeys: readonly string[];
   state: ProposalState;
@@ -38,9 +40,9 @@ type ProposePanelProps = {
 
 /** Asks the designer for a routine, around stages that are kept; its answer is looked at before it is taken. */
 export function ProposePanel(props: ProposePanelProps) {
-  const { ground, stages, stageKeys, state, proposed, now, onBegin, onCancel, onAccept, onClose } = props;
-  const [cold, setCold] = useState<number | null>(DEFAULT_RESERVE_RULES.cold);
-  const [hot, setHot] = useState<number | null>(DEFAULT_RESERVE_RULES.hot);
+  const { ground, rules, stages, stageKeys, state, proposed, now, onBegin, onCancel, onAccept, onClose } = props;
+  const [cold, setCold] = useState<number | null>(rules.cold);
+  const [hot, setHot] = useState<number | null>(rules.hot);
   const [longest, setLongest] = useState<number | null>(null);
   const [crater, setCrater] = useState<number | null>(null);
   const [leadIn, setLeadIn] = useState<number | null>(null);

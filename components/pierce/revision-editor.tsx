@@ -26,7 +26,7 @@ import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Small } from '@/components/ui/text.tsx';
 import { Tick } from '@/components/ui/tick.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
-import { predictionOf } from '@/shared/prediction.ts';
+import { reserveRulesOf } from '@/shared/prediction.ts';
 import type { Prediction, Revision, StrategyContent } from '@/shared/strategies.ts';
 import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
@@ -46,7 +46,7 @@ import { SectionPanel, type SectionEdit } from './section-panel.tsx';
 import { stageEnds } from './section-layout.ts';
 import { SensitivityPanel } from './sensitivity-panel.tsx';
 import { StageSentence } from './stage-sentence.tsx';
-import { usePrediction } from './use-prediction.ts';
+import { predicted, usePrediction } from './use-prediction.ts';
 import { useProposal, type ProposalState } from './use-proposal.ts';
 import { useUndoKeys } from './use-undo-keys.ts';
 
@@ -114,7 +114,11 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
   );
   const machineRevision = machine?.revisions.find(({ id }) => id === draft.content.machineRevisionId);
   const nozzle = nozzles.data?.find(({ id }) => id === draft.content.nozzleId) ?? null;
-  const live = usePrediction(draft.content, problems.size === 0, machineRevision?.profile ?? null, nozzle, {
+  const rules = useMemo(
+    () => reserveRulesOf(revision.houseRules.map(({ expression }) => expression)),
+    [revision.houseRules],
+  );
+  const live = usePrediction(draft.content, problems.size === 0, machineRevision?.profile ?? null, nozzle, rules, {
     prediction: revision.prediction,
     content: revision.content,
     behind: false,
@@ -143,8 +147,11 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
       : answered.proposal.nearest
     : null;
   const proposed = useMemo(
-    () => (proposedStages && profile && nozzle ? predictedOf(live.content, proposedStages, profile, nozzle) : null),
-    [proposedStages, live.content, profile, nozzle],
+    () =>
+      proposedStages && profile && nozzle
+        ? predicted(withStages(live.content, proposedStages), profile, nozzle, rules)
+        : null,
+    [proposedStages, live.content, profile, nozzle, rules],
   );
   const ghosts = useMemo<readonly Ghost[]>(
     () => [
@@ -292,6 +299,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
   const proposePanel = proposing && !readOnly && (
     <ProposePanel
       ground={ground}
+      rules={rules}
       stages={draft.content.stages}
       stageKeys={draft.stageKeys}
       state={proposalState}
@@ -311,7 +319,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
     />
   );
   const sensitivity = profile && nozzle && !shown.behind && (
-    <SensitivityPanel content={shown.content} profile={profile} nozzle={nozzle} />
+    <SensitivityPanel content={shown.content} profile={profile} nozzle={nozzle} rules={rules} />
   );
 
   const section = (
@@ -329,6 +337,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
         chosen={chosen}
         ghosts={ghosts}
         edit={edit}
+        rules={rules}
       />
     </Stack>
   );
@@ -423,7 +432,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
       </div>
       <ExplainDialog
         explained={explained}
-        from={{ prediction: shown.prediction, content: shown.content, nozzle, system }}
+        from={{ prediction: shown.prediction, content: shown.content, nozzle, rules, system }}
         onClose={() => setExplained(null)}
       />
       <Dialog
@@ -460,21 +469,11 @@ const groundSame = (a: ProposalGround, b: ProposalGround): boolean =>
   JSON.stringify([a.profile, a.nozzle, a.thickness, a.hottestPlateTemperature]) ===
   JSON.stringify([b.profile, b.nozzle, b.thickness, b.hottestPlateTemperature]);
 
-/** What other stages would come to in the same strategy; null where the model can't follow. */
-function predictedOf(
-  content: StrategyContent,
-  stages: readonly Stage[],
-  profile: MachineProfile,
-  nozzle: Nozzle,
-): Prediction | null {
-  try {
-    const own = stages.map(({ duration, from, to }) => ({ duration, from: { ...from }, to: { ...to } }));
-    return predictionOf({ content: { ...content, stages: own }, profile, nozzle });
-  } catch (error) {
-    if (error instanceof RangeError) return null;
-    throw error;
-  }
-}
+/** Content with other stages, as a draft holds them. */
+const withStages = (content: StrategyContent, stages: readonly Stage[]): StrategyContent => ({
+  ...content,
+  stages: stages.map(({ duration, from, to }) => ({ duration, from: { ...from }, to: { ...to } })),
+});
 
 const ghostOf = (label: string, stages: readonly Stage[], { routineTime, cold }: Prediction): Ghost => ({
   label,

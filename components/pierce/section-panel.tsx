@@ -18,10 +18,9 @@ import { Stack } from '@/components/ui/stack.tsx';
 import { Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { NozzleRow } from '@/shared/machines.ts';
-import { predictionOf } from '@/shared/prediction.ts';
-import type { Prediction, StrategyContent } from '@/shared/strategies.ts';
+import type { StrategyContent } from '@/shared/strategies.ts';
 import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
-import type { Stage } from '@/strategy/pierce/stage.ts';
+import { DEFAULT_RESERVE_RULES, type ReserveRules, type Stage } from '@/strategy/pierce/index.ts';
 import { quantityText } from '@/strategy/units/index.ts';
 import { ExplainDialog, ResultButton, ResultGrid } from './explain.tsx';
 import type { Ghost } from './ghost.ts';
@@ -30,7 +29,7 @@ import type { KnotEditing } from './knot-layer.tsx';
 import { targetMoved, targetValue, type Target } from './knots.ts';
 import { laneNames, type LaneName } from './section-layout.ts';
 import { SectionView } from './section-view.tsx';
-import type { LivePrediction } from './use-prediction.ts';
+import { predicted, type LivePrediction } from './use-prediction.ts';
 
 /** What the drawing changes when something in it is moved. */
 export type SectionEdit = {
@@ -51,10 +50,21 @@ type SectionPanelProps = {
   ghosts?: readonly Ghost[];
   /** Null where the numbers can't be changed now. */
   edit?: SectionEdit | null;
+  /** The least reserves the plant asks for. */
+  rules?: ReserveRules;
 };
 
 /** The section with its lanes, and the title block that says what it is of. On a phone one lane at a time. */
-export function SectionPanel({ live, content, machine, nozzle, chosen, ghosts, edit = null }: SectionPanelProps) {
+export function SectionPanel({
+  live,
+  content,
+  machine,
+  nozzle,
+  chosen,
+  ghosts,
+  edit = null,
+  rules = DEFAULT_RESERVE_RULES,
+}: SectionPanelProps) {
   const { wide, width } = useLayout();
   const system = useUnitSystem();
   const [lane, setLane] = useState<LaneName>('meanPower');
@@ -64,7 +74,10 @@ export function SectionPanel({ live, content, machine, nozzle, chosen, ghosts, e
 
   const lanes = wide ? laneNames : [lane];
   // while something is dragged only this panel is drawn anew; the form gets the number when it is let go
-  const dragged = useMemo(() => (preview && edit ? previewed(live, preview, edit) : null), [live, preview, edit]);
+  const dragged = useMemo(
+    () => (preview && edit ? previewed(live, preview, edit, rules) : null),
+    [live, preview, edit, rules],
+  );
   const shown = dragged ?? live;
   const { prediction } = shown;
   const { stages } = shown.content;
@@ -87,7 +100,7 @@ export function SectionPanel({ live, content, machine, nozzle, chosen, ghosts, e
       }
     : undefined;
 
-  const from = { prediction, content: shown.content, nozzle, system };
+  const from = { prediction, content: shown.content, nozzle, rules, system };
   const reserve = (name: 'reserveCold' | 'reserveHot') => (
     <ResultButton
       label={resultLabel[name]}
@@ -174,6 +187,7 @@ function previewed(
   live: LivePrediction,
   { target, value }: { target: Target; value: number },
   { profile, nozzle }: SectionEdit,
+  rules: ReserveRules,
 ): LivePrediction {
   const stages = targetMoved(live.content.stages, target, value).map(({ duration, from, to }) => ({
     duration,
@@ -181,16 +195,7 @@ function previewed(
     to: { ...to },
   }));
   const content = { ...live.content, stages };
-  return { prediction: predicted(content, profile, nozzle) ?? live.prediction, content, behind: false };
-}
-
-function predicted(content: StrategyContent, profile: MachineProfile, nozzle: Nozzle): Prediction | null {
-  try {
-    return predictionOf({ content, profile, nozzle });
-  } catch (error) {
-    if (error instanceof RangeError) return null;
-    throw error;
-  }
+  return { prediction: predicted(content, profile, nozzle, rules) ?? live.prediction, content, behind: false };
 }
 
 /** State that is drawn at most once a frame however often it is set; null is drawn at once. */

@@ -7,15 +7,15 @@ import { Panel } from '@/components/ui/panel.tsx';
 import { Small } from '@/components/ui/text.tsx';
 import type { StrategyContent } from '@/shared/strategies.ts';
 import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
-import { DEFAULT_RESERVE_RULES, pierceSensitivity, type SensitivityRow } from '@/strategy/pierce/index.ts';
+import { pierceSensitivity, type ReserveRules, type SensitivityRow } from '@/strategy/pierce/index.ts';
 
-type SensitivityPanelProps = { content: StrategyContent; profile: MachineProfile; nozzle: Nozzle };
+type SensitivityPanelProps = { content: StrategyContent; profile: MachineProfile; nozzle: Nozzle; rules: ReserveRules };
 
 /** What a dirty or clean plate, a worn nozzle, a thicker and a hot plate do to the reserve, as bars on one scale. */
-export function SensitivityPanel({ content, profile, nozzle }: SensitivityPanelProps) {
+export function SensitivityPanel({ content, profile, nozzle, rules }: SensitivityPanelProps) {
   const rows = useMemo(() => sensitivityOf(content, profile, nozzle), [content, profile, nozzle]);
   if (rows.length === 0) return null;
-  const { cold } = DEFAULT_RESERVE_RULES;
+  const { cold } = rules;
   const most = Math.max(cold, ...rows.map(({ reserve }) => (reserve.kind === 'ok' ? reserve.value : 0))) * 1.05;
   const share = (value: number) => `${Math.round((value / most) * 1000) / 10}%`;
   return (

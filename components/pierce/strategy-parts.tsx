@@ -3,7 +3,7 @@ import { reserveText, revisionText, reviewText, strategiesText } from '@/compone
 import { LinkRow, Rows } from '@/components/ui/link-row.tsx';
 import { Stack } from '@/components/ui/stack.tsx';
 import { Heading, Small } from '@/components/ui/text.tsx';
-import { bandsOfStored } from '@/shared/prediction.ts';
+import { bandsOfStored, reserveRulesOf } from '@/shared/prediction.ts';
 import type { Revision, Strategy } from '@/shared/strategies.ts';
 import { Core } from './core.tsx';
 import { SectionPanel } from './section-panel.tsx';
@@ -27,6 +27,7 @@ export function StandingSection({ strategy }: { strategy: Strategy }) {
         machine={revision.machine}
         nozzle={revision.nozzle}
         chosen={null}
+        rules={reserveRulesOf(revision.houseRules.map(({ expression }) => expression))}
       />
     </Stack>
   );

@@ -6,7 +6,7 @@ import type { FocusScale } from '@/strategy/machine.ts';
 import { quantityText, type Dimension, type UnitSystem } from '@/strategy/units/index.ts';
 import { dialText, reserveText } from './pierce.ts';
 
-const seconds = (value: number): string => quantityText(value, 'time', 'metric').text;
+const seconds = (value: number): string => quantityText(value, 'time', 'metric', { figures: 3 }).text;
 
 const laneWords: Readonly<Record<LaneName, { short: string; of: string }>> = {
   standoff: { short: 'standoff', of: 'Standoff' },
@@ -41,7 +41,7 @@ export const knotText = {
       case 'focusPosition':
         return `${quantityText(knot.set, 'length', system, { sign: true }).text}, ${dialWords(scale, knot.set, standoff)}`;
       case 'meanPower': {
-        const mean = quantityText(knot.value, 'power', system).text;
+        const mean = quantityText(knot.value, 'power', system, { figures: 3 }).text;
         return knot.duty === 1 ? mean : `${mean} mean, ${quantityText(knot.set, 'power', system).text} peak`;
       }
       case 'oxygenPressure':
@@ -66,7 +66,7 @@ export const knotText = {
   mean: (power: number, duty: number, system: UnitSystem) =>
     duty === 1
       ? 'Continuous power: peak and mean are the same.'
-      : `${quantityText(power * duty, 'power', system).text} mean at a duty of ${quantityText(duty, 'ratio', system).text}; the duty is set in the sentence of the stage.`,
+      : `${quantityText(power * duty, 'power', system, { figures: 3 }).text} mean at a duty of ${quantityText(duty, 'ratio', system).text}; the duty is set in the sentence of the stage.`,
   outside: ({ min, max }: Range, dimension: Dimension, system: UnitSystem) =>
     `This machine takes ${quantityText(min, dimension, system).number} to ${quantityText(max, dimension, system).text}.`,
   outsideDuration: ({ min, max }: Range) => `A stage lasts ${seconds(min)} to ${seconds(max)}.`,

@@ -2,11 +2,11 @@ import { bandsOfStored } from '@/shared/prediction.ts';
 import type { Condition, Prediction, StrategyContent } from '@/shared/strategies.ts';
 import type { Nozzle } from '@/strategy/machine.ts';
 import {
-  DEFAULT_RESERVE_RULES,
   pierceParameterTable,
   PIERCE_DEFAULTS,
   type PierceParameterName,
   type PierceParameterRow,
+  type ReserveRules,
 } from '@/strategy/pierce/index.ts';
 import { numberText, quantityText, type UnitSystem } from '@/strategy/units/index.ts';
 import { reserveText } from './pierce.ts';
@@ -44,6 +44,8 @@ export type ExplainedFrom = {
   /** The content the prediction is of. */
   readonly content: StrategyContent;
   readonly nozzle: Nozzle | null;
+  /** The least reserves the plant asks for. */
+  readonly rules: ReserveRules;
   readonly system: UnitSystem;
 };
 
@@ -71,9 +73,12 @@ export const resultLabel: Readonly<Record<Exclude<ResultName, 'depth'>, string>>
   meanPower: 'mean power',
 };
 
+/** Three figures say all that an estimate knows. */
+export const estimate = { figures: 3 } as const;
+
 export function resultValue(name: Exclude<ResultName, 'depth'>, prediction: Prediction, system: UnitSystem): string {
   const through = ({ breakthrough }: Condition) =>
-    breakthrough.kind === 'ok' ? quantityText(breakthrough.value, 'time', system).text : 'never';
+    breakthrough.kind === 'ok' ? quantityText(breakthrough.value, 'time', system, estimate).text : 'never';
   const reserve = ({ reserve: one }: Condition) => reserveText(one.kind === 'ok' ? one.value : null);
   switch (name) {
     case 'throughCold':
@@ -85,18 +90,18 @@ export function resultValue(name: Exclude<ResultName, 'depth'>, prediction: Pred
     case 'reserveHot':
       return reserve(prediction.hot);
     case 'crater':
-      return quantityText(prediction.craterRadius, 'length', system).text;
+      return quantityText(prediction.craterRadius, 'length', system, estimate).text;
     case 'eruption':
       return quantityText(prediction.eruptionIndex / PIERCE_DEFAULTS.eruptionLimit, 'ratio', 'metric', {
         unit: '%',
         decimals: 0,
       }).text;
     case 'energy':
-      return quantityText(prediction.energy, 'energy', system).text;
+      return quantityText(prediction.energy, 'energy', system, estimate).text;
     case 'oxygen':
-      return quantityText(prediction.oxygenUsed, 'mass', system).text;
+      return quantityText(prediction.oxygenUsed, 'mass', system, estimate).text;
     case 'meanPower':
-      return quantityText(prediction.meanPower, 'power', system).text;
+      return quantityText(prediction.meanPower, 'power', system, estimate).text;
   }
 }
 
@@ -130,10 +135,10 @@ const depthSource =
 
 /** What a result is and how it comes about, with the numbers it was worked out from. */
 export function explanationOf(explained: Explained, from: ExplainedFrom): Explanation {
-  const { prediction, content, nozzle, system } = from;
+  const { prediction, content, nozzle, rules, system } = from;
   const length = (value: number) => quantityText(value, 'length', system).text;
-  const time = (value: number) => quantityText(value, 'time', system).text;
-  const power = (value: number) => quantityText(value, 'power', system).text;
+  const time = (value: number) => quantityText(value, 'time', system, estimate).text;
+  const power = (value: number) => quantityText(value, 'power', system, estimate).text;
   const temperature = (value: number) => quantityText(value, 'temperature', system).text;
   const { cold, hot, routineTime } = prediction;
   const stageCount = { label: 'Stages', value: String(content.stages.length) };
@@ -147,7 +152,7 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
     explained.name === 'depth' ? `Depth at the end of stage ${explained.stage + 1}` : resultTitle[explained.name];
   const value =
     explained.name === 'depth'
-      ? length(depthsAtEnds(prediction, content)[explained.stage] ?? 0)
+      ? quantityText(depthsAtEnds(prediction, content)[explained.stage] ?? 0, 'length', system, estimate).text
       : resultValue(explained.name, prediction, system);
   const head = { title, value };
 
@@ -198,7 +203,7 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
     case 'reserveCold':
     case 'reserveHot': {
       const condition = explained.name === 'reserveCold' ? cold : hot;
-      const rule = explained.name === 'reserveCold' ? DEFAULT_RESERVE_RULES.cold : DEFAULT_RESERVE_RULES.hot;
+      const rule = explained.name === 'reserveCold' ? rules.cold : rules.hot;
       return {
         ...head,
         what:
@@ -214,11 +219,11 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
             value: condition.breakthrough.kind === 'ok' ? time(condition.breakthrough.value) : 'never',
           },
           ...plate(condition),
-          { label: 'Asked for, common practice', value: reserveText(rule) },
+          { label: 'Asked for by the plant', value: reserveText(rule) },
         ],
         parameters: ['coupling', 'attenuationLength', 'boreRadius'],
         source:
-          'Definition of this product. A hot plate is through sooner, but its pierces scatter and erupt more, so more is asked of it: common practice, no source.',
+          'Definition of this product. A hot plate is through sooner, but its pierces scatter and erupt more, so more is asked of it; what a plant is founded with, 2.0 cold and 2.2 hot, is common practice, no source.',
       };
     }
     case 'crater':
@@ -233,7 +238,7 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
             value: `${length(content.thickness.min * 1e-6)} to ${length(content.thickness.max * 1e-6)}`,
           },
           { label: 'Hottest plate', value: temperature(content.hottestPlate) },
-          { label: 'Laser energy', value: quantityText(prediction.energy, 'energy', system).text },
+          { label: 'Laser energy', value: quantityText(prediction.energy, 'energy', system, estimate).text },
           { label: 'Greatest peak power', value: power(prediction.peakPower) },
         ],
         parameters: ['boreRadius', 'spotFollowing', 'meltSpeed', 'eruptionLimit', 'backfallShare'],
@@ -320,7 +325,7 @@ function parameterValue({ default: value, unit }: PierceParameterRow, system: Un
   return `${numberText(value, 2)} ${unit}`;
 }
 
-const percent = (value: number) => quantityText(value, 'ratio', 'metric').text;
+const percent = (value: number) => quantityText(value, 'ratio', 'metric', estimate).text;
 /** Shares up to one in per cent, factors as they are. */
 const percentOr = (value: number) => (value < 1 ? percent(value) : numberText(value, 2));
 
