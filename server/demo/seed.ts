@@ -130,7 +130,10 @@ async function fillPlant(plant: Plant, base: string, password: string): Promise<
   // Before the strategies: what is handed in is judged by them.
   const rules = (await lead.call(houseRuleEndpoints.list))?.items ?? [];
   for (const rule of demoHouseRules[plant]) {
-    if (!rules.some(({ id }) => id === rule.id)) await lead.call(houseRuleEndpoints.add, { body: rule });
+    const known = rules.some(
+      ({ id, expression, endedAt }) => id === rule.id || (endedAt === null && expression === rule.expression),
+    );
+    if (!known) await lead.call(houseRuleEndpoints.add, { body: rule });
   }
   const engineer = await as('engineer@quay.example');
   await addMaterials(engineer, plant);
