@@ -8,12 +8,11 @@ import { isProblem } from '@/components/data/problem.ts';
 import { common } from '@/components/text/common.ts';
 import { houseRulesText } from '@/components/text/house-rules.ts';
 import { Button } from '@/components/ui/button.tsx';
-import { Columns } from '@/components/ui/columns.tsx';
 import { ConflictNotice } from '@/components/ui/conflict-notice.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { FormText, FormTick } from '@/components/ui/form-fields.tsx';
 import { Form } from '@/components/ui/form.tsx';
-import { Row } from '@/components/ui/stack.tsx';
+import { Cell, Row } from '@/components/ui/stack.tsx';
 import { houseRuleTextSchema, type HouseRule, type HouseRuleReading } from '@/shared/house-rules.ts';
 import { HouseRuleNames } from './house-rule-names.tsx';
 
@@ -63,48 +62,52 @@ export function HouseRuleForm({
           : readingWords(reading.data);
 
   return (
-    <Columns least={340} gap={32}>
-      <Form
-        label={label}
-        onSubmit={form.handleSubmit((text) =>
-          onSubmit(text, (failure) => {
-            applyFieldProblems(failure, form.setError);
-          }),
-        )}
-      >
-        <FormText
-          control={form.control}
-          name="expression"
-          label={houseRulesText.fields.expression}
-          // said once: an error on the field is the same reason
-          hint={expressionError !== undefined && reading.data?.kind !== 'ok' ? undefined : hint}
-          autoCapitalize="none"
-        />
-        <FormText
-          control={form.control}
-          name="sentence"
-          rows={2}
-          label={houseRulesText.fields.sentence}
-          hint={houseRulesText.fields.sentenceHint}
-        />
-        <FormTick
-          control={form.control}
-          name="blocks"
-          label={houseRulesText.fields.blocks}
-          hint={houseRulesText.fields.blocksHint}
-        />
-        {error === null ? null : isProblem(error, 'stale') && onLoadNewest !== undefined ? (
-          <ConflictNotice onLoad={onLoadNewest} />
-        ) : (
-          <ErrorNotice error={error} />
-        )}
-        <Row>
-          <Button kind="main" label={action} submit busy={busy} />
-          <Button label={common.cancel} onPress={onCancel} />
-        </Row>
-      </Form>
-      <HouseRuleNames onPick={pick} />
-    </Columns>
+    <Row align="flex-start" gap="xl">
+      <Cell least={320} grow={2}>
+        <Form
+          label={label}
+          onSubmit={form.handleSubmit((text) =>
+            onSubmit(text, (failure) => {
+              applyFieldProblems(failure, form.setError);
+            }),
+          )}
+        >
+          <FormText
+            control={form.control}
+            name="expression"
+            label={houseRulesText.fields.expression}
+            // said once: an error on the field is the same reason
+            hint={expressionError !== undefined && reading.data?.kind !== 'ok' ? undefined : hint}
+            autoCapitalize="none"
+          />
+          <FormText
+            control={form.control}
+            name="sentence"
+            rows={2}
+            label={houseRulesText.fields.sentence}
+            hint={houseRulesText.fields.sentenceHint}
+          />
+          <FormTick
+            control={form.control}
+            name="blocks"
+            label={houseRulesText.fields.blocks}
+            hint={houseRulesText.fields.blocksHint}
+          />
+          {error === null ? null : isProblem(error, 'stale') && onLoadNewest !== undefined ? (
+            <ConflictNotice onLoad={onLoadNewest} />
+          ) : (
+            <ErrorNotice error={error} />
+          )}
+          <Row>
+            <Button kind="main" label={action} submit busy={busy} />
+            <Button label={common.cancel} onPress={onCancel} />
+          </Row>
+        </Form>
+      </Cell>
+      <Cell least={320} grow={3}>
+        <HouseRuleNames onPick={pick} />
+      </Cell>
+    </Row>
   );
 }
 

@@ -1,9 +1,11 @@
 import { useQuery } from '@tanstack/react-query';
+import { useState } from 'react';
 import { houseRuleExampleQuery } from '@/components/data/house-rules.ts';
 import { houseRulesText } from '@/components/text/house-rules.ts';
+import { useLayout } from '@/components/theme/layout.ts';
+import { roles } from '@/components/theme/roles.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
-import { Rows } from '@/components/ui/link-row.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
 import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Heading, Small } from '@/components/ui/text.tsx';
@@ -15,11 +17,20 @@ import { houseRuleTable, type HouseRuleName } from '@/strategy/rules/names.ts'; 
 export function HouseRuleNames({ onPick }: { readonly onPick: (name: HouseRuleName) => void }) {
   const example = useQuery(houseRuleExampleQuery());
   const system = useUnitSystem();
+  const { wide } = useLayout();
+  const [opened, setOpened] = useState(false);
   const valueOf = (name: HouseRuleName): string | null => {
     const found = example.data?.results.find((one) => one.name === name);
     if (found === undefined) return null;
     return found.value === null ? houseRulesText.noValue : houseRuleValueText(name, found.value, system);
   };
+  if (!wide && !opened) {
+    return (
+      <Row>
+        <Button label={houseRulesText.names} expanded={false} onPress={() => setOpened(true)} />
+      </Row>
+    );
+  }
   return (
     <Stack gap="s">
       <Heading level={3}>{houseRulesText.names}</Heading>
@@ -34,17 +45,29 @@ export function HouseRuleNames({ onPick }: { readonly onPick: (name: HouseRuleNa
             : houseRulesText.namesAt(example.data.strategyName, example.data.number)}
         </Small>
       )}
-      <Rows label={houseRulesText.names}>
+      <ul aria-label={houseRulesText.names} style={styles.names}>
         {houseRuleTable.map(({ name, meaning, example: way }) => (
-          <div key={name} style={{ padding: '4px 4px 8px' }}>
+          <li key={name} style={styles.name}>
             <Row justify="space-between" wrap={false}>
               <Button kind="quiet" label={name} spoken={houseRulesText.put(name)} onPress={() => onPick(name)} />
               {valueOf(name) === null ? null : <Body strong>{valueOf(name)}</Body>}
             </Row>
             <Small>{houseRulesText.as(meaning, way)}</Small>
-          </div>
+          </li>
         ))}
-      </Rows>
+      </ul>
     </Stack>
   );
 }
+
+const styles = {
+  names: {
+    listStyle: 'none',
+    margin: 0,
+    padding: 0,
+    display: 'grid',
+    columnGap: 32,
+    gridTemplateColumns: 'repeat(auto-fill, minmax(min(300px, 100%), 1fr))',
+  },
+  name: { minWidth: 0, padding: '4px 0 8px', borderTop: `1px solid ${roles.rule}` },
+} as const;

@@ -19,7 +19,7 @@ import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { Rows } from '@/components/ui/link-row.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
-import { Row, Stack } from '@/components/ui/stack.tsx';
+import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Heading, Small } from '@/components/ui/text.tsx';
 import type { HouseRule } from '@/shared/house-rules.ts';
 import { blankRule, HouseRuleForm } from './house-rule-form.tsx';
@@ -81,16 +81,18 @@ function RuleRow({ rule, onDo }: { readonly rule: HouseRule; readonly onDo: (wha
   return (
     <div style={{ padding: '12px 4px' }}>
       <Row justify="space-between" align="flex-start">
-        <Stack gap="hair" grow>
-          <Body strong>{rule.sentence}</Body>
-          <Body>{rule.expression}</Body>
-          <Small>{rule.blocks ? houseRulesText.blocks : houseRulesText.loose}</Small>
-          <Small>
-            {rule.changedBy === null
-              ? houseRulesText.founded
-              : houseRulesText.version(rule.version, rule.changedBy.name, momentText(rule.changedAt))}
-          </Small>
-        </Stack>
+        <Cell least={280}>
+          <Stack gap="hair">
+            <Body strong>{rule.sentence}</Body>
+            <Body>{rule.expression}</Body>
+            <Small>{rule.blocks ? houseRulesText.blocks : houseRulesText.loose}</Small>
+            <Small>
+              {rule.changedBy === null
+                ? houseRulesText.founded
+                : houseRulesText.version(rule.version, rule.changedBy.name, momentText(rule.changedAt))}
+            </Small>
+          </Stack>
+        </Cell>
         <Row gap="s">
           <Button
             label={houseRulesText.change}

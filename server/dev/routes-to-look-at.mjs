@@ -99,7 +99,7 @@ export async function routesOf(context, who) {
     ['reports', '/reports'],
   );
   if (reports[0]) routes.push(['report', `/reports/${reports[0].id}`]);
-  if (who === 'lead') routes.push(['people', '/people'], ['record', '/record']);
+  if (who === 'lead') routes.push(['house-rules', '/house-rules'], ['people', '/people'], ['record', '/record']);
   return routes;
 }
 

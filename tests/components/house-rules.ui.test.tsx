@@ -117,6 +117,20 @@ describe('writing a rule', () => {
     expect(names.textContent).not.toMatch(/NaN|null|undefined/);
   });
 
+  it('keeps the names folded on a phone until they are asked for', async () => {
+    const usualWidth = window.innerWidth;
+    window.innerWidth = 390;
+    try {
+      serving([ruleOf()]);
+      await begin();
+      expect(screen.queryByRole('list', { name: 'Names a rule may use' })).toBeNull();
+      await userEvent.click(await button('Names a rule may use'));
+      expect(screen.getByRole('list', { name: 'Names a rule may use' })).toBeTruthy();
+    } finally {
+      window.innerWidth = usualWidth;
+    }
+  });
+
   it('says as one types whether it is a rule, and what it says of the revision changed last', async () => {
     serving([ruleOf()]);
     await begin();
