@@ -10,6 +10,7 @@ import {
   type ExplainedFrom,
   type ResultName,
 } from '@/components/text/pierce-explain.ts';
+import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { touch } from '@/components/theme/space.ts';
 import { family } from '@/components/theme/type.ts';
@@ -37,8 +38,13 @@ export function ResultGrid({
   from: ExplainedFrom;
   onExplain: (explained: Explained) => void;
 }) {
+  const { width } = useLayout();
   return (
-    <div role="group" aria-label={explainText.results} style={styles.grid}>
+    <div
+      role="group"
+      aria-label={explainText.results}
+      style={{ ...styles.grid, gridTemplateColumns: `repeat(${width < 372 ? 2 : 4}, 1fr)` }}
+    >
       {names.map((name) => {
         const value = resultValue(name, from.prediction, from.system);
         return (
@@ -75,7 +81,7 @@ export function ExplainDialog({ explained, from, onClose }: ExplainDialogProps) 
           </Stack>
           <Stack gap="xs">
             <Heading level={3}>{explainText.inputs}</Heading>
-            <Facts items={told.inputs} />
+            <Facts items={told.inputs.map(({ label, value }) => ({ label, value: together(value) }))} />
           </Stack>
           {told.parameters.length > 0 && (
             <Stack gap="xs">
@@ -85,7 +91,7 @@ export function ExplainDialog({ explained, from, onClose }: ExplainDialogProps) 
                   const row = parameterRow(name, from.system);
                   if (!row) return [];
                   const label = `${row.meaning}. ${explainText.origin(row.origin)}`;
-                  return [{ label: `${label.charAt(0).toUpperCase()}${label.slice(1)}`, value: row.value }];
+                  return [{ label: `${label.charAt(0).toUpperCase()}${label.slice(1)}`, value: together(row.value) }];
                 })}
               />
             </Stack>
@@ -100,6 +106,9 @@ export function ExplainDialog({ explained, from, onClose }: ExplainDialogProps) 
     </Dialog>
   );
 }
+
+/** A number and its unit on one line. */
+const together = (value: string): string => value.replaceAll(' ', '\u00a0');
 
 const button: CSSProperties = {
   background: 'transparent',
@@ -129,7 +138,6 @@ const styles = {
   },
   grid: {
     display: 'grid',
-    gridTemplateColumns: 'repeat(auto-fill, minmax(104px, 1fr))',
     gap: 1,
     background: roles.rule,
     border: `1px solid ${roles.ink}`,
@@ -141,8 +149,9 @@ const styles = {
     display: 'flex',
     flexDirection: 'column',
     background: roles.sheet,
-    padding: '9px 12px',
+    padding: '9px 10px',
     minHeight: 62,
+    minWidth: 0,
     outlineOffset: -3,
   },
   label: { fontFamily: family.label, fontSize: 14, lineHeight: '18px', color: roles.softInk },

@@ -48,6 +48,8 @@ export function ProposePanel(props: ProposePanelProps) {
   const [leadIn, setLeadIn] = useState<number | null>(null);
   const [limiting, setLimiting] = useState(false);
   const [kept, setKept] = useState<ReadonlySet<string>>(new Set());
+  // the answer puts the wishes out of the way, so that on a phone the drawing is near
+  const [wishing, setWishing] = useState(true);
 
   const reserveError = (value: number | null) =>
     value !== null && value >= 1 && value <= 20 ? undefined : proposeText.reserveRange;
@@ -58,6 +60,7 @@ export function ProposePanel(props: ProposePanelProps) {
   );
   const begin = () => {
     if (!ground || !sound || cold === null || hot === null) return;
+    setWishing(false);
     const pinned = stages.map((stage, index) => (kept.has(stageKeys[index] ?? '') ? stage : null));
     onBegin({
       ...ground,
@@ -71,6 +74,17 @@ export function ProposePanel(props: ProposePanelProps) {
     });
   };
 
+  if (state.kind === 'answered' && !wishing) {
+    return (
+      <Panel title={proposeText.title}>
+        <Answer state={state} proposed={proposed} now={now} onAccept={onAccept} onDismiss={onCancel} />
+        <Row>
+          <Button kind="quiet" label={proposeText.wishes} onPress={() => setWishing(true)} />
+          <Button kind="quiet" label={proposeText.close} onPress={onClose} />
+        </Row>
+      </Panel>
+    );
+  }
   return (
     <Panel title={proposeText.title}>
       <Body>{proposeText.meaning}</Body>
@@ -175,9 +189,6 @@ export function ProposePanel(props: ProposePanelProps) {
         <Notice kind="wrong" title={proposeText.refused} live>
           {state.why}
         </Notice>
-      )}
-      {state.kind === 'answered' && (
-        <Answer state={state} proposed={proposed} now={now} onAccept={onAccept} onDismiss={onCancel} />
       )}
     </Panel>
   );

@@ -173,7 +173,7 @@ export function SectionPanel({
         ]}
       />
       <ResultGrid
-        names={['throughCold', 'throughHot', 'crater', 'eruption', 'meanPower', 'energy', 'oxygen']}
+        names={['throughCold', 'throughHot', 'routine', 'crater', 'eruption', 'meanPower', 'energy', 'oxygen']}
         from={from}
         onExplain={setExplained}
       />

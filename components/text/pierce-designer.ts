@@ -149,6 +149,7 @@ export const proposeText = {
   keepStage: (number: number) => `Stage ${number}`,
   begin: 'Work it out',
   again: 'Work it out again',
+  wishes: 'Change what is wished',
   working: 'Trying routines',
   cancel: 'Cancel',
   refused: 'No proposal could be worked out',

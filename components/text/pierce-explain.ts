@@ -22,6 +22,7 @@ export type ResultName =
   | 'energy'
   | 'oxygen'
   | 'meanPower'
+  | 'routine'
   | 'depth';
 
 export type Explained =
@@ -71,6 +72,7 @@ export const resultLabel: Readonly<Record<Exclude<ResultName, 'depth'>, string>>
   energy: 'laser energy',
   oxygen: 'oxygen used',
   meanPower: 'mean power',
+  routine: 'routine',
 };
 
 /** Three figures say all that an estimate knows. */
@@ -96,6 +98,8 @@ export function resultValue(name: Exclude<ResultName, 'depth'>, prediction: Pred
         unit: '%',
         decimals: 0,
       }).text;
+    case 'routine':
+      return quantityText(prediction.routineTime, 'time', system, estimate).text;
     case 'energy':
       return quantityText(prediction.energy, 'energy', system, estimate).text;
     case 'oxygen':
@@ -259,6 +263,18 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
         parameters: ['eruptionLimit', 'meltSpeed', 'boreRadius', 'coupling'],
         source: 'Own measure; the limit is to be fitted to test cuts, no source.',
       };
+    case 'routine':
+      return {
+        ...head,
+        what: 'How long the pierce takes at the machine, the reserve counted: all stages run to their end whether the hole is through or not.',
+        formula: 'The durations of all stages added up.',
+        inputs: content.stages.map((stage, index) => ({
+          label: `Stage ${index + 1}`,
+          value: quantityText(stage.duration, 'time', system).text,
+        })),
+        parameters: [],
+        source: 'The stages as they are set.',
+      };
     case 'energy':
       return {
         ...head,
@@ -309,6 +325,7 @@ const resultTitle: Readonly<Record<Exclude<ResultName, 'depth'>, string>> = {
   energy: 'Laser energy',
   oxygen: 'Oxygen used',
   meanPower: 'Mean power',
+  routine: 'Routine',
 };
 
 /** A parameter of the model as it stands in its table. */
