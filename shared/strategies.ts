@@ -273,6 +273,15 @@ export const revisionEndpoints = {
     answer: revisionSchema,
     ifMatch: true,
   }),
+  judge: endpoint({
+    method: 'POST',
+    path: '/api/revisions/judge',
+    summary: 'What the house rules in force say of content that is not saved',
+    access: 'strategy.write',
+    body: z.strictObject({ content: strategyContentSchema }),
+    answer: listOf(houseRuleVerdictSchema),
+    idempotencyKey: false, // it changes nothing
+  }),
   submit: endpoint({
     method: 'POST',
     path: '/api/revisions/:revisionId/submit',

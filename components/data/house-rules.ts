@@ -1,6 +1,7 @@
 import { keepPreviousData, queryOptions, useMutation, useQueryClient, type QueryClient } from '@tanstack/react-query';
 import type { BodyOf } from '@/shared/endpoint.ts';
 import { houseRuleEndpoints, type HouseRule } from '@/shared/house-rules.ts';
+import { revisionEndpoints, type StrategyContent } from '@/shared/strategies.ts';
 import { apiCall } from './call.ts';
 import { cardsRoot, revisionsRoot, strategiesRoot } from './roots.ts';
 
@@ -25,6 +26,15 @@ export const houseRuleReadingQuery = (expression: string) =>
   queryOptions({
     queryKey: [...root, 'reading', expression],
     queryFn: ({ signal }) => apiCall(houseRuleEndpoints.read, { body: { expression }, signal }),
+    placeholderData: keepPreviousData,
+    gcTime: 60_000,
+  });
+
+/** What the rules in force say of content that is not saved. What was said before stays while it is asked. */
+export const houseRuleVerdictsQuery = (content: StrategyContent) =>
+  queryOptions({
+    queryKey: [...root, 'verdicts', content],
+    queryFn: async ({ signal }) => (await apiCall(revisionEndpoints.judge, { body: { content }, signal })).items,
     placeholderData: keepPreviousData,
     gcTime: 60_000,
   });

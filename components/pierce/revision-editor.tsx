@@ -6,7 +6,7 @@ import { nozzlesQuery } from '@/components/data/nozzles.ts';
 import { isProblem } from '@/components/data/problem.ts';
 import { useRevisionSave } from '@/components/data/revisions.ts';
 import { strategyQuery } from '@/components/data/strategies.ts';
-import { HouseRuleList } from '@/components/rules/house-rule-list.tsx';
+import { LiveHouseRules } from '@/components/rules/live-house-rules.tsx';
 import { houseRulesText } from '@/components/text/house-rules.ts';
 import { momentText } from '@/components/text/moments.ts';
 import { compareText, compareWords, historyText, proposeText } from '@/components/text/pierce-designer.ts';
@@ -364,7 +364,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
         <CheckList checks={shown.prediction.checks} />
       </Panel>
       <Panel title={houseRulesText.title}>
-        <HouseRuleList verdicts={revision.houseRules} behind={dirty} />
+        <LiveHouseRules revision={revision} content={draft.content} dirty={dirty} sound={problems.size === 0} />
       </Panel>
     </>
   );

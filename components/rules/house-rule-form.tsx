@@ -1,6 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useQuery } from '@tanstack/react-query';
-import { useEffect, useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import { applyFieldProblems } from '@/components/data/field-problems.ts';
 import { houseRuleReadingQuery } from '@/components/data/house-rules.ts';
@@ -15,6 +14,7 @@ import { Form } from '@/components/ui/form.tsx';
 import { Cell, Row } from '@/components/ui/stack.tsx';
 import { houseRuleTextSchema, type HouseRule, type HouseRuleReading } from '@/shared/house-rules.ts';
 import { HouseRuleNames } from './house-rule-names.tsx';
+import { useSettled } from './use-settled.ts';
 
 export type HouseRuleText = Pick<HouseRule, 'expression' | 'sentence' | 'blocks'>;
 
@@ -116,14 +116,4 @@ function readingWords(reading: HouseRuleReading): string {
   const { example } = reading;
   if (example === null) return houseRulesText.understood;
   return `${houseRulesText.understood} ${houseRulesText.tried(houseRulesText.newest, example.state, example.why)}`;
-}
-
-/** A value once it has stayed for so many ms: the server is asked when one stops typing, not for each letter. */
-function useSettled(value: string, ms: number): string {
-  const [settled, setSettled] = useState(value);
-  useEffect(() => {
-    const timer = setTimeout(() => setSettled(value), ms);
-    return () => clearTimeout(timer);
-  }, [value, ms]);
-  return settled;
 }

@@ -58,7 +58,7 @@ export const houseRulesText = {
   allKept: (number: number) => (number === 1 ? 'The one house rule is kept.' : `All ${number} house rules are kept.`),
   none: 'No house rule was asked of it.',
   inTheWay: 'It can’t be handed in before this is kept.',
-  behind: 'As last saved. Save, and the rules are asked of what is on the screen.',
+  behind: 'Of the last numbers that could be judged, not of those on the screen.',
 } as const;
 
 const said: Readonly<Record<HouseRuleVerdict['state'], string>> = {

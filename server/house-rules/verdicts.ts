@@ -3,8 +3,7 @@ import { houseRuleValueText, type HouseRuleVerdict } from '../../shared/house-ru
 import { namedResultsOf } from '../../shared/prediction.ts';
 import type { StrategyContent } from '../../shared/strategies.ts';
 import { houseRuleHolds, houseRuleRead, type HouseRuleResults } from '../../strategy/rules/index.ts';
-import { findMachineRevision } from '../machines/repository.ts';
-import { findNozzle } from '../nozzles/routes.ts';
+import { groundOf } from '../revisions/judge.ts';
 import type { RevisionRow } from '../revisions/repository.ts';
 import { rulesInForce, type HouseRuleRow } from './repository.ts';
 
@@ -19,21 +18,20 @@ export async function houseRulesOf(
 ): Promise<readonly HouseRuleVerdict[]> {
   // Handed in before there were house rules?
   if (revision.state !== 'draft') return revision.houseRules ?? [];
-  const rules = await rulesInForce(tx);
-  if (rules.length === 0) return [];
-  const named = await namedResults(tx, revision.content);
-  return rules.map((rule) => verdictOf(rule, named));
+  return verdictsOn(tx, revision.content);
+}
+
+/** What the rules in force say of a content. 400 when it names a machine or nozzle that isn't here. */
+export async function verdictsOn(tx: Transaction, content: StrategyContent): Promise<HouseRuleVerdict[]> {
+  const named = await namedResults(tx, content);
+  return (await rulesInForce(tx)).map((rule) => verdictOf(rule, named));
 }
 
 /** The named results of a content, as the model has them today. */
 export async function namedResults(tx: Transaction, content: StrategyContent): Promise<NamedResults> {
-  const machine = await findMachineRevision(tx, content.machineRevisionId);
-  const nozzle = await findNozzle(tx, content.nozzleId);
-  // The revision's foreign keys say that both are there.
-  if (!machine || !nozzle) throw new Error('a revision’s machine or nozzle is not there');
+  const judged = await groundOf(tx, content);
   try {
-    const { type, diameter } = nozzle;
-    return { kind: 'ok', results: namedResultsOf({ content, profile: machine.profile, nozzle: { type, diameter } }) };
+    return { kind: 'ok', results: namedResultsOf(judged) };
   } catch (error) {
     // A draft that an older model could follow, and this one can't.
     if (!(error instanceof RangeError)) throw error;

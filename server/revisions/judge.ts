@@ -7,8 +7,18 @@ import { findMachineRevision } from '../machines/repository.ts';
 import { findNozzle } from '../nozzles/routes.ts';
 import { contentColumns } from './repository.ts';
 
-/** A content's columns with the prediction the server computes for it; 400 when it names a machine or nozzle that isn't here. */
+/** A content's columns with the prediction the server computes for it; 400 as `groundOf`. */
 export async function judged(tx: Transaction, content: StrategyContent): Promise<ReturnType<typeof contentColumns>> {
+  const { machineId, ...given } = await groundOf(tx, content);
+  const expressions = (await rulesInForce(tx)).map(({ expression }) => expression);
+  return contentColumns(content, machineId, predicted(given, expressions));
+}
+
+/** What a content is judged on; 400 when it names a machine or nozzle that isn't here. */
+export async function groundOf(
+  tx: Transaction,
+  content: StrategyContent,
+): Promise<Judged & { readonly machineId: string }> {
   const machine = await findMachineRevision(tx, content.machineRevisionId);
   const nozzle = await findNozzle(tx, content.nozzleId);
   const errors = [
@@ -16,22 +26,18 @@ export async function judged(tx: Transaction, content: StrategyContent): Promise
     ...(nozzle ? [] : [{ pointer: '/content/nozzleId', detail: 'Choose a nozzle of this plant.' }]),
   ];
   if (!machine || !nozzle) throw new AppError('invalid-fields', errors[0]?.detail ?? '', { errors });
-  const given = { content, profile: machine.profile, nozzle: { type: nozzle.type, diameter: nozzle.diameter } };
-  const rules = await rulesInForce(tx);
-  return contentColumns(
+  return {
     content,
-    machine.machineId,
-    predicted(
-      given,
-      rules.map(({ expression }) => expression),
-    ),
-  );
+    machineId: machine.machineId,
+    profile: machine.profile,
+    nozzle: { type: nozzle.type, diameter: nozzle.diameter },
+  };
 }
 
 /** The model refuses what it can't follow with a RangeError that says why: then the content is at fault, not the server. */
-function predicted(given: Judged, rules: readonly string[]): Prediction {
+function predicted(given: Judged, expressions: readonly string[]): Prediction {
   try {
-    return predictionOf(given, reserveRulesOf(rules));
+    return predictionOf(given, reserveRulesOf(expressions));
   } catch (error) {
     if (!(error instanceof RangeError)) throw error;
     const detail = `The model can’t follow this pierce: ${error.message}.`;

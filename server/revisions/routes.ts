@@ -4,7 +4,7 @@ import { verdictBlocks, type HouseRuleVerdict } from '../../shared/house-rules.t
 import { can, type Actor } from '../../shared/policy.ts';
 import { revisionEndpoints, type RevisionState } from '../../shared/strategies.ts';
 import { AppError, notFound } from '../errors.ts';
-import { houseRulesOf } from '../house-rules/verdicts.ts';
+import { houseRulesOf, verdictsOn } from '../house-rules/verdicts.ts';
 import { namesOf } from '../people/names.ts';
 import { note } from '../record/note.ts';
 import type { Mount } from '../route.ts';
@@ -39,6 +39,8 @@ export function revisionRoutes({ route }: Mount): void {
     });
     return replyWithRevision(tx, revision.id);
   });
+
+  route(revisionEndpoints.judge, async ({ tx, body }) => ({ body: { items: await verdictsOn(tx, body.content) } }));
 
   route(revisionEndpoints.submit, async ({ tx, actor, params, body, unchanged }) => {
     const revision = await locked(tx, params.revisionId);

@@ -2,10 +2,12 @@ import { screen, waitFor, within } from '@testing-library/react';
 import { userEvent } from '@testing-library/user-event';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { HouseRuleList } from '@/components/rules/house-rule-list.tsx';
+import { LiveHouseRules } from '@/components/rules/live-house-rules.tsx';
 import { HouseRulesScreen } from '@/components/rules/house-rules-screen.tsx';
 import { placesOf } from '@/components/shell/places.ts';
 import type { HouseRule, HouseRuleExample, HouseRuleVerdict } from '@/shared/house-rules.ts';
 import { houseRuleTable } from '@/strategy/rules/names.ts';
+import { content } from './strategy-fixtures.ts';
 import { ids, json, offline, problem, serveWith, show, type Answer, type Asked } from '../support/page.tsx';
 
 afterEach(() => vi.unstubAllGlobals());
@@ -280,6 +282,36 @@ describe('what the rules say of a revision', () => {
 
   it('says when it is not of the numbers on the screen', () => {
     show(<HouseRuleList verdicts={[broken]} behind />);
-    expect(screen.getByText(/^As last saved\./)).toBeTruthy();
+    expect(screen.getByText(/not of those on the screen/)).toBeTruthy();
+  });
+
+  it('is asked anew of numbers that are not saved, once one pauses', async () => {
+    const requests = serveWith(() => json({ items: [verdict(), broken] }));
+    const live = (longer: number, dirty: boolean, sound = true) => (
+      <LiveHouseRules
+        revision={{ houseRules: [verdict()] }}
+        content={{
+          ...content,
+          stages: content.stages.map((stage) => ({ ...stage, duration: stage.duration + longer })),
+        }}
+        dirty={dirty}
+        sound={sound}
+      />
+    );
+    const first = show(live(0, false));
+    expect(screen.getByText('The one house rule is kept.')).toBeTruthy();
+    expect(requests).toHaveLength(0);
+    first.unmount();
+    show(live(1, true));
+    expect(await screen.findByText('Few stages.')).toBeTruthy();
+    expect(requests.map(({ method, path }) => `${method} ${path}`)).toEqual(['POST /api/revisions/judge']);
+  });
+
+  it('stays and says so while a number can’t be read', () => {
+    const requests = serveWith(() => offline());
+    show(<LiveHouseRules revision={{ houseRules: [verdict()] }} content={content} dirty sound={false} />);
+    expect(screen.getByText('The one house rule is kept.')).toBeTruthy();
+    expect(screen.getByText(/not of those on the screen/)).toBeTruthy();
+    expect(requests).toHaveLength(0);
   });
 });

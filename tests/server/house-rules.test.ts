@@ -242,6 +242,20 @@ describe('a draft', () => {
     expect(body.revisions[0]?.houseRules).toEqual(saved.body.houseRules);
   });
 
+  test('is judged before it is saved, and nothing is kept of that', async () => {
+    const draft = await makeDraft(plant);
+    const engineer = await plant.as('engineer');
+    const unsaved = { ...plant.content, ...tooShort() };
+    const { body } = await made(engineer.call(revisionEndpoints.judge, { body: { content: unsaved } }));
+    expect(body.items.map(({ state }) => state)).not.toContain('holds');
+    expect((await read(draft.id)).houseRules.map(({ state }) => state)).toEqual(['holds', 'holds']);
+    expect((await lastEvent())?.event).toBe('strategy.added');
+    const other = await makePlant(server, `judge${plants}`);
+    const foreign = await engineer.call(revisionEndpoints.judge, { body: { content: other.content } });
+    expect(foreign.status).toBe(400);
+    expect(foreign.problem.errors?.map(({ pointer }) => pointer)).toContain('/content/machineRevisionId');
+  });
+
   test('that breaks a rule may be handed in; one that breaks a rule that blocks may not, and each is named', async () => {
     const draft = await makeDraft(plant);
     const { body: loose } = await made(add({ expression: 'stageCount <= 1', sentence: 'One stage.' }));

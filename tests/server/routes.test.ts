@@ -241,6 +241,7 @@ const matrix: Readonly<Record<string, Cell>> = {
     const { id, version } = await makeDraft(plant);
     return { params: { revisionId: id }, body: { content: plant.content }, version };
   },
+  'revision.judge': ({ plant }) => ({ body: { content: plant.content } }),
   'revision.submit': async ({ plant }) => {
     const { id, version } = await makeDraft(plant);
     return { params: { revisionId: id }, body: {}, version };
