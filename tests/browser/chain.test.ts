@@ -84,7 +84,7 @@ describe('the whole chain, walked by four people', () => {
     await engineer.page.getByRole('button', { name: 'Begin the draft' }).click();
     await engineer.page.waitForURL('**/revisions/*');
     await engineer.page.getByText('The pierce, stage by stage').waitFor();
-    const last = engineer.page.getByLabel('Duration of stage 4');
+    const last = engineer.page.getByRole('textbox', { name: 'Duration of stage 4' });
     const duration = Number.parseFloat((await last.inputValue()).replace(',', '.'));
     expect(duration).toBeGreaterThan(1);
     await last.fill('not a number');
@@ -94,7 +94,7 @@ describe('the whole chain, walked by four people', () => {
     await last.fill(String(duration + 1));
     await last.blur();
     await engineer.page.getByRole('button', { name: 'Save', exact: true }).click();
-    await engineer.page.getByText('Saved.').first().waitFor();
+    await engineer.page.getByText('Saved.', { exact: true }).first().waitFor();
     await engineer.page.getByRole('button', { name: 'Submit for review' }).first().click();
     const submit = engineer.page.getByRole('dialog');
     await submit.getByLabel('What the reviewer should know').fill('Ten test pierces, all through.');
