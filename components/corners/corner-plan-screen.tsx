@@ -231,9 +231,9 @@ function Totals({ plan }: { plan: CornerPlan }) {
             ),
             share: 3,
           },
-          { label: cornerText.thickness, value: quantityText(plan.thickness, 'length', system).text },
+          { label: cornerText.block.thickness, value: quantityText(plan.thickness, 'length', system).text },
           {
-            label: cornerText.plateTemperature,
+            label: cornerText.block.plateTemperature,
             value: quantityText(plan.plateTemperature, 'temperature', system).text,
           },
         ]}

@@ -176,7 +176,8 @@ export function DrawingView({
               />
             );
           })}
-          {placed.map((mark) => (
+          {/* what matters most is drawn last: a dot never lies on a badge */}
+          {[...placed].reverse().map((mark) => (
             <G key={mark.id} testID="drawing-mark" transform={`translate(${mark.x} ${mark.y})`}>
               {mark.full ? marks.find(({ id: own }) => own === mark.id)?.draw : <Circle r={3} fill={roles.ink} />}
             </G>

@@ -56,6 +56,8 @@ export const cornerText = {
   block: {
     part: 'part',
     strategy: 'strategy',
+    thickness: 'thickness',
+    plateTemperature: 'plate temperature',
     corners: 'corners',
     loops: 'loops',
     dwells: 'dwells',
