@@ -1,4 +1,5 @@
 import { cardText } from '@/components/text/card.ts';
+import { dialNumber } from '@/components/text/pierce.ts';
 import { MINUS, quantityText, type Dimension, type UnitSystem } from '@/strategy/units/index.ts';
 import type { Card } from '@/shared/cards.ts';
 import type { FigureCell } from './figure-cells.tsx';
@@ -24,9 +25,7 @@ const trimZeros = (number: string) => (number.includes('.') ? number.replace(/\.
 
 /** The numbers to type, as the machine's dial shows them; where there is none the reason stands beside the stage. */
 function dialFigure(from: CardStage['from']['dial'], to: CardStage['to']['dial']): FigureCell {
-  const shown = [from, to].map((dial) =>
-    dial.kind === 'ok' ? quantityText(dial.typed, 'length', 'metric', { unit: 'mm', decimals: 1 }).number : MINUS,
-  );
+  const shown = [from, to].map((dial) => (dial.kind === 'ok' ? dialNumber(dial.typed) : MINUS));
   return { label: cardText.dial, value: shown[0] === shown[1] ? (shown[0] ?? '') : shown.join(' → ') };
 }
 

@@ -102,8 +102,9 @@ export const checkStateText: Readonly<Record<Check['state'], string>> = {
   wrong: 'Not in order',
 };
 
-const dialNumber = (metres: number): string =>
-  quantityText(metres, 'length', 'metric', { unit: 'mm', decimals: 1 }).number;
+/** One number to type, mm as the dial reads: to a hundredth where that is not zero, since a dial may move the focus twice as far. */
+export const dialNumber = (metres: number): string =>
+  quantityText(metres, 'length', 'metric', { unit: 'mm', decimals: 2 }).number.replace(/(\.\d)0$/, '$1');
 
 /** The number to type at the machine, mm as its dial reads. */
 export const dialText = (from: number, to: number): string =>

@@ -73,7 +73,7 @@ describe('the plate card', () => {
     serveWith(() => json(approvedCard()));
     show(<CardScreen machineId={ids.machine} tag="B-2207" />, 'operator');
     const stage = await screen.findByRole('group', { name: 'Stage 1' });
-    expect(stage.textContent).toContain('−2.3');
+    expect(stage.textContent).toContain('−2.27');
     expect(stage.textContent).not.toContain('+5');
   });
 

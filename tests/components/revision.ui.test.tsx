@@ -82,7 +82,7 @@ describe('the pierce designer', () => {
     serving(revisionOf());
     show(<RevisionScreen id={ids.revision} />, 'engineer');
     const stage = await screen.findByRole('group', { name: 'Stage 1' });
-    await waitFor(() => expect(stage.textContent).toContain('type −2.3 on the dial'));
+    await waitFor(() => expect(stage.textContent).toContain('type −2.27 on the dial'));
     await retype(within(stage).getByRole('textbox', { name: 'Focus in stage 1, mm' }), '2,2');
     await waitFor(() => expect(stage.textContent).toContain('type −1.0 on the dial'));
   });
