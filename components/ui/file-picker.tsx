@@ -150,10 +150,20 @@ function Picker({
 
 function Preview({ file }: { readonly file: File }) {
   const image = useRef<HTMLImageElement>(null);
+  const [unreadable, setUnreadable] = useState<File | null>(null);
   useEffect(() => {
     const made = URL.createObjectURL(file);
     if (image.current !== null) image.current.src = made;
     return () => URL.revokeObjectURL(made);
   }, [file]);
-  return <img ref={image} alt="" style={{ width: 96, height: 72, objectFit: 'cover', borderRadius: 2 }} />;
+  // A picture that this browser can't show may still be one that the server can read.
+  if (unreadable === file) return <Mark name="picture" size={28} />;
+  return (
+    <img
+      ref={image}
+      alt=""
+      onError={() => setUnreadable(file)}
+      style={{ width: 96, height: 72, objectFit: 'cover', borderRadius: 2 }}
+    />
+  );
 }

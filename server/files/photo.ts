@@ -21,7 +21,11 @@ export async function photoFrom(bytes: Uint8Array): Promise<Photo> {
       'HEIC pictures can’t be read here. Set the phone’s camera to its most compatible format (JPEG), or send a screenshot.',
     );
   }
-  if (kind === null) throw new AppError('bad-photo', 'The file is not a JPEG, PNG or WebP picture.');
+  if (kind === null)
+    throw new AppError(
+      'bad-photo',
+      'The file is not a JPEG, PNG or WebP picture. Choose another, or send the words without one.',
+    );
   try {
     const { data, info } = await sharp(bytes, { limitInputPixels: limits.photoPixels, failOn: 'error' })
       .rotate()
@@ -32,9 +36,15 @@ export async function photoFrom(bytes: Uint8Array): Promise<Photo> {
     return { bytes: data, width: info.width, height: info.height, contentType: 'image/jpeg' };
   } catch (error) {
     if (error instanceof Error && /pixel limit/i.test(error.message)) {
-      throw new AppError('bad-photo', `The picture has more than ${limits.photoPixels / 1e6} million pixels.`);
+      throw new AppError(
+        'bad-photo',
+        `The picture has more than ${limits.photoPixels / 1e6} million pixels. Choose a smaller one, or send the words without one.`,
+      );
     }
-    throw new AppError('bad-photo', 'The picture is damaged and can’t be read.');
+    throw new AppError(
+      'bad-photo',
+      'The picture is damaged and can’t be read. Choose another, or send the words without one.',
+    );
   }
 }
 
