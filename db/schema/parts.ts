@@ -1,5 +1,16 @@
 import { sql } from 'drizzle-orm';
-import { check, doublePrecision, foreignKey, index, integer, jsonb, pgTable, primaryKey, text, uuid } from 'drizzle-orm/pg-core';
+import {
+  check,
+  doublePrecision,
+  foreignKey,
+  index,
+  integer,
+  jsonb,
+  pgTable,
+  primaryKey,
+  text,
+  uuid,
+} from 'drizzle-orm/pg-core';
 import type { DrawingAnswers, DrawingReadingWire } from '../../shared/parts.ts';
 import { instant, plantId } from './columns.ts';
 import { files } from './files.ts';
