@@ -7,7 +7,7 @@
 /** Derivative at (time, value); fills the flows of that moment from `place` on. */
 export type Slope = (time: number, value: number, flows: Float64Array, place: number) => number;
 
-/** Called after every accepted step with its ends, the values and the slopes there. */
+/** Called after every accepted step with its ends, the values and the slopes there; true ends the integration there. */
 export type StepSeen = (
   start: number,
   startValue: number,
@@ -15,7 +15,7 @@ export type StepSeen = (
   end: number,
   endValue: number,
   endSlope: number,
-) => void;
+) => boolean;
 
 /** Room that is used again from one integration to the next. */
 export type IntegrateRoom = {
@@ -110,7 +110,8 @@ export function integrate(
     );
   };
 
-  const accept = (next: number, nextValue: number): void => {
+  /** Adds the step up; whether whoever watches has seen enough. */
+  const accept = (next: number, nextValue: number): boolean => {
     for (let flow = 0; flow < sums.length; flow++) {
       const sum =
         (35 / 384) * (nodes[flow] ?? 0) +
@@ -120,7 +121,7 @@ export function integrate(
         (11 / 84) * (nodes[5 * width + flow] ?? 0);
       sums[flow] = (sums[flow] ?? 0) + h * sum;
     }
-    if (seen !== undefined) seen(time, value, k1, next, nextValue, k7);
+    return seen !== undefined && seen(time, value, k1, next, nextValue, k7);
   };
 
   while (time < end) {
@@ -139,16 +140,17 @@ export function integrate(
       return { time: time + h, value: stopAt, reached: true };
     }
     const next = toEnd ? end : time + h;
-    accept(next, trial);
+    const enough = accept(next, trial);
     time = next;
     value = trial;
     k1 = k7;
+    if (enough) break;
     // The flows at the end are those of the next start.
     nodes.copyWithin(0, 6 * width, 7 * width);
     const growth = error === 0 ? 5 : Math.min(5, SAFETY * (tolerance / error) ** 0.2);
     h = sized(Math.min(longestStep, h * growth));
   }
-  return { time: end, value, reached: false };
+  return { time, value, reached: false };
 
   /** The largest of the sizes that is not above a step wished for. */
   function sized(wished: number): number {

@@ -4,7 +4,7 @@ import { leadInNeeded } from './lead-in.ts';
 import { heatLeftOf } from './predict.ts';
 import { planStages, type Frame, type Plan } from './propose-plan.ts';
 import type { PierceResults } from './results.ts';
-import { pierceRun, type PierceRun } from './run.ts';
+import { pierceRun, type PierceRun, type RunSearch } from './run.ts';
 import { routineTime, stageMeanPower, stagePulses, stagesPeakPower } from './stage-math.ts';
 import { LONGEST_STAGE } from './stage-problems.ts';
 import type { Stage } from './stage.ts';
@@ -62,6 +62,8 @@ export type Judged = {
   readonly plan: Plan;
   readonly stages: readonly Stage[];
   readonly routineTime: number; // s
+  /** The same before it is rounded to a tenth, s: what is compared, so that small steps count. */
+  readonly wished: number;
   /** How far each limit is missed, in its own measure; 0 when it is kept. In the order of MISSES, then the rules. */
   readonly misses: Float64Array;
   /** Sum of the misses. */
@@ -75,37 +77,44 @@ const SEARCH_TOLERANCE = 1e-7;
 /** Limits are kept by this much while searching, so that exact figures keep them too. */
 const SEARCH_MARGIN = 0.004;
 /** Long enough a hold to see whether it ever gets through, s. */
-const LONG_HOLD = 60;
+const LONG_HOLD = 30;
 const SHORTEST_HOLD = 0.1;
 
 /**
  * A plan judged: its stages with the hold as long as the reserve asks for, and what it misses. Undefined when it is no better than a
- * routine of `beat` s and nothing more needed to be known.
+ * routine that wishes for `beat` s and nothing more needed to be known.
  */
 export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number, exact = false): Judged | undefined {
-  const tolerance = exact ? undefined : SEARCH_TOLERANCE;
   const margin = exact ? 1 : 1 - SEARCH_MARGIN;
   const { thickness, reserve, limits } = brief;
+  const only = beat < Number.POSITIVE_INFINITY;
+  // Once something keeps every limit, what erupts need not be followed to its end.
+  const giveUpAt = only ? limits.eruptionIndex * margin : Number.POSITIVE_INFINITY;
+  const search = exact ? undefined : { tolerance: SEARCH_TOLERANCE, giveUpAt };
   const misses = new Float64Array(FIRST_RULE + brief.rules.length);
   const miss = (id: MissId, by: number) => {
     misses[MISSES.indexOf(id)] = by > 0 ? by : 0;
   };
 
-  const trial = planStages(frame, plan, LONG_HOLD);
+  // Once something keeps every limit, a hold need not be followed for longer than that one's bottom took.
+  const longest = only ? Math.min(LONG_HOLD, beat / reserve.cold) : LONG_HOLD;
+  const trial = planStages(frame, plan, longest);
   const ramps = frame.holds ? routineTime(trial.slice(0, -1)) : routineTime(trial);
   const shortest = frame.holds ? ramps + SHORTEST_HOLD : ramps;
   if (shortest >= beat) return undefined;
-  const cold = pierceRun(brief.cold, trial, thickness.max, undefined, tolerance);
+  const cold = pierceRun(brief.cold, trial, thickness.max, undefined, search);
   const throughCold = cold.through?.time ?? null;
   if (throughCold !== null && frame.holds && reserve.cold * throughCold >= beat) return undefined;
-  if (throughCold === null && beat < Number.POSITIVE_INFINITY) return undefined;
-  const hot = pierceRun(brief.hot, trial, thickness.max, undefined, tolerance);
+  if (throughCold === null && only) return undefined;
+  const hot = pierceRun(brief.hot, trial, thickness.max, undefined, search);
   const throughHot = hot.through?.time ?? null;
+  if (throughHot === null && only) return undefined;
 
-  const wished = Math.max(shortest, reserve.cold * (throughCold ?? 0), reserve.hot * (throughHot ?? 0));
+  const needed = Math.max(shortest, reserve.cold * (throughCold ?? 0), reserve.hot * (throughHot ?? 0));
+  const wished = frame.holds ? needed + plan.extra / 10 : ramps;
+  if (wished >= beat) return undefined;
   // To the next tenth of a second, with room for the last digit.
-  const total = frame.holds ? (Math.ceil(wished * 10 - 1e-7) + plan.extra) / 10 : ramps;
-  if (total >= beat) return undefined;
+  const total = frame.holds ? Math.ceil(wished * 10 - 1e-7) / 10 : ramps;
   const hold = Math.min(LONGEST_STAGE, Number((total - ramps).toFixed(6)));
   const stages = frame.holds ? planStages(frame, plan, hold) : trial;
 
@@ -127,9 +136,8 @@ export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number,
   if (limits.craterRadius !== undefined) miss('crater', craterRadius / (limits.craterRadius * margin) - 1);
   if (limits.routineTime !== undefined) miss('routine-time', total / (limits.routineTime * (1 + 1e-9)) - 1);
 
-  // What needs the routine's very end is asked only of what could be the answer, or for want of a better one.
   if (throughCold !== null && (brief.rules.length > 0 || limits.leadInLength !== undefined)) {
-    const results = resultsOf(brief, stages, tolerance);
+    const results = resultsOf(brief, stages, search);
     if (limits.leadInLength !== undefined) {
       miss('lead-in', results.leadInLength === null ? 1 : results.leadInLength / (limits.leadInLength * margin) - 1);
     }
@@ -147,6 +155,7 @@ export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number,
     plan,
     stages,
     routineTime: total,
+    wished,
     misses,
     missed: misses.reduce((sum, by) => sum + by, 0),
     figures: { eruptionIndex, craterRadius, depth: cold.depth },
@@ -154,12 +163,11 @@ export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number,
 }
 
 /** The named results of stages, without a trace. The same as `pierceResults` gives from a whole prediction. */
-export function resultsOf(brief: Brief, stages: readonly Stage[], tolerance?: number): PierceResults {
+export function resultsOf(brief: Brief, stages: readonly Stage[], search?: RunSearch): PierceResults {
   const { thickness, coldPlate, hottestPlate } = brief;
-  const cold = pierceRun(brief.cold, stages, thickness.max, undefined, tolerance);
-  const hot = pierceRun(brief.hot, stages, thickness.max, undefined, tolerance);
-  const thin =
-    thickness.min === thickness.max ? hot : pierceRun(brief.hot, stages, thickness.min, undefined, tolerance);
+  const cold = pierceRun(brief.cold, stages, thickness.max, undefined, search);
+  const hot = pierceRun(brief.hot, stages, thickness.max, undefined, search);
+  const thin = thickness.min === thickness.max ? hot : pierceRun(brief.hot, stages, thickness.min, undefined, search);
   const total = routineTime(stages);
   const heatOf = (run: PierceRun, plate: number) => heatLeftOf(run.ledger) / plate;
   const perLength = Math.max(heatOf(cold, thickness.max), heatOf(hot, thickness.max), heatOf(thin, thickness.min));

@@ -1,4 +1,4 @@
-import { planJudged, type Brief, type Judged } from './propose-judge.ts';
+import { MISSES, planJudged, type Brief, type Judged } from './propose-judge.ts';
 import { mostPlace, MOST_TENTHS, planFromIndex, SET_UPS, type Frame, type Plan } from './propose-plan.ts';
 
 /** Called now and then with the share of the work done, 0…1; true from `shouldStop` ends the search. */
@@ -6,6 +6,8 @@ export type SearchWatch = {
   readonly onProgress?: (share: number) => void;
   readonly shouldStop?: () => boolean;
 };
+
+const THROUGH = MISSES.indexOf('through');
 
 /** Counts judged plans: the search ends by their number and never by a clock, so that it finds the same everywhere. */
 export class SearchBudget {
@@ -17,6 +19,11 @@ export class SearchBudget {
   constructor(most: number, watch: SearchWatch) {
     this.most = most;
     this.watch = watch;
+  }
+
+  /** Whether any is left. */
+  left(): boolean {
+    return !this.stopped && this.tried < this.most;
   }
 
   /** Whether another plan may be judged. */
@@ -33,10 +40,25 @@ export class SearchBudget {
 
 /** Parts of the eruption's limit that first plans are made for. */
 const FIRST_INDEXES = [0.95, 0.6, 0.35, 0.2, 0.1] as const;
+const SET_UP_INDEXES = [0.95, 0.6, 0.35] as const;
+/** Choices of a set-up, and how many options each has. */
+const CHOICES = [0, 1, 2, 3] as const;
+const OPTIONS = [
+  SET_UPS.focus.length,
+  SET_UPS.standoff.length,
+  SET_UPS.pressure.length,
+  SET_UPS.frequency.length,
+] as const;
+
 /** First plans that are worked on further. */
 const STARTS = 2;
 /** Steps of the search: places on the scale of powers and tenths of a second, from coarse to fine. */
-const STEPS = [12, 4, 1] as const;
+const STEPS = [8, 3, 1] as const;
+const SHAKEN_STEPS = [3, 1] as const;
+/** How far a shake goes: places on the scale of powers, times by up to this factor, and how often a choice changes. */
+const SHAKE_PLACES = 10;
+const SHAKE_TIMES = 1.5;
+const SHAKE_SET_UP = 0.3;
 
 /**
  * The best plan found for any of the frames: what misses least and, of those that miss nothing, the shortest. With `give`, a place among the
@@ -46,7 +68,7 @@ export function planSearch(
   frames: readonly Frame[],
   brief: Brief,
   budget: SearchBudget,
-  perFrame: number,
+  perStart: number,
   give?: number,
 ): { readonly frame: Frame; readonly judged: Judged } | undefined {
   const better = (a: Judged, b: Judged | undefined): boolean => {
@@ -55,41 +77,80 @@ export function planSearch(
     const [restA, restB] = [a.missed - givenA, b.missed - givenB];
     if (restA !== restB) return restA < restB;
     if (givenA !== givenB) return givenA < givenB;
-    return a.routineTime < b.routineTime;
+    return a.wished < b.wished;
   };
   const judge = (frame: Frame, plan: Plan, best: Judged | undefined): Judged | undefined => {
     if (!budget.spend()) return undefined;
-    const judged = planJudged(frame, brief, plan, best?.missed === 0 ? best.routineTime : Number.POSITIVE_INFINITY);
+    const judged = planJudged(frame, brief, plan, best?.missed === 0 ? best.wished : Number.POSITIVE_INFINITY);
     return judged !== undefined && better(judged, best) ? judged : undefined;
   };
 
-  const starts: { frame: Frame; judged: Judged }[] = [];
-  for (const frame of frames) {
-    for (const part of FIRST_INDEXES) {
-      const index = part * brief.limits.eruptionIndex;
-      const plan = planFromIndex(frame, [0, 0, 0, 0], index, brief.thickness.max, brief.cold, brief.hot);
-      const judged = judge(frame, plan, undefined);
-      if (judged !== undefined) starts.push({ frame, judged });
+  type Found = { readonly frame: Frame; readonly judged: Judged };
+  const byWorth = (a: Found, b: Found) => (better(a.judged, b.judged) ? -1 : better(b.judged, a.judged) ? 1 : 0);
+  const begun = (frame: Frame, setUp: Plan['setUp'], part: number): readonly Found[] => {
+    const index = part * brief.limits.eruptionIndex;
+    const plan = planFromIndex(frame, setUp, index, brief.thickness.max, brief.cold, brief.hot);
+    const judged = judge(frame, plan, undefined);
+    return judged === undefined ? [] : [{ frame, judged }];
+  };
+
+  // First plans: every number of stages, then every choice of the set-up with the best of them.
+  const starts = frames.flatMap((frame) => FIRST_INDEXES.flatMap((part) => begun(frame, [0, 0, 0, 0], part)));
+  starts.sort(byWorth);
+  const [first] = starts;
+  if (first === undefined) return undefined;
+  for (const choice of CHOICES) {
+    for (let option = 1; option < OPTIONS[choice]; option++) {
+      const { setUp } = withSetUp(first.judged.plan, choice, option);
+      for (const part of SET_UP_INDEXES) starts.push(...begun(first.frame, setUp, part));
     }
   }
-  starts.sort((a, b) => (better(a.judged, b.judged) ? -1 : better(b.judged, a.judged) ? 1 : 0));
+  starts.sort(byWorth);
 
-  let best: { frame: Frame; judged: Judged } | undefined;
-  const begun = new Set<Frame>();
-  for (const start of starts) {
-    if (begun.size >= STARTS) break;
-    if (begun.has(start.frame)) continue;
-    begun.add(start.frame);
-    const judged = climbed(start.frame, start.judged, judge, perFrame);
-    if (best === undefined || better(judged, best.judged)) best = { frame: start.frame, judged };
+  let best = first;
+  const known = new Set<string>();
+  for (const { frame, judged } of starts) {
+    const kind = `${frames.indexOf(frame)} ${judged.plan.setUp.join()}`;
+    if (known.has(kind) || known.size >= STARTS) continue;
+    known.add(kind);
+    const after = climbed(frame, judged, judge, perStart, STEPS);
+    if (better(after, best.judged)) best = { frame, judged: after };
+  }
+  // What is left of the budget: shaken, climbed again, kept when better. The same shakes each time. Is it not even through? Then
+  // all its power is used, and shaking gives no more.
+  const shake = shakes();
+  while (budget.left() && best.judged.misses[THROUGH] === 0) {
+    const { frame, judged } = best;
+    const shaken = planJudged(frame, brief, shake(frame, judged.plan), Number.POSITIVE_INFINITY);
+    if (shaken === undefined || !budget.spend()) break;
+    const after = climbed(frame, shaken, judge, perStart, SHAKEN_STEPS);
+    if (better(after, judged)) best = { frame, judged: after };
   }
   return best;
+}
+
+/** A plan shaken: powers, times and now and then a choice of the set-up. From numbers of its own, the same in each search. */
+function shakes(): (frame: Frame, plan: Plan) => Plan {
+  let state = 1;
+  // Park and Miller's minimal standard generator.
+  const next = (): number => (state = (state * 48_271) % 2_147_483_647) / 2_147_483_647;
+  const spread = (): number => 2 * next() - 1;
+  return (frame, plan) => {
+    const top = mostPlace(frame);
+    const powers = plan.powers.map((value) => Math.min(top, Math.max(0, value + Math.round(SHAKE_PLACES * spread()))));
+    const durations = plan.durations.map((value) => Math.max(1, Math.round(value * SHAKE_TIMES ** spread())));
+    let shaken: Plan = { ...plan, powers, durations };
+    for (const choice of CHOICES) {
+      if (next() < SHAKE_SET_UP) shaken = withSetUp(shaken, choice, Math.floor(next() * OPTIONS[choice]));
+    }
+    return shaken;
+  };
 }
 
 type Judge = (frame: Frame, plan: Plan, best: Judged | undefined) => Judged | undefined;
 
 /** From a plan to a better neighbour as long as there is one, in ever finer steps. A step that helped is tried again at once. */
-function climbed(frame: Frame, start: Judged, judge: Judge, most: number): Judged {
+function climbed(frame: Frame, start: Judged, judge: Judge, most: number, steps: readonly number[]): Judged {
   let best = start;
   let tries = 0;
   const seen = new Set<string>();
@@ -104,11 +165,11 @@ function climbed(frame: Frame, start: Judged, judge: Judge, most: number): Judge
     best = judged;
     return true;
   };
-  for (const step of STEPS) {
+  for (const step of steps) {
     for (let improved = true; improved && tries < most;) {
       improved = false;
       if (step !== 1) {
-        for (const choice of [0, 1, 2, 3] as const) {
+        for (const choice of CHOICES) {
           for (let option = 0; option < OPTIONS[choice]; option++) {
             if (attempt(withSetUp(best.plan, choice, option))) improved = true;
           }
@@ -121,13 +182,6 @@ function climbed(frame: Frame, start: Judged, judge: Judge, most: number): Judge
   }
   return best;
 }
-
-const OPTIONS = [
-  SET_UPS.focus.length,
-  SET_UPS.standoff.length,
-  SET_UPS.pressure.length,
-  SET_UPS.frequency.length,
-] as const;
 
 function withSetUp(plan: Plan, choice: 0 | 1 | 2 | 3, option: number): Plan {
   const [focus, standoff, pressure, frequency] = plan.setUp;
@@ -176,16 +230,23 @@ function moves(frame: Frame, step: number): readonly Move[] {
     for (let knot = 0; knot < frame.knotCount; knot++) all.push(powers((index) => (index === knot ? by : 0)));
     for (let time = 0; time < frame.timeCount; time++) {
       all.push(times((index) => (index === time ? by : 0)));
-      // A ramp that is longer by what its neighbour is shorter, and a ramp that ends higher and sooner.
+      // A ramp that is longer by what its neighbour is shorter.
       if (time + 1 < frame.timeCount) {
         all.push(times((index) => (index === time ? by : index === time + 1 ? -by : 0)));
       }
-      all.push(
-        both(
-          powers((index) => (index === time + 1 ? by : 0)),
-          times((index) => (index === time ? -by : 0)),
-        ),
-      );
+      // A knot that is higher and later or sooner reached.
+      for (const way of [by, -by]) {
+        all.push(
+          both(
+            powers((index) => (index === time + 1 ? by : 0)),
+            times((index) => (index === time ? way : 0)),
+          ),
+        );
+      }
+    }
+    // A knot that is higher by what the next one is lower.
+    for (let knot = 0; knot + 1 < frame.knotCount; knot++) {
+      all.push(powers((index) => (index === knot ? by : index === knot + 1 ? -by : 0)));
     }
   }
   return all;

@@ -66,9 +66,11 @@ export type PierceProposal =
 /** Stages of a routine that the search may make, the hold counted. */
 const STAGE_COUNTS = [4, 3, 5, 2] as const;
 /** Plans judged for a proposal, and for each question of what would have to give. */
-const MOST_TRIES = 1200;
-const TRIES_PER_FRAME = 560;
-const TRIES_PER_OBSTACLE = 500;
+const MOST_TRIES = 800;
+const TRIES_PER_START = 300;
+const TRIES_PER_OBSTACLE = 700;
+/** Share of the work that the search itself is, when the limits must be asked as well. */
+const SEARCH_SHARE = 0.4;
 
 /**
  * The shortest staged pierce found that keeps the reserve, every limit and every rule: ramps that join and a hold as long as the
@@ -83,12 +85,12 @@ export function piercePropose(
 ): PierceProposal {
   const brief = briefOf(input);
   const frames = framesOf(input);
-  const watch: SearchWatch = {
-    ...(onProgress === undefined ? {} : { onProgress }),
+  const watch = (from: number, to: number): SearchWatch => ({
+    ...(onProgress === undefined ? {} : { onProgress: (share) => onProgress(from + (to - from) * share) }),
     ...(shouldStop === undefined ? {} : { shouldStop }),
-  };
-  const budget = new SearchBudget(MOST_TRIES, watch);
-  const found = planSearch(frames, brief, budget, TRIES_PER_FRAME);
+  });
+  const budget = new SearchBudget(MOST_TRIES, watch(0, SEARCH_SHARE));
+  const found = planSearch(frames, brief, budget, TRIES_PER_START);
   if (budget.stopped || found === undefined) return { kind: 'stopped' };
 
   const exact = exactly(found.frame, brief, found.judged);
@@ -102,7 +104,9 @@ export function piercePropose(
       return { kind: 'ok', stages: exact.stages, prediction, checks, tried: budget.tried };
     }
   }
-  return none(input, brief, frames, found, watch, budget.tried);
+  const proposal = none(input, brief, frames, found, watch, budget.tried);
+  if (proposal.kind !== 'stopped') onProgress?.(1);
+  return proposal;
 }
 
 function briefOf(input: ProposeInput): Brief {
@@ -197,7 +201,7 @@ function none(
   brief: Brief,
   frames: readonly Frame[],
   found: Found,
-  watch: SearchWatch,
+  watch: (from: number, to: number) => SearchWatch,
   triedBefore: number,
 ): PierceProposal {
   const nearest = exactly(found.frame, brief, found.judged);
@@ -214,8 +218,11 @@ function none(
   }
   let tried = triedBefore;
   const inTheWay: ProposalObstacle[] = [];
-  for (const place of negotiable(brief)) {
-    const budget = new SearchBudget(TRIES_PER_OBSTACLE, watch);
+  const places = negotiable(brief);
+  for (const [index, place] of places.entries()) {
+    const from = SEARCH_SHARE + ((1 - SEARCH_SHARE) * index) / places.length;
+    const to = SEARCH_SHARE + ((1 - SEARCH_SHARE) * (index + 1)) / places.length;
+    const budget = new SearchBudget(TRIES_PER_OBSTACLE, watch(from, to));
     const given = planSearch(frames, brief, budget, TRIES_PER_OBSTACLE / 2, place);
     tried += budget.tried;
     if (budget.stopped || given === undefined) return { kind: 'stopped' };

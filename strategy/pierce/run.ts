@@ -74,6 +74,14 @@ export type RunStep = (
   endSpeed: number,
 ) => void;
 
+/** How a search asks: with a larger error, and no further than the eruption index that rules a pierce out. */
+export type RunSearch = {
+  /** Error of the depth in a step, m. */
+  readonly tolerance: number;
+  /** The run ends, with what it has so far, once the eruption index is above this. */
+  readonly giveUpAt: number;
+};
+
 /** Time for which heat near the mouth counts, s: what a point source needs to spread over the crater's scale. */
 const CRATER_MEMORY = CRATER_SCALE ** 2 / (6 * HOT_DIFFUSIVITY);
 
@@ -83,8 +91,9 @@ export const STALL_SPEED = 0.05e-3;
 /** Error of the depth allowed for a step, m. */
 const DEPTH_TOLERANCE = 1e-10;
 
-/** Steps a stage takes at least, so that nothing short is stepped over. */
+/** Steps a stage takes at least, so that nothing short is stepped over; in a search. */
 const LEAST_STEPS = 8;
+const LEAST_SEARCH_STEPS = 4;
 
 /** Gauss–Legendre, five points on 0…1 (Abramowitz & Stegun, table 25.4). */
 const REST_NODES = [0.04691007703066802, 0.23076534494715845, 0.5, 0.7692346550528415, 0.953089922969332] as const;
@@ -103,7 +112,7 @@ export function pierceRun(
   stages: readonly Stage[],
   thickness: number,
   watch?: RunStep,
-  tolerance = DEPTH_TOLERANCE,
+  search?: RunSearch,
 ): PierceRun {
   const room = integrateRoom(MOMENT_SIZE, FLOWS);
   const { nodes, sums } = room;
@@ -124,13 +133,17 @@ export function pierceRun(
   let greatestMouthHeat = 0;
   let widestBore = 0;
   let eruption = 0;
+  let givenUp = false;
+  const tolerance = search?.tolerance ?? DEPTH_TOLERANCE;
+  const giveUpAt = search?.giveUpAt ?? Number.POSITIVE_INFINITY;
+  const leastSteps = search === undefined ? LEAST_STEPS : LEAST_SEARCH_STEPS;
 
   const slopeAt = (time: number, at: number, flows: Float64Array, place: number): number => {
     boreSetAt(set, ramp, (time - stageStart) / duration);
     return boreMoment(bore, set, at > 0 ? at : 0, flows, place);
   };
 
-  const seen = (from: number, z0: number, v0: number, to: number, z1: number, v1: number): void => {
+  const seen = (from: number, z0: number, v0: number, to: number, z1: number, v1: number): boolean => {
     const h = to - from;
     let came = 0;
     for (let node = 0; node < 6; node++) {
@@ -154,9 +167,11 @@ export function pierceRun(
     lastSpeed = v1;
     if (v0 < STALL_SPEED && v1 < STALL_SPEED) stood += h;
     if (watch !== undefined) watch(stage, from, z0, v0, to, z1, v1);
+    givenUp = eruption > giveUpAt;
+    return givenUp;
   };
 
-  for (; stage < stages.length; stage++) {
+  for (; stage < stages.length && !givenUp; stage++) {
     const now = stages[stage];
     if (now === undefined) continue;
     duration = now.duration;
@@ -169,11 +184,11 @@ export function pierceRun(
         tolerance,
         firstStep: duration / 32,
         // The mouth's heat fades with its own time, which a step must not exceed.
-        longestStep: Math.min(duration / LEAST_STEPS, CRATER_MEMORY),
+        longestStep: Math.min(duration / leastSteps, CRATER_MEMORY),
         stopAt: thickness,
       };
       const kinks = rampKinks(ramp, bore);
-      for (let piece = 0; piece <= kinks.length && through === null; piece++) {
+      for (let piece = 0; piece <= kinks.length && through === null && !givenUp; piece++) {
         const kink = kinks[piece];
         const to = kink === undefined ? stageEnd : stageStart + kink * duration;
         if (to <= from) continue;

@@ -60,9 +60,19 @@ describe('the integrator', () => {
     integrate(sine, integrateRoom(1, 1), Math.sin(1), 1, 4, options, (start, value0, slope0, end, value1, slope1) => {
       expect([start, value0, slope0]).toEqual(ends.at(-1) ?? [1, Math.sin(1), Math.cos(1)]);
       ends.push([end, value1, slope1]);
+      return false;
     });
     expect(ends.at(-1)?.[0]).toBe(4);
     expect(ends.length).toBeGreaterThan(4);
+  });
+
+  it('ends after the step that whoever watches has seen enough of', () => {
+    const options = { ...NEVER, tolerance: 1e-8, firstStep: 0.01, longestStep: 0.5 };
+    const result = integrate(sine, integrateRoom(1, 1), 0, 0, 4, options, (_s, _v, _k, end) => end > 1);
+    expect(result.reached).toBe(false);
+    expect(result.time).toBeGreaterThan(1);
+    expect(result.time).toBeLessThan(1.6);
+    expect(result.value).toBeCloseTo(Math.sin(result.time), 6);
   });
 
   it('gives up with the time when the derivative is no number', () => {

@@ -26,6 +26,9 @@ import {
 
 const RAMPS = threeRamps([500, 700, 1400, 2200]);
 
+/** Thousands of random pierces go through the laws of a whole run. */
+const MANY = { numRuns: 1000 };
+
 /** Room for the step control where two runs take different steps. */
 const SAME = 1e-7;
 
@@ -46,6 +49,7 @@ describe('laws of the pierce', () => {
           (cold.perStage.at(-1)?.depthAtEnd ?? 0) - SAME,
         );
       }),
+      MANY,
     );
   });
 
@@ -58,6 +62,7 @@ describe('laws of the pierce', () => {
         const strong = piercePredict(input(more, { thickness }));
         expect(throughAt(strong.breakthrough)).toBeLessThanOrEqual(throughAt(plain.breakthrough) + SAME);
       }),
+      MANY,
     );
   });
 
@@ -68,6 +73,7 @@ describe('laws of the pierce', () => {
         const thick = piercePredict(input(stages, { thickness: Math.max(a, b) }));
         expect(throughAt(thick.breakthrough)).toBeGreaterThanOrEqual(throughAt(thin.breakthrough) - SAME);
       }),
+      MANY,
     );
   });
 
@@ -86,6 +92,7 @@ describe('laws of the pierce', () => {
         expect(oxidationHeat).toBe(ledger.oxidation);
         expect(heatLeft).toBeCloseTo(ledger.conduction + ledger.pauses + ledger.wall, 6);
       }),
+      MANY,
     );
   });
 
@@ -105,6 +112,7 @@ describe('laws of the pierce', () => {
           if (breakthrough.kind === 'through' && time >= breakthrough.time) expect(trace.depth[index]).toBe(thickness);
         });
       }),
+      MANY,
     );
   });
 
@@ -119,6 +127,7 @@ describe('laws of the pierce', () => {
           before + (stages[breakthrough.stage]?.duration ?? Number.NaN) + 1e-12,
         );
       }),
+      MANY,
     );
   });
 
