@@ -263,12 +263,13 @@ type Drag = { pointer: number; at: number; value: number; perPixel: number; last
 function Handle(props: HandleProps) {
   const { editing, target, axis, label, valueText, value, perPixel, range, steps, zone, tabbable, onNeighbour } = props;
   const drag = useRef<Drag | null>(null);
+  const slider = useRef<SVGGElement>(null);
 
   const down = (event: PointerEvent<SVGGElement>) => {
     if (event.button !== 0 || drag.current) return;
     event.preventDefault(); // no text is selected, and the focus is set here
     event.currentTarget.setPointerCapture(event.pointerId);
-    event.currentTarget.focus({ preventScroll: true });
+    slider.current?.focus({ preventScroll: true });
     editing.onTarget(target);
     const at = axis === 'x' ? event.clientX : event.clientY;
     drag.current = { pointer: event.pointerId, at, value, perPixel, last: value };
@@ -315,26 +316,31 @@ function Handle(props: HandleProps) {
 
   return (
     <g
-      role="slider"
-      tabIndex={tabbable ? 0 : -1}
-      aria-label={label}
-      aria-orientation={axis === 'x' ? 'horizontal' : 'vertical'}
-      aria-valuemin={range.min}
-      aria-valuemax={range.max}
-      aria-valuenow={value}
-      aria-valuetext={valueText}
       style={{ touchAction: 'none', cursor: axis === 'x' ? 'ew-resize' : 'ns-resize' }}
       onPointerDown={down}
       onPointerMove={move}
       onPointerUp={up}
       onPointerCancel={cancel}
-      onFocus={() => editing.onTarget(target)}
-      onBlur={editing.onSettle}
-      onKeyDown={key}
-      onKeyUp={editing.onSettle}
     >
+      {/* outside what takes the focus, so that its ring stays close to the knot and off the lane's name */}
       <rect {...zone} fill="transparent" />
-      {props.children}
+      <g
+        ref={slider}
+        role="slider"
+        tabIndex={tabbable ? 0 : -1}
+        aria-label={label}
+        aria-orientation={axis === 'x' ? 'horizontal' : 'vertical'}
+        aria-valuemin={range.min}
+        aria-valuemax={range.max}
+        aria-valuenow={value}
+        aria-valuetext={valueText}
+        onFocus={() => editing.onTarget(target)}
+        onBlur={editing.onSettle}
+        onKeyDown={key}
+        onKeyUp={editing.onSettle}
+      >
+        {props.children}
+      </g>
     </g>
   );
 }

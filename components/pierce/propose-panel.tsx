@@ -16,10 +16,8 @@ import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { Prediction } from '@/shared/strategies.ts';
 import type { ProposeInput, ReserveRules, Stage } from '@/strategy/pierce/index.ts';
 import { quantityText } from '@/strategy/units/index.ts';
+import type { ProposalGround } from './use-draft-proposal.ts';
 import type { ProposalState } from './use-proposal.ts';
-
-/** What every proposal starts from: machine, nozzle and plates. */
-export type ProposalGround = Pick<ProposeInput, 'profile' | 'nozzle' | 'thickness' | 'hottestPlateTemperature'>;
 
 type ProposePanelProps = {
   /** Null while machine or nozzle are not known, or a number is wrong. */

@@ -9,7 +9,7 @@ import { strategyQuery } from '@/components/data/strategies.ts';
 import { LiveHouseRules } from '@/components/rules/live-house-rules.tsx';
 import { houseRulesText } from '@/components/text/house-rules.ts';
 import { momentText } from '@/components/text/moments.ts';
-import { compareText, compareWords, historyText, proposeText } from '@/components/text/pierce-designer.ts';
+import { compareText } from '@/components/text/pierce-designer.ts';
 import { depthsAtEnds, type Explained } from '@/components/text/pierce-explain.ts';
 import { revisionText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
@@ -24,12 +24,9 @@ import { Notice } from '@/components/ui/notice.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Small } from '@/components/ui/text.tsx';
-import { Tick } from '@/components/ui/tick.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import { reserveRulesOf } from '@/shared/prediction.ts';
-import type { Prediction, Revision, StrategyContent } from '@/shared/strategies.ts';
-import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
-import type { Stage } from '@/strategy/pierce/stage.ts';
+import type { Revision } from '@/shared/strategies.ts';
 import { CheckList } from './check-list.tsx';
 import { CornerRulesSentence } from './corner-rules-sentence.tsx';
 import { CutSentence } from './cut-sentence.tsx';
@@ -37,17 +34,18 @@ import { DraftProvider } from './draft-context.tsx';
 import { historyOf, historyReduce } from './draft-history.ts';
 import { contentSame, draftOf, draftProblems } from './draft.ts';
 import { ExplainDialog } from './explain.tsx';
-import type { Ghost } from './ghost.ts';
+import { ghostOf, type Ghost } from './ghost.ts';
 import { GoodFor } from './good-for.tsx';
 import { History } from './history.tsx';
 import { forgetDraft, keepDraft, keptDraft } from './kept-drafts.ts';
-import { ProposePanel, type ProposalGround } from './propose-panel.tsx';
+import { ProposePanel } from './propose-panel.tsx';
 import { SectionPanel, type SectionEdit } from './section-panel.tsx';
 import { stageEnds } from './section-layout.ts';
 import { SensitivityPanel } from './sensitivity-panel.tsx';
 import { StageSentence } from './stage-sentence.tsx';
-import { predicted, usePrediction } from './use-prediction.ts';
-import { useProposal, type ProposalState } from './use-proposal.ts';
+import { StepBar } from './step-bar.tsx';
+import { useDraftProposal } from './use-draft-proposal.ts';
+import { usePrediction } from './use-prediction.ts';
 import { useUndoKeys } from './use-undo-keys.ts';
 
 /** How a draft stands when somebody decides about it. */
@@ -86,7 +84,6 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
   const [proposing, setProposing] = useState(false);
   const [explained, setExplained] = useState<Explained | null>(null);
   const system = useUnitSystem();
-  const proposal = useProposal();
   const save = useRevisionSave();
 
   const problems = useMemo(() => draftProblems(draft), [draft]);
@@ -129,46 +126,24 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
   useUndoKeys(!readOnly, dispatch);
   const profile = machineRevision?.profile ?? null;
   const strategy = useQuery(strategyQuery(revision.strategyId));
-  const former = strategy.data?.revisions
-    .filter(({ number }) => number < revision.number)
-    .reduce<Revision | null>((newest, one) => (newest && newest.number > one.number ? newest : one), null);
+  // the newest comes first
+  const former = strategy.data?.revisions.find(({ number }) => number < revision.number) ?? null;
 
-  const ground = useMemo<ProposalGround | null>(
-    () => (problems.size === 0 && profile && nozzle ? groundOf(draft.content, profile, nozzle) : null),
-    [problems, draft.content, profile, nozzle],
-  );
-  // made for another plate, machine or nozzle than stands here now: it is no proposal any more
-  const outdated = proposal.state.kind === 'answered' && ground !== null && !groundSame(ground, proposal.state.input);
-  const proposalState: ProposalState = outdated ? { kind: 'idle' } : proposal.state;
-  const answered = proposalState.kind === 'answered' ? proposalState : null;
-  const proposedStages = answered
-    ? answered.proposal.kind === 'ok'
-      ? answered.proposal.stages
-      : answered.proposal.nearest
-    : null;
-  const proposed = useMemo(
-    () =>
-      proposedStages && profile && nozzle
-        ? predicted(withStages(live.content, proposedStages), profile, nozzle, rules)
-        : null,
-    [proposedStages, live.content, profile, nozzle, rules],
-  );
+  const proposal = useDraftProposal({
+    content: live.content,
+    sound: problems.size === 0 && !live.behind,
+    profile,
+    nozzle,
+    rules,
+  });
   const ghosts = useMemo<readonly Ghost[]>(
     () => [
       ...(comparing && former
         ? [ghostOf(compareText.label(former.number), former.content.stages, former.prediction)]
         : []),
-      ...(proposed && proposedStages && answered
-        ? [
-            ghostOf(
-              answered.proposal.kind === 'ok' ? proposeText.label : proposeText.nearestLabel,
-              proposedStages,
-              proposed,
-            ),
-          ]
-        : []),
+      ...(proposal.ghost ? [proposal.ghost] : []),
     ],
-    [comparing, former, proposed, proposedStages, answered],
+    [comparing, former, proposal.ghost],
   );
 
   const saveNow = async (version: number): Promise<Revision | null> => {
@@ -267,43 +242,26 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
     return depth === undefined || shown.behind ? null : depth;
   };
 
-  const bar = (!readOnly || former) && (
-    <Stack gap="xs">
-      <View role="group" aria-label={historyText.bar}>
-        <Row gap="s">
-          {!readOnly && (
-            <>
-              <Button
-                label={historyText.undo}
-                disabled={steps.past.length === 0}
-                onPress={() => dispatch({ do: 'undo' })}
-              />
-              <Button
-                label={historyText.redo}
-                disabled={steps.future.length === 0}
-                onPress={() => dispatch({ do: 'redo' })}
-              />
-              <Button label={proposeText.open} expanded={proposing} onPress={() => setProposing(!proposing)} />
-            </>
-          )}
-          {former && <Tick label={compareText.toggle(former.number)} checked={comparing} onChange={setComparing} />}
-        </Row>
-      </View>
-      {comparing && former && (
-        <View role="status">
-          <Small>{compareWords(compareText.label(former.number), former.prediction, shown.prediction)}</Small>
-        </View>
-      )}
-    </Stack>
+  const bar = (
+    <StepBar
+      steps={readOnly ? null : steps}
+      dispatch={dispatch}
+      proposing={proposing}
+      onPropose={() => setProposing(!proposing)}
+      former={former}
+      comparing={comparing}
+      onCompare={setComparing}
+      now={shown.prediction}
+    />
   );
   const proposePanel = proposing && !readOnly && (
     <ProposePanel
-      ground={ground}
+      ground={proposal.ground}
       rules={rules}
       stages={draft.content.stages}
       stageKeys={draft.stageKeys}
-      state={proposalState}
-      proposed={proposed}
+      state={proposal.state}
+      proposed={proposal.proposed}
       now={shown.prediction}
       onBegin={proposal.begin}
       onCancel={proposal.clear}
@@ -457,30 +415,6 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
     </DraftProvider>
   );
 }
-
-const groundOf = (content: StrategyContent, profile: MachineProfile, nozzle: Nozzle): ProposalGround => ({
-  profile,
-  nozzle: { type: nozzle.type, diameter: nozzle.diameter },
-  thickness: { min: content.thickness.min * 1e-6, max: content.thickness.max * 1e-6 },
-  hottestPlateTemperature: content.hottestPlate,
-});
-
-const groundSame = (a: ProposalGround, b: ProposalGround): boolean =>
-  JSON.stringify([a.profile, a.nozzle, a.thickness, a.hottestPlateTemperature]) ===
-  JSON.stringify([b.profile, b.nozzle, b.thickness, b.hottestPlateTemperature]);
-
-/** Content with other stages, as a draft holds them. */
-const withStages = (content: StrategyContent, stages: readonly Stage[]): StrategyContent => ({
-  ...content,
-  stages: stages.map(({ duration, from, to }) => ({ duration, from: { ...from }, to: { ...to } })),
-});
-
-const ghostOf = (label: string, stages: readonly Stage[], { routineTime, cold }: Prediction): Ghost => ({
-  label,
-  stages,
-  routineTime,
-  cold,
-});
 
 /** What must stay at hand on a phone, above the page's lower edge. */
 function StickyBar({ children }: { children: ReactNode }) {

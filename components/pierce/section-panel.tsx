@@ -1,4 +1,5 @@
 import { useMemo, useRef, useState } from 'react';
+import { flushSync } from 'react-dom';
 import { useLayout } from '@/components/theme/layout.ts';
 import { space } from '@/components/theme/space.ts';
 import { knotText } from '@/components/text/pierce-designer.ts';
@@ -216,7 +217,8 @@ function useFrameState<T>(first: T | null): [T | null, (next: T | null) => void]
     const frame = requestAnimationFrame(() => {
       const last = waiting.current;
       waiting.current = null;
-      if (last) setState(last.next);
+      // drawn in this very frame, not in one after it
+      if (last) flushSync(() => setState(last.next));
     });
     waiting.current = { frame, next };
   };
