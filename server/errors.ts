@@ -79,8 +79,11 @@ function fromDatabase(error: unknown): AppError | null {
   if (!fault) return null;
   const { code, constraint = '' } = fault;
   switch (code) {
-    case '23505':
-      return new AppError('already-there', alreadyThere(constraint));
+    case '23505': {
+      const detail = alreadyThere(constraint);
+      const field = ['tag', 'name'].find((name) => constraint.includes(name));
+      return new AppError('already-there', detail, field ? { errors: [{ pointer: `/${field}`, detail }] } : {});
+    }
     case '23P01':
       return new AppError('overlap', 'Another strategy was approved for part of this range meanwhile.');
     case '23503':
@@ -107,8 +110,9 @@ const unavailable = () =>
   new AppError('unavailable', 'The database does not answer. Try again in a moment.', { retryAfter: 5 });
 
 function alreadyThere(constraint: string): string {
-  if (constraint.includes('tag')) return 'A plate with this tag is booked in already.';
-  if (constraint.includes('name')) return 'Something with this name is there already.';
+  if (constraint.includes('tag'))
+    return 'A plate with this tag is booked in already. Look at the tag again, or correct that plate.';
+  if (constraint.includes('name')) return 'Something with this name is there already. Give it another name.';
   if (constraint.includes('person')) return 'This person belongs to the plant already.';
   if (constraint.includes('house_rules_expression')) return 'A rule that says just this is in force already.';
   if (constraint.includes('draft')) return 'This strategy has a draft already.';

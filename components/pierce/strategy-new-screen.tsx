@@ -5,6 +5,7 @@ import { newId } from '@/components/data/call.ts';
 import { gradesQuery } from '@/components/data/grades.ts';
 import { machinesQuery } from '@/components/data/machines.ts';
 import { nozzlesQuery } from '@/components/data/nozzles.ts';
+import { isProblem } from '@/components/data/problem.ts';
 import { useStrategyAdd } from '@/components/data/strategies.ts';
 import { Page } from '@/components/shell/page.tsx';
 import { common } from '@/components/text/common.ts';
@@ -100,9 +101,14 @@ function NewForm({ machines, nozzles, groups }: NewFormProps) {
     hottestPlate: hottestPlate ?? Number.NaN,
   });
   const nameRead = nameSchema.safeParse(name);
+  // what the server said of the name holds until another is typed
+  const nameTaken =
+    isProblem(add.error) && add.variables?.name === nameRead.data
+      ? add.error.fields.find(({ pointer }) => pointer === '/name')?.detail
+      : undefined;
   const errorOf = (path: string): string | undefined => {
     if (!sent) return undefined;
-    if (path === 'name') return nameRead.success ? undefined : nameRead.error.issues[0]?.message;
+    if (path === 'name') return nameRead.success ? nameTaken : nameRead.error.issues[0]?.message;
     const issue = read.success ? undefined : read.error.issues.find((one) => one.path.join('.') === path);
     if (!issue) return undefined;
     return path in strategiesText.missing

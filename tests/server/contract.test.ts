@@ -253,7 +253,8 @@ describe('a problem', () => {
     expect(answer.status).toBe(409);
     expect(answer.problem).toMatchObject({
       code: 'already-there',
-      detail: 'A plate with this tag is booked in already.',
+      detail: 'A plate with this tag is booked in already. Look at the tag again, or correct that plate.',
+      errors: [{ pointer: '/tag', detail: expect.stringContaining('already') as unknown }],
     });
   });
 
