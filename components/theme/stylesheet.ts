@@ -27,7 +27,7 @@ main:focus{outline:none!important}
 .cp-control::placeholder{color:var(--softInk);opacity:1}
 .cp-control:disabled,.cp-control[readonly]{background:transparent;border-style:dashed}
 .cp-control[aria-invalid=true]{border:2px solid var(--wrong);padding:10px 11px}
-select.cp-control{padding-right:40px;background-image:linear-gradient(45deg,transparent 50%,var(--ink) 50%),linear-gradient(135deg,var(--ink) 50%,transparent 50%);background-position:right 20px center,right 14px center;background-size:6px 6px;background-repeat:no-repeat}
+select.cp-control{padding-right:40px;text-overflow:ellipsis;background-image:linear-gradient(45deg,transparent 50%,var(--ink) 50%),linear-gradient(135deg,var(--ink) 50%,transparent 50%);background-position:right 20px center,right 14px center;background-size:6px 6px;background-repeat:no-repeat}
 .cp-button{font-family:${family.readingStrong};font-size:17px;line-height:22px;min-height:48px;min-width:48px;padding:12px 18px;border-radius:3px;border:1px solid var(--ink);background:transparent;color:var(--ink);cursor:pointer;text-align:center;margin:0}
 .cp-button:hover{background:var(--touched)}
 .cp-button.cp-main{background:var(--ember);border-color:var(--ember);color:var(--onEmber)}
