@@ -1,9 +1,8 @@
 import { z } from 'zod';
 import { idSchema, instantSchema, listOf, nameSchema, thicknessSchema, wordsSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
-import { tagSchema } from './plates.ts';
+import { plateSchema, tagSchema } from './plates.ts';
 import { cutConditionsSchema, checkSchema, stageQuantitiesSchema } from './strategies.ts';
-import { plateSchema } from './plates.ts';
 import { focusScaleSchema } from './machines.ts';
 
 /** The number to type at this machine for a focus position, m; none when the dial doesn't reach it. */
