@@ -109,6 +109,20 @@ export default defineConfig([
     },
   },
   {
+    // Screens are made of React Native's parts. What only the browser has (a form, a select, a dialog) stands in *.web.tsx.
+    files: ['components/**/*.tsx', 'app/**/*.tsx'],
+    ignores: ['**/*.web.tsx', 'app/+html.tsx', 'components/pierce/**'],
+    rules: {
+      'no-restricted-syntax': [
+        'error',
+        {
+          selector: 'JSXOpeningElement > JSXIdentifier[name=/^(?!title$)[a-z]/]', // a page's title stands in its head
+          message: 'Use View, Text, Pressable, react-native-svg or a control of components/ui.',
+        },
+      ],
+    },
+  },
+  {
     files: ['server/**', 'tests/**', 'db/**', '**/*.cjs', '**/*.mjs', '*.config.*'],
     languageOptions: { globals: node },
   },

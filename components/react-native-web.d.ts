@@ -15,7 +15,12 @@ declare module 'react-native' {
     readonly 'aria-level'?: number;
     readonly 'aria-pressed'?: boolean;
   }
+  interface TextInputProps {
+    readonly disabled?: boolean;
+  }
   interface TextProps {
+    readonly href?: string;
+    readonly hrefAttrs?: { readonly download?: string };
     readonly dataSet?: Readonly<Record<string, string | undefined>>;
     readonly 'aria-level'?: number;
     readonly 'aria-live'?: 'polite' | 'assertive' | 'off';

@@ -112,9 +112,9 @@ function CardOf({ card, kept }: { card: Card; kept: boolean }) {
       {first}
       {numbers}
       <ButtonLink size="large" fill href="/at-the-machine" label={cardText.other} />
-      <div data-print="hide" style={styles.foot}>
+      <View dataSet={{ print: 'hide' }} style={styles.foot}>
         {wrong}
-      </div>
+      </View>
     </Stack>
   );
 }
@@ -219,8 +219,9 @@ const styles = {
     position: 'sticky',
     bottom: 0,
     zIndex: 5,
-    background: roles.ground,
-    borderTop: `1px solid ${roles.ink}`,
-    paddingBlock: space.m,
+    backgroundColor: roles.ground,
+    borderTopWidth: 1,
+    borderTopColor: roles.ink,
+    paddingVertical: space.m,
   },
 } as const;

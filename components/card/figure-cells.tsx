@@ -1,35 +1,33 @@
-import type { CSSProperties } from 'react';
-import { roles } from '@/components/theme/roles.ts';
-import { family } from '@/components/theme/type.ts';
-import { Figure } from '@/components/ui/text.tsx';
+import { StyleSheet, View } from 'react-native';
+import { webStyle } from '@/components/theme/web-style.ts';
+import { Figure, Label } from '@/components/ui/text.tsx';
 
 export type FigureCell = { label: string; value: string; unit?: string };
 
 /** Figures to be read from an arm's length: label in ink above a large number, two beside each other where they fit. */
 export function FigureCells({ cells, label }: { cells: readonly FigureCell[]; label: string }) {
   return (
-    <dl aria-label={label} style={styles.cells}>
+    <View role="list" aria-label={label} style={styles.cells}>
       {cells.map((cell) => (
-        <div key={cell.label} style={styles.cell}>
-          <dt style={styles.label}>{cell.label}</dt>
-          <dd style={styles.value}>
+        <View key={cell.label} role="listitem" style={styles.cell}>
+          <View role="term">
+            <Label large>{cell.label}</Label>
+          </View>
+          <View role="definition">
             <Figure large value={cell.value} unit={cell.unit} />
-          </dd>
-        </div>
+          </View>
+        </View>
       ))}
-    </dl>
+    </View>
   );
 }
 
-const styles = {
-  cells: {
+const styles = StyleSheet.create({
+  cells: webStyle({
     display: 'grid',
     gridTemplateColumns: 'repeat(auto-fill, minmax(min(150px, 100%), 1fr))',
     columnGap: 16,
     rowGap: 12,
-    margin: 0,
-  },
+  }),
   cell: { minWidth: 0 },
-  label: { fontFamily: family.label, fontSize: 18, lineHeight: '23px', color: roles.ink },
-  value: { margin: 0 },
-} as const satisfies Record<string, CSSProperties>;
+});

@@ -1,3 +1,4 @@
+import { View } from 'react-native';
 import Svg, { Defs, G, Path, Pattern, Rect, Text as SvgText } from 'react-native-svg';
 import { profileText } from '@/components/text/machines.ts';
 import { roles } from '@/components/theme/roles.ts';
@@ -24,7 +25,7 @@ export function FocusReading({ scale }: { readonly scale: FocusScale }) {
   const system = useUnitSystem();
   const typed = dialForFocus(scale, example, standoff);
   return (
-    <div aria-live="polite">
+    <View aria-live="polite">
       <Stack>
         <Heading level={3}>{text.example}</Heading>
         {typed.kind === 'ok' ? (
@@ -39,7 +40,7 @@ export function FocusReading({ scale }: { readonly scale: FocusScale }) {
         ) : null}
         <FocusLadder scale={scale} system={system} />
       </Stack>
-    </div>
+    </View>
   );
 }
 

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
+import { View } from 'react-native';
 import { machineQuery } from '@/components/data/machines.ts';
 import { useActor } from '@/components/shell/actor.tsx';
 import { NothingHere } from '@/components/shell/nothing-here.tsx';
@@ -78,9 +79,9 @@ function MachineSheet({ machine }: { readonly machine: Machine }) {
     >
       {shown === newest ? null : (
         <Notice kind="caution" title={machinesText.older(shown.number)}>
-          <div>
+          <View style={{ alignItems: 'flex-start' }}>
             <Button label={machinesText.showNewest} onPress={() => setChosen(null)} />
-          </div>
+          </View>
         </Notice>
       )}
       <Block revision={shown} />

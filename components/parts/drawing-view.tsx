@@ -59,7 +59,7 @@ export function DrawingView({
   height,
 }: DrawingViewProps) {
   const id = useId().replace(/\W/g, '');
-  const frameRef = useRef<HTMLDivElement>(null);
+  const frameRef = useRef<HTMLElement>(null);
   const width = useWidth(frameRef, 640);
   const frame = { width, height };
 
@@ -104,8 +104,11 @@ export function DrawingView({
 
   return (
     <View style={styles.sheet}>
-      <div
-        ref={frameRef}
+      <View
+        // on the web a view's host is the page's own element, whose pointers and wheel move the drawing
+        ref={(host: unknown) => {
+          frameRef.current = host instanceof HTMLElement ? host : null;
+        }}
         tabIndex={0}
         role="group"
         aria-label={drawingText.keys}
@@ -183,7 +186,7 @@ export function DrawingView({
             </G>
           ))}
         </Svg>
-      </div>
+      </View>
       <View style={styles.buttons}>
         <Button label="+" spoken={drawingText.larger} onPress={() => zoomBy(1.5)} />
         <Button label="−" spoken={drawingText.smaller} onPress={() => zoomBy(1 / 1.5)} />

@@ -12,6 +12,7 @@ import { momentText } from '@/components/text/moments.ts';
 import { partsText } from '@/components/text/parts.ts';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { LinkRow, Rows } from '@/components/ui/link-row.tsx';
+import { FileLink } from '@/components/ui/link.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
 import { Body, Small } from '@/components/ui/text.tsx';
@@ -73,9 +74,9 @@ function PartOf({ part }: { part: Part }) {
     <Page title={part.name} eyebrow={partsText.one} aside={aside} estimates>
       <PartDrawing part={part} />
       <Body>
-        <a className="cp-link" href={partFileAddress(part.id)} download={part.fileName}>
+        <FileLink address={partFileAddress(part.id)} name={part.fileName}>
           {partsText.download}
-        </a>
+        </FileLink>
       </Body>
       <Small>{`${part.addedBy.name}, ${momentText(part.addedAt)}`}</Small>
       <ReadingNotes reading={part.reading} />

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
+import { View } from 'react-native';
 import { peopleQuery } from '@/components/data/people.ts';
 import { useActor } from '@/components/shell/actor.tsx';
 import { Page } from '@/components/shell/page.tsx';
@@ -73,7 +74,7 @@ function MemberRow({ member, onChange }: { readonly member: Member; readonly onC
     ...(actor?.userId === member.userId ? [peopleText.you] : []),
   ];
   return (
-    <div style={{ padding: '12px 4px' }}>
+    <View style={{ paddingVertical: 12, paddingHorizontal: 4 }}>
       <Row justify="space-between">
         <Stack gap="hair" grow>
           <Body strong>{member.name}</Body>
@@ -82,6 +83,6 @@ function MemberRow({ member, onChange }: { readonly member: Member; readonly onC
         </Stack>
         <Button label={peopleText.change} spoken={peopleText.changeOf(member.name)} onPress={onChange} />
       </Row>
-    </div>
+    </View>
   );
 }

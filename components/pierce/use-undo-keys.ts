@@ -12,7 +12,8 @@ export function useUndoKeys(enabled: boolean, dispatch: Dispatch<{ do: 'undo' } 
       event.preventDefault();
       dispatch({ do: key === 'y' || event.shiftKey ? 'redo' : 'undo' });
     };
-    window.addEventListener('keydown', pressed);
-    return () => window.removeEventListener('keydown', pressed);
+    // on the way down: a text input of react-native-web keeps its keys to itself on the way up
+    window.addEventListener('keydown', pressed, true);
+    return () => window.removeEventListener('keydown', pressed, true);
   }, [enabled, dispatch]);
 }

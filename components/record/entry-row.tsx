@@ -1,22 +1,22 @@
 import type { Href } from 'expo-router';
+import { View } from 'react-native';
 import { momentText } from '@/components/text/moments.ts';
 import { eventText, recordText, subjectText } from '@/components/text/record.ts';
-import { roles } from '@/components/theme/roles.ts';
-import { family } from '@/components/theme/type.ts';
+import { Fold } from '@/components/ui/fold.tsx';
 import { TextLink } from '@/components/ui/link.tsx';
 import { Row, Stack } from '@/components/ui/stack.tsx';
-import { Body, Figure, Small } from '@/components/ui/text.tsx';
+import { Body, Figure, Small, Verbatim } from '@/components/ui/text.tsx';
 import type { RecordEntry } from '@/shared/record.ts';
 
 /** One entry: who did what to what, when; its facts and hash behind a fold. */
 export function EntryRow({ entry }: { readonly entry: RecordEntry }) {
   const page = pageOf(entry.subject);
   return (
-    <div style={{ padding: '12px 4px' }}>
+    <View style={{ paddingVertical: 12, paddingHorizontal: 4 }}>
       <Row align="flex-start" wrap={false} gap="l">
-        <div style={{ minWidth: 40 }}>
+        <View style={{ minWidth: 40 }}>
           <Figure value={entry.sequence} tone="softInk" />
-        </div>
+        </View>
         <Stack gap="hair" grow>
           <Body>
             <Body strong>{entry.actorName ?? recordText.somebody}</Body> {eventText(entry.event)}
@@ -27,14 +27,13 @@ export function EntryRow({ entry }: { readonly entry: RecordEntry }) {
               <TextLink href={page}>{`${recordText.open}: ${subjectText(entry.subject.kind)}`}</TextLink>
             </Small>
           )}
-          <details>
-            <summary style={styles.summary}>{recordText.facts}</summary>
-            <pre style={styles.facts}>{JSON.stringify(entry.facts, null, 2)}</pre>
+          <Fold label={recordText.facts}>
+            <Verbatim>{JSON.stringify(entry.facts, null, 2)}</Verbatim>
             <Small>{`${recordText.hash} ${entry.hash}`}</Small>
-          </details>
+          </Fold>
         </Stack>
       </Row>
-    </div>
+    </View>
   );
 }
 
@@ -61,29 +60,3 @@ function pageOf({ kind, id }: RecordEntry['subject']): Href | null {
       return null;
   }
 }
-
-const styles = {
-  summary: {
-    minHeight: 48,
-    display: 'flex',
-    alignItems: 'center',
-    cursor: 'pointer',
-    fontFamily: family.reading,
-    fontSize: 15,
-    color: roles.softInk,
-    textDecoration: 'underline',
-    textUnderlineOffset: 3,
-  },
-  facts: {
-    margin: '0 0 8px',
-    padding: 12,
-    background: roles.sheet,
-    border: `1px solid ${roles.rule}`,
-    borderRadius: 3,
-    fontSize: 14,
-    lineHeight: '20px',
-    color: roles.ink,
-    whiteSpace: 'pre-wrap',
-    overflowWrap: 'anywhere',
-  },
-} as const;

@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import { View } from 'react-native';
 import { requestsQuery } from '@/components/data/requests.ts';
 import { useActor } from '@/components/shell/actor.tsx';
 import { momentText } from '@/components/text/moments.ts';
@@ -59,7 +60,7 @@ function RequestRow({
   readonly mayBegin: boolean;
 }) {
   return (
-    <div style={{ padding: '12px 0' }}>
+    <View style={{ paddingVertical: 12 }}>
       <Stack gap="xs">
         <Body strong>
           {`${request.gradeGroup}, ${thicknessText(request.thickness, system)}, ${request.machine.name}`}
@@ -71,11 +72,11 @@ function RequestRow({
           {request.answered ? asked.answered : asked.open}
         </Small>
         {request.answered || !mayBegin ? null : (
-          <div>
+          <View style={{ alignItems: 'flex-start' }}>
             <ButtonLink href="/strategies/new" label={asked.begin} />
-          </div>
+          </View>
         )}
       </Stack>
-    </div>
+    </View>
   );
 }

@@ -1,6 +1,7 @@
 import { useState, type ReactNode } from 'react';
+import { View } from 'react-native';
 import { houseRulesText, verdictText } from '@/components/text/house-rules.ts';
-import { roles } from '@/components/theme/roles.ts';
+import type { Role } from '@/components/theme/tokens.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Mark, type MarkName } from '@/components/ui/mark.tsx';
 import { Row, Stack } from '@/components/ui/stack.tsx';
@@ -28,7 +29,7 @@ export function HouseRuleList({
     <Stack gap="s">
       {behind ? <Small strong>{houseRulesText.behind}</Small> : null}
       {amiss.length === 0 ? (
-        <Line mark="ok" tone={roles.good} spoken={verdictText.holds}>
+        <Line mark="ok" tone="good" spoken={verdictText.holds}>
           <Body>{houseRulesText.allKept(kept.length)}</Body>
         </Line>
       ) : null}
@@ -53,7 +54,7 @@ function Verdict({ verdict }: { readonly verdict: HouseRuleVerdict }) {
   const { state, sentence, expression, why } = verdict;
   const blocks = verdictBlocks(verdict);
   const mark: MarkName = state === 'holds' ? 'ok' : blocks ? 'wrong' : state === 'broken' ? 'caution' : 'plain';
-  const tone = state === 'holds' ? roles.good : blocks ? roles.wrong : state === 'broken' ? roles.hot : roles.softInk;
+  const tone = state === 'holds' ? 'good' : blocks ? 'wrong' : state === 'broken' ? 'hot' : 'softInk';
   return (
     <Line mark={mark} tone={tone} spoken={verdictText[state]}>
       <Body>{sentence}</Body>
@@ -74,15 +75,15 @@ function Line({
   children,
 }: {
   readonly mark: MarkName;
-  readonly tone: string;
+  readonly tone: Role;
   readonly spoken: string;
   readonly children: ReactNode;
 }) {
   return (
     <Row gap="m" align="flex-start" wrap={false}>
-      <span role="img" aria-label={spoken} style={{ color: tone, display: 'inline-flex', paddingTop: 1 }}>
-        <Mark name={mark} />
-      </span>
+      <View role="img" aria-label={spoken} style={{ paddingTop: 1 }}>
+        <Mark name={mark} tone={tone} />
+      </View>
       <Stack gap="hair" grow>
         {children}
       </Stack>

@@ -1,9 +1,11 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
+import { StyleSheet, View } from 'react-native';
 import { houseRuleExampleQuery } from '@/components/data/house-rules.ts';
 import { houseRulesText } from '@/components/text/house-rules.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
@@ -45,29 +47,26 @@ export function HouseRuleNames({ onPick }: { readonly onPick: (name: HouseRuleNa
             : houseRulesText.namesAt(example.data.strategyName, example.data.number)}
         </Small>
       )}
-      <ul aria-label={houseRulesText.names} style={styles.names}>
+      <View role="list" aria-label={houseRulesText.names} style={styles.names}>
         {houseRuleTable.map(({ name, meaning, example: way }) => (
-          <li key={name} style={styles.name}>
+          <View key={name} role="listitem" style={styles.name}>
             <Row justify="space-between" wrap={false}>
               <Button kind="quiet" label={name} spoken={houseRulesText.put(name)} onPress={() => onPick(name)} />
               {valueOf(name) === null ? null : <Body strong>{valueOf(name)}</Body>}
             </Row>
             <Small>{houseRulesText.as(meaning, way)}</Small>
-          </li>
+          </View>
         ))}
-      </ul>
+      </View>
     </Stack>
   );
 }
 
-const styles = {
-  names: {
-    listStyle: 'none',
-    margin: 0,
-    padding: 0,
+const styles = StyleSheet.create({
+  names: webStyle({
     display: 'grid',
     columnGap: 32,
     gridTemplateColumns: 'repeat(auto-fill, minmax(min(300px, 100%), 1fr))',
-  },
-  name: { minWidth: 0, padding: '4px 0 8px', borderTop: `1px solid ${roles.rule}` },
-} as const;
+  }),
+  name: { minWidth: 0, paddingTop: 4, paddingBottom: 8, borderTopWidth: 1, borderTopColor: roles.rule },
+});

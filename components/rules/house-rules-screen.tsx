@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
+import { View } from 'react-native';
 import { newId } from '@/components/data/call.ts';
 import {
   houseRulesQuery,
@@ -79,7 +80,7 @@ export function HouseRulesScreen() {
 
 function RuleRow({ rule, onDo }: { readonly rule: HouseRule; readonly onDo: (what: 'change' | 'end') => void }) {
   return (
-    <div style={{ padding: '12px 4px' }}>
+    <View style={{ paddingVertical: 12, paddingHorizontal: 4 }}>
       <Row justify="space-between" align="flex-start">
         <Cell least={280}>
           <Stack gap="hair">
@@ -107,13 +108,13 @@ function RuleRow({ rule, onDo }: { readonly rule: HouseRule; readonly onDo: (wha
           />
         </Row>
       </Row>
-    </div>
+    </View>
   );
 }
 
 function EndedRow({ rule }: { readonly rule: HouseRule }) {
   return (
-    <div style={{ padding: '12px 4px' }}>
+    <View style={{ paddingVertical: 12, paddingHorizontal: 4 }}>
       <Stack gap="hair">
         <Body>{rule.sentence}</Body>
         <Body tone="softInk">{rule.expression}</Body>
@@ -121,7 +122,7 @@ function EndedRow({ rule }: { readonly rule: HouseRule }) {
           <Small>{houseRulesText.endedBy(rule.changedBy.name, momentText(rule.endedAt))}</Small>
         )}
       </Stack>
-    </div>
+    </View>
   );
 }
 

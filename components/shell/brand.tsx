@@ -2,6 +2,7 @@ import Svg, { Path } from 'react-native-svg';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import { PlainLink } from '@/components/ui/link.tsx';
+import { Words } from '@/components/ui/words.tsx';
 import { common } from '@/components/text/common.ts';
 
 /** The core as the product's own mark: plate in section, three stages down the bore, the reserve running out below. */
@@ -26,21 +27,11 @@ export function BrandMark({ size = 30 }: { readonly size?: number }) {
 
 export function Brand() {
   return (
-    <PlainLink
-      href="/"
-      style={{
-        display: 'flex',
-        alignItems: 'center',
-        gap: 10,
-        minHeight: 48,
-        fontFamily: family.figure,
-        fontSize: 23,
-        lineHeight: '28px',
-        color: roles.ink,
-      }}
-    >
+    <PlainLink href="/" style={{ flexDirection: 'row', alignItems: 'center', gap: 10, minHeight: 48 }}>
       <BrandMark />
-      {common.product}
+      <Words style={{ fontFamily: family.figure, fontSize: 23, lineHeight: 28, color: roles.ink }}>
+        {common.product}
+      </Words>
     </PlainLink>
   );
 }

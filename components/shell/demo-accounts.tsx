@@ -1,5 +1,7 @@
+import { Pressable, View } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
+import { Words } from '@/components/ui/words.tsx';
 
 export type DemoAccount = { readonly mail: string; readonly role: string; readonly plant: string };
 
@@ -14,36 +16,31 @@ export function DemoAccounts({
   readonly onChoose: (account: DemoAccount) => void;
 }) {
   return (
-    <ul style={{ listStyle: 'none', margin: 0, padding: 0, borderTop: `1px solid ${roles.ink}` }}>
+    <View role="list" style={{ borderTopWidth: 1, borderTopColor: roles.ink }}>
       {accounts.map((account) => (
-        <li key={account.mail} style={{ borderBottom: `1px solid ${roles.rule}` }}>
-          <button
-            type="button"
-            className="cp-row"
+        <View key={account.mail} role="listitem" style={{ borderBottomWidth: 1, borderBottomColor: roles.rule }}>
+          <Pressable
+            role="button"
+            dataSet={{ look: 'row' }}
             aria-pressed={account.mail === chosen}
-            onClick={() => onChoose(account)}
+            onPress={() => onChoose(account)}
             style={{
-              display: 'block',
               width: '100%',
               minHeight: 56,
-              padding: '8px 8px',
-              border: 0,
-              background: account.mail === chosen ? roles.touched : 'transparent',
-              textAlign: 'left',
-              cursor: 'pointer',
-              color: roles.ink,
-              fontFamily: family.readingMedium,
-              fontSize: 17,
-              lineHeight: '22px',
+              padding: 8,
+              justifyContent: 'center',
+              backgroundColor: account.mail === chosen ? roles.touched : undefined,
             }}
           >
-            {`${account.role.slice(0, 1).toUpperCase()}${account.role.slice(1)}, ${account.plant}`}
-            <span style={{ display: 'block', fontFamily: family.reading, fontSize: 15, color: roles.softInk }}>
+            <Words style={{ fontFamily: family.readingMedium, fontSize: 17, lineHeight: 22, color: roles.ink }}>
+              {`${account.role.slice(0, 1).toUpperCase()}${account.role.slice(1)}, ${account.plant}`}
+            </Words>
+            <Words style={{ fontFamily: family.reading, fontSize: 15, lineHeight: 22, color: roles.softInk }}>
               {account.mail}
-            </span>
-          </button>
-        </li>
+            </Words>
+          </Pressable>
+        </View>
       ))}
-    </ul>
+    </View>
   );
 }

@@ -1,4 +1,5 @@
 import type { ErrorBoundaryProps } from 'expo-router';
+import { View } from 'react-native';
 import { common } from '@/components/text/common.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Notice } from '@/components/ui/notice.tsx';
@@ -13,9 +14,9 @@ export function ErrorBoundary({ error, retry }: ErrorBoundaryProps) {
         <Body>{common.unknown.detail}</Body>
         <Body tone="softInk">{error.message}</Body>
       </Notice>
-      <div>
+      <View style={{ alignItems: 'flex-start' }}>
         <Button label={common.retry} onPress={() => void retry()} />
-      </div>
+      </View>
     </Page>
   );
 }

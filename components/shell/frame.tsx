@@ -1,16 +1,19 @@
 import { usePathname } from 'expo-router';
-import { useEffect, useRef, useState, type CSSProperties, type ReactNode } from 'react';
+import { useEffect, useRef, useState, type ReactNode } from 'react';
+import { Pressable, View } from 'react-native';
 import { actorOf } from '@/components/data/sessions.ts';
 import { common } from '@/components/text/common.ts';
 import { roleNames, shell } from '@/components/text/shell.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Dialog } from '@/components/ui/dialog.tsx';
 import { Divider } from '@/components/ui/divider.tsx';
 import { PlainLink } from '@/components/ui/link.tsx';
 import { NotPrinted } from '@/components/ui/not-printed.tsx';
+import { Words } from '@/components/ui/words.tsx';
 import type { Session } from '@/shared/sessions.ts';
 import { useSession } from './actor.tsx';
 import { Brand } from './brand.tsx';
@@ -23,22 +26,22 @@ export function Frame({ children }: { readonly children: ReactNode }) {
   const session = useSession() ?? null;
   const { wide } = useLayout();
   const pathname = usePathname();
-  const main = useRef<HTMLElement>(null);
+  const main = useRef<View>(null);
   const shown = useRef(pathname);
 
   // After going to another page the reading begins there, not at the link that was followed.
   useEffect(() => {
     if (shown.current === pathname) return;
     shown.current = pathname;
-    main.current?.focus({ preventScroll: true });
+    main.current?.focus();
     window.scrollTo(0, 0);
   }, [pathname]);
 
   return (
-    <div style={{ ...styles.frame, flexDirection: wide ? 'row' : 'column' }}>
-      <a href="#content" className="cp-skip">
-        {shell.skip}
-      </a>
+    <View style={[styles.frame, { flexDirection: wide ? 'row' : 'column' }]}>
+      <View href="#content" dataSet={{ look: 'skip' }}>
+        <Words>{shell.skip}</Words>
+      </View>
       <NotPrinted>
         {session === null ? null : wide ? (
           <Rail session={session} pathname={pathname} />
@@ -46,11 +49,11 @@ export function Frame({ children }: { readonly children: ReactNode }) {
           <Bar session={session} pathname={pathname} />
         )}
       </NotPrinted>
-      <main id="content" ref={main} tabIndex={-1} style={styles.main}>
+      <View role="main" id="content" ref={main} tabIndex={-1} style={wide ? styles.beside : styles.below}>
         {children}
-      </main>
+      </View>
       {session === null ? null : <ExpiredDialog session={session} />}
-    </div>
+    </View>
   );
 }
 
@@ -59,25 +62,25 @@ type Around = { readonly session: Session; readonly pathname: string };
 function Rail({ session, pathname }: Around) {
   const [open, setOpen] = useState(false);
   return (
-    <header style={styles.rail}>
+    <View role="banner" style={styles.rail}>
       <Brand />
       <Places session={session} pathname={pathname} />
-      <div style={{ marginTop: 'auto', paddingTop: 24 }}>
-        <button
-          type="button"
+      <View style={{ marginTop: 'auto', paddingTop: 24 }}>
+        <Pressable
+          role="button"
           aria-haspopup="dialog"
-          className="cp-button cp-quiet"
+          dataSet={{ look: 'button quiet' }}
           style={styles.you}
-          onClick={() => setOpen(true)}
+          onPress={() => setOpen(true)}
         >
-          <span style={{ display: 'block' }}>{session.user.name}</span>
-          <span style={styles.whose}>{`${roleNames[session.role]}, ${session.plant.name}`}</span>
-        </button>
-      </div>
+          <Words>{session.user.name}</Words>
+          <Words style={styles.whose}>{`${roleNames[session.role]}, ${session.plant.name}`}</Words>
+        </Pressable>
+      </View>
       <Dialog title={shell.you} open={open} onClose={() => setOpen(false)} closeLabel={common.close}>
         <Settings session={session} onDone={() => setOpen(false)} />
       </Dialog>
-    </header>
+    </View>
   );
 }
 
@@ -85,7 +88,7 @@ function Bar({ session, pathname }: Around) {
   const [open, setOpen] = useState(false);
   const close = () => setOpen(false);
   return (
-    <header style={styles.bar}>
+    <View role="banner" style={styles.bar}>
       <Brand />
       <Button kind="quiet" mark="menu" label={shell.menu} expanded={open} onPress={() => setOpen(true)} />
       <Dialog title={shell.menu} open={open} onClose={close} closeLabel={shell.closeMenu}>
@@ -93,67 +96,77 @@ function Bar({ session, pathname }: Around) {
         <Divider />
         <Settings session={session} onDone={close} />
       </Dialog>
-    </header>
+    </View>
   );
 }
 
 function Places({ session, pathname, onGo }: Around & { readonly onGo?: () => void }) {
   return (
-    <nav aria-label={shell.navigation}>
-      <ul style={{ listStyle: 'none', margin: 0, padding: 0 }}>
+    <View role="navigation" aria-label={shell.navigation}>
+      <View role="list">
         {placesOf(actorOf(session)).map((place) => {
           const here = isWithin(pathname, place.path);
           return (
-            <li key={place.path}>
-              <PlainLink
-                href={place.href}
-                current={here}
-                onFollow={onGo}
-                className="cp-row"
-                style={{
-                  ...styles.place,
-                  color: here ? roles.ember : roles.ink,
-                  fontFamily: here ? family.readingStrong : family.reading,
-                }}
-              >
-                {here ? '– ' : ''}
-                {place.name}
+            <View key={place.path} role="listitem">
+              <PlainLink href={place.href} current={here} onFollow={onGo} look="row" style={styles.place}>
+                <Words
+                  style={{
+                    fontFamily: here ? family.readingStrong : family.reading,
+                    fontSize: 17,
+                    lineHeight: 24,
+                    color: here ? roles.ember : roles.ink,
+                  }}
+                >
+                  {`${here ? '– ' : ''}${place.name}`}
+                </Words>
               </PlainLink>
-            </li>
+            </View>
           );
         })}
-      </ul>
-    </nav>
+      </View>
+    </View>
   );
 }
 
+// plain objects: they are written on the element itself, above what the stylesheet says of a button
 const styles = {
-  frame: { display: 'flex', flex: '1 0 auto', minHeight: '100dvh', background: roles.ground, position: 'relative' },
-  main: { flex: '1 1 0', minWidth: 0, display: 'flex', flexDirection: 'column', outline: 'none' },
+  frame: { flexGrow: 1, ...webStyle({ minHeight: '100dvh' }), backgroundColor: roles.ground },
+  beside: { flexGrow: 1, flexShrink: 1, flexBasis: 0, minWidth: 0 },
+  below: { flexGrow: 1 },
   rail: {
     position: 'sticky',
     top: 0,
-    flex: 'none',
     width: 176,
-    height: '100dvh',
+    ...webStyle({ height: '100dvh' }),
     overflowY: 'auto',
-    display: 'flex',
-    flexDirection: 'column',
     gap: 20,
-    padding: '20px 8px 16px 20px',
+    paddingTop: 20,
+    paddingRight: 8,
+    paddingBottom: 16,
+    paddingLeft: 20,
   },
   bar: {
     position: 'sticky',
     top: 0,
     zIndex: 10,
-    display: 'flex',
+    flexDirection: 'row',
     alignItems: 'center',
     justifyContent: 'space-between',
-    padding: '4px 6px 4px 16px',
-    background: roles.ground,
-    borderBottom: `1px solid ${roles.rule}`,
+    paddingVertical: 4,
+    paddingRight: 6,
+    paddingLeft: 16,
+    backgroundColor: roles.ground,
+    borderBottomWidth: 1,
+    borderBottomColor: roles.rule,
   },
-  place: { display: 'flex', alignItems: 'center', minHeight: 48, fontSize: 17, lineHeight: '24px', paddingLeft: 2 },
-  you: { textAlign: 'left', width: '100%', padding: '8px 2px', textDecoration: 'none' },
-  whose: { display: 'block', fontFamily: family.reading, fontSize: 14, lineHeight: '18px', color: roles.softInk },
-} as const satisfies Record<string, CSSProperties>;
+  place: { flexDirection: 'row', alignItems: 'center', minHeight: 48, paddingLeft: 2 },
+  you: {
+    flexDirection: 'column',
+    alignItems: 'flex-start',
+    width: '100%',
+    paddingVertical: 8,
+    paddingHorizontal: 2,
+    ...webStyle({ textAlign: 'left', textDecorationLine: 'none' }),
+  },
+  whose: { fontFamily: family.reading, fontSize: 14, lineHeight: 18, color: roles.softInk },
+} as const;

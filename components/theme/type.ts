@@ -12,6 +12,7 @@ export const family = {
 /** Sizes in px with their line heights. Nothing below 14. */
 export const size = {
   label: { fontSize: 14, lineHeight: 18 },
+  labelLarge: { fontSize: 18, lineHeight: 23 },
   small: { fontSize: 15, lineHeight: 21 },
   body: { fontSize: 17, lineHeight: 25 },
   bodyLarge: { fontSize: 19, lineHeight: 27 },

@@ -1,5 +1,7 @@
-import type { Ref } from 'react';
+import { Pressable, View } from 'react-native';
 import { Mark, type MarkName } from './mark.tsx';
+import { SubmitButton } from './submit-button.web.tsx';
+import { Words } from './words.tsx';
 
 export type ButtonProps = {
   /** Says what happens; read aloud as well. */
@@ -19,7 +21,6 @@ export type ButtonProps = {
   readonly spoken?: string;
   readonly mark?: MarkName;
   readonly expanded?: boolean;
-  readonly ref?: Ref<HTMLButtonElement>;
 };
 
 export function Button({
@@ -34,30 +35,37 @@ export function Button({
   spoken,
   mark,
   expanded,
-  ref,
 }: ButtonProps) {
+  const look = `button ${kind} ${size}`;
+  const content = (
+    <>
+      {mark === undefined ? null : (
+        <View style={{ marginRight: 8 }}>
+          <Mark name={mark} size={20} />
+        </View>
+      )}
+      <Words>{busy ? `${label} …` : label}</Words>
+    </>
+  );
+  if (submit) {
+    return (
+      <SubmitButton look={look} onPress={onPress} disabled={disabled} busy={busy} fill={fill} spoken={spoken}>
+        {content}
+      </SubmitButton>
+    );
+  }
   return (
-    <button
-      ref={ref}
-      type={submit ? 'submit' : 'button'}
-      className={`cp-button cp-${kind} cp-${size}`}
+    <Pressable
+      role="button"
+      dataSet={{ look }}
       disabled={disabled}
-      aria-disabled={busy || undefined}
       aria-busy={busy || undefined}
       aria-label={spoken}
       aria-expanded={expanded}
-      onClick={(event) => {
-        if (!busy) return onPress?.();
-        event.preventDefault(); // also keeps a busy submit button from sending twice
-      }}
+      onPress={busy ? undefined : onPress}
       style={fill ? { width: '100%' } : undefined}
     >
-      {mark === undefined ? null : (
-        <span style={{ marginRight: 8, verticalAlign: 'middle', display: 'inline-flex' }}>
-          <Mark name={mark} size={20} />
-        </span>
-      )}
-      {busy ? `${label} …` : label}
-    </button>
+      {content}
+    </Pressable>
   );
 }

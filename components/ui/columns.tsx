@@ -1,4 +1,6 @@
 import { Children, type ReactNode } from 'react';
+import { View } from 'react-native';
+import { webStyle } from '@/components/theme/web-style.ts';
 
 /** Things beside each other as far as they fit at a least width, px; below each other on a phone. */
 export function Columns({
@@ -11,17 +13,17 @@ export function Columns({
   readonly gap?: number;
 }) {
   return (
-    <div
-      style={{
+    <View
+      style={webStyle({
         display: 'grid',
         gap,
         alignItems: 'start',
         gridTemplateColumns: `repeat(auto-fill, minmax(min(${least}px, 100%), 1fr))`,
-      }}
+      })}
     >
       {Children.map(children, (child) =>
-        child === null || child === undefined ? null : <div style={{ minWidth: 0 }}>{child}</div>,
+        child === null || child === undefined ? null : <View style={{ minWidth: 0 }}>{child}</View>,
       )}
-    </div>
+    </View>
   );
 }

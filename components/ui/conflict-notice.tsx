@@ -1,3 +1,4 @@
+import { View } from 'react-native';
 import { common } from '@/components/text/common.ts';
 import { Button } from './button.tsx';
 import { Notice } from './notice.tsx';
@@ -8,9 +9,9 @@ export function ConflictNotice({ onLoad, busy = false }: { readonly onLoad: () =
   return (
     <Notice kind="caution" title={common.conflict.title} live>
       <Body>{common.conflict.detail}</Body>
-      <div style={{ marginTop: 8 }}>
+      <View style={{ marginTop: 8, alignItems: 'flex-start' }}>
         <Button label={common.loadNewest} onPress={onLoad} busy={busy} />
-      </div>
+      </View>
     </Notice>
   );
 }

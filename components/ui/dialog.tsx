@@ -1,6 +1,8 @@
-import { useId, useLayoutEffect, useRef, type ReactNode } from 'react';
+import { useId, type ReactNode } from 'react';
+import { View } from 'react-native';
 import { space } from '@/components/theme/space.ts';
 import { Button } from './button.tsx';
+import { ModalElement } from './modal-element.web.tsx';
 import { Row, Stack } from './stack.tsx';
 import { Heading } from './text.tsx';
 
@@ -24,25 +26,9 @@ export function Dialog({
   readonly closable?: boolean;
   readonly closeLabel?: string;
 }) {
-  const ref = useRef<HTMLDialogElement>(null);
   const id = useId();
-  useLayoutEffect(() => {
-    const dialog = ref.current;
-    if (dialog === null || !open) return;
-    dialog.showModal();
-    // Before the element leaves the page, so that the browser gives the focus back to where it came from.
-    return () => dialog.close();
-  }, [open]);
   return (
-    <dialog
-      ref={ref}
-      className="cp-dialog"
-      aria-labelledby={id}
-      onCancel={(event) => {
-        event.preventDefault(); // the screen decides: it owns `open`
-        if (closable) onClose();
-      }}
-    >
+    <ModalElement open={open} labelledBy={id} onCancel={closable ? onClose : undefined}>
       {open ? (
         <Stack gap="l">
           <Heading level={2} id={id}>
@@ -50,15 +36,15 @@ export function Dialog({
           </Heading>
           {children}
           {closable || actions !== undefined ? (
-            <div style={{ marginTop: space.s }}>
+            <View style={{ marginTop: space.s }}>
               <Row justify="flex-end">
                 {closable ? <Button label={closeLabel} onPress={onClose} /> : null}
                 {actions}
               </Row>
-            </div>
+            </View>
           ) : null}
         </Stack>
       ) : null}
-    </dialog>
+    </ModalElement>
   );
 }

@@ -1,3 +1,4 @@
+import { View } from 'react-native';
 import { problemSentence } from '@/components/data/problem.ts';
 import { common } from '@/components/text/common.ts';
 import { Button } from './button.tsx';
@@ -11,9 +12,9 @@ export function ErrorNotice({ error, onRetry }: { readonly error: unknown; reado
     <Notice kind="wrong" title={sentence.title} live>
       {sentence.detail === '' ? null : <Body>{sentence.detail}</Body>}
       {onRetry === undefined ? null : (
-        <div style={{ marginTop: 8 }}>
+        <View style={{ marginTop: 8, alignItems: 'flex-start' }}>
           <Button label={common.retry} onPress={onRetry} />
-        </div>
+        </View>
       )}
     </Notice>
   );

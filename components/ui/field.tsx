@@ -1,6 +1,8 @@
-import type { CSSProperties, ReactNode } from 'react';
+import type { ReactNode } from 'react';
+import { StyleSheet, Text, View } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
+import { FieldLabel } from './field-label.web.tsx';
 
 /** Ids that tie a control to its words. */
 export const fieldIds = (id: string) => ({ hint: `${id}-hint`, error: `${id}-error` });
@@ -26,30 +28,29 @@ export function Field({
 }) {
   const ids = fieldIds(id);
   return (
-    <div style={styles.field}>
-      <label htmlFor={id} style={large ? { ...styles.label, ...largeText } : styles.label}>
+    <View style={styles.field}>
+      <FieldLabel id={id} optional={optional} large={large}>
         {label}
-        {optional ? <span style={styles.optional}> (may stay empty)</span> : null}
-      </label>
+      </FieldLabel>
       {children}
-      <span
+      <Text
         id={ids.hint}
-        style={hint === undefined || hint === '' ? undefined : large ? { ...styles.hint, ...largeText } : styles.hint}
         aria-live="polite"
+        style={hint === undefined || hint === '' ? undefined : [styles.hint, large && styles.large]}
       >
         {hint}
-      </span>
+      </Text>
       <FieldError id={ids.error} error={error} />
-    </div>
+    </View>
   );
 }
 
 /** What is wrong with a field; announced when it appears. */
 export function FieldError({ id, error }: { readonly id: string; readonly error?: string }) {
   return (
-    <span id={id} style={error === undefined ? undefined : styles.error} aria-live="polite">
+    <Text id={id} style={error === undefined ? undefined : styles.error} aria-live="polite">
       {error}
-    </span>
+    </Text>
   );
 }
 
@@ -59,16 +60,13 @@ export const describedBy = (id: string, hint: ReactNode, error: string | undefin
   return list.length === 0 ? undefined : list.join(' ');
 };
 
-const largeText = { fontSize: 18, lineHeight: '24px', color: roles.ink } as const;
-
 /** A control for a gloved hand. */
-export const largeControl = { minHeight: 64, fontSize: 24, lineHeight: '32px' } as const satisfies CSSProperties;
+export const largeControl = { minHeight: 64, fontSize: 24, lineHeight: 32 } as const;
 
-const text: CSSProperties = { marginTop: 4, fontFamily: family.reading, fontSize: 15, lineHeight: '20px' };
-const styles = {
-  field: { display: 'flex', flexDirection: 'column', minWidth: 0 },
-  label: { marginBottom: 4, fontFamily: family.readingMedium, fontSize: 16, lineHeight: '22px', color: roles.ink },
-  optional: { fontFamily: family.reading, color: roles.softInk, fontSize: 15 },
+const text = { marginTop: 4, fontFamily: family.reading, fontSize: 15, lineHeight: 20 } as const;
+const styles = StyleSheet.create({
+  field: { minWidth: 0 },
   hint: { ...text, color: roles.softInk },
+  large: { fontSize: 18, lineHeight: 24, color: roles.ink },
   error: { ...text, color: roles.wrong, fontFamily: family.readingMedium },
-} as const satisfies Record<string, CSSProperties>;
+});

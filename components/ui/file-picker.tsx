@@ -1,8 +1,11 @@
-import { useEffect, useId, useRef, useState, type ReactNode } from 'react';
+import { useId, type ReactNode } from 'react';
+import { StyleSheet, Text, View } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 import { Button } from './button.tsx';
 import { describedBy, Field } from './field.tsx';
+import { FileDrop, Preview } from './file-drop.web.tsx';
 import { Mark } from './mark.tsx';
 
 export type FilePickerProps = {
@@ -69,7 +72,6 @@ function Picker({
   readonly picture?: boolean;
 }) {
   const id = useId();
-  const [over, setOver] = useState(false);
   const shownError =
     file !== null && maxBytes !== undefined && !fits(file, maxBytes)
       ? `“${file.name}” has ${fileSize(file.size)}; at most ${fileSize(maxBytes)} are taken. ${tooLarge}`.trim()
@@ -82,88 +84,49 @@ function Picker({
 
   return (
     <Field id={id} label={label} hint={hint} error={shownError} optional={optional}>
-      <div
-        onDragOver={(event) => {
-          event.preventDefault();
-          setOver(true);
-        }}
-        onDragLeave={() => setOver(false)}
-        onDrop={(event) => {
-          event.preventDefault();
-          setOver(false);
-          if (disabled !== true) take(event.dataTransfer.files[0]);
-        }}
-        style={{
-          position: 'relative',
-          border: `${over ? 2 : 1}px ${file === null ? 'dashed' : 'solid'} ${shownError === undefined ? roles.ink : roles.wrong}`,
-          borderRadius: 3,
-          background: over ? roles.touched : roles.sheet,
-          padding: 12,
-          minHeight: 72,
-          display: 'flex',
-          flexWrap: 'wrap',
-          alignItems: 'center',
-          gap: 12,
-          fontFamily: family.reading,
-          fontSize: 17,
-          lineHeight: '24px',
-          color: roles.ink,
-        }}
+      <FileDrop
+        id={id}
+        accept={accept}
+        disabled={disabled}
+        invalid={shownError !== undefined}
+        describedBy={describedBy(id, hint, shownError)}
+        filled={file !== null}
+        over={
+          file === null ? null : (
+            <Button kind="quiet" label="Remove" spoken={`Remove ${file.name}`} onPress={() => onChange(null)} />
+          )
+        }
+        onFile={take}
       >
         {picture && file !== null ? <Preview file={file} /> : <Mark name={picture ? 'picture' : 'file'} size={28} />}
-        <span style={{ flex: '1 1 160px', minWidth: 0, overflowWrap: 'anywhere' }}>
+        <View style={styles.words}>
           {file === null ? (
-            <>
-              <span style={{ fontFamily: family.readingMedium }}>{words.choose}</span> {words.or}
-            </>
+            <Text style={styles.main}>
+              <Text style={styles.strong}>{words.choose}</Text> {words.or}
+            </Text>
           ) : (
             <>
-              <span style={{ fontFamily: family.readingMedium }}>{file.name}</span>
-              <span style={{ display: 'block', fontSize: 15, color: roles.softInk }}>
+              <Text style={[styles.main, styles.strong]}>{file.name}</Text>
+              <Text style={styles.size}>
                 {fileSize(file.size)}. {words.other}
-              </span>
+              </Text>
             </>
           )}
-        </span>
-        <input
-          id={id}
-          type="file"
-          accept={accept}
-          disabled={disabled}
-          aria-invalid={shownError !== undefined}
-          aria-describedby={describedBy(id, hint, shownError)}
-          onChange={(event) => {
-            take(event.target.files?.[0]);
-            event.target.value = ''; // so that the same file can be chosen again after it was mended
-          }}
-          style={{ position: 'absolute', inset: 0, width: '100%', height: '100%', opacity: 0, cursor: 'pointer' }}
-        />
-        {file === null ? null : (
-          <span style={{ position: 'relative' }}>
-            <Button kind="quiet" label="Remove" spoken={`Remove ${file.name}`} onPress={() => onChange(null)} />
-          </span>
-        )}
-      </div>
+        </View>
+      </FileDrop>
     </Field>
   );
 }
 
-function Preview({ file }: { readonly file: File }) {
-  const image = useRef<HTMLImageElement>(null);
-  const [unreadable, setUnreadable] = useState<File | null>(null);
-  useEffect(() => {
-    const made = URL.createObjectURL(file);
-    if (image.current !== null) image.current.src = made;
-    return () => URL.revokeObjectURL(made);
-  }, [file]);
-  // A picture that this browser can't show may still be one that the server can read.
-  if (unreadable === file) return <Mark name="picture" size={28} />;
-  return (
-    <img
-      ref={image}
-      alt=""
-      onError={() => setUnreadable(file)}
-      style={{ width: 96, height: 72, objectFit: 'cover', borderRadius: 2 }}
-    />
-  );
-}
+const styles = StyleSheet.create({
+  words: { flexGrow: 1, flexShrink: 1, flexBasis: 160, minWidth: 0 },
+  main: {
+    fontFamily: family.reading,
+    fontSize: 17,
+    lineHeight: 24,
+    color: roles.ink,
+    ...webStyle({ overflowWrap: 'anywhere' }),
+  },
+  strong: { fontFamily: family.readingMedium },
+  size: { fontFamily: family.reading, fontSize: 15, lineHeight: 24, color: roles.softInk },
+});

@@ -1,5 +1,7 @@
 import type { ReactNode } from 'react';
+import { View } from 'react-native';
 import { space } from '@/components/theme/space.ts';
+import { FormElement } from './form-element.web.tsx';
 
 /** Fields that are sent together: Enter sends, and password managers know it for a form. */
 export function Form({
@@ -12,17 +14,8 @@ export function Form({
   readonly label?: string;
 }) {
   return (
-    <form
-      noValidate
-      aria-label={label}
-      onSubmit={(event) => {
-        event.preventDefault();
-        event.stopPropagation(); // a form in a dialog stands inside the page's form in React's tree
-        onSubmit();
-      }}
-      style={{ display: 'flex', flexDirection: 'column', gap: space.l, margin: 0 }}
-    >
-      {children}
-    </form>
+    <FormElement label={label} onSubmit={onSubmit}>
+      <View style={{ gap: space.l }}>{children}</View>
+    </FormElement>
   );
 }

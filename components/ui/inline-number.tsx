@@ -1,7 +1,9 @@
-import { useId, useState, type CSSProperties } from 'react';
+import { useId, useRef, useState } from 'react';
+import { Pressable, StyleSheet, Text, TextInput, View } from 'react-native';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 import { quantityParse, quantityText, type Dimension } from '@/strategy/units/index.ts';
 import { usualUnit, useUnitSystem } from './unit-system.ts';
 
@@ -38,6 +40,7 @@ export function InlineNumber({
   onFocus,
 }: InlineNumberProps) {
   const id = useId();
+  const input = useRef<TextInput>(null);
   const system = useUnitSystem();
   // a finger's height on a phone, a line's on a desk
   const minHeight = useLayout().wide ? 38 : 48;
@@ -54,10 +57,10 @@ export function InlineNumber({
   }
   if (readOnly) {
     return (
-      <span style={styles.fixed}>
-        {written(value)}
+      <View style={[styles.flow, styles.fixed]}>
+        <Text style={styles.figure}>{written(value)}</Text>
         <Unit unit={unit} />
-      </span>
+      </View>
     );
   }
   const parsed = quantityParse(typed.text, dimension, unit);
@@ -65,19 +68,26 @@ export function InlineNumber({
   const understood = parsed.kind === 'ok' && !plain ? parsed.understood : undefined;
   const note = error ?? understood;
   return (
-    <span style={styles.whole}>
-      <label style={{ ...styles.box, ...(error === undefined ? {} : styles.boxWrong), minHeight }}>
-        <input
+    <View style={[styles.flow, styles.whole]}>
+      {/* as wide as what is typed, with the unit: a press on any of it leads into the field */}
+      <Pressable
+        tabIndex={-1}
+        onPress={() => input.current?.focus()}
+        style={[styles.box, underline(error === undefined), { minHeight }]}
+      >
+        <TextInput
+          ref={input}
           aria-label={`${label}, ${unit}`}
           aria-invalid={error !== undefined}
           aria-describedby={note === undefined ? undefined : id}
-          type="text"
           inputMode={dimension === 'length' && system === 'inch' ? 'text' : 'decimal'}
           autoComplete="off"
+          autoCapitalize="none"
+          spellCheck={false}
           value={typed.text}
+          blurOnSubmit={false}
           onFocus={onFocus}
-          onChange={(event) => {
-            const text = event.target.value;
+          onChangeText={(text) => {
             const next = quantityParse(text, dimension, unit);
             if (next.kind === 'ok') {
               setTyped({ text, value: next.value, unit });
@@ -88,67 +98,71 @@ export function InlineNumber({
               onUnread(text);
             }
           }}
-          style={{ ...styles.input, minHeight, width: `calc(${Math.min(16, Math.max(1, typed.text.length))}ch + 5px)` }}
+          style={[
+            styles.figure,
+            styles.input,
+            { minHeight },
+            webStyle({ width: `calc(${Math.min(16, Math.max(1, typed.text.length))}ch + 5px)` }),
+          ]}
         />
         <Unit unit={unit} />
-      </label>
-      <span
+      </Pressable>
+      <Text
         id={id}
         aria-live="polite"
         style={note === undefined ? undefined : error === undefined ? styles.note : styles.wrong}
       >
         {note}
-      </span>
-    </span>
+      </Text>
+    </View>
   );
 }
 
 /** A degree sign stands close, a factor has none. */
 function Unit({ unit }: { readonly unit: string }) {
   if (unit === '×') return null;
-  return <span style={{ ...styles.unit, ...(unit === '°' ? { paddingLeft: 0 } : {}) }}>{unit}</span>;
+  return <Text style={[styles.unit, unit === '°' && styles.close]}>{unit}</Text>;
 }
 
-const figure: CSSProperties = {
-  fontFamily: family.figure,
-  fontSize: 19,
-  lineHeight: '26px',
-  color: roles.ink,
-  fontVariantNumeric: 'tabular-nums',
-};
-const styles = {
-  whole: { display: 'inline-flex', flexDirection: 'column', maxWidth: '100%', verticalAlign: 'middle' },
-  box: {
-    display: 'inline-flex',
-    alignSelf: 'flex-start',
-    alignItems: 'center',
-    cursor: 'text',
-    // the underline stands close below the figures, not at the edge of what is touched
-    backgroundImage: `repeating-linear-gradient(90deg, ${roles.ember} 0 2px, transparent 2px 5px)`,
+// the underline stands close below the figures, not at the edge of what is touched; written on the element itself, since
+// react-native-web's own classes take single values alone
+const underline = (right: boolean) =>
+  webStyle({
+    backgroundImage: right
+      ? `repeating-linear-gradient(90deg, ${roles.ember} 0 2px, transparent 2px 5px)`
+      : `linear-gradient(${roles.wrong}, ${roles.wrong})`,
     backgroundSize: '100% 2px',
     backgroundPosition: 'left calc(50% + 14px)',
     backgroundRepeat: 'no-repeat',
+  });
+
+const styles = StyleSheet.create({
+  flow: webStyle({ display: 'inline-flex', verticalAlign: 'middle' }),
+  whole: { flexDirection: 'column', maxWidth: '100%' },
+  box: {
+    flexDirection: 'row',
+    alignSelf: 'flex-start',
+    alignItems: 'center',
+    ...webStyle({ cursor: 'text' }),
   },
-  boxWrong: { backgroundImage: `linear-gradient(${roles.wrong}, ${roles.wrong})` },
-  input: {
-    ...figure,
-    padding: '0 2px',
-    border: 0,
-    borderRadius: 0,
-    background: 'transparent',
-    textAlign: 'right',
-    appearance: 'none',
-    margin: 0,
+  figure: {
+    fontFamily: family.figure,
+    fontSize: 19,
+    lineHeight: 26,
+    color: roles.ink,
+    fontVariant: ['tabular-nums'],
   },
+  input: { paddingHorizontal: 2, textAlign: 'right' },
   unit: {
     fontFamily: family.label,
     fontSize: 17,
-    lineHeight: '26px',
+    lineHeight: 26,
     color: roles.ink,
     paddingLeft: 3,
-    whiteSpace: 'nowrap',
+    ...webStyle({ whiteSpace: 'nowrap' }),
   },
-  fixed: { ...figure, whiteSpace: 'nowrap', display: 'inline-flex', alignItems: 'center' },
-  note: { fontFamily: family.reading, fontSize: 15, lineHeight: '20px', color: roles.softInk, maxWidth: 260 },
-  wrong: { fontFamily: family.readingMedium, fontSize: 15, lineHeight: '20px', color: roles.wrong, maxWidth: 260 },
-} as const satisfies Record<string, CSSProperties>;
+  close: { paddingLeft: 0 },
+  fixed: { flexDirection: 'row', alignItems: 'center' },
+  note: { fontFamily: family.reading, fontSize: 15, lineHeight: 20, color: roles.softInk, maxWidth: 260 },
+  wrong: { fontFamily: family.readingMedium, fontSize: 15, lineHeight: 20, color: roles.wrong, maxWidth: 260 },
+});

@@ -22,7 +22,7 @@ export function LinkRow({
   readonly spoken?: string;
 }) {
   return (
-    <PlainLink href={href} className="cp-row" spoken={spoken} style={{ display: 'flex', width: '100%' }}>
+    <PlainLink href={href} look="row" spoken={spoken} style={{ flexDirection: 'row', width: '100%' }}>
       <View
         style={{
           flex: 1,
@@ -38,9 +38,7 @@ export function LinkRow({
         {left}
         <View style={{ flex: 1, minWidth: 0, gap: 2 }}>{children}</View>
         {right}
-        <span style={{ color: roles.softInk, display: 'inline-flex' }}>
-          <Mark name="forward" size={18} />
-        </span>
+        <Mark name="forward" size={18} tone="softInk" />
       </View>
     </PlainLink>
   );
@@ -49,14 +47,18 @@ export function LinkRow({
 /** A list of rows with a rule between them. */
 export function Rows({ children, label }: { readonly children: readonly ReactNode[]; readonly label: string }) {
   return (
-    <ul aria-label={label} style={{ listStyle: 'none', margin: 0, padding: 0, borderTop: `1px solid ${roles.ink}` }}>
+    <View role="list" aria-label={label} style={{ borderTopWidth: 1, borderTopColor: roles.ink }}>
       {children.map((child, index) => (
         // Rows keep the keys of their own children; the place in the list is theirs alone.
-        <li key={keyOf(child) ?? index} style={{ borderBottom: `1px solid ${roles.rule}` }}>
+        <View
+          key={keyOf(child) ?? index}
+          role="listitem"
+          style={{ borderBottomWidth: 1, borderBottomColor: roles.rule }}
+        >
           {child}
-        </li>
+        </View>
       ))}
-    </ul>
+    </View>
   );
 }
 

@@ -1,21 +1,14 @@
 import { Link, type Href } from 'expo-router';
-import type { AnchorHTMLAttributes, CSSProperties, ReactNode, Ref } from 'react';
-
-type AnchorProps = AnchorHTMLAttributes<HTMLAnchorElement> & {
-  readonly ref?: Ref<HTMLAnchorElement>;
-  /** What the router hands to native parts; on the web it hands `onClick` too. */
-  readonly onPress?: unknown;
-};
-
-function Anchor({ onPress: _native, children, ...rest }: AnchorProps) {
-  return <a {...rest}>{children}</a>;
-}
+import type { ReactNode } from 'react';
+import { StyleSheet, Text, View, type StyleProp, type ViewStyle } from 'react-native';
+import { Words } from './words.tsx';
 
 export type PlainLinkProps = {
   readonly href: Href;
   readonly children: ReactNode;
-  readonly className?: string;
-  readonly style?: CSSProperties;
+  /** Its hooks in the stylesheet. */
+  readonly look?: string;
+  readonly style?: StyleProp<ViewStyle>;
   /** Name of the link when its content reads badly aloud. */
   readonly spoken?: string;
   /** It leads to the page one is on. */
@@ -25,12 +18,18 @@ export type PlainLinkProps = {
 };
 
 /** A link as the browser knows it; its look is the caller's. */
-export function PlainLink({ href, children, className, style, spoken, current = false, onFollow }: PlainLinkProps) {
+export function PlainLink({ href, children, look, style, spoken, current = false, onFollow }: PlainLinkProps) {
   return (
     <Link href={href} asChild onPress={onFollow}>
-      <Anchor className={className} style={style} aria-label={spoken} aria-current={current ? 'page' : undefined}>
+      <View
+        dataSet={{ look }}
+        // flat: the router merges it as an object
+        style={StyleSheet.flatten(style)}
+        aria-label={spoken}
+        aria-current={current ? 'page' : undefined}
+      >
         {children}
-      </Anchor>
+      </View>
     </Link>
   );
 }
@@ -38,9 +37,26 @@ export function PlainLink({ href, children, className, style, spoken, current = 
 /** A link within words. */
 export function TextLink({ href, children }: { readonly href: Href; readonly children: ReactNode }) {
   return (
-    <PlainLink href={href} className="cp-link">
+    <Link href={href} asChild>
+      <Text dataSet={{ look: 'link' }}>{children}</Text>
+    </Link>
+  );
+}
+
+/** A file of the server's to keep, under its name. */
+export function FileLink({
+  address,
+  name,
+  children,
+}: {
+  readonly address: string;
+  readonly name: string;
+  readonly children: ReactNode;
+}) {
+  return (
+    <Text href={address} hrefAttrs={{ download: name }} dataSet={{ look: 'link' }}>
       {children}
-    </PlainLink>
+    </Text>
   );
 }
 
@@ -63,16 +79,11 @@ export function ButtonLink({
   return (
     <PlainLink
       href={href}
-      className={`cp-button cp-${kind} cp-${size}`}
-      style={{
-        display: fill ? 'flex' : 'inline-flex',
-        alignItems: 'center',
-        justifyContent: 'center',
-        width: fill ? '100%' : undefined,
-      }}
+      look={`button ${kind} ${size}`}
+      style={fill ? { width: '100%' } : undefined}
       onFollow={onFollow}
     >
-      {label}
+      <Words>{label}</Words>
     </PlainLink>
   );
 }

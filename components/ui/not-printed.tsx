@@ -1,10 +1,11 @@
 import type { ReactNode } from 'react';
+import { View } from 'react-native';
 
 /** Left out on paper; on the screen as if it were not there. */
 export function NotPrinted({ children }: { readonly children: ReactNode }) {
   return (
-    <div data-print="hide" style={{ display: 'contents' }}>
+    <View dataSet={{ print: 'hide' }} style={{ display: 'contents' }}>
       {children}
-    </div>
+    </View>
   );
 }

@@ -38,9 +38,9 @@ export function Notice({
         backgroundColor: roles.sheet,
       }}
     >
-      <span style={{ color: roles[tone[kind]], display: 'inline-flex', paddingTop: 1 }}>
-        <Mark name={kind} />
-      </span>
+      <View style={{ paddingTop: 1 }}>
+        <Mark name={kind} tone={tone[kind]} />
+      </View>
       <View style={{ flex: 1, minWidth: 0, gap: space.xs }}>
         {title === undefined ? null : (
           <Body strong large={large}>

@@ -1,4 +1,5 @@
 import { useId, useState, type ReactNode, type Ref } from 'react';
+import { StyleSheet, Text, TextInput, View, type TextStyle } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import { quantityParse, quantityText, type Dimension } from '@/strategy/units/index.ts';
@@ -22,7 +23,7 @@ export type NumberFieldProps = {
   readonly name?: string;
   /** For a gloved hand: taller, with larger letters. */
   readonly large?: boolean;
-  readonly ref?: Ref<HTMLInputElement>;
+  readonly ref?: Ref<TextInput>;
 };
 
 /**
@@ -64,22 +65,22 @@ export function NumberField(props: NumberFieldProps) {
 
   return (
     <Field id={id} label={label} hint={shownHint} error={shownError} optional={optional} large={large}>
-      <span style={{ position: 'relative', display: 'block' }}>
-        <input
+      <View>
+        <TextInput
           id={id}
           ref={ref}
-          name={name}
-          className="cp-control"
+          dataSet={{ look: 'control', field: name }}
           // A full keyboard is needed for fractions and units, so the field is text; phones show digits first.
-          type="text"
           inputMode={dimension === 'length' && system === 'inch' ? 'text' : 'decimal'}
           autoComplete="off"
+          autoCapitalize="none"
+          spellCheck={false}
           disabled={disabled}
           value={typed.text}
           aria-invalid={shownError !== undefined}
           aria-describedby={`${describedBy(id, shownHint, shownError) ?? ''} ${id}-unit`.trim()}
-          onChange={(event) => {
-            const text = event.target.value;
+          blurOnSubmit={false}
+          onChangeText={(text) => {
             const next = text.trim() === '' ? null : quantityParse(text, dimension, unit);
             const si = next === null ? null : next.kind === 'ok' ? next.value : Number.NaN;
             setTyped({ text, value: si, unit });
@@ -89,32 +90,27 @@ export function NumberField(props: NumberFieldProps) {
             setLeft(true);
             onBlur?.();
           }}
-          style={{
-            paddingRight: 76,
-            fontFamily: family.figure,
-            fontSize: 19,
-            fontVariantNumeric: 'tabular-nums',
-            ...(large ? largeControl : {}),
-          }}
+          style={[figure, large && largeControl]}
         />
-        <span
-          id={`${id}-unit`}
-          style={{
-            position: 'absolute',
-            right: 13,
-            top: 0,
-            bottom: 0,
-            display: 'flex',
-            alignItems: 'center',
-            pointerEvents: 'none',
-            fontFamily: family.label,
-            fontSize: 17,
-            color: roles.softInk,
-          }}
-        >
-          {unit}
-        </span>
-      </span>
+        <View style={styles.place}>
+          <Text id={`${id}-unit`} style={styles.unit}>
+            {unit}
+          </Text>
+        </View>
+      </View>
     </Field>
   );
 }
+
+// a plain object is written on the element itself, above the stylesheet's look of a control
+const figure = {
+  paddingRight: 76,
+  fontFamily: family.figure,
+  fontSize: 19,
+  fontVariant: ['tabular-nums'],
+} satisfies TextStyle;
+
+const styles = StyleSheet.create({
+  place: { position: 'absolute', right: 13, top: 0, bottom: 0, justifyContent: 'center', pointerEvents: 'none' },
+  unit: { fontFamily: family.label, fontSize: 17, lineHeight: 24, color: roles.softInk },
+});

@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import { Image, View } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import { Notice } from './notice.tsx';
 
@@ -21,16 +22,14 @@ export function Picture({
   const [failed, setFailed] = useState(false);
   if (failed) return <Notice kind="wrong">{lost}</Notice>;
   return (
-    <a href={address} target="_blank" rel="noreferrer" style={{ display: 'block' }}>
-      <img
-        src={address}
-        alt={words}
-        width={width}
-        height={height}
-        loading="lazy"
+    <View href={address} hrefAttrs={{ target: '_blank', rel: 'noreferrer' }}>
+      <Image
+        role="img"
+        aria-label={words}
+        source={{ uri: address }}
         onError={() => setFailed(true)}
-        style={{ display: 'block', width: '100%', maxWidth: width, height: 'auto', background: roles.steelFill }}
+        style={{ width: '100%', maxWidth: width, aspectRatio: width / height, backgroundColor: roles.steelFill }}
       />
-    </a>
+    </View>
   );
 }

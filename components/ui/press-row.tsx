@@ -1,4 +1,5 @@
-import type { CSSProperties, ReactNode } from 'react';
+import type { ReactNode } from 'react';
+import { Pressable, StyleSheet, View } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 
 /** A row of a list that chooses something on the same page; at least 56 px high. */
@@ -19,40 +20,34 @@ export function PressRow({
   readonly onPress: () => void;
 }) {
   return (
-    <button
-      type="button"
-      className="cp-row"
+    <Pressable
+      role="button"
+      dataSet={{ look: 'row' }}
       aria-pressed={chosen}
       aria-label={spoken}
-      onClick={onPress}
-      style={{
-        ...styles.row,
-        borderLeft: `4px solid ${chosen ? roles.ember : 'transparent'}`,
-        ...(chosen ? { background: roles.touched } : {}),
-      }}
+      onPress={onPress}
+      style={[styles.row, chosen && styles.chosen]}
     >
       {left}
-      <span style={styles.middle}>{children}</span>
+      <View style={styles.middle}>{children}</View>
       {right}
-    </button>
+    </Pressable>
   );
 }
 
-const styles = {
+const styles = StyleSheet.create({
   row: {
-    display: 'flex',
+    flexDirection: 'row',
     alignItems: 'center',
     gap: 12,
     width: '100%',
     minHeight: 56,
-    padding: '8px 4px 8px 8px',
-    margin: 0,
-    border: 0,
-    background: 'transparent',
-    color: roles.ink,
-    textAlign: 'left',
-    font: 'inherit',
-    cursor: 'pointer',
+    paddingVertical: 8,
+    paddingRight: 4,
+    paddingLeft: 8,
+    borderLeftWidth: 4,
+    borderLeftColor: 'transparent',
   },
-  middle: { flex: 1, minWidth: 0, display: 'flex', flexDirection: 'column', gap: 2 },
-} as const satisfies Record<string, CSSProperties>;
+  chosen: { borderLeftColor: roles.ember, backgroundColor: roles.touched },
+  middle: { flex: 1, minWidth: 0, gap: 2 },
+});

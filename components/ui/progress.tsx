@@ -1,4 +1,5 @@
 import { useId } from 'react';
+import { StyleSheet, Text, View } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 
@@ -6,23 +7,29 @@ import { family } from '@/components/theme/type.ts';
 export function Progress({ label, value }: { readonly label: string; readonly value?: number }) {
   const id = useId();
   return (
-    <div role="status" style={{ display: 'flex', flexDirection: 'column', gap: 6 }}>
-      <span id={id} style={{ fontFamily: family.reading, fontSize: 15, lineHeight: '20px', color: roles.softInk }}>
+    <View role="status" style={{ gap: 6 }}>
+      <Text id={id} style={styles.label}>
         {label}
-      </span>
-      <div
+      </Text>
+      <View
         role="progressbar"
         aria-labelledby={id}
         aria-valuemin={0}
         aria-valuemax={100}
         aria-valuenow={value === undefined ? undefined : Math.round(value * 100)}
-        style={{ height: 4, background: roles.rule, overflow: 'hidden' }}
+        style={styles.track}
       >
-        <div
-          className={value === undefined ? 'cp-running' : undefined}
-          style={{ height: 4, background: roles.ink, width: value === undefined ? '33%' : `${value * 100}%` }}
+        <View
+          dataSet={{ look: value === undefined ? 'running' : undefined }}
+          style={[styles.bar, { width: value === undefined ? '33%' : `${value * 100}%` }]}
         />
-      </div>
-    </div>
+      </View>
+    </View>
   );
 }
+
+const styles = StyleSheet.create({
+  label: { fontFamily: family.reading, fontSize: 15, lineHeight: 20, color: roles.softInk },
+  track: { height: 4, backgroundColor: roles.rule, overflow: 'hidden' },
+  bar: { height: 4, backgroundColor: roles.ink },
+});

@@ -1,11 +1,13 @@
-import type { CSSProperties, ReactNode } from 'react';
+import type { ReactNode } from 'react';
+import { Pressable, StyleSheet, Text } from 'react-native';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 
 /** Words and numbers in one flow: what an `InlineNumber` stands in. */
 export function Sentence({ children }: { readonly children: ReactNode }) {
-  return <div style={styles.sentence}>{children}</div>;
+  return <Text style={styles.sentence}>{children}</Text>;
 }
 
 /** Words of a sentence in a second voice: what follows from the numbers. */
@@ -16,7 +18,7 @@ export function Aside({
   readonly children: ReactNode;
   readonly tone?: 'softInk' | 'cold' | 'hot';
 }) {
-  return <span style={{ ...styles.aside, color: roles[tone] }}>{children}</span>;
+  return <Text style={[styles.aside, { color: roles[tone] }]}>{children}</Text>;
 }
 
 /** A small press within a sentence, as tall as a finger. */
@@ -30,39 +32,39 @@ export function InlineButton({
   readonly onPress: () => void;
 }) {
   return (
-    <button
-      type="button"
+    <Pressable
+      role="button"
       aria-label={spoken}
-      onClick={onPress}
-      style={{ ...styles.button, minHeight: useLayout().wide ? 38 : 48 }}
+      onPress={onPress}
+      style={[styles.button, { minHeight: useLayout().wide ? 38 : 48 }]}
     >
-      {label}
-    </button>
+      <Text style={styles.words}>{label}</Text>
+    </Pressable>
   );
 }
 
-const styles = {
+const styles = StyleSheet.create({
   sentence: {
     fontFamily: family.reading,
     fontSize: 17,
-    lineHeight: '26px',
+    lineHeight: 26,
     color: roles.ink,
-    overflowWrap: 'anywhere',
+    ...webStyle({ overflowWrap: 'anywhere', whiteSpace: 'normal' }),
   },
   aside: { fontFamily: family.reading, fontSize: 16 },
   button: {
+    minWidth: 44,
+    paddingHorizontal: 8,
+    justifyContent: 'center',
+    ...webStyle({ display: 'inline-flex', verticalAlign: 'middle' }),
+  },
+  words: {
     fontFamily: family.reading,
     fontSize: 15,
-    lineHeight: '20px',
+    lineHeight: 20,
     color: roles.softInk,
-    background: 'transparent',
-    border: 0,
-    minWidth: 44,
-    padding: '0 8px',
-    margin: 0,
-    textDecoration: 'underline',
-    textUnderlineOffset: 4,
-    verticalAlign: 'middle',
-    cursor: 'pointer',
+    textAlign: 'center',
+    textDecorationLine: 'underline',
+    ...webStyle({ textUnderlineOffset: 4 }),
   },
-} as const satisfies Record<string, CSSProperties>;
+});

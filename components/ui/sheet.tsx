@@ -1,4 +1,5 @@
-import type { CSSProperties, ReactNode } from 'react';
+import type { ReactNode } from 'react';
+import { StyleSheet, Text, View } from 'react-native';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
@@ -15,37 +16,51 @@ export type SheetCell = {
 export function Sheet({ cells, label }: { readonly cells: readonly SheetCell[]; readonly label?: string }) {
   const { wide } = useLayout();
   return (
-    <dl aria-label={label} style={{ ...styles.block, flexDirection: wide ? 'row' : 'column' }}>
+    <View role="list" aria-label={label} style={[styles.block, { flexDirection: wide ? 'row' : 'column' }]}>
       {cells.map((cell, index) => (
-        <div
+        <View
           key={cell.label}
-          style={{
-            ...styles.cell,
-            ...(wide ? { flex: `${cell.share ?? 1} 1 0`, display: 'block' } : styles.stacked),
-            ...(index === 0 ? {} : wide ? { borderLeft: edge } : { borderTop: `1px solid ${roles.rule}` }),
-          }}
+          role="listitem"
+          style={[
+            styles.cell,
+            wide ? { flexGrow: cell.share ?? 1, flexShrink: 1, flexBasis: 0 } : styles.stacked,
+            index > 0 && (wide ? styles.beside : styles.below),
+          ]}
         >
-          <dt style={styles.label}>{cell.label}</dt>
-          <dd style={{ ...styles.value, textAlign: wide ? 'left' : 'right' }}>{cell.value}</dd>
-        </div>
+          <Text role="term" style={styles.label}>
+            {cell.label}
+          </Text>
+          {typeof cell.value === 'string' || typeof cell.value === 'number' ? (
+            <Text role="definition" style={[styles.value, { textAlign: wide ? 'left' : 'right' }]}>
+              {cell.value}
+            </Text>
+          ) : (
+            <View
+              role="definition"
+              style={{ minWidth: 0, flexShrink: 1, alignItems: wide ? 'flex-start' : 'flex-end' }}
+            >
+              {cell.value}
+            </View>
+          )}
+        </View>
       ))}
-    </dl>
+    </View>
   );
 }
 
-const edge = `1px solid ${roles.ink}`;
-const styles = {
-  block: { display: 'flex', margin: 0, border: edge, borderRadius: 3, background: roles.sheet },
-  cell: { padding: '9px 12px', minWidth: 0 },
-  stacked: { display: 'flex', justifyContent: 'space-between', alignItems: 'baseline', gap: 16 },
-  label: { fontFamily: family.label, fontSize: 14, lineHeight: '18px', color: roles.softInk },
+const styles = StyleSheet.create({
+  block: { borderWidth: 1, borderColor: roles.ink, borderRadius: 3, backgroundColor: roles.sheet },
+  cell: { paddingVertical: 9, paddingHorizontal: 12, minWidth: 0 },
+  stacked: { flexDirection: 'row', justifyContent: 'space-between', alignItems: 'baseline', gap: 16 },
+  beside: { borderLeftWidth: 1, borderLeftColor: roles.ink },
+  below: { borderTopWidth: 1, borderTopColor: roles.rule },
+  label: { fontFamily: family.label, fontSize: 14, lineHeight: 18, color: roles.softInk },
   value: {
-    margin: 0,
+    flexShrink: 1,
     fontFamily: family.figure,
     fontSize: 20,
-    lineHeight: '25px',
+    lineHeight: 25,
     color: roles.ink,
-    fontVariantNumeric: 'tabular-nums',
-    overflowWrap: 'anywhere',
+    fontVariant: ['tabular-nums'],
   },
-} as const satisfies Record<string, CSSProperties>;
+});

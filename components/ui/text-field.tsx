@@ -1,4 +1,6 @@
-import { useId, type InputHTMLAttributes, type ReactNode, type Ref } from 'react';
+import { useId, type ReactNode, type Ref } from 'react';
+import { TextInput, type TextInputProps } from 'react-native';
+import { webStyle } from '@/components/theme/web-style.ts';
 import { describedBy, Field, largeControl } from './field.tsx';
 
 export type TextFieldProps = {
@@ -13,16 +15,16 @@ export type TextFieldProps = {
   readonly kind?: 'text' | 'mail' | 'password' | 'search';
   /** Several lines. */
   readonly rows?: number;
-  readonly autoComplete?: InputHTMLAttributes<HTMLInputElement>['autoComplete'];
+  readonly autoComplete?: TextInputProps['autoComplete'];
   readonly autoCapitalize?: 'none' | 'characters' | 'sentences';
   readonly placeholder?: string;
   readonly name?: string;
   /** For a gloved hand: taller, with larger letters. */
   readonly large?: boolean;
-  readonly ref?: Ref<HTMLInputElement & HTMLTextAreaElement>;
+  readonly ref?: Ref<TextInput>;
 };
 
-const inputType = { text: 'text', mail: 'email', password: 'password', search: 'search' } as const;
+const inputMode = { text: undefined, mail: 'email', password: undefined, search: 'search' } as const;
 
 /** A field for words. */
 export function TextField({
@@ -44,38 +46,31 @@ export function TextField({
   ref,
 }: TextFieldProps) {
   const id = useId();
-  const shared = {
-    id,
-    ref,
-    name,
-    value,
-    disabled,
-    placeholder,
-    className: 'cp-control',
-    'aria-invalid': error !== undefined,
-    'aria-describedby': describedBy(id, hint, error),
-    onBlur,
-  };
   return (
     <Field id={id} label={label} hint={hint} error={error} optional={optional} large={large}>
-      {rows === undefined ? (
-        <input
-          {...shared}
-          type={inputType[kind]}
-          autoComplete={autoComplete ?? 'off'}
-          autoCapitalize={autoCapitalize ?? (kind === 'text' ? undefined : 'none')}
-          spellCheck={kind === 'text' ? undefined : false}
-          style={large ? largeControl : undefined}
-          onChange={(event) => onChange(event.target.value)}
-        />
-      ) : (
-        <textarea
-          {...shared}
-          rows={rows}
-          onChange={(event) => onChange(event.target.value)}
-          style={{ resize: 'vertical', ...(large ? largeControl : {}) }}
-        />
-      )}
+      <TextInput
+        id={id}
+        ref={ref}
+        dataSet={{ look: 'control', field: name }}
+        value={value}
+        disabled={disabled}
+        placeholder={placeholder}
+        aria-invalid={error !== undefined}
+        aria-describedby={describedBy(id, hint, error)}
+        onBlur={onBlur}
+        onChangeText={onChange}
+        blurOnSubmit={false}
+        {...(rows === undefined
+          ? {
+              inputMode: inputMode[kind],
+              secureTextEntry: kind === 'password',
+              autoComplete: autoComplete ?? 'off',
+              autoCapitalize: autoCapitalize ?? (kind === 'text' ? 'sentences' : 'none'),
+              spellCheck: kind === 'text',
+              style: large && largeControl,
+            }
+          : { multiline: true, rows, style: [webStyle({ resize: 'vertical' }), large && largeControl] })}
+      />
     </Field>
   );
 }

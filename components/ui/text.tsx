@@ -3,6 +3,7 @@ import { StyleSheet, Text, type TextStyle } from 'react-native';
 import { roles } from '@/components/theme/roles.ts';
 import type { Role } from '@/components/theme/tokens.ts';
 import { family, size } from '@/components/theme/type.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 
 /** Roles that text may have. */
 export type TextRole = Extract<Role, 'ink' | 'softInk' | 'ember' | 'onEmber' | 'cold' | 'hot' | 'good' | 'wrong'>;
@@ -44,10 +45,10 @@ export function Heading({
   );
 }
 
-/** A small label in lower case, as on a drawing. */
-export function Label({ children, tone, id, align, lines }: TextProps) {
+/** A small label in lower case, as on a drawing. `large` on operators' pages, in ink. */
+export function Label({ children, tone, id, align, lines, large = false }: TextProps & { readonly large?: boolean }) {
   return (
-    <Text nativeID={id} numberOfLines={lines} style={[styles.label, toned(tone, align)]}>
+    <Text nativeID={id} numberOfLines={lines} style={[styles.label, large && styles.labelLarge, toned(tone, align)]}>
       {children}
     </Text>
   );
@@ -87,6 +88,11 @@ export function Small({ children, tone, id, align, lines, strong = false }: Text
   );
 }
 
+/** Text as a machine wrote it, line by line. */
+export function Verbatim({ children }: { readonly children: string }) {
+  return <Text style={styles.verbatim}>{children}</Text>;
+}
+
 /** A number with its unit. Give the number as it is to be read (see strategy/units), not as it is stored. */
 export function Figure({
   value,
@@ -119,10 +125,24 @@ export function Figure({
 const styles = StyleSheet.create({
   heading: { fontFamily: family.figure, color: roles.ink, fontVariant: ['tabular-nums'] },
   label: { fontFamily: family.label, color: roles.softInk, ...size.label },
+  labelLarge: { ...size.labelLarge, color: roles.ink },
   body: { fontFamily: family.reading, color: roles.ink, ...size.body, fontVariant: ['tabular-nums'] },
   small: { fontFamily: family.reading, color: roles.softInk, ...size.small, fontVariant: ['tabular-nums'] },
   strong: { fontFamily: family.readingStrong },
   ink: { color: roles.ink },
+  verbatim: {
+    marginBottom: 8,
+    padding: 12,
+    borderWidth: 1,
+    borderColor: roles.rule,
+    borderRadius: 3,
+    backgroundColor: roles.sheet,
+    fontFamily: 'monospace',
+    fontSize: 14,
+    lineHeight: 20,
+    color: roles.ink,
+    ...webStyle({ overflowWrap: 'anywhere' }),
+  },
   figure: { fontFamily: family.figure, color: roles.ink, ...size.figure, fontVariant: ['tabular-nums'] },
   unit: { fontSize: 17 },
   unitLarge: { fontSize: 20 },

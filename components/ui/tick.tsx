@@ -1,20 +1,10 @@
-import { useId, type ReactNode, type Ref } from 'react';
-import { roles } from '@/components/theme/roles.ts';
-import { family } from '@/components/theme/type.ts';
+import type { ReactNode, Ref } from 'react';
+import { View } from 'react-native';
 import { FieldError, fieldIds } from './field.tsx';
+import { useId } from 'react';
+import { TickBox } from './tick-box.web.tsx';
 
-/** A box to tick; the whole line is its target. `large` on operators' pages. */
-export function Tick({
-  label,
-  checked,
-  onChange,
-  onBlur,
-  hint,
-  error,
-  disabled,
-  large = false,
-  ref,
-}: {
+export type TickProps = {
   readonly label: string;
   readonly checked: boolean;
   readonly onChange: (checked: boolean) => void;
@@ -24,42 +14,15 @@ export function Tick({
   readonly disabled?: boolean;
   readonly large?: boolean;
   readonly ref?: Ref<HTMLInputElement>;
-}) {
+};
+
+/** A box to tick; the whole line is its target. `large` on operators' pages. */
+export function Tick(props: TickProps) {
   const ids = fieldIds(useId());
   return (
-    <div>
-      <label
-        style={{
-          display: 'flex',
-          alignItems: 'center',
-          gap: 14,
-          minHeight: large ? 64 : 48,
-          cursor: disabled === true ? 'default' : 'pointer',
-          fontFamily: family.reading,
-          fontSize: large ? 19 : 17,
-          lineHeight: large ? '26px' : '24px',
-          color: roles.ink,
-        }}
-      >
-        <input
-          ref={ref}
-          type="checkbox"
-          className="cp-tick"
-          checked={checked}
-          disabled={disabled}
-          aria-invalid={error !== undefined}
-          aria-describedby={error === undefined ? undefined : ids.error}
-          onBlur={onBlur}
-          onChange={(event) => onChange(event.target.checked)}
-        />
-        <span>
-          {label}
-          {hint === undefined ? null : (
-            <span style={{ display: 'block', fontSize: 15, lineHeight: '20px', color: roles.softInk }}>{hint}</span>
-          )}
-        </span>
-      </label>
-      <FieldError id={ids.error} error={error} />
-    </div>
+    <View>
+      <TickBox {...props} describedBy={props.error === undefined ? undefined : ids.error} />
+      <FieldError id={ids.error} error={props.error} />
+    </View>
   );
 }
