@@ -35,7 +35,7 @@ describe('every page of every role, loaded by its own address', () => {
 
   for (const who of lookers) {
     for (const size of Object.keys(sizes).filter((name): name is Size => name in sizes)) {
-      it(`shows ${who ?? 'a stranger'} on a ${size} screen no error, nothing cut off, nothing that can't be read`, async () => {
+      it(`shows ${who === null ? 'a stranger' : `the ${who}`} on a ${size} screen no error, nothing cut off, nothing that can't be read`, async () => {
         await walk(who, size);
       });
     }
