@@ -259,6 +259,13 @@ type HandleProps = {
 
 type Drag = { pointer: number; at: number; value: number; perPixel: number; last: number };
 
+/** Within a drawing `touch-action` does not keep Chromium from scrolling the page under the finger; a refused touch does. */
+function pageHeldStill(element: SVGGElement) {
+  const refuse = (event: TouchEvent) => event.preventDefault();
+  element.addEventListener('touchstart', refuse, { passive: false });
+  return () => element.removeEventListener('touchstart', refuse);
+}
+
 /** One number taken hold of: by pointer and touch along its axis, by keys in steps. */
 function Handle(props: HandleProps) {
   const { editing, target, axis, label, valueText, value, perPixel, range, steps, zone, tabbable, onNeighbour } = props;
@@ -316,16 +323,19 @@ function Handle(props: HandleProps) {
 
   return (
     <g
-      style={{ touchAction: 'none', cursor: axis === 'x' ? 'ew-resize' : 'ns-resize' }}
+      ref={pageHeldStill}
+      style={{ cursor: axis === 'x' ? 'ew-resize' : 'ns-resize' }}
       onPointerDown={down}
       onPointerMove={move}
       onPointerUp={up}
       onPointerCancel={cancel}
     >
       {/* outside what takes the focus, so that its ring stays close to the knot and off the lane's name */}
-      <rect {...zone} fill="transparent" />
+      <rect {...zone} fill="transparent" style={{ touchAction: 'none' }} />
       <g
         ref={slider}
+        // what is touched is the zone alone
+        pointerEvents="none"
         role="slider"
         tabIndex={tabbable ? 0 : -1}
         aria-label={label}

@@ -1,4 +1,4 @@
-import { act, configure, fireEvent, screen, waitFor, within } from '@testing-library/react';
+import { act, cleanup, configure, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { userEvent } from '@testing-library/user-event';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { forgetDraft } from '@/components/pierce/kept-drafts.ts';
@@ -11,6 +11,7 @@ import { content, grades, machine, nozzle, prediction, revisionOf } from './stra
 configure({ asyncUtilTimeout: 15_000 });
 
 afterEach(() => {
+  cleanup(); // before the server goes: a page that is still there would go on asking
   vi.unstubAllGlobals();
   forgetDraft(ids.user, ids.revision);
 });
