@@ -5,8 +5,11 @@ import { fileURLToPath } from 'node:url';
 
 export const root = path.resolve(path.dirname(fileURLToPath(import.meta.url)), '../..');
 
-/** Everything the two commands make for themselves: databases, stored files, caches. Git-ignored; deleting it starts anew. */
-export const house = path.join(root, '.house');
+/**
+ * Everything the two commands make for themselves: databases, stored files, caches. Git-ignored; deleting it starts anew.
+ * CINDERPATH_HOUSE names another folder, so that the commands can be tested beside a product that runs.
+ */
+export const house = path.resolve(process.env.CINDERPATH_HOUSE ?? path.join(root, '.house'));
 
 export function houseFolder(...parts) {
   const folder = path.join(house, ...parts);

@@ -6,7 +6,7 @@ import fs from 'node:fs';
 import net from 'node:net';
 import path from 'node:path';
 import { installDebian } from './debian.mjs';
-import { house, houseFolder, root } from './folders.mjs';
+import { houseFolder } from './folders.mjs';
 import { SetupProblem } from './say.mjs';
 
 const isRoot = process.getuid?.() === 0;
@@ -52,11 +52,12 @@ function reachableByOthers(folder) {
 }
 
 function clusterFolder(kind) {
+  const folder = houseFolder();
   // Whoever made it first, whatever their umask: the postgres user must be able to walk through, and each cluster closes itself.
-  if (isRoot) fs.chmodSync(houseFolder(), 0o755);
-  if (!isRoot || reachableByOthers(root)) return path.join(house, `postgres-${kind}`);
+  if (isRoot) fs.chmodSync(folder, 0o755);
+  if (!isRoot || reachableByOthers(folder)) return path.join(folder, `postgres-${kind}`);
   // The project lies below a folder closed to the postgres user.
-  const tag = createHash('sha256').update(root).digest('hex').slice(0, 12);
+  const tag = createHash('sha256').update(folder).digest('hex').slice(0, 12);
   return path.join('/var/tmp', `cinderpath-${tag}-${kind}`);
 }
 
@@ -124,7 +125,6 @@ export async function startCluster({ kind }) {
   const data = path.join(folder, 'data');
   const log = path.join(folder, 'server.log');
   try {
-    houseFolder();
     fs.mkdirSync(folder, { recursive: true, mode: 0o700 });
   } catch (error) {
     throw new SetupProblem(`The database folder ${folder} can't be made: ${error.message}`);

@@ -65,10 +65,13 @@ export async function routesOf(context, who) {
       ]);
     }
   }
+  routes.push(['card-unknown-tag', `/card?machine=${machines[0]?.id}&tag=NOBODY-KNOWS`]);
   routes.push(['card-by-hand', `/card?machine=${machines[0]?.id}&gradeGroup=S355&thickness=12000`]);
   if (approved) {
     const { revision } = approved.match;
     routes.push(['report-new', `/report?revision=${revision.id}&machine=${approved.machine.id}`]);
+    const plan = approved.match.cornerPlans[0];
+    if (plan) routes.push(['card-corner-plan', `/corner-plans/${plan.id}`]);
   }
   routes.push(['plates', '/plates'], ['machines', '/machines']);
   if (plates[0]) routes.push(['plate', `/plates/${plates[0].id}`]);
@@ -80,7 +83,7 @@ export async function routesOf(context, who) {
     ['part-new', '/parts/new'],
     ['plate-new', '/plates/new'],
   );
-  for (const state of ['draft', 'inReview', 'approved']) {
+  for (const state of ['draft', 'inReview', 'returned', 'approved']) {
     const found = strategies.find((one) => one.latest.state === state);
     if (found) routes.push([`revision-${state}`, `/revisions/${found.latest.id}`]);
   }
