@@ -189,21 +189,22 @@ function walk(edges: readonly Edge[], closed: Chain[], open: Chain[]): void {
   for (const start of starts) {
     if (used.has(start)) continue;
     const reversed = at.get(start.nodes[1])?.length === 1 && at.get(start.nodes[0])?.length !== 1;
-    let steps: Step[] = [{ edge: start, reversed }];
+    const steps: Step[] = [{ edge: start, reversed }];
     used.add(start);
-    const visited = [tail({ edge: start, reversed })];
+    // how many steps lead to each place passed
+    const passed = new Map([[tail({ edge: start, reversed }), 0]]);
     for (;;) {
       const last = steps.at(-1);
       if (!last) break;
       const node = head(last);
       // back at a place passed before? What lies between is a contour of its own
-      const back = visited.indexOf(node);
-      if (back >= 0) {
-        closed.push(chainOf(steps.slice(back)));
-        steps = steps.slice(0, back);
-        visited.length = back + 1;
+      const back = passed.get(node);
+      if (back !== undefined) {
+        const contour = steps.splice(back);
+        closed.push(chainOf(contour));
+        for (const step of contour.slice(0, -1)) passed.delete(head(step));
         if (steps.length === 0) break;
-      } else visited.push(node);
+      } else passed.set(node, steps.length);
       const from = steps.at(-1);
       const next = from ? choose(from, at.get(node) ?? [], used) : null;
       if (!next) break;
@@ -256,6 +257,6 @@ function chainOf(steps: readonly Step[]): Chain {
   return {
     segments: steps.flatMap(stepSegments),
     layer: first.edge.piece.layer,
-    order: Math.min(...steps.map((step) => step.edge.index)),
+    order: steps.reduce((least, step) => Math.min(least, step.edge.index), first.edge.index),
   };
 }

@@ -176,13 +176,11 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
   const rounding = Math.max(diagonal * roundingShare, Number.MIN_VALUE);
   const gapTolerance = answers.gapTolerance ?? rounding;
 
-  const { kept, repaired } = cleanPieces(all, rounding);
+  const { kept, repaired: cleaned } = cleanPieces(all, rounding);
   const chains = chainPieces(kept, gapTolerance);
-  const closed = chains.closed.map((chain) => {
-    const joined = closeJoints(chain.segments, rounding);
-    repaired.push(...joined.repaired);
-    return { contour: { segments: joined.segments }, layer: chain.layer };
-  });
+  const joined = chains.closed.map((chain) => closeJoints(chain.segments, rounding));
+  const closed = joined.map(({ segments }, i) => ({ contour: { segments }, layer: chains.closed[i]?.layer ?? '0' }));
+  const repaired = [...cleaned, ...joined.flatMap((one) => one.repaired)];
   // Ends that lie within the tolerance and were still not joined meet where the way was chosen: a wider one would not join them.
   const gaps = nearGaps(chains.open, diagonal).filter(({ size }) => size > gapTolerance);
   if (closed.length === 0 && gaps.length === 0) return noContour(chains.open, unit);

@@ -12,13 +12,12 @@ export type Spline = {
 /** The smooth pieces of a spline, cut at its inner knots. De Boor's algorithm on homogeneous coordinates. */
 export function splinePieces(spline: Spline): Curve[] {
   const { degree, knots, points } = spline;
-  const stops = [...new Set(knots.slice(degree, points.length + 1))];
   const pieces: Curve[] = [];
-  for (let i = 1; i < stops.length; i++) {
-    const from = stops[i - 1] ?? 0;
-    const to = stops[i] ?? 0;
+  for (let span = degree; span < points.length; span++) {
+    const from = knots[span] ?? 0;
+    const to = knots[span + 1] ?? 0;
+    // a knot that stands more than once begins no piece until its last
     if (!(to > from)) continue;
-    const span = spanAt(spline, from);
     pieces.push({
       at: (t) => evaluate(spline, span, t).point,
       along: (t) => evaluate(spline, span, t).derivative,
@@ -27,13 +26,6 @@ export function splinePieces(spline: Spline): Curve[] {
     });
   }
   return pieces;
-}
-
-/** Index k with knots[k] ≤ t < knots[k + 1]. */
-function spanAt({ degree, knots, points }: Spline, t: number): number {
-  let k = degree;
-  while (k < points.length - 1 && (knots[k + 1] ?? Infinity) <= t) k++;
-  return k;
 }
 
 type Homogeneous = { readonly x: number; readonly y: number; readonly w: number };

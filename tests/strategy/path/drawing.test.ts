@@ -400,6 +400,26 @@ describe('a file that is no drawing', () => {
   });
 });
 
+describe('a contour of 130 000 pieces', () => {
+  // once the contour's pieces and its closed gaps went to a function as arguments, more than the call stack holds
+  it('a hair from the next each, is read', () => {
+    const sides = 130_000;
+    const at = (i: number) => {
+      const angle = (2 * Math.PI * i) / sides;
+      return [(1000 * Math.cos(angle)).toFixed(3), (1000 * Math.sin(angle)).toFixed(3)] as const;
+    };
+    const lines = Array.from({ length: sides }, (_, i) => {
+      const [[x0, y0], [x1, y1]] = [at(i), at(i + 0.9)];
+      return `0\nLINE\n8\nCUT\n10\n${x0}\n20\n${y0}\n11\n${x1}\n21\n${y1}\n`;
+    });
+    const text = `0\nSECTION\n2\nENTITIES\n${lines.join('')}0\nENDSEC\n0\nEOF\n`;
+    const result = drawingRead(textBytes(text), { unit: 'mm', gapTolerance: 1e-5 });
+    if (result.kind === 'none') throw new Error(result.why);
+    expect(result.contours.map(({ contour }) => contour.segments.length)).toEqual([sides]);
+    expect(result.repaired).toHaveLength(sides);
+  }, 60_000);
+});
+
 describe('entity counts', () => {
   it.each(['bearing-plate.dxf', 'lifting-lug.dxf', 'bracket.dxf', 'bollard-base.dxf', 'bracket-duplicates.dxf'])(
     'of %s are those of an independent reader',
