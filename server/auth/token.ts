@@ -4,7 +4,7 @@ import { createHash, createHmac, randomBytes } from 'node:crypto';
 /** What the cookie carries: a signed token around a random id. The signature keeps guesses away from the database; the row decides. */
 export type Tokens = {
   make(expiresAt: Date): Promise<{ token: string; hash: string }>;
-  /** Gives a token's random id a new life in another session, ending at the same time. */
+  /** SHA-256 of the token’s random id, hex: the key of its session’s row. Null when it is forged, torn or too old. */
   hashOf(token: string): Promise<string | null>;
   /** Keyed hash of a mail or network address, for counting tries without keeping whose they were. */
   keyOf(kind: 'account' | 'address', value: string): string;
@@ -31,7 +31,6 @@ export function createTokens(secret: string): Tokens {
         const { payload } = await jwtVerify(token, key, { algorithms: [algorithm], audience });
         return typeof payload.sid === 'string' ? sha256(payload.sid) : null;
       } catch {
-        // Forged, torn or too old: all the same to us.
         return null;
       }
     },

@@ -3,6 +3,7 @@ import { demoAccounts } from '../../db/demo/people.ts';
 import { limits } from '../../shared/limits.ts';
 import type { Role } from '../../shared/policy.ts';
 import { sessionEndpoints, type Session } from '../../shared/sessions.ts';
+import { networkOf } from '../auth/network.ts';
 import { clearCookie, cookieOf, setCookie, signedInBy, type Asked, type SignedIn } from '../auth/session.ts';
 import { AppError, notFound } from '../errors.ts';
 import type { Mount } from '../route.ts';
@@ -26,12 +27,12 @@ export function sessionRoutes({ open, route, services }: Mount): void {
   open(sessionEndpoints.signIn, async ({ body, request, response }) => {
     const mail = body.mail.toLowerCase();
     const account = tokens.keyOf('account', mail);
-    const attempts = await database.execute<{ attempt: string | null; wait_seconds: number | null }>(sql`
-      select * from sign_in_begin(${account}, ${tokens.keyOf('address', networkOf(request.ip))},
+    const attempts = await database.execute<{ wait_seconds: number | null }>(sql`
+      select wait_seconds from sign_in_begin(${account}, ${tokens.keyOf('address', networkOf(request.ip))},
         ${limits.signInFailuresByAccount}, ${limits.signInFailuresByAddress}, ${limits.signInWindowSeconds})
     `);
     const wait = attempts.rows[0]?.wait_seconds;
-    if (wait) throw new AppError('too-many', 'Too many tries. Wait a while, then try again.', { retryAfter: wait });
+    if (wait) throw tooMany(wait);
 
     const found = await database.execute<{ user_id: string | null; password_hash: string | null }>(
       sql`select * from sign_in_account(${mail})`,
@@ -74,6 +75,8 @@ export function sessionRoutes({ open, route, services }: Mount): void {
   });
 }
 
+const tooMany = (seconds: number) =>
+  new AppError('too-many', 'Too many sign-ins failed for this account or from this address.', { retryAfter: seconds });
 const wrongCredentials = () => new AppError('wrong-credentials', 'Type both again; capitals count in the password.');
 
 /** Signing in again with a session at hand ends that one: nobody comes back to it. */
@@ -95,15 +98,4 @@ async function present(database: Asked, signedIn: SignedIn): Promise<Session> {
     memberships: rows.map((row) => ({ plantId: row.plant_id, plantName: row.plant_name, role: row.role })),
     expiresAt: expiresAt.toISOString(),
   };
-}
-
-/** The network a try came from: an IPv6 subscriber has a whole /64 to try from. */
-function networkOf(address: string | undefined): string {
-  if (!address?.includes(':') || address.startsWith('::ffff:')) return address ?? 'unknown';
-  const [head = '', tail] = address.split('::');
-  const left = head.split(':');
-  const right = tail?.split(':').filter(Boolean) ?? [];
-  const full =
-    tail === undefined ? left : [...left, ...Array<string>(8 - left.length - right.length).fill('0'), ...right];
-  return full.slice(0, 4).join(':');
 }

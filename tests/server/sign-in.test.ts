@@ -1,11 +1,21 @@
+import http from 'node:http';
 import { afterAll, beforeAll, beforeEach, describe, expect, test } from 'vitest';
+import { openDatabase } from '../../db/database.ts';
+import { createApp } from '../../server/app.ts';
 import { limits } from '../../shared/limits.ts';
 import { peopleEndpoints } from '../../shared/people.ts';
 import { machineEndpoints } from '../../shared/machines.ts';
 import { sessionEndpoints } from '../../shared/sessions.ts';
 import { connected } from '../support/database.ts';
 import { made, makePlant, type TestPlant } from '../support/plant.ts';
-import { callerOn, cookieFrom, startTestServer, testPassword, type TestServer } from '../support/server.ts';
+import {
+  callerOn,
+  cookieFrom,
+  startTestServer,
+  testPassword,
+  type Caller,
+  type TestServer,
+} from '../support/server.ts';
 
 let server: TestServer;
 let plant: TestPlant;
@@ -73,7 +83,7 @@ describe('signing in', () => {
   test('over TLS the cookie is the host’s own', async () => {
     const secure = await startTestServer({ secure: true });
     try {
-      const hill = await makePlant({ ...secure, signIn: plainSignIn(secure) }, 'hill');
+      const hill = await makePlant(secure, 'hill');
       const answer = await secure.stranger.call(sessionEndpoints.signIn, {
         body: { mail: hill.mail('lead'), password: testPassword },
       });
@@ -114,7 +124,7 @@ describe('a session', () => {
     expect(after.problem.code).toBe('signed-out');
   });
 
-  test('is nobody’s when its token was signed by another key, by none, or for another use', async () => {
+  test('is nobody’s when its token was changed, not signed, or never one', async () => {
     const cookie = cookieFrom(await made(signIn(plant.mail('lead'), testPassword)));
     const [header = '', payload = '', signature = ''] = (cookie.split('=')[1] ?? '').split('.');
     const none = Buffer.from('{"alg":"none"}').toString('base64url');
@@ -223,6 +233,24 @@ describe('trying passwords', () => {
     expect(tries.filter(({ status }) => status === 429)).toHaveLength(limits.signInFailuresByAccount);
   });
 
+  test('two servers count the same tries, since PostgreSQL counts them', async () => {
+    const pool = openDatabase(server.database.appUrl, () => undefined);
+    const second = http.createServer(createApp({ ...server.services, database: pool.database }));
+    await new Promise<void>((resolve) => second.listen(0, '127.0.0.1', resolve));
+    const doors = [server.stranger, callerOn(second, null)];
+    const tryAt = (door: Caller | undefined, password: string) =>
+      door?.call(sessionEndpoints.signIn, { body: { mail: plant.mail('lead'), password } });
+    try {
+      for (let n = 0; n < limits.signInFailuresByAccount; n += 1) {
+        expect((await tryAt(doors[n % 2], `guess ${n}`))?.status).toBe(401);
+      }
+      for (const door of doors) expect((await tryAt(door, testPassword))?.status).toBe(429);
+    } finally {
+      await new Promise<void>((resolve) => second.close(() => resolve()));
+      await pool.close();
+    }
+  });
+
   test('the right password forgets the failures before it', async () => {
     for (let n = 0; n < limits.signInFailuresByAccount - 1; n += 1) await signIn(plant.mail('lead'), `guess ${n}`);
     expect((await signIn(plant.mail('lead'), testPassword)).status).toBe(200);
@@ -260,9 +288,3 @@ describe('a request from another site’s page', () => {
     }
   });
 });
-
-/** A server whose cookies are for TLS, called without: the cookie is sent as a browser over TLS would. */
-const plainSignIn =
-  (secure: TestServer): TestServer['signIn'] =>
-  (mail, password) =>
-    secure.signIn(mail, password);
