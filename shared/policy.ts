@@ -49,7 +49,6 @@ const byRole = {
   /** House rules: what every pierce of the plant must keep. Whoever reads strategies reads them. */
   'rule.write': leads,
   'people.manage': leads,
-  'plant.manage': leads,
   'record.read': leads,
 } as const satisfies Record<string, readonly Role[]>;
 

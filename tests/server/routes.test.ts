@@ -10,6 +10,7 @@ import type { Endpoint } from '../../shared/endpoint.ts';
 import { houseRuleEndpoints } from '../../shared/house-rules.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { can, roles, type Role } from '../../shared/policy.ts';
+import { recordEndpoints } from '../../shared/record.ts';
 import { reportEndpoints } from '../../shared/reports.ts';
 import { FOUR_KILOWATT } from '../support/machines.ts';
 import {
@@ -103,6 +104,92 @@ describe('route by role, on things of one’s own plant and of another', () => {
 test('a new route cannot be forgotten in the matrix', () => {
   const needed = Object.keys(endpoints).filter((name) => !(name in forAnyone) && name !== 'session.signOut');
   expect(Object.keys(matrix).sort()).toEqual(needed.sort());
+});
+
+describe('what a body or a query names in another plant', () => {
+  const naming = [
+    'session.choosePlant',
+    'strategy.add',
+    'revision.judge',
+    'plate.add',
+    'card.get',
+    'request.add',
+    'cornerPlan.add',
+    'report.add',
+  ];
+
+  test.each(naming)('is not there for %s', async (name) => {
+    const endpoint = endpoints[name];
+    const cell = matrix[name];
+    if (!endpoint || !cell) throw new Error(`no row for ${name}`);
+    const lead = await server.signIn(own.plant.mail('lead'));
+    const across = await lead.call(endpoint, await cell(foreign));
+    expect([400, 404], JSON.stringify(across.problem)).toContain(across.status);
+  });
+});
+
+describe('a route that changes something', () => {
+  /** Those that need no Idempotency-Key although they are POSTs, each with the reason. */
+  const withoutKey: Readonly<Record<string, string>> = {
+    'session.signIn': 'its answer is a credential, which must not be stored',
+    'revision.judge': 'it changes nothing',
+    'houseRule.read': 'it changes nothing',
+    'part.read': 'it changes nothing',
+  };
+  /** Those that need no If-Match although they are about something that is there, each with the reason. */
+  const withoutVersion: Readonly<Record<string, string>> = {
+    'session.signOut': 'a session is its owner’s alone and ends as it is',
+    'session.choosePlant': 'a session is its owner’s alone',
+  };
+  const named = (holds: (endpoint: Endpoint) => boolean) =>
+    Object.entries(endpoints)
+      .filter(([, endpoint]) => holds(endpoint))
+      .map(([name]) => name);
+  const asked = async (name: string) => {
+    const endpoint = endpoints[name];
+    const cell = matrix[name];
+    if (!endpoint || !cell) throw new Error(`no row for ${name}`);
+    return { endpoint, given: await cell(own), lead: await own.plant.as('lead') };
+  };
+
+  test('takes an Idempotency-Key when it creates or decides, and If-Match when it changes what is there', () => {
+    expect(named(({ method, idempotencyKey }) => method === 'POST' && !idempotencyKey).sort()).toEqual(
+      Object.keys(withoutKey).sort(),
+    );
+    const changes = ({ method, path: url }: Endpoint) => (method === 'POST' ? url.includes(':') : method !== 'GET');
+    expect(named((endpoint) => changes(endpoint) && !endpoint.ifMatch).sort()).toEqual(
+      Object.keys(withoutVersion).sort(),
+    );
+  });
+
+  test.each(named(({ ifMatch }) => ifMatch))('%s is refused without a version and with an old one', async (name) => {
+    const { endpoint, given, lead } = await asked(name);
+    const { version, ...blind } = given;
+    const without = await lead.call(endpoint, blind);
+    expect([without.status, without.problem.code]).toEqual([428, 'version-missing']);
+    const stale = await lead.call(endpoint, { ...given, version: (version ?? 0) + 1 });
+    expect([stale.status, stale.problem.code]).toEqual([412, 'stale']);
+    const seen = await lead.call(endpoint, given);
+    expect(seen.status, JSON.stringify(seen.problem)).toBeLessThan(300);
+  });
+
+  test.each(named(({ idempotencyKey }) => idempotencyKey))(
+    '%s is refused without a key, and done once when it is sent twice with one',
+    async (name) => {
+      const { endpoint, given, lead } = await asked(name);
+      const without = await lead.call(endpoint, { ...given, key: null });
+      expect([without.status, without.problem.code]).toEqual([400, 'key-missing']);
+      const key = newId();
+      const first = await lead.call(endpoint, { ...given, key });
+      expect(first.status, JSON.stringify(first.problem)).toBeLessThan(300);
+      const entries = async () => (await made(lead.call(recordEndpoints.list))).body.items[0]?.sequence;
+      const before = await entries();
+      const again = await lead.call(endpoint, { ...given, key });
+      expect([again.status, again.version]).toEqual([first.status, first.version]);
+      expect(again.body).toEqual(first.body);
+      expect(await entries()).toBe(before);
+    },
+  );
 });
 
 test('an id that is no id is nobody’s', async () => {
