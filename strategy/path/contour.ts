@@ -1,5 +1,5 @@
 import type { Box, Point } from './point.ts';
-import { boxUnion, emptyBox, pointCross } from './point.ts';
+import { boxUnion, emptyBox, pointCross, pointSubtract } from './point.ts';
 import type { Arc, Segment } from './segment.ts';
 import {
   pathLength,
@@ -25,7 +25,7 @@ export function contourArea(contour: Contour): number {
   for (const segment of segments) {
     const a = segmentStart(segment);
     const b = segmentEnd(segment);
-    doubled += pointCross({ x: a.x - origin.x, y: a.y - origin.y }, { x: b.x - origin.x, y: b.y - origin.y });
+    doubled += pointCross(pointSubtract(a, origin), pointSubtract(b, origin));
     if (segment.kind === 'arc') doubled += segment.radius * segment.radius * (segment.sweep - Math.sin(segment.sweep));
   }
   return doubled / 2;
@@ -33,9 +33,6 @@ export function contourArea(contour: Contour): number {
 
 /** Length around, m. */
 export const contourLength = (contour: Contour): number => pathLength(contour.segments);
-
-/** 'ccw' when the inside lies on the left of travel. */
-export const contourOrientation = (contour: Contour): 'ccw' | 'cw' => (contourArea(contour) >= 0 ? 'ccw' : 'cw');
 
 /** The same contour travelled the other way. */
 export const contourReverse = (contour: Contour): Contour => ({

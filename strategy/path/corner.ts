@@ -53,7 +53,10 @@ export function cornerInward(corner: Pick<Corner, 'incoming' | 'outgoing' | 'ang
  * The corner of the path the cut runs on, m: half the kerf outside both finished edges, so (kerf/2)/sin(angle/2) from the finished
  * corner along the bisector. Edges that are arcs are taken by their tangents.
  */
-export function cornerOfPath(corner: Corner, kerfWidth: number): Point {
+export function cornerOfPath(
+  corner: Pick<Corner, 'point' | 'incoming' | 'outgoing' | 'angle'>,
+  kerfWidth: number,
+): Point {
   const away = -kerfWidth / 2 / Math.sin(corner.angle / 2);
   return pointAdd(corner.point, pointScale(cornerInward(corner), away));
 }

@@ -57,22 +57,17 @@ export function segmentDistance(a: Segment, b: Segment): Nearest {
 }
 
 function offerThroughCentre(arc: Arc, other: Segment, offer: (onArc: Point, onOther: Point) => void): void {
-  const directions: number[] = [];
-  if (other.kind === 'line') {
-    const foot = segmentNearestPoint(other, arc.centre);
-    directions.push(Math.atan2(foot.y - arc.centre.y, foot.x - arc.centre.x));
-  } else if (pointDistance(arc.centre, other.centre) > 0) {
-    directions.push(Math.atan2(other.centre.y - arc.centre.y, other.centre.x - arc.centre.x));
-  } else {
-    // concentric: the ends, which are tried already, are as near as anything
-    return;
-  }
-  for (const direction of directions) {
-    for (const angle of [direction, direction + Math.PI]) {
-      if (!arcCovers(arc, angle)) continue;
-      const onArc = arcPointAtAngle(arc, angle);
-      offer(onArc, segmentNearestPoint(other, onArc));
-    }
+  const towards = pointSubtract(
+    other.kind === 'line' ? segmentNearestPoint(other, arc.centre) : other.centre,
+    arc.centre,
+  );
+  // concentric? Then the ends, which are tried already, are as near as anything
+  if (other.kind === 'arc' && pointLength(towards) === 0) return;
+  const direction = Math.atan2(towards.y, towards.x);
+  for (const angle of [direction, direction + Math.PI]) {
+    if (!arcCovers(arc, angle)) continue;
+    const onArc = arcPointAtAngle(arc, angle);
+    offer(onArc, segmentNearestPoint(other, onArc));
   }
 }
 

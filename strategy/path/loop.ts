@@ -1,5 +1,6 @@
 import type { Contour } from './contour.ts';
 import { contourArea } from './contour.ts';
+import { cornerOfPath } from './corner.ts';
 import type { Point } from './point.ts';
 import { pointAdd, pointLeft, pointScale, pointSubtract } from './point.ts';
 import type { Arc, Line } from './segment.ts';
@@ -63,16 +64,11 @@ export type Slug = { readonly contour: Contour; readonly area: number };
 
 /**
  * The slug of a loop, its outline in m and area in m², or null when the kerf takes all of it. Half the kerf is lost all round; the rest is
- * the same figure with a radius smaller by half the kerf.
+ * the same figure with a radius smaller by half the kerf, whose tip lies half a kerf further out.
  */
 export function loopSlug(corner: LoopCorner, loop: Loop, kerfWidth: number): Slug | null {
   const radius = loop.radius - kerfWidth / 2;
   if (!(radius > 0)) return null;
-  const bisector = Math.sin(corner.angle / 2);
-  const c = Math.cos(corner.angle / 2);
-  const left = pointLeft(corner.outgoing);
-  const inward = { x: c * corner.outgoing.x + bisector * left.x, y: c * corner.outgoing.y + bisector * left.y };
-  const tip = pointSubtract(corner.point, pointScale(inward, kerfWidth / 2 / bisector));
-  const contour = { segments: loopAt({ ...corner, point: tip }, radius).segments };
+  const contour = { segments: loopAt({ ...corner, point: cornerOfPath(corner, kerfWidth) }, radius).segments };
   return { contour, area: Math.abs(contourArea(contour)) };
 }

@@ -1,5 +1,5 @@
 import type { Box, Point } from './point.ts';
-import { pointDistance, pointLeft, pointScale, pointUnit } from './point.ts';
+import { pointAdd, pointDistance, pointLeft, pointRotate, pointSubtract, pointUnit } from './point.ts';
 
 /** A straight piece of path. */
 export type Line = { readonly kind: 'line'; readonly start: Point; readonly end: Point };
@@ -45,7 +45,7 @@ export function segmentFromBulge(start: Point, end: Point, bulge: number): Segme
   const radius = (chord * (1 + bulge * bulge)) / (4 * Math.abs(bulge));
   // signed distance of the centre from the chord's middle, to the left of the chord
   const offset = (chord * (1 - bulge * bulge)) / (4 * bulge);
-  const left = pointLeft(pointUnit({ x: end.x - start.x, y: end.y - start.y }));
+  const left = pointLeft(pointUnit(pointSubtract(end, start)));
   const centre = { x: (start.x + end.x) / 2 + left.x * offset, y: (start.y + end.y) / 2 + left.y * offset };
   return arcOf(centre, radius, Math.atan2(start.y - centre.y, start.x - centre.x), sweep);
 }
@@ -80,9 +80,7 @@ export const segmentLength = (segment: Segment): number =>
 
 /** Unit vector of travel at the share `t` of the length. Throws RangeError for a line without length. */
 export function segmentTangentAt(segment: Segment, t: number): Point {
-  if (segment.kind === 'line') {
-    return pointUnit({ x: segment.end.x - segment.start.x, y: segment.end.y - segment.start.y });
-  }
+  if (segment.kind === 'line') return pointUnit(pointSubtract(segment.end, segment.start));
   const angle = segment.startAngle + t * segment.sweep;
   const turn = Math.sign(segment.sweep);
   return { x: -turn * Math.sin(angle), y: turn * Math.cos(angle) };
@@ -90,7 +88,7 @@ export function segmentTangentAt(segment: Segment, t: number): Point {
 
 /** The same piece travelled the other way. */
 export function segmentReverse(segment: Segment): Segment {
-  if (segment.kind === 'line') return { kind: 'line', start: segment.end, end: segment.start };
+  if (segment.kind === 'line') return lineBetween(segment.end, segment.start);
   return { ...segment, startAngle: segment.startAngle + segment.sweep, sweep: -segment.sweep };
 }
 
@@ -102,18 +100,14 @@ export function segmentPart(segment: Segment, t0: number, t1: number): Segment {
 
 /** The segment shifted by a vector, m. */
 export function segmentShift(segment: Segment, by: Point): Segment {
-  const move = (p: Point) => ({ x: p.x + by.x, y: p.y + by.y });
-  if (segment.kind === 'line') return lineBetween(move(segment.start), move(segment.end));
-  return { ...segment, centre: move(segment.centre) };
+  if (segment.kind === 'line') return lineBetween(pointAdd(segment.start, by), pointAdd(segment.end, by));
+  return { ...segment, centre: pointAdd(segment.centre, by) };
 }
 
 /** The segment turned counter-clockwise by `angle` rad about the origin. */
 export function segmentRotate(segment: Segment, angle: number): Segment {
-  const c = Math.cos(angle);
-  const s = Math.sin(angle);
-  const turn = (p: Point) => ({ x: c * p.x - s * p.y, y: s * p.x + c * p.y });
-  if (segment.kind === 'line') return lineBetween(turn(segment.start), turn(segment.end));
-  return { ...segment, centre: turn(segment.centre), startAngle: segment.startAngle + angle };
+  if (segment.kind === 'line') return lineBetween(pointRotate(segment.start, angle), pointRotate(segment.end, angle));
+  return { ...segment, centre: pointRotate(segment.centre, angle), startAngle: segment.startAngle + angle };
 }
 
 /** Does the arc pass the direction `angle` from its centre? Ends count, within `slack` rad. */
@@ -144,9 +138,3 @@ export function segmentBox(segment: Segment): Box {
 
 /** Length of a path, m. */
 export const pathLength = (path: readonly Segment[]): number => path.reduce((sum, s) => sum + segmentLength(s), 0);
-
-/** The segment with all lengths multiplied by a positive factor about the origin. */
-export function segmentScale(segment: Segment, factor: number): Segment {
-  if (segment.kind === 'line') return lineBetween(pointScale(segment.start, factor), pointScale(segment.end, factor));
-  return { ...segment, centre: pointScale(segment.centre, factor), radius: segment.radius * factor };
-}

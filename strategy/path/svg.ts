@@ -28,11 +28,7 @@ export const svgContourData = (contour: Contour, options: SvgOptions): string =>
   contour.segments.length === 0 ? '' : `${svgPathData(contour.segments, options)}Z`;
 
 function writer({ scale, origin = { x: 0, y: 0 }, flipY = true, digits = 3 }: SvgOptions) {
-  const number = (value: number): string => {
-    const text = value.toFixed(digits);
-    const trimmed = text.includes('.') ? text.replace(/\.?0+$/, '') : text;
-    return trimmed === '-0' ? '0' : trimmed;
-  };
+  const number = (value: number): string => String(Number(value.toFixed(digits)));
   const point = (p: Point): string => {
     const y = (p.y - origin.y) * scale;
     return `${number((p.x - origin.x) * scale)} ${number(flipY ? -y : y)}`;

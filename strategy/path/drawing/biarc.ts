@@ -11,7 +11,7 @@ import {
   pointUnit,
 } from '../point.ts';
 import type { Segment } from '../segment.ts';
-import { arcOf, lineBetween } from '../segment.ts';
+import { arcOf, lineBetween, segmentReverse } from '../segment.ts';
 
 /** A smooth curve: place and derivative over a parameter. */
 export type Curve = {
@@ -47,9 +47,10 @@ export function fitBiarcs(curve: Curve, tolerance: number): { segments: Segment[
       fit(middle, to, depth + 1);
       return;
     }
-    if (pieces && off <= tolerance) segments.push(...pieces);
-    else segments.push(lineBetween(a, b));
-    deviation = Math.max(deviation, Number.isFinite(off) ? off : pointDistance(a, b));
+    // halved to the last without a fit, as at a cusp? Then its chord stands for it, and the distance is the chord's
+    const used = pieces && off <= tolerance ? pieces : [lineBetween(a, b)];
+    segments.push(...used);
+    deviation = Math.max(deviation, used === pieces ? off : distanceFrom(curve, from, to, used));
   };
   fit(curve.from, curve.to, 0);
   return { segments, deviation };
@@ -100,7 +101,7 @@ function biarc(a: Point, ta: Point, b: Point, tb: Point): Segment[] | null {
   // the second is built backwards from b, whose tangent is known
   const second = arcFrom(b, pointScale(tb, -1), joint);
   if (!first || !second) return null;
-  return [first, backwards(second, joint, b)];
+  return [first, segmentReverse(second)];
 }
 
 /** Arc or line that leaves `from` along the unit tangent and ends in `to`. */
@@ -114,9 +115,4 @@ function arcFrom(from: Point, tangent: Point, to: Point): Segment | null {
   const centre = { x: from.x - tangent.y * radius, y: from.y + tangent.x * radius };
   const sweep = 2 * Math.atan2(pointCross(tangent, v), pointDot(tangent, v));
   return arcOf(centre, Math.abs(radius), Math.atan2(from.y - centre.y, from.x - centre.x), sweep);
-}
-
-function backwards(segment: Segment, from: Point, to: Point): Segment {
-  if (segment.kind === 'line') return lineBetween(from, to);
-  return { ...segment, startAngle: segment.startAngle + segment.sweep, sweep: -segment.sweep };
 }
