@@ -38,8 +38,18 @@ const choicesSchema = strategyContentSchema.pick({
   hottestPlate: true,
 });
 
+type AskedFor = {
+  readonly machineId?: string | null;
+  readonly gradeGroup?: string | null;
+  /** µm */
+  readonly thickness?: number | null;
+};
+
+/** How far the suggested range reaches to both sides of the plate that was asked for, µm. */
+const reach = 1000;
+
 /** Begins a strategy: for which machine, grade group, thickness and nozzle. The draft starts with stages worked out for them. */
-export function StrategyNewScreen() {
+export function StrategyNewScreen(asked: AskedFor) {
   const machines = useQuery(machinesQuery());
   const nozzles = useQuery(nozzlesQuery());
   const grades = useQuery(gradesQuery());
@@ -58,6 +68,7 @@ export function StrategyNewScreen() {
           machines={machines.data}
           nozzles={nozzles.data}
           groups={[...new Set(grades.data.map((grade) => grade.group))]}
+          asked={asked}
         />
       )}
       <EstimateNote />
@@ -65,20 +76,29 @@ export function StrategyNewScreen() {
   );
 }
 
-type NewFormProps = { machines: readonly Machine[]; nozzles: readonly NozzleRow[]; groups: readonly string[] };
+type NewFormProps = {
+  machines: readonly Machine[];
+  nozzles: readonly NozzleRow[];
+  groups: readonly string[];
+  asked: AskedFor;
+};
 
-function NewForm({ machines, nozzles, groups }: NewFormProps) {
+function NewForm({ machines, nozzles, groups, asked }: NewFormProps) {
   const router = useRouter();
   const system = useUnitSystem();
   const add = useStrategyAdd();
   const [ids] = useState(() => ({ id: newId(), revisionId: newId() }));
   const [machineRevisionId, setMachine] = useState<string | null>(
-    machines.length === 1 ? (machines[0]?.revisions[0]?.id ?? null) : null,
+    () =>
+      (machines.length === 1 ? machines[0] : machines.find(({ id }) => id === asked.machineId))?.revisions[0]?.id ??
+      null,
   );
-  const [gradeGroup, setGroup] = useState<string | null>(groups.length === 1 ? (groups[0] ?? null) : null);
+  const [gradeGroup, setGroup] = useState<string | null>(
+    () => (groups.length === 1 ? groups[0] : groups.find((group) => group === asked.gradeGroup)) ?? null,
+  );
   const [nozzleId, setNozzle] = useState<string | null>(nozzles.length === 1 ? (nozzles[0]?.id ?? null) : null);
-  const [min, setMin] = useState<number | null>(null);
-  const [max, setMax] = useState<number | null>(null);
+  const [min, setMin] = useState<number | null>(asked.thickness ? asked.thickness - reach : null);
+  const [max, setMax] = useState<number | null>(asked.thickness ? asked.thickness + reach : null);
   const [hottestPlate, setHottest] = useState<number | null>(273.15 + 200);
   const [typedName, setName] = useState<string | null>(null);
   const [sent, setSent] = useState(false);

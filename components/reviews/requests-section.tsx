@@ -73,7 +73,17 @@ function RequestRow({
         </Small>
         {request.answered || !mayBegin ? null : (
           <View style={{ alignItems: 'flex-start' }}>
-            <ButtonLink href="/strategies/new" label={asked.begin} />
+            <ButtonLink
+              href={{
+                pathname: '/strategies/new',
+                params: {
+                  machine: request.machine.id,
+                  gradeGroup: request.gradeGroup,
+                  thickness: String(request.thickness),
+                },
+              }}
+              label={asked.begin}
+            />
           </View>
         )}
       </Stack>

@@ -144,4 +144,18 @@ describe('a new strategy', () => {
       expect(Math.max(from.peakPower, to.peakPower)).toBeLessThanOrEqual(limits?.source.maxPower ?? 0);
     }
   });
+
+  it('begins with what was asked for at the machine', async () => {
+    serveWith(({ path }) => {
+      const second = { ...machine, id: ids.other, name: 'No. 1, 4 kW', revisions: [] };
+      if (path === '/api/machines') return json({ items: [second, machine] });
+      if (path === '/api/nozzles') return json({ items: [nozzle] });
+      if (path === '/api/grades') return json({ items: grades });
+      return json({ items: [] });
+    });
+    show(<StrategyNewScreen machineId={machine.id} gradeGroup="S355" thickness={30_000} />, 'engineer');
+    expect((await screen.findByRole<HTMLInputElement>('textbox', { name: 'Thinnest plate' })).value).toBe('29');
+    expect(screen.getByRole<HTMLInputElement>('textbox', { name: 'Thickness the range ends before' }).value).toBe('31');
+    expect(screen.getByRole<HTMLInputElement>('textbox', { name: 'Name' }).value).toBe('S355, 29–31 mm, No. 2, 10 kW');
+  });
 });
