@@ -111,7 +111,7 @@ export default defineConfig([
   {
     // Screens are made of React Native's parts. What only the browser has (a form, a select, a dialog) stands in *.web.tsx.
     files: ['components/**/*.tsx', 'app/**/*.tsx'],
-    ignores: ['**/*.web.tsx', 'app/+html.tsx', 'components/pierce/**'],
+    ignores: ['**/*.web.tsx', 'app/+html.tsx'],
     rules: {
       'no-restricted-syntax': [
         'error',

@@ -1,4 +1,5 @@
 import 'react-native';
+import type { KeyboardEvent } from 'react';
 
 /** What react-native-web passes on to the page and React Native's own types don't know. */
 declare module 'react-native' {
@@ -13,7 +14,10 @@ declare module 'react-native' {
     readonly 'aria-haspopup'?: 'dialog';
     readonly 'aria-invalid'?: boolean;
     readonly 'aria-level'?: number;
+    readonly 'aria-orientation'?: 'horizontal' | 'vertical';
     readonly 'aria-pressed'?: boolean;
+    readonly onKeyDown?: (event: KeyboardEvent<HTMLElement>) => void;
+    readonly onKeyUp?: (event: KeyboardEvent<HTMLElement>) => void;
   }
   interface TextInputProps {
     readonly disabled?: boolean;

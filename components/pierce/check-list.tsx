@@ -1,13 +1,13 @@
 import { useState } from 'react';
+import { View } from 'react-native';
 import { checksText, checkStateText } from '@/components/text/pierce.ts';
-import { roles } from '@/components/theme/roles.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Mark } from '@/components/ui/mark.tsx';
 import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Body } from '@/components/ui/text.tsx';
 import type { Check } from '@/shared/strategies.ts';
 
-const tone = { ok: roles.good, caution: roles.hot, wrong: roles.wrong } as const;
+const tone = { ok: 'good', caution: 'hot', wrong: 'wrong' } as const;
 
 /** What the checks found: what is not in order first and always in sight, the rest when asked for. */
 export function CheckList({ checks }: { checks: readonly Check[] }) {
@@ -39,13 +39,9 @@ export function CheckList({ checks }: { checks: readonly Check[] }) {
 function Line({ state, sentence }: Omit<Check, 'id'>) {
   return (
     <Row gap="m" align="flex-start" wrap={false}>
-      <span
-        role="img"
-        aria-label={checkStateText[state]}
-        style={{ color: tone[state], display: 'inline-flex', paddingTop: 1 }}
-      >
-        <Mark name={state} />
-      </span>
+      <View role="img" aria-label={checkStateText[state]} style={{ paddingTop: 1 }}>
+        <Mark name={state} tone={tone[state]} />
+      </View>
       <Stack grow>
         <Body>{sentence}</Body>
       </Stack>

@@ -1,4 +1,4 @@
-import type { CSSProperties } from 'react';
+import { StyleSheet, View } from 'react-native';
 import { common } from '@/components/text/common.ts';
 import {
   explainText,
@@ -12,21 +12,13 @@ import {
 } from '@/components/text/pierce-explain.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
-import { touch } from '@/components/theme/space.ts';
-import { family } from '@/components/theme/type.ts';
+import { line } from '@/components/theme/space.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 import { Dialog } from '@/components/ui/dialog.tsx';
+import { FigureButton } from '@/components/ui/figure-button.tsx';
 import { Facts } from '@/components/ui/facts.tsx';
 import { Stack } from '@/components/ui/stack.tsx';
 import { Body, Figure, Heading, Small } from '@/components/ui/text.tsx';
-
-/** A result as a figure that tells, when pressed, how it comes about. */
-export function ResultButton({ label, value, onPress }: { label: string; value: string; onPress: () => void }) {
-  return (
-    <button type="button" aria-label={explainText.spoken(label, value)} onClick={onPress} style={styles.figure}>
-      <span style={styles.dotted}>{value}</span>
-    </button>
-  );
-}
 
 /** Results side by side, as cells of the title block; each is one press. */
 export function ResultGrid({
@@ -40,27 +32,24 @@ export function ResultGrid({
 }) {
   const { width } = useLayout();
   return (
-    <div
+    <View
       role="group"
       aria-label={explainText.results}
-      style={{ ...styles.grid, gridTemplateColumns: `repeat(${width < 372 ? 2 : 4}, 1fr)` }}
+      style={[styles.grid, webStyle({ gridTemplateColumns: `repeat(${width < 372 ? 2 : 4}, 1fr)` })]}
     >
       {names.map((name) => {
         const value = resultValue(name, from.prediction, from.system);
         return (
-          <button
+          <FigureButton
             key={name}
-            type="button"
-            aria-label={explainText.spoken(resultLabel[name], value)}
-            onClick={() => onExplain({ name })}
-            style={styles.cell}
-          >
-            <span style={styles.label}>{resultLabel[name]}</span>
-            <span style={{ ...styles.value, ...styles.dotted }}>{value}</span>
-          </button>
+            label={resultLabel[name]}
+            value={value}
+            spoken={explainText.spoken(resultLabel[name], value)}
+            onPress={() => onExplain({ name })}
+          />
         );
       })}
-    </div>
+    </View>
   );
 }
 
@@ -110,50 +99,14 @@ export function ExplainDialog({ explained, from, onClose }: ExplainDialogProps) 
 /** A number and its unit on one line. */
 const together = (value: string): string => value.replaceAll(' ', '\u00a0');
 
-const button: CSSProperties = {
-  background: 'transparent',
-  border: 0,
-  margin: 0,
-  padding: 0,
-  color: roles.ink,
-  cursor: 'pointer',
-  textAlign: 'left',
-};
-const styles = {
-  figure: {
-    ...button,
-    fontFamily: family.figure,
-    fontSize: 20,
-    lineHeight: '25px',
-    fontVariantNumeric: 'tabular-nums',
-    minWidth: touch.least,
-    minHeight: touch.least,
-    marginBlock: -11,
-  },
-  dotted: {
-    textDecoration: 'underline',
-    textDecorationStyle: 'dotted',
-    textDecorationColor: roles.softInk,
-    textUnderlineOffset: 4,
-  },
+const styles = StyleSheet.create({
   grid: {
-    display: 'grid',
     gap: 1,
-    background: roles.rule,
-    border: `1px solid ${roles.ink}`,
-    borderRadius: 3,
     overflow: 'hidden',
+    borderWidth: 1,
+    borderColor: roles.ink,
+    borderRadius: line.corner,
+    backgroundColor: roles.rule,
+    ...webStyle({ display: 'grid' }),
   },
-  cell: {
-    ...button,
-    display: 'flex',
-    flexDirection: 'column',
-    background: roles.sheet,
-    padding: '9px 10px',
-    minHeight: 62,
-    minWidth: 0,
-    outlineOffset: -3,
-  },
-  label: { fontFamily: family.label, fontSize: 14, lineHeight: '18px', color: roles.softInk },
-  value: { fontFamily: family.figure, fontSize: 20, lineHeight: '25px', fontVariantNumeric: 'tabular-nums' },
-} as const satisfies Record<string, CSSProperties>;
+});

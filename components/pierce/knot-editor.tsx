@@ -6,7 +6,7 @@ import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Small } from '@/components/ui/text.tsx';
 import type { Stage } from '@/strategy/pierce/stage.ts';
 import type { UnitSystem } from '@/strategy/units/index.ts';
-import type { KnotEditing } from './knot-layer.tsx';
+import type { KnotEditing } from './knot-editing.ts';
 import {
   clamped,
   knotOf,

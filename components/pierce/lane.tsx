@@ -1,3 +1,4 @@
+import { G, Line, Path, Rect, Text as SvgText } from 'react-native-svg';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
@@ -39,16 +40,16 @@ export function Lane(props: LaneProps) {
   const levels = zeroClear ? [floor, 0, most] : [floor, most];
   const name = `${label}, ${unit}`;
   return (
-    <g>
+    <G>
       {/* a stage's boundary passes behind the name */}
-      <rect x={left} y={top} width={letteringWidth(name) + 8} height={18} fill={roles.sheet} />
-      <text x={left} y={top + 14} fontFamily={family.label} fontSize={14} fill={roles.softInk}>
+      <Rect x={left} y={top} width={letteringWidth(name) + 8} height={18} fill={roles.sheet} />
+      <SvgText x={left} y={top + 14} fontFamily={family.label} fontSize={14} fill={roles.softInk}>
         {name}
-      </text>
+      </SvgText>
       {levels.map((value) => (
-        <g key={value}>
-          <line x1={left} x2={right} y1={yOf(value)} y2={yOf(value)} stroke={roles.rule} strokeWidth={1} />
-          <text
+        <G key={value}>
+          <Line x1={left} x2={right} y1={yOf(value)} y2={yOf(value)} stroke={roles.rule} strokeWidth={1} />
+          <SvgText
             x={left - 9}
             y={yOf(value) + 5}
             textAnchor="end"
@@ -57,13 +58,13 @@ export function Lane(props: LaneProps) {
             fill={roles.softInk}
           >
             {laneFigure(value)}
-          </text>
-        </g>
+          </SvgText>
+        </G>
       ))}
       {ghosts.map((ghost, index) => (
-        <path
+        <Path
           key={index}
-          data-testid="lane-ghost"
+          testID="lane-ghost"
           d={course(ghost)}
           fill="none"
           stroke={roles.softInk}
@@ -71,14 +72,14 @@ export function Lane(props: LaneProps) {
           strokeDasharray="1.5 3.5"
         />
       ))}
-      <path d={course(stages)} fill="none" stroke={roles.ink} strokeWidth={1.8} />
+      <Path d={course(stages)} fill="none" stroke={roles.ink} strokeWidth={1.8} />
       {knots &&
         laneKnots(stages, lane).map((knot, index) => {
           const marked = knot.ends.some(({ stage }) => stage === chosen);
           return (
-            <rect
+            <Rect
               key={index}
-              data-testid="lane-knot"
+              testID="lane-knot"
               x={x(knot.time) - 4.5}
               y={yOf(laneNumber(knot.value, lane, system)) - 4.5}
               width={9}
@@ -89,7 +90,7 @@ export function Lane(props: LaneProps) {
             />
           );
         })}
-    </g>
+    </G>
   );
 }
 

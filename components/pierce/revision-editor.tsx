@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query';
 import { useEffect, useMemo, useReducer, useState, type ReactNode } from 'react';
-import { View } from 'react-native';
+import { StyleSheet, View } from 'react-native';
 import { machinesQuery } from '@/components/data/machines.ts';
 import { nozzlesQuery } from '@/components/data/nozzles.ts';
 import { isProblem } from '@/components/data/problem.ts';
@@ -15,6 +15,7 @@ import { revisionText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { space } from '@/components/theme/space.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Dialog } from '@/components/ui/dialog.tsx';
 import { Divider } from '@/components/ui/divider.tsx';
@@ -350,7 +351,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
   return (
     <DraftProvider value={{ draft, dispatch, problems, readOnly, scale: machineRevision?.profile.focusScale ?? null }}>
       {/* whoever leaves a field has finished a step */}
-      <div onBlur={() => dispatch({ do: 'settle' })}>
+      <View onBlur={() => dispatch({ do: 'settle' })}>
         {wide ? (
           <Row align="flex-start" wrap={false} gap="xl">
             <Cell grow={5}>
@@ -387,7 +388,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
             {!readOnly && <StickyBar>{saveBar}</StickyBar>}
           </Stack>
         )}
-      </div>
+      </View>
       <ExplainDialog
         explained={explained}
         from={{ prediction: shown.prediction, content: shown.content, nozzle, rules, system }}
@@ -419,18 +420,19 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
 /** What must stay at hand on a phone, above the page's lower edge. */
 function StickyBar({ children }: { children: ReactNode }) {
   return (
-    <div
-      data-print="hide"
-      style={{
-        position: 'sticky',
-        bottom: 0,
-        zIndex: 5,
-        background: roles.ground,
-        borderTop: `1px solid ${roles.ink}`,
-        paddingBlock: space.m,
-      }}
-    >
+    <View dataSet={{ print: 'hide' }} style={styles.sticky}>
       {children}
-    </div>
+    </View>
   );
 }
+
+const styles = StyleSheet.create({
+  sticky: {
+    zIndex: 5,
+    paddingVertical: space.m,
+    borderTopWidth: 1,
+    borderTopColor: roles.ink,
+    backgroundColor: roles.ground,
+    ...webStyle({ position: 'sticky', bottom: 0 }),
+  },
+});

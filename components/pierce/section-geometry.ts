@@ -35,7 +35,8 @@ type GeometryInput = {
 };
 
 export function sectionGeometry({ measured, depth, lanes, box, timeSpan, editable }: GeometryInput): SectionGeometry {
-  const width = Math.max(280, measured);
+  // narrower the drawing is scaled down, and what is touched would no longer stand on what is drawn
+  const width = Math.max(200, measured);
   const left = 50;
   const right = width - 14;
   const top = 28;

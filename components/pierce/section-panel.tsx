@@ -1,9 +1,9 @@
-import { useMemo, useRef, useState } from 'react';
-import { flushSync } from 'react-dom';
+import { useMemo, useState } from 'react';
+import { View } from 'react-native';
 import { useLayout } from '@/components/theme/layout.ts';
 import { space } from '@/components/theme/space.ts';
 import { knotText } from '@/components/text/pierce-designer.ts';
-import { resultLabel, resultValue, type Explained } from '@/components/text/pierce-explain.ts';
+import { explainText, resultLabel, resultValue, type Explained } from '@/components/text/pierce-explain.ts';
 import {
   conditionWords,
   laneText,
@@ -13,6 +13,7 @@ import {
   thicknessRangeText,
 } from '@/components/text/pierce.ts';
 import { Choice } from '@/components/ui/choice.tsx';
+import { FigureButton } from '@/components/ui/figure-button.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Sheet } from '@/components/ui/sheet.tsx';
 import { Stack } from '@/components/ui/stack.tsx';
@@ -23,13 +24,14 @@ import type { StrategyContent } from '@/shared/strategies.ts';
 import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
 import { DEFAULT_RESERVE_RULES, type ReserveRules, type Stage } from '@/strategy/pierce/index.ts';
 import { quantityText } from '@/strategy/units/index.ts';
-import { ExplainDialog, ResultButton, ResultGrid } from './explain.tsx';
+import { ExplainDialog, ResultGrid } from './explain.tsx';
 import type { Ghost } from './ghost.ts';
 import { KnotEditor } from './knot-editor.tsx';
-import type { KnotEditing } from './knot-layer.tsx';
+import type { KnotEditing } from './knot-editing.ts';
 import { targetMoved, targetValue, type Target } from './knots.ts';
 import { laneNames, type LaneName } from './section-layout.ts';
 import { SectionView } from './section-view.tsx';
+import { useFrameState } from './use-frame-state.web.ts';
 import { predicted, type LivePrediction } from './use-prediction.ts';
 
 /** What the drawing changes when something in it is moved. */
@@ -102,17 +104,20 @@ export function SectionPanel({
     : undefined;
 
   const from = { prediction, content: shown.content, nozzle, rules, system };
-  const reserve = (name: 'reserveCold' | 'reserveHot') => (
-    <ResultButton
-      label={resultLabel[name]}
-      value={resultValue(name, prediction, system)}
-      onPress={() => setExplained({ name })}
-    />
-  );
+  const reserve = (name: 'reserveCold' | 'reserveHot') => {
+    const value = resultValue(name, prediction, system);
+    return (
+      <FigureButton
+        value={value}
+        spoken={explainText.spoken(resultLabel[name], value)}
+        onPress={() => setExplained({ name })}
+      />
+    );
+  };
   return (
     <Stack gap="m">
       <Panel flush>
-        <div style={{ padding: wide ? space.l : space.s, paddingBottom: space.s }}>
+        <View style={{ padding: wide ? space.l : space.s, paddingBottom: space.s }}>
           <SectionView
             prediction={prediction}
             stages={stages}
@@ -125,15 +130,15 @@ export function SectionPanel({
             held={dragged ? live.content.stages : undefined}
             editing={editing}
           />
-        </div>
+        </View>
         {editing && (
-          <div style={{ padding: wide ? space.l : space.m, paddingTop: 0 }}>
+          <View style={{ padding: wide ? space.l : space.m, paddingTop: 0 }}>
             {target ? (
               <KnotEditor key={JSON.stringify(target)} {...{ editing, target, stages, system }} />
             ) : (
               <Small>{knotText.none}</Small>
             )}
-          </div>
+          </View>
         )}
       </Panel>
       {!wide && (
@@ -197,30 +202,4 @@ function previewed(
   }));
   const content = { ...live.content, stages };
   return { prediction: predicted(content, profile, nozzle, rules) ?? live.prediction, content, behind: false };
-}
-
-/** State that is drawn at most once a frame however often it is set; null is drawn at once. */
-function useFrameState<T>(first: T | null): [T | null, (next: T | null) => void] {
-  const [state, setState] = useState(first);
-  const waiting = useRef<{ frame: number; next: T } | null>(null);
-  const set = (next: T | null) => {
-    if (next === null) {
-      if (waiting.current) cancelAnimationFrame(waiting.current.frame);
-      waiting.current = null;
-      setState(null);
-      return;
-    }
-    if (waiting.current) {
-      waiting.current.next = next;
-      return;
-    }
-    const frame = requestAnimationFrame(() => {
-      const last = waiting.current;
-      waiting.current = null;
-      // drawn in this very frame, not in one after it
-      if (last) flushSync(() => setState(last.next));
-    });
-    waiting.current = { frame, next };
-  };
-  return [state, set];
 }

@@ -1,5 +1,6 @@
 import { useId, useState } from 'react';
 import { View } from 'react-native';
+import Svg, { Circle, ClipPath, Defs, G, Line, Path, Rect, Text as SvgText } from 'react-native-svg';
 import { roles } from '@/components/theme/roles.ts';
 import { family } from '@/components/theme/type.ts';
 import { knotText } from '@/components/text/pierce-designer.ts';
@@ -9,7 +10,8 @@ import type { Stage } from '@/strategy/pierce/stage.ts';
 import { quantityIn, type UnitSystem } from '@/strategy/units/index.ts';
 import type { Ghost } from './ghost.ts';
 import { centreLine, HatchPattern } from './hatch.tsx';
-import { KnotLayer, type KnotEditing } from './knot-layer.tsx';
+import type { KnotEditing } from './knot-editing.ts';
+import { KnotLayer } from './knot-layer.tsx';
 import { laneScale } from './lane-scale.ts';
 import { Lane } from './lane.tsx';
 import { niceTicks } from './nice-ticks.ts';
@@ -90,41 +92,37 @@ export function SectionView({
   const timeTicks = niceTicks(timeSpan, width > 560 ? 7 : 4);
 
   return (
-    <View
-      style={{ position: 'relative' }}
-      onLayout={(event) => setMeasured(Math.round(event.nativeEvent.layout.width) || 720)}
-    >
-      <svg
+    <View onLayout={(event) => setMeasured(Math.round(event.nativeEvent.layout.width) || 720)}>
+      <Svg
         width="100%"
         height={height}
         viewBox={`0 0 ${width} ${height}`}
         role="img"
         aria-label={sectionWords(prediction, stages, system)}
-        style={{ display: 'block' }}
       >
-        <defs>
+        <Defs>
           <HatchPattern id={`${id}steel`} spacing={9} colour={roles.steelLine} weight={0.9} />
           <HatchPattern id={`${id}spare`} spacing={10} colour={roles.ember} weight={1} falling />
-          <clipPath id={`${id}plate`}>
-            <rect x={left} y={top} width={Math.max(0, end - left)} height={depth} />
-          </clipPath>
-        </defs>
+          <ClipPath id={`${id}plate`}>
+            <Rect x={left} y={top} width={Math.max(0, end - left)} height={depth} />
+          </ClipPath>
+        </Defs>
 
         {/* the steel still standing below the bore, at each moment */}
-        <g clipPath={`url(#${id}plate)`}>
-          <path
+        <G clipPath={`url(#${id}plate)`}>
+          <Path
             d={`${polylineData(coldTrace)}L${coldEnd} ${bottom}L${left} ${bottom}Z`}
             fill={roles.steelFill}
             stroke="none"
           />
-          <path
+          <Path
             d={`${polylineData(coldTrace)}L${coldEnd} ${bottom}L${left} ${bottom}Z`}
             fill={`url(#${id}steel)`}
             stroke="none"
           />
           {cold.breakthrough.kind === 'ok' && (
-            <rect
-              data-testid="section-reserve"
+            <Rect
+              testID="section-reserve"
               x={coldEnd}
               y={top}
               width={Math.max(0, end - coldEnd)}
@@ -133,9 +131,9 @@ export function SectionView({
               fillOpacity={0.55}
             />
           )}
-        </g>
+        </G>
         {chosen !== null && ends[chosen] !== undefined && (
-          <rect
+          <Rect
             x={x((ends[chosen] ?? 0) - (stages[chosen]?.duration ?? 0))}
             y={top}
             width={x(stages[chosen]?.duration ?? 0) - left}
@@ -149,9 +147,9 @@ export function SectionView({
           const from = x(end - (stages[index]?.duration ?? 0));
           const label = fittingLabel(x(end) - from, sectionText.stage(index + 1));
           return (
-            <g key={index}>
+            <G key={index}>
               {label !== null && (
-                <text
+                <SvgText
                   x={(from + x(end)) / 2}
                   y={17}
                   textAnchor="middle"
@@ -160,11 +158,11 @@ export function SectionView({
                   fill={index === chosen ? roles.ember : roles.ink}
                 >
                   {label}
-                </text>
+                </SvgText>
               )}
               {index < ends.length - 1 && (
-                <line
-                  data-testid="section-boundary"
+                <Line
+                  testID="section-boundary"
                   x1={x(end)}
                   x2={x(end)}
                   y1={6}
@@ -174,20 +172,20 @@ export function SectionView({
                   strokeDasharray={centreLine}
                 />
               )}
-            </g>
+            </G>
           );
         })}
 
         {ghosts.map((ghost) => (
           <GhostTrace key={ghost.label} ghost={ghost} thickness={cold.thickness} {...{ x, y, bottom, right }} />
         ))}
-        <line x1={left} x2={end} y1={top} y2={top} stroke={roles.ink} strokeWidth={2.4} />
-        <line x1={left} x2={end} y1={bottom} y2={bottom} stroke={roles.ink} strokeWidth={2.4} />
-        <path d={polylineData(trace(hot))} fill="none" stroke={roles.hot} strokeWidth={2} strokeDasharray="7 5" />
-        <path d={polylineData(coldTrace)} fill="none" stroke={roles.cold} strokeWidth={2.6} />
+        <Line x1={left} x2={end} y1={top} y2={top} stroke={roles.ink} strokeWidth={2.4} />
+        <Line x1={left} x2={end} y1={bottom} y2={bottom} stroke={roles.ink} strokeWidth={2.4} />
+        <Path d={polylineData(trace(hot))} fill="none" stroke={roles.hot} strokeWidth={2} strokeDasharray="7 5" />
+        <Path d={polylineData(coldTrace)} fill="none" stroke={roles.cold} strokeWidth={2.6} />
         {cold.breakthrough.kind === 'ok' && (
-          <circle
-            data-testid="section-through-cold"
+          <Circle
+            testID="section-through-cold"
             cx={coldEnd}
             cy={bottom}
             r={5.5}
@@ -197,8 +195,8 @@ export function SectionView({
           />
         )}
         {hot.breakthrough.kind === 'ok' && (
-          <circle
-            data-testid="section-through-hot"
+          <Circle
+            testID="section-through-hot"
             cx={x(hot.breakthrough.value)}
             cy={bottom}
             r={5.5}
@@ -209,8 +207,8 @@ export function SectionView({
         )}
 
         {depthTicks.map((tick) => (
-          <g key={tick}>
-            <line
+          <G key={tick}>
+            <Line
               x1={left - 5}
               x2={left}
               y1={y(tick * quantityOne(lengthUnit))}
@@ -218,7 +216,7 @@ export function SectionView({
               stroke={roles.softInk}
               strokeWidth={1}
             />
-            <text
+            <SvgText
               x={left - 9}
               y={y(tick * quantityOne(lengthUnit)) + 5}
               textAnchor="end"
@@ -227,10 +225,10 @@ export function SectionView({
               fill={roles.ink}
             >
               {tick}
-            </text>
-          </g>
+            </SvgText>
+          </G>
         ))}
-        <text
+        <SvgText
           transform={`translate(14 ${(top + bottom) / 2}) rotate(-90)`}
           textAnchor="middle"
           fontFamily={family.label}
@@ -238,7 +236,7 @@ export function SectionView({
           fill={roles.softInk}
         >
           {`${sectionText.depth}, ${lengthUnit}`}
-        </text>
+        </SvgText>
 
         <DimensionRow
           condition={cold}
@@ -287,7 +285,7 @@ export function SectionView({
         ))}
 
         {timeTicks.map((tick) => (
-          <text
+          <SvgText
             key={tick}
             x={x(tick)}
             y={geometry.timeBase}
@@ -297,24 +295,10 @@ export function SectionView({
             fill={roles.ink}
           >
             {`${tick} s`}
-          </text>
+          </SvgText>
         ))}
-      </svg>
-      {editing && (
-        <svg
-          width="100%"
-          height={height}
-          viewBox={`0 0 ${width} ${height}`}
-          role="group"
-          aria-label={knotText.layer}
-          // only what can be taken hold of takes touches: the page scrolls under all the rest
-          style={{ position: 'absolute', left: 0, top: 0, pointerEvents: 'none', overflow: 'visible' }}
-        >
-          <g pointerEvents="all">
-            <KnotLayer {...{ editing, stages, lanes, scales, geometry, system }} />
-          </g>
-        </svg>
-      )}
+      </Svg>
+      {editing && <KnotLayer {...{ editing, stages, lanes, scales, geometry, system }} />}
     </View>
   );
 }
@@ -342,8 +326,8 @@ function GhostTrace({ ghost, thickness, x, y, bottom, right }: GhostTraceProps) 
   const from = Math.max(0, Math.min(right - width, last.x + 8));
   const base = Math.min(last.y, bottom) - 8;
   return (
-    <g data-testid="section-ghost">
-      <path
+    <G testID="section-ghost">
+      <Path
         d={polylineData(points)}
         fill="none"
         stroke={roles.ink}
@@ -351,11 +335,11 @@ function GhostTrace({ ghost, thickness, x, y, bottom, right }: GhostTraceProps) 
         strokeDasharray="1.5 3.5"
         strokeLinecap="round"
       />
-      <rect x={from} y={base - 14} width={width} height={19} fill={roles.sheet} />
-      <text x={from + 4} y={base} fontFamily={family.label} fontSize={14} fill={roles.ink}>
+      <Rect x={from} y={base - 14} width={width} height={19} fill={roles.sheet} />
+      <SvgText x={from + 4} y={base} fontFamily={family.label} fontSize={14} fill={roles.ink}>
         {ghost.label}
-      </text>
-    </g>
+      </SvgText>
+    </G>
   );
 }
 
@@ -384,13 +368,13 @@ function DimensionRow({ condition, plate, short, colour, x, end, y, routineTime,
         ]
       : [dimensionSpan(x(0), end, sectionText.notThrough(plate))];
   return (
-    <g>
+    <G>
       {spans.map((span) => (
-        <g key={span.from}>
+        <G key={span.from}>
           {span.gap && (
-            <rect x={span.gap.from} y={y - 11} width={span.gap.to - span.gap.from} height={20} fill={roles.sheet} />
+            <Rect x={span.gap.from} y={y - 11} width={span.gap.to - span.gap.from} height={20} fill={roles.sheet} />
           )}
-          <path
+          <Path
             d={
               span.gap
                 ? `M${span.from} ${y}H${span.gap.from}M${span.gap.to} ${y}H${span.to}`
@@ -400,13 +384,13 @@ function DimensionRow({ condition, plate, short, colour, x, end, y, routineTime,
             strokeWidth={1.2}
             strokeDasharray={dashed ? '7 5' : undefined}
           />
-          <path
+          <Path
             d={[span.from, span.to].map((at) => `M${at - 5} ${y + 5}L${at + 5} ${y - 5}`).join('')}
             stroke={colour}
             strokeWidth={1.6}
           />
           {span.text !== null && (
-            <text
+            <SvgText
               x={(span.from + span.to) / 2}
               y={y + 5}
               textAnchor="middle"
@@ -415,10 +399,10 @@ function DimensionRow({ condition, plate, short, colour, x, end, y, routineTime,
               fill={colour}
             >
               {span.text}
-            </text>
+            </SvgText>
           )}
-        </g>
+        </G>
       ))}
-    </g>
+    </G>
   );
 }

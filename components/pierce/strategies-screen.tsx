@@ -6,7 +6,6 @@ import { Page } from '@/components/shell/page.tsx';
 import { common } from '@/components/text/common.ts';
 import { strategiesText, thicknessRangeText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
-import { roles } from '@/components/theme/roles.ts';
 import { Empty } from '@/components/ui/empty.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { ButtonLink } from '@/components/ui/link.tsx';
@@ -122,9 +121,7 @@ function StrategyFacts({ strategy, system }: { strategy: StrategySummary; system
       <Small>{strategiesText.reserves(latest.reserveCold, latest.reserveHot)}</Small>
       {strategy.openReports > 0 && (
         <Row gap="s" wrap={false}>
-          <span style={{ color: roles.hot, display: 'inline-flex' }}>
-            <Mark name="caution" size={18} />
-          </span>
+          <Mark name="caution" size={18} tone="hot" />
           <Small tone="hot">{strategiesText.reports(strategy.openReports)}</Small>
         </Row>
       )}

@@ -61,7 +61,6 @@ main:focus{outline:none!important}
 :root [data-look~=dialog]::backdrop{background:var(--veil)}
 :root [data-look~=skip]{position:absolute;left:8px;top:-80px;z-index:20;background:var(--sheet);color:var(--ink);padding:13px 16px;border:1px solid var(--ink)}
 :root [data-look~=skip]:focus{top:8px}
-.cp-hidden{position:absolute;width:1px;height:1px;overflow:hidden;clip-path:inset(50%);white-space:nowrap}
 @keyframes cp-run{from{transform:translateX(-100%)}to{transform:translateX(300%)}}
 :root [data-look~=running]{animation:cp-run 1.4s linear infinite}
 @media (prefers-reduced-motion:reduce){:root [data-look~=running]{animation-duration:6s}}

@@ -107,7 +107,7 @@ const peakOf = async (knot: Locator) => Number(await knot.getAttribute('aria-val
 
 /** A finger put on the middle of something, moved down by so many pixels in a few steps, and lifted. */
 async function dragByTouch(page: Page, on: Locator, down: number) {
-  const box = await on.getByTestId('lane-knot').boundingBox();
+  const box = await on.boundingBox();
   if (!box) throw new Error('The knot is not on the page.');
   const [x, y] = [box.x + box.width / 2, box.y + box.height / 2];
   const finger = await page.context().newCDPSession(page);
