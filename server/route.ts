@@ -4,7 +4,7 @@ import { createHash } from 'node:crypto';
 import { z } from 'zod';
 import { inPlant, type Transaction } from '../db/database.ts';
 import { idempotencyKeys } from '../db/schema/idempotency-keys.ts';
-import type { AnswerOf, Endpoint, ParamsOf } from '../shared/endpoint.ts';
+import type { AnswerOf, Endpoint, Method, ParamsOf } from '../shared/endpoint.ts';
 import { limits } from '../shared/limits.ts';
 import { can, type Actor } from '../shared/policy.ts';
 import { signedInOf, type SignedIn } from './auth/session.ts';
@@ -58,7 +58,7 @@ export type Mount = {
 
 export function mountOn(router: Router, services: Services): Mount {
   const mount = (endpoint: Endpoint, handle: (request: Request, response: Response) => Promise<void>) => {
-    const method = endpoint.method.toLowerCase() as 'get' | 'post' | 'put' | 'patch' | 'delete'; // the same five, in lower case
+    const method = endpoint.method.toLowerCase() as Lowercase<Method>; // the string type is lost by lowering
     router[method](endpoint.path, handle);
   };
   return {

@@ -10,9 +10,8 @@ export const versionSchema = z.number().int().positive();
 
 /** A finite number with bounds in SI; `shown` is how a person reads the range. */
 export function quantity(min: number, max: number, shown: string) {
-  return z
-    .number({ error: `Give a number: ${shown}.` })
-    .refine((value) => value >= min && value <= max, { error: `Must be within ${shown}.` });
+  const within = `Must be within ${shown}.`;
+  return z.number(`Give a number: ${shown}.`).min(min, within).max(max, within);
 }
 
 /** Whole micrometres of plate thickness. */

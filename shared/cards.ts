@@ -1,9 +1,9 @@
 import { z } from 'zod';
-import { idSchema, instantSchema, listOf, nameSchema, thicknessSchema, wordsSchema } from './basics.ts';
+import { idSchema, instantSchema, listOf, nameSchema, personSchema, thicknessSchema, wordsSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
 import { plateSchema, tagSchema } from './plates.ts';
 import { cutConditionsSchema, checkSchema, stageQuantitiesSchema } from './strategies.ts';
-import { focusScaleSchema } from './machines.ts';
+import { focusScaleSchema, nozzleSchema } from './machines.ts';
 
 /** The number to type at this machine for a focus position, m; none when the dial doesn't reach it. */
 export const dialSchema = z.discriminatedUnion('kind', [
@@ -33,7 +33,7 @@ export const cardSchema = z.object({
       strategy: z.object({ id: idSchema, name: z.string() }),
       revision: z.object({ id: idSchema, number: z.number().int(), approvedAt: instantSchema, approvedBy: z.string() }),
       machineRevision: z.object({ number: z.number().int(), newest: z.number().int(), focusScale: focusScaleSchema }),
-      nozzle: z.object({ name: z.string(), type: z.enum(['single', 'double']), diameter: z.number() }),
+      nozzle: nozzleSchema.omit({ id: true }),
       thickness: z.object({ min: z.number().int(), max: z.number().int() }),
       hottestPlate: z.number(), // K
       /** Said before the numbers. */
@@ -77,7 +77,7 @@ export const requestSchema = z.object({
   thickness: z.number().int(), // µm
   plateTag: z.string().nullable(),
   words: z.string(),
-  by: z.object({ id: idSchema, name: z.string() }),
+  by: personSchema,
   at: instantSchema,
   /** An approved strategy exists by now. */
   answered: z.boolean(),

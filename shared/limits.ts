@@ -4,6 +4,8 @@ export const limits = {
   name: 120,
   /** Longest free text (comments, report words), characters. */
   words: 4000,
+  /** Longest note on a machine’s revision, characters. */
+  note: 1000,
   mail: 254, // RFC 5321
   /** ASVS 6.2.1 asks 8 at least; bcrypt reads no more than 72 bytes. */
   passwordMin: 10,

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import type { FocusScale, MachineProfile, Nozzle } from '../strategy/machine.ts';
 import { idSchema, instantSchema, listOf, nameSchema, personSchema, quantity, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
+import { limits } from './limits.ts';
 
 const mm = 1e-3;
 const bar = 1e5;
@@ -102,14 +103,17 @@ export const nozzleFormSchema = z.strictObject({
 export const nozzleSchema = z.object({
   id: idSchema,
   name: z.string(),
-  type: z.enum(['single', 'double']),
-  diameter: z.number(),
+  type: nozzleFormSchema.shape.type,
+  diameter: z.number(), // m
 });
 export type NozzleRow = z.infer<typeof nozzleSchema>;
 
 /** Steel as ordered: `group` is what a strategy is made for, `name` what the certificate says. */
 export const gradeSchema = z.object({ id: idSchema, name: z.string(), group: z.string() });
 export type Grade = z.infer<typeof gradeSchema>;
+
+/** What changed at the machine, and why. */
+export const machineNoteSchema = z.string().trim().max(limits.note);
 
 const machineParams = z.object({ machineId: idSchema });
 
@@ -139,7 +143,7 @@ export const machineEndpoints = {
       revisionId: idSchema,
       name: nameSchema,
       profile: machineProfileSchema,
-      note: z.string().max(1000).default(''),
+      note: machineNoteSchema.default(''),
     }),
     answer: machineSchema,
   }),
@@ -149,7 +153,7 @@ export const machineEndpoints = {
     summary: 'Write a machine’s next revision',
     access: 'machine.write',
     params: machineParams,
-    body: z.strictObject({ id: idSchema, profile: machineProfileSchema, note: z.string().max(1000).default('') }),
+    body: z.strictObject({ id: idSchema, profile: machineProfileSchema, note: machineNoteSchema.default('') }),
     answer: machineSchema,
     ifMatch: true,
   }),

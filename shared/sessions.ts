@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { idSchema } from './basics.ts';
+import { idSchema, instantSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
 import { limits } from './limits.ts';
 import { roles } from './policy.ts';
@@ -17,7 +17,7 @@ export const sessionSchema = z.object({
   role: z.enum(roles),
   mayApprove: z.boolean(),
   memberships: z.array(membershipSchema),
-  expiresAt: z.iso.datetime({ offset: true }),
+  expiresAt: instantSchema,
 });
 export type Session = z.infer<typeof sessionSchema>;
 

@@ -15,6 +15,7 @@ import {
 import { endpoint } from './endpoint.ts';
 import { houseRuleVerdictSchema } from './house-rules.ts';
 import { limits } from './limits.ts';
+import { nozzleSchema } from './machines.ts';
 
 const mm = 1e-3;
 const bar = 1e5;
@@ -173,7 +174,7 @@ export const revisionSchema = z.object({
   /** What the plant's rules say: of a draft today, of what was handed in as they stood then. */
   houseRules: z.array(houseRuleVerdictSchema),
   machine: z.object({ id: idSchema, name: z.string(), revisionNumber: z.number().int() }),
-  nozzle: z.object({ id: idSchema, name: z.string(), type: z.enum(['single', 'double']), diameter: z.number() }),
+  nozzle: nozzleSchema,
   touchedBy: z.array(personSchema),
   changedAt: instantSchema,
   /** What happened to it, oldest first. */

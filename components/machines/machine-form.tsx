@@ -11,15 +11,15 @@ import { Form } from '@/components/ui/form.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Row } from '@/components/ui/stack.tsx';
 import { nameSchema } from '@/shared/basics.ts';
-import { machineProfileSchema } from '@/shared/machines.ts';
+import { machineNoteSchema, machineProfileSchema } from '@/shared/machines.ts';
 import { FocusFields } from './focus-fields.tsx';
 import { ProfileFields } from './profile-fields.tsx';
 
 /** What a machine's form holds; a next revision has the name already. */
-export const machineFormSchema = z.object({
+const machineFormSchema = z.object({
   name: nameSchema,
   profile: machineProfileSchema,
-  note: z.string().trim().max(1000),
+  note: machineNoteSchema,
 });
 export type MachineFormIn = z.input<typeof machineFormSchema>;
 export type MachineFormOut = z.output<typeof machineFormSchema>;

@@ -3,10 +3,11 @@ import { randomUUID } from 'node:crypto';
 import request from 'supertest';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { v7 as newId } from 'uuid';
+import { endpoints } from '../../shared/api.ts';
 import { problemSchema } from '../../shared/errors.ts';
 import { limits } from '../../shared/limits.ts';
 import { gradeEndpoints } from '../../shared/machines.ts';
-import { plateEndpoints } from '../../shared/plates.ts';
+import { plateEndpoints, surfaces } from '../../shared/plates.ts';
 import { recordEndpoints } from '../../shared/record.ts';
 import { connected } from '../support/database.ts';
 import { made, makePlant, testPlate, type TestPlant } from '../support/plant.ts';
@@ -296,16 +297,50 @@ describe('every answer', () => {
     expect(headers['strict-transport-security']).toBeUndefined();
     expect(headers['cache-control']).toBe('no-store');
   });
+});
 
-  test('the description of the API has every route and no other', async () => {
+describe('the description of the API', () => {
+  type Described = {
+    parameters?: { name: string; in: string; required?: boolean }[];
+    requestBody?: { content: Record<string, { schema: unknown }> };
+  };
+  const described = async () => {
     const response = await request(server.server).get('/api/openapi.json');
-    const { paths } = response.body as { paths: Record<string, object> }; // supertest makes it any
-    const { endpoints } = await import('../../shared/api.ts');
-    const described = Object.entries(paths).flatMap(([url, methods]) =>
+    return (response.body as { paths: Record<string, Record<string, Described>> }).paths; // supertest makes it any
+  };
+
+  test('has every route and no other', async () => {
+    const paths = await described();
+    const told = Object.entries(paths).flatMap(([url, methods]) =>
       Object.keys(methods).map((method) => `${method.toUpperCase()} ${url}`),
     );
     const promised = Object.values(endpoints).map(({ method, path }) => `${method} ${path.replace(/:(\w+)/g, '{$1}')}`);
-    expect(described.sort()).toEqual(promised.sort());
+    expect(told.sort()).toEqual(promised.sort());
+  });
+
+  test('tells of a body what its schema refuses: the range, the length, a field that is not known', async () => {
+    const { '/api/plates': plates } = await described();
+    expect(plates?.post?.requestBody?.content['application/json']?.schema).toMatchObject({
+      additionalProperties: false,
+      properties: {
+        tag: { type: 'string', maxLength: limits.tag },
+        nominalThickness: { type: 'integer', minimum: limits.thicknessMin, maximum: limits.thicknessMax },
+        surface: { enum: [...surfaces] },
+        length: { minimum: 0.01, maximum: 50 },
+      },
+    });
+  });
+
+  test('asks for the headers that each route asks for', async () => {
+    const paths = await described();
+    for (const { method, path, ifMatch, idempotencyKey } of Object.values(endpoints)) {
+      const one = paths[path.replace(/:(\w+)/g, '{$1}')]?.[method.toLowerCase()];
+      const headers = (one?.parameters ?? []).filter((parameter) => parameter.in === 'header' && parameter.required);
+      expect(headers.map(({ name }) => name).sort(), `${method} ${path}`).toEqual([
+        ...(idempotencyKey ? ['Idempotency-Key'] : []),
+        ...(ifMatch ? ['If-Match'] : []),
+      ]);
+    }
   });
 });
 
