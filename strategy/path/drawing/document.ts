@@ -1,4 +1,5 @@
 import { nameDecode } from './bytes.ts';
+import { drawingLimits } from './limits.ts';
 import { DrawingRefusal } from './refusal.ts';
 import type { Tags } from './tags.ts';
 
@@ -29,16 +30,12 @@ export type DxfDocument = {
 /** Value of a tag as text, decoded and trimmed. */
 export const tagText = (tags: Tags, i: number): string => nameDecode(String(tags.values[i] ?? '').trim());
 
-/** Value of a tag as a number. Throws DrawingRefusal with the place when it is none. */
+/** Value of a tag as a number. Throws DrawingRefusal with the place when it is none, or larger than a drawing can hold. */
 export function tagNumber(tags: Tags, i: number): number {
   const value = tags.values[i];
-  if (typeof value === 'number') {
-    if (Number.isFinite(value)) return value;
-    throw new DrawingRefusal(`The number at ${tags.placeOf(i)} is not finite. Export the drawing again.`);
-  }
+  if (typeof value === 'number') return withinReason(tags, i, value);
   const text = (value ?? '').trim();
-  const number = /^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/.test(text) ? Number(text) : NaN;
-  if (Number.isFinite(number)) return number;
+  if (/^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/.test(text)) return withinReason(tags, i, Number(text));
   const shown = text.slice(0, 30).replace(/[^\x20-\x7e]/g, '?');
   if (/^[+-]?\d*,\d+([eE][+-]?\d+)?$/.test(text)) {
     const place = tags.placeOf(i);
@@ -48,6 +45,14 @@ export function tagNumber(tags: Tags, i: number): number {
   }
   throw new DrawingRefusal(
     `A number is expected at ${tags.placeOf(i)} but "${shown}" stands there. The file is damaged; export it again.`,
+  );
+}
+
+/** A damaged file holds numbers whose squares are infinite: refused here, before anything is computed with them. */
+function withinReason(tags: Tags, i: number, value: number): number {
+  if (Math.abs(value) <= drawingLimits.number) return value;
+  throw new DrawingRefusal(
+    `The number at ${tags.placeOf(i)} is ${value}, larger than any in a drawing. The file is damaged; export it again.`,
   );
 }
 

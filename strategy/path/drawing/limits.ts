@@ -13,4 +13,6 @@ export const drawingLimits = {
   segments: 300_000,
   /** Farthest place from the origin, m. */
   reach: 1e4,
+  /** Largest number of any kind in the file's own units: a hundred times the reach in micrometres. */
+  number: 1e12,
 } as const;
