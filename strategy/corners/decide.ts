@@ -1,7 +1,7 @@
+import { celsius, degrees, seconds } from '../units/said.ts';
 import type { Candidate, Case, CornerTreatment } from './case.ts';
 import { leaveOption } from './options.ts';
 import type { CornerRules } from './rules.ts';
-import { celsius, degrees, seconds } from './say.ts';
 
 /** The treatment chosen, why, and what must be looked at. */
 export type Decision = { readonly chosen: Candidate; readonly why: string; readonly problem?: string };

@@ -7,9 +7,9 @@ import { loopRadii } from '../path/loop-radius.ts';
 import type { Point } from '../path/point.ts';
 import { pointAdd, pointScale, pointSubtract } from '../path/point.ts';
 import { lineBetween } from '../path/segment.ts';
+import { celsius, millimetres, seconds } from '../units/said.ts';
 import type { Candidate, Case, Context, CornerPlanRequest, CornerTreatment } from './case.ts';
 import { leastDwell } from './dwell.ts';
-import { celsius, millimetres, seconds } from './say.ts';
 
 /** Leaving the corner as it is. */
 export function leaveOption({ without }: Case, limit: number): Candidate {
@@ -40,7 +40,8 @@ export function loopOption(found: Case, context: Context): Candidate {
   if (!corner.convex) return refused('loop', 'the corner is concave: a loop would run through the part');
   const sizes = loopRadii(corner.angle, { ...rules.loop, smallestArc: profile.smallestArc });
   if (sizes.kind === 'none') return refused('loop', sizes.why);
-  let first: Candidate | null = null;
+  const [largest, smallest] = [Math.max(...sizes.radii), Math.min(...sizes.radii)];
+  let inTheWay: { readonly why: string; readonly at: Point } | null = null;
   for (const radius of sizes.radii) {
     const loop = loopAt(onPath, radius);
     const fit = loopFits(loop, {
@@ -52,11 +53,7 @@ export function loopOption(found: Case, context: Context): Candidate {
       loops: context.placed,
     });
     if (fit.kind === 'none') {
-      const tried =
-        sizes.radii.length > 1
-          ? `, and down to ${millimetres(sizes.radii.at(-1) ?? radius)} something is in the way`
-          : '';
-      first ??= refused('loop', `at ${millimetres(radius)} radius ${fit.why}${tried}`, fit.at);
+      inTheWay ??= fit;
       continue;
     }
     const returnWith = returnOf({
@@ -67,9 +64,7 @@ export function loopOption(found: Case, context: Context): Candidate {
       plateTemperature,
       properties,
     });
-    const smaller = first
-      ? `, smaller than the design's ${millimetres(sizes.radii[0] ?? radius)} because ${reasonOf(first)}`
-      : '';
+    const smaller = inTheWay ? `, smaller than the design's ${millimetres(largest)} because ${inTheWay.why}` : '';
     return {
       treatment: 'loop',
       fits: true,
@@ -79,12 +74,9 @@ export function loopOption(found: Case, context: Context): Candidate {
       loop,
     };
   }
-  return first ?? refused('loop', 'no radius is allowed');
+  const tried = smallest < largest ? `, and down to ${millimetres(smallest)} something is in the way` : '';
+  return refused('loop', `at ${millimetres(largest)} radius ${inTheWay?.why ?? 'nothing fits'}${tried}`, inTheWay?.at);
 }
-
-/** The middle of the first refusal: what was in the way. */
-const reasonOf = (refusal: Candidate): string =>
-  refusal.why.replace(/^at [^ ]+ mm radius /, '').replace(/, and down to .*$/, '');
 
 /** Time a loop costs against a sharp turn, s, on straight edges long enough for the feed to be reached. */
 function loopAddedTime(corner: LoopCorner, loop: Loop, { cut, profile }: CornerPlanRequest): number {

@@ -1,4 +1,5 @@
 import Flatbush from 'flatbush';
+import { millimetres } from '../units/said.ts';
 import type { Contour } from './contour.ts';
 import { contourBox, contourContains } from './contour.ts';
 import type { Nearest } from './distance.ts';
@@ -94,11 +95,7 @@ export function loopFits(loop: Loop, around: LoopSurroundings): LoopFit {
       const found = segmentDistance(segment, obstacle.segment);
       if (found.distance >= least - rounding) continue;
       return own
-        ? blocked(
-            'part',
-            found.onSecond,
-            `the loop would come too near its own contour: ${room(found, around.kerfWidth / 2)}`,
-          )
+        ? blocked('part', found.onSecond, `the loop would come too near its own contour: ${room(found, half)}`)
         : blocked('contour', found.onSecond, `${obstacle.name} is in the way: ${room(found, 1.5 * around.kerfWidth)}`);
     }
   }
@@ -169,5 +166,3 @@ const room = (found: Nearest, taken: number): string =>
   found.distance > taken
     ? `only ${millimetres(found.distance - taken)} would stay between them`
     : 'the loop would cut into it';
-
-const millimetres = (length: number): string => `${(length * 1000).toFixed(1)} mm`;

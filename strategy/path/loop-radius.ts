@@ -1,3 +1,4 @@
+import { degrees, millimetres } from '../units/said.ts';
 import { loopExtension } from './loop.ts';
 
 /** Bounds of a loop's size. Lengths in m. */
@@ -29,8 +30,8 @@ export function loopRadii(angle: number, bounds: LoopBounds): LoopRadii {
     return {
       kind: 'none',
       why:
-        `at ${((angle * 180) / Math.PI).toFixed(0)}° an arc of ${(least * 1000).toFixed(1)} mm, the least the machine and the rules allow, ` +
-        `needs an extension of ${(loopExtension(least, angle) * 1000).toFixed(1)} mm; the rules end at ${(bounds.maxExtension * 1000).toFixed(1)} mm`,
+        `at ${degrees(angle)} an arc of ${millimetres(least)}, the least the machine and the rules allow, ` +
+        `needs an extension of ${millimetres(loopExtension(least, angle))}; the rules end at ${millimetres(bounds.maxExtension)}`,
     };
   }
   const first = Math.min(most, Math.max(least, bounds.radius));

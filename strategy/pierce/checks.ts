@@ -1,6 +1,7 @@
 import { dialForFocus } from '../beam/index.ts';
 import type { MachineProfile } from '../machine.ts';
-import { celsiusFromKelvin, numberText, quantityText, type Dimension } from '../units/index.ts';
+import { numberText, quantityText, type Dimension } from '../units/index.ts';
+import { celsius, percent, seconds } from '../units/said.ts';
 import { CRATER_SHARE, leadInNeeded, pierceWarmth } from './lead-in.ts';
 import { pulseTrain } from './pulse.ts';
 import type { Stage, StageQuantities } from './stage.ts';
@@ -194,7 +195,7 @@ function reserveCheck(
   outcome: StrategyOutcome,
   rule: number,
 ): PierceCheck {
-  const plate = `${millimetres(prediction.thickness.max)} at ${degrees(outcome.plateTemperature)}`;
+  const plate = `${millimetres(prediction.thickness.max)} at ${celsius(outcome.plateTemperature)}`;
   const { breakthrough, reserve } = outcome;
   if (reserve.kind === 'none' || breakthrough.kind === 'none') {
     const why = breakthrough.kind === 'none' ? breakthrough.why : '';
@@ -273,7 +274,7 @@ function steepStep(end: StageQuantities, start: StageQuantities): string | undef
 }
 
 function eruptionCheck({ eruption }: StrategyPrediction): PierceCheck {
-  const facts = `in stage ${eruption.stage + 1} the melt of a pulse fills ${percent(eruption.index)} of the bore, and ${percent(eruption.limit)} throws it out, on ${millimetres(eruption.thickness)} at ${degrees(eruption.plateTemperature)}`;
+  const facts = `in stage ${eruption.stage + 1} the melt of a pulse fills ${percent(eruption.index)} of the bore, and ${percent(eruption.limit)} throws it out, on ${millimetres(eruption.thickness)} at ${celsius(eruption.plateTemperature)}`;
   const stages = [eruption.stage];
   if (eruption.index >= eruption.limit) {
     return check('eruption', 'wrong', `It erupts: ${facts}. Less mean power or shorter pulses there.`, stages);
@@ -328,22 +329,11 @@ function stageName(index: number): string {
   return `Stage ${index + 1}`;
 }
 
+/** To a tenth and without the zero behind the point: plates and craters are told side by side. */
 function millimetres(value: number): string {
   return quantityText(Math.round(value * 1e4) / 1e4, 'length', 'metric').text;
 }
 
-function percent(value: number): string {
-  return quantityText(value, 'ratio', 'metric').text;
-}
-
 function milliseconds(value: number): string {
   return quantityText(value, 'time', 'metric', { unit: 'ms' }).text;
-}
-
-function seconds(value: number): string {
-  return quantityText(value, 'time', 'metric', { unit: 's', decimals: 1 }).text;
-}
-
-function degrees(kelvin: number): string {
-  return `${numberText(celsiusFromKelvin(kelvin), 0)} °C`;
 }

@@ -1,6 +1,7 @@
 import { exponentialIntegral } from '../heat/special-functions.ts';
 import { STEEL_DENSITY, steelConductivity, steelSpecificHeat } from '../steel/index.ts';
-import { celsiusFromKelvin, numberText, quantityText } from '../units/index.ts';
+import { quantityText } from '../units/index.ts';
+import { celsius, millimetres } from '../units/said.ts';
 import { peakRiseAroundLine } from './crater.ts';
 
 /** Heat a pierce leaves in the plate: J per m of thickness, given off evenly over so many s. */
@@ -69,7 +70,7 @@ export function leadInNeeded({
   if (!(allowed > 0)) {
     return {
       kind: 'none',
-      why: `The plate itself, at ${degrees(plateTemperature)}, is not below the ${degrees(startTemperature)} that a contour may begin in.`,
+      why: `The plate itself, at ${celsius(plateTemperature)}, is not below the ${celsius(startTemperature)} that a contour may begin in.`,
     };
   }
   const forCrater = craterRadius / CRATER_SHARE;
@@ -77,15 +78,14 @@ export function leadInNeeded({
   const length = Math.max(forCrater, forHeat);
   const shown = quantityText(Math.ceil(length * 1e4 - 1e-6) / 1e4, 'length', 'metric').text;
   if (forCrater >= forHeat) {
-    const radius = quantityText(craterRadius, 'length', 'metric', { decimals: 1 }).text;
     return {
       kind: 'ok',
       length,
       decides: 'crater',
-      sentence: `${shown}, to start clear of a crater ${radius} in radius`,
+      sentence: `${shown}, to start clear of a crater ${millimetres(craterRadius)} in radius`,
     };
   }
-  const sentence = `${shown}, to start in steel that the pierce leaves below ${degrees(startTemperature)}`;
+  const sentence = `${shown}, to start in steel that the pierce leaves below ${celsius(startTemperature)}`;
   return { kind: 'ok', length, decides: 'heat', sentence };
 }
 
@@ -101,8 +101,4 @@ function distanceOfWarmth(heat: PierceHeat, rise: number): number {
     else far = middle;
   }
   return far;
-}
-
-function degrees(kelvin: number): string {
-  return `${numberText(celsiusFromKelvin(kelvin), 0)} °C`;
 }

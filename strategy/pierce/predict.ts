@@ -1,6 +1,7 @@
 import type { MachineProfile, Nozzle } from '../machine.ts';
 import { PLATE_TEMPERATURE_RANGE } from '../steel/index.ts';
-import { numberText, quantityText } from '../units/index.ts';
+import { quantityText } from '../units/index.ts';
+import { millimetres } from '../units/said.ts';
 import {
   BOTTOM_LIGHT,
   boreMoment,
@@ -304,11 +305,7 @@ function stallCause(
 function notThrough(depth: number, thickness: number, speed: number, total: number): string {
   const where = `${millimetres(depth)} of ${millimetres(thickness)}`;
   if (speed < STALL_SPEED) return `Not through: stands still at ${where}. It needs more mean power at depth.`;
-  return `Not through: the routine ends after ${quantityText(total, 'time', 'metric').text} at ${where}, still going down at ${numberText(speed * 1000, 1)} mm/s.`;
-}
-
-function millimetres(value: number): string {
-  return quantityText(value, 'length', 'metric', { decimals: 1 }).text;
+  return `Not through: the routine ends after ${quantityText(total, 'time', 'metric').text} at ${where}, still going down at ${quantityText(speed, 'speed', 'metric', { unit: 'mm/s', decimals: 1 }).text}.`;
 }
 
 function watts(value: number): string {

@@ -1,5 +1,6 @@
 import type { MachineProfile, Nozzle } from '../machine.ts';
 import { numberText, quantityText } from '../units/index.ts';
+import { millimetres, percent, seconds } from '../units/said.ts';
 import { boreOf } from './bore.ts';
 import { DEFAULT_RESERVE_RULES, pierceChecks, type PierceCheck, type ReserveRules } from './checks.ts';
 import { pierceParameters, type PierceParameters } from './parameters.ts';
@@ -17,7 +18,7 @@ import {
 import { frameOf, type Frame } from './propose-plan.ts';
 import { planSearch, SearchBudget, type SearchWatch } from './propose-search.ts';
 import { pierceResults } from './results.ts';
-import { stageProblems } from './stage-problems.ts';
+import { MOST_STAGES, stageProblems } from './stage-problems.ts';
 import type { Stage } from './stage.ts';
 import { COLD_PLATE_TEMPERATURE, strategyPrediction, type StrategyPrediction } from './strategy-prediction.ts';
 
@@ -151,8 +152,8 @@ function framesOf({ profile, pinned, limits }: ProposeInput): readonly Frame[] {
   const given = pinned.filter((stage) => stage !== null);
   const [problem] = given.length === 0 ? [] : stageProblems(given, profile);
   if (problem !== undefined) throw new RangeError(`pinned ${problem.path}: ${problem.problem}`);
-  if (!(pinned.length >= 1 && pinned.length <= 20)) {
-    throw new RangeError(`${pinned.length} stages are outside [1, 20]`);
+  if (!(pinned.length >= 1 && pinned.length <= MOST_STAGES)) {
+    throw new RangeError(`${pinned.length} stages are outside [1, ${MOST_STAGES}]`);
   }
   return [frameOf(profile, pinned, mostPower)];
 }
@@ -313,18 +314,6 @@ function obstacle(input: ProposeInput, brief: Brief, judged: Judged, place: numb
   }
 }
 
-function millimetres(value: number): string {
-  return quantityText(value, 'length', 'metric', { decimals: 1 }).text;
-}
-
 function hundredths(value: number): string {
   return quantityText(value, 'length', 'metric').text;
-}
-
-function percent(value: number): string {
-  return quantityText(value, 'ratio', 'metric').text;
-}
-
-function seconds(value: number): string {
-  return quantityText(value, 'time', 'metric', { unit: 's', decimals: 1 }).text;
 }

@@ -1,6 +1,6 @@
 import type { Nozzle } from '../machine.ts';
 import { PLATE_TEMPERATURE_RANGE } from '../steel/index.ts';
-import { celsiusFromKelvin, numberText } from '../units/index.ts';
+import { celsius } from '../units/said.ts';
 import { pierceParameters, pierceParameterTable, type PierceParameters } from './parameters.ts';
 import { pierceOutline, THICKEST_PLATE } from './predict.ts';
 import type { Reserve, StrategyInput } from './strategy-prediction.ts';
@@ -71,6 +71,6 @@ export function pierceSensitivity(input: StrategyInput): readonly SensitivityRow
       parameters: off('jetSpread', WORN_SPREAD),
     }),
     row('thicker', 'The plate is 2 mm thicker', { thickness: Math.min(THICKEST_PLATE, thickness + THICKER) }),
-    row('hot-plate', `The plate is at ${numberText(celsiusFromKelvin(hottest), 0)} °C`, { plateTemperature: hottest }),
+    row('hot-plate', `The plate is at ${celsius(hottest)}`, { plateTemperature: hottest }),
   ];
 }

@@ -1,5 +1,5 @@
 import { dimensionUnits, siFrom, siTo, unitFind, unitOf, unitSymbol, type Dimension, type Unit } from './dimension.ts';
-import { numberText } from './text.ts';
+import { MINUS, numberText, withSymbol } from './text.ts';
 
 /** What a text means: the SI value and how it was understood, to be shown beside the field; or why it means nothing. */
 export type QuantityParsed =
@@ -152,16 +152,13 @@ function understoodAs(inUnit: number, typed: Unit, usual: Unit): string {
 }
 
 function withUnit(value: number, shown: Unit): string {
-  const symbol = unitSymbol(shown);
-  const number = significant(value);
-  if (symbol === '°') return `${number}°`;
-  return symbol === '×' ? number : `${number} ${symbol}`;
+  return withSymbol(significant(value), unitSymbol(shown));
 }
 
 /** Five significant figures, more when the whole part is longer; very large and very small ones with an exponent. */
 function significant(value: number): string {
   const size = Math.abs(value);
-  if (size !== 0 && (size >= 1e9 || size < 1e-6)) return value.toExponential(4).replace('-', '−');
+  if (size !== 0 && (size >= 1e9 || size < 1e-6)) return value.toExponential(4).replaceAll('-', MINUS);
   const decimals = size === 0 ? 0 : Math.max(0, 4 - Math.floor(Math.log10(size)));
   return numberText(value, Math.min(decimals, 10));
 }

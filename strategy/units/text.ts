@@ -22,7 +22,7 @@ export const MINUS = '−';
 
 /**
  * A quantity as somebody reads it: number, unit and both together, without thousands marks, with a real minus.
- * Decimals are chosen so that what is shown in one system, typed and shown in the other and back, is the same again.
+ * Decimals are chosen so that what is shown as metric comes back the same when the inch text of it is typed again.
  * `value` is SI. RangeError when it is not finite: "no answer" is told apart before it comes here.
  */
 export function quantityText(
@@ -41,7 +41,7 @@ export function quantityText(
       : trimmed(inUnit, decimalsOf(inUnit, options, options.unit === undefined ? usual.decimals : decimalsFor(inUnit)));
   const symbol = unitSymbol(shown);
   const signed = withSign(number, options.sign === true);
-  return { number: signed, unit: symbol, text: joined(signed, symbol) };
+  return { number: signed, unit: symbol, text: withSymbol(signed, symbol) };
 }
 
 /** A number with up to so many decimals, trailing zeros left out, real minus. For counts and figures without a unit. */
@@ -50,7 +50,8 @@ export function numberText(value: number, decimals: number): string {
   return withSign(trimmed(value, decimals), false);
 }
 
-function joined(number: string, symbol: string): string {
+/** Number and unit as they stand side by side. Not of the folder's face: `quantityText` is. */
+export function withSymbol(number: string, symbol: string): string {
   if (symbol === '°') return `${number}°`;
   if (symbol === '×') return number;
   return `${number} ${symbol}`;

@@ -1,3 +1,4 @@
+import { quantityText } from '../../units/index.ts';
 import type { Contour } from '../contour.ts';
 import type { Box, Point } from '../point.ts';
 import { boxUnion, emptyBox } from '../point.ts';
@@ -245,8 +246,7 @@ const none = (why: string): NoDrawing => ({ kind: 'none', why });
 
 function implausible(bounds: Box, unit: DrawingUnit): string | null {
   const largest = Math.max(bounds.maxX - bounds.minX, bounds.maxY - bounds.minY);
-  if (largest < plausibleSize.least)
-    return `read in ${unit} the whole drawing is only ${(largest * 1000).toPrecision(2)} mm`;
+  if (largest < plausibleSize.least) return `read in ${unit} the whole drawing is only ${millimetres(largest, 2)}`;
   if (largest > plausibleSize.most) return `read in ${unit} the drawing is ${largest.toFixed(0)} m`;
   return null;
 }
@@ -254,12 +254,13 @@ function implausible(bounds: Box, unit: DrawingUnit): string | null {
 function unitQuestion(doubt: string | null, taken: DrawingUnit, size: Size): DrawingQuestion[] {
   if (doubt === null) return [];
   const times = (factor: number): Size => ({ width: size.width * factor, height: size.height * factor });
+  const inch = unitLength.inch / unitLength.mm;
   return [
     {
       kind: 'unit',
       why: `In which unit is this drawing? ${doubt.charAt(0).toUpperCase()}${doubt.slice(1)}.`,
       taken,
-      sizes: { asMillimetres: { mm: size, inch: times(1 / 25.4) }, asInches: { mm: times(25.4), inch: size } },
+      sizes: { asMillimetres: { mm: size, inch: times(1 / inch) }, asInches: { mm: times(inch), inch: size } },
     },
   ];
 }
@@ -272,7 +273,7 @@ function gapQuestion(gaps: readonly Gap[]): DrawingQuestion[] {
   return [
     {
       kind: 'gaps',
-      why: `${many} of ${millimetres(widest)}. Should gaps up to that be closed?`,
+      why: `${many} of ${millimetres(widest, 3)}. Should gaps up to that be closed?`,
       gaps,
       tolerance: widest * (1 + 1e-6),
     },
@@ -303,4 +304,5 @@ function noContour(open: readonly Chain[], unit: DrawingUnit): NoDrawing {
 const placeIn = (p: Point, unit: DrawingUnit): string =>
   `(${trim(p.x / unitLength[unit])}, ${trim(p.y / unitLength[unit])}) ${unit}`;
 const trim = (value: number): string => String(Number(value.toFixed(3)));
-const millimetres = (length: number): string => `${Number((length * 1000).toPrecision(3))} mm`;
+const millimetres = (length: number, figures: number): string =>
+  quantityText(length, 'length', 'metric', { figures }).text;

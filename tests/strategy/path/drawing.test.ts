@@ -102,7 +102,7 @@ describe('the bearing plate', () => {
       '$113',
     );
     expect(drawingRead(textBytes(asMicrometres))).toMatchObject({ unit: 'µm', unitAsked: true });
-    expect(said(textBytes(asMicrometres))).toContain('only 0.30 mm');
+    expect(said(textBytes(asMicrometres))).toContain('only 0.3 mm');
     const asMetres = asMicrometres.replace(/(\$INSUNITS\n\s*70\n)13/, '$16');
     expect(said(textBytes(asMetres))).toContain('is 300 m');
   });
@@ -342,7 +342,26 @@ describe('a file that is no drawing', () => {
       /\n11\n50\n|\n 11\n50\n/,
       '\n 11\n1e200\n',
     );
-    expect(said(textBytes(far))).toContain('more than 10 km away');
+    expect(said(textBytes(far))).toContain('is 1e+200, larger than any in a drawing');
+    expect(said(textBytes(far.replace('1e200', '1e9')))).toContain('more than 10 km away');
+  });
+
+  // a bulge of 1e200 or a place at 1e308 once threw out of the reader: the arc's radius was infinite
+  it('is refused or read, and never throws, whichever of its numbers is far too large or far too small', () => {
+    for (const name of ['bearing-plate.dxf', 'bollard-base.dxf', 'foot-plate-r12.dxf']) {
+      const lines = readFileSync(path.join(folder, name), 'utf8').split(/\r?\n/);
+      const geometry = lines.flatMap((line, i) =>
+        i % 2 === 0 && /^\s*([1-5]\d|2[123]0)$/.test(line) && i > lines.indexOf('BLOCKS') ? [i + 1] : [],
+      );
+      expect(geometry.length).toBeGreaterThan(30);
+      for (const i of geometry) {
+        for (const value of ['1e308', '-1e308', '1e200', '1e12', '-1e12', '1e-320']) {
+          const result = drawingRead(textBytes(lines.with(i, value).join('\n')));
+          if (result.kind === 'none') continue;
+          for (const { contour } of result.contours) expect(Number.isFinite(contourArea(contour))).toBe(true);
+        }
+      }
+    }
   });
 
   it('throws only for a caller who gives a tolerance below 0', () => {
