@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { idSchema, instantSchema, personSchema, pointSchema, quantity, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
 import { contourSchema, segmentSchema } from './parts.ts';
+import { revisionStates } from './strategies.ts';
 
 /** `ease` and `round` are named by the trade too; the plan offers them once their geometry and heat are computed. */
 export const treatments = ['loop', 'dwell', 'leave'] as const;
@@ -63,7 +64,7 @@ export const cornerPlanSchema = z.object({
     number: z.number().int(),
     strategyId: idSchema,
     strategyName: z.string(),
-    state: z.string(),
+    state: z.enum(revisionStates),
     approved: z.boolean(),
   }),
   thickness: z.number(), // m

@@ -9,7 +9,7 @@ import { Page } from '@/components/shell/page.tsx';
 import { common } from '@/components/text/common.ts';
 import { cornerText, treatmentText } from '@/components/text/corners.ts';
 import { momentText } from '@/components/text/moments.ts';
-import { stateWord } from '@/components/text/pierce.ts';
+import { stateText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
@@ -139,7 +139,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
           label: cornerText.revisionOption(
             plan.revision.strategyName,
             plan.revision.number,
-            stateWord(plan.revision.state),
+            stateText[plan.revision.state],
           ),
         }}
         label={cornerText.settingsSave}
@@ -165,7 +165,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
       }
     >
       {!plan.revision.approved && (
-        <Notice kind="caution">{cornerText.notApproved(stateWord(plan.revision.state))}</Notice>
+        <Notice kind="caution">{cornerText.notApproved(stateText[plan.revision.state])}</Notice>
       )}
       <DrawingView
         label={cornerText.drawing(plan.part.name, plan.totals)}
@@ -227,7 +227,7 @@ function Totals({ plan }: { plan: CornerPlan }) {
             value: cornerText.revisionOption(
               plan.revision.strategyName,
               plan.revision.number,
-              stateWord(plan.revision.state),
+              stateText[plan.revision.state],
             ),
             share: 3,
           },

@@ -126,7 +126,7 @@ export function PlanForm({ initial, current, label, busy, error, onPlan }: PlanF
 
 type RevisionOption = { value: string; label: string; thickness: StrategySummary['thickness'] | null };
 
-/** Of each strategy the approved revision and the newest one, each said to be what it is. */
+/** Of each strategy the approved revision and the newest one that was handed in, each said to be what it is. */
 function revisionOptions(
   strategies: readonly StrategySummary[],
   current: PlanFormProps['current'],
@@ -141,7 +141,7 @@ function revisionOptions(
           },
         ]
       : []),
-    ...(latest.id === approved?.id
+    ...(latest.id === approved?.id || latest.state === 'draft'
       ? []
       : [
           {

@@ -102,7 +102,7 @@ export const partsText = {
   planRow: (strategy: string, number: number) => `${strategy}, revision ${number}`,
   planWith: 'Plan corners with …',
   planButton: 'Plan the corners',
-  noStrategies: 'There is no strategy to plan with yet.',
+  noStrategies: 'No strategy was handed in yet to plan with.',
   drawing: (name: string, reading: DrawingReadingWire, system: UnitSystem) => {
     const { min, max } = reading.bounds;
     const holes = reading.contours.filter(({ role }) => role === 'hole').length;

@@ -86,10 +86,6 @@ export const stateText: Readonly<Record<RevisionState, string>> = {
   withdrawn: 'Withdrawn',
 };
 
-/** The word for a state that came as plain text. */
-export const stateWord = (state: string): string =>
-  Object.entries(stateText).find(([name]) => name === state)?.[1] ?? state;
-
 export const checksText = {
   inOrder: (number: number) => (number === 1 ? 'Show the one in order' : `Show the ${number} in order`),
   hide: 'Hide what is in order',

@@ -53,7 +53,7 @@ async function matchFor(
     };
   }
   const names = await namesOf(tx);
-  const plans = await plansWith(tx, [found.revision.id]);
+  const plans = await plansWith(tx, found.revision.id);
   const rules = await rulesInForce(tx);
   return cardMatch({
     found,

@@ -1,4 +1,4 @@
-import { and, eq, inArray, sql } from 'drizzle-orm';
+import { eq, sql } from 'drizzle-orm';
 import type { Transaction } from '../../db/database.ts';
 import { cornerPlans } from '../../db/schema/corner-plans.ts';
 import { machineRevisions } from '../../db/schema/machine-revisions.ts';
@@ -28,12 +28,12 @@ export async function lockCornerPlan(tx: Transaction, id: string): Promise<Corne
 /** What a plan is computed from. */
 export async function planSources(tx: Transaction, partId: string, revisionId: string) {
   const [part] = await tx.select().from(parts).where(eq(parts.id, partId));
-  const [revision] = await tx
-    .select({ id: strategyRevisions.id, content: strategyRevisions.content, profile: machineRevisions.profile })
+  const [strategy] = await tx
+    .select({ revision: strategyRevisions, profile: machineRevisions.profile })
     .from(strategyRevisions)
     .innerJoin(machineRevisions, eq(machineRevisions.id, strategyRevisions.machineRevisionId))
     .where(eq(strategyRevisions.id, revisionId));
-  return { part: part ?? null, revision: revision ?? null };
+  return { part: part ?? null, strategy: strategy ?? null };
 }
 
 type Computed = Pick<
@@ -61,12 +61,12 @@ export async function replaceCornerPlan(
 }
 
 /** Plans made with a revision, without their corners: what a plate card lists. */
-export async function plansWith(tx: Transaction, revisionIds: readonly string[]) {
+export async function plansWith(tx: Transaction, revisionId: string) {
   return tx
     .select({ id: cornerPlans.id, partId: parts.id, partName: parts.name, totals: cornerPlans.totals })
     .from(cornerPlans)
     .innerJoin(parts, eq(parts.id, cornerPlans.partId))
-    .where(and(inArray(cornerPlans.revisionId, [...revisionIds])))
+    .where(eq(cornerPlans.revisionId, revisionId))
     .orderBy(parts.name, cornerPlans.id)
     .limit(limits.listRows);
 }

@@ -1,5 +1,4 @@
-import type { Transaction } from '../../db/database.ts';
-import { inPlant } from '../../db/database.ts';
+import { inPlant, type Transaction } from '../../db/database.ts';
 import { cornerPlanEndpoints, type CornerPlan } from '../../shared/corner-plans.ts';
 import { drawingReadingSchema } from '../../shared/parts.ts';
 import { AppError, notFound } from '../errors.ts';
@@ -17,7 +16,7 @@ export function cornerPlanRoutes({ route, services }: Mount): void {
     replyWith(tx, params.planId, actor.role === 'operator'),
   );
 
-  // Planning takes seconds for a part of many corners: not while a transaction is open. Part and revision content never change.
+  // Planning takes seconds for a part of many corners: not while a transaction is open. A part never changes, nor what was handed in.
   route(
     cornerPlanEndpoints.add,
     async ({ actor, body }) => {
@@ -100,15 +99,22 @@ const choicesOf = ({ plateTemperature, thickness, skeleton, overrides }: Choices
 });
 
 async function sourceOf(tx: Transaction, partId: string, revisionId: string): Promise<PlanSource> {
-  const { part, revision } = await planSources(tx, partId, revisionId);
+  const { part, strategy } = await planSources(tx, partId, revisionId);
   if (!part) throw notFound('There is no such part');
-  if (!revision) throw notFound('There is no such revision');
+  if (!strategy) throw notFound('There is no such revision');
+  const { revision, profile } = strategy;
+  if (revision.state === 'draft') {
+    throw new AppError(
+      'wrong-state',
+      `Revision ${revision.number} is a draft: its numbers may still change, and the plan would not. Plan with one that was handed in.`,
+    );
+  }
   const nozzle = await findNozzle(tx, revision.content.nozzleId);
   if (!nozzle) throw notFound('There is no such nozzle');
   return {
     reading: drawingReadingSchema.parse(part.reading),
     content: revision.content,
-    profile: revision.profile,
+    profile,
     nozzleDiameter: nozzle.diameter,
   };
 }

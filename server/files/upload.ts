@@ -34,7 +34,10 @@ export async function readUpload(
 function asUploadError(error: unknown, maxBytes: number): Error {
   if (error instanceof MulterError) {
     if (error.code === 'LIMIT_FILE_SIZE') {
-      return new AppError('too-large', `At most ${maxBytes / 1024 / 1024} MiB are taken.`);
+      return new AppError(
+        'too-large',
+        `The file has more than the ${maxBytes / 1024 / 1024} MiB that are taken. Make it smaller, or choose another.`,
+      );
     }
     return new AppError('bad-request', 'One file and the field `data` are taken, nothing else.');
   }

@@ -79,6 +79,16 @@ const bytesOf = (file: UploadedFile | null): Uint8Array => file?.bytes ?? new Ui
 
 /** A part is kept only when nothing about its drawing is left to guess. */
 function mustBeDecided(reading: DrawingReadingWire, answers: DrawingAnswers): void {
+  const errors = reading.questions.flatMap((question) => {
+    if (question.kind === 'unit' && !answers.unit) return [{ pointer: '/answers/unit', detail: question.why }];
+    if (question.kind === 'gaps' && answers.gapTolerance === undefined) {
+      return [{ pointer: '/answers/gapTolerance', detail: question.why }];
+    }
+    return [];
+  });
+  // What an answer may still mend is asked before it is refused.
+  if (errors.length > 0)
+    throw new AppError('invalid-fields', 'The drawing leaves something to be decided.', { errors });
   if (reading.contours.length === 0) {
     throw new AppError(
       'bad-drawing',
@@ -92,15 +102,6 @@ function mustBeDecided(reading: DrawingReadingWire, answers: DrawingAnswers): vo
       `Contours cross in ${places}: that is no part yet. Mend the drawing and export it again.`,
     );
   }
-  const errors = reading.questions.flatMap((question) => {
-    if (question.kind === 'unit' && !answers.unit) return [{ pointer: '/answers/unit', detail: question.why }];
-    if (question.kind === 'gaps' && answers.gapTolerance === undefined) {
-      return [{ pointer: '/answers/gapTolerance', detail: question.why }];
-    }
-    return [];
-  });
-  if (errors.length > 0)
-    throw new AppError('invalid-fields', 'The drawing leaves something to be decided.', { errors });
 }
 
 async function replyWith(tx: Transaction, id: string) {

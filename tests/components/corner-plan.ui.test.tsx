@@ -172,10 +172,10 @@ describe('a corner plan', () => {
   });
 
   it('warns that a plan of an unapproved revision is on no card', async () => {
-    const revision = { ...planOf().revision, state: 'draft', approved: false };
+    const revision = { ...planOf().revision, state: 'inReview' as const, approved: false };
     serveWith(({ path }) => json(path.startsWith('/api/corner-plans') ? planOf({ revision }) : { items: [] }));
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
-    expect(await screen.findByText(/not approved \(Draft\). It is not shown on a card/)).toBeTruthy();
+    expect(await screen.findByText(/not approved \(In review\). It is not shown on a card/)).toBeTruthy();
   });
 });
 

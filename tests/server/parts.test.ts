@@ -4,12 +4,13 @@ import path from 'node:path';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { v7 as newId } from 'uuid';
 import { sweepStrayFiles } from '../../server/files/sweep.ts';
+import { cardEndpoints } from '../../shared/cards.ts';
 import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
 import { limits } from '../../shared/limits.ts';
 import { partEndpoints } from '../../shared/parts.ts';
-import { revisionEndpoints } from '../../shared/strategies.ts';
+import { revisionEndpoints, strategyEndpoints } from '../../shared/strategies.ts';
 import { connected } from '../support/database.ts';
-import { made, makeApproved, makePlant, makeSubmitted, type TestPlant } from '../support/plant.ts';
+import { made, makeApproved, makeDraft, makePlant, makeSubmitted, type TestPlant } from '../support/plant.ts';
 import { startTestServer, type Caller, type TestServer } from '../support/server.ts';
 
 let server: TestServer;
@@ -63,15 +64,69 @@ describe('a drawing', () => {
     await made(programmer.call(partEndpoints.add, { ...add, body: { ...add.body, answers: { unit: 'mm' } } }));
   });
 
+  test('with a gap asks whether to close it, and is kept with either answer', async () => {
+    const file = drawing('bracket-gap.dxf');
+    const { body } = await made(programmer.call(partEndpoints.read, { body: {}, file }));
+    const question = body.questions.find(({ kind }) => kind === 'gaps');
+    if (question?.kind !== 'gaps') throw new Error('no question about the gap');
+    const [gap] = question.gaps;
+    expect(gap?.size).toBeCloseTo(0.05e-3, 9);
+    expect(body.openChains).toHaveLength(1);
+
+    const name = 'Bracket';
+    const refused = await programmer.call(partEndpoints.add, { body: { id: newId(), name, answers: {} }, file });
+    expect(refused.status).toBe(400);
+    expect(refused.problem.errors).toEqual([{ pointer: '/answers/gapTolerance', detail: question.why }]);
+    const kept = async (gapTolerance: number) =>
+      (await made(programmer.call(partEndpoints.add, { body: { id: newId(), name, answers: { gapTolerance } }, file })))
+        .body.reading.contours.length;
+    expect(await kept(question.closesAt)).toBe((await kept((gap?.size ?? 0) / 2)) + 1);
+  });
+
+  test('whose only outline has a gap is asked about, and refused only when the gap is to stay', async () => {
+    const file = drawing('bracket-not-closed.dxf');
+    const add = (answers: object) =>
+      programmer.call(partEndpoints.add, { body: { id: newId(), name: 'Bracket', answers }, file });
+    expect((await add({})).problem.errors?.map(({ pointer }) => pointer)).toEqual(['/answers/gapTolerance']);
+    expect((await add({ gapTolerance: 1e-6 })).problem).toMatchObject({
+      code: 'bad-drawing',
+      detail: expect.stringContaining('No outline of the drawing is closed') as unknown,
+    });
+    expect((await add({ gapTolerance: 1e-4 })).status).toBe(201);
+  });
+
   test.each([
-    ['an empty file', { name: 'empty.dxf', bytes: new Uint8Array() }],
-    ['something else with a drawing’s name', drawing('not-a-drawing.dxf')],
-    ['a picture', { name: 'picture.dxf', bytes: Buffer.from('\x89PNG\r\n\x1a\n0000', 'latin1') }],
     [
-      'bytes of no meaning',
-      { name: 'noise.dxf', bytes: Buffer.from(Array.from({ length: 5000 }, (_, n) => (n * n * 31) % 251)) },
+      'is an empty file',
+      { name: 'empty.dxf', bytes: new Uint8Array() },
+      'The file is empty. Export the drawing again.',
     ],
-  ])('that is %s is refused with a sentence, and nothing is kept', async (_what, file) => {
+    [
+      'is something else with a drawing’s name',
+      drawing('not-a-drawing.dxf'),
+      'This file is not a DXF: it does not begin with the pair 0, SECTION. Export the part as DXF.',
+    ],
+    [
+      'has no closed contour',
+      drawing('open-lines.dxf'),
+      'The drawing has no closed contour: its one line of pieces is open, the first from (0, 0) mm. Close the outline in the drawing and export again.',
+    ],
+    [
+      'has decimal commas',
+      drawing('decimal-comma.dxf'),
+      'Line 76 reads "173,205081": a decimal comma. DXF numbers have a decimal point; export the drawing with a point.',
+    ],
+    [
+      'is a picture',
+      { name: 'picture.dxf', bytes: Buffer.from('\x89PNG\r\n\x1a\n0000', 'latin1') },
+      'This file is a picture of pixels, which has no contours; export the drawing as DXF.',
+    ],
+    [
+      'is bytes of no meaning',
+      { name: 'noise.dxf', bytes: Buffer.from(Array.from({ length: 5000 }, (_, n) => (n * n * 31) % 251)) },
+      'Export the part as DXF.',
+    ],
+  ])('that %s is refused with what is wrong, where and what to do, and nothing is kept', async (_what, file, why) => {
     const [keys, parts, files] = [await server.storedKeys(), await rowsOf('parts'), await rowsOf('files')];
     const answer = await programmer.call(partEndpoints.add, {
       body: { id: newId(), name: 'Nothing', answers: {} },
@@ -79,17 +134,20 @@ describe('a drawing', () => {
     });
     expect(answer.status).toBe(422);
     expect(answer.problem.code).toBe('bad-drawing');
-    expect(answer.problem.detail?.length).toBeGreaterThan(20);
+    expect(answer.problem.detail).toContain(why);
     expect([await server.storedKeys(), await rowsOf('parts'), await rowsOf('files')]).toEqual([keys, parts, files]);
   });
 
   test('of more than 10 MiB is refused with 413, and nothing is kept', async () => {
-    const keys = await server.storedKeys();
+    const [keys, parts] = [await server.storedKeys(), await rowsOf('parts')];
     const file = { name: 'huge.dxf', bytes: Buffer.alloc(limits.drawingBytes + 1, '0\n') };
     const answer = await programmer.call(partEndpoints.add, { body: { id: newId(), name: 'Huge', answers: {} }, file });
     expect(answer.status).toBe(413);
-    expect(answer.problem.code).toBe('too-large');
-    expect(await server.storedKeys()).toEqual(keys);
+    expect(answer.problem).toMatchObject({
+      code: 'too-large',
+      detail: 'The file has more than the 10 MiB that are taken. Make it smaller, or choose another.',
+    });
+    expect([await server.storedKeys(), await rowsOf('parts')]).toEqual([keys, parts]);
   });
 
   test('that is missing is asked for', async () => {
@@ -201,7 +259,18 @@ describe('a corner plan', () => {
     expect(answer.problem.errors).toEqual([{ pointer: '/overrides/c9-9', detail: 'The part has no such corner.' }]);
   });
 
-  test('is read by an operator only while its strategy is approved', async () => {
+  test('is not made with a draft, whose numbers may still change under it', async () => {
+    const { id: revisionId } = await makeDraft(plant, { gradeGroup: 'plans of drafts' });
+    const answer = await programmer.call(cornerPlanEndpoints.add, {
+      body: { id: newId(), partId, revisionId, ...choices },
+    });
+    expect(answer.problem).toMatchObject({
+      code: 'wrong-state',
+      detail: expect.stringContaining('Revision 1 is a draft') as unknown,
+    });
+  });
+
+  test('is read by an operator, and named on the card, only while its strategy is approved', async () => {
     const submitted = await makeSubmitted(plant, { gradeGroup: 'for operators' });
     const operator = await plant.as('operator');
     const lead = await plant.as('lead');
@@ -209,14 +278,46 @@ describe('a corner plan', () => {
     await made(
       programmer.call(cornerPlanEndpoints.add, { body: { id: planId, partId, revisionId: submitted.id, ...choices } }),
     );
-    const seen = async () => (await operator.call(cornerPlanEndpoints.get, { params: { planId } })).status;
-    expect(await seen()).toBe(404);
+    const query = { machineId: plant.machineId, gradeGroup: 'for operators', thickness: 19_000 };
+    const named = async () => {
+      const { match } = (await made(operator.call(cardEndpoints.get, { query }))).body;
+      return match.kind === 'approved' ? match.cornerPlans.map(({ id, partName }) => [id, partName]) : match.kind;
+    };
+    const seen = async () => [
+      (await operator.call(cornerPlanEndpoints.get, { params: { planId } })).status,
+      await named(),
+    ];
+    expect(await seen()).toEqual([404, 'none']);
     const params = { revisionId: submitted.id };
     const approved = await made(lead.call(revisionEndpoints.approve, { params, body: {}, version: submitted.version }));
-    expect(await seen()).toBe(200);
+    expect(await seen()).toEqual([200, [[planId, 'Bracket']]]);
     await made(
       lead.call(revisionEndpoints.withdraw, { params, body: { words: 'It erupts.' }, version: approved.version }),
     );
-    expect(await seen()).toBe(404);
+    expect(await seen()).toEqual([404, 'none']);
+  });
+
+  test('of a superseded revision is on no card any more', async () => {
+    const group = { gradeGroup: 'superseded' };
+    const first = await makeApproved(plant, group);
+    const planId = newId();
+    await made(
+      programmer.call(cornerPlanEndpoints.add, { body: { id: planId, partId, revisionId: first.id, ...choices } }),
+    );
+    const [engineer, lead, operator] = [await plant.as('engineer'), await plant.as('lead'), await plant.as('operator')];
+    const next = { revisionId: newId() };
+    await made(
+      engineer.call(strategyEndpoints.draft, {
+        params: { strategyId: first.strategyId },
+        body: { id: next.revisionId, fromRevisionId: first.id },
+        version: 1,
+      }),
+    );
+    const { version } = await made(engineer.call(revisionEndpoints.submit, { params: next, body: {}, version: 1 }));
+    await made(lead.call(revisionEndpoints.approve, { params: next, body: {}, version }));
+    const query = { machineId: plant.machineId, ...group, thickness: 19_000 };
+    const { match } = (await made(operator.call(cardEndpoints.get, { query }))).body;
+    expect(match).toMatchObject({ kind: 'approved', revision: { id: next.revisionId }, cornerPlans: [] });
+    expect((await operator.call(cornerPlanEndpoints.get, { params: { planId } })).status).toBe(404);
   });
 });
