@@ -1,26 +1,20 @@
 import { spawn } from 'node:child_process';
 import { root } from './folders.mjs';
 import { SetupProblem } from './say.mjs';
+import { runQuietly } from './tool.mjs';
 
 // The object store's SDK tells at every start that its coming versions want another Node; the lock file decides that, not a warning.
 const quiet = { AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: 'true' };
 
 /** Runs a TypeScript file of the project to its end; its lines are shown only when it fails. */
-export function runToEnd(file, env) {
-  return new Promise((resolve, reject) => {
-    const child = spawn(process.execPath, ['--import', 'tsx', file], {
-      cwd: root,
-      env: { ...process.env, ...quiet, ...env },
-      stdio: ['ignore', 'pipe', 'pipe'],
-    });
-    let output = '';
-    child.stdout.on('data', (chunk) => (output += chunk));
-    child.stderr.on('data', (chunk) => (output += chunk));
-    child.on('error', reject);
-    child.on('close', (code) =>
-      code === 0 ? resolve(output) : reject(new SetupProblem(`${file} failed:\n${output.slice(-4000)}`)),
-    );
+export async function runToEnd(file, env) {
+  const { code, output } = await runQuietly(process.execPath, ['--import', 'tsx', file], {
+    ...process.env,
+    ...quiet,
+    ...env,
   });
+  if (code !== 0) throw new SetupProblem(`${file} failed:\n${output.slice(-4000)}`);
+  return output;
 }
 
 /**

@@ -1,8 +1,8 @@
-import { spawn } from 'node:child_process';
 import fs from 'node:fs';
 import path from 'node:path';
 import { houseFolder, root, sourcesHash } from './folders.mjs';
 import { say, seconds, SetupProblem } from './say.mjs';
+import { runQuietly } from './tool.mjs';
 
 const sources = [
   'app',
@@ -29,7 +29,7 @@ export async function buildWeb() {
   const next = path.join(root, 'build', 'web');
   fs.rmSync(next, { recursive: true, force: true });
   const tell = setInterval(() => say(`  still building, ${seconds(since)}`), 20_000);
-  const { code, output } = await run(
+  const { code, output } = await runQuietly(
     process.execPath,
     [path.join(root, 'node_modules/expo/bin/cli'), 'export', '-p', 'web', '--output-dir', next],
     // The bundler's cache stays inside the project: another person's cache in the shared folder could not be written.
@@ -48,15 +48,4 @@ export async function buildWeb() {
   fs.rmSync(webFolder, { recursive: true, force: true });
   fs.renameSync(next, webFolder);
   say(`Web app built in ${seconds(since)}.`);
-}
-
-function run(command, args, env) {
-  return new Promise((resolve, reject) => {
-    const child = spawn(command, args, { cwd: root, env, stdio: ['ignore', 'pipe', 'pipe'] });
-    let output = '';
-    child.stdout.on('data', (chunk) => (output += chunk));
-    child.stderr.on('data', (chunk) => (output += chunk));
-    child.on('error', reject);
-    child.on('close', (code) => resolve({ code, output }));
-  });
 }
