@@ -5,6 +5,9 @@ export const lookers = [null, 'operator', 'programmer', 'engineer', 'lead'];
 export const sizes = { phone: { width: 390, height: 844 }, wide: { width: 1440, height: 900 } };
 export const themes = ['light', 'night'];
 
+/** The tag of a plate that nobody booked in. */
+export const unknownTag = 'NOBODY-KNOWS';
+
 const strangersRoutes = [
   ['sign-in', '/sign-in'],
   ['not-found', '/no-such-page'],
@@ -65,7 +68,7 @@ export async function routesOf(context, who) {
       ]);
     }
   }
-  routes.push(['card-unknown-tag', `/card?machine=${machines[0]?.id}&tag=NOBODY-KNOWS`]);
+  routes.push(['card-unknown-tag', `/card?machine=${machines[0]?.id}&tag=${unknownTag}`]);
   routes.push(['card-by-hand', `/card?machine=${machines[0]?.id}&gradeGroup=S355&thickness=12000`]);
   if (approved) {
     const { revision } = approved.match;
