@@ -1,6 +1,5 @@
 import type { MachineProfile, Nozzle } from '../strategy/machine.ts';
 import {
-  COLD_PLATE_TEMPERATURE,
   DEFAULT_RESERVE_RULES,
   pierceChecks,
   piercePredict,
@@ -14,6 +13,7 @@ import {
   type StrategyOutcome,
   type StrategyPrediction,
 } from '../strategy/pierce/index.ts';
+import { COLD_PLATE_TEMPERATURE } from '../strategy/steel/index.ts';
 import type { Condition, Prediction, StrategyContent } from './strategies.ts';
 
 const metres = (micrometres: number) => micrometres / 1e6;

@@ -89,7 +89,13 @@ const OXYGEN_FLOW = 7;
 const MELT_SPEED = 8;
 const KEPT_SIZE = 9;
 
-/** RangeError for a rise time, nozzle or optics that cannot be, or parameters with which burning would all but feed itself. */
+/** Widest nozzle that is believed, m. */
+export const WIDEST_NOZZLE = 0.01;
+
+/**
+ * What stays the same through a prediction. Plate temperature in K. RangeError for a rise time, nozzle, optics or plate that cannot
+ * be, or parameters with which burning would all but feed itself.
+ */
 export function boreOf(
   profile: MachineProfile,
   nozzle: Nozzle,
@@ -98,8 +104,8 @@ export function boreOf(
 ): Bore {
   const { riseTime } = profile.source;
   if (!(riseTime >= 0 && riseTime <= 0.1)) throw new RangeError(`rise time ${riseTime} s is outside [0, 0.1] s`);
-  if (!(nozzle.diameter > 0 && nozzle.diameter <= 0.01)) {
-    throw new RangeError(`nozzle diameter ${nozzle.diameter} m is outside (0, 0.01] m`);
+  if (!(nozzle.diameter > 0 && nozzle.diameter <= WIDEST_NOZZLE)) {
+    throw new RangeError(`nozzle diameter ${nozzle.diameter} m is outside (0, ${WIDEST_NOZZLE}] m`);
   }
   netRemovalHeat(parameters, plateTemperature); // refuses what would burn by itself
   const temperatureRise = IRON_MELTING_TEMPERATURE - plateTemperature;

@@ -1,4 +1,4 @@
-import { heatingEnthalpy, IRON_MELTING_TEMPERATURE, STEEL_DENSITY } from '../steel/index.ts';
+import { COLD_PLATE_TEMPERATURE, heatingEnthalpy, IRON_MELTING_TEMPERATURE, STEEL_DENSITY } from '../steel/index.ts';
 
 /**
  * Greatest temperature rise, K, at a distance (m) from heat (J) released at once at a point of a thick plate's surface:
@@ -23,8 +23,6 @@ export function radiusOfPeakAroundPoint(heat: number, rise: number, volumetricHe
 
 const POINT_FACTOR = (3 / (2 * Math.PI * Math.E)) ** 1.5;
 
-/** Plate temperature for the mean heat capacity, K. */
-const COLD_PLATE = 293.15;
-
 /** Mean heat capacity of steel from 20 °C to melting, J/(m³ K). */
-export const HEATING_CAPACITY = (STEEL_DENSITY * heatingEnthalpy(COLD_PLATE)) / (IRON_MELTING_TEMPERATURE - COLD_PLATE);
+export const HEATING_CAPACITY =
+  (STEEL_DENSITY * heatingEnthalpy(COLD_PLATE_TEMPERATURE)) / (IRON_MELTING_TEMPERATURE - COLD_PLATE_TEMPERATURE);

@@ -1,11 +1,11 @@
 import { focusForDial } from '../beam/index.ts';
 import type { MachineProfile, Nozzle } from '../machine.ts';
+import { COLD_PLATE_TEMPERATURE } from '../steel/index.ts';
 import { boreMoment, boreMomentEmpty, boreOf, boreSet, SET_SIZE } from './bore.ts';
 import { PIERCE_DEFAULTS } from './parameters.ts';
 import { piercePredict, THICKEST_PLATE } from './predict.ts';
 import { routineTime } from './stage-math.ts';
 import type { Stage, StageQuantities } from './stage.ts';
-import { COLD_PLATE_TEMPERATURE } from './strategy-prediction.ts';
 
 /** A point of the routine: at this part of the depth the bottom should move at this speed, with these conditions. */
 type Knot = {
@@ -192,7 +192,8 @@ function bisected(low: number, high: number, holds: (value: number) => boolean):
   return to;
 }
 
-function clamped(value: number, min: number, max: number): number {
+/** The value, or the end of the range that it lies beyond. */
+export function clamped(value: number, min: number, max: number): number {
   return Math.min(Math.max(value, min), max);
 }
 

@@ -56,7 +56,6 @@ export { routineTime, stageMeanPower, stagePulses, stageQuantitiesAt } from './s
 export { LONGEST_STAGE, MOST_STAGES, stageProblems, type StageProblem } from './stage-problems.ts';
 export type { Stage, StageQuantities } from './stage.ts';
 export {
-  COLD_PLATE_TEMPERATURE,
   pierceReserve,
   strategyPrediction,
   type Reserve,

@@ -1,4 +1,5 @@
-import { exponentialIntegral } from '../heat/special-functions.ts';
+import { continuousLine } from '../heat/line-source.ts';
+import { diffusivity, type PlateProperties } from '../heat/properties.ts';
 import { STEEL_DENSITY, steelConductivity, steelSpecificHeat } from '../steel/index.ts';
 import { quantityText } from '../units/index.ts';
 import { celsius, millimetres } from '../units/said.ts';
@@ -9,9 +10,11 @@ export type PierceHeat = { readonly perLength: number; readonly duration: number
 
 /** Temperature for which the steel beside a pierce is taken, K: 200 °C, between the plate and what a contour may begin in. */
 const BESIDE_PIERCE = 473.15;
-const CONDUCTIVITY = steelConductivity(BESIDE_PIERCE);
-const CAPACITY = STEEL_DENSITY * steelSpecificHeat(BESIDE_PIERCE);
-const DIFFUSIVITY = CONDUCTIVITY / CAPACITY;
+const STEEL: PlateProperties = {
+  conductivity: steelConductivity(BESIDE_PIERCE),
+  density: STEEL_DENSITY,
+  specificHeat: steelSpecificHeat(BESIDE_PIERCE),
+};
 
 /**
  * Greatest temperature rise, K, that the heat of a pierce ever causes at a distance (m) from the hole: a line through the plate that
@@ -22,7 +25,7 @@ export function pierceWarmth({ perLength, duration }: PierceHeat, distance: numb
   if (!(perLength >= 0) || !Number.isFinite(perLength)) throw new RangeError(`heat ${perLength} J/m is negative`);
   if (!(duration > 0) || !Number.isFinite(duration)) throw new RangeError(`duration ${duration} s is not positive`);
   if (!(distance > 0)) throw new RangeError(`distance ${distance} m is not positive`);
-  const spread = (distance * distance) / (4 * DIFFUSIVITY);
+  const spread = (distance * distance) / (4 * diffusivity(STEEL));
   // The crest comes s after the end: spread·D/(s·(s + D)) = ln((s + D)/s), which has one root, not beyond `spread`.
   let early = 0;
   let late = spread;
@@ -31,8 +34,8 @@ export function pierceWarmth({ perLength, duration }: PierceHeat, distance: numb
     if ((spread * duration) / (s * (s + duration)) > Math.log1p(duration / s)) early = s;
     else late = s;
   }
-  const perTime = perLength / duration / (4 * Math.PI * CONDUCTIVITY);
-  return perTime * (exponentialIntegral(spread / (late + duration)) - exponentialIntegral(spread / late));
+  const power = perLength / duration;
+  return continuousLine(power, distance, late + duration, STEEL) - continuousLine(power, distance, late, STEEL);
 }
 
 /** How long the lead-in must be, m, and what decides it; or why no length would do. */
@@ -57,7 +60,8 @@ export const CRATER_SHARE = 0.7;
 
 /**
  * Length of lead-in, m, after which the contour begins beyond the crater and in steel that the pierce has not warmed above
- * `startTemperature`. The heat is taken to be all in the plate and even through it, an upper bound.
+ * `startTemperature`. The heat is taken to be all in the plate and even through it, an upper bound. RangeError for a negative crater
+ * radius, and as `pierceWarmth`.
  */
 export function leadInNeeded({
   craterRadius,
@@ -93,7 +97,7 @@ export function leadInNeeded({
 function distanceOfWarmth(heat: PierceHeat, rise: number): number {
   if (heat.perLength === 0) return 0;
   // Heat given off at once reaches furthest.
-  let far = Math.sqrt(peakRiseAroundLine(heat.perLength, 1, CAPACITY) / rise);
+  let far = Math.sqrt(peakRiseAroundLine(heat.perLength, 1, STEEL.density * STEEL.specificHeat) / rise);
   let near = 0;
   for (let tries = 0; tries < 60 && far - near > 1e-9 * far; tries++) {
     const middle = (near + far) / 2;

@@ -1,13 +1,14 @@
 import { OXYGEN_MOLAR_MASS } from '../steel/index.ts';
+import { ZERO_CELSIUS } from '../units/index.ts';
 
 /** Universal gas constant, J/(mol K), exact (SI 2019). */
 const GAS_CONSTANT = 8.314462618;
 
 /** Ratio of specific heats of oxygen as an ideal two-atomic gas. */
-export const OXYGEN_HEAT_RATIO = 1.4;
+const OXYGEN_HEAT_RATIO = 1.4;
 
 /** Standard atmosphere, Pa: what gauge pressures are counted from and what the jet leaves into. */
-export const ATMOSPHERE = 101_325;
+const ATMOSPHERE = 101_325;
 
 /** Oxygen before the nozzle, K. */
 const STAGNATION_TEMPERATURE = 293.15;
@@ -54,4 +55,4 @@ export function oxygenMassFlow(diameter: number, gaugePressure: number, discharg
 }
 
 /** Density of oxygen at normal state (0 °C, 101 325 Pa; DIN 1343) as an ideal gas, kg/m³. */
-export const OXYGEN_NORMAL_DENSITY = ATMOSPHERE / (SPECIFIC_GAS_CONSTANT * 273.15);
+export const OXYGEN_NORMAL_DENSITY = ATMOSPHERE / (SPECIFIC_GAS_CONSTANT * ZERO_CELSIUS);

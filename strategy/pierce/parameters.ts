@@ -1,4 +1,12 @@
-import { LEDGER_BURNT_SHARE, LEDGER_TOTAL, meltingEnthalpy, oxidation, STEEL_DENSITY } from '../steel/index.ts';
+import {
+  COLD_PLATE_TEMPERATURE,
+  HOT_CONDUCTIVITY,
+  LEDGER_BURNT_SHARE,
+  LEDGER_TOTAL,
+  meltingEnthalpy,
+  oxidation,
+  STEEL_DENSITY,
+} from '../steel/index.ts';
 
 /** Changes whenever the same input would give another prediction. Stored with every prediction. */
 export const PIERCE_MODEL_VERSION = 'pierce-2';
@@ -42,11 +50,8 @@ export type PierceParameterRow = {
 /** Beam radius at the plate's top for which `boreRadius` holds, m: a 0.2 mm spot of 4 mm·mrad focused 5 mm above the plate. */
 export const REFERENCE_BEAM_RADIUS = 0.2236e-3;
 
-/** Plate temperature for which the ledger of the cut is closed, K. */
-const COLD_PLATE = 293.15;
-
-/** What the ledger of the cut leaves beside melting, J/kg: superheat and what the thrown melt carries away. */
-const LEDGER_EXPULSION = LEDGER_TOTAL / STEEL_DENSITY - meltingEnthalpy(COLD_PLATE);
+/** What the ledger of the cut leaves beside melting a cold plate, J/kg: superheat and what the thrown melt carries away. */
+const LEDGER_EXPULSION = LEDGER_TOTAL / STEEL_DENSITY - meltingEnthalpy(COLD_PLATE_TEMPERATURE);
 
 /** Least net heat that removing a volume must cost, J/m³. Below it burning would all but feed itself, which no pierce does. */
 const LEAST_NET_HEAT = 2e9;
@@ -156,7 +161,7 @@ export const pierceParameterTable: readonly PierceParameterRow[] = [
   ),
   row(
     'conductivity',
-    30,
+    HOT_CONDUCTIVITY,
     20,
     55,
     'W/(m K)',

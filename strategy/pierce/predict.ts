@@ -1,5 +1,4 @@
 import type { MachineProfile, Nozzle } from '../machine.ts';
-import { PLATE_TEMPERATURE_RANGE } from '../steel/index.ts';
 import { quantityText } from '../units/index.ts';
 import { millimetres } from '../units/said.ts';
 import {
@@ -19,7 +18,14 @@ import {
 import { PIERCE_MODEL_VERSION, pierceParameters, type PierceParameters } from './parameters.ts';
 import { effectiveDuty } from './pulse.ts';
 import { pierceRun, STALL_SPEED, type PierceLedger, type PierceRun, type RunStep } from './run.ts';
-import { routineTime, stageMeanPower, stagePulses, stageQuantitiesAt, stagesPeakPower } from './stage-math.ts';
+import {
+  routineTime,
+  stageMeanPower,
+  stageQuantitiesAt,
+  stagesMeanPower,
+  stagesPeakPower,
+  stagesPulses,
+} from './stage-math.ts';
 import { stageProblems } from './stage-problems.ts';
 import type { Stage } from './stage.ts';
 
@@ -83,7 +89,7 @@ export type PiercePrediction = {
 export const THICKEST_PLATE = 0.06;
 
 /** For how long the bottom must stand still to be told, s. */
-const SHORTEST_STALL = 0.1;
+export const SHORTEST_STALL = 0.1;
 
 /** Points of the trace without the breakthrough. */
 const TRACE_POINTS = 160;
@@ -115,8 +121,8 @@ export function piercePredict(input: PierceInput): PiercePrediction {
     trace: trace.result(),
     energy: { emitted: run.emitted, absorbed: ledger.absorbed },
     oxidationHeat: ledger.oxidation,
-    pulses: Math.round(stages.reduce((pulses, stage) => pulses + stagePulses(stage), 0)),
-    meanPower: stages.reduce((energy, stage) => energy + stageMeanPower(stage) * stage.duration, 0) / total,
+    pulses: stagesPulses(stages),
+    meanPower: stagesMeanPower(stages),
     peakPower: stagesPeakPower(stages),
     oxygenUsed: run.oxygenUsed,
     stalls: stalls.result(),
@@ -178,13 +184,10 @@ export function boreFor(input: PierceInput): Bore {
   if (!(thickness > 0 && thickness <= THICKEST_PLATE)) {
     throw new RangeError(`thickness ${thickness} m is outside (0, ${THICKEST_PLATE}] m`);
   }
-  const { min, max } = PLATE_TEMPERATURE_RANGE;
-  if (!(plateTemperature >= min && plateTemperature <= max)) {
-    throw new RangeError(`plate temperature ${plateTemperature} K is outside [${min}, ${max}] K`);
-  }
   return boreOf(input.profile, input.nozzle, plateTemperature, pierceParameters(input.parameters));
 }
 
+/** Heat in the plate at the end of a routine, J: what was conducted away, paid in pauses, and lost or absorbed by the wall. */
 export function heatLeftOf(ledger: PierceLedger): number {
   return ledger.conduction + ledger.pauses + ledger.wall;
 }
@@ -242,8 +245,7 @@ function stallWatch(bore: Bore, stages: readonly Stage[]) {
     if (open !== undefined && at - open.time >= SHORTEST_STALL) found.push({ ...open, duration: at - open.time });
     open = undefined;
   };
-  const ends = stages.map(({ duration }) => duration);
-  const startOf = (stage: number) => ends.slice(0, stage).reduce((sum, duration) => sum + duration, 0);
+  const startOf = (stage: number) => routineTime(stages.slice(0, stage));
   const begin = (stage: number, time: number, depth: number): Open => {
     const cause = stallCause(bore, stages, stage, time - startOf(stage), depth);
     return { stage, time, depth, ...cause };

@@ -1,11 +1,11 @@
 import { ERUPTION_CAUTION, STEEPEST_STEP, type ReserveRules } from './checks.ts';
 import type { Bore } from './bore.ts';
 import { leadInNeeded } from './lead-in.ts';
-import { heatLeftOf } from './predict.ts';
+import { heatLeftOf, SHORTEST_STALL } from './predict.ts';
 import { planStages, type Frame, type Plan } from './propose-plan.ts';
 import type { PierceResults } from './results.ts';
 import { pierceRun, type PierceRun, type RunSearch } from './run.ts';
-import { routineTime, stageMeanPower, stagePulses, stagesPeakPower } from './stage-math.ts';
+import { routineTime, stagesMeanPower, stagesPeakPower, stagesPulses } from './stage-math.ts';
 import { LONGEST_STAGE } from './stage-problems.ts';
 import type { Stage } from './stage.ts';
 
@@ -79,6 +79,8 @@ const SEARCH_MARGIN = 0.004;
 /** Long enough a hold to see whether it ever gets through, s. */
 const LONG_HOLD = 30;
 const SHORTEST_HOLD = 0.1;
+/** Standing still for this long counts as a stall, s. Half of what a prediction tells, since steps that only begin or end in one are left out. */
+const STOOD = SHORTEST_STALL / 2;
 
 /**
  * A plan judged: its stages with the hold as long as the reserve asks for, and what it misses. Undefined when it is no better than a
@@ -128,7 +130,7 @@ export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number,
       miss('reserve-hot', throughHot === null ? 1 : (reserve.hot * throughHot) / total - 1);
     }
   }
-  miss('stall', cold.stood > 0.05 ? 0.1 + cold.stood / LONG_HOLD : 0);
+  miss('stall', cold.stood > STOOD ? 0.1 + cold.stood / LONG_HOLD : 0);
   miss('jump', steepest(frame, stages));
   const eruptionIndex = Math.max(greatest(cold.eruptions), greatest(hot.eruptions));
   const craterRadius = Math.max(cold.craterRadius, hot.craterRadius);
@@ -162,7 +164,10 @@ export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number,
   };
 }
 
-/** The named results of stages, without a trace. The same as `pierceResults` gives from a whole prediction. */
+/**
+ * The named results of stages, without a trace. The same as `pierceResults` gives from a whole prediction, but that stalls are told
+ * as one or none: a run without a trace knows how long the bottom stood and not how often.
+ */
 export function resultsOf(brief: Brief, stages: readonly Stage[], search?: RunSearch): PierceResults {
   const { thickness, coldPlate, hottestPlate } = brief;
   const cold = pierceRun(brief.cold, stages, thickness.max, undefined, search);
@@ -183,15 +188,15 @@ export function resultsOf(brief: Brief, stages: readonly Stage[], search?: RunSe
     leadInLength: leadIn.kind === 'ok' ? leadIn.length : null,
     eruptionIndex: Math.max(greatest(cold.eruptions), greatest(hot.eruptions), greatest(thin.eruptions)),
     eruptionLimit: brief.cold.parameters.eruptionLimit,
-    meanPower: stages.reduce((energy, stage) => energy + stageMeanPower(stage) * stage.duration, 0) / total,
+    meanPower: stagesMeanPower(stages),
     peakPower: stagesPeakPower(stages),
     energy: cold.emitted,
     heatLeft: heatLeftOf(cold.ledger),
     heatPerThickness: perLength,
     oxygenUsed: cold.oxygenUsed,
-    pulses: Math.round(stages.reduce((pulses, stage) => pulses + stagePulses(stage), 0)),
+    pulses: stagesPulses(stages),
     stageCount: stages.length,
-    stalls: cold.stood > 0.05 ? 1 : 0,
+    stalls: cold.stood > STOOD ? 1 : 0,
     thicknessMin: thickness.min,
     thicknessMax: thickness.max,
     coldPlate,

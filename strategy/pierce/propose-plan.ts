@@ -1,5 +1,5 @@
 import { boreMoment, boreMomentEmpty, boreSet, ERUPTION, SET_SIZE, type Bore } from './bore.ts';
-import { LONGEST_DUTY, POWER_SHARE, reachableFocus } from './defaults.ts';
+import { clamped, LONGEST_DUTY, POWER_SHARE, reachableFocus } from './defaults.ts';
 import type { MachineProfile } from '../machine.ts';
 import type { Stage, StageQuantities } from './stage.ts';
 
@@ -52,6 +52,7 @@ export type Frame = {
   readonly given: boolean;
 };
 
+/** The frame of stages of which some are given, and null for each that is free. */
 export function frameOf(profile: MachineProfile, slots: readonly (Stage | null)[], mostPeakPower: number): Frame {
   const last = slots.length - 1;
   const holds = slots[last] === null;
@@ -122,7 +123,7 @@ export function planFromIndex(
   const powers = new Array<number>(frame.knotCount).fill(0);
   const speeds: number[] = [];
   const depths: number[] = [];
-  const most = powerPlace(LONGEST_DUTY * frame.mostPower);
+  const most = mostPlace(frame);
   for (let boundary = 0; boundary <= ends; boundary++) {
     const knot = frame.knots[boundary] ?? -1;
     const depth = thickness * depthPart(boundary / ends);
@@ -185,22 +186,22 @@ function knotQuantities(frame: Frame, { setUp, powers }: Plan, boundary: number,
     SET_UPS.frequency[setUp[3]] ?? SET_UPS.frequency[0],
   ];
   const standoff = rounded(
-    within(high + (LAST_STANDOFF - high) * part, profile.standoff.min, profile.standoff.max),
+    clamped(high + (LAST_STANDOFF - high) * part, profile.standoff.min, profile.standoff.max),
     0.5e-3,
     profile.standoff.min,
     profile.standoff.max,
   );
-  const usualDuty = within(DUTIES[0] + (DUTIES[1] - DUTIES[0]) * part, source.minDuty, 1);
+  const usualDuty = clamped(DUTIES[0] + (DUTIES[1] - DUTIES[0]) * part, source.minDuty, 1);
   const meanPower = SCALE_START * SCALE_STEP ** (powers[knot] ?? 0);
   // Is the source too weak for the usual duty, or its least power too much? Then the duty gives way.
-  const wished = within(meanPower / usualDuty, source.minPower, mostPower);
+  const wished = clamped(meanPower / usualDuty, source.minPower, mostPower);
   const duty = rounded(
-    within(meanPower / wished, source.minDuty, Math.max(source.minDuty, LONGEST_DUTY)),
+    clamped(meanPower / wished, source.minDuty, Math.max(source.minDuty, LONGEST_DUTY)),
     0.01,
     source.minDuty,
     1,
   );
-  const peakPower = rounded(within(meanPower / duty, source.minPower, mostPower), 10, source.minPower, mostPower);
+  const peakPower = rounded(clamped(meanPower / duty, source.minPower, mostPower), 10, source.minPower, mostPower);
   const fastest = source.riseTime === 0 ? source.maxFrequency : duty / (LEAST_RISES * source.riseTime);
   return {
     standoff,
@@ -208,7 +209,7 @@ function knotQuantities(frame: Frame, { setUp, powers }: Plan, boundary: number,
     peakPower,
     duty,
     pulseFrequency: rounded(
-      within(
+      clamped(
         frequency * (1 + (FREQUENCY_GROWTH - 1) * part),
         source.minFrequency,
         Math.min(source.maxFrequency, fastest),
@@ -218,7 +219,7 @@ function knotQuantities(frame: Frame, { setUp, powers }: Plan, boundary: number,
       source.maxFrequency,
     ),
     oxygenPressure: rounded(
-      within(pressure * (1 + (PRESSURE_GROWTH - 1) * part), oxygen.minPressure, oxygen.maxPressure),
+      clamped(pressure * (1 + (PRESSURE_GROWTH - 1) * part), oxygen.minPressure, oxygen.maxPressure),
       0.05e5,
       oxygen.minPressure,
       oxygen.maxPressure,
@@ -226,11 +227,7 @@ function knotQuantities(frame: Frame, { setUp, powers }: Plan, boundary: number,
   };
 }
 
-function within(value: number, min: number, max: number): number {
-  return Math.max(min, Math.min(value, max));
-}
-
 /** The multiple of a step next to a value, or the end of the range where that lies beyond it. */
 function rounded(value: number, step: number, min: number, max: number): number {
-  return within(Number((Math.round(value / step) * step).toFixed(6)), min, max);
+  return clamped(Number((Math.round(value / step) * step).toFixed(6)), min, max);
 }

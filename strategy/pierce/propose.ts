@@ -1,4 +1,5 @@
 import type { MachineProfile, Nozzle } from '../machine.ts';
+import { COLD_PLATE_TEMPERATURE } from '../steel/index.ts';
 import { numberText, quantityText } from '../units/index.ts';
 import { millimetres, percent, seconds } from '../units/said.ts';
 import { boreOf } from './bore.ts';
@@ -20,7 +21,7 @@ import { planSearch, SearchBudget, type SearchWatch } from './propose-search.ts'
 import { pierceResults } from './results.ts';
 import { MOST_STAGES, stageProblems } from './stage-problems.ts';
 import type { Stage } from './stage.ts';
-import { COLD_PLATE_TEMPERATURE, strategyPrediction, type StrategyPrediction } from './strategy-prediction.ts';
+import { strategyPrediction, type StrategyPrediction } from './strategy-prediction.ts';
 
 export type ProposeInput = {
   readonly profile: MachineProfile;

@@ -1,10 +1,10 @@
 import type { Nozzle } from '../machine.ts';
-import { PLATE_TEMPERATURE_RANGE } from '../steel/index.ts';
+import { COLD_PLATE_TEMPERATURE, PLATE_TEMPERATURE_RANGE } from '../steel/index.ts';
 import { celsius } from '../units/said.ts';
+import { WIDEST_NOZZLE } from './bore.ts';
 import { pierceParameters, pierceParameterTable, type PierceParameters } from './parameters.ts';
 import { pierceOutline, THICKEST_PLATE } from './predict.ts';
 import type { Reserve, StrategyInput } from './strategy-prediction.ts';
-import { COLD_PLATE_TEMPERATURE } from './strategy-prediction.ts';
 
 export type SensitivityCase = 'as-set' | 'coupling-down' | 'coupling-up' | 'worn-nozzle' | 'thicker' | 'hot-plate';
 
@@ -40,7 +40,7 @@ export function pierceSensitivity(input: StrategyInput): readonly SensitivityRow
     const value = Math.min(row?.max ?? 1, Math.max(row?.min ?? 0, parameters[name] * factor));
     return { ...parameters, [name]: value };
   };
-  const worn: Nozzle = { ...input.nozzle, diameter: Math.min(0.01, input.nozzle.diameter * WORN_DIAMETER) };
+  const worn: Nozzle = { ...input.nozzle, diameter: Math.min(WIDEST_NOZZLE, input.nozzle.diameter * WORN_DIAMETER) };
   const hottest = Math.min(input.hottestPlateTemperature, PLATE_TEMPERATURE_RANGE.max);
 
   const reserveOf = (changed: Partial<Parameters<typeof pierceOutline>[0]>): Reserve => {

@@ -35,6 +35,17 @@ export function routineTime(stages: readonly Stage[]): number {
   return stages.reduce((sum, stage) => sum + stage.duration, 0);
 }
 
+/** Mean power over the routine as set, W. */
+export function stagesMeanPower(stages: readonly Stage[]): number {
+  const energy = stages.reduce((sum, stage) => sum + stageMeanPower(stage) * stage.duration, 0);
+  return energy / routineTime(stages);
+}
+
+/** Pulses of the routine, to the nearest whole one. */
+export function stagesPulses(stages: readonly Stage[]): number {
+  return Math.round(stages.reduce((pulses, stage) => pulses + stagePulses(stage), 0));
+}
+
 /** Greatest peak power of all stages, W. */
 export function stagesPeakPower(stages: readonly Stage[]): number {
   return Math.max(...stages.flatMap(({ from, to }) => [from.peakPower, to.peakPower]));

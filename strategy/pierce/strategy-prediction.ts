@@ -1,4 +1,5 @@
 import type { MachineProfile, Nozzle } from '../machine.ts';
+import { COLD_PLATE_TEMPERATURE } from '../steel/index.ts';
 import type { PierceHeat } from './lead-in.ts';
 import { pierceParameters, type PierceParameters } from './parameters.ts';
 import {
@@ -66,9 +67,6 @@ export type StrategyPrediction = {
   readonly meanPower: number; // W
   readonly peakPower: number; // W
 };
-
-/** 20 °C: the cold plate that the reserve is defined on, K. */
-export const COLD_PLATE_TEMPERATURE = 293.15;
 
 /**
  * What a staged pierce does over the range of plates it is for: breakthrough and reserve on the thickest, cold and hot. Crater and

@@ -1,6 +1,7 @@
 export { carbonEquivalentCet, carbonEquivalentCev, type SteelAnalysis } from './carbon-equivalent.ts';
 export { LEDGER_BURNT_SHARE, LEDGER_LASER, LEDGER_TOTAL } from './energy-ledger.ts';
 export {
+  COLD_PLATE_TEMPERATURE,
   heatingEnthalpy,
   IRON_FUSION_HEAT,
   IRON_LIQUID_ENTHALPY,

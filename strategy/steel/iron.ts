@@ -41,6 +41,18 @@ export const IRON_FUSION_HEAT = IRON_LIQUID_ENTHALPY - IRON_SOLID_ENTHALPY;
 /** Coldest and hottest plate that formulas here accept, K: −40 °C in an unheated hall in winter, 600 °C. */
 export const PLATE_TEMPERATURE_RANGE = { min: 233.15, max: 873.15 } as const;
 
+/** 20 °C, K: the cold plate that a reserve and the ledger of a cut are stated for, and the coldest of EN 1993-1-2. */
+export const COLD_PLATE_TEMPERATURE = 293.15;
+
+/** The plate's temperature, K, as it came. RangeError outside −40…600 °C. */
+export function plateTemperatureChecked(plateTemperature: number): number {
+  const { min, max } = PLATE_TEMPERATURE_RANGE;
+  if (!(plateTemperature >= min && plateTemperature <= max)) {
+    throw new RangeError(`plate temperature ${plateTemperature} K is outside [${min}, ${max}] K`);
+  }
+  return plateTemperature;
+}
+
 /**
  * Heat to melt steel that starts at the plate's temperature (K), J/kg: iron's enthalpy up to liquid at melting, less what
  * the plate already holds (EN 1993-1-2). Alloying of structural steel is below the error of the rest.
@@ -55,25 +67,20 @@ export function heatingEnthalpy(plateTemperature: number): number {
   return IRON_SOLID_ENTHALPY - sensibleHeat(plateTemperature);
 }
 
-/** The same per volume of plate, J/m³. */
+/** Heat to melt a volume of plate that starts at the plate's temperature (K), J/m³. RangeError outside −40…600 °C. */
 export function meltingEnthalpyPerVolume(plateTemperature: number): number {
   return STEEL_DENSITY * meltingEnthalpy(plateTemperature);
 }
 
 /** Heat the plate holds above 298.15 K, J/kg; negative for a colder plate. Below 20 °C the specific heat at 20 °C is kept. */
 function sensibleHeat(plateTemperature: number): number {
-  const { min, max } = PLATE_TEMPERATURE_RANGE;
-  if (!(plateTemperature >= min && plateTemperature <= max)) {
-    throw new RangeError(`plate temperature ${plateTemperature} K is outside [${min}, ${max}] K`);
-  }
+  plateTemperatureChecked(plateTemperature);
   const atReference = steelEnthalpy(REFERENCE_TEMPERATURE);
-  if (plateTemperature < COLDEST_OF_EN) {
-    return (plateTemperature - COLDEST_OF_EN) * steelSpecificHeat(COLDEST_OF_EN) - atReference;
+  if (plateTemperature < COLD_PLATE_TEMPERATURE) {
+    return (plateTemperature - COLD_PLATE_TEMPERATURE) * steelSpecificHeat(COLD_PLATE_TEMPERATURE) - atReference;
   }
   return steelEnthalpy(plateTemperature) - atReference;
 }
-
-const COLDEST_OF_EN = 293.15;
 
 function enthalpyPerKilogram(set: Shomate, temperature: number): number {
   const t = temperature / 1000;

@@ -1,4 +1,4 @@
-import { IRON_MELTING_TEMPERATURE, PLATE_TEMPERATURE_RANGE } from './iron.ts';
+import { IRON_MELTING_TEMPERATURE, plateTemperatureChecked } from './iron.ts';
 
 /** Properties of the steel beside the kerf, where it is 600…1000 °C: EN 1993-1-2:2005, 3.4.1, rounded. */
 export const HOT_CONDUCTIVITY = 30; // W/(m K)
@@ -48,10 +48,7 @@ export function kerfConductionHeat(cut: {
   const { feed, kerfWidth, plateTemperature } = cut;
   if (!(feed > 0 && feed <= 10)) throw new RangeError(`feed ${feed} m/s is outside (0, 10] m/s`);
   if (!(kerfWidth > 0 && kerfWidth <= 0.01)) throw new RangeError(`kerf width ${kerfWidth} m is outside (0, 0.01] m`);
-  const { min, max } = PLATE_TEMPERATURE_RANGE;
-  if (!(plateTemperature >= min && plateTemperature <= max)) {
-    throw new RangeError(`plate temperature ${plateTemperature} K is outside [${min}, ${max}] K`);
-  }
+  plateTemperatureChecked(plateTemperature);
   const peclet = (feed * kerfWidth) / 2 / HOT_DIFFUSIVITY;
   return (kerfConductionFactor(peclet) * HOT_CONDUCTIVITY * (IRON_MELTING_TEMPERATURE - plateTemperature)) / feed;
 }
