@@ -49,6 +49,14 @@ describe('a revision', () => {
         client.query('delete from strategy_revisions where id = $1', [submitted.id]),
       ),
     ).rejects.toThrow('a revision that was handed in is kept');
+    const draft = await makeDraft(plant);
+    const gone = await inPlant(server.database.ownerUrl, async (client) => {
+      // Its authors are kept by a trigger of their own, which is not what is looked at here.
+      await client.query('alter table revision_authors disable trigger user');
+      await client.query('delete from revision_authors where revision_id = $1', [draft.id]);
+      return client.query('delete from strategy_revisions where id = $1', [draft.id]);
+    });
+    expect(gone.rowCount).toBe(1);
   });
 
   test('holds columns and content together', async () => {
@@ -274,6 +282,21 @@ describe('what was said and done', () => {
       );
     },
   );
+
+  test.each(['nozzles', 'grades', 'files'])('%s that something points at never become others', async (table) => {
+    const id = newId();
+    await expect(
+      inPlant(server.database.ownerUrl, async (client) => {
+        if (table === 'files') {
+          await client.query(
+            `insert into files (plant_id, id, key, content_type, bytes, sha256) values ($1, $2, $3, 'text/plain', 1, repeat('0', 64))`,
+            [plant.id, id, `guards/${id}`],
+          );
+        }
+        return client.query(`update ${table} set plant_id = plant_id`);
+      }),
+    ).rejects.toThrow('never changed or taken away');
+  });
 
   test.each([
     'reviews',

@@ -3,6 +3,7 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { readFileSync } from 'node:fs';
 import path from 'node:path';
 import { v7 as newId } from 'uuid';
+import { tableGrants } from '../../db/grants.ts';
 import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { reportEndpoints } from '../../shared/reports.ts';
@@ -129,11 +130,18 @@ describe('as the application’s role', () => {
     }
   });
 
-  test('another plant’s rows cannot be changed', async () => {
-    const changed = await asApp(ours.id, (app) =>
-      app.query(`update plates set tag = 'stolen' where plant_id = $1`, [theirs.id]),
-    );
-    expect(changed.rowCount).toBe(0);
+  test('another plant’s rows cannot be changed in any table that may be changed at all', async () => {
+    const changeable = Object.entries(tableGrants).flatMap(([table, rights]) => {
+      const column = rights.map((right) => /^UPDATE \(\s*(\w+)/.exec(right)?.[1]).find((found) => found !== undefined);
+      return column === undefined ? [] : [{ table, column }];
+    });
+    expect(changeable.length).toBeGreaterThan(8);
+    for (const { table, column } of changeable) {
+      const changed = await asApp(ours.id, (app) =>
+        app.query(`update ${table} set ${column} = ${column} where plant_id = $1`, [theirs.id]),
+      );
+      expect({ table, changed: changed.rowCount }).toEqual({ table, changed: 0 });
+    }
   });
 
   test('a foreign key cannot reach into another plant', async () => {
