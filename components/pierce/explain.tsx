@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { common } from '@/components/text/common.ts';
 import {
@@ -37,21 +38,25 @@ export function ResultGrid({
       aria-label={explainText.results}
       style={[styles.grid, webStyle({ gridTemplateColumns: `repeat(${width < 372 ? 2 : 4}, 1fr)` })]}
     >
-      {names.map((name) => {
-        const value = resultValue(name, from.prediction, from.system);
-        return (
-          <FigureButton
-            key={name}
-            label={resultLabel[name]}
-            value={value}
-            spoken={explainText.spoken(resultLabel[name], value)}
-            onPress={() => onExplain({ name })}
-          />
-        );
-      })}
+      {names.map((name) => (
+        <ResultCell key={name} value={resultValue(name, from.prediction, from.system)} {...{ name, onExplain }} />
+      ))}
     </View>
   );
 }
+
+type ResultCellProps = { name: Exclude<ResultName, 'depth'>; value: string; onExplain: (explained: Explained) => void };
+
+const ResultCell = memo(function ResultCell({ name, value, onExplain }: ResultCellProps) {
+  return (
+    <FigureButton
+      label={resultLabel[name]}
+      value={value}
+      spoken={explainText.spoken(resultLabel[name], value)}
+      onPress={() => onExplain({ name })}
+    />
+  );
+});
 
 type ExplainDialogProps = { explained: Explained | null; from: ExplainedFrom; onClose: () => void };
 

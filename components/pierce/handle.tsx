@@ -1,13 +1,14 @@
-import { useRef, type KeyboardEvent, type RefCallback } from 'react';
+import { memo, useRef, type KeyboardEvent } from 'react';
 import { StyleSheet, View, type PointerEvent } from 'react-native';
 import { webStyle } from '@/components/theme/web-style.ts';
 import type { KnotEditing } from './knot-editing.ts';
-import type { Place } from './knot-places.ts';
-import { clamped, snapped, stepped, type Range, type Steps } from './knots.ts';
+import type { Area, Place } from './knot-places.ts';
+import { clamped, snapped, stepped, targetSame, type Range, type Steps } from './knots.ts';
 
 type HandleProps = {
   editing: KnotEditing;
   place: Place;
+  /** Along x the other keys change the number too; along y left and right lead to the neighbours. */
   axis: 'x' | 'y';
   label: string;
   valueText: string;
@@ -17,16 +18,13 @@ type HandleProps = {
   range: Range;
   steps: Steps;
   tabbable: boolean;
-  onNeighbour?: (by: 1 | -1) => void;
-  /** What takes the keys. */
-  ref?: RefCallback<View>;
 };
 
 type Drag = { pointer: number; at: number; value: number; perPixel: number; last: number };
 
 /** One number taken hold of: by pointer and touch along its axis, by keys in steps. What is seen of it is drawn below. */
-export function Handle(props: HandleProps) {
-  const { editing, place, axis, label, valueText, value, perPixel, range, steps, tabbable, onNeighbour, ref } = props;
+export const Handle = memo(function Handle(props: HandleProps) {
+  const { editing, place, axis, label, valueText, value, perPixel, range, steps, tabbable } = props;
   const { target, zone, mark } = place;
   const drag = useRef<Drag | null>(null);
   const slider = useRef<View>(null);
@@ -65,13 +63,12 @@ export function Handle(props: HandleProps) {
     drag.current = null;
     editing.onPreview(null);
   };
-  const key = (event: KeyboardEvent) => {
+  const key = (event: KeyboardEvent<HTMLElement>) => {
     if (event.ctrlKey || event.metaKey || event.altKey) return;
     if (event.key === 'Escape' && drag.current) return cancel();
-    const neighbour = onNeighbour && (event.key === 'ArrowLeft' ? -1 : event.key === 'ArrowRight' ? 1 : null);
-    if (onNeighbour && neighbour) {
+    if (axis === 'y' && (event.key === 'ArrowLeft' || event.key === 'ArrowRight')) {
       event.preventDefault();
-      onNeighbour(neighbour);
+      neighbourOf(event.currentTarget, event.key === 'ArrowLeft' ? -1 : 1)?.focus();
       return;
     }
     const next = keyed(event.key, event.shiftKey, value, range, steps);
@@ -94,10 +91,7 @@ export function Handle(props: HandleProps) {
     >
       {/* as large as the mark alone, so that the ring of the focus stays close to it and off the lane's name */}
       <View
-        ref={(view) => {
-          slider.current = view;
-          ref?.(view);
-        }}
+        ref={slider}
         role="slider"
         tabIndex={tabbable ? 0 : -1}
         aria-label={label}
@@ -114,6 +108,35 @@ export function Handle(props: HandleProps) {
       />
     </View>
   );
+}, handleSame);
+
+/** While one is dragged most of the others stay as they are: these are not drawn again. */
+function handleSame(a: HandleProps, b: HandleProps): boolean {
+  return (
+    a.editing === b.editing &&
+    a.value === b.value &&
+    a.valueText === b.valueText &&
+    a.label === b.label &&
+    a.perPixel === b.perPixel &&
+    a.tabbable === b.tabbable &&
+    a.axis === b.axis &&
+    a.range.min === b.range.min &&
+    a.range.max === b.range.max &&
+    a.steps.fine === b.steps.fine &&
+    a.steps.coarse === b.steps.coarse &&
+    a.steps.snap === b.steps.snap &&
+    targetSame(a.place.target, b.place.target) &&
+    areaSame(a.place.mark, b.place.mark) &&
+    areaSame(a.place.zone, b.place.zone)
+  );
+}
+
+const areaSame = (a: Area, b: Area) => a.x === b.x && a.y === b.y && a.width === b.width && a.height === b.height;
+
+/** The slider before or after this one in its group. */
+function neighbourOf(slider: HTMLElement, by: 1 | -1): HTMLElement | undefined {
+  const all = Array.from(slider.closest('[role=group]')?.querySelectorAll<HTMLElement>('[role=slider]') ?? []);
+  return all[all.indexOf(slider) + by];
 }
 
 /** On the web a view's host is the page's own element. */

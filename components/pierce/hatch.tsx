@@ -1,4 +1,6 @@
+import { memo } from 'react';
 import { Line, Pattern } from 'react-native-svg';
+
 /** Centre line of the drawing office: long, short, short, short. */
 export const centreLine = '14 4 3 4 3 4 3 4';
 
@@ -27,7 +29,14 @@ const round = (value: number) => Math.round(value * 100) / 100;
 type HatchProps = { id: string; spacing: number; colour: string; weight?: number; falling?: boolean; scale?: number };
 
 /** Section lines as a fill for any outline: `fill="url(#id)"`. `scale` undoes an outline's own enlargement. */
-export function HatchPattern({ id, spacing, colour, weight = 1, falling = false, scale = 1 }: HatchProps) {
+export const HatchPattern = memo(function HatchPattern({
+  id,
+  spacing,
+  colour,
+  weight = 1,
+  falling = false,
+  scale = 1,
+}: HatchProps) {
   const turn = falling ? -45 : 45;
   return (
     <Pattern
@@ -40,4 +49,4 @@ export function HatchPattern({ id, spacing, colour, weight = 1, falling = false,
       <Line x1={spacing / 2} y1={0} x2={spacing / 2} y2={spacing} stroke={colour} strokeWidth={weight} />
     </Pattern>
   );
-}
+});

@@ -1,4 +1,3 @@
-import { useRef } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { knotText } from '@/components/text/pierce-designer.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
@@ -7,7 +6,7 @@ import { Handle } from './handle.tsx';
 import type { KnotEditing } from './knot-editing.ts';
 import { KnotMarks, type LaneOfKnots } from './knot-marks.tsx';
 import { endPlaces, knotPlaces, type KnotPlace } from './knot-places.ts';
-import { knotValueText } from './knot-value.ts';
+import { knotValueWordings } from './knot-value.ts';
 import { targetRange, targetSteps } from './knots.ts';
 import { laneNumber, type LaneScale } from './lane-scale.ts';
 import type { SectionGeometry } from './section-geometry.ts';
@@ -74,14 +73,7 @@ type LaneHandlesProps = Pick<KnotLayerProps, 'editing' | 'stages' | 'system'> & 
 
 /** The knots of a lane as one stop of the Tab key: left and right lead from one to the next. */
 function LaneHandles({ lane, knots, perPixel, editing, stages, system }: LaneHandlesProps) {
-  const sliders = useRef<(View | null)[]>([]);
   const own = knots.findIndex(({ chosen }) => chosen);
-  const toKnot = (index: number) => {
-    const place = knots[index];
-    if (!place) return;
-    editing.onTarget(place.target);
-    sliders.current[index]?.focus();
-  };
   return (
     <View role="group" aria-label={knotText.lane(lane)} style={styles.layer}>
       {knots.map((place, index) => {
@@ -89,19 +81,15 @@ function LaneHandles({ lane, knots, perPixel, editing, stages, system }: LaneHan
         return (
           <Handle
             key={`${knot.ends[0].stage} ${knot.ends[0].end}`}
-            ref={(slider) => {
-              sliders.current[index] = slider;
-            }}
             axis="y"
             label={knotText.knotLabel(knot)}
-            valueText={knotValueText(knot, stages, editing.profile.focusScale, system)}
+            valueText={knotValueWordings(knot, stages, editing.profile.focusScale, system)[0]}
             value={knot.set}
             // power is moved by its peak: a pixel of mean is more of peak
             perPixel={perPixel / (lane === 'meanPower' ? knot.duty : 1)}
             range={targetRange(stages, target, editing.profile)}
             steps={targetSteps(target, system)}
             tabbable={place.chosen || (own < 0 && index === 0)}
-            onNeighbour={(by) => toKnot(index + by)}
             {...{ editing, place }}
           />
         );

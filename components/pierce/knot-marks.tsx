@@ -1,15 +1,16 @@
-import Svg, { G, Path, Rect, Text as SvgText } from 'react-native-svg';
+import { Fragment } from 'react';
+import Svg from 'react-native-svg';
 import { knotText } from '@/components/text/pierce-designer.ts';
 import { roles } from '@/components/theme/roles.ts';
-import { family } from '@/components/theme/type.ts';
 import type { FocusScale } from '@/strategy/machine.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
 import type { UnitSystem } from '@/strategy/units/index.ts';
 import type { EndPlace, KnotPlace, Place } from './knot-places.ts';
-import { knotValueText } from './knot-value.ts';
+import { knotValueWordings } from './knot-value.ts';
 import { laneUnit } from './lane-scale.ts';
 import type { SectionGeometry } from './section-geometry.ts';
 import { letteringWidth, type LaneName } from './section-layout.ts';
+import { Lettering, Path, Rect } from './still-shapes.tsx';
 
 /** A lane's knots, and where the lane begins, px. */
 export type LaneOfKnots = { readonly lane: LaneName; readonly top: number; readonly knots: readonly KnotPlace[] };
@@ -32,20 +33,20 @@ export function KnotMarks({ lanes, ends, stages, dial, geometry, system }: KnotM
       {lanes.map(({ lane, top, knots }) => {
         const chosen = knots.find((place) => place.chosen);
         return (
-          <G key={lane}>
+          <Fragment key={lane}>
             {knots.map((place, index) => (
               <Rect key={index} testID="lane-knot" {...place.mark} {...paint(place)} />
             ))}
             {chosen && (
               <KnotValue
-                text={knotValueText(chosen.knot, stages, dial, system)}
+                wordings={knotValueWordings(chosen.knot, stages, dial, system)}
                 at={geometry.x(chosen.knot.time)}
                 from={geometry.left + letteringWidth(`${knotText.laneShort(lane)}, ${laneUnit(lane, system)}`) + 10}
                 to={geometry.right}
                 y={top + 14}
               />
             )}
-          </G>
+          </Fragment>
         );
       })}
       {ends.map((place) => (
@@ -71,19 +72,22 @@ function EndValue({ place, geometry }: { place: EndPlace; geometry: SectionGeome
   return <Value x={before ? end - 12 - width : end + 10} y={geometry.handleRow + 6} width={width} text={text} />;
 }
 
+type KnotValueProps = { wordings: readonly [string, string]; at: number; from: number; to: number; y: number };
+
 /** The chosen knot's value in the line of the lane's name: above the knot where there is room, and never under the name. */
-function KnotValue({ text, at, from, to, y }: { text: string; at: number; from: number; to: number; y: number }) {
+function KnotValue({ wordings: [long, short], at, from, to, y }: KnotValueProps) {
+  const text = letteringWidth(long, 16) + 8 <= to - from ? long : short;
   const width = letteringWidth(text, 16) + 8;
   return <Value x={Math.max(from, Math.min(to - width, at - width / 2))} y={y} width={width} text={text} />;
 }
 
 function Value({ x, y, width, text }: { x: number; y: number; width: number; text: string }) {
   return (
-    <G>
+    <>
       <Rect x={x} y={y - 15} width={width} height={20} fill={roles.sheet} />
-      <SvgText x={x + 4} y={y} fontFamily={family.figure} fontSize={16} fill={roles.ember}>
+      <Lettering x={x + 4} y={y} figure size={16} colour={roles.ember}>
         {text}
-      </SvgText>
-    </G>
+      </Lettering>
+    </>
   );
 }

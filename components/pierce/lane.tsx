@@ -1,11 +1,11 @@
-import { G, Line, Path, Rect, Text as SvgText } from 'react-native-svg';
+import { Fragment } from 'react';
 import { roles } from '@/components/theme/roles.ts';
-import { family } from '@/components/theme/type.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
 import type { UnitSystem } from '@/strategy/units/index.ts';
 import { laneKnots } from './knots.ts';
 import { laneNumber, laneUnit, laneY, type LaneScale } from './lane-scale.ts';
 import { lanePoints, letteringWidth, polylineData, type LaneName } from './section-layout.ts';
+import { Lettering, Line, Path, Rect } from './still-shapes.tsx';
 
 type LaneProps = {
   lane: LaneName;
@@ -40,26 +40,19 @@ export function Lane(props: LaneProps) {
   const levels = zeroClear ? [floor, 0, most] : [floor, most];
   const name = `${label}, ${unit}`;
   return (
-    <G>
+    <>
       {/* a stage's boundary passes behind the name */}
       <Rect x={left} y={top} width={letteringWidth(name) + 8} height={18} fill={roles.sheet} />
-      <SvgText x={left} y={top + 14} fontFamily={family.label} fontSize={14} fill={roles.softInk}>
+      <Lettering x={left} y={top + 14} colour={roles.softInk}>
         {name}
-      </SvgText>
+      </Lettering>
       {levels.map((value) => (
-        <G key={value}>
+        <Fragment key={value}>
           <Line x1={left} x2={right} y1={yOf(value)} y2={yOf(value)} stroke={roles.rule} strokeWidth={1} />
-          <SvgText
-            x={left - 9}
-            y={yOf(value) + 5}
-            textAnchor="end"
-            fontFamily={family.figure}
-            fontSize={14}
-            fill={roles.softInk}
-          >
+          <Lettering x={left - 9} y={yOf(value) + 5} anchor="end" figure colour={roles.softInk}>
             {laneFigure(value)}
-          </SvgText>
-        </G>
+          </Lettering>
+        </Fragment>
       ))}
       {ghosts.map((ghost, index) => (
         <Path
@@ -90,7 +83,7 @@ export function Lane(props: LaneProps) {
             />
           );
         })}
-    </G>
+    </>
   );
 }
 

@@ -88,20 +88,25 @@ export function SectionPanel({
   const target =
     chosenTarget && inSight(chosenTarget) && targetValue(stages, chosenTarget) !== null ? chosenTarget : null;
 
-  const editing: KnotEditing | undefined = edit
-    ? {
-        profile: edit.profile,
-        target,
-        onTarget: (next) => {
-          setTarget(next);
-          edit.onChoose(next.stage);
-        },
-        onPreview: setPreview,
-        onCommit: (moved, value) =>
-          edit.onStages((before) => targetMoved(before, moved, value), `knot ${JSON.stringify(moved)}`),
-        onSettle: edit.onSettle,
-      }
-    : undefined;
+  // the same while something is dragged, so that what isn't moved need not be drawn again
+  const editing = useMemo<KnotEditing | undefined>(
+    () =>
+      edit
+        ? {
+            profile: edit.profile,
+            target,
+            onTarget: (next) => {
+              setTarget(next);
+              edit.onChoose(next.stage);
+            },
+            onPreview: setPreview,
+            onCommit: (moved, value) =>
+              edit.onStages((before) => targetMoved(before, moved, value), `knot ${JSON.stringify(moved)}`),
+            onSettle: edit.onSettle,
+          }
+        : undefined,
+    [edit, target, setPreview],
+  );
 
   const from = { prediction, content: shown.content, nozzle, rules, system };
   const reserve = (name: 'reserveCold' | 'reserveHot') => {

@@ -1,8 +1,7 @@
-import { useId, useState } from 'react';
+import { Fragment, useId, useState } from 'react';
 import { View } from 'react-native';
-import Svg, { Circle, ClipPath, Defs, G, Line, Path, Rect, Text as SvgText } from 'react-native-svg';
+import Svg, { ClipPath, Defs, G } from 'react-native-svg';
 import { roles } from '@/components/theme/roles.ts';
-import { family } from '@/components/theme/type.ts';
 import { knotText } from '@/components/text/pierce-designer.ts';
 import { laneText, sectionText, sectionWords } from '@/components/text/pierce.ts';
 import type { Condition, Prediction } from '@/shared/strategies.ts';
@@ -26,6 +25,7 @@ import {
   traceUntilThrough,
   type LaneName,
 } from './section-layout.ts';
+import { Circle, Lettering, Line, Path, Rect } from './still-shapes.tsx';
 
 type SectionViewProps = {
   prediction: Prediction;
@@ -147,18 +147,16 @@ export function SectionView({
           const from = x(end - (stages[index]?.duration ?? 0));
           const label = fittingLabel(x(end) - from, sectionText.stage(index + 1));
           return (
-            <G key={index}>
+            <Fragment key={index}>
               {label !== null && (
-                <SvgText
+                <Lettering
                   x={(from + x(end)) / 2}
                   y={17}
-                  textAnchor="middle"
-                  fontFamily={family.label}
-                  fontSize={14}
-                  fill={index === chosen ? roles.ember : roles.ink}
+                  anchor="middle"
+                  colour={index === chosen ? roles.ember : roles.ink}
                 >
                   {label}
-                </SvgText>
+                </Lettering>
               )}
               {index < ends.length - 1 && (
                 <Line
@@ -172,7 +170,7 @@ export function SectionView({
                   strokeDasharray={centreLine}
                 />
               )}
-            </G>
+            </Fragment>
           );
         })}
 
@@ -207,7 +205,7 @@ export function SectionView({
         )}
 
         {depthTicks.map((tick) => (
-          <G key={tick}>
+          <Fragment key={tick}>
             <Line
               x1={left - 5}
               x2={left}
@@ -216,27 +214,20 @@ export function SectionView({
               stroke={roles.softInk}
               strokeWidth={1}
             />
-            <SvgText
-              x={left - 9}
-              y={y(tick * quantityOne(lengthUnit)) + 5}
-              textAnchor="end"
-              fontFamily={family.figure}
-              fontSize={14}
-              fill={roles.ink}
-            >
-              {tick}
-            </SvgText>
-          </G>
+            <Lettering x={left - 9} y={y(tick * quantityOne(lengthUnit)) + 5} anchor="end" figure>
+              {String(tick)}
+            </Lettering>
+          </Fragment>
         ))}
-        <SvgText
+        <Lettering
+          x={0}
+          y={0}
           transform={`translate(14 ${(top + bottom) / 2}) rotate(-90)`}
-          textAnchor="middle"
-          fontFamily={family.label}
-          fontSize={14}
-          fill={roles.softInk}
+          anchor="middle"
+          colour={roles.softInk}
         >
           {`${sectionText.depth}, ${lengthUnit}`}
-        </SvgText>
+        </Lettering>
 
         <DimensionRow
           condition={cold}
@@ -285,17 +276,15 @@ export function SectionView({
         ))}
 
         {timeTicks.map((tick) => (
-          <SvgText
+          <Lettering
             key={tick}
             x={x(tick)}
             y={geometry.timeBase}
-            textAnchor={x(tick) > right - 12 ? 'end' : 'middle'}
-            fontFamily={family.figure}
-            fontSize={14}
-            fill={roles.ink}
+            anchor={x(tick) > right - 12 ? 'end' : 'middle'}
+            figure
           >
             {`${tick} s`}
-          </SvgText>
+          </Lettering>
         ))}
       </Svg>
       {editing && <KnotLayer {...{ editing, stages, lanes, scales, geometry, system }} />}
@@ -336,9 +325,9 @@ function GhostTrace({ ghost, thickness, x, y, bottom, right }: GhostTraceProps) 
         strokeLinecap="round"
       />
       <Rect x={from} y={base - 14} width={width} height={19} fill={roles.sheet} />
-      <SvgText x={from + 4} y={base} fontFamily={family.label} fontSize={14} fill={roles.ink}>
+      <Lettering x={from + 4} y={base}>
         {ghost.label}
-      </SvgText>
+      </Lettering>
     </G>
   );
 }
@@ -368,9 +357,9 @@ function DimensionRow({ condition, plate, short, colour, x, end, y, routineTime,
         ]
       : [dimensionSpan(x(0), end, sectionText.notThrough(plate))];
   return (
-    <G>
+    <>
       {spans.map((span) => (
-        <G key={span.from}>
+        <Fragment key={span.from}>
           {span.gap && (
             <Rect x={span.gap.from} y={y - 11} width={span.gap.to - span.gap.from} height={20} fill={roles.sheet} />
           )}
@@ -390,19 +379,12 @@ function DimensionRow({ condition, plate, short, colour, x, end, y, routineTime,
             strokeWidth={1.6}
           />
           {span.text !== null && (
-            <SvgText
-              x={(span.from + span.to) / 2}
-              y={y + 5}
-              textAnchor="middle"
-              fontFamily={family.label}
-              fontSize={14}
-              fill={colour}
-            >
+            <Lettering x={(span.from + span.to) / 2} y={y + 5} anchor="middle" colour={colour}>
               {span.text}
-            </SvgText>
+            </Lettering>
           )}
-        </G>
+        </Fragment>
       ))}
-    </G>
+    </>
   );
 }

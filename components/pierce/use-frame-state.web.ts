@@ -1,4 +1,4 @@
-import { useRef, useState } from 'react';
+import { useCallback, useRef, useState } from 'react';
 import { flushSync } from 'react-dom';
 
 /**
@@ -8,7 +8,7 @@ import { flushSync } from 'react-dom';
 export function useFrameState<T>(first: T | null): [T | null, (next: T | null) => void] {
   const [state, setState] = useState(first);
   const waiting = useRef<{ frame: number; next: T } | null>(null);
-  const set = (next: T | null) => {
+  const set = useCallback((next: T | null) => {
     if (next === null) {
       if (waiting.current) cancelAnimationFrame(waiting.current.frame);
       waiting.current = null;
@@ -26,6 +26,6 @@ export function useFrameState<T>(first: T | null): [T | null, (next: T | null) =
       if (last) flushSync(() => setState(last.next));
     });
     waiting.current = { frame, next };
-  };
+  }, []);
   return [state, set];
 }

@@ -34,18 +34,19 @@ export const knotText = {
   durationLabel: (stage: number) => `Duration of stage ${stage + 1}, on the time axis`,
   duration: seconds,
   knotLabel: (knot: Knot) => `${laneWords[knot.lane].of} ${placeWords(knot)}`,
-  value: (knot: Knot, standoff: number, scale: FocusScale, system: UnitSystem): string => {
+  /** A knot's value, and after it what belongs to it: left away in the drawing where there is no room. */
+  value: (knot: Knot, standoff: number, scale: FocusScale, system: UnitSystem): readonly [string, string?] => {
     switch (knot.lane) {
       case 'standoff':
-        return quantityText(knot.set, 'length', system).text;
+        return [quantityText(knot.set, 'length', system).text];
       case 'focusPosition':
-        return `${quantityText(knot.set, 'length', system, { sign: true }).text}, ${dialWords(scale, knot.set, standoff)}`;
+        return [quantityText(knot.set, 'length', system, { sign: true }).text, dialWords(scale, knot.set, standoff)];
       case 'meanPower': {
         const mean = quantityText(knot.value, 'power', system, { figures: 3 }).text;
-        return knot.duty === 1 ? mean : `${mean} mean, ${quantityText(knot.set, 'power', system).text} peak`;
+        return knot.duty === 1 ? [mean] : [`${mean} mean`, `${quantityText(knot.set, 'power', system).text} peak`];
       }
       case 'oxygenPressure':
-        return quantityText(knot.set, 'pressure', system).text;
+        return [quantityText(knot.set, 'pressure', system).text];
     }
   },
   none: 'Drag a knot, or choose one with a tap and type its number here.',
