@@ -22,6 +22,8 @@ export const cornerOptionSchema = z.object({
   returnTemperature: z.number().nullable(), // K
   addedTime: z.number().nullable(), // s
   why: z.string(),
+  /** Where what stands in a loop's way is, m; plans computed before it was kept have none. */
+  at: pointSchema.nullable().default(null),
 });
 
 export const plannedCornerSchema = z.object({
@@ -46,6 +48,8 @@ export const plannedCornerSchema = z.object({
       length: z.number(),
       slugArea: z.number(),
       segments: z.array(segmentSchema),
+      /** Outline of what falls, m; empty when the kerf takes it all. */
+      slug: z.array(segmentSchema).default([]),
     })
     .nullable(),
   options: z.array(cornerOptionSchema),
@@ -72,6 +76,17 @@ export const cornerPlanSchema = z.object({
   skeleton: skeletonSchema,
   overrides: z.record(z.string(), z.enum(treatments)),
   limit: z.number(), // K
+  /** What the time of the cut follows from, of the strategy revision and its machine: nobody needs access to either to see the cut run. */
+  cutting: z.object({
+    feed: z.number(), // m/s
+    acceleration: z.number(), // m/s²
+    jerk: z.number(), // m/s³
+    /** Between two cuts, m/s. */
+    travel: z.number(),
+    /** Routine of one pierce, s. */
+    pierce: z.number(),
+    kerfWidth: z.number(), // m
+  }),
   corners: z.array(plannedCornerSchema),
   totals: z.object({
     corners: z.number().int(),

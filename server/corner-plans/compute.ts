@@ -4,7 +4,7 @@ import type { DrawingReadingWire } from '../../shared/parts.ts';
 import type { StrategyContent } from '../../shared/strategies.ts';
 import type { CornerPlan as Computed, PlannedCorner as ComputedCorner } from '../../strategy/corners/index.ts';
 import type { MachineProfile } from '../../strategy/machine.ts';
-import { oxygenMassFlow, PIERCE_DEFAULTS } from '../../strategy/pierce/index.ts';
+import { oxygenMassFlow, PIERCE_DEFAULTS, routineTime } from '../../strategy/pierce/index.ts';
 import type { DrawingReader } from '../drawings/reader.ts';
 
 /** What the programmer chose. */
@@ -72,16 +72,30 @@ function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): Pla
           length: loop.length,
           slugArea: loop.slug?.area ?? 0,
           segments: [...loop.segments],
+          slug: [...(loop.slug?.contour.segments ?? [])],
         }
       : null,
-    options: corner.options.map(({ treatment, fits, returnWith, addedTime, why }) => ({
+    options: corner.options.map(({ treatment, fits, returnWith, addedTime, why, at }) => ({
       treatment,
       fits,
       returnTemperature: returnWith,
       addedTime,
       why,
+      at: at ?? null,
     })),
     trouble: corner.problem ?? null,
+  };
+}
+
+/** What the time of the cut follows from. The machine's own greatest feed bounds the cut's, as in the plan, and is what it travels at. */
+export function cuttingOf(content: StrategyContent, { axes }: Pick<MachineProfile, 'axes'>): CornerPlan['cutting'] {
+  return {
+    feed: Math.min(content.cut.feed, axes.maxFeed),
+    acceleration: axes.acceleration,
+    jerk: axes.jerk,
+    travel: axes.maxFeed,
+    pierce: routineTime(content.stages),
+    kerfWidth: content.cut.kerfWidth,
   };
 }
 

@@ -11,11 +11,18 @@ export type CornerPlanRow = typeof cornerPlans.$inferSelect;
 
 export async function findCornerPlan(tx: Transaction, id: string) {
   const [row] = await tx
-    .select({ plan: cornerPlans, part: parts, revision: strategyRevisions, strategyName: strategies.name })
+    .select({
+      plan: cornerPlans,
+      part: parts,
+      revision: strategyRevisions,
+      strategyName: strategies.name,
+      profile: machineRevisions.profile,
+    })
     .from(cornerPlans)
     .innerJoin(parts, eq(parts.id, cornerPlans.partId))
     .innerJoin(strategyRevisions, eq(strategyRevisions.id, cornerPlans.revisionId))
     .innerJoin(strategies, eq(strategies.id, strategyRevisions.strategyId))
+    .innerJoin(machineRevisions, eq(machineRevisions.id, strategyRevisions.machineRevisionId))
     .where(eq(cornerPlans.id, id));
   return row ?? null;
 }

@@ -7,7 +7,7 @@ import { namesOf } from '../people/names.ts';
 import { note } from '../record/note.ts';
 import type { Mount } from '../route.ts';
 import type { Services } from '../services.ts';
-import { computePlan, unknownOverrides, type Choices, type PlanSource } from './compute.ts';
+import { computePlan, cuttingOf, unknownOverrides, type Choices, type PlanSource } from './compute.ts';
 import { addCornerPlan, findCornerPlan, lockCornerPlan, planSources, replaceCornerPlan } from './repository.ts';
 
 export function cornerPlanRoutes({ route, services }: Mount): void {
@@ -137,7 +137,7 @@ async function replyWith(
 ): Promise<{ body: CornerPlan; version: number }> {
   const found = await findCornerPlan(tx, id);
   if (!found || (onlyApproved && found.revision.state !== 'approved')) throw notFound('There is no such corner plan');
-  const { plan, part, revision, strategyName } = found;
+  const { plan, part, revision, strategyName, profile } = found;
   const names = await namesOf(tx);
   return {
     version: plan.version,
@@ -158,6 +158,7 @@ async function replyWith(
       skeleton: plan.skeleton,
       overrides: plan.overrides,
       limit: plan.limit,
+      cutting: cuttingOf(revision.content, profile),
       corners: plan.corners,
       totals: plan.totals,
       changedAt: plan.changedAt.toISOString(),

@@ -39,6 +39,7 @@ const corner = (n: number, more: Partial<PlannedCorner> = {}): PlannedCorner => 
       returnTemperature: 453.15,
       addedTime: 0,
       why: 'the tip returns at 180 °C',
+      at: null,
     },
     {
       treatment: 'loop',
@@ -46,8 +47,9 @@ const corner = (n: number, more: Partial<PlannedCorner> = {}): PlannedCorner => 
       returnTemperature: null,
       addedTime: null,
       why: 'the loop would come within 1 mm of the plate’s edge',
+      at: { x: 0.12, y: -0.005 },
     },
-    { treatment: 'dwell', fits: true, returnTemperature: 400, addedTime: 1.2, why: 'after waiting 1.2 s' },
+    { treatment: 'dwell', fits: true, returnTemperature: 400, addedTime: 1.2, why: 'after waiting 1.2 s', at: null },
   ],
   trouble: null,
   ...more,
@@ -74,6 +76,7 @@ const planOf = (more: Partial<CornerPlan> = {}): CornerPlan => ({
   skeleton: { left: 0.02, right: 0.02, below: 0.02, above: 0.02 },
   overrides: {},
   limit: 523.15,
+  cutting: { feed: 0.02, acceleration: 2, jerk: 50, travel: 1, pierce: 1.5, kerfWidth: 5e-4 },
   corners: [
     corner(0),
     corner(1, {
@@ -87,6 +90,7 @@ const planOf = (more: Partial<CornerPlan> = {}): CornerPlan => ({
         length: 0.0336,
         slugArea: 4e-5,
         segments: [arcOf({ x: 0.105, y: -0.005 }, 5e-3, 0, 4)],
+        slug: [],
       },
     }),
     corner(2, { trouble: 'nothing keeps this tip under the limit', treated: 700, untreated: 700 }),
