@@ -136,6 +136,7 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
     profile,
     nozzle,
     rules,
+    houseRules: revision.houseRules,
   });
   const ghosts = useMemo<readonly Ghost[]>(
     () => [

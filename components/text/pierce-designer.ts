@@ -134,7 +134,8 @@ export const proposeText = {
   open: 'Propose',
   close: 'Close the proposal',
   title: 'Let the designer propose',
-  meaning: 'It looks for the shortest routine that keeps the reserves, this machine’s limits and the checks.',
+  meaning:
+    'It looks for the shortest routine that keeps the reserves, this machine’s limits, the checks and every house rule that blocks.',
   cold: 'Reserve on a cold plate, at least',
   hot: 'Reserve on the hottest plate, at least',
   reserveHint: '1 to 20',
