@@ -1,5 +1,4 @@
 import { z } from 'zod';
-import { numberText, quantityText, type UnitSystem } from '../strategy/units/index.ts';
 import { houseRuleTable, type HouseRuleName } from '../strategy/rules/names.ts'; // not the folder's face: that one brings the reader of expressions along
 import { idSchema, instantSchema, listOf, personSchema, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
@@ -57,13 +56,6 @@ export type HouseRuleVerdict = z.infer<typeof houseRuleVerdictSchema>;
 /** Whether a verdict keeps a draft from being handed in. */
 export const verdictBlocks = ({ blocks, state }: Pick<HouseRuleVerdict, 'blocks' | 'state'>): boolean =>
   blocks && state !== 'holds';
-
-/** A named result as people read it. Plain numbers are cut off, not rounded: 1.9996 does not reach 2. */
-export function houseRuleValueText(name: HouseRuleName, value: number, system: UnitSystem): string {
-  const dimension = houseRuleTable.find((row) => row.name === name)?.dimension ?? 'count';
-  if (dimension !== 'count') return quantityText(value, dimension, system).text;
-  return numberText(Math.trunc(value * 1000 + Math.sign(value) * 1e-6) / 1000, 3);
-}
 
 /** Named results of one revision, for whoever writes a rule to see what it would meet. */
 export const houseRuleExampleSchema = z.object({

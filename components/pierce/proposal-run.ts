@@ -1,5 +1,5 @@
-import { piercePropose, type PierceProposal, type ProposeInput } from '@/strategy/pierce/index.ts';
-import type { ProposeSaid } from './propose.worker.ts';
+import type { PierceProposal } from '@/strategy/pierce/index.ts';
+import type { ProposeAsked, ProposeSaid } from './propose.worker.ts';
 
 export type ProposalWatch = {
   /** How far it is, 0 to 1. */
@@ -9,12 +9,8 @@ export type ProposalWatch = {
   readonly onRefused: (why: string) => void;
 };
 
-/** Works out a proposal beside the page, in a worker; the function given back stops it. Without workers it is done in one go. */
-export function proposalRun(input: ProposeInput, watch: ProposalWatch): () => void {
-  return typeof Worker === 'undefined' ? runHere(input, watch) : runBeside(input, watch);
-}
-
-function runBeside(input: ProposeInput, { onProgress, onDone, onRefused }: ProposalWatch): () => void {
+/** Works out a proposal beside the page, in a worker, where the reader of house rules is at hand; the function given back stops it. */
+export function proposalRun(asked: ProposeAsked, { onProgress, onDone, onRefused }: ProposalWatch): () => void {
   const worker = new Worker(new URL('./propose.worker.ts', import.meta.url));
   const stop = () => worker.terminate();
   worker.onmessage = ({ data }: MessageEvent<ProposeSaid>) => {
@@ -27,19 +23,6 @@ function runBeside(input: ProposeInput, { onProgress, onDone, onRefused }: Propo
     stop();
     onRefused(event.message);
   };
-  worker.postMessage(input);
+  worker.postMessage(asked);
   return stop;
-}
-
-function runHere(input: ProposeInput, { onDone, onRefused }: ProposalWatch): () => void {
-  // after the page has said that it is at work
-  const timer = setTimeout(() => {
-    try {
-      onDone(piercePropose(input));
-    } catch (error) {
-      if (!(error instanceof RangeError)) throw error;
-      onRefused(error.message);
-    }
-  }, 0);
-  return () => clearTimeout(timer);
 }

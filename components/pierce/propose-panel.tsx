@@ -14,8 +14,9 @@ import { Body, Heading, Small } from '@/components/ui/text.tsx';
 import { Tick } from '@/components/ui/tick.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { Prediction } from '@/shared/strategies.ts';
-import type { ProposeInput, ReserveRules, Stage } from '@/strategy/pierce/index.ts';
+import type { ReserveRules, Stage } from '@/strategy/pierce/index.ts';
 import { quantityText } from '@/strategy/units/index.ts';
+import type { ProposeAsked } from './propose.worker.ts';
 import type { ProposalGround } from './use-draft-proposal.ts';
 import type { ProposalState } from './use-proposal.ts';
 
@@ -30,7 +31,7 @@ type ProposePanelProps = {
   /** What the proposed (or nearest) stages come to, and what there is now. */
   proposed: Prediction | null;
   now: Prediction;
-  onBegin: (input: ProposeInput) => void;
+  onBegin: (asked: ProposeAsked) => void;
   onCancel: () => void;
   onAccept: (stages: readonly Stage[]) => void;
   onClose: () => void;

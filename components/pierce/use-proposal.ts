@@ -1,6 +1,7 @@
 import { useEffect, useRef, useState } from 'react';
-import type { PierceProposal, ProposeInput } from '@/strategy/pierce/index.ts';
+import type { PierceProposal } from '@/strategy/pierce/index.ts';
 import { proposalRun } from './proposal-run.ts';
+import type { ProposeAsked } from './propose.worker.ts';
 
 export type ProposalState =
   | { readonly kind: 'idle' }
@@ -9,7 +10,7 @@ export type ProposalState =
   | {
       readonly kind: 'answered';
       readonly proposal: Exclude<PierceProposal, { kind: 'stopped' }>;
-      readonly input: ProposeInput;
+      readonly asked: ProposeAsked;
     };
 
 /** The designer's search as state: begin it, stop it, put its answer away. It stops when the page is left. */
@@ -22,13 +23,13 @@ export function useProposal() {
     stop.current = null;
     setState({ kind: 'idle' });
   };
-  const begin = (input: ProposeInput) => {
+  const begin = (asked: ProposeAsked) => {
     stop.current?.();
     setState({ kind: 'working', share: 0 });
-    stop.current = proposalRun(input, {
+    stop.current = proposalRun(asked, {
       onProgress: (share) => setState({ kind: 'working', share }),
       onDone: (proposal) =>
-        setState(proposal.kind === 'stopped' ? { kind: 'idle' } : { kind: 'answered', proposal, input }),
+        setState(proposal.kind === 'stopped' ? { kind: 'idle' } : { kind: 'answered', proposal, asked }),
       onRefused: (why) => setState({ kind: 'refused', why }),
     });
   };

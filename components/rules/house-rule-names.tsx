@@ -12,8 +12,9 @@ import { Progress } from '@/components/ui/progress.tsx';
 import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Heading, Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
-import { houseRuleValueText } from '@/shared/house-rules.ts';
-import { houseRuleTable, type HouseRuleName } from '@/strategy/rules/names.ts'; // the folder's face would bring the reader of expressions along
+// not from the folder's face, which would bring the reader of expressions along
+import { houseRuleTable, type HouseRuleName } from '@/strategy/rules/names.ts';
+import { houseRuleValueText } from '@/strategy/rules/value-text.ts';
 
 /** Every name a rule may use, how a limit on it is written, and what it comes to on a revision of this plant. */
 export function HouseRuleNames({ onPick }: { readonly onPick: (name: HouseRuleName) => void }) {

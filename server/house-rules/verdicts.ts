@@ -1,8 +1,13 @@
 import type { Transaction } from '../../db/database.ts';
-import { houseRuleValueText, type HouseRuleVerdict } from '../../shared/house-rules.ts';
+import type { HouseRuleVerdict } from '../../shared/house-rules.ts';
 import { namedResultsOf } from '../../shared/prediction.ts';
 import type { StrategyContent } from '../../shared/strategies.ts';
-import { houseRuleHolds, houseRuleRead, type HouseRuleResults } from '../../strategy/rules/index.ts';
+import {
+  houseRuleHolds,
+  houseRuleRead,
+  houseRuleValuesText,
+  type HouseRuleResults,
+} from '../../strategy/rules/index.ts';
 import { groundOf } from '../revisions/judge.ts';
 import type { RevisionRow } from '../revisions/repository.ts';
 import { rulesInForce, type HouseRuleRow } from './repository.ts';
@@ -52,9 +57,6 @@ export function judgement(expression: string, named: NamedResults): Pick<HouseRu
   const found = houseRuleHolds(expression, named.results);
   if (found.kind === 'none') return { state: 'unclear', why: found.why };
   const read = houseRuleRead(expression);
-  const values = (read.kind === 'ok' ? read.uses : []).map((name) => {
-    const value = named.results[name];
-    return value === null ? `there is no ${name}` : `${name} is ${houseRuleValueText(name, value, 'metric')}`;
-  });
-  return { state: found.holds ? 'holds' : 'broken', why: `Here ${values.join(', ')}.` };
+  const values = houseRuleValuesText(read.kind === 'ok' ? read.uses : [], named.results);
+  return { state: found.holds ? 'holds' : 'broken', why: `Here ${values}.` };
 }

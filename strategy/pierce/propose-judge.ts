@@ -4,7 +4,7 @@ import { leadInNeeded } from './lead-in.ts';
 import { heatLeftOf, SHORTEST_STALL } from './predict.ts';
 import { planStages, type Frame, type Plan } from './propose-plan.ts';
 import type { PierceResults } from './results.ts';
-import { pierceRun, type PierceRun, type RunSearch } from './run.ts';
+import { pierceRun, type PierceRun } from './run.ts';
 import { routineTime, stagesMeanPower, stagesPeakPower, stagesPulses } from './stage-math.ts';
 import { LONGEST_STAGE } from './stage-problems.ts';
 import type { Stage } from './stage.ts';
@@ -15,6 +15,8 @@ export type ProposalRule = {
   readonly sentence: string;
   /** How far it is from holding, without unit: 0 when it holds. The nearer the smaller, so that a search finds the way. */
   readonly miss: (results: PierceResults) => number;
+  /** What the results that it speaks of come to, in words. */
+  readonly said: (results: PierceResults) => string;
 };
 
 /** Limits beside the reserve; each may be left out. SI. */
@@ -39,6 +41,8 @@ export type Brief = {
   readonly reserve: ReserveRules;
   readonly limits: ProposalLimits & { readonly eruptionIndex: number };
   readonly rules: readonly ProposalRule[];
+  /** Every candidate is judged by exact figures. */
+  readonly exact?: boolean;
 };
 
 /** What a proposal may miss. The first four are what makes a routine sound, the others are what was asked for. */
@@ -86,7 +90,13 @@ const STOOD = SHORTEST_STALL / 2;
  * A plan judged: its stages with the hold as long as the reserve asks for, and what it misses. Undefined when it is no better than a
  * routine that wishes for `beat` s and nothing more needed to be known.
  */
-export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number, exact = false): Judged | undefined {
+export function planJudged(
+  frame: Frame,
+  brief: Brief,
+  plan: Plan,
+  beat: number,
+  exact = brief.exact === true,
+): Judged | undefined {
   const margin = exact ? 1 : 1 - SEARCH_MARGIN;
   const { thickness, reserve, limits } = brief;
   const only = beat < Number.POSITIVE_INFINITY;
@@ -120,8 +130,10 @@ export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number,
   const hold = Math.min(LONGEST_STAGE, Number((total - ramps).toFixed(6)));
   const stages = frame.holds ? planStages(frame, plan, hold) : trial;
 
-  if (throughCold === null) miss('through', 1 + (thickness.max - cold.depth) / thickness.max);
-  else {
+  // Nothing is worse than not being through, however many rules are missed.
+  if (throughCold === null) {
+    miss('through', 1 + brief.rules.length + (thickness.max - cold.depth) / thickness.max);
+  } else {
     const lastBegins = routineTime(stages.slice(0, -1));
     // Who gives stages decides when they end.
     if (!frame.given) miss('idle', lastBegins / throughCold - margin);
@@ -138,19 +150,18 @@ export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number,
   if (limits.craterRadius !== undefined) miss('crater', craterRadius / (limits.craterRadius * margin) - 1);
   if (limits.routineTime !== undefined) miss('routine-time', total / (limits.routineTime * (1 + 1e-9)) - 1);
 
-  if (throughCold !== null && (brief.rules.length > 0 || limits.leadInLength !== undefined)) {
-    const results = resultsOf(brief, stages, search);
+  // What misses something cannot beat what misses nothing, so its rules need not be asked.
+  if (only && misses.some((by) => by > 0)) return undefined;
+  if (throughCold === null) misses.fill(0.5, FIRST_RULE);
+  else if (brief.rules.length > 0 || limits.leadInLength !== undefined) {
+    const results = resultsOf(brief, stages);
     if (limits.leadInLength !== undefined) {
-      miss('lead-in', results.leadInLength === null ? 1 : results.leadInLength / (limits.leadInLength * margin) - 1);
+      miss('lead-in', results.leadInLength === null ? 1 : results.leadInLength / limits.leadInLength - 1);
     }
     brief.rules.forEach((rule, index) => {
       const by = rule.miss(results);
       // A rule that cannot be said counts as one missed by half.
       misses[FIRST_RULE + index] = Number.isFinite(by) ? Math.max(0, by) : 0.5;
-    });
-  } else {
-    brief.rules.forEach((_, index) => {
-      misses[FIRST_RULE + index] = throughCold === null ? 0.5 : 0;
     });
   }
   return {
@@ -165,43 +176,91 @@ export function planJudged(frame: Frame, brief: Brief, plan: Plan, beat: number,
 }
 
 /**
- * The named results of stages, without a trace. The same as `pierceResults` gives from a whole prediction, but that stalls are told
- * as one or none: a run without a trace knows how long the bottom stood and not how often.
+ * The named results of stages, without a trace and each worked out when it is asked for, since a rule asks for one or two. The same as
+ * `pierceResults` gives from a whole prediction, but that stalls are told as one or none: a run without a trace knows how long the
+ * bottom stood and not how often.
  */
-export function resultsOf(brief: Brief, stages: readonly Stage[], search?: RunSearch): PierceResults {
+export function resultsOf(brief: Brief, stages: readonly Stage[]): PierceResults {
   const { thickness, coldPlate, hottestPlate } = brief;
-  const cold = pierceRun(brief.cold, stages, thickness.max, undefined, search);
-  const hot = pierceRun(brief.hot, stages, thickness.max, undefined, search);
-  const thin = thickness.min === thickness.max ? hot : pierceRun(brief.hot, stages, thickness.min, undefined, search);
+  const cold = once(() => pierceRun(brief.cold, stages, thickness.max));
+  const hot = once(() => pierceRun(brief.hot, stages, thickness.max));
+  const thin = once(() => (thickness.min === thickness.max ? hot() : pierceRun(brief.hot, stages, thickness.min)));
   const total = routineTime(stages);
   const heatOf = (run: PierceRun, plate: number) => heatLeftOf(run.ledger) / plate;
-  const perLength = Math.max(heatOf(cold, thickness.max), heatOf(hot, thickness.max), heatOf(thin, thickness.min));
-  const craterRadius = Math.max(cold.craterRadius, hot.craterRadius, thin.craterRadius);
-  const leadIn = leadInNeeded({ craterRadius, heat: { perLength, duration: total }, plateTemperature: hottestPlate });
+  const perLength = once(() =>
+    Math.max(heatOf(cold(), thickness.max), heatOf(hot(), thickness.max), heatOf(thin(), thickness.min)),
+  );
+  const craterRadius = once(() => Math.max(cold().craterRadius, hot().craterRadius, thin().craterRadius));
+  const leadIn = once(() =>
+    leadInNeeded({
+      craterRadius: craterRadius(),
+      heat: { perLength: perLength(), duration: total },
+      plateTemperature: hottestPlate,
+    }),
+  );
+  const throughAt = ({ through }: PierceRun) => through?.time ?? null;
+  const reserve = (run: PierceRun) => (run.through === null ? null : total / run.through.time);
   return {
-    reserveCold: cold.through === null ? null : total / cold.through.time,
-    reserveHot: hot.through === null ? null : total / hot.through.time,
-    breakthroughCold: cold.through?.time ?? null,
-    breakthroughHot: hot.through?.time ?? null,
+    get reserveCold() {
+      return reserve(cold());
+    },
+    get reserveHot() {
+      return reserve(hot());
+    },
+    get breakthroughCold() {
+      return throughAt(cold());
+    },
+    get breakthroughHot() {
+      return throughAt(hot());
+    },
     routineTime: total,
-    craterRadius,
-    leadInLength: leadIn.kind === 'ok' ? leadIn.length : null,
-    eruptionIndex: Math.max(greatest(cold.eruptions), greatest(hot.eruptions), greatest(thin.eruptions)),
+    get craterRadius() {
+      return craterRadius();
+    },
+    get leadInLength() {
+      const needed = leadIn();
+      return needed.kind === 'ok' ? needed.length : null;
+    },
+    get eruptionIndex() {
+      return Math.max(greatest(cold().eruptions), greatest(hot().eruptions), greatest(thin().eruptions));
+    },
     eruptionLimit: brief.cold.parameters.eruptionLimit,
-    meanPower: stagesMeanPower(stages),
-    peakPower: stagesPeakPower(stages),
-    energy: cold.emitted,
-    heatLeft: heatLeftOf(cold.ledger),
-    heatPerThickness: perLength,
-    oxygenUsed: cold.oxygenUsed,
-    pulses: stagesPulses(stages),
+    get meanPower() {
+      return stagesMeanPower(stages);
+    },
+    get peakPower() {
+      return stagesPeakPower(stages);
+    },
+    get energy() {
+      return cold().emitted;
+    },
+    get heatLeft() {
+      return heatLeftOf(cold().ledger);
+    },
+    get heatPerThickness() {
+      return perLength();
+    },
+    get oxygenUsed() {
+      return cold().oxygenUsed;
+    },
+    get pulses() {
+      return stagesPulses(stages);
+    },
     stageCount: stages.length,
-    stalls: cold.stood > STOOD ? 1 : 0,
+    get stalls() {
+      return cold().stood > STOOD ? 1 : 0;
+    },
     thicknessMin: thickness.min,
     thicknessMax: thickness.max,
     coldPlate,
     hottestPlate,
   };
+}
+
+/** A value worked out when it is first asked for. */
+function once<T>(work: () => T): () => T {
+  let known: { readonly value: T } | undefined;
+  return () => (known ??= { value: work() }).value;
 }
 
 /** Four fifths of the index that throws the melt out: from there it is cautioned about. */

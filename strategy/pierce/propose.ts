@@ -92,10 +92,21 @@ export function piercePropose(
     ...(shouldStop === undefined ? {} : { shouldStop }),
   });
   const budget = new SearchBudget(MOST_TRIES, watch(0, SEARCH_SHARE));
-  const found = planSearch(frames, brief, budget, TRIES_PER_START);
-  if (budget.stopped || found === undefined) return { kind: 'stopped' };
+  const quick = planSearch(frames, brief, budget, TRIES_PER_START);
+  if (budget.stopped || quick === undefined) return { kind: 'stopped' };
+  let tried = budget.tried;
 
-  const exact = exactly(found.frame, brief, found.judged);
+  let found = quick;
+  let exact = exactly(found.frame, brief, found.judged);
+  // Does a limit or rule that the quick figures keep turn out to be missed by a hair? Then the search is done again by exact ones.
+  if (exact.missed > 0 && found.judged.missed === 0) {
+    const anew = new SearchBudget(MOST_TRIES, watch(SEARCH_SHARE, SEARCH_SHARE));
+    const slow = planSearch(frames, { ...brief, exact: true }, anew, TRIES_PER_START);
+    if (anew.stopped || slow === undefined) return { kind: 'stopped' };
+    tried += anew.tried;
+    found = slow;
+    exact = exactly(found.frame, brief, found.judged);
+  }
   if (exact.missed === 0) {
     const { prediction, checks } = judgedWhole(input, exact.stages);
     // Only stages that were given may be cautioned about; what the search made is sound.
@@ -103,10 +114,10 @@ export function piercePropose(
     const kept = brief.rules.every((rule) => rule.miss(pierceResults(prediction)) === 0);
     if (sound && kept) {
       onProgress?.(1);
-      return { kind: 'ok', stages: exact.stages, prediction, checks, tried: budget.tried };
+      return { kind: 'ok', stages: exact.stages, prediction, checks, tried };
     }
   }
-  const proposal = none(input, brief, frames, found, watch, budget.tried);
+  const proposal = none(input, brief, frames, found, watch, tried);
   if (proposal.kind !== 'stopped') onProgress?.(1);
   return proposal;
 }
@@ -310,7 +321,13 @@ function obstacle(input: ProposeInput, brief: Brief, judged: Judged, place: numb
       return { limit: 'stages', sentence: 'The power jumps too steeply after a stage that was given.' };
     default: {
       const rule = brief.rules[place - FIRST_RULE];
-      return { limit: 'rule', sentence: `This rule would have to give way: ${rule?.sentence ?? ''}` };
+      if (rule === undefined) throw new RangeError(`there is no rule at place ${place}`);
+      const { prediction } = judgedWhole(input, judged.stages);
+      const others = judged.missed > (judged.misses[place] ?? 0) ? 'As near as it comes' : 'With everything else kept';
+      return {
+        limit: 'rule',
+        sentence: `This rule would have to give way: “${rule.sentence}” ${others}, ${rule.said(pierceResults(prediction))}.`,
+      };
     }
   }
 }

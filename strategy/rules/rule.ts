@@ -37,12 +37,13 @@ export function houseRuleHolds(expression: string, results: HouseRuleResults): H
 }
 
 /**
- * How far a rule is from holding, without unit: 0 when it holds, else the part by which the nearest side misses, more for each side that
- * must give. What a search goes down. Infinite when it cannot be said.
+ * How far results are from keeping a rule, without unit: 0 when it holds, else the part by which the nearest side misses, more for each
+ * side that must give. What a search goes down, so the rule is read once. Infinite when it cannot be said.
  */
-export function houseRuleMiss(expression: string, results: HouseRuleResults): number {
+export function houseRuleMiss(expression: string): (results: HouseRuleResults) => number {
   const rule = ruleOf(expression);
-  return rule.kind === 'none' ? Number.POSITIVE_INFINITY : missOf(rule.truth, results, true);
+  if (rule.kind === 'none') return () => Number.POSITIVE_INFINITY;
+  return (results) => missOf(rule.truth, results, true);
 }
 
 type Rule =

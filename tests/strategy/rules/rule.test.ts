@@ -3,12 +3,12 @@ import { describe, expect, it } from 'vitest';
 import { pierceResults, pierceStageDefaults, strategyPrediction } from '../../../strategy/pierce/index.ts';
 import {
   houseRuleHolds,
-  houseRuleMiss,
   houseRuleRead,
   houseRuleTable,
   LONGEST_RULE,
   type HouseRuleResults,
 } from '../../../strategy/rules/index.ts';
+import { houseRuleMiss } from '../../../strategy/rules/rule.ts';
 import { NOZZLE_1_5, TEN_KILOWATT } from '../../support/machines.ts';
 
 const RESULTS: HouseRuleResults = {
@@ -228,7 +228,7 @@ describe('what is no house rule', () => {
         const found = houseRuleHolds(text, RESULTS);
         if (read.kind === 'none') expect(found.kind).toBe('none');
         if (found.kind === 'ok') expect(typeof found.holds).toBe('boolean');
-        const miss = houseRuleMiss(text, RESULTS);
+        const miss = houseRuleMiss(text)(RESULTS);
         expect(miss >= 0).toBe(true);
         if (found.kind === 'ok') expect(miss === 0).toBe(found.holds);
       }),
@@ -239,16 +239,16 @@ describe('what is no house rule', () => {
 
 describe('how far a rule is missed', () => {
   it('shrinks as the result comes nearer, and is nothing when it holds', () => {
-    const at = (craterRadius: number) => houseRuleMiss('craterRadius <= 1.5 mm', { ...RESULTS, craterRadius });
+    const at = (craterRadius: number) => houseRuleMiss('craterRadius <= 1.5 mm')({ ...RESULTS, craterRadius });
     expect(at(3e-3)).toBeCloseTo(0.5, 12);
     expect(at(2e-3)).toBeLessThan(at(3e-3));
     expect(at(1.5e-3)).toBe(0);
   });
 
   it('adds up over and, takes the nearest over or, and turns round with not', () => {
-    expect(houseRuleMiss('reserveCold >= 4.6 and peakPower <= 2 kW', RESULTS)).toBeCloseTo(1, 12);
-    expect(houseRuleMiss('reserveCold >= 4.6 or peakPower <= 3 kW', RESULTS)).toBeCloseTo(0.25, 12);
-    expect(houseRuleMiss('not (reserveCold < 4.6)', RESULTS)).toBeCloseTo(0.5, 12);
-    expect(houseRuleMiss('reserveHot >= 2', RESULTS)).toBe(Number.POSITIVE_INFINITY);
+    expect(houseRuleMiss('reserveCold >= 4.6 and peakPower <= 2 kW')(RESULTS)).toBeCloseTo(1, 12);
+    expect(houseRuleMiss('reserveCold >= 4.6 or peakPower <= 3 kW')(RESULTS)).toBeCloseTo(0.25, 12);
+    expect(houseRuleMiss('not (reserveCold < 4.6)')(RESULTS)).toBeCloseTo(0.5, 12);
+    expect(houseRuleMiss('reserveHot >= 2')(RESULTS)).toBe(Number.POSITIVE_INFINITY);
   });
 });
