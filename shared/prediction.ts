@@ -42,6 +42,10 @@ export function predictionOf(judged: Judged, reserve: ReserveRules = DEFAULT_RES
     meanPower: outcome.meanPower,
     peakPower: outcome.peakPower,
     oxygenUsed: outcome.oxygenUsed,
+    pulses: outcome.pulses,
+    heatLeft: outcome.heatLeft,
+    heatPerThickness: outcome.heat.perLength,
+    eruptions: [...outcome.eruption.perStage],
     checks: pierceChecks({ stages: content.stages, prediction: outcome, profile, rules: reserve }).map(
       ({ id, state, sentence }) => ({ id, state, sentence }),
     ),

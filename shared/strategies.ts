@@ -147,6 +147,12 @@ export const predictionSchema = z.object({
   meanPower: z.number(), // W
   peakPower: z.number(), // W
   oxygenUsed: z.number(), // kg
+  // null in what was stored before these were kept: submitted content and its prediction never change
+  pulses: z.number().nullable().default(null),
+  heatLeft: z.number().nullable().default(null), // J, in the thickest cold plate
+  heatPerThickness: z.number().nullable().default(null), // J/m, most of all plates: what warms the lead-in
+  /** Eruption index of each stage, the worst of all plates. */
+  eruptions: z.array(z.number()).nullable().default(null),
   checks: z.array(checkSchema),
 });
 export type Prediction = z.infer<typeof predictionSchema>;

@@ -27,7 +27,7 @@ export function ResultGrid({
   from,
   onExplain,
 }: {
-  names: readonly Exclude<ResultName, 'depth'>[];
+  names: readonly ResultName[];
   from: ExplainedFrom;
   onExplain: (explained: Explained) => void;
 }) {
@@ -36,7 +36,7 @@ export function ResultGrid({
     <View
       role="group"
       aria-label={explainText.results}
-      style={[styles.grid, webStyle({ gridTemplateColumns: `repeat(${width < 372 ? 2 : 4}, 1fr)` })]}
+      style={[styles.grid, webStyle({ gridTemplateColumns: `repeat(${columnsOf(width)}, 1fr)` })]}
     >
       {names.map((name) => (
         <ResultCell key={name} value={resultValue(name, from.prediction, from.system)} {...{ name, onExplain }} />
@@ -45,7 +45,10 @@ export function ResultGrid({
   );
 }
 
-type ResultCellProps = { name: Exclude<ResultName, 'depth'>; value: string; onExplain: (explained: Explained) => void };
+/** As many as a figure with its unit has room in, and as fill whole rows. */
+const columnsOf = (width: number): number => (width < 372 ? 2 : width < 640 ? 3 : 6);
+
+type ResultCellProps = { name: ResultName; value: string; onExplain: (explained: Explained) => void };
 
 const ResultCell = memo(function ResultCell({ name, value, onExplain }: ResultCellProps) {
   return (

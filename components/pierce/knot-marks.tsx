@@ -1,6 +1,6 @@
 import { Fragment } from 'react';
 import Svg from 'react-native-svg';
-import { knotText } from '@/components/text/pierce-designer.ts';
+import { knotText, type KnotWordings } from '@/components/text/pierce-designer.ts';
 import { roles } from '@/components/theme/roles.ts';
 import type { FocusScale } from '@/strategy/machine.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
@@ -72,11 +72,12 @@ function EndValue({ place, geometry }: { place: EndPlace; geometry: SectionGeome
   return <Value x={before ? end - 12 - width : end + 10} y={geometry.handleRow + 6} width={width} text={text} />;
 }
 
-type KnotValueProps = { wordings: readonly [string, string]; at: number; from: number; to: number; y: number };
+type KnotValueProps = { wordings: KnotWordings; at: number; from: number; to: number; y: number };
 
 /** The chosen knot's value in the line of the lane's name: above the knot where there is room, and never under the name. */
-function KnotValue({ wordings: [long, short], at, from, to, y }: KnotValueProps) {
-  const text = letteringWidth(long, 16) + 8 <= to - from ? long : short;
+function KnotValue({ wordings, at, from, to, y }: KnotValueProps) {
+  const fitting = wordings.find((one) => letteringWidth(one, 16) + 8 <= to - from);
+  const text = fitting ?? wordings.at(-1) ?? wordings[0];
   const width = letteringWidth(text, 16) + 8;
   return <Value x={Math.max(from, Math.min(to - width, at - width / 2))} y={y} width={width} text={text} />;
 }

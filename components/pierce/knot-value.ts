@@ -1,4 +1,4 @@
-import { knotText } from '@/components/text/pierce-designer.ts';
+import { knotText, type KnotWordings } from '@/components/text/pierce-designer.ts';
 import type { FocusScale } from '@/strategy/machine.ts';
 import type { Stage } from '@/strategy/pierce/stage.ts';
 import type { UnitSystem } from '@/strategy/units/index.ts';
@@ -10,8 +10,7 @@ export function knotValueWordings(
   stages: readonly Stage[],
   scale: FocusScale,
   system: UnitSystem,
-): readonly [string, string] {
+): KnotWordings {
   const [{ stage, end }] = knot.ends;
-  const [value, beside] = knotText.value(knot, stages[stage]?.[end].standoff ?? 0, scale, system);
-  return [beside === undefined ? value : `${value}, ${beside}`, value];
+  return knotText.value(knot, stages[stage]?.[end].standoff ?? 0, scale, system);
 }

@@ -10,7 +10,7 @@ import { LiveHouseRules } from '@/components/rules/live-house-rules.tsx';
 import { houseRulesText } from '@/components/text/house-rules.ts';
 import { momentText } from '@/components/text/moments.ts';
 import { compareText } from '@/components/text/pierce-designer.ts';
-import { depthsAtEnds, type Explained } from '@/components/text/pierce-explain.ts';
+import { depthsAtEnds, stageResults, type Explained } from '@/components/text/pierce-explain.ts';
 import { revisionText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
@@ -43,7 +43,7 @@ import { ProposePanel } from './propose-panel.tsx';
 import { SectionPanel, type SectionEdit } from './section-panel.tsx';
 import { stageEnds } from './section-layout.ts';
 import { SensitivityPanel } from './sensitivity-panel.tsx';
-import { StageSentence } from './stage-sentence.tsx';
+import { StageSentence, type StageResults } from './stage-sentence.tsx';
 import { StepBar } from './step-bar.tsx';
 import { useDraftProposal } from './use-draft-proposal.ts';
 import { usePrediction } from './use-prediction.ts';
@@ -239,9 +239,11 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
           onChoose: setChosen,
         };
   const depths = depthsAtEnds(shown.prediction, shown.content);
-  const depthOf = (index: number) => {
+  const resultsOf = (index: number): StageResults | null => {
     const depth = depths[index];
-    return depth === undefined || shown.behind ? null : depth;
+    if (depth === undefined || shown.behind) return null;
+    const { eruption, stall } = stageResults(shown.prediction, index);
+    return { depth, eruption, stall: stall?.time ?? null };
   };
 
   const bar = (
@@ -310,8 +312,8 @@ export function RevisionEditor({ revision, userId, mayWrite, refetch, decisions 
             index={index}
             stage={stage}
             through={throughIn(index)}
-            depth={depthOf(index)}
-            onExplainDepth={() => setExplained({ name: 'depth', stage: index })}
+            results={resultsOf(index)}
+            onExplain={(name) => setExplained({ name, stage: index })}
             onChoose={() => setChosen(index)}
           />
         </Stack>

@@ -3,7 +3,13 @@ import { View } from 'react-native';
 import { useLayout } from '@/components/theme/layout.ts';
 import { space } from '@/components/theme/space.ts';
 import { knotText } from '@/components/text/pierce-designer.ts';
-import { explainText, resultLabel, resultValue, type Explained } from '@/components/text/pierce-explain.ts';
+import {
+  explainText,
+  resultLabel,
+  resultValue,
+  type Explained,
+  type ResultName,
+} from '@/components/text/pierce-explain.ts';
 import {
   conditionWords,
   laneText,
@@ -183,15 +189,26 @@ export function SectionPanel({
           { label: revisionText.block.hot, value: reserve('reserveHot') },
         ]}
       />
-      <ResultGrid
-        names={['throughCold', 'throughHot', 'routine', 'crater', 'eruption', 'meanPower', 'energy', 'oxygen']}
-        from={from}
-        onExplain={setExplained}
-      />
+      <ResultGrid names={resultNames} from={from} onExplain={setExplained} />
       <ExplainDialog explained={explained} from={from} onClose={() => setExplained(null)} />
     </Stack>
   );
 }
+
+const resultNames: readonly ResultName[] = [
+  'throughCold',
+  'throughHot',
+  'routine',
+  'crater',
+  'leadIn',
+  'eruption',
+  'meanPower',
+  'peakPower',
+  'energy',
+  'pulses',
+  'heatLeft',
+  'oxygen',
+];
 
 /** The drawing as it would be if what is dragged were let go now; with the last prediction where the model can't follow. */
 function previewed(

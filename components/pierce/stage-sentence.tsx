@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import { View } from 'react-native';
-import { depthText, splitText } from '@/components/text/pierce-designer.ts';
-import { estimate, explainText } from '@/components/text/pierce-explain.ts';
+import { splitText, stageResultText } from '@/components/text/pierce-designer.ts';
+import { estimate, explainText, type StageResultName } from '@/components/text/pierce-explain.ts';
 import { editorText, stageText } from '@/components/text/pierce.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { InlineNumber } from '@/components/ui/inline-number.tsx';
@@ -16,19 +16,28 @@ import { quantityText, type Dimension } from '@/strategy/units/index.ts';
 import { DraftNumber, useDraft } from './draft-context.tsx';
 import { stagePulsed, type RampQuantity } from './draft.ts';
 
+export type StageResults = {
+  /** At its end, m. */
+  readonly depth: number;
+  /** How near it comes to an eruption, in words; null where the hole is through before it. */
+  readonly eruption: string | null;
+  /** When the bottom comes to stand still in it, s; null where it does not. */
+  readonly stall: number | null;
+};
+
 type StageSentenceProps = {
   index: number;
   stage: Stage;
   /** Said when the pierce gets through during this stage. */
   through: string | null;
-  /** Depth at its end, m, while it is known. */
-  depth: number | null;
-  onExplainDepth: () => void;
+  /** What it comes to, while that is known. */
+  results: StageResults | null;
+  onExplain: (name: StageResultName) => void;
   onChoose: () => void;
 };
 
 /** One stage told as sentences whose numbers are edited where they stand. */
-export function StageSentence({ index, stage, through, depth, onExplainDepth, onChoose }: StageSentenceProps) {
+export function StageSentence({ index, stage, through, results, onExplain, onChoose }: StageSentenceProps) {
   const { draft, dispatch, readOnly, scale } = useDraft();
   const system = useUnitSystem();
   const [acting, setActing] = useState(false);
@@ -106,17 +115,28 @@ export function StageSentence({ index, stage, through, depth, onExplainDepth, on
           </Sentence>
         )}
         <Clause index={index} stage={stage} quantity="oxygenPressure" dimension="pressure" />
-        {(through !== null || depth !== null) && (
+        {(through !== null || results !== null) && (
           <Sentence>
             {through !== null && <Aside tone="cold">{through}</Aside>}
-            {depth !== null && through === null && (
-              <InlineButton
-                label={depthText.atEnd(quantityText(depth, 'length', system, estimate).text)}
-                spoken={explainText.spoken(
-                  stageText.name(number),
-                  depthText.atEnd(quantityText(depth, 'length', system, estimate).text),
-                )}
-                onPress={onExplainDepth}
+            {results && through === null && (
+              <StageResult
+                number={number}
+                text={stageResultText.depth(quantityText(results.depth, 'length', system, estimate).text)}
+                onPress={() => onExplain('depth')}
+              />
+            )}
+            {results?.eruption != null && (
+              <StageResult
+                number={number}
+                text={stageResultText.eruption(results.eruption)}
+                onPress={() => onExplain('stageEruption')}
+              />
+            )}
+            {results?.stall != null && (
+              <StageResult
+                number={number}
+                text={stageResultText.stall(quantityText(results.stall, 'time', system, estimate).text)}
+                onPress={() => onExplain('stall')}
               />
             )}
           </Sentence>
@@ -181,6 +201,10 @@ export function StageSentence({ index, stage, through, depth, onExplainDepth, on
       </Stack>
     </View>
   );
+}
+
+function StageResult({ number, text, onPress }: { number: number; text: string; onPress: () => void }) {
+  return <InlineButton label={text} spoken={explainText.spoken(stageText.name(number), text)} onPress={onPress} />;
 }
 
 type ClauseProps = {

@@ -21,10 +21,21 @@ function placeWords({ ends: [first, second] }: Knot): string {
   return `at the ${first.end === 'from' ? 'start' : 'end'} of stage ${first.stage + 1}`;
 }
 
-const dialWords = (scale: FocusScale, focus: number, standoff: number): string => {
+/** Wordings of one thing, the longest first. */
+export type KnotWordings = readonly [string, ...string[]];
+
+/** The unit stands in the lane's name too, so it goes first. */
+function focusWordings(
+  { text, number }: { text: string; number: string },
+  scale: FocusScale,
+  focus: number,
+  standoff: number,
+): KnotWordings {
   const reading = dialForFocus(scale, focus, standoff);
-  return reading.kind === 'ok' ? `type ${dialText(reading.typed, reading.typed)}` : 'not on the dial';
-};
+  if (reading.kind === 'none') return [`${text}, not on the dial`, `${number}, off the dial`];
+  const dial = `type ${dialText(reading.typed, reading.typed)}`;
+  return [`${text}, ${dial}`, `${number}, ${dial}`];
+}
 
 export const knotText = {
   layer: 'Numbers that can be dragged',
@@ -34,16 +45,20 @@ export const knotText = {
   durationLabel: (stage: number) => `Duration of stage ${stage + 1}, on the time axis`,
   duration: seconds,
   knotLabel: (knot: Knot) => `${laneWords[knot.lane].of} ${placeWords(knot)}`,
-  /** A knot's value, and after it what belongs to it: left away in the drawing where there is no room. */
-  value: (knot: Knot, standoff: number, scale: FocusScale, system: UnitSystem): readonly [string, string?] => {
+  /**
+   * A knot's value with what belongs to it, the longest wording first, for where there is less room. The dial's number is in each of a
+   * focus position's: without it somebody types the position itself.
+   */
+  value: (knot: Knot, standoff: number, scale: FocusScale, system: UnitSystem): KnotWordings => {
     switch (knot.lane) {
       case 'standoff':
         return [quantityText(knot.set, 'length', system).text];
       case 'focusPosition':
-        return [quantityText(knot.set, 'length', system, { sign: true }).text, dialWords(scale, knot.set, standoff)];
+        return focusWordings(quantityText(knot.set, 'length', system, { sign: true }), scale, knot.set, standoff);
       case 'meanPower': {
         const mean = quantityText(knot.value, 'power', system, { figures: 3 }).text;
-        return knot.duty === 1 ? [mean] : [`${mean} mean`, `${quantityText(knot.set, 'power', system).text} peak`];
+        if (knot.duty === 1) return [mean];
+        return [`${mean} mean, ${quantityText(knot.set, 'power', system).text} peak`, `${mean} mean`];
       }
       case 'oxygenPressure':
         return [quantityText(knot.set, 'pressure', system).text];
@@ -126,8 +141,11 @@ export const splitText = {
   splitSpoken: (number: number) => `Split stage ${number} in two at its middle`,
 } as const;
 
-export const depthText = {
-  atEnd: (depth: string) => `${depth} deep at its end`,
+/** What a stage comes to, said under it. */
+export const stageResultText = {
+  depth: (depth: string) => `${depth} deep at its end`,
+  eruption: (share: string) => `${share} of an eruption`,
+  stall: (from: string) => `Stands still from ${from}`,
 } as const;
 
 export const proposeText = {

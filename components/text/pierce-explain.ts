@@ -2,31 +2,40 @@ import { bandsOfStored } from '@/shared/prediction.ts';
 import type { Condition, Prediction, StrategyContent } from '@/shared/strategies.ts';
 import type { Nozzle } from '@/strategy/machine.ts';
 import {
+  leadInNeeded,
   pierceParameterTable,
+  pierceWarmth,
   PIERCE_DEFAULTS,
+  stagePulses,
   type PierceParameterName,
   type PierceParameterRow,
   type ReserveRules,
+  type Stage,
 } from '@/strategy/pierce/index.ts';
 import { numberText, quantityText, type UnitSystem } from '@/strategy/units/index.ts';
 import { reserveText } from './pierce.ts';
 
-/** A result that can be asked how it comes about. */
+/** A result of the whole pierce that can be asked how it comes about. */
 export type ResultName =
   | 'throughCold'
   | 'throughHot'
   | 'reserveCold'
   | 'reserveHot'
-  | 'crater'
-  | 'eruption'
-  | 'energy'
-  | 'oxygen'
-  | 'meanPower'
   | 'routine'
-  | 'depth';
+  | 'crater'
+  | 'leadIn'
+  | 'eruption'
+  | 'meanPower'
+  | 'peakPower'
+  | 'energy'
+  | 'pulses'
+  | 'heatLeft'
+  | 'oxygen';
 
-export type Explained =
-  { readonly name: Exclude<ResultName, 'depth'> } | { readonly name: 'depth'; readonly stage: number };
+/** The same of one stage. */
+export type StageResultName = 'depth' | 'stageEruption' | 'stall';
+
+export type Explained = { readonly name: ResultName } | { readonly name: StageResultName; readonly stage: number };
 
 export type Explanation = {
   readonly title: string;
@@ -62,23 +71,41 @@ export const explainText = {
   hint: 'Press a result to see how it is worked out.',
 } as const;
 
-export const resultLabel: Readonly<Record<Exclude<ResultName, 'depth'>, string>> = {
+export const resultLabel: Readonly<Record<ResultName, string>> = {
   throughCold: 'through, cold',
   throughHot: 'through, hot',
   reserveCold: 'reserve, cold',
   reserveHot: 'reserve, hot',
-  crater: 'crater radius',
-  eruption: 'eruption',
-  energy: 'laser energy',
-  oxygen: 'oxygen used',
-  meanPower: 'mean power',
   routine: 'routine',
+  crater: 'crater radius',
+  leadIn: 'lead-in from',
+  eruption: 'eruption',
+  meanPower: 'mean power',
+  peakPower: 'peak power',
+  energy: 'laser energy',
+  pulses: 'pulses',
+  heatLeft: 'heat left',
+  oxygen: 'oxygen used',
 };
 
 /** Three figures say all that an estimate knows. */
 export const estimate = { figures: 3 } as const;
 
-export function resultValue(name: Exclude<ResultName, 'depth'>, prediction: Prediction, system: UnitSystem): string {
+/** The shortest lead-in that clears the crater and what the pierce warms; null where the heat was not kept. */
+const leadInOf = ({ heatPerThickness, routineTime, craterRadius, hot }: Prediction) =>
+  heatPerThickness === null
+    ? null
+    : leadInNeeded({
+        craterRadius,
+        heat: { perLength: heatPerThickness, duration: routineTime },
+        plateTemperature: hot.plateTemperature,
+      });
+
+/** How much of what throws the melt out is reached. */
+const eruptionText = (index: number): string =>
+  quantityText(index / PIERCE_DEFAULTS.eruptionLimit, 'ratio', 'metric', { unit: '%', decimals: 0 }).text;
+
+export function resultValue(name: ResultName, prediction: Prediction, system: UnitSystem): string {
   const through = ({ breakthrough }: Condition) =>
     breakthrough.kind === 'ok' ? quantityText(breakthrough.value, 'time', system, estimate).text : 'never';
   const reserve = ({ reserve: one }: Condition) => reserveText(one.kind === 'ok' ? one.value : null);
@@ -94,10 +121,23 @@ export function resultValue(name: Exclude<ResultName, 'depth'>, prediction: Pred
     case 'crater':
       return quantityText(prediction.craterRadius, 'length', system, estimate).text;
     case 'eruption':
-      return quantityText(prediction.eruptionIndex / PIERCE_DEFAULTS.eruptionLimit, 'ratio', 'metric', {
-        unit: '%',
-        decimals: 0,
-      }).text;
+      return eruptionText(prediction.eruptionIndex);
+    case 'leadIn': {
+      const needed = leadInOf(prediction);
+      if (needed === null) return notKept;
+      // rounded up: a shorter one would not do
+      return needed.kind === 'ok'
+        ? quantityText(Math.ceil(needed.length * 1e4 - 1e-6) / 1e4, 'length', system).text
+        : 'none';
+    }
+    case 'peakPower':
+      return quantityText(prediction.peakPower, 'power', system, estimate).text;
+    case 'pulses':
+      return prediction.pulses === null ? notKept : numberText(prediction.pulses, 0);
+    case 'heatLeft':
+      return prediction.heatLeft === null
+        ? notKept
+        : quantityText(prediction.heatLeft, 'energy', system, estimate).text;
     case 'routine':
       return quantityText(prediction.routineTime, 'time', system, estimate).text;
     case 'energy':
@@ -107,6 +147,16 @@ export function resultValue(name: Exclude<ResultName, 'depth'>, prediction: Pred
     case 'meanPower':
       return quantityText(prediction.meanPower, 'power', system, estimate).text;
   }
+}
+
+/** What stands where an earlier program left nothing to show. */
+const notKept = 'not kept';
+
+/** A stage's own results: how near it comes to an eruption, and where the bottom stands still in it on the thickest cold plate. */
+export function stageResults(prediction: Prediction, stage: number) {
+  const index = prediction.eruptions?.[stage] ?? 0;
+  const stall = prediction.cold.stalls.find((one) => one.stage === stage);
+  return { eruption: index > 0 ? eruptionText(index) : null, stall: stall ?? null };
 }
 
 /** Depth on a cold plate at the end of each stage, m. */
@@ -152,13 +202,23 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
     { label: 'Temperature of the plate', value: temperature(condition.plateTemperature) },
   ];
   const fitted = nozzle ? [{ label: 'Nozzle', value: `${nozzle.type}, ${length(nozzle.diameter)}` }] : [];
-  const title =
-    explained.name === 'depth' ? `Depth at the end of stage ${explained.stage + 1}` : resultTitle[explained.name];
-  const value =
-    explained.name === 'depth'
-      ? quantityText(depthsAtEnds(prediction, content)[explained.stage] ?? 0, 'length', system, estimate).text
-      : resultValue(explained.name, prediction, system);
-  const head = { title, value };
+  const mean = (at: { peakPower: number; duty: number }) => power(at.peakPower * at.duty);
+  const stageMeans = (index: number) => {
+    const stage = content.stages[index];
+    if (!stage) return [];
+    return [
+      { label: 'Mean power where the stage begins', value: mean(stage.from) },
+      { label: 'and where it ends', value: mean(stage.to) },
+      { label: 'The stage lasts', value: time(stage.duration) },
+    ];
+  };
+  const head =
+    'stage' in explained
+      ? {
+          title: stageTitle[explained.name](explained.stage + 1),
+          value: stageValue(explained.name, explained.stage, from),
+        }
+      : { title: resultTitle[explained.name], value: resultValue(explained.name, prediction, system) };
 
   switch (explained.name) {
     case 'throughCold':
@@ -182,26 +242,54 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
         source: depthSource,
       };
     }
-    case 'depth': {
-      const stage = content.stages[explained.stage];
-      const mean = (at: { peakPower: number; duty: number }) => power(at.peakPower * at.duty);
+    case 'depth':
       return {
         ...head,
         what: 'How far down the bottom of the bore is when this stage ends, on the thickest cold plate.',
         formula: depthFormula,
-        inputs: [
-          ...plate(cold),
-          ...(stage
-            ? [
-                { label: 'Mean power where the stage begins', value: mean(stage.from) },
-                { label: 'and where it ends', value: mean(stage.to) },
-                { label: 'The stage lasts', value: time(stage.duration) },
-              ]
-            : []),
-          ...fitted,
-        ],
+        inputs: [...plate(cold), ...stageMeans(explained.stage), ...fitted],
         parameters: depthParameters,
         source: depthSource,
+      };
+    case 'stall': {
+      const stall = cold.stalls.find(({ stage }) => stage === explained.stage);
+      return {
+        ...head,
+        what: stall?.why ?? 'The bottom of the bore moves throughout this stage.',
+        formula:
+          'The bottom stands still once the heat that reaches it is no more than what the plate conducts away from it, the pauses between pulses counted. The deeper the bore, the less light arrives, so a power that is enough at the top is not further down: power has to rise with depth.',
+        inputs: [
+          ...plate(cold),
+          ...(stall
+            ? [
+                { label: 'It stands still from', value: time(stall.time) },
+                { label: 'at a depth of', value: quantityText(stall.depth, 'length', system, estimate).text },
+              ]
+            : []),
+          ...stageMeans(explained.stage),
+          ...fitted,
+        ],
+        parameters: ['coupling', 'attenuationLength', 'boreRadius', 'conductivity', 'deepConduction', 'pauseLoss'],
+        source: depthSource,
+      };
+    }
+    case 'stageEruption': {
+      const stage = content.stages[explained.stage];
+      return {
+        ...head,
+        what: 'How near this stage comes to throwing its melt out in one burst, before the hole is through; from 100 % it is thrown out.',
+        formula: eruptionFormula,
+        inputs: [
+          {
+            label: 'Greatest filling of the bore by a pulse',
+            value: percent(prediction.eruptions?.[explained.stage] ?? 0),
+          },
+          { label: 'Filling from which it is thrown out', value: percent(PIERCE_DEFAULTS.eruptionLimit) },
+          ...stageMeans(explained.stage),
+          ...(stage ? [{ label: 'Slowest pulses', value: slowestPulses([stage], system) }] : []),
+        ],
+        parameters: eruptionParameters,
+        source: eruptionSource,
       };
     }
     case 'reserveCold':
@@ -252,16 +340,96 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
       return {
         ...head,
         what: 'How near the pierce comes to throwing its melt out in one burst: the melt of one pulse against the bore it has to leave by, as a share of the most that it bears. From 100 % it is thrown out.',
-        formula:
-          'Melt made by one pulse divided by the bore’s cross-section times its depth and one bore radius; the greatest before breakthrough, over the thinnest and thickest plate, cold and hot.',
+        formula: eruptionFormula,
         inputs: [
           { label: 'Greatest filling of the bore by a pulse', value: percent(prediction.eruptionIndex) },
           { label: 'Filling from which it is thrown out', value: percent(PIERCE_DEFAULTS.eruptionLimit) },
           { label: 'Greatest peak power', value: power(prediction.peakPower) },
-          { label: 'Slowest pulses', value: slowestPulses(content, system) },
+          { label: 'Slowest pulses', value: slowestPulses(content.stages, system) },
+          ...(prediction.eruptions ?? []).map((index, stage) => ({
+            label: `Stage ${stage + 1}`,
+            value: index > 0 ? eruptionText(index) : 'through before it',
+          })),
         ],
-        parameters: ['eruptionLimit', 'meltSpeed', 'boreRadius', 'coupling'],
-        source: 'Own measure; the limit is to be fitted to test cuts, no source.',
+        parameters: eruptionParameters,
+        source: eruptionSource,
+      };
+    case 'leadIn':
+    case 'heatLeft': {
+      const needed = leadInOf(prediction);
+      const heat = prediction.heatPerThickness;
+      const warmedAt = [5e-3, 10e-3, 20e-3, 40e-3].map((distance) => ({
+        label: `Warmed at most, ${length(distance)} from the hole`,
+        value:
+          heat === null
+            ? notKept
+            : quantityText(
+                pierceWarmth({ perLength: heat, duration: routineTime }, distance),
+                'temperatureDifference',
+                system,
+                estimate,
+              ).text,
+      }));
+      const heatRows = [
+        {
+          label: 'Most heat left, over the thickness',
+          value: heat === null ? notKept : quantityText(heat, 'energyPerLength', system, estimate).text,
+        },
+        { label: 'given off evenly over the routine', value: time(routineTime) },
+      ];
+      if (explained.name === 'heatLeft')
+        return {
+          ...head,
+          what: 'What stays in the thickest cold plate when the routine ends, and warms the steel the cut begins in.',
+          formula:
+            'What the bottom of the bore conducts away, also between pulses, and what its wall takes up, added up over the stages. It spreads as from a line through the plate that gives its heat off evenly; the warmth at a distance is the greatest there ever.',
+          inputs: [...heatRows, ...warmedAt],
+          parameters: ['conductivity', 'deepConduction', 'wallShare', 'pauseLoss'],
+          source: 'Continuous line source in a thick plate (Carslaw and Jaeger, 2nd ed., chapter 10).',
+        };
+      return {
+        ...head,
+        what:
+          needed?.kind === 'ok'
+            ? `At least this far from the hole a contour may begin: ${needed.sentence}.`
+            : (needed?.why ?? 'This was predicted before the heat left in the plate was kept.'),
+        formula:
+          'The longer of two: what leaves the crater no more than 70 % of it, and the distance at which the pierce warms the hottest plate to no more than 250 °C. Rounded up to a tenth of a millimetre.',
+        inputs: [
+          { label: 'Crater radius', value: resultValue('crater', prediction, system) },
+          { label: 'Hottest plate', value: temperature(hot.plateTemperature) },
+          ...heatRows,
+          ...warmedAt,
+        ],
+        parameters: ['boreRadius', 'conductivity', 'deepConduction', 'wallShare'],
+        source:
+          'Continuous line source in a thick plate (Carslaw and Jaeger, 2nd ed., chapter 10). The share of the crater and the 250 °C are own choices, no source.',
+      };
+    }
+    case 'peakPower':
+      return {
+        ...head,
+        what: 'The most the source is asked for at any moment of the routine. Between pulses it gives nothing.',
+        formula:
+          'The greatest peak power at the beginning or end of any stage; within a stage it goes in a straight line.',
+        inputs: content.stages.map((stage, index) => ({
+          label: `Stage ${index + 1}, from and to`,
+          value: `${power(stage.from.peakPower)}, ${power(stage.to.peakPower)}`,
+        })),
+        parameters: [],
+        source: 'The stages as they are set.',
+      };
+    case 'pulses':
+      return {
+        ...head,
+        what: 'How often the source is switched on over the whole routine. Continuous stages count none.',
+        formula: 'Pulse frequency, in a straight line within a stage, added up over the time of all stages.',
+        inputs: content.stages.map((stage, index) => ({
+          label: `Stage ${index + 1}`,
+          value: stage.from.pulseFrequency === null ? 'continuous' : numberText(stagePulses(stage), 0),
+        })),
+        parameters: [],
+        source: 'Pulse arithmetic: pulses are frequency times time.',
       };
     case 'routine':
       return {
@@ -315,17 +483,44 @@ export function explanationOf(explained: Explained, from: ExplainedFrom): Explan
   }
 }
 
-const resultTitle: Readonly<Record<Exclude<ResultName, 'depth'>, string>> = {
+const eruptionFormula =
+  'Melt made by one pulse divided by the bore’s cross-section times its depth and one bore radius; the greatest before breakthrough, over the thinnest and thickest plate, cold and hot.';
+const eruptionParameters: readonly PierceParameterName[] = ['eruptionLimit', 'meltSpeed', 'boreRadius', 'coupling'];
+const eruptionSource = 'Own measure; the limit is to be fitted to test cuts, no source.';
+
+const stageTitle: Readonly<Record<StageResultName, (number: number) => string>> = {
+  depth: (number) => `Depth at the end of stage ${number}`,
+  stageEruption: (number) => `Eruption in stage ${number}`,
+  stall: (number) => `Standing still in stage ${number}`,
+};
+
+function stageValue(name: StageResultName, stage: number, { prediction, content, system }: ExplainedFrom): string {
+  const { eruption, stall } = stageResults(prediction, stage);
+  switch (name) {
+    case 'depth':
+      return quantityText(depthsAtEnds(prediction, content)[stage] ?? 0, 'length', system, estimate).text;
+    case 'stageEruption':
+      return eruption ?? '0 %';
+    case 'stall':
+      return stall ? `from ${quantityText(stall.time, 'time', system, estimate).text}` : 'it does not';
+  }
+}
+
+const resultTitle: Readonly<Record<ResultName, string>> = {
   throughCold: 'Through on a cold plate',
   throughHot: 'Through on the hottest plate',
   reserveCold: 'Reserve on a cold plate',
   reserveHot: 'Reserve on the hottest plate',
-  crater: 'Crater radius',
-  eruption: 'Eruption',
-  energy: 'Laser energy',
-  oxygen: 'Oxygen used',
-  meanPower: 'Mean power',
   routine: 'Routine',
+  crater: 'Crater radius',
+  leadIn: 'Shortest lead-in',
+  eruption: 'Eruption',
+  meanPower: 'Mean power',
+  peakPower: 'Peak power',
+  energy: 'Laser energy',
+  pulses: 'Pulses',
+  heatLeft: 'Heat left in the plate',
+  oxygen: 'Oxygen used',
 };
 
 /** A parameter of the model as it stands in its table. */
@@ -346,8 +541,8 @@ const percent = (value: number) => quantityText(value, 'ratio', 'metric', estima
 /** Shares up to one in per cent, factors as they are. */
 const percentOr = (value: number) => (value < 1 ? percent(value) : numberText(value, 2));
 
-function slowestPulses(content: StrategyContent, system: UnitSystem): string {
-  const all = content.stages.flatMap(({ from, to }) => [from.pulseFrequency, to.pulseFrequency]);
+function slowestPulses(stages: readonly Stage[], system: UnitSystem): string {
+  const all = stages.flatMap(({ from, to }) => [from.pulseFrequency, to.pulseFrequency]);
   const pulsed = all.filter((one) => one !== null);
   return pulsed.length === 0 ? 'continuous' : quantityText(Math.min(...pulsed), 'frequency', system).text;
 }

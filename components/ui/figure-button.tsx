@@ -24,7 +24,7 @@ export function FigureButton({
       style={label === undefined ? styles.alone : [styles.cell, ringInside]}
     >
       {label === undefined ? null : <Text style={styles.label}>{label}</Text>}
-      <Text style={styles.value}>{value}</Text>
+      <Text style={styles.value}>{value.replaceAll(' ', '\u00a0')}</Text>
     </Pressable>
   );
 }

@@ -137,12 +137,12 @@ const underline = (right: boolean) =>
   });
 
 const styles = StyleSheet.create({
-  flow: webStyle({ display: 'inline-flex', verticalAlign: 'middle' }),
+  flow: webStyle({ display: 'inline-flex', verticalAlign: 'baseline' }),
   whole: { flexDirection: 'column', maxWidth: '100%' },
   box: {
     flexDirection: 'row',
     alignSelf: 'flex-start',
-    alignItems: 'center',
+    alignItems: 'baseline',
     ...webStyle({ cursor: 'text' }),
   },
   figure: {
@@ -162,7 +162,7 @@ const styles = StyleSheet.create({
     ...webStyle({ whiteSpace: 'nowrap' }),
   },
   close: { paddingLeft: 0 },
-  fixed: { flexDirection: 'row', alignItems: 'center' },
+  fixed: { flexDirection: 'row', alignItems: 'baseline' },
   note: { fontFamily: family.reading, fontSize: 15, lineHeight: 20, color: roles.softInk, maxWidth: 260 },
   wrong: { fontFamily: family.readingMedium, fontSize: 15, lineHeight: 20, color: roles.wrong, maxWidth: 260 },
 });

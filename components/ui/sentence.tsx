@@ -56,7 +56,7 @@ const styles = StyleSheet.create({
     minWidth: 44,
     paddingHorizontal: 8,
     justifyContent: 'center',
-    ...webStyle({ display: 'inline-flex', verticalAlign: 'middle' }),
+    ...webStyle({ display: 'inline-flex', verticalAlign: 'baseline' }),
   },
   words: {
     fontFamily: family.reading,

@@ -44,6 +44,8 @@ export type StrategyEruption = {
   readonly stage: number;
   readonly thickness: number; // m
   readonly plateTemperature: number; // K
+  /** Greatest index of each stage in the three cases; 0 where the hole is through before it in all of them. */
+  readonly perStage: readonly number[];
 };
 
 /** What a strategy revision stores beside its content. Plain JSON. */
@@ -148,6 +150,9 @@ type PierceCase = {
 };
 
 function worstEruption(cases: readonly PierceCase[]): Omit<StrategyEruption, 'limit'> {
+  const perStage = (cases[0]?.prediction.perStage ?? []).map((_, stage) =>
+    Math.max(...cases.map(({ prediction }) => prediction.perStage[stage]?.eruptionIndex ?? 0)),
+  );
   const all = cases.flatMap(({ prediction, thickness, plateTemperature }) =>
     prediction.perStage.map(({ eruptionIndex }, stage) => ({
       index: eruptionIndex,
@@ -158,5 +163,5 @@ function worstEruption(cases: readonly PierceCase[]): Omit<StrategyEruption, 'li
   );
   const [first, ...others] = all;
   if (first === undefined) throw new RangeError('a pierce without stages has no eruption index');
-  return others.reduce((worst, next) => (next.index > worst.index ? next : worst), first);
+  return { ...others.reduce((worst, next) => (next.index > worst.index ? next : worst), first), perStage };
 }

@@ -276,18 +276,47 @@ describe('a result', () => {
       'laser energy': 'Laser energy',
       'oxygen used': 'Oxygen used',
       'mean power': 'Mean power',
-      'Stage 1': 'Depth at the end of stage 1',
+      'peak power': 'Peak power',
+      pulses: 'Pulses',
+      'heat left': 'Heat left in the plate',
+      'lead-in from': 'Shortest lead-in',
+      'Stage 1: .* deep at its end': 'Depth at the end of stage 1',
+      'Stage 1: .* of an eruption': 'Eruption in stage 1',
     };
     await knot('Power where stage 1 meets stage 2');
     for (const [name, title] of Object.entries(titles)) {
-      fireEvent.click(screen.getByRole('button', { name: new RegExp(`^${name}: .*How it is worked out`) }));
+      fireEvent.click(screen.getByRole('button', { name: new RegExp(`^${name}[:.] .*How it is worked out`) }));
       const sheet = await screen.findByRole('dialog', { name: title });
       for (const heading of ['How it is worked out', 'From these numbers', 'Source'])
         expect(within(sheet).getByText(heading)).toBeTruthy();
-      expect(sheet.textContent).not.toMatch(/NaN|Infinity|undefined|null/);
+      expect(sheet.textContent).not.toMatch(/NaN|Infinity|undefined|null|not kept/);
       fireEvent.click(within(sheet).getByText('Close'));
       await waitFor(() => expect(screen.queryByText(title, { selector: 'dialog *' })).toBeNull());
     }
+  });
+});
+
+describe('a stage in which the bottom stands still', () => {
+  it('says from when, and why: a flat power stalls, and the sheet names what is conducted away', async () => {
+    const [first] = content.stages;
+    if (!first) throw new Error('the draft has a stage');
+    const weak = { ...first.from, peakPower: 1500, duty: 0.4 };
+    open(revisionOf({ content: { ...content, stages: [{ duration: 30, from: weak, to: { ...weak } }] } }));
+    fireEvent.click(await screen.findByRole('button', { name: /^Stage 1: Stands still from [\d.]+ s\. How/ }));
+    const sheet = await screen.findByRole('dialog', { name: 'Standing still in stage 1' });
+    expect(within(sheet).getByText(/The bottom stands still at [\d.]+ mm: of 59\d W mean power/)).toBeTruthy();
+    expect(within(sheet).getByText('at a depth of')).toBeTruthy();
+  });
+});
+
+describe('a revision predicted before pulses and heat were kept', () => {
+  it('says so where they would stand, and shows all the rest', async () => {
+    const former = { ...prediction, pulses: null, heatLeft: null, heatPerThickness: null, eruptions: null };
+    open(revisionOf({ state: 'approved', prediction: former }));
+    fireEvent.click(await screen.findByRole('button', { name: 'heat left: not kept. How it is worked out' }));
+    const sheet = await screen.findByRole('dialog', { name: 'Heat left in the plate' });
+    expect(sheet.textContent).not.toMatch(/NaN|undefined|null/);
+    expect(screen.getByRole('button', { name: /^through, cold: [\d.]+ s/ })).toBeTruthy();
   });
 });
 

@@ -1,9 +1,14 @@
 import { render, screen } from '@testing-library/react';
 import { describe, expect, it } from 'vitest';
+import { KnotMarks } from '@/components/pierce/knot-marks.tsx';
+import { knotPlaces } from '@/components/pierce/knot-places.ts';
+import { laneScale } from '@/components/pierce/lane-scale.ts';
+import { sectionGeometry } from '@/components/pierce/section-geometry.ts';
 import { niceCeiling, niceTicks } from '@/components/pierce/nice-ticks.ts';
 import { dimensionSpan, lanePoints, letteringWidth, traceUntilThrough } from '@/components/pierce/section-layout.ts';
 import { SectionView } from '@/components/pierce/section-view.tsx';
 import type { Prediction } from '@/shared/strategies.ts';
+import { TEN_KILOWATT } from '../support/machines.ts';
 import { content, prediction } from './strategy-fixtures.ts';
 
 const notThrough: Prediction = {
@@ -53,6 +58,34 @@ describe('the section', () => {
     );
     rerender(<SectionView prediction={prediction} stages={stepping} system="metric" lanes={['standoff']} />);
     expect(screen.getAllByTestId('lane-knot')).toHaveLength(content.stages.length + 2);
+  });
+});
+
+describe('the chosen knot of a focus position', () => {
+  it.each([
+    [1000, 'metric', '+5 mm, type '],
+    [326, 'inch', '+0.1969 in, type '],
+    // so narrow that a word must go: the unit, which stands in the lane's name, and never what is typed
+    [230, 'metric', '+5, type '],
+    [200, 'inch', '+0.1969, type '],
+  ] as const)('in a drawing %d px wide, %s, has the dial’s number beside it', (measured, system, begins) => {
+    const { stages } = content;
+    const [lane, top] = ['focusPosition', 300] as const;
+    const geometry = sectionGeometry({ measured, depth: 190, lanes: 1, box: 110, timeSpan: 20, editable: true });
+    const scale = laneScale([stages], lane, system);
+    const chosen = { kind: 'knot', lane, stage: 0, end: 'from' } as const;
+    const knots = knotPlaces({ stages, lane, scale, top, geometry, system, chosen });
+    const { container } = render(
+      <KnotMarks
+        lanes={[{ lane, top, knots }]}
+        ends={[]}
+        dial={TEN_KILOWATT.focusScale}
+        {...{ stages, geometry, system }}
+      />,
+    );
+    const said = container.querySelector('text')?.textContent ?? '';
+    expect(said.startsWith(begins), said).toBe(true);
+    expect(said).toMatch(/type −\d+\.\d+$/);
   });
 });
 

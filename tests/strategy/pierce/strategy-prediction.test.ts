@@ -74,6 +74,9 @@ describe('the prediction of a strategy', () => {
     });
     expect(worst(stages, 0.008, HOT)).toBeLessThan(prediction.eruption.limit);
     expect(prediction.eruption).toMatchObject({ stage: 1, thickness: 0.02 });
+    const perStage = prediction.eruption.perStage;
+    expect(perStage[1]).toBe(prediction.eruption.index);
+    expect(perStage[0]).toBeLessThan(prediction.eruption.index);
     expect(prediction.eruption.index).toBeGreaterThan(prediction.eruption.limit);
     expect(prediction.craterRadius).toBeGreaterThan(at(stages, 0.008, HOT).craterRadius);
   });
