@@ -64,16 +64,20 @@ export function contourContains(contour: Contour, p: Point): boolean {
   for (let i = 0; i < segments.length; i++) {
     const segment = segments[i];
     const next = segments[(i + 1) % segments.length];
-    if (!segment || !next) continue;
-    const from = segmentStart(segment);
-    const to = segmentStart(next);
-    if (segment.kind === 'line') {
-      if (from.y > p.y === to.y > p.y) continue;
-      const x = from.x + ((p.y - from.y) / (to.y - from.y)) * (to.x - from.x);
-      if (x > p.x) inside = !inside;
-    } else if (arcCrossings(segment, from.y, to.y, p) % 2 === 1) inside = !inside;
+    if (segment && next && segmentCrossesRay(segment, segmentStart(next), p)) inside = !inside;
   }
   return inside;
+}
+
+/**
+ * Whether a segment of a contour crosses the ray from p to the right an odd number of times. `to` is where the next segment starts, so that
+ * neighbours share the very same place.
+ */
+export function segmentCrossesRay(segment: Segment, to: Point, p: Point): boolean {
+  const from = segmentStart(segment);
+  if (segment.kind === 'arc') return arcCrossings(segment, from.y, to.y, p) % 2 === 1;
+  if (from.y > p.y === to.y > p.y) return false;
+  return from.x + ((p.y - from.y) / (to.y - from.y)) * (to.x - from.x) > p.x;
 }
 
 /** Crossings of an arc with the ray from p to the right; its ends are given so that they equal the neighbours' to the last bit. */

@@ -141,7 +141,8 @@ function loopPieces(loop: Loop, needed: number): { segment: Segment; besideCorne
   return pieces;
 }
 
-function leavesPlate(segment: Segment, plate: Box | Contour | null, needed: number): Point | null {
+/** Where a segment lies outside the plate or comes nearer to its edge than `needed` m, or null. */
+export function leavesPlate(segment: Segment, plate: Box | Contour | null, needed: number): Point | null {
   if (plate === null) return null;
   if ('segments' in plate) {
     if (!contourContains(plate, segmentStart(segment))) return segmentStart(segment);

@@ -1,0 +1,10 @@
+export type { OffsetLoop, OffsetRule } from './offset.ts';
+export { contourOffset, kerfOffset } from './offset.ts';
+export type { OutsideCorner, PathSource } from './parallel.ts';
+export type { LeadIn, LeadInShape, StartPlace } from './lead-in.ts';
+export { leadInLength, straightLeadIn, tangentLeadIn } from './lead-in.ts';
+export type { LeadInRule, PierceBlock, PiercePlace, PierceSurroundings, StartPath } from './pierce-place.ts';
+export { piercePlace } from './pierce-place.ts';
+export { largestCircleInside } from './inscribed.ts';
+export type { CornerInsert, CutContour, CutPathPlan, CutPathProblem, CutPathRequest } from './cut-path-of.ts';
+export { cutPathOf } from './cut-path-of.ts';

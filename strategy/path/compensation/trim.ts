@@ -1,0 +1,340 @@
+import Flatbush from 'flatbush';
+import { segmentCrossesRay } from '../contour.ts';
+import { segmentMeetings, segmentPointDistance } from '../distance.ts';
+import type { Point } from '../point.ts';
+import {
+  boxGrow,
+  pointAdd,
+  pointCross,
+  pointDistance,
+  pointDot,
+  pointLeft,
+  pointScale,
+  pointSubtract,
+} from '../point.ts';
+import type { Segment } from '../segment.ts';
+import {
+  segmentBox,
+  segmentEnd,
+  segmentLength,
+  segmentPart,
+  segmentPointAt,
+  segmentStart,
+  segmentTangentAt,
+} from '../segment.ts';
+import { shareAt } from './share.ts';
+import type { Kite, ParallelPiece, Parallels, PathSource } from './parallel.ts';
+
+/** A stretch of a parallel between two places where parallels meet. */
+type Stretch = {
+  readonly piece: number;
+  readonly t0: number;
+  readonly t1: number;
+  readonly from: number;
+  readonly to: number;
+  readonly length: number;
+};
+
+/** A closed run of pieces of the path. */
+export type TrimmedLoop = { readonly pieces: readonly ParallelPiece[] };
+
+/** Places nearer than this share of the distance are one; a parallel with less free scrap on its right than half of it is none. */
+const nearness = 1e-6;
+
+/**
+ * The parallels of a contour without whatever lies nearer to it than `distance` m, inside the part or behind a sharp corner, joined to closed loops; or null
+ * when rounding leaves ends without a partner. Exact: parallels are cut where they meet, and each stretch stays or goes by the distance of a place on it
+ * from the whole contour and by the side of the contour it lies on.
+ */
+export function trimParallels(
+  contour: readonly Segment[],
+  partIsInside: boolean,
+  { pieces, kites }: Parallels,
+  distance: number,
+): TrimmedLoop[] | null {
+  if (pieces.length === 0) return [];
+  const tolerance = nearness * distance;
+  const { stretches, nodes } = cutAtMeetings(pieces, tolerance);
+  const isFree = freeSpace(contour, partIsInside, kites, distance, tolerance);
+  const kept = keepFree(stretches, nodes, pieces, isFree, tolerance);
+  return joinLoops(kept, pieces, tolerance);
+}
+
+function cutAtMeetings(pieces: readonly ParallelPiece[], tolerance: number): { stretches: Stretch[]; nodes: number } {
+  const boxes = pieces.map(({ segment }) => segmentBox(segment));
+  const index = new Flatbush(pieces.length);
+  for (const box of boxes) index.add(box.minX, box.minY, box.maxX, box.maxY);
+  index.finish();
+  const ends = pieces.map(({ segment }) => [segmentStart(segment), segmentEnd(segment)] as const);
+  const lengths = pieces.map(({ segment }) => segmentLength(segment));
+
+  const places: Point[] = ends.flat();
+  /** Beside the two ends: share of the length and number of the place. */
+  const cuts: { t: number; place: number }[][] = pieces.map(() => []);
+  const cut = (i: number, at: Point, place: number): void => {
+    const piece = pieces[i];
+    const length = lengths[i] ?? 0;
+    if (!piece) return;
+    const t = shareAt(piece.segment, at);
+    if (t * length > tolerance && (1 - t) * length > tolerance) cuts[i]?.push({ t, place });
+  };
+  for (let i = 0; i < pieces.length; i++) {
+    const [a, box, endsOfA] = [pieces[i], boxes[i], ends[i]];
+    if (!a || !box || !endsOfA) continue;
+    const grown = boxGrow(box, tolerance);
+    for (const k of index.search(grown.minX, grown.minY, grown.maxX, grown.maxY, (other) => other > i)) {
+      const [b, endsOfB] = [pieces[k], ends[k]];
+      if (!b || !endsOfB) continue;
+      for (const at of segmentMeetings(a.segment, b.segment)) {
+        const place = places.push(at) - 1;
+        cut(i, at, place);
+        cut(k, at, place);
+      }
+      // ends that touch the other piece: coinciding pieces meet nowhere else, and rounding may hide a touch
+      endsOfB.forEach((end, side) => {
+        if (segmentPointDistance(a.segment, end) <= tolerance) cut(i, end, 2 * k + side);
+      });
+      endsOfA.forEach((end, side) => {
+        if (segmentPointDistance(b.segment, end) <= tolerance) cut(k, end, 2 * i + side);
+      });
+    }
+  }
+  const node = clusters(places, tolerance);
+  const stretches: Stretch[] = [];
+  pieces.forEach((_, piece) => {
+    const length = lengths[piece] ?? 0;
+    const own = (cuts[piece] ?? []).sort((a, b) => a.t - b.t);
+    const stops = [{ t: 0, place: 2 * piece }, ...own, { t: 1, place: 2 * piece + 1 }];
+    for (let s = 1; s < stops.length; s++) {
+      const [a, b] = [stops[s - 1], stops[s]];
+      if (!a || !b) continue;
+      const [from, to] = [node[a.place] ?? 0, node[b.place] ?? 0];
+      const stretch = { piece, t0: a.t, t1: b.t, from, to, length: (b.t - a.t) * length };
+      // too short to be seen: its two ends are one place
+      if (from === to && stretch.length <= 4 * tolerance) continue;
+      stretches.push(stretch);
+    }
+  });
+  return { stretches, nodes: places.length };
+}
+
+/** A number for every place, the same for places within the tolerance of each other. */
+function clusters(places: readonly Point[], tolerance: number): Int32Array {
+  const index = new Flatbush(places.length);
+  for (const { x, y } of places) index.add(x, y, x, y);
+  index.finish();
+  const node = new Int32Array(places.length).fill(-1);
+  for (let i = 0; i < places.length; i++) {
+    if ((node[i] ?? 0) >= 0) continue;
+    node[i] = i;
+    const open = [i];
+    for (let k = open.pop(); k !== undefined; k = open.pop()) {
+      const p = places[k];
+      if (!p) continue;
+      for (const near of index.search(p.x - tolerance, p.y - tolerance, p.x + tolerance, p.y + tolerance)) {
+        if ((node[near] ?? 0) >= 0) continue;
+        node[near] = i;
+        open.push(near);
+      }
+    }
+  }
+  return node;
+}
+
+/** Whether a place is scrap that the path may bound: outside the part, the distance away from it, behind no sharp corner. */
+function freeSpace(
+  contour: readonly Segment[],
+  partIsInside: boolean,
+  kites: readonly Kite[],
+  distance: number,
+  tolerance: number,
+): (place: Point) => boolean {
+  const edges = new Flatbush(contour.length);
+  for (const segment of contour) {
+    const box = segmentBox(segment);
+    edges.add(box.minX, box.minY, box.maxX, box.maxY);
+  }
+  edges.finish();
+  const starts = contour.map(segmentStart);
+  const corners = kites.length > 0 ? new Flatbush(kites.length) : null;
+  for (const { points } of kites) {
+    const [x, y] = [points.map((p) => p.x), points.map((p) => p.y)];
+    corners?.add(Math.min(...x), Math.min(...y), Math.max(...x), Math.max(...y));
+  }
+  corners?.finish();
+
+  const least = distance + tolerance / 4;
+  return (place) => {
+    const { x, y } = place;
+    const near = edges.search(x - distance, y - distance, x + distance, y + distance);
+    for (const i of near) {
+      const segment = contour[i];
+      if (segment && segmentPointDistance(segment, place) < least) return false;
+    }
+    for (const i of corners?.search(x, y, x, y) ?? []) {
+      const kite = kites[i];
+      if (kite && kiteContains(kite, place)) return false;
+    }
+    let inside = false;
+    for (const i of edges.search(x, y, Infinity, y)) {
+      const segment = contour[i];
+      const to = starts[(i + 1) % starts.length];
+      if (segment && to && segmentCrossesRay(segment, to, place)) inside = !inside;
+    }
+    return inside !== partIsInside;
+  };
+}
+
+const kiteContains = ({ points }: Kite, place: Point): boolean =>
+  points.every((a, i) => {
+    const b = points[(i + 1) % points.length] ?? a;
+    return pointCross(pointSubtract(b, a), pointSubtract(place, a)) > 0;
+  });
+
+/**
+ * The stretches that stay, each followed by its successors as far as nothing meets them. What follows without a meeting shares the fate of its longest
+ * stretch, where a place in the middle is farthest from doubt.
+ */
+function keepFree(
+  stretches: readonly Stretch[],
+  nodes: number,
+  pieces: readonly ParallelPiece[],
+  isFree: (place: Point) => boolean,
+  tolerance: number,
+): Stretch[][] {
+  const arrivals = new Int32Array(nodes);
+  const departures = new Int32Array(nodes);
+  for (const { from, to } of stretches) {
+    departures[from] = (departures[from] ?? 0) + 1;
+    arrivals[to] = (arrivals[to] ?? 0) + 1;
+  }
+  const chains: Stretch[][] = [];
+  for (const stretch of stretches) {
+    const chain = chains.at(-1);
+    const follows =
+      chain?.at(-1)?.to === stretch.from && departures[stretch.from] === 1 && arrivals[stretch.from] === 1;
+    if (follows) chain?.push(stretch);
+    else chains.push([stretch]);
+  }
+  return chains.filter((chain) => {
+    const longest = chain.reduce((best, s) => (s.length > best.length ? s : best));
+    const piece = pieces[longest.piece];
+    if (!piece) return false;
+    const t = (longest.t0 + longest.t1) / 2;
+    const right = pointScale(pointLeft(segmentTangentAt(piece.segment, t)), -tolerance / 2);
+    return isFree(pointAdd(segmentPointAt(piece.segment, t), right));
+  });
+}
+
+function joinLoops(
+  chains: readonly Stretch[][],
+  pieces: readonly ParallelPiece[],
+  tolerance: number,
+): TrimmedLoop[] | null {
+  const departing = new Map<number, Stretch[][]>();
+  for (const chain of withoutDoubles(chains, pieces, tolerance)) {
+    const from = chain[0]?.from ?? 0;
+    const there = departing.get(from);
+    if (there) there.push(chain);
+    else departing.set(from, [chain]);
+  }
+  const loops: TrimmedLoop[] = [];
+  for (const chain of chains) {
+    const there = departing.get(chain[0]?.from ?? 0);
+    if (!there?.includes(chain)) continue;
+    const loop = [...chain];
+    there.splice(there.indexOf(chain), 1);
+    for (let end = chain.at(-1); end && end.to !== chain[0]?.from; end = loop.at(-1)) {
+      const next = mostToTheRight(end, departing.get(end.to) ?? [], pieces);
+      if (!next) return null;
+      loop.push(...next);
+    }
+    loops.push({ pieces: mergedPieces(loop, pieces, tolerance) });
+  }
+  return loops;
+}
+
+/** Where parallels of edges that lie on each other coincide, one is enough. */
+function withoutDoubles(
+  chains: readonly Stretch[][],
+  pieces: readonly ParallelPiece[],
+  tolerance: number,
+): readonly Stretch[][] {
+  const seen = new Map<string, Point[]>();
+  return chains.filter((chain) => {
+    const [first, last] = [chain[0], chain.at(-1)];
+    const segment = first && pieces[first.piece]?.segment;
+    if (!first || !last || !segment) return false;
+    const key = `${first.from} ${last.to}`;
+    const middle = segmentPointAt(segment, (first.t0 + first.t1) / 2);
+    const same = seen.get(key) ?? [];
+    if (same.some((p) => pointDistance(p, middle) <= tolerance)) return false;
+    seen.set(key, [...same, middle]);
+    return true;
+  });
+}
+
+/** Takes, of the ways on, the one that turns most to the right: loops that touch in a place come out one by one. */
+function mostToTheRight(
+  end: Stretch,
+  ways: Stretch[][],
+  pieces: readonly ParallelPiece[],
+): readonly Stretch[] | undefined {
+  const arriving = pieces[end.piece]?.segment;
+  if (ways.length <= 1 || !arriving) return ways.pop();
+  const incoming = segmentTangentAt(arriving, end.t1);
+  const turns = ways.map((way) => {
+    const leaving = way[0] && pieces[way[0].piece]?.segment;
+    if (!leaving) return Infinity;
+    const outgoing = segmentTangentAt(leaving, way[0]?.t0 ?? 0);
+    return Math.atan2(pointCross(incoming, outgoing), pointDot(incoming, outgoing));
+  });
+  return ways.splice(turns.indexOf(Math.min(...turns)), 1)[0];
+}
+
+/** The stretches as whole pieces again: what was cut and goes on is one piece, and so are a straight edge and its way to a sharp corner. */
+function mergedPieces(loop: readonly Stretch[], pieces: readonly ParallelPiece[], tolerance: number): ParallelPiece[] {
+  const runs: Stretch[] = [];
+  for (const stretch of loop) {
+    const last = runs.at(-1);
+    if (last && last.piece === stretch.piece && last.t1 === stretch.t0) {
+      runs[runs.length - 1] = { ...last, t1: stretch.t1, to: stretch.to };
+    } else runs.push(stretch);
+  }
+  const [first, last] = [runs[0], runs.at(-1)];
+  if (runs.length > 1 && first && last && first.piece === last.piece && first.t0 === last.t1) {
+    runs[0] = { ...last, t1: first.t1, to: first.to };
+    runs.pop();
+  }
+  const parts = runs.flatMap(({ piece, t0, t1 }) => {
+    const whole = pieces[piece];
+    if (!whole) return [];
+    return [t0 === 0 && t1 === 1 ? whole : { ...whole, segment: segmentPart(whole.segment, t0, t1) }];
+  });
+  const merged: ParallelPiece[] = [];
+  for (const part of parts) {
+    const before = merged.at(-1);
+    const line = before && straightOn(before, part, tolerance);
+    if (line) merged[merged.length - 1] = line;
+    else merged.push(part);
+  }
+  const [head, tail] = [merged[0], merged.at(-1)];
+  const closing = merged.length > 1 && head && tail && straightOn(tail, head, tolerance);
+  if (closing) {
+    merged[0] = closing;
+    merged.pop();
+  }
+  return merged;
+}
+
+/** Two lines of which the second goes straight on, as one; null for anything else, and for two different edges that happen to be in line. */
+function straightOn(a: ParallelPiece, b: ParallelPiece, tolerance: number): ParallelPiece | null {
+  if (a.segment.kind !== 'line' || b.segment.kind !== 'line') return null;
+  if (a.source.kind === b.source.kind) return null;
+  const [u, w] = [segmentTangentAt(a.segment, 0), segmentTangentAt(b.segment, 0)];
+  if (pointDot(u, w) < 0) return null;
+  const aside = Math.abs(pointCross(u, pointSubtract(b.segment.end, a.segment.start)));
+  if (aside > tolerance * 1e-2 || Math.abs(pointCross(u, w)) > 1e-6) return null;
+  const source: PathSource = a.source.kind === 'edge' ? a.source : b.source;
+  return { segment: { kind: 'line', start: a.segment.start, end: b.segment.end }, source };
+}

@@ -1,0 +1,134 @@
+import { describe, expect, it } from 'vitest';
+import type { CornerInsert, CutContour, CutPathRequest } from '../../../strategy/path/compensation/index.ts';
+import { cutPathOf } from '../../../strategy/path/compensation/index.ts';
+import type { CutRun } from '../../../strategy/path/cut-path.ts';
+import type { Contour, Point, Segment } from '../../../strategy/path/index.ts';
+import {
+  circleOf,
+  contourCorners,
+  contourReverse,
+  cornerOfPath,
+  lineBetween,
+  loopAt,
+  pathLength,
+  pointDistance,
+  segmentEnd,
+  segmentPointDistance,
+  segmentStart,
+} from '../../../strategy/path/index.ts';
+
+const kerf = 1.6e-3;
+const polygon = (points: readonly Point[]): Contour => ({
+  segments: points.map((p, i) => lineBetween(p, points[(i + 1) % points.length] ?? p)),
+});
+const plate = polygon([
+  { x: 0, y: 0 },
+  { x: 0.3, y: 0 },
+  { x: 0.3, y: 0.2 },
+  { x: 0, y: 0.2 },
+]);
+const outline: CutContour = { id: '1', name: 'outline 1', contour: plate, role: 'outer', parent: null };
+const bore = (id: string, x: number, radius: number): CutContour => ({
+  id,
+  name: `hole ${id}`,
+  contour: contourReverse({ segments: [circleOf({ x, y: 0.1 }, radius)] }),
+  role: 'hole',
+  parent: '1',
+});
+const request = (change: Partial<CutPathRequest> = {}): CutPathRequest => ({
+  contours: [outline],
+  inserts: [],
+  kerfWidth: kerf,
+  outside: { kind: 'sharp', limit: 10 },
+  leadIn: { shape: { kind: 'line' }, needed: 8e-3, craterRadius: 4e-3, clearance: 2e-3 },
+  plate: null,
+  ...change,
+});
+const loops: CornerInsert[] = contourCorners(plate).map((corner) => ({
+  contourId: '1',
+  index: corner.index,
+  name: `the loop of corner c1-${corner.index}`,
+  kind: 'path',
+  as: 'loop',
+  segments: loopAt({ ...corner, point: cornerOfPath(corner, kerf) }, 5e-3).segments,
+}));
+const cutOf = (run: CutRun): Segment[] => run.pieces.flatMap((piece) => (piece.kind === 'dwell' ? [] : piece.segments));
+/** Widest gap between what is cut one after another, and before a wait, m. */
+function widestGap(run: CutRun): number {
+  let at = run.pierce;
+  let widest = 0;
+  for (const piece of run.pieces) {
+    if (piece.kind === 'dwell') widest = Math.max(widest, pointDistance(at, piece.at));
+    else
+      for (const segment of piece.segments) {
+        widest = Math.max(widest, pointDistance(at, segmentStart(segment)));
+        at = segmentEnd(segment);
+      }
+  }
+  return widest;
+}
+
+describe('the path of a cut', () => {
+  it('runs from the pierce along the lead-in, round the contour with its loops, back to where it began', () => {
+    const { path, problems } = cutPathOf(request({ inserts: loops }));
+    expect(problems).toEqual([]);
+    const [run] = path.runs;
+    expect(run?.pieces.map(({ kind }) => kind)).toEqual([
+      'lead-in',
+      ...['contour', 'loop', 'contour', 'loop', 'contour', 'loop', 'contour', 'loop', 'contour'],
+    ]);
+    if (!run) return;
+    expect(widestGap(run)).toBeLessThan(1e-12);
+    const [leadIn, ...rest] = run.pieces;
+    const cut = rest.flatMap((piece) => (piece.kind === 'dwell' ? [] : piece.segments));
+    const start =
+      leadIn?.kind === 'lead-in' ? segmentEnd(leadIn.segments[0] ?? lineBetween(run.pierce, run.pierce)) : run.pierce;
+    expect(pointDistance(segmentEnd(cut.at(-1) ?? lineBetween(run.pierce, run.pierce)), start)).toBeLessThan(1e-12);
+    const loopLength = loops.reduce((sum, loop) => sum + (loop.kind === 'path' ? pathLength(loop.segments) : 0), 0);
+    expect(pathLength(cut)).toBeCloseTo(2 * (0.3 + 0.2) + 8 * (kerf / 2) + loopLength, 12);
+    // the cut leaves the finished edge alone: half a kerf away all round
+    for (const segment of cutOf(run)) {
+      for (const edge of plate.segments) {
+        expect(segmentPointDistance(edge, segmentStart(segment))).toBeGreaterThanOrEqual(kerf / 2 - 1e-12);
+      }
+    }
+  });
+
+  it('cuts holes before the outline around them, whatever order the drawing has them in', () => {
+    const { path } = cutPathOf(request({ contours: [outline, bore('2', 0.1, 0.03), bore('3', 0.2, 0.02)] }));
+    expect(path.runs.map(({ name }) => name)).toEqual(['hole 2', 'hole 3', 'outline 1']);
+  });
+
+  it('waits with the beam off in the corner of the path where a dwell was planned', () => {
+    const dwell: CornerInsert = {
+      contourId: '1',
+      index: 2,
+      name: 'the dwell of corner c1-2',
+      kind: 'dwell',
+      duration: 3,
+    };
+    const [run] = cutPathOf(request({ inserts: [dwell] })).path.runs;
+    const waits = run?.pieces.filter((piece) => piece.kind === 'dwell');
+    expect(waits).toHaveLength(1);
+    const [wait] = waits ?? [];
+    expect(wait?.duration).toBe(3);
+    expect(wait && pointDistance(wait.at, { x: 0.3 + kerf / 2, y: 0.2 + kerf / 2 })).toBeLessThan(1e-12);
+    expect(run && widestGap(run)).toBeLessThan(1e-12);
+  });
+
+  it('cuts past the start only when asked to', () => {
+    const length = (overcut?: number) =>
+      pathLength(
+        cutOf(
+          cutPathOf(request(overcut === undefined ? {} : { overcut })).path.runs[0] ?? {
+            contourId: '',
+            name: '',
+            pierce: { x: 0, y: 0 },
+            pieces: [],
+          },
+        ),
+      );
+    expect(length(2e-3) - length()).toBeCloseTo(2e-3, 12);
+    expect(() => cutPathOf(request({ overcut: -1e-3 }))).toThrow(RangeError);
+  });
+});
