@@ -24,20 +24,42 @@ const smoothBreak = 1e-3;
  * which is on the slow side by at most a/j a change. Throws RangeError for a feed that is not positive.
  */
 export function pathTime(path: readonly Segment[], drive: PathDrive): PathTime {
-  if (!(drive.feed > 0 && drive.feed < Infinity)) throw new RangeError(`feed ${drive.feed} m/s is outside (0, ∞)`);
-  const spans = spansOf(path, drive);
-  const speeds = lookAhead(spans, drive);
   let time = 0;
   let length = 0;
   let stops = 0;
-  spans.forEach((span, i) => {
-    const from = speeds[i] ?? 0;
-    const to = speeds[i + 1] ?? 0;
-    time += spanTime(span, from, to, drive);
+  drivenSpans(path, drive).forEach((span, i) => {
+    time += spanTime(span, drive);
     length += span.length;
-    if (i > 0 && from === 0) stops++;
+    if (i > 0 && span.from === 0) stops++;
   });
   return { time, length, stops };
+}
+
+/** A stretch of path under one bound: from one speed by its highest to another. */
+export type DrivenSpan = {
+  readonly length: number; // m
+  readonly from: number; // m/s
+  readonly peak: number; // m/s
+  readonly to: number; // m/s
+};
+
+/** The spans of a path from rest to rest, each with its speeds, m/s. Throws RangeError for a feed that is not positive. */
+export function drivenSpans(path: readonly Segment[], drive: PathDrive): DrivenSpan[] {
+  if (!(drive.feed > 0 && drive.feed < Infinity)) throw new RangeError(`feed ${drive.feed} m/s is outside (0, ∞)`);
+  const spans = spansOf(path, drive);
+  const speeds = lookAhead(spans, drive);
+  return spans.map((span, i) => {
+    const from = speeds[i] ?? 0;
+    const to = speeds[i + 1] ?? 0;
+    return { length: span.length, from, peak: peakOf(span, from, to, drive), to };
+  });
+}
+
+/** Time of a span, s: up to its highest speed, along at that, and down again. */
+export function spanTime({ length, from, peak, to }: DrivenSpan, drive: DriveLimits): number {
+  const changes = speedChangeDistance(from, peak, drive) + speedChangeDistance(peak, to, drive);
+  const cruise = Math.max(0, length - changes);
+  return speedChangeTime(peak - from, drive) + cruise / peak + speedChangeTime(to - peak, drive);
 }
 
 /** Neighbouring pieces under one bound with no break between them. `entry` is the bound at its start. */
@@ -83,19 +105,15 @@ function lookAhead(spans: readonly Span[], drive: DriveLimits): number[] {
   return speeds;
 }
 
-function spanTime(span: Span, from: number, to: number, drive: DriveLimits): number {
+function peakOf(span: Span, from: number, to: number, drive: DriveLimits): number {
   const cost = (peak: number) => speedChangeDistance(from, peak, drive) + speedChangeDistance(peak, to, drive);
-  let peak = span.limit;
-  if (cost(peak) > span.length) {
-    let low = Math.max(from, to);
-    let high = span.limit;
-    for (let i = 0; i < 60; i++) {
-      const middle = (low + high) / 2;
-      if (cost(middle) <= span.length) low = middle;
-      else high = middle;
-    }
-    peak = low;
+  if (cost(span.limit) <= span.length) return span.limit;
+  let low = Math.max(from, to);
+  let high = span.limit;
+  for (let i = 0; i < 60; i++) {
+    const middle = (low + high) / 2;
+    if (cost(middle) <= span.length) low = middle;
+    else high = middle;
   }
-  const cruise = Math.max(0, span.length - cost(peak));
-  return speedChangeTime(peak - from, drive) + cruise / peak + speedChangeTime(to - peak, drive);
+  return low;
 }
