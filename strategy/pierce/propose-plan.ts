@@ -101,8 +101,15 @@ export function planStages(frame: Frame, plan: Plan, holdTime: number): readonly
     // After a given stage a free one takes up where that ends, before one it ends where that begins.
     const from = slots[index - 1]?.to ?? knotAt(index);
     const to = slots[index + 1]?.from ?? knotAt(index + 1);
-    return { duration, from, to };
+    return { duration, from: pulsedLike(from, to), to: pulsedLike(to, from) };
   });
+}
+
+/** Continuous power beside pulses is written as pulses without a pause between them: a stage is one or the other from end to end. */
+function pulsedLike(set: StageQuantities, other: StageQuantities): StageQuantities {
+  return set.pulseFrequency === null && other.pulseFrequency !== null
+    ? { ...set, pulseFrequency: other.pulseFrequency }
+    : set;
 }
 
 /**

@@ -1,3 +1,4 @@
+import { dialForFocus, focusForDial } from '../beam/index.ts';
 import type { MachineProfile } from '../machine.ts';
 import { quantityText, type Dimension } from '../units/index.ts';
 import type { Stage, StageQuantities } from './stage.ts';
@@ -23,11 +24,11 @@ type Range = {
 /** What is possible on any machine; a machine's own limits are `pierceChecks`' business, or `profile`'s below. */
 const RANGES: Readonly<Record<keyof StageQuantities, Range>> = {
   standoff: { name: 'Standoff', dimension: 'length', min: 0, max: 0.05, closed: false },
-  focusPosition: { name: 'Focus position', dimension: 'length', min: -0.05, max: 0.05, closed: true },
+  focusPosition: { name: 'Focus position', dimension: 'length', min: -0.06, max: 0.06, closed: true },
   peakPower: { name: 'Peak power', dimension: 'power', min: 0, max: 100_000, closed: false },
   duty: { name: 'Duty', dimension: 'ratio', min: 0, max: 1, closed: false },
   pulseFrequency: { name: 'Pulse frequency', dimension: 'frequency', min: 0.1, max: 100_000, closed: true },
-  oxygenPressure: { name: 'Oxygen pressure', dimension: 'pressure', min: 0, max: 25e5, closed: true },
+  oxygenPressure: { name: 'Oxygen pressure', dimension: 'pressure', min: 0, max: 30e5, closed: true },
 };
 
 const QUANTITIES = [
@@ -41,7 +42,7 @@ const QUANTITIES = [
 
 /**
  * All that is wrong with the stages, in their order; empty when they can be predicted. With a machine its own limits of power,
- * frequency, duty, standoff and pressure are asked as well.
+ * frequency, duty, standoff and pressure are asked as well, and the travel of its focus.
  */
 export function stageProblems(stages: readonly Stage[], profile?: MachineProfile): readonly StageProblem[] {
   if (stages.length === 0) return [{ path: 'stages', problem: 'A pierce needs at least one stage.' }];
@@ -49,7 +50,25 @@ export function stageProblems(stages: readonly Stage[], profile?: MachineProfile
     return [{ path: 'stages', problem: `${stages.length} stages are more than ${MOST_STAGES}.` }];
   }
   const ranges = profile === undefined ? RANGES : machineRanges(profile);
-  return stages.flatMap((stage, index) => stageProblemsAt(stage, `stages[${index}]`, ranges));
+  return stages.flatMap((stage, index) => {
+    const problems = stageProblemsAt(stage, `stages[${index}]`, ranges);
+    // What the dial takes depends on the standoff, so that must be one first.
+    if (profile === undefined || problems.length > 0) return problems;
+    return (['from', 'to'] as const).flatMap((end) => {
+      const problem = travelProblem(stage[end], profile);
+      return problem === undefined ? [] : [{ path: `stages[${index}].${end}.focusPosition`, problem }];
+    });
+  });
+}
+
+function travelProblem(
+  { focusPosition, standoff }: StageQuantities,
+  { focusScale }: MachineProfile,
+): string | undefined {
+  if (dialForFocus(focusScale, focusPosition, standoff).kind === 'ok') return undefined;
+  const ends = [focusScale.minDial, focusScale.maxDial].map((typed) => focusForDial(focusScale, typed, standoff));
+  const [least, most] = [Math.min(...ends), Math.max(...ends)].map((end) => shown(end, 'length'));
+  return `Focus position ${shown(focusPosition, 'length')} is outside [${least}, ${most}], which the dial reaches at this standoff.`;
 }
 
 function stageProblemsAt(

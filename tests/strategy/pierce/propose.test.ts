@@ -12,6 +12,7 @@ import {
   type PierceProposal,
   type ProposalRule,
   type ProposeInput,
+  type StageQuantities,
 } from '../../../strategy/pierce/index.ts';
 import { boreOf } from '../../../strategy/pierce/bore.ts';
 import { pierceParameters } from '../../../strategy/pierce/parameters.ts';
@@ -231,6 +232,23 @@ describe('given stages', () => {
         expect(next.from).toEqual(stage.to);
       }
     });
+  });
+
+  it('of continuous power are met by pulses without a pause', () => {
+    const { duration, from, to } = soft;
+    const plain = (set: StageQuantities): StageQuantities => ({
+      ...set,
+      peakPower: set.peakPower * set.duty,
+      duty: 1,
+      pulseFrequency: null,
+    });
+    const given = { duration, from: plain(from), to: plain(to) };
+    const input = wanted(TEN_KILOWATT, 20, { pinned: [given, null, null] });
+    const proposal = piercePropose(input);
+    expectSound(input, proposal);
+    const met = proposal.kind === 'ok' ? proposal.stages[1]?.from : undefined;
+    expect(met).toEqual({ ...given.to, pulseFrequency: met?.pulseFrequency });
+    expect(met?.pulseFrequency).toBeGreaterThan(0);
   });
 
   it('all given are judged as they are', () => {
