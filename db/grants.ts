@@ -29,6 +29,9 @@ export const tableGrants: Readonly<Record<string, readonly string[]>> = {
   ],
   requests: ['SELECT', 'INSERT'],
   parts: ['SELECT', 'INSERT'],
+  layouts: ['SELECT', 'INSERT', 'UPDATE (name, version, changed_at, changed_by)'],
+  layout_versions: ['SELECT', 'INSERT'],
+  placements: ['SELECT', 'INSERT'],
   corner_plans: [
     'SELECT',
     'INSERT',

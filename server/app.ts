@@ -11,6 +11,7 @@ import { cornerPlanRoutes } from './corner-plans/routes.ts';
 import { AppError, errorHandler, notFound } from './errors.ts';
 import { gradeRoutes } from './grades/routes.ts';
 import { houseRuleRoutes } from './house-rules/routes.ts';
+import { layoutRoutes } from './layouts/routes.ts';
 import { machineRoutes } from './machines/routes.ts';
 import { nozzleRoutes } from './nozzles/routes.ts';
 import { partRoutes } from './parts/routes.ts';
@@ -46,6 +47,7 @@ export function apiRouter(services: Services): Router {
   cardRoutes(mount);
   requestRoutes(mount);
   partRoutes(mount);
+  layoutRoutes(mount);
   cornerPlanRoutes(mount);
   reportRoutes(mount);
   recordRoutes(mount);

@@ -2,6 +2,7 @@ import { cardEndpoints, requestEndpoints } from './cards.ts';
 import { cornerPlanEndpoints } from './corner-plans.ts';
 import type { Endpoint } from './endpoint.ts';
 import { houseRuleEndpoints } from './house-rules.ts';
+import { layoutEndpoints } from './layouts.ts';
 import { gradeEndpoints, machineEndpoints, nozzleEndpoints } from './machines.ts';
 import { partEndpoints } from './parts.ts';
 import { peopleEndpoints } from './people.ts';
@@ -27,6 +28,7 @@ export const endpoints: Readonly<Record<string, Endpoint>> = Object.fromEntries(
     card: cardEndpoints,
     request: requestEndpoints,
     part: partEndpoints,
+    layout: layoutEndpoints,
     cornerPlan: cornerPlanEndpoints,
     report: reportEndpoints,
     record: recordEndpoints,

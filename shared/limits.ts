@@ -26,6 +26,10 @@ export const limits = {
   photoSide: 1600,
   /** Photos larger than this when decoded are refused, px. */
   photoPixels: 60_000_000,
+  /** Pieces on one plate, and the contours and segments that they have in all. */
+  placements: 500,
+  layoutContours: 5_000,
+  layoutSegments: 40_000,
   /** JSON bodies, bytes. */
   jsonBytes: 256 * 1024,
   /** Plate thickness the product takes, µm. */

@@ -34,6 +34,8 @@ const byRole = {
   'plate.write': programmersUp,
   'part.read': programmersUp,
   'part.write': programmersUp,
+  'layout.read': programmersUp,
+  'layout.write': programmersUp,
   'cornerPlan.write': programmersUp,
   /** Operators read approved strategies on the plate card, never drafts. */
   'strategy.read': programmersUp,

@@ -17,6 +17,8 @@ const events: Readonly<Record<string, string>> = {
   'revision.withdrawn': 'withdrew a revision',
   'revision.superseded': 'put a revision in place of another',
   'part.added': 'kept a part',
+  'layout.added': 'began a plate layout',
+  'layout.changed': 'laid a plate out anew',
   'cornerPlan.added': 'planned corners',
   'cornerPlan.redone': 'planned corners again',
   'report.made': 'reported trouble',
@@ -30,6 +32,7 @@ const events: Readonly<Record<string, string>> = {
 /** What an entry is about, in words. */
 const subjects: Readonly<Record<string, string>> = {
   cornerPlan: 'corner plan',
+  layout: 'plate layout',
   member: 'person',
   houseRule: 'house rule',
 };

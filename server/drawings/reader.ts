@@ -1,27 +1,31 @@
 import { URL } from 'node:url';
 import type { DrawingAnswers, DrawingReadingWire } from '../../shared/parts.ts';
 import type { CornerPlan, CornerPlanRequest } from '../../strategy/corners/index.ts';
+import type { LayoutAsked, LayoutJudgement } from '../../strategy/path/plate/index.ts';
 import type { ProblemCode } from '../../shared/errors.ts';
 import { AppError } from '../errors.ts';
 import { createPool, WorkerRefusal } from '../workers/pool.ts';
 
 export type DrawingQuestion =
   | { readonly kind: 'read'; readonly bytes: Uint8Array; readonly answers: DrawingAnswers }
+  | { readonly kind: 'layout'; readonly asked: LayoutAsked }
   | { readonly kind: 'plan'; readonly request: CornerPlanRequest };
 export type DrawingAnswer =
   | { readonly kind: 'reading'; readonly reading: DrawingReadingWire }
   | { readonly kind: 'none'; readonly why: string }
+  | { readonly kind: 'layout'; readonly judgement: LayoutJudgement }
   | { readonly kind: 'plan'; readonly plan: CornerPlan };
 
-/** Reads drawings and plans corners away from the thread that answers requests, within a time and a memory. */
+/** Reads drawings, judges layouts and plans corners away from the thread that answers requests, within a time and a memory. */
 export type DrawingReader = {
   /** 422 with a sentence when the file is no drawing that can be read. */
   read(bytes: Uint8Array, answers: DrawingAnswers): Promise<DrawingReadingWire>;
+  layout(asked: LayoutAsked): Promise<LayoutJudgement>;
   plan(request: CornerPlanRequest): Promise<CornerPlan>;
   close(): Promise<void>;
 };
 
-/** Time for one drawing, s. The largest real ones take a tenth of it. */
+/** Time for one drawing or layout, s. The largest real ones take a tenth of it. */
 const readSeconds = 5;
 /** Time for one plan, s. */
 const planSeconds = 20;
@@ -44,6 +48,17 @@ export function createDrawingReader(): DrawingReader {
       if (answer.kind === 'none') throw new AppError('bad-drawing', answer.why);
       if (answer.kind !== 'reading') throw new Error('the drawing worker answered another question');
       return answer.reading;
+    },
+    layout: async (asked) => {
+      const answer = await reads.ask({ kind: 'layout', asked }).catch((error: unknown) => {
+        throw asRefusal(
+          error,
+          'unavailable',
+          `The layout could not be checked within ${readSeconds} s: too much lies on this plate for one layout.`,
+        );
+      });
+      if (answer.kind !== 'layout') throw new Error('the drawing worker answered another question');
+      return answer.judgement;
     },
     plan: async (request) => {
       const answer = await plans.ask({ kind: 'plan', request }).catch((error: unknown) => {

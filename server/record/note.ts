@@ -14,6 +14,7 @@ export type Subject = {
     | 'plate'
     | 'request'
     | 'part'
+    | 'layout'
     | 'cornerPlan'
     | 'report'
     | 'houseRule';

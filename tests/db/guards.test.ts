@@ -306,6 +306,9 @@ describe('what was said and done', () => {
     'approvals',
     'strategy_revisions',
     'house_rules',
+    'layouts',
+    'layout_versions',
+    'placements',
   ])('%s are never emptied', async (table) => {
     await expect(
       inPlant(server.database.ownerUrl, (client) => client.query(`truncate ${table} cascade`)),

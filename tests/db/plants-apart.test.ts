@@ -5,6 +5,7 @@ import path from 'node:path';
 import { v7 as newId } from 'uuid';
 import { tableGrants } from '../../db/grants.ts';
 import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
+import { layoutEndpoints } from '../../shared/layouts.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { reportEndpoints } from '../../shared/reports.ts';
 import { requestEndpoints } from '../../shared/cards.ts';
@@ -40,7 +41,7 @@ test('row-level security is enabled and forced on every table', async () => {
        from pg_class where relnamespace = 'public'::regnamespace and relkind = 'r'`,
     ),
   );
-  expect(rows.length).toBe(24);
+  expect(rows.length).toBe(27);
   for (const { name, enabled, forced } of rows)
     expect({ name, enabled, forced }).toEqual({ name, enabled: true, forced: true });
 });
@@ -247,6 +248,20 @@ async function fill(plant: TestPlant): Promise<void> {
         plateTemperature: 300,
         skeleton: free,
         overrides: {},
+      },
+    }),
+  );
+  await made(
+    programmer.call(layoutEndpoints.add, {
+      body: {
+        id: newId(),
+        name: 'One bracket',
+        plate: { kind: 'rectangle', width: 1, height: 1 },
+        kerfWidth: 0,
+        clearance: 0,
+        edgeMargin: 0,
+        placements: [{ number: 1, partId, at: { x: 0.1, y: 0.1 }, turn: 0, mirrored: false }],
+        order: null,
       },
     }),
   );

@@ -7,6 +7,7 @@ import { apiRouter } from '../../server/app.ts';
 import { endpoints } from '../../shared/api.ts';
 import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
 import type { Endpoint } from '../../shared/endpoint.ts';
+import { layoutEndpoints } from '../../shared/layouts.ts';
 import { houseRuleEndpoints } from '../../shared/house-rules.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { can, roles, type Role } from '../../shared/policy.ts';
@@ -115,6 +116,7 @@ describe('what a body or a query names in another plant', () => {
     'card.get',
     'request.add',
     'cornerPlan.add',
+    'layout.add',
     'report.add',
   ];
 
@@ -206,6 +208,7 @@ test('an id that is no id is nobody’s', async () => {
 type Stocked = {
   plant: TestPlant;
   partId: string;
+  layoutId: string;
   planId: string;
   reportId: string;
   strategyId: string;
@@ -216,13 +219,14 @@ async function stock(plant: TestPlant): Promise<Stocked> {
   const approved = await makeApproved(plant, { thickness: { min: 10_000, max: 12_000 } });
   const programmer = await plant.as('programmer');
   const operator = await plant.as('operator');
-  const [partId, planId, reportId] = [newId(), newId(), newId()];
+  const [partId, layoutId, planId, reportId] = [newId(), newId(), newId(), newId()];
   await made(
     programmer.call(partEndpoints.add, {
       body: { id: partId, name: 'Bracket', answers: { unit: 'mm' } },
       file: drawing,
     }),
   );
+  await made(programmer.call(layoutEndpoints.add, { body: { id: layoutId, ...layoutOf(partId) } }));
   await made(
     programmer.call(cornerPlanEndpoints.add, { body: { id: planId, partId, revisionId: approved.id, ...choices } }),
   );
@@ -232,7 +236,7 @@ async function stock(plant: TestPlant): Promise<Stocked> {
       file: { name: 'photo.png', bytes: await picture() },
     }),
   );
-  return { plant, partId, planId, reportId, strategyId: approved.strategyId, approvedId: approved.id };
+  return { plant, partId, layoutId, planId, reportId, strategyId: approved.strategyId, approvedId: approved.id };
 }
 
 const drawing = {
@@ -241,6 +245,15 @@ const drawing = {
 };
 const free = { left: 0.03, right: 0.03, above: 0.03, below: 0.03 };
 const choices = { thickness: 0.011, plateTemperature: 300, skeleton: free, overrides: {} };
+const layoutOf = (partId: string) => ({
+  name: 'Two brackets',
+  plate: { kind: 'rectangle', width: 1, height: 0.8 },
+  kerfWidth: 7e-4,
+  clearance: 8e-3,
+  edgeMargin: 0.01,
+  placements: [1, 2].map((number) => ({ number, partId, at: { x: 0.02, y: number / 3 }, turn: 0, mirrored: false })),
+  order: null,
+});
 const reportOf = (plant: TestPlant, revisionId: string) => ({
   revisionId,
   machineId: plant.machineId,
@@ -373,6 +386,17 @@ const matrix: Readonly<Record<string, Cell>> = {
   'part.file': ({ partId }) => ({ params: { partId } }),
   'part.read': () => ({ body: {}, file: drawing }),
   'part.add': () => ({ body: { id: newId(), name: 'Bracket', answers: { unit: 'mm' } }, file: drawing }),
+  'layout.list': () => ({}),
+  'layout.get': ({ layoutId }) => ({ params: { layoutId } }),
+  'layout.add': ({ partId }) => ({ body: { id: newId(), ...layoutOf(partId) } }),
+  'layout.change': async ({ plant, partId }) => {
+    const layoutId = newId();
+    const programmer = await plant.as('programmer');
+    const { version } = await made(
+      programmer.call(layoutEndpoints.add, { body: { id: layoutId, ...layoutOf(partId) } }),
+    );
+    return { params: { layoutId }, body: { ...layoutOf(partId), name: 'One bracket' }, version };
+  },
   'cornerPlan.get': ({ planId }) => ({ params: { planId } }),
   'cornerPlan.add': ({ partId, approvedId }) => ({ body: { id: newId(), partId, revisionId: approvedId, ...choices } }),
   'cornerPlan.redo': async ({ plant, planId, approvedId }) => {

@@ -7,7 +7,15 @@ const actor = (role: Role, mayApprove = false): Actor => ({ userId: 'me', plantI
 /** What each role gets beside what those before it may: the plant's table of roles, written a second time on purpose. */
 const added: Readonly<Record<Role, readonly Action[]>> = {
   operator: ['session.use', 'card.read', 'plate.read', 'machine.read', 'grade.read', 'report.write', 'request.write'],
-  programmer: ['plate.write', 'part.read', 'part.write', 'cornerPlan.write', 'strategy.read'],
+  programmer: [
+    'plate.write',
+    'part.read',
+    'part.write',
+    'layout.read',
+    'layout.write',
+    'cornerPlan.write',
+    'strategy.read',
+  ],
   engineer: [
     'strategy.write',
     'machine.write',

@@ -13,6 +13,8 @@ export {
   startOf,
   travelLength,
 } from './cut-order.ts';
+export type { LayoutAsked, LayoutJudgement } from './judge.ts';
+export { layoutJudged } from './judge.ts';
 export type { PlateOutline } from './outline.ts';
 export { plateRectangle, plateRemnant } from './outline.ts';
 export type { LayoutPart, PartContour, PlacedContour, PlacedPart, Placement } from './placement.ts';
