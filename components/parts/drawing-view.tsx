@@ -1,18 +1,22 @@
-import { useId, useMemo, useRef, type ReactNode } from 'react';
+import { memo, useCallback, useId, useImperativeHandle, useMemo, useRef, type ReactNode, type Ref } from 'react';
 import { StyleSheet, View } from 'react-native';
-import Svg, { Circle, Defs, G, Path, Rect } from 'react-native-svg';
+import Svg, { Defs, G, Path } from 'react-native-svg';
 import { centreLine, HatchPattern } from '@/components/pierce/hatch.tsx';
 import { drawingText } from '@/components/text/parts.ts';
+import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { line } from '@/components/theme/space.ts';
+import { webStyle } from '@/components/theme/web-style.ts';
 import { Button } from '@/components/ui/button.tsx';
+import { Fold } from '@/components/ui/fold.tsx';
+import { Small } from '@/components/ui/text.tsx';
 import type { Box, Point, Segment } from '@/strategy/path/index.ts';
-import { boxUnion, svgPathData } from '@/strategy/path/index.ts';
-import { contourCircle, pathsBox } from './drawing-geometry.ts';
-import { markNearest, marksSpread } from './drawing-marks.ts';
-import { usePanZoom } from './use-pan-zoom.ts';
+import { dotsData, markNearest, marksSpread } from './drawing-marks.ts';
+import { useDrawnBox, useDrawnTexts } from './drawing-paths.ts';
+import { drawingSpace, type DrawingSpace } from './drawing-space.ts';
+import { drawnAround, usePanZoom } from './use-pan-zoom.ts';
 import { useWidth } from './use-width.ts';
-import { windowToFrame, type ViewWindow } from './view-window.ts';
+import { windowToFrame, windowToPlace, type ViewWindow } from './view-window.ts';
 
 /** What stands on a place of the drawing, always at the same size on the screen. */
 export type DrawingMark = {
@@ -26,185 +30,390 @@ export type DrawingMark = {
   weight?: number;
 };
 
+/** What a screen may ask of its drawing. */
+export type DrawingControl = {
+  /** Shows a stretch of so many metres around a place. */
+  goTo: (place: Point, metres: number) => void;
+};
+
+type Path = { readonly segments: readonly Segment[] };
+
 type DrawingViewProps = {
   /** What the drawing shows, for who doesn't see it. */
   label: string;
-  contours: readonly { segments: readonly Segment[] }[];
+  contours: readonly Path[];
   /** Chains that don't close: dashed, they bound nothing. */
-  open?: readonly { segments: readonly Segment[] }[];
+  open?: readonly Path[];
   /** Plate around the part. */
   plate?: Box | null;
+  /** Its edge and openings where it is no rectangle. */
+  outline?: readonly Path[];
+  /** Thin lines over the drawing: what is chosen, the way between cuts. They don't change what is in view. */
+  traces?: readonly (Path & { id: string; kind: 'chosen' | 'way' })[];
   /** Loops of the corner plan; the chosen one is drawn heavier. */
-  loops?: readonly { id: string; segments: readonly Segment[] }[];
+  loops?: readonly (Path & { id: string })[];
+  /** What loops cut out and let fall. */
+  slugs?: readonly Path[];
+  leadIns?: readonly Path[];
   marks?: readonly DrawingMark[];
   chosen?: string | null;
   onChoose?: (id: string | null) => void;
+  /** A tap that meets no mark. */
+  onPlace?: (place: Point) => void;
+  /** With it every tap, and Enter for the place under the cross in the middle, means a place and no mark. `reach` is a finger's, m. */
+  onAim?: ((place: Point, reach: number) => void) | null;
+  /** What of the drawing a pointer may push; by how much so far, m. A finger then no longer scrolls the page here. */
+  onTake?: (place: Point) => { move: (by: Point) => void; drop: () => void; cancel: () => void } | null;
+  /** Drawn over the rest and moved with it; drawn again without it. */
+  over?: (space: DrawingSpace) => ReactNode;
+  /** Beside the buttons. */
+  tools?: ReactNode;
+  control?: Ref<DrawingControl>;
   height: number;
 };
 
-/** Drawing units an own metre of path text holds: millimetres keep three digits at a micrometre. */
-const textScale = 1000;
 const markOff = 22;
+const fingerReach = 30;
+/** A tap nearer than this means the mark, and not what lies under it. */
+const markReach = 16;
+/** More marks than this are dots, but for those that matter most. */
+const mostMarks = 140;
+const none: readonly never[] = [];
 
 /** The part as a technical drawing: outline, section hatch, holes, centre lines; moved and enlarged by touch, wheel, keys and buttons. */
 export function DrawingView({
   label,
   contours,
-  open = [],
+  open = none,
   plate = null,
-  loops = [],
-  marks = [],
+  outline = none,
+  traces = none,
+  loops = none,
+  slugs = none,
+  leadIns = none,
+  marks = none,
   chosen = null,
   onChoose,
+  onPlace,
+  onAim = null,
+  onTake,
+  over,
+  tools,
+  control,
   height,
 }: DrawingViewProps) {
-  const id = useId().replace(/\W/g, '');
   const frameRef = useRef<HTMLElement>(null);
+  const layersRef = useRef<HTMLElement>(null);
+  const { wide } = useLayout();
   const width = useWidth(frameRef, 640);
   const frame = { width, height };
+  const paths = { contours, open, loops, slugs, leadIns, plate, outline, traces };
+  const box = useDrawnBox(paths);
+  const origin = { x: (box.minX + box.maxX) / 2, y: (box.minY + box.maxY) / 2 };
 
-  const box = useMemo(() => {
-    const drawn = pathsBox([...contours, ...open, ...loops]);
-    const all = plate ? boxUnion(drawn, plate) : drawn;
-    return Number.isFinite(all.minX) ? all : { minX: 0, minY: 0, maxX: 0.1, maxY: 0.1 };
-  }, [contours, open, loops, plate]);
-  // path texts are written once; moving and enlarging is one transform
-  const texts = useMemo(() => {
-    const origin = { x: (box.minX + box.maxX) / 2, y: (box.minY + box.maxY) / 2 };
-    const write = (segments: readonly Segment[]) => svgPathData(segments, { scale: textScale, origin });
-    return {
-      origin,
-      part: contours.map(({ segments }) => (segments.length > 0 ? `${write(segments)}Z` : '')).join(''),
-      open: open.map(({ segments }) => write(segments)).join(''),
-      loops: loops.map((loop) => ({ id: loop.id, data: write(loop.segments) })),
-      circles: contours.flatMap((contour) => contourCircle(contour) ?? []),
-    };
-  }, [box, contours, open, loops]);
-
-  const placeMarks = (seen: ViewWindow) => {
-    const ranked = [...marks].sort(
-      (a, b) => Number(b.id === chosen) - Number(a.id === chosen) || (b.weight ?? 0) - (a.weight ?? 0),
-    );
-    return marksSpread(
-      ranked.map((mark) => {
-        const at = windowToFrame(seen, frame, mark.at);
-        const off = mark.off ?? { x: 0, y: 0 };
-        return { id: mark.id, x: at.x + off.x * markOff, y: at.y - off.y * markOff };
-      }),
-      24,
-    );
-  };
-  const { view, fitted, fit, zoomBy } = usePanZoom(frameRef, box, frame, (at, seen) =>
-    onChoose?.(markNearest(placeMarks(seen), at, 30)),
+  const ranked = useMemo(
+    () =>
+      [...marks].sort((a, b) => Number(b.id === chosen) - Number(a.id === chosen) || (b.weight ?? 0) - (a.weight ?? 0)),
+    [marks, chosen],
   );
-  const zoom = view.scale / textScale;
-  const place = windowToFrame(view, frame, texts.origin);
+  /** Marks near the frame, px from the drawing's middle. */
+  const placeMarks = (seen: ViewWindow) => {
+    const middle = windowToFrame(seen, frame, origin);
+    const near = ranked.flatMap((mark) => {
+      const at = { x: (mark.at.x - origin.x) * seen.scale, y: (origin.y - mark.at.y) * seen.scale };
+      const far =
+        Math.abs(at.x + middle.x - width / 2) > width * (0.5 + drawnAround) ||
+        Math.abs(at.y + middle.y - height / 2) > height * (0.5 + drawnAround);
+      if (far && mark.id !== chosen) return [];
+      const off = mark.off ?? { x: 0, y: 0 };
+      return [{ id: mark.id, x: at.x + off.x * markOff, y: at.y - off.y * markOff }];
+    });
+    return marksSpread(near, 24, mostMarks);
+  };
+
+  const { view, fitted, fit, zoomBy, goTo } = usePanZoom({
+    frameRef,
+    layersRef,
+    box,
+    frame,
+    onTap: (at, seen) => {
+      if (onAim) return onAim(windowToPlace(seen, frame, at), fingerReach / seen.scale);
+      const middle = windowToFrame(seen, frame, origin);
+      const local = { x: at.x - middle.x, y: at.y - middle.y };
+      const mark = markNearest(placeMarks(seen), local, onPlace ? markReach : fingerReach);
+      if (mark === null && onPlace) onPlace(windowToPlace(seen, frame, at));
+      else onChoose?.(mark);
+    },
+    ...(onAim ? { onEnter: (seen) => onAim(seen.middle, fingerReach / seen.scale) } : {}),
+    ...(onTake
+      ? {
+          onTake: (at, seen) => {
+            const taken = onTake(windowToPlace(seen, frame, at));
+            return taken && { ...taken, move: (dx, dy) => taken.move({ x: dx / seen.scale, y: -dy / seen.scale }) };
+          },
+        }
+      : {}),
+  });
+  useImperativeHandle(control, () => ({ goTo }), [goTo]);
+
+  const texts = useDrawnTexts(paths, box, view.scale);
+  const space = useMemo(
+    () => drawingSpace(texts.origin, view.scale, texts.write),
+    [texts.origin, texts.write, view.scale],
+  );
+  const middle = windowToFrame(view, frame, texts.origin);
+  const sheet = {
+    width: width * (1 + 2 * drawnAround),
+    height: height * (1 + 2 * drawnAround),
+    x: middle.x + width * drawnAround,
+    y: middle.y + height * drawnAround,
+  };
   const placed = placeMarks(view);
-  const corner = plate && windowToFrame(view, frame, { x: plate.minX, y: plate.maxY });
+  const drawnMarks = useMemo(() => new Map(marks.map(({ id, draw }) => [id, draw])), [marks]);
+  const matters = useMemo(() => new Set(marks.filter(({ weight }) => weight !== 0).map(({ id }) => id)), [marks]);
+  const small = placed.filter(({ full }) => !full);
+  const dots = (strong: boolean) =>
+    dotsData(
+      small.filter(({ id }) => matters.has(id) === strong),
+      strong ? 5 : 4,
+    );
 
   return (
     <View style={styles.sheet}>
       <View
         // on the web a view's host is the page's own element, whose pointers and wheel move the drawing
-        ref={(host: unknown) => {
+        ref={useCallback((host: unknown) => {
           frameRef.current = host instanceof HTMLElement ? host : null;
-        }}
+        }, [])}
         tabIndex={0}
         role="group"
-        aria-label={drawingText.keys}
+        aria-label={onAim ? `${drawingText.keys} ${drawingText.placeKeys}` : drawingText.keys}
         // whole drawing in view: a finger scrolls the page; enlarged: it moves the drawing
-        style={{ overflow: 'hidden', width: '100%', height, touchAction: fitted ? 'pan-y' : 'none' }}
+        style={{ overflow: 'hidden', width: '100%', height, touchAction: fitted && !onTake ? 'pan-y' : 'none' }}
       >
-        <Svg width="100%" height={height} role="img" aria-label={label}>
-          <Defs>
-            <HatchPattern id={`${id}steel`} spacing={9} colour={roles.steelLine} weight={0.9} scale={1 / zoom} />
-          </Defs>
-          {plate && corner && (
-            <Rect
-              x={corner.x}
-              y={corner.y}
-              width={(plate.maxX - plate.minX) * view.scale}
-              height={(plate.maxY - plate.minY) * view.scale}
-              fill="none"
-              stroke={roles.ink}
-              strokeWidth={1.4}
-            />
-          )}
-          <G transform={`translate(${place.x} ${place.y}) scale(${zoom})`}>
-            <Path d={texts.part} fill={roles.steelFill} fillRule="evenodd" />
-            <Path
-              d={texts.part}
-              fill={`url(#${id}steel)`}
-              fillRule="evenodd"
-              stroke={roles.ink}
-              strokeWidth={line.outline}
-              strokeLinejoin="round"
-              vectorEffect="non-scaling-stroke"
-            />
-            {texts.open !== '' && (
-              <Path
-                d={texts.open}
-                fill="none"
-                stroke={roles.hot}
-                strokeWidth={2}
-                strokeDasharray="8 5"
-                vectorEffect="non-scaling-stroke"
+        <View
+          ref={useCallback((host: unknown) => {
+            layersRef.current = host instanceof HTMLElement ? host : null;
+          }, [])}
+          style={[
+            styles.layers,
+            { left: -width * drawnAround, top: -height * drawnAround, width: sheet.width, height: sheet.height },
+            webStyle({ transformOrigin: `${width * drawnAround}px ${height * drawnAround}px` }),
+          ]}
+        >
+          <Svg width={sheet.width} height={sheet.height} role="img" aria-label={label}>
+            <G transform={`translate(${sheet.x} ${sheet.y})`}>
+              <Still
+                zoom={space.zoom}
+                part={texts.part}
+                open={texts.open}
+                plate={texts.plate}
+                outline={texts.outline}
+                traces={texts.traces}
+                leadIns={texts.leadIns}
+                slugs={texts.slugs}
+                loops={texts.loops}
+                chosen={chosen}
               />
-            )}
-            {texts.loops.map((loop) => (
               <Path
-                key={loop.id}
-                testID="drawing-loop"
-                d={loop.data}
-                fill="none"
-                stroke={roles.ember}
-                strokeWidth={loop.id === chosen ? 3.4 : 2}
-                vectorEffect="non-scaling-stroke"
-              />
-            ))}
-          </G>
-          {texts.circles.map(({ centre, radius }, index) => {
-            const at = windowToFrame(view, frame, centre);
-            const reach = radius * view.scale;
-            // a hole of a few px would vanish under its own cross
-            if (reach < 9) return null;
-            const arm = reach + Math.min(14, reach * 0.3);
-            return (
-              <Path
-                key={index}
-                d={`M${at.x - arm} ${at.y}h${2 * arm}M${at.x} ${at.y - arm}v${2 * arm}`}
+                d={texts.circles.map(({ centre, radius }) => cross(space.at(centre), radius * view.scale)).join('')}
                 stroke={roles.softInk}
                 strokeWidth={1}
                 strokeDasharray={centreLine}
               />
-            );
-          })}
-          {/* what matters most is drawn last: a dot never lies on a badge */}
-          {[...placed].reverse().map((mark) => (
-            <G key={mark.id} testID="drawing-mark" transform={`translate(${mark.x} ${mark.y})`}>
-              {mark.full ? marks.find(({ id: own }) => own === mark.id)?.draw : <Circle r={3} fill={roles.ink} />}
+              <Dots data={dots(false)} width={3.6} />
+              <Dots data={dots(true)} width={6} />
+              {/* what matters most is drawn last */}
+              {placed
+                .filter(({ full }) => full)
+                .reverse()
+                .map(({ id, x, y }) => (
+                  <PlacedMark key={id} x={x} y={y} draw={drawnMarks.get(id)} />
+                ))}
             </G>
-          ))}
-        </Svg>
+          </Svg>
+          {over && (
+            <View style={[styles.over, { width: sheet.width, height: sheet.height }]}>
+              <Svg width={sheet.width} height={sheet.height} aria-hidden>
+                <G transform={`translate(${sheet.x} ${sheet.y})`}>{over(space)}</G>
+              </Svg>
+            </View>
+          )}
+        </View>
+        {onAim && (
+          <View style={[styles.over, { left: width / 2 - 20, top: height / 2 - 20 }]}>
+            <Svg width={40} height={40} aria-hidden>
+              <Path d="M20 2V15M20 25V38M2 20H15M25 20H38" stroke={roles.ink} strokeWidth={1.4} />
+            </Svg>
+          </View>
+        )}
       </View>
       <View style={styles.buttons}>
+        <View style={styles.tools}>{tools}</View>
         <Button label="+" spoken={drawingText.larger} onPress={() => zoomBy(1.5)} />
         <Button label="−" spoken={drawingText.smaller} onPress={() => zoomBy(1 / 1.5)} />
         <Button label={drawingText.whole} spoken={drawingText.wholeSpoken} onPress={fit} />
+      </View>
+      <View style={styles.ways}>
+        {wide ? (
+          <Small>{drawingText.ways}</Small>
+        ) : (
+          <Fold label={drawingText.waysTitle}>
+            <Small>{drawingText.ways}</Small>
+          </Fold>
+        )}
       </View>
     </View>
   );
 }
 
+type StillProps = {
+  zoom: number;
+  part: string;
+  open: string;
+  plate: string;
+  outline: string;
+  traces: readonly { id: string; kind: 'chosen' | 'way'; data: string }[];
+  leadIns: string;
+  slugs: string;
+  loops: readonly { id: string; data: string }[];
+  chosen: string | null;
+};
+
+/** What is drawn the same wherever it is moved to: drawn again only when the scale or the drawing changes. */
+const Still = memo(function Still({
+  zoom,
+  part,
+  open,
+  plate,
+  outline,
+  traces,
+  leadIns,
+  slugs,
+  loops,
+  chosen,
+}: StillProps) {
+  const id = useId().replace(/\W/g, '');
+  const others = useMemo(
+    () =>
+      loops
+        .filter((loop) => loop.id !== chosen)
+        .map(({ data }) => data)
+        .join(''),
+    [loops, chosen],
+  );
+  const own = loops.find((loop) => loop.id === chosen);
+  return (
+    <>
+      <Defs>
+        <HatchPattern id={`${id}steel`} spacing={9} colour={roles.steelLine} weight={0.9} scale={1 / zoom} />
+        <HatchPattern id={`${id}slug`} spacing={5} colour={roles.softInk} weight={0.9} scale={1 / zoom} falling />
+      </Defs>
+      <G transform={`scale(${zoom})`}>
+        <Stroke data={plate} colour={roles.ink} width={1.4} />
+        <Path d={part} fill={roles.steelFill} fillRule="evenodd" />
+        <Path
+          d={part}
+          fill={`url(#${id}steel)`}
+          fillRule="evenodd"
+          stroke={roles.ink}
+          strokeWidth={line.outline}
+          strokeLinejoin="round"
+          vectorEffect="non-scaling-stroke"
+        />
+        {slugs !== '' && <Path d={slugs} fill={`url(#${id}slug)`} />}
+        <Stroke data={open} colour={roles.hot} width={2} dash="8 5" />
+        <Stroke data={outline} colour={roles.ink} width={1.4} />
+        {traces.map(({ id: own, kind, data }) => (
+          <Path
+            key={own}
+            testID={`drawing-${kind}`}
+            d={data}
+            fill="none"
+            stroke={kind === 'chosen' ? roles.ember : roles.softInk}
+            strokeWidth={kind === 'chosen' ? 3 : 1.2}
+            strokeDasharray={kind === 'chosen' ? undefined : '2 4'}
+            vectorEffect="non-scaling-stroke"
+          />
+        ))}
+        <Stroke data={leadIns} colour={roles.ember} width={1.4} dash="4 2.5" />
+        {others !== '' && (
+          <Path
+            testID="drawing-loop"
+            d={others}
+            fill="none"
+            stroke={roles.ember}
+            strokeWidth={2}
+            vectorEffect="non-scaling-stroke"
+          />
+        )}
+        {own && (
+          <Path
+            testID="drawing-loop"
+            d={own.data}
+            fill="none"
+            stroke={roles.ember}
+            strokeWidth={3.4}
+            vectorEffect="non-scaling-stroke"
+          />
+        )}
+      </G>
+    </>
+  );
+});
+
+function Stroke({ data, colour, width, dash }: { data: string; colour: string; width: number; dash?: string }) {
+  if (data === '') return null;
+  return (
+    <Path
+      d={data}
+      fill="none"
+      stroke={colour}
+      strokeWidth={width}
+      strokeDasharray={dash}
+      vectorEffect="non-scaling-stroke"
+    />
+  );
+}
+
+/** Marks that have no room: a round pen's points. */
+const Dots = memo(function Dots({ data, width }: { data: string; width: number }) {
+  if (data === '') return null;
+  return (
+    <Path testID="drawing-dots" d={data} fill="none" stroke={roles.ink} strokeWidth={width} strokeLinecap="round" />
+  );
+});
+
+const PlacedMark = memo(function PlacedMark({ x, y, draw }: { x: number; y: number; draw: ReactNode }) {
+  return (
+    <G testID="drawing-mark" transform={`translate(${x} ${y})`}>
+      {draw}
+    </G>
+  );
+});
+
+/** Centre lines of a circle; one of a few px would vanish under its own cross. */
+function cross(at: Point, reach: number): string {
+  if (reach < 9) return '';
+  const arm = reach + Math.min(14, reach * 0.3);
+  return `M${at.x - arm} ${at.y}h${2 * arm}M${at.x} ${at.y - arm}v${2 * arm}`;
+}
+
 const styles = StyleSheet.create({
   sheet: { backgroundColor: roles.sheet, borderWidth: 1, borderColor: roles.rule },
+  // a layer of its own: moving it draws nothing anew
+  layers: { position: 'absolute', ...webStyle({ willChange: 'transform' }) },
+  over: { position: 'absolute', left: 0, top: 0, pointerEvents: 'none', ...webStyle({ willChange: 'transform' }) },
   // below the drawing, so that nothing is ever covered
   buttons: {
     flexDirection: 'row',
+    flexWrap: 'wrap',
     gap: 8,
     padding: 8,
     justifyContent: 'flex-end',
     borderTopWidth: 1,
     borderTopColor: roles.rule,
   },
+  tools: { flexDirection: 'row', flexGrow: 1, gap: 8 },
+  ways: { paddingHorizontal: 12, paddingBottom: 8 },
 });

@@ -53,3 +53,48 @@ export function windowZoom(
     },
   };
 }
+
+/** The window in which a stretch of so many metres around a place fills the frame; bounded like any enlarging. */
+export const windowAround = (
+  place: Point,
+  metres: number,
+  frame: Frame,
+  bounds: { least: number; most: number },
+): ViewWindow => ({
+  middle: place,
+  scale: Math.min(bounds.most, Math.max(bounds.least, Math.min(frame.width, frame.height) / Math.max(metres, 1e-9))),
+});
+
+/** How what was drawn for one window is pushed and enlarged to show another, without drawing it again: px = (x, y) + scale × px before. */
+export function windowShift(
+  drawn: ViewWindow,
+  shown: ViewWindow,
+  frame: Frame,
+): { x: number; y: number; scale: number } {
+  const scale = shown.scale / drawn.scale;
+  return {
+    scale,
+    x: (frame.width / 2) * (1 - scale) + (drawn.middle.x - shown.middle.x) * shown.scale,
+    y: (frame.height / 2) * (1 - scale) - (drawn.middle.y - shown.middle.y) * shown.scale,
+  };
+}
+
+/**
+ * Whether what was drawn for one window, `around` frames beyond its edges, still serves for another: nothing of the box is missing in the frame, and
+ * nothing is enlarged so far that its lines blur.
+ */
+export function windowServes(drawn: ViewWindow, shown: ViewWindow, frame: Frame, around: number, box: Box): boolean {
+  const { x, y, scale } = windowShift(drawn, shown, frame);
+  if (scale > 3) return false;
+  const low = windowToFrame(shown, frame, { x: box.minX, y: box.maxY });
+  const high = windowToFrame(shown, frame, { x: box.maxX, y: box.minY });
+  const reach = (size: number, at: number) => [at - around * size * scale, at + (1 + around) * size * scale] as const;
+  const [left, right] = reach(frame.width, x);
+  const [top, bottom] = reach(frame.height, y);
+  return (
+    Math.max(low.x, 0) >= left - 1 &&
+    Math.min(high.x, frame.width) <= right + 1 &&
+    Math.max(low.y, 0) >= top - 1 &&
+    Math.min(high.y, frame.height) <= bottom + 1
+  );
+}
