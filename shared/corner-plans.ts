@@ -4,8 +4,7 @@ import { endpoint } from './endpoint.ts';
 import { contourSchema, segmentSchema } from './parts.ts';
 import { revisionStates } from './strategies.ts';
 
-/** `ease` and `round` are named by the trade too; the plan offers them once their geometry and heat are computed. */
-export const treatments = ['loop', 'dwell', 'leave'] as const;
+export const treatments = ['loop', 'dwell', 'ease', 'round', 'leave'] as const;
 export type Treatment = (typeof treatments)[number];
 
 /** Plate around the part: free skeleton on each side, m. */
@@ -39,10 +38,25 @@ export const plannedCornerSchema = z.object({
   untreated: z.number(),
   treated: z.number(),
   straightEdge: z.number(),
-  addedTime: z.number(), // s
+  addedTime: z.number(), // s; below 0 where a round spares the stop
   dwell: z.number().nullable(), // s
+  /** Path over which feed and mean power fall to these shares in the corner and rise again, m; older plans have none. */
+  ease: z
+    .object({
+      before: z.number(),
+      after: z.number(),
+      feedShare: z.number(),
+      powerShare: z.number(),
+      segments: z.array(segmentSchema),
+    })
+    .nullish(),
+  /** The arc that stands for the corner, its radius and what it is off the drawing, m. */
+  round: z.object({ radius: z.number(), deviation: z.number(), finished: z.array(segmentSchema) }).nullish(),
+  /** Something may go wrong though the treatment is as good as any: the slug can tip. */
+  caution: z.string().nullish(),
   loop: z
     .object({
+      shape: z.enum(['tangent', 'flat']).optional(),
       radius: z.number(),
       extension: z.number(),
       length: z.number(),
@@ -92,6 +106,8 @@ export const cornerPlanSchema = z.object({
     corners: z.number().int(),
     loops: z.number().int(),
     dwells: z.number().int(),
+    eases: z.number().int().optional(),
+    rounds: z.number().int().optional(),
     trouble: z.number().int(),
     addedTime: z.number(), // s
     addedLength: z.number(), // m

@@ -86,6 +86,22 @@ export const cornerRulesSchema = z.strictObject({
     maxDuration: quantity(0.1, 120, '0.1 to 120 s'),
     restart: quantity(0, 60, '0 to 60 s'),
   }),
+  // not in strategies that were kept before there were these two: then they are not allowed
+  ease: z
+    .strictObject({
+      allowed: z.boolean(),
+      length: quantity(0.1 * mm, 100 * mm, '0.1 to 100 mm'),
+      feedShare: quantity(0.05, 1, '5 to 100 %'),
+      powerShare: quantity(0.05, 1, '5 to 100 %'),
+    })
+    .optional(),
+  round: z
+    .strictObject({
+      allowed: z.boolean(),
+      radius: quantity(0.05 * mm, 50 * mm, '0.05 to 50 mm'),
+      tolerance: quantity(0.01 * mm, 5 * mm, '0.01 to 5 mm'),
+    })
+    .optional(),
 }) satisfies z.ZodType<CornerRules>;
 
 export const thicknessRangeSchema = z

@@ -13,7 +13,7 @@ export function cornersInward(
   for (const contour of contours) {
     const own = corners.filter((corner) => corner.contourId === contour.id);
     if (own.length === 0) continue;
-    const breaks = contourCorners(contour, 0);
+    const breaks = contourCorners(contour);
     for (const corner of own) {
       const nearest = breaks.reduce<{ at: number; inward: Point } | null>((best, one) => {
         const at = Math.hypot(one.point.x - corner.at.x, one.point.y - corner.at.y);

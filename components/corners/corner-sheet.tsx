@@ -30,6 +30,7 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
   const system = useUnitSystem();
   const length = (metres: number) => quantityText(metres, 'length', system, { figures: 3 }).text;
   const seconds = (value: number) => quantityText(value, 'time', system, { figures: 3 }).text;
+  const share = (value: number) => quantityText(value, 'ratio', system).text;
   const facts: { label: string; kelvin?: number; text?: string }[] = [
     { label: cornerText.without, kelvin: corner.untreated },
     { label: cornerText.with, kelvin: corner.treated },
@@ -40,7 +41,7 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
       ? [
           {
             label: cornerText.loopSize,
-            text: cornerText.loopOf(
+            text: (corner.loop.shape === 'flat' ? cornerText.flatLoopOf : cornerText.loopOf)(
               length(corner.loop.radius),
               length(corner.loop.extension),
               length(corner.loop.length),
@@ -50,6 +51,26 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
         ]
       : []),
     ...(corner.dwell === null ? [] : [{ label: cornerText.dwellFor, text: seconds(corner.dwell) }]),
+    ...(corner.ease
+      ? [
+          {
+            label: cornerText.easeOver,
+            text: cornerText.easeOf(length(corner.ease.before), length(corner.ease.after)),
+          },
+          {
+            label: cornerText.easeTo,
+            text: cornerText.easeShares(share(corner.ease.feedShare), share(corner.ease.powerShare)),
+          },
+        ]
+      : []),
+    ...(corner.round
+      ? [
+          {
+            label: cornerText.roundSize,
+            text: cornerText.roundOf(length(corner.round.radius), length(corner.round.deviation)),
+          },
+        ]
+      : []),
   ];
   return (
     <Panel>
@@ -64,6 +85,7 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
         <Button kind="quiet" label={cornerText.close} onPress={onClose} />
       </Row>
       {corner.trouble !== null && <Notice kind="caution">{asSentence(corner.trouble)}</Notice>}
+      {corner.caution && <Notice kind="caution">{asSentence(corner.caution)}</Notice>}
       <Body>{`${cornerText.chosenBy[corner.chosenBy]} ${asSentence(corner.why)}`}</Body>
       <View>
         {facts.map((fact) => (
@@ -97,7 +119,9 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
             </Row>
             <Row gap="m" wrap={false}>
               {option.returnTemperature !== null && <TemperatureFigure kelvin={option.returnTemperature} />}
-              {option.addedTime !== null && <Figure value={`+${seconds(option.addedTime)}`} />}
+              {option.addedTime !== null && (
+                <Figure value={`${option.addedTime < 0 ? '−' : '+'}${seconds(Math.abs(option.addedTime))}`} />
+              )}
             </Row>
           </Row>
           <Body>{asSentence(option.why)}</Body>

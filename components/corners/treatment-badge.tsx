@@ -6,6 +6,7 @@ type BadgeShapeProps = { treatment: Treatment; trouble?: boolean; chosen?: boole
 
 /**
  * A corner's treatment as a shape about (0, 0), 26 px across: a ring with an open arc for a loop, a square with two bars for a dwell, a
+ * rhombus with a line that thins towards its middle for an ease, a square rounded on one corner with an arc in it for a round, a
  * filled dot for a corner left alone. Trouble adds the caution's triangle, which nothing else may use.
  */
 export function BadgeShape({ treatment, trouble = false, chosen = false }: BadgeShapeProps) {
@@ -23,6 +24,18 @@ export function BadgeShape({ treatment, trouble = false, chosen = false }: Badge
         <>
           <Rect x={-10} y={-10} width={20} height={20} fill={roles.sheet} stroke={edge} strokeWidth={weight} />
           <Path d="M-3.2 -5V5M3.2 -5V5" stroke={roles.ink} strokeWidth={2.6} />
+        </>
+      )}
+      {treatment === 'ease' && (
+        <>
+          <Path d="M0 -13 13 0 0 13 -13 0Z" fill={roles.sheet} stroke={edge} strokeWidth={weight} />
+          <Path d="M-7 -2.6 0 -0.5 7 -2.6V2.6L0 0.5 -7 2.6Z" fill={roles.ink} />
+        </>
+      )}
+      {treatment === 'round' && (
+        <>
+          <Path d="M-10 10V-10H-2A12 12 0 0 1 10 2V10Z" fill={roles.sheet} stroke={edge} strokeWidth={weight} />
+          <Path d="M-5 -4A9 9 0 0 1 4 5" fill="none" stroke={roles.ink} strokeWidth={2.6} />
         </>
       )}
       {treatment === 'leave' && (

@@ -4,6 +4,7 @@ import { Stack } from '@/components/ui/stack.tsx';
 import { Tick } from '@/components/ui/tick.tsx';
 import type { CornerRules } from '@/strategy/corners/rules.ts';
 import { DraftNumber, useDraft } from './draft-context.tsx';
+import { EaseRoundRules } from './ease-round-rules.tsx';
 
 type Loop = CornerRules['loop'];
 
@@ -98,9 +99,16 @@ export function CornerRulesSentence() {
           />
         </Sentence>
       )}
+      <EaseRoundRules rules={rules} change={change} readOnly={readOnly} />
     </Stack>
   );
 }
 
 /** The schema's type has writable fields; a rule made here is nobody else's. */
-const mutable = (rules: CornerRules) => ({ ...rules, loop: { ...rules.loop }, dwell: { ...rules.dwell } });
+const mutable = ({ loop, dwell, ease, round, ...rules }: CornerRules) => ({
+  ...rules,
+  loop: { ...loop },
+  dwell: { ...dwell },
+  ...(ease ? { ease: { ...ease } } : {}),
+  ...(round ? { round: { ...round } } : {}),
+});

@@ -1,7 +1,13 @@
 import type { PlannedCorner, Treatment } from '@/shared/corner-plans.ts';
 import { numberText, quantityText, type UnitSystem } from '@/strategy/units/index.ts';
 
-export const treatmentText: Readonly<Record<Treatment, string>> = { loop: 'Loop', dwell: 'Dwell', leave: 'Leave' };
+export const treatmentText: Readonly<Record<Treatment, string>> = {
+  loop: 'Loop',
+  dwell: 'Dwell',
+  ease: 'Ease',
+  round: 'Round',
+  leave: 'Leave',
+};
 
 export const cornerText = {
   scale: 'Temperature scale: temper and glow of steel',
@@ -26,11 +32,26 @@ export const cornerText = {
   slugArea: (squareMetres: number) => `${numberText(squareMetres * 1e6, 0)} mm²`,
   slug: 'slug that falls',
   dwellFor: 'wait',
+  flatLoopOf: (radius: string, extension: string, length: string) =>
+    `flat, arcs of ${radius}, runs on ${extension}, ${length} long`,
+  easeOver: 'eased',
+  easeOf: (before: string, after: string) =>
+    before === after ? `${before} each way` : `${before} into, ${after} out of it`,
+  easeTo: 'in the corner',
+  easeShares: (feed: string, power: string) => `${feed} of the feed, ${power} of the mean power`,
+  roundSize: 'round',
+  roundOf: (radius: string, deviation: string) => `radius ${radius}, ${deviation} off the drawing`,
   chosenBy: { rule: 'Chosen by the rules.', person: 'Chosen by hand.' },
   options: 'What else would do',
   fits: 'fits',
   doesNotFit: 'does not fit',
-  choose: { loop: 'Choose the loop', dwell: 'Choose the dwell', leave: 'Leave it as it is' },
+  choose: {
+    loop: 'Choose the loop',
+    dwell: 'Choose the dwell',
+    ease: 'Choose the ease',
+    round: 'Choose the round',
+    leave: 'Leave it as it is',
+  },
   byRule: 'Leave it to the rules',
   close: 'All corners',
   settings: 'Plan again',

@@ -190,6 +190,15 @@ export const cornerRulesText = {
   dwells: 'Dwells may be used',
   longest: 'Wait at most',
   restart: '; getting the cut going again costs',
+  eases: 'Corners may be eased',
+  easeOver: 'Over',
+  easeFeed: 'on each side bring the feed down to',
+  easePower: 'and the mean power to',
+  easeEnd: 'of the straight cut’s.',
+  rounds: 'Corners may be rounded',
+  roundRadius: 'Round with',
+  roundTolerance: 'as long as the finished corner is no more than',
+  roundEnd: 'off the drawing.',
   label: {
     treatBelowAngle: 'Corners below this angle are treated',
     returnExcessLimit: 'Excess over a straight edge left untreated',
@@ -199,6 +208,12 @@ export const cornerRulesText = {
     clearance: 'Clearance of the loop',
     maxDuration: 'Longest dwell',
     restart: 'Restart after a dwell',
+    ease: {
+      length: 'Length of the ease',
+      feedShare: 'Share of the feed in the corner',
+      powerShare: 'Share of the mean power in the corner',
+    },
+    round: { radius: 'Radius of the round', tolerance: 'Allowed off the drawing' },
   },
 } as const;
 

@@ -26,7 +26,10 @@ export async function computePlan(
   const { bounds, contours } = reading;
   const { skeleton } = choices;
   const plan = await drawings.plan({
-    contours: contours.map(({ id, role, segments }) => ({ id, role, contour: { segments } })),
+    // what lies inside is cut before what lies around it: an island before its hole, holes before the outline
+    contours: [...contours]
+      .sort((a, b) => b.depth - a.depth)
+      .map(({ id, role, segments }) => ({ id, role, contour: { segments } })),
     plate: {
       min: { x: bounds.min.x - skeleton.left, y: bounds.min.y - skeleton.below },
       max: { x: bounds.max.x + skeleton.right, y: bounds.max.y + skeleton.above },
@@ -50,7 +53,7 @@ export async function computePlan(
 }
 
 function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): PlannedCorner {
-  const { loop } = corner;
+  const { loop, ease, round } = corner;
   return {
     id: corner.id,
     contourId: corner.contourId,
@@ -65,8 +68,20 @@ function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): Pla
     straightEdge: corner.straightEdge,
     addedTime: corner.addedTime,
     dwell: corner.dwell?.duration ?? null,
+    ease: ease
+      ? {
+          before: ease.before,
+          after: ease.after,
+          feedShare: ease.feedShare,
+          powerShare: ease.powerShare,
+          segments: ease.pieces.map(({ segment }) => segment),
+        }
+      : null,
+    round: round ? { radius: round.radius, deviation: round.deviation, finished: [round.finished] } : null,
+    caution: corner.caution ?? null,
     loop: loop
       ? {
+          shape: loop.shape,
           radius: loop.radius,
           extension: loop.extension,
           length: loop.length,
@@ -99,12 +114,14 @@ export function cuttingOf(content: StrategyContent, { axes }: Pick<MachineProfil
   };
 }
 
-/** `oxygenFlow` in kg/s: the jet burns on through loops and blows on through dwells. */
+/** `oxygenFlow` in kg/s: the jet burns on through loops and blows on through dwells. A round that saves time saves oxygen. */
 function presentTotals({ totals }: Computed, oxygenFlow: number): CornerPlan['totals'] {
   return {
     corners: totals.corners,
     loops: totals.loops,
     dwells: totals.dwells,
+    eases: totals.eases,
+    rounds: totals.rounds,
     trouble: totals.problems,
     addedTime: totals.addedTime,
     addedLength: totals.addedLength,

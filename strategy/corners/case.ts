@@ -2,25 +2,33 @@ import type { PlateProperties } from '../heat/properties.ts';
 import type { MachineProfile } from '../machine.ts';
 import type { Contour } from '../path/contour.ts';
 import type { Corner } from '../path/corner.ts';
+import type { EasedPiece } from '../path/ease.ts';
 import type { Loop, LoopCorner } from '../path/loop.ts';
-import type { ObstacleField } from '../path/loop-fit.ts';
-import type { Box, Point } from '../path/point.ts';
+import type { PlacedLoop } from '../path/loop-fit.ts';
+import type { FieldLeadIn, FieldPlate, ObstacleField } from '../path/obstacles.ts';
+import type { Point } from '../path/point.ts';
+import type { CornerRound } from '../path/round.ts';
 import type { Segment } from '../path/segment.ts';
 import type { CornerRules, CutConditions } from './rules.ts';
 
-export type CornerTreatment = 'loop' | 'dwell' | 'leave';
+export type CornerTreatment = 'loop' | 'dwell' | 'ease' | 'round' | 'leave';
 
 /** A finished contour of the plan: outer contours and islands counter-clockwise, holes clockwise. */
 export type PlanContour = {
   readonly id: string;
   readonly contour: Contour;
   readonly role: 'outer' | 'hole' | 'island';
+  /** As a sentence calls it: "hole 2 of part 3"; its role and id when left out. */
+  readonly name?: string;
 };
 
 export type CornerPlanRequest = {
+  /** In the order of cutting: what lies within a contour that is cut before has dropped out. */
   readonly contours: readonly PlanContour[];
-  /** The plate's outline, m, or null when loops need not keep to one. */
-  readonly plate: { readonly min: Point; readonly max: Point } | Contour | null;
+  /** What there is to cut from, m, or null when loops need not keep to it. */
+  readonly plate: { readonly min: Point; readonly max: Point } | Exclude<FieldPlate, { minX: number }> | null;
+  /** How cuts begin, where that is settled: loops keep clear of lead-ins and craters. */
+  readonly leadIns?: readonly FieldLeadIn[];
   readonly rules: CornerRules;
   readonly cut: CutConditions;
   readonly profile: Pick<MachineProfile, 'axes' | 'smallestArc'>;
@@ -36,7 +44,7 @@ export type CornerOption = {
   readonly treatment: CornerTreatment;
   readonly fits: boolean;
   readonly returnWith: number | null; // K; null when it does not fit
-  readonly addedTime: number | null; // s
+  readonly addedTime: number | null; // s; below 0 where a round spares the stop
   readonly why: string;
   /** Where the thing in the way is, m. */
   readonly at?: Point;
@@ -46,22 +54,42 @@ export type CornerOption = {
 export type Context = {
   readonly request: CornerPlanRequest;
   readonly field: ObstacleField;
-  readonly plate: Box | Contour | null;
   readonly straightEdge: number;
   /** What the straight edge and the excess allowed make, K. */
   readonly limit: number;
-  readonly placed: { name: string; loop: Loop }[];
+  /** Loops placed that may come as near to a place as `reach`, m. */
+  readonly loopsNear: (place: Point, reach: number) => readonly PlacedLoop[];
 };
 
 /** What is known of a corner before anything is decided. */
 export type Case = {
   readonly id: string;
-  readonly contourId: string;
+  readonly contour: PlanContour;
   readonly corner: Corner;
   readonly onPath: LoopCorner;
+  /** Radius of the path's arc where the drawing rounds the corner itself, m. */
+  readonly drawnRound: number | undefined;
   readonly before: readonly Segment[];
+  /** Length of path that is the corner's own: half the way to the corner before and to the next, m. */
+  readonly room: { readonly before: number; readonly after: number };
   readonly without: number; // K
 };
 
+/** The piece of path that is eased: in order of travel, with the feed and the mean power of each step. */
+export type EasedPath = {
+  readonly before: number; // m
+  readonly after: number; // m
+  readonly feedShare: number;
+  readonly powerShare: number;
+  readonly pieces: readonly EasedPiece[];
+};
+
 /** An option with what it would put on the plate. */
-export type Candidate = CornerOption & { readonly loop?: Loop; readonly dwell?: number };
+export type Candidate = CornerOption & {
+  /** The rules allow it at no corner: not worth a word where a corner is in trouble. */
+  readonly ruledOut?: true;
+  readonly loop?: Loop;
+  readonly dwell?: number;
+  readonly ease?: EasedPath;
+  readonly round?: CornerRound;
+};

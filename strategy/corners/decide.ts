@@ -54,8 +54,11 @@ function decideByRule(
   }
   const under = candidates.filter((c) => c.fits && c.treatment !== 'leave' && (c.returnWith ?? Infinity) <= limit);
   const quickest = least(under, (c) => c.addedTime ?? Infinity);
-  if (quickest)
-    return { chosen: quickest, why: `${leave.why}; ${quickest.why}, for ${seconds(quickest.addedTime ?? 0)} more` };
+  if (quickest) {
+    const time = quickest.addedTime ?? 0;
+    const cost = time < 0 ? `and ${seconds(-time)} less` : `for ${seconds(time)} more`;
+    return { chosen: quickest, why: `${leave.why}; ${quickest.why}, ${cost}` };
+  }
   const coolest =
     least(
       candidates.filter((c) => c.fits),
@@ -65,14 +68,17 @@ function decideByRule(
     chosen: coolest,
     why:
       coolest.treatment === 'leave'
-        ? `${leave.why}, and neither a loop nor a dwell is possible here`
+        ? `${leave.why}, and nothing else is possible here`
         : `nothing that fits stays under the limit; the ${coolest.treatment} leaves the coolest tip`,
-    problem: `the tip returns at ${celsius(coolest.returnWith ?? found.without)}, over the limit of ${celsius(limit)}: ${candidates
-      .filter((c) => c.treatment !== 'leave')
-      .map((c) => c.why)
-      .join('; ')}`,
+    problem: `the tip returns at ${celsius(coolest.returnWith ?? found.without)}, over the limit of ${celsius(limit)}: ${whyNot(candidates)}`,
   };
 }
+
+const whyNot = (candidates: readonly Candidate[]): string =>
+  candidates
+    .filter((c) => c.treatment !== 'leave' && !c.ruledOut)
+    .map((c) => c.why)
+    .join('; ') || 'the corner rules of this strategy allow no treatment';
 
 function least<T>(items: readonly T[], measure: (item: T) => number): T | undefined {
   return items.reduce<T | undefined>(

@@ -1,18 +1,25 @@
+import type { ReturnTreatment } from '../heat/return-temperature.ts';
 import { returnOf } from '../heat/return-temperature.ts';
-import { pathTime } from '../motion/path-time.ts';
-import type { Loop, LoopCorner } from '../path/loop.ts';
-import { loopAt } from '../path/loop.ts';
-import { loopFits } from '../path/loop-fit.ts';
-import { loopRadii } from '../path/loop-radius.ts';
-import type { Point } from '../path/point.ts';
-import { pointAdd, pointScale, pointSubtract } from '../path/point.ts';
-import { lineBetween } from '../path/segment.ts';
-import { celsius, millimetres, seconds } from '../units/said.ts';
-import type { Candidate, Case, Context, CornerPlanRequest, CornerTreatment } from './case.ts';
+import { easedInto, easedOutOf } from '../path/ease.ts';
+import { arcRound, cornerRound, roundRadius, roundTangent } from '../path/round.ts';
+import type { CornerRound } from '../path/round.ts';
+import type { Segment } from '../path/segment.ts';
+import { pathWithoutLast } from '../path/path-part.ts';
+import { celsius, millimetres, percent, seconds } from '../units/said.ts';
+import { easeAddedTime, roundAddedTime } from './added-time.ts';
+import type { Candidate, Case, Context, EasedPath } from './case.ts';
 import { leastDwell } from './dwell.ts';
+import { hundredths } from './hundredths.ts';
+import { refused, ruledOut } from './refused.ts';
+
+/** Return temperature of a corner with a treatment, K. */
+function returnsAt(found: Case, treatment: ReturnTreatment, { request }: Context, round = found.drawnRound): number {
+  const { cut, plateTemperature, properties } = request;
+  return returnOf({ corner: found.onPath, before: found.before, round, treatment, cut, plateTemperature, properties });
+}
 
 /** Leaving the corner as it is. */
-export function leaveOption({ without }: Case, limit: number): Candidate {
+export function leaveOption({ without }: Pick<Case, 'without'>, limit: number): Candidate {
   const under = without <= limit;
   return {
     treatment: 'leave',
@@ -23,83 +30,13 @@ export function leaveOption({ without }: Case, limit: number): Candidate {
   };
 }
 
-const refused = (treatment: CornerTreatment, why: string, at?: Point): Candidate => ({
-  treatment,
-  fits: false,
-  returnWith: null,
-  addedTime: null,
-  why,
-  ...(at ? { at } : {}),
-});
-
-/** The largest loop that fits, from the design number down; or why none does. */
-export function loopOption(found: Case, context: Context): Candidate {
-  const { rules, cut, profile, plateTemperature, properties } = context.request;
-  const { corner, onPath, before } = found;
-  if (!rules.loop.allowed) return refused('loop', 'the corner rules of this strategy allow no loops');
-  if (!corner.convex) return refused('loop', 'the corner is concave: a loop would run through the part');
-  const sizes = loopRadii(corner.angle, { ...rules.loop, smallestArc: profile.smallestArc });
-  if (sizes.kind === 'none') return refused('loop', sizes.why);
-  const [largest, smallest] = [Math.max(...sizes.radii), Math.min(...sizes.radii)];
-  let inTheWay: { readonly why: string; readonly at: Point } | null = null;
-  for (const radius of sizes.radii) {
-    const loop = loopAt(onPath, radius);
-    const fit = loopFits(loop, {
-      field: context.field,
-      contourId: found.contourId,
-      kerfWidth: cut.kerfWidth,
-      clearance: rules.loop.clearance,
-      plate: context.plate,
-      loops: context.placed,
-    });
-    if (fit.kind === 'none') {
-      inTheWay ??= fit;
-      continue;
-    }
-    const returnWith = returnOf({
-      corner: onPath,
-      before,
-      treatment: { kind: 'loop', loop },
-      cut,
-      plateTemperature,
-      properties,
-    });
-    const smaller = inTheWay ? `, smaller than the design's ${millimetres(largest)} because ${inTheWay.why}` : '';
-    return {
-      treatment: 'loop',
-      fits: true,
-      returnWith,
-      addedTime: loopAddedTime(onPath, loop, context.request),
-      why: `a loop of ${millimetres(radius)} radius fits${smaller}; the tip returns at ${celsius(returnWith)}`,
-      loop,
-    };
-  }
-  const tried = smallest < largest ? `, and down to ${millimetres(smallest)} something is in the way` : '';
-  return refused('loop', `at ${millimetres(largest)} radius ${inTheWay?.why ?? 'nothing fits'}${tried}`, inTheWay?.at);
-}
-
-/** Time a loop costs against a sharp turn, s, on straight edges long enough for the feed to be reached. */
-function loopAddedTime(corner: LoopCorner, loop: Loop, { cut, profile }: CornerPlanRequest): number {
-  const run = 0.05;
-  const edgeIn = lineBetween(pointSubtract(corner.point, pointScale(corner.incoming, run)), corner.point);
-  const edgeOut = lineBetween(corner.point, pointAdd(corner.point, pointScale(corner.outgoing, run)));
-  const drive = {
-    feed: Math.min(cut.feed, profile.axes.maxFeed),
-    acceleration: profile.axes.acceleration,
-    jerk: profile.axes.jerk,
-  };
-  return pathTime([edgeIn, ...loop.segments, edgeOut], drive).time - pathTime([edgeIn, edgeOut], drive).time;
-}
-
 /** The least wait that brings the tip under the limit, or the longest allowed; the restart adds time, and its cooling is left out. */
 export function dwellOption(found: Case, context: Context): Candidate {
-  const { rules, cut, plateTemperature, properties } = context.request;
-  if (!rules.dwell.allowed) return refused('dwell', 'the corner rules of this strategy allow no dwell');
-  const { onPath, before } = found;
-  const after = (duration: number) =>
-    returnOf({ corner: onPath, before, treatment: { kind: 'dwell', duration }, cut, plateTemperature, properties });
+  const { rules } = context.request;
+  if (!rules.dwell.allowed) return ruledOut('dwell', 'dwell');
+  if (found.without <= context.limit) return refused('dwell', 'the tip is under the limit without waiting');
+  const after = (duration: number) => returnsAt(found, { kind: 'dwell', duration }, context);
   const duration = leastDwell(after, context.limit, rules.dwell.maxDuration);
-  if (duration === 0) return refused('dwell', 'the tip is under the limit without waiting');
   const returnWith = after(duration);
   return {
     treatment: 'dwell',
@@ -112,4 +49,84 @@ export function dwellOption(found: Case, context: Context): Candidate {
         : `after ${seconds(duration)}, the longest wait allowed, the tip is still at ${celsius(returnWith)}`,
     dwell: duration,
   };
+}
+
+/** Feed and mean power eased into the corner and out of it, over as much path as lies halfway to the corners beside it. */
+export function easeOption(found: Case, after: readonly Segment[], context: Context): Candidate {
+  const rule = context.request.rules.ease;
+  if (!rule?.allowed) return ruledOut('ease', 'ease');
+  const { feedShare, powerShare } = rule;
+  const lengths = { before: Math.min(rule.length, found.room.before), after: Math.min(rule.length, found.room.after) };
+  const treatment = { kind: 'ease', length: lengths.before, feedShare, powerShare } as const;
+  const returnWith = returnsAt(found, treatment, context);
+  const pieces = easedPieces(found, after, lengths);
+  const over =
+    lengths.before < rule.length
+      ? `${millimetres(lengths.before)}, halfway from the corner before`
+      : millimetres(rule.length);
+  return {
+    treatment: 'ease',
+    fits: true,
+    returnWith,
+    addedTime: easeAddedTime(pieces, feedShare, context.request),
+    why: `eased over ${over} to ${percent(feedShare)} of the feed and ${percent(powerShare)} of the mean power the tip returns at ${celsius(returnWith)}`,
+    ease: { ...lengths, feedShare, powerShare, pieces },
+  };
+}
+
+function easedPieces(
+  { onPath, drawnRound, before }: Case,
+  after: readonly Segment[],
+  lengths: { readonly before: number; readonly after: number },
+): EasedPath['pieces'] {
+  const into = drawnRound === undefined ? before : pathWithoutLast(before, roundTangent(drawnRound, onPath.angle));
+  const round = drawnRound === undefined ? [] : [{ segment: arcRound(onPath, drawnRound), eased: 1 }];
+  return [...easedInto(into, lengths.before).eased, ...round, ...easedOutOf(after, lengths.after).eased];
+}
+
+/** The corner rounded by the design's radius, or by as much as the tolerance allows. */
+export function roundOption(found: Case, context: Context): Candidate {
+  const { rules, cut, profile } = context.request;
+  const { corner, onPath, contour } = found;
+  const rule = rules.round;
+  if (!rule?.allowed) return ruledOut('round', 'rounding');
+  if (!corner.convex) return refused('round', 'the corner is concave: rounding would leave steel in it');
+  if (corner.fillet)
+    return refused('round', `the drawing rounds this corner already, with ${hundredths(corner.fillet.radius)}`);
+  const allowed = roundRadius(rule.tolerance, corner.angle);
+  const round = withinTolerance(found, Math.min(rule.radius, allowed), rule.tolerance);
+  if (!round)
+    return refused('round', 'the edges beside the corner are too short to be rounded into each other', corner.point);
+  const radius = round.radius + cut.kerfWidth / 2;
+  if (radius < profile.smallestArc) {
+    return refused(
+      'round',
+      `the path would turn on ${hundredths(radius)}, and the machine's smallest arc is ${hundredths(profile.smallestArc)}; a larger round is more than ${hundredths(rule.tolerance)} off the drawing`,
+    );
+  }
+  const returnWith = returnsAt(found, { kind: 'leave' }, context, radius);
+  const smaller = round.radius < rule.radius * (1 - 1e-9) ? `, less than the ${hundredths(rule.radius)} asked for` : '';
+  return {
+    treatment: 'round',
+    fits: true,
+    returnWith,
+    addedTime: roundAddedTime(onPath, radius, context.request),
+    why: `rounded with ${hundredths(round.radius)}${smaller} the corner of ${nameOf(contour)} is ${hundredths(round.deviation)} off the drawing, ${hundredths(rule.tolerance)} are allowed; the tip returns at ${celsius(returnWith)}`,
+    round,
+  };
+}
+
+const nameOf = ({ name, id }: Case['contour']): string => name ?? `contour ${id}`;
+
+/** The round whose deviation, exact on curved edges, is within the tolerance and that leaves half of each edge; null when none is. */
+function withinTolerance({ contour, corner }: Case, wished: number, tolerance: number): CornerRound | null {
+  let radius = wished;
+  // beside curved edges the deviation grows a little otherwise than with straight ones: a few corrections bring it in
+  for (let tries = 0; tries < 6 && radius > 0; tries++) {
+    const round = cornerRound(contour.contour, corner, radius);
+    if (!round || round.from < 0.5 || round.to > 0.5) return null;
+    if (round.deviation <= tolerance * (1 + 1e-9)) return round;
+    radius *= (tolerance / round.deviation) * (1 - 1e-6);
+  }
+  return null;
 }

@@ -21,7 +21,30 @@ export type CornerRules = {
     /** What getting the cut going again costs beside the wait: the beam was off at the finished edge, s. */
     readonly restart: number;
   };
+  /** Feed and mean power fall evenly towards the corner and rise evenly behind it. Not allowed when left out. */
+  readonly ease?: {
+    readonly allowed: boolean;
+    /** Length of path on each side, m; no more than half the way to the next corner. */
+    readonly length: number;
+    /** Shares of the straight cut's feed and mean power in the corner, 0..1. */
+    readonly feedShare: number;
+    readonly powerShare: number;
+  };
+  /** The finished corner becomes an arc. Not allowed when left out. */
+  readonly round?: {
+    readonly allowed: boolean;
+    /** The design number: radius of the finished arc, m; smaller where the tolerance asks for it. */
+    readonly radius: number;
+    /** How far a finished corner may be off the drawn one, m. */
+    readonly tolerance: number;
+  };
 };
+
+/** An ease to start from: feed and power fall together, so that each metre of cut gets what it always gets. Own choice, no source. */
+export const easeDefaults = { allowed: true, length: 5e-3, feedShare: 0.4, powerShare: 0.4 } as const;
+
+/** A round to start from: small enough for most drawings. Own choice, no source. */
+export const roundDefaults = { allowed: true, radius: 1e-3, tolerance: 0.2e-3 } as const;
 
 /** Conditions of the straight cut. SI. */
 export type CutConditions = {

@@ -10,6 +10,8 @@ export type PathDrive = DriveLimits & {
   readonly feed: number; // m/s
   /** How far the machine may leave the path at a break of direction, m; 0, the default, stops at each. */
   readonly junctionDeviation?: number;
+  /** Bounds of single segments in the path's order, m/s, where something else holds the feed back. */
+  readonly bounds?: readonly (number | undefined)[];
 };
 
 /** Time along a path, s, its length, m, and how often the machine comes to rest on the way. */
@@ -68,17 +70,17 @@ type Span = { length: number; readonly limit: number; readonly entry: number };
 function spansOf(path: readonly Segment[], drive: PathDrive): Span[] {
   const spans: Span[] = [];
   let before: Segment | null = null;
-  for (const segment of path) {
+  path.forEach((segment, i) => {
     const length = segmentLength(segment);
-    if (length === 0) continue;
-    const limit =
-      segment.kind === 'arc' ? Math.min(drive.feed, arcFeedLimit(drive.acceleration, segment.radius)) : drive.feed;
+    if (length === 0) return;
+    const feed = Math.min(drive.feed, drive.bounds?.[i] ?? Infinity);
+    const limit = segment.kind === 'arc' ? Math.min(feed, arcFeedLimit(drive.acceleration, segment.radius)) : feed;
     const last = spans.at(-1);
     const entry = before ? junction(before, segment, drive) : 0;
     if (last && last.limit === limit && entry >= limit) last.length += length;
     else spans.push({ length, limit, entry: Math.min(entry, limit, last ? last.limit : 0) });
     before = segment;
-  }
+  });
   return spans;
 }
 

@@ -46,11 +46,28 @@ export {
 } from './contour.ts';
 export type { SvgOptions } from './svg.ts';
 export { svgContourData, svgPathData } from './svg.ts';
-export type { Corner } from './corner.ts';
-export { contourCorners, cornerInward, cornerOfPath, smallestBreak } from './corner.ts';
-export type { Loop, LoopCorner, Slug } from './loop.ts';
-export { loopAt, loopExtension, loopLength, loopReach, loopSlug } from './loop.ts';
-export type { LoopBlock, LoopFit, LoopSurroundings, Obstacle, ObstacleField } from './loop-fit.ts';
-export { loopFits, obstacleField } from './loop-fit.ts';
-export type { LoopBounds, LoopRadii } from './loop-radius.ts';
-export { loopRadii } from './loop-radius.ts';
+export { pathPart, pathWithoutLast } from './path-part.ts';
+export type { Corner, Fillet } from './corner.ts';
+export { contourCorners, cornerInward, cornerOfPath, largestFillet, smallestBreak } from './corner.ts';
+export type { FlatLoop, Loop, LoopCorner, Slug, TangentLoop } from './loop.ts';
+export {
+  flatLoopAt,
+  flatLoopDepth,
+  flatLoopLength,
+  flatLoopReach,
+  loopAt,
+  loopExtension,
+  loopLength,
+  loopReach,
+  loopSlug,
+} from './loop.ts';
+export type { FieldContour, FieldLeadIn, FieldPlate, Obstacle, ObstacleField } from './obstacles.ts';
+export { obstacleField } from './obstacles.ts';
+export type { LoopBlock, LoopFit, LoopRoom, LoopSurroundings, PlacedLoop } from './loop-fit.ts';
+export { leavesPlate, loopFits, loopFitsIn, loopRoom } from './loop-fit.ts';
+export type { FlatExtensions, LoopBounds, LoopRadii } from './loop-radius.ts';
+export { flatExtensions, loopRadii } from './loop-radius.ts';
+export type { EasedPiece } from './ease.ts';
+export { easedInto, easedOutOf, easedShare } from './ease.ts';
+export type { CornerRound } from './round.ts';
+export { arcRound, contourRounded, cornerRound, roundDeviation, roundRadius, roundTangent } from './round.ts';

@@ -14,6 +14,11 @@ export type LoopBounds = {
 export type LoopRadii =
   { readonly kind: 'radii'; readonly radii: readonly number[] } | { readonly kind: 'none'; readonly why: string };
 
+/** A flat loop's arcs and the extensions to try on a corner, m, longest first. */
+export type FlatExtensions =
+  | { readonly kind: 'extensions'; readonly radius: number; readonly extensions: readonly number[] }
+  | { readonly kind: 'none'; readonly why: string };
+
 /** Sizes tried from the design number down to the smallest allowed. */
 const steps = 8;
 
@@ -39,5 +44,29 @@ export function loopRadii(angle: number, bounds: LoopBounds): LoopRadii {
   return {
     kind: 'radii',
     radii: Array.from({ length: steps + 1 }, (_, i) => first * (least / first) ** (i / steps)),
+  };
+}
+
+/** A flat loop is worth trying when its extension is longer than the tangent loop's of the same arc by this factor. */
+const flatter = 1.05;
+
+/**
+ * Flat loops to try on a corner of the given angle (rad): both arcs as small as the machine follows, the extension (m) that of the design's tangent loop first, then
+ * shorter in equal ratios down to the least extension, or to where nothing is left of the straight. None where the tangent loop is as small already.
+ */
+export function flatExtensions(angle: number, bounds: LoopBounds): FlatExtensions {
+  const sizes = loopRadii(angle, bounds);
+  if (sizes.kind === 'none') return sizes;
+  const radius = bounds.smallestArc;
+  const longest = loopExtension(Math.max(...sizes.radii), angle);
+  const shortest = Math.max(bounds.minExtension, flatter * loopExtension(radius, angle));
+  if (longest < shortest) {
+    return { kind: 'none', why: `with the machine's smallest arc, ${millimetres(radius)}, a flat loop is no smaller` };
+  }
+  if (longest <= shortest * (1 + 1e-9)) return { kind: 'extensions', radius, extensions: [longest] };
+  return {
+    kind: 'extensions',
+    radius,
+    extensions: Array.from({ length: steps + 1 }, (_, i) => longest * (shortest / longest) ** (i / steps)),
   };
 }

@@ -251,8 +251,8 @@ describe('room for a loop', () => {
     );
     const { corners } = plan({
       contours: [
-        { id: '1', contour: square, role: 'outer' },
         { id: '2', contour: window, role: 'hole' },
+        { id: '1', contour: square, role: 'outer' },
       ],
     });
     const ofHole = corners.filter((c) => c.contourId === '2');
