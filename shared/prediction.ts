@@ -6,6 +6,7 @@ import {
   pierceReserve,
   pierceResults,
   strategyPrediction,
+  type PierceFit,
   type PiercePrediction,
   type PierceResults,
   type PierceStall,
@@ -22,6 +23,8 @@ export type Judged = {
   readonly content: StrategyContent;
   readonly profile: MachineProfile;
   readonly nozzle: Nozzle;
+  /** What test cuts on the machine say of the model; without it nothing is said of how sure it is. */
+  readonly fit?: PierceFit;
 };
 
 /**
@@ -76,13 +79,14 @@ export function reserveRulesOf(expressions: readonly string[]): ReserveRules {
   };
 }
 
-function outcomeOf({ content, profile, nozzle }: Judged): StrategyPrediction {
+function outcomeOf({ content, profile, nozzle, fit }: Judged): StrategyPrediction {
   return strategyPrediction({
     stages: content.stages,
     thickness: { min: metres(content.thickness.min), max: metres(content.thickness.max) },
     hottestPlateTemperature: content.hottestPlate,
     profile,
     nozzle,
+    ...(fit === undefined ? {} : { fit }),
   });
 }
 
@@ -103,10 +107,18 @@ export function cardEstimate({
   content,
   profile,
   nozzle,
+  fit,
   thickness,
   plateTemperature = COLD_PLATE_TEMPERATURE,
 }: Judged & { readonly thickness: number; readonly plateTemperature?: number }): CardEstimate {
-  const predicted = piercePredict({ stages: content.stages, thickness, plateTemperature, profile, nozzle });
+  const predicted = piercePredict({
+    stages: content.stages,
+    thickness,
+    plateTemperature,
+    profile,
+    nozzle,
+    ...(fit === undefined ? {} : { parameters: fit.parameters }),
+  });
   const reserve = pierceReserve(predicted);
   return {
     plateTemperature,
@@ -153,6 +165,7 @@ function conditionOf(outcome: StrategyOutcome, thickness: number): Condition {
         ? { kind: 'ok', value: breakthrough.time }
         : { kind: 'none', why: breakthrough.why },
     reserve: outcome.reserve,
+    interval: outcome.interval,
     trace: { time: [...outcome.trace.time], depth: [...outcome.trace.depth] },
     stalls: outcome.stalls.map(({ stage, time, depth, why }: PierceStall) => ({ stage, time, depth, why })),
   };

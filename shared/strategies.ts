@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import type { CornerRules, CutConditions } from '../strategy/corners/rules.ts';
+import type { PierceInterval } from '../strategy/pierce/fit.ts';
 import type { Stage, StageQuantities } from '../strategy/pierce/stage.ts';
 import {
   idSchema,
@@ -133,12 +134,27 @@ const noneOr = <T extends z.ZodType>(ok: T) =>
     z.object({ kind: z.literal('none'), why: z.string() }),
   ]);
 
+const rangeSchema = z.object({ least: z.number().nullable(), most: z.number().nullable() });
+
+/** How sure a fitted model is of breakthrough (s) and reserve; null for an end at which the hole is not through within the routine. */
+const intervalSchema = z.discriminatedUnion('kind', [
+  z.object({
+    kind: z.literal('ok'),
+    breakthrough: rangeSchema,
+    reserve: rangeSchema,
+    slowest: z.object({ breakthrough: z.number().nullable(), reserve: z.number().nullable() }).nullable(),
+  }),
+  z.object({ kind: z.literal('none'), why: z.string() }),
+]) satisfies z.ZodType<PierceInterval>;
+
 /** What the model says for one plate temperature. */
 export const conditionSchema = z.object({
   plateTemperature: z.number(), // K
   thickness: z.number(), // m, the one judged
   breakthrough: noneOr(z.number()), // s
   reserve: noneOr(z.number()),
+  /** Null where no fit to the machine's test cuts was used. */
+  interval: intervalSchema.nullable().default(null),
   trace: z.object({ time: z.array(z.number()), depth: z.array(z.number()) }), // s, m
   stalls: z.array(z.object({ stage: z.number().int(), time: z.number(), depth: z.number(), why: z.string() })),
 });

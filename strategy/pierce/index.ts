@@ -17,6 +17,7 @@ export {
   type LeadInNeeded,
   type PierceHeat,
 } from './lead-in.ts';
+export { pierceInterval, type PierceFit, type PierceInterval, type PierceRange } from './fit.ts';
 export { pierceMechanismTable, type PierceMechanism } from './mechanisms.ts';
 export {
   CHOKING_GAUGE_PRESSURE,

@@ -1,10 +1,12 @@
 import type { MachineProfile, Nozzle } from '../machine.ts';
 import { COLD_PLATE_TEMPERATURE } from '../steel/index.ts';
+import { pierceInterval, type PierceFit, type PierceInterval } from './fit.ts';
 import type { PierceHeat } from './lead-in.ts';
 import { pierceParameters, type PierceParameters } from './parameters.ts';
 import {
   piercePredict,
   type Breakthrough,
+  type PierceInput,
   type PiercePrediction,
   type PierceStageResult,
   type PierceStall,
@@ -22,6 +24,8 @@ export type StrategyInput = {
   readonly profile: MachineProfile;
   readonly nozzle: Nozzle;
   readonly parameters?: Partial<PierceParameters>;
+  /** What test cuts on this machine say of the parameters; it goes before `parameters`. */
+  readonly fit?: PierceFit;
 };
 
 /** Routine time ÷ breakthrough time, without unit; or why there is none. */
@@ -32,6 +36,8 @@ export type StrategyOutcome = {
   readonly plateTemperature: number; // K
   readonly breakthrough: Breakthrough;
   readonly reserve: Reserve;
+  /** How sure the fitted model is of both; null where nothing was fitted. */
+  readonly interval: PierceInterval | null;
   readonly trace: PiercePrediction['trace'];
   readonly stalls: readonly PierceStall[];
   readonly perStage: readonly PierceStageResult[];
@@ -87,15 +93,19 @@ export function strategyPrediction(input: StrategyInput): StrategyPrediction {
       `hottest plate ${hottestPlateTemperature} K is colder than the cold plate ${coldPlateTemperature} K`,
     );
   }
+  const parameters = { ...input.parameters, ...input.fit?.parameters };
+  const inputAt = (plate: number, plateTemperature: number): PierceInput => ({
+    stages,
+    thickness: plate,
+    plateTemperature,
+    profile,
+    nozzle,
+    parameters,
+  });
   const at = (plate: number, plateTemperature: number): PiercePrediction =>
-    piercePredict({
-      stages,
-      thickness: plate,
-      plateTemperature,
-      profile,
-      nozzle,
-      ...(input.parameters === undefined ? {} : { parameters: input.parameters }),
-    });
+    piercePredict(inputAt(plate, plateTemperature));
+  const intervalAt = (plateTemperature: number): PierceInterval | null =>
+    input.fit === undefined ? null : pierceInterval(inputAt(thickness.max, plateTemperature), input.fit);
   const cold = at(thickness.max, coldPlateTemperature);
   const hot = at(thickness.max, hottestPlateTemperature);
   const thinHot = thickness.min === thickness.max ? hot : at(thickness.min, hottestPlateTemperature);
@@ -108,10 +118,10 @@ export function strategyPrediction(input: StrategyInput): StrategyPrediction {
     modelVersion: cold.modelVersion,
     thickness: { min: thickness.min, max: thickness.max },
     routineTime: cold.routineTime,
-    cold: outcome(cold, coldPlateTemperature),
-    hot: outcome(hot, hottestPlateTemperature),
+    cold: outcome(cold, coldPlateTemperature, intervalAt(coldPlateTemperature)),
+    hot: outcome(hot, hottestPlateTemperature, intervalAt(hottestPlateTemperature)),
     craterRadius: Math.max(thinHot.craterRadius, hot.craterRadius, cold.craterRadius),
-    eruption: { ...worstEruption(cases), limit: pierceParameters(input.parameters).eruptionLimit },
+    eruption: { ...worstEruption(cases), limit: pierceParameters(parameters).eruptionLimit },
     heat: {
       perLength: Math.max(...cases.map((one) => one.prediction.heatLeft / one.thickness)),
       duration: cold.routineTime,
@@ -132,11 +142,16 @@ export function pierceReserve(prediction: Pick<PiercePrediction, 'breakthrough' 
   return { kind: 'ok', value: routineTime / breakthrough.time };
 }
 
-function outcome(prediction: PiercePrediction, plateTemperature: number): StrategyOutcome {
+function outcome(
+  prediction: PiercePrediction,
+  plateTemperature: number,
+  interval: PierceInterval | null,
+): StrategyOutcome {
   return {
     plateTemperature,
     breakthrough: prediction.breakthrough,
     reserve: pierceReserve(prediction),
+    interval,
     trace: prediction.trace,
     stalls: prediction.stalls,
     perStage: prediction.perStage,
