@@ -25,33 +25,10 @@ export function FocusFields({ control }: { readonly control: Control<MachineForm
             label={text.reference}
             options={references.map((value) => ({ value, label: text.references[value] }))}
           />
-          <FormNumber
-            control={control}
-            name="profile.focusScale.slope"
-            dimension="ratio"
-            unit="×"
-            label={text.slope.label}
-            hint={text.slope.hint}
-          />
-          <FormNumber
-            control={control}
-            name="profile.focusScale.offset"
-            dimension="length"
-            label={text.offset.label}
-            hint={text.offset.hint}
-          />
-          <FormNumber
-            control={control}
-            name="profile.focusScale.minDial"
-            dimension="length"
-            label={text.minDial.label}
-          />
-          <FormNumber
-            control={control}
-            name="profile.focusScale.maxDial"
-            dimension="length"
-            label={text.maxDial.label}
-          />
+          <FormNumber control={control} name="profile.focusScale.slope" dimension="ratio" unit="×" {...text.slope} />
+          <FormNumber control={control} name="profile.focusScale.offset" dimension="length" {...text.offset} />
+          <FormNumber control={control} name="profile.focusScale.minDial" dimension="length" {...text.minDial} />
+          <FormNumber control={control} name="profile.focusScale.maxDial" dimension="length" {...text.maxDial} />
         </Stack>
         {typed.success ? <FocusReading scale={typed.data} /> : <Small>{text.incomplete}</Small>}
       </Columns>

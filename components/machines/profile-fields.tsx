@@ -1,122 +1,80 @@
-import type { Control } from 'react-hook-form';
+import type { Control, FieldPath } from 'react-hook-form';
 import { profileText } from '@/components/text/machines.ts';
 import { Columns } from '@/components/ui/columns.tsx';
 import { FormNumber, FormTick } from '@/components/ui/form-fields.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
+import type { Dimension } from '@/strategy/units/index.ts';
 import type { MachineFormIn, MachineFormOut } from './machine-form.tsx';
 
 type Bound = { readonly control: Control<MachineFormIn, unknown, MachineFormOut> };
 
+type Row = {
+  readonly name: FieldPath<MachineFormIn>;
+  readonly dimension: Dimension;
+  readonly label: string;
+  readonly hint?: string;
+  /** Where it is never given in the person's usual one. */
+  readonly unit?: string;
+};
+
+const { source, optics, standoff, oxygen, axes, bed } = profileText;
+
+const sourceRows: readonly Row[] = [
+  { name: 'profile.source.maxPower', dimension: 'power', ...source.maxPower },
+  { name: 'profile.source.minPower', dimension: 'power', ...source.minPower },
+  { name: 'profile.source.wavelength', dimension: 'length', unit: 'µm', ...source.wavelength },
+  { name: 'profile.source.riseTime', dimension: 'time', unit: 'µs', ...source.riseTime },
+  { name: 'profile.source.minFrequency', dimension: 'frequency', ...source.minFrequency },
+  { name: 'profile.source.maxFrequency', dimension: 'frequency', ...source.maxFrequency },
+  { name: 'profile.source.minDuty', dimension: 'ratio', ...source.minDuty },
+];
+const opticsRows: readonly Row[] = [
+  { name: 'profile.optics.coreDiameter', dimension: 'length', unit: 'µm', ...optics.coreDiameter },
+  { name: 'profile.optics.halfAngle', dimension: 'angle', unit: 'mrad', ...optics.halfAngle },
+  { name: 'profile.optics.collimatorFocalLength', dimension: 'length', unit: 'mm', ...optics.collimatorFocalLength },
+  { name: 'profile.optics.focusingFocalLength', dimension: 'length', unit: 'mm', ...optics.focusingFocalLength },
+];
+const standoffRows: readonly Row[] = [
+  { name: 'profile.standoff.min', dimension: 'length', ...standoff.min },
+  { name: 'profile.standoff.max', dimension: 'length', ...standoff.max },
+];
+const oxygenRows: readonly Row[] = [
+  { name: 'profile.oxygen.minPressure', dimension: 'pressure', ...oxygen.minPressure },
+  { name: 'profile.oxygen.maxPressure', dimension: 'pressure', ...oxygen.maxPressure },
+];
+const axesRows: readonly Row[] = [
+  { name: 'profile.axes.maxFeed', dimension: 'speed', unit: 'm/min', ...axes.maxFeed },
+  { name: 'profile.axes.acceleration', dimension: 'acceleration', ...axes.acceleration },
+  { name: 'profile.axes.jerk', dimension: 'jerk', ...axes.jerk },
+  { name: 'profile.smallestArc', dimension: 'length', ...axes.smallestArc },
+];
+const bedRows = (metres: 'm' | 'ft'): readonly Row[] => [
+  { name: 'profile.bed.length', dimension: 'length', unit: metres, ...bed.length },
+  { name: 'profile.bed.width', dimension: 'length', unit: metres, ...bed.width },
+];
+
 /** Every number of the profile but the focus dial's, in groups from the source to the bed. */
 export function ProfileFields({ control }: Bound) {
   const metres = useUnitSystem() === 'metric' ? 'm' : 'ft';
-  const { source, optics, standoff, oxygen, axes, bed } = profileText;
+  const numbers = (rows: readonly Row[]) => rows.map((row) => <FormNumber key={row.name} control={control} {...row} />);
   return (
     <>
       <Panel title={source.title}>
-        <Columns>
-          <FormNumber control={control} name="profile.source.maxPower" dimension="power" {...source.maxPower} />
-          <FormNumber control={control} name="profile.source.minPower" dimension="power" {...source.minPower} />
-          <FormNumber
-            control={control}
-            name="profile.source.wavelength"
-            dimension="length"
-            unit="µm"
-            {...source.wavelength}
-          />
-          <FormNumber
-            control={control}
-            name="profile.source.riseTime"
-            dimension="time"
-            unit="µs"
-            {...source.riseTime}
-          />
-          <FormNumber
-            control={control}
-            name="profile.source.minFrequency"
-            dimension="frequency"
-            {...source.minFrequency}
-          />
-          <FormNumber
-            control={control}
-            name="profile.source.maxFrequency"
-            dimension="frequency"
-            {...source.maxFrequency}
-          />
-          <FormNumber control={control} name="profile.source.minDuty" dimension="ratio" {...source.minDuty} />
-        </Columns>
+        <Columns>{numbers(sourceRows)}</Columns>
       </Panel>
       <Panel title={optics.title}>
-        <Columns>
-          <FormNumber
-            control={control}
-            name="profile.optics.coreDiameter"
-            dimension="length"
-            unit="µm"
-            {...optics.coreDiameter}
-          />
-          <FormNumber
-            control={control}
-            name="profile.optics.halfAngle"
-            dimension="angle"
-            unit="mrad"
-            {...optics.halfAngle}
-          />
-          <FormNumber
-            control={control}
-            name="profile.optics.collimatorFocalLength"
-            dimension="length"
-            unit="mm"
-            {...optics.collimatorFocalLength}
-          />
-          <FormNumber
-            control={control}
-            name="profile.optics.focusingFocalLength"
-            dimension="length"
-            unit="mm"
-            {...optics.focusingFocalLength}
-          />
-        </Columns>
+        <Columns>{numbers(opticsRows)}</Columns>
       </Panel>
       <Columns least={340}>
-        <Panel title={standoff.title}>
-          <FormNumber control={control} name="profile.standoff.min" dimension="length" {...standoff.min} />
-          <FormNumber control={control} name="profile.standoff.max" dimension="length" {...standoff.max} />
-        </Panel>
-        <Panel title={oxygen.title}>
-          <FormNumber
-            control={control}
-            name="profile.oxygen.minPressure"
-            dimension="pressure"
-            {...oxygen.minPressure}
-          />
-          <FormNumber
-            control={control}
-            name="profile.oxygen.maxPressure"
-            dimension="pressure"
-            {...oxygen.maxPressure}
-          />
-        </Panel>
+        <Panel title={standoff.title}>{numbers(standoffRows)}</Panel>
+        <Panel title={oxygen.title}>{numbers(oxygenRows)}</Panel>
       </Columns>
       <Panel title={axes.title}>
-        <Columns>
-          <FormNumber control={control} name="profile.axes.maxFeed" dimension="speed" unit="m/min" {...axes.maxFeed} />
-          <FormNumber
-            control={control}
-            name="profile.axes.acceleration"
-            dimension="acceleration"
-            {...axes.acceleration}
-          />
-          <FormNumber control={control} name="profile.axes.jerk" dimension="jerk" {...axes.jerk} />
-          <FormNumber control={control} name="profile.smallestArc" dimension="length" {...axes.smallestArc} />
-        </Columns>
+        <Columns>{numbers(axesRows)}</Columns>
       </Panel>
       <Panel title={bed.title}>
-        <Columns>
-          <FormNumber control={control} name="profile.bed.length" dimension="length" unit={metres} {...bed.length} />
-          <FormNumber control={control} name="profile.bed.width" dimension="length" unit={metres} {...bed.width} />
-        </Columns>
+        <Columns>{numbers(bedRows(metres))}</Columns>
         <FormTick control={control} name="profile.bed.shuttleTable" label={bed.shuttleTable.label} />
       </Panel>
     </>
