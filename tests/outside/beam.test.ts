@@ -15,6 +15,7 @@ import { outsideChecks, type OutsideCheck } from './check.ts';
 const ISO_11145 = 'ISO 11145 and ISO 11146, definitions seen through a glossary';
 const ISO_11146 = 'ISO 11146, relation seen through a beam-diagnosis formulary';
 const IMAGING = 'geometric imaging of the fibre’s end';
+const GAUSSIAN = 'Gaussian optics, w₀ = λ·f·M²/(π·w)';
 const FORMULA = 'computed from a published formula' as const;
 
 function optics(core: number, halfAngle: number, collimator = 100, focusing = 200): Optics {
@@ -99,6 +100,13 @@ outsideChecks('beam', [
       return beamRadiusAt(optics(100, 80), distance * 1e-3) * 1e3;
     }),
   ),
+  value('B06', 'waist of a beam of M² 1.1 and 5 mm radius focused by 200 mm', 'µm', 14.9860294415, GAUSSIAN, () => {
+    // A fibre with that beam's product, collimated to that radius: imaging must come to the same as diffraction.
+    const [halfAngle, radius, wavelength] = [0.05, 5e-3, 1.07e-6];
+    const coreDiameter = (2 * 1.1 * wavelength) / Math.PI / halfAngle;
+    const collimatorFocalLength = radius / halfAngle;
+    return (beamSpotDiameter({ coreDiameter, halfAngle, collimatorFocalLength, focusingFocalLength: 0.2 }) / 2) * 1e6;
+  }),
   value('B07', 'mean intensity of 6 kW in a radius of 0.1 mm', 'MW/cm²', 19.098593171, 'definition', () => {
     return beamMeanIntensity(6000, 1e-4) / 1e10;
   }),

@@ -116,6 +116,22 @@ outsideChecks('oxygen flow', [
   ]),
   ...(
     [
+      [1.0, 0.5, 26.9819822826],
+      [1.5, 0.7, 71.3581067557],
+      [2.0, 1.5, 187.753293936],
+    ] as const
+  ).map(([millimetres, bar, expected]): OutsideCheck => ({
+    id: `G04-${millimetres}-${bar}-scfh`,
+    what: `oxygen through ${millimetres} mm at ${bar} bar in standard cubic feet (70 °F, 1 atm)`,
+    unit: 'scfh',
+    got: () => flow(millimetres, bar) / OXYGEN_NORMAL_DENSITY / normalFlowFromStandardCubicFeet(1),
+    expected,
+    tolerance: { rel: 0.002 },
+    source: `${ISENTROPIC}; 0.03756 kg a standard cubic foot, ${TABLE}`,
+    standing: FORMULA,
+  })),
+  ...(
+    [
       [0.3, 1.17],
       [0.5, 1.047],
       [0.7, 1.009],

@@ -5,10 +5,13 @@ import {
   peakRiseAroundPoint,
   pierceParameters,
   piercePredict,
+  pierceStageDefaults,
   pierceWarmth,
   pulseTrain,
+  stageQuantitiesAt,
   type PierceParameters,
   type Stage,
+  type StageQuantities,
 } from '../../strategy/pierce/index.ts';
 import {
   boreMoment,
@@ -19,9 +22,12 @@ import {
   SET_SIZE,
   WALL,
 } from '../../strategy/pierce/bore.ts';
+import { toleranceFactor } from '../../strategy/pierce/tolerance-factor.ts';
+import { beamMeanIntensity, beamRadiusAt } from '../../strategy/beam/index.ts';
 import { netRemovalHeat } from '../../strategy/pierce/parameters.ts';
 import { meltingEnthalpy, meltingEnthalpyPerVolume, STEEL_DENSITY } from '../../strategy/steel/index.ts';
-import { NOZZLE_1_5, TEN_KILOWATT } from '../support/machines.ts';
+import type { MachineProfile } from '../../strategy/machine.ts';
+import { FOUR_KILOWATT, NOZZLE_1_5, TEN_KILOWATT } from '../support/machines.ts';
 import { outsideChecks, type OutsideCheck } from './check.ts';
 
 const FORMULA = 'computed from a published formula' as const;
@@ -57,6 +63,24 @@ outsideChecks(
   }),
 );
 
+outsideChecks('ramps', [
+  {
+    id: 'U02',
+    what: 'oxygen three fifths through a ramp from 1.1 to 0.8 bar',
+    unit: 'bar',
+    got: () => {
+      const at = (oxygenPressure: number) => ({ ...stageOf(1000), oxygenPressure });
+      return (
+        stageQuantitiesAt({ duration: 5, from: at(1.1e5), to: at(0.8e5) }, (18 - 15) / (20 - 15)).oxygenPressure / 1e5
+      );
+    },
+    expected: 0.92,
+    tolerance: { rel: 1e-6 },
+    source: 'definition of a straight line',
+    standing: FORMULA,
+  },
+]);
+
 /** Energy to melt a volume of iron from 25 °C, J/m³, from the NIST enthalpy of the liquid. */
 const NIST_MELTING = 10.2e9;
 
@@ -65,9 +89,9 @@ function leastEnergy(diameter: number, thickness: number): number {
   return meltingEnthalpyPerVolume(298.15) * (Math.PI / 4) * diameter ** 2 * thickness;
 }
 
-/** Continuous power of so many watts, long enough. */
-function flat(power: number): readonly Stage[] {
-  const set = {
+/** Continuous power of so many watts. */
+function stageOf(power: number): StageQuantities {
+  return {
     standoff: 0.006,
     focusPosition: 0,
     peakPower: power,
@@ -75,7 +99,29 @@ function flat(power: number): readonly Stage[] {
     pulseFrequency: null,
     oxygenPressure: 0.6e5,
   };
+}
+
+/** The same, long enough. */
+function flat(power: number): readonly Stage[] {
+  const set = stageOf(power);
   return [{ duration: 60, from: set, to: set }];
+}
+
+/** A pierce as it is begun with on the 10 kW machine, on a plate at 25 °C. */
+function begun(millimetres: number) {
+  const stages = pierceStageDefaults(TEN_KILOWATT, millimetres * 1e-3);
+  return piercePredict({
+    stages,
+    thickness: millimetres * 1e-3,
+    plateTemperature: 298.15,
+    profile: TEN_KILOWATT,
+    nozzle: NOZZLE_1_5,
+  });
+}
+
+/** Light absorbed of a source's full power in the waist of its beam, W/cm². */
+function absorbedIntensity({ source, optics }: MachineProfile): number {
+  return (PIERCE_DEFAULTS.coupling * beamMeanIntensity(source.maxPower, beamRadiusAt(optics, 0))) / 1e4;
 }
 
 /** Predicted pierce of 6 mm with a bore of 1 mm, s. */
@@ -135,7 +181,55 @@ outsideChecks('least energy and time of a pierce', [
     source: `${NIST}: a lower bound of any pierce that oxidation does not feed`,
     standing: FORMULA,
   })),
+  ...[8, 20, 30].map((millimetres): OutsideCheck => ({
+    id: `P01-bound-${millimetres}`,
+    what: `heat that a whole pierce of ${millimetres} mm takes up, against bare melting of its bore`,
+    unit: 'J',
+    got: () => {
+      const { energy, oxidationHeat } = begun(millimetres);
+      return energy.absorbed + oxidationHeat;
+    },
+    expected: NIST_MELTING * Math.PI * PIERCE_DEFAULTS.boreRadius ** 2 * millimetres * 1e-3,
+    tolerance: { bound: 'at least' },
+    source: NIST,
+    standing: FORMULA,
+  })),
+  ...(['at least', 'at most'] as const).flatMap((bound) =>
+    [FOUR_KILOWATT, TEN_KILOWATT].map((profile): OutsideCheck => ({
+      id: `P05-${profile.source.maxPower}-${bound === 'at least' ? 'low' : 'high'}`,
+      what: `intensity absorbed of ${profile.source.maxPower} W in the waist, where melt is thrown out efficiently`,
+      unit: 'MW/cm²',
+      got: () => absorbedIntensity(profile) / 1e6,
+      expected: bound === 'at least' ? 1 : 100,
+      tolerance: { bound },
+      source: 'von Allmen, J. Appl. Phys. 47 (1976) 5460, abstract: 1 to 100 MW/cm² for most metals',
+      standing: 'published',
+    })),
+  ),
 ]);
+
+outsideChecks(
+  'margin from few trials',
+  (
+    [
+      [3, 7.65590013315],
+      [5, 4.20268074126],
+      [10, 2.91096341308],
+      [20, 2.39600168375],
+      [30, 2.21983753204],
+    ] as const
+  ).map(([trials, expected]): OutsideCheck => ({
+    id: `P08-${trials}`,
+    what: `standard deviations above the mean of ${trials} pierces by when 95 % are through, with 95 % confidence`,
+    unit: '',
+    got: () => toleranceFactor(trials),
+    expected,
+    tolerance: { rel: 1e-6 },
+    source:
+      'ISO 16269-6 and NIST/SEMATECH handbook, 7.2.6.3, through the noncentral t; tables as remembered read 7.656, 4.203, 2.911, 2.396, 2.220',
+    standing: FORMULA,
+  })),
+);
 
 outsideChecks('the ledger in the pierce', [
   {

@@ -91,6 +91,30 @@ outsideChecks('steel by EN 1993-1-2', [
   ]),
 ]);
 
+const NIST_TABLE = 'NIST Chemistry WebBook, iron (Chase 1998), table of the heat capacity of α-iron';
+
+outsideChecks(
+  'steel beside iron',
+  (
+    [
+      [298, 25.09],
+      [400, 27.4],
+      [500, 29.68],
+      [600, 32.06],
+      [700, 34.6],
+    ] as const
+  ).map(([kelvin, expected]): OutsideCheck => ({
+    id: `M09-${kelvin}`,
+    what: `specific heat of carbon steel at ${kelvin} K by the mole of iron, against iron's own`,
+    unit: 'J/(mol K)',
+    got: () => steelSpecificHeat(kelvin) * 55.845e-3,
+    expected,
+    tolerance: { rel: 0.025 },
+    source: NIST_TABLE,
+    standing: 'published',
+  })),
+);
+
 outsideChecks('melting of iron', [
   {
     id: 'M05',
@@ -239,6 +263,17 @@ outsideChecks('oxidation of iron and the ledger of the cut', [
   perKilogram('O04c-oxygen', 'Fe2O3', 'oxygenPerIron', 0.429744829439, 1, 'kg/kg'),
   perKilogram('O04c-per-oxygen', 'Fe2O3', 'heatPerOxygen', 17.1986282819, 1e6, 'MJ/kg'),
   {
+    id: 'O05',
+    what: 'heat of burning to FeO as taken, at 298 K, against iron and oxide both liquid at 2000 K',
+    unit: 'kJ/mol',
+    got: () => formationHeat('FeO', 0.5),
+    expected: 255.870624456,
+    tolerance: { rel: 0.07 },
+    source:
+      'NIST Chemistry WebBook for iron; coefficients of liquid FeO and oxygen from memory; papers use about 257.6',
+    standing: 'memory',
+  },
+  {
     id: 'O06',
     what: 'energy per volume of melt at the least roughness, laser and oxidation',
     unit: 'J/mm³',
@@ -289,6 +324,26 @@ outsideChecks('oxidation of iron and the ledger of the cut', [
     standing: FORMULA,
   },
 ]);
+
+outsideChecks(
+  'cutting speed from the ledger',
+  (
+    [
+      [0.4, 10, 3],
+      [0.6, 20, 1],
+      [0.8, 30, 0.5],
+    ] as const
+  ).map(([kerf, plate, expected]): OutsideCheck => ({
+    id: `O17-${plate}`,
+    what: `speed that 2.4 kW absorbed sustain in a ${kerf} mm kerf of ${plate} mm`,
+    unit: 'm/min',
+    got: () => (2400 / (LEDGER_LASER * kerf * 1e-3 * plate * 1e-3)) * 60,
+    expected,
+    tolerance: { rel: 1e-6 },
+    source: 'Golyshev et al., Quantum Electron. 45 (2015), abstract: 11…13 J/mm³; arithmetic, ±30 % as a prediction',
+    standing: FORMULA,
+  })),
+);
 
 outsideChecks('heat a kerf leaves in the plate', [
   {
