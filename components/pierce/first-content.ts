@@ -1,84 +1,29 @@
 import type { StrategyContent } from '@/shared/strategies.ts';
-import { dialForFocus, focusForDial } from '@/strategy/beam/index.ts';
-import type { CornerRules, CutConditions } from '@/strategy/corners/rules.ts';
+import { cornerRuleDefaults, cutConditionDefaults } from '@/strategy/corners/defaults.ts';
 import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
-import { pierceStageDefaults } from '@/strategy/pierce/index.ts';
+import { pierceStageDefaults, type Stage } from '@/strategy/pierce/index.ts';
 
-type FirstChoices = Pick<
+export type FirstChoices = Pick<
   StrategyContent,
   'machineRevisionId' | 'gradeGroup' | 'nozzleId' | 'thickness' | 'hottestPlate'
 >;
 
-/** What a new draft begins with, for the thickest plate of its range: a place to start from, each number to be tried and changed. */
-export function firstContent(choices: FirstChoices, profile: MachineProfile, nozzle: Nozzle): StrategyContent {
-  const thickness = choices.thickness.max * 1e-6;
+/**
+ * What a new draft begins with, for the thickest plate of its range: the stages given, or usual ones, and usual conditions for the cut
+ * and its corners, each number to be tried and changed.
+ */
+export function firstContent(
+  choices: FirstChoices,
+  profile: MachineProfile,
+  nozzle: Nozzle,
+  stages: readonly Stage[] = pierceStageDefaults(profile, choices.thickness.max * 1e-6, nozzle),
+): StrategyContent {
+  const { loop, dwell, ...rules } = cornerRuleDefaults(profile);
   return {
     ...choices,
     gas: 'oxygen',
-    cut: firstCut(profile, thickness),
-    stages: pierceStageDefaults(profile, thickness, nozzle).map((stage) => ({
-      duration: stage.duration,
-      from: { ...stage.from },
-      to: { ...stage.to },
-    })),
-    cornerRules: firstCornerRules(profile),
+    cut: { ...cutConditionDefaults(profile, choices.thickness.max * 1e-6) },
+    stages: stages.map((stage) => ({ duration: stage.duration, from: { ...stage.from }, to: { ...stage.to } })),
+    cornerRules: { ...rules, loop: { ...loop }, dwell: { ...dwell } },
   };
 }
-
-/** Share of the laser's power that the cut takes up; own choice, to be fitted by test cuts. */
-const ABSORBED = 0.6;
-/** Absorbed laser per volume of melt, J/m³ (Golyshev et al. 2015: 11 to 13 J/mm³). */
-const MELT_ENERGY = 12e9;
-/** Above this the oxidation front lags behind, m/s (about 2 m/min). */
-const FASTEST = 2 / 60;
-/** Heat left in the plate per area of cut face, J/m²: conduction out of a 0.6 mm kerf in 20 mm plate at 1 m/min. */
-const HEAT_INTO_PLATE = 6.5e6;
-
-/** The feed follows from the energy to melt the kerf, v = P / (e·w·d); pressure, standoff and focus are common practice, no source. */
-function firstCut(profile: MachineProfile, thickness: number): CutConditions {
-  const kerfWidth = rounded(within(0.4e-3 + 0.02 * (thickness - 0.01), 0.3e-3, 1.2e-3), 0.05e-3);
-  const peakPower = rounded(within(200e3 * thickness, profile.source.minPower, 0.9 * profile.source.maxPower), 100);
-  const feed = within(
-    (ABSORBED * peakPower) / (MELT_ENERGY * kerfWidth * thickness),
-    1e-3,
-    Math.min(FASTEST, profile.axes.maxFeed),
-  );
-  const standoff = within(1.2e-3, profile.standoff.min, profile.standoff.max);
-  return {
-    feed: rounded(feed, 10e-3 / 60),
-    peakPower,
-    duty: 1,
-    pulseFrequency: null,
-    oxygenPressure: within(0.7e5, profile.oxygen.minPressure, profile.oxygen.maxPressure),
-    standoff,
-    focusPosition: reachable(profile, 3e-3, standoff),
-    kerfWidth,
-    heatIntoPlate: HEAT_INTO_PLATE,
-  };
-}
-
-/** Own choices; the limit is a calibration parameter, no published one was found. */
-function firstCornerRules(profile: MachineProfile): CornerRules & StrategyContent['cornerRules'] {
-  return {
-    treatBelowAngle: (120 * Math.PI) / 180,
-    returnExcessLimit: 70,
-    loop: {
-      allowed: true,
-      radius: Math.max(5e-3, profile.smallestArc),
-      minExtension: 2e-3,
-      maxExtension: 15e-3,
-      clearance: 2e-3,
-    },
-    dwell: { allowed: true, maxDuration: 6, restart: 2 },
-  };
-}
-
-/** The wished focus position, or the nearest that the dial takes. */
-function reachable({ focusScale }: MachineProfile, wished: number, standoff: number): number {
-  if (dialForFocus(focusScale, wished, standoff).kind === 'ok') return wished;
-  const ends = [focusScale.minDial, focusScale.maxDial].map((typed) => focusForDial(focusScale, typed, standoff));
-  return within(wished, Math.min(...ends), Math.max(...ends));
-}
-
-const within = (value: number, least: number, most: number) => Math.min(most, Math.max(least, value));
-const rounded = (value: number, step: number) => Number((Math.round(value / step) * step).toPrecision(9));

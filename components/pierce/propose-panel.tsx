@@ -17,6 +17,7 @@ import type { Prediction } from '@/shared/strategies.ts';
 import type { ReserveRules, Stage } from '@/strategy/pierce/index.ts';
 import { quantityText } from '@/strategy/units/index.ts';
 import type { ProposeAsked } from './propose.worker.ts';
+import { InTheWay } from './in-the-way.tsx';
 import type { ProposalGround } from './use-draft-proposal.ts';
 import type { ProposalState } from './use-proposal.ts';
 
@@ -37,14 +38,20 @@ type ProposePanelProps = {
   onClose: () => void;
 };
 
+const limitFields = [
+  { name: 'routineTime', label: proposeText.longest, dimension: 'time' },
+  { name: 'craterRadius', label: proposeText.crater, dimension: 'length' },
+  { name: 'leadInLength', label: proposeText.leadIn, dimension: 'length' },
+] as const;
+
+type Limits = Readonly<Record<(typeof limitFields)[number]['name'], number | null>>;
+const noLimits: Limits = { routineTime: null, craterRadius: null, leadInLength: null };
+
 /** Asks the designer for a routine, around stages that are kept; its answer is looked at before it is taken. */
 export function ProposePanel(props: ProposePanelProps) {
   const { ground, rules, stages, stageKeys, state, proposed, now, onBegin, onCancel, onAccept, onClose } = props;
-  const [cold, setCold] = useState<number | null>(rules.cold);
-  const [hot, setHot] = useState<number | null>(rules.hot);
-  const [longest, setLongest] = useState<number | null>(null);
-  const [crater, setCrater] = useState<number | null>(null);
-  const [leadIn, setLeadIn] = useState<number | null>(null);
+  const [reserve, setReserve] = useState<Readonly<Record<'cold' | 'hot', number | null>>>(rules);
+  const [limits, setLimits] = useState(noLimits);
   const [limiting, setLimiting] = useState(false);
   const [kept, setKept] = useState<ReadonlySet<string>>(new Set());
   // the answer puts the wishes out of the way, so that on a phone the drawing is near
@@ -54,7 +61,8 @@ export function ProposePanel(props: ProposePanelProps) {
     value !== null && value >= 1 && value <= 20 ? undefined : proposeText.reserveRange;
   const limitError = (value: number | null) =>
     value === null || (value > 0 && Number.isFinite(value)) ? undefined : proposeText.positive;
-  const sound = [reserveError(cold), reserveError(hot), ...[longest, crater, leadIn].map(limitError)].every(
+  const { cold, hot } = reserve;
+  const sound = [...[cold, hot].map(reserveError), ...Object.values(limits).map(limitError)].every(
     (error) => error === undefined,
   );
   const begin = () => {
@@ -64,11 +72,7 @@ export function ProposePanel(props: ProposePanelProps) {
     onBegin({
       ...ground,
       reserve: { cold, hot },
-      limits: {
-        ...(longest === null ? {} : { routineTime: longest }),
-        ...(crater === null ? {} : { craterRadius: crater }),
-        ...(leadIn === null ? {} : { leadInLength: leadIn }),
-      },
+      limits: Object.fromEntries(Object.entries(limits).filter(([, limit]) => limit !== null)),
       ...(pinned.some((stage) => stage !== null) ? { pinned } : {}),
     });
   };
@@ -88,22 +92,17 @@ export function ProposePanel(props: ProposePanelProps) {
     <Panel title={proposeText.title}>
       <Body>{proposeText.meaning}</Body>
       <Columns least={200}>
-        <NumberField
-          label={proposeText.cold}
-          dimension="ratio"
-          unit="×"
-          value={cold}
-          onChange={setCold}
-          error={reserveError(cold)}
-        />
-        <NumberField
-          label={proposeText.hot}
-          dimension="ratio"
-          unit="×"
-          value={hot}
-          onChange={setHot}
-          error={reserveError(hot)}
-        />
+        {(['cold', 'hot'] as const).map((plate) => (
+          <NumberField
+            key={plate}
+            label={proposeText[plate]}
+            dimension="ratio"
+            unit="×"
+            value={reserve[plate]}
+            onChange={(value) => setReserve({ ...reserve, [plate]: value })}
+            error={reserveError(reserve[plate])}
+          />
+        ))}
       </Columns>
       <Row>
         <Button
@@ -113,38 +112,23 @@ export function ProposePanel(props: ProposePanelProps) {
           onPress={() => {
             setLimiting(!limiting);
             // limits that are not in sight must not bind
-            setLongest(null);
-            setCrater(null);
-            setLeadIn(null);
+            setLimits(noLimits);
           }}
         />
       </Row>
       {limiting && (
         <Columns least={200}>
-          <NumberField
-            optional
-            label={proposeText.longest}
-            dimension="time"
-            value={longest}
-            onChange={setLongest}
-            error={limitError(longest)}
-          />
-          <NumberField
-            optional
-            label={proposeText.crater}
-            dimension="length"
-            value={crater}
-            onChange={setCrater}
-            error={limitError(crater)}
-          />
-          <NumberField
-            optional
-            label={proposeText.leadIn}
-            dimension="length"
-            value={leadIn}
-            onChange={setLeadIn}
-            error={limitError(leadIn)}
-          />
+          {limitFields.map(({ name, label, dimension }) => (
+            <NumberField
+              key={name}
+              optional
+              label={label}
+              dimension={dimension}
+              value={limits[name]}
+              onChange={(value) => setLimits({ ...limits, [name]: value })}
+              error={limitError(limits[name])}
+            />
+          ))}
         </Columns>
       )}
       <View role="group" aria-label={proposeText.keep}>
@@ -204,26 +188,15 @@ type AnswerProps = {
 function Answer({ state: { proposal }, proposed, now, onAccept, onDismiss }: AnswerProps) {
   const system = useUnitSystem();
   if (proposal.kind === 'none') {
-    const gives = proposal.inTheWay.map(({ sentence }) => sentence);
     return (
-      <Notice kind="caution" title={proposeText.none} live>
-        {gives.length === 0 ? (
-          <Body>{proposal.why}</Body>
-        ) : (
-          <>
-            <Body strong>{proposeText.gives}</Body>
-            {gives.map((sentence) => (
-              <Body key={sentence}>{sentence}</Body>
-            ))}
-          </>
-        )}
+      <InTheWay proposal={proposal}>
         <Small>{proposeText.nearest}</Small>
         {proposed && <Beside proposed={proposed} now={now} system={system} />}
         <Row>
           <Button label={proposeText.takeNearest} onPress={() => onAccept(proposal.nearest)} />
           <Button kind="quiet" label={proposeText.dismiss} onPress={onDismiss} />
         </Row>
-      </Notice>
+      </InTheWay>
     );
   }
   const time = quantityText(proposal.prediction.routineTime, 'time', system).text;

@@ -120,6 +120,7 @@ export function SectionPanel({
     return (
       <FigureButton
         value={value}
+        align={wide ? 'left' : 'right'}
         spoken={explainText.spoken(resultLabel[name], value)}
         onPress={() => setExplained({ name })}
       />

@@ -3,12 +3,14 @@ import { useRouter } from 'expo-router';
 import { useState } from 'react';
 import { newId } from '@/components/data/call.ts';
 import { gradesQuery } from '@/components/data/grades.ts';
+import { houseRulesQuery } from '@/components/data/house-rules.ts';
 import { machinesQuery } from '@/components/data/machines.ts';
 import { nozzlesQuery } from '@/components/data/nozzles.ts';
 import { isProblem } from '@/components/data/problem.ts';
 import { useStrategyAdd } from '@/components/data/strategies.ts';
 import { Page } from '@/components/shell/page.tsx';
 import { common } from '@/components/text/common.ts';
+import { proposeText } from '@/components/text/pierce-designer.ts';
 import { goodForText, nozzleWords, strategiesText, thicknessRangeText } from '@/components/text/pierce.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Choice } from '@/components/ui/choice.tsx';
@@ -21,14 +23,21 @@ import { Notice } from '@/components/ui/notice.tsx';
 import { NumberField } from '@/components/ui/number-field.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
-import { Cell, Row } from '@/components/ui/stack.tsx';
+import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body } from '@/components/ui/text.tsx';
 import { TextField } from '@/components/ui/text-field.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import { nameSchema } from '@/shared/basics.ts';
+import type { HouseRule } from '@/shared/house-rules.ts';
 import type { Machine, NozzleRow } from '@/shared/machines.ts';
+import { reserveRulesOf } from '@/shared/prediction.ts';
 import { strategyContentSchema } from '@/shared/strategies.ts';
-import { firstContent } from './first-content.ts';
+import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
+import type { Stage } from '@/strategy/pierce/stage.ts';
+import { firstContent, type FirstChoices } from './first-content.ts';
+import { InTheWay } from './in-the-way.tsx';
+import { groundOf, groundSame } from './use-draft-proposal.ts';
+import { useProposal } from './use-proposal.ts';
 
 const choicesSchema = strategyContentSchema.pick({
   machineRevisionId: true,
@@ -45,16 +54,17 @@ type AskedFor = {
   readonly thickness?: number | null;
 };
 
-/** How far the suggested range reaches to both sides of the plate that was asked for, µm. */
+/** How far the suggested range reaches beyond the plate that was asked for, to both sides, or typed, upwards; µm. */
 const reach = 1000;
 
-/** Begins a strategy: for which machine, grade group, thickness and nozzle. The draft starts with stages worked out for them. */
+/** Begins a strategy: for which machine, grade group, thickness and nozzle. The draft starts with what the designer proposes for them. */
 export function StrategyNewScreen(asked: AskedFor) {
   const machines = useQuery(machinesQuery());
   const nozzles = useQuery(nozzlesQuery());
   const grades = useQuery(gradesQuery());
-  const failed = [machines, nozzles, grades].find((query) => query.isError);
-  const ready = machines.data && nozzles.data && grades.data;
+  const houseRules = useQuery(houseRulesQuery());
+  const failed = [machines, nozzles, grades, houseRules].find((query) => query.isError);
+  const ready = machines.data && nozzles.data && grades.data && houseRules.data;
   return (
     <Page title={strategiesText.newTitle} measure="reading">
       {failed ? (
@@ -68,6 +78,7 @@ export function StrategyNewScreen(asked: AskedFor) {
           machines={machines.data}
           nozzles={nozzles.data}
           groups={[...new Set(grades.data.map((grade) => grade.group))]}
+          houseRules={houseRules.data.filter(({ endedAt }) => endedAt === null)}
           asked={asked}
         />
       )}
@@ -80,13 +91,16 @@ type NewFormProps = {
   machines: readonly Machine[];
   nozzles: readonly NozzleRow[];
   groups: readonly string[];
+  /** Those in force. */
+  houseRules: readonly HouseRule[];
   asked: AskedFor;
 };
 
-function NewForm({ machines, nozzles, groups, asked }: NewFormProps) {
+function NewForm({ machines, nozzles, groups, houseRules, asked }: NewFormProps) {
   const router = useRouter();
   const system = useUnitSystem();
   const add = useStrategyAdd();
+  const search = useProposal();
   const [ids] = useState(() => ({ id: newId(), revisionId: newId() }));
   const [machineRevisionId, setMachine] = useState<string | null>(
     () =>
@@ -98,11 +112,13 @@ function NewForm({ machines, nozzles, groups, asked }: NewFormProps) {
   );
   const [nozzleId, setNozzle] = useState<string | null>(nozzles.length === 1 ? (nozzles[0]?.id ?? null) : null);
   const [min, setMin] = useState<number | null>(asked.thickness ? asked.thickness - reach : null);
-  const [max, setMax] = useState<number | null>(asked.thickness ? asked.thickness + reach : null);
+  const [typedMax, setMax] = useState<{ value: number | null } | null>(null);
   const [hottestPlate, setHottest] = useState<number | null>(273.15 + 200);
   const [typedName, setName] = useState<string | null>(null);
   const [sent, setSent] = useState(false);
-  const [beyond, setBeyond] = useState(false);
+  // one thickness of plate, until another end is typed
+  const nextMax = asked.thickness ? asked.thickness + reach : min === null ? null : min + reach;
+  const max = typedMax === null ? nextMax : typedMax.value;
 
   const machine = machines.find(({ revisions }) => revisions.some(({ id }) => id === machineRevisionId));
   const profile = machine?.revisions.find(({ id }) => id === machineRevisionId)?.profile;
@@ -135,17 +151,33 @@ function NewForm({ machines, nozzles, groups, asked }: NewFormProps) {
       ? strategiesText.missing[path as keyof typeof strategiesText.missing]
       : issue.message; // `in` has just said so
   };
+  const ground = read.success && profile && nozzle ? groundOf(read.data, profile, nozzle, houseRules) : null;
   const begin = () => {
     setSent(true);
-    if (!read.success || !nameRead.success || !profile || !nozzle) return;
-    const content = begun(() => firstContent(read.data, profile, nozzle));
-    setBeyond(content === null);
-    if (content === null) return;
+    if (!read.success || !nameRead.success || !profile || !nozzle || !ground) return;
+    const save = (stages: readonly Stage[]) => addWith(read.data, nameRead.data, profile, nozzle, stages);
+    const reserve = reserveRulesOf(houseRules.map(({ expression }) => expression));
+    search.begin({ ...ground, reserve }, (proposal) => {
+      if (proposal.kind === 'ok') save(proposal.stages);
+    });
+  };
+  const addWith = (
+    choices: FirstChoices,
+    strategyName: string,
+    machineProfile: MachineProfile,
+    fitted: Nozzle,
+    stages: readonly Stage[],
+  ) =>
     add.mutate(
-      { ...ids, name: nameRead.data, content },
+      { ...ids, name: strategyName, content: firstContent(choices, machineProfile, fitted, stages) },
       { onSuccess: () => router.replace(`/revisions/${ids.revisionId}`) },
     );
-  };
+  // an answer to what stands in the form no more is none
+  const { state } = search;
+  const none =
+    state.kind === 'answered' && state.proposal.kind === 'none' && ground !== null && groundSame(ground, state.asked)
+      ? state.proposal
+      : null;
 
   return (
     <Form onSubmit={begin} label={strategiesText.newTitle}>
@@ -182,7 +214,7 @@ function NewForm({ machines, nozzles, groups, asked }: NewFormProps) {
             <ThicknessField
               label={goodForText.label.max}
               value={max}
-              onChange={setMax}
+              onChange={(value) => setMax({ value })}
               hint={strategiesText.maxHint}
               error={errorOf('thickness.max')}
             />
@@ -212,23 +244,33 @@ function NewForm({ machines, nozzles, groups, asked }: NewFormProps) {
         error={errorOf('name')}
       />
       <Body tone="softInk">{strategiesText.defaults}</Body>
-      {beyond && (
-        <Notice kind="wrong" live>
-          {strategiesText.beyond}
+      {state.kind === 'refused' && (
+        <Notice kind="wrong" title={strategiesText.beyond} live>
+          {state.why}
         </Notice>
       )}
+      {none && read.success && nameRead.success && profile && nozzle && (
+        <InTheWay proposal={none}>
+          <Row>
+            <Button
+              label={strategiesText.beginNearest}
+              busy={add.isPending}
+              onPress={() => addWith(read.data, nameRead.data, profile, nozzle, none.nearest)}
+            />
+          </Row>
+        </InTheWay>
+      )}
       {add.isError && <ErrorNotice error={add.error} />}
-      <Button kind="main" submit label={strategiesText.begin} busy={add.isPending} />
+      {state.kind === 'working' ? (
+        <Stack gap="s">
+          <Progress label={proposeText.working} value={state.share} />
+          <Row>
+            <Button label={proposeText.cancel} onPress={search.clear} />
+          </Row>
+        </Stack>
+      ) : (
+        <Button kind="main" submit label={strategiesText.begin} busy={add.isPending} />
+      )}
     </Form>
   );
-}
-
-/** The first content, or null where the model can't follow the machine that far. */
-function begun<T>(work: () => T): T | null {
-  try {
-    return work();
-  } catch (error) {
-    if (error instanceof RangeError) return null;
-    throw error;
-  }
 }

@@ -1,5 +1,6 @@
 import { useMemo } from 'react';
 import { proposeText } from '@/components/text/pierce-designer.ts';
+import type { HouseRule } from '@/shared/house-rules.ts';
 import type { Prediction, Revision, StrategyContent } from '@/shared/strategies.ts';
 import type { MachineProfile, Nozzle } from '@/strategy/machine.ts';
 import type { ReserveRules, Stage } from '@/strategy/pierce/index.ts';
@@ -58,11 +59,11 @@ export function useDraftProposal({ content, sound, profile, nozzle, rules, house
   return { ground, state, proposed, ghost, begin, clear };
 }
 
-const groundOf = (
-  content: StrategyContent,
+export const groundOf = (
+  content: Pick<StrategyContent, 'thickness' | 'hottestPlate'>,
   profile: MachineProfile,
   nozzle: Nozzle,
-  houseRules: Revision['houseRules'],
+  houseRules: readonly Pick<HouseRule, 'expression' | 'sentence' | 'blocks'>[],
 ): ProposalGround => ({
   profile,
   nozzle: { type: nozzle.type, diameter: nozzle.diameter },
@@ -71,7 +72,7 @@ const groundOf = (
   houseRules: houseRules.filter(({ blocks }) => blocks).map(({ expression, sentence }) => ({ expression, sentence })),
 });
 
-const groundSame = (a: ProposalGround, b: ProposalGround): boolean => groundText(a) === groundText(b);
+export const groundSame = (a: ProposalGround, b: ProposalGround): boolean => groundText(a) === groundText(b);
 
 const groundText = ({ profile, nozzle, thickness, hottestPlateTemperature, houseRules }: ProposalGround): string =>
   JSON.stringify([profile, nozzle, thickness, hottestPlateTemperature, houseRules]);

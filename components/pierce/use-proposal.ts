@@ -23,13 +23,16 @@ export function useProposal() {
     stop.current = null;
     setState({ kind: 'idle' });
   };
-  const begin = (asked: ProposeAsked) => {
+  /** `then` is handed the answer in the moment it comes. */
+  const begin = (asked: ProposeAsked, then?: (proposal: PierceProposal) => void) => {
     stop.current?.();
     setState({ kind: 'working', share: 0 });
     stop.current = proposalRun(asked, {
       onProgress: (share) => setState({ kind: 'working', share }),
-      onDone: (proposal) =>
-        setState(proposal.kind === 'stopped' ? { kind: 'idle' } : { kind: 'answered', proposal, asked }),
+      onDone: (proposal) => {
+        setState(proposal.kind === 'stopped' ? { kind: 'idle' } : { kind: 'answered', proposal, asked });
+        then?.(proposal);
+      },
       onRefused: (why) => setState({ kind: 'refused', why }),
     });
   };

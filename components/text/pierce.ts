@@ -363,8 +363,8 @@ export const strategiesText = {
   open: 'Open the strategy',
   newTitle: 'New strategy',
   begin: 'Begin the draft',
-  beyond:
-    'No first stages could be worked out for this machine, nozzle and thickness. Choose a thinner plate or look at the machine’s limits.',
+  beyond: 'No pierce could be worked out for this machine, nozzle and thickness',
+  beginNearest: 'Begin with the nearest',
   name: 'Name',
   nameHint: 'Suggested from what is chosen; change it as you like.',
   minHint: 'the range holds this',
@@ -377,6 +377,6 @@ export const strategiesText = {
   lacking: 'A strategy needs a machine, a nozzle and a grade',
   lackingHint: 'Add what is missing on the machines page first.',
   defaults:
-    'The draft begins with stages worked out for this machine and thickness. They are a place to start from, not a recommendation.',
+    'The draft begins with the shortest pierce that the designer finds within this machine’s limits and the plant’s rules. Every number can be changed.',
   suggested: (grade: string, range: string, machine: string) => `${grade}, ${range}, ${machine}`,
 } as const;

@@ -10,11 +10,13 @@ export function FigureButton({
   label,
   spoken,
   onPress,
+  align = 'left',
 }: {
   readonly value: string;
   readonly label?: string;
   readonly spoken: string;
   readonly onPress: () => void;
+  readonly align?: 'left' | 'right';
 }) {
   return (
     <Pressable
@@ -24,7 +26,7 @@ export function FigureButton({
       style={label === undefined ? styles.alone : [styles.cell, ringInside]}
     >
       {label === undefined ? null : <Text style={styles.label}>{label}</Text>}
-      <Text style={styles.value}>{value.replaceAll(' ', '\u00a0')}</Text>
+      <Text style={[styles.value, { textAlign: align }]}>{value.replaceAll(' ', '\u00a0')}</Text>
     </Pressable>
   );
 }

@@ -3,6 +3,10 @@ import type { Browser, Locator, Page } from 'playwright-core';
 import { launchBrowser } from '../../server/dev/browser.mjs';
 import { startDemoStack, type DemoStack } from '../../server/dev/demo-stack.mjs';
 import { startCluster } from '../../server/dev/postgres.mjs';
+import type { ProposeAsked, ProposeSaid } from '../../components/pierce/propose.worker.ts';
+import { machineEndpoints } from '../../shared/machines.ts';
+import { strategyPrediction, type PierceProposal } from '../../strategy/pierce/index.ts';
+import { NOZZLE_1_5 } from '../support/machines.ts';
 
 describe('the pierce designer on a phone', () => {
   let stack: DemoStack;
@@ -19,34 +23,16 @@ describe('the pierce designer on a phone', () => {
   });
 
   it('leads from a new strategy for 20 mm S355 to a proposed, dragged, checked and saved pierce', async () => {
-    const context = await browser.newContext({
-      viewport: { width: 390, height: 844 },
-      baseURL: stack.address,
-      hasTouch: true,
-    });
-    const page = await context.newPage();
-    page.setDefaultTimeout(30_000);
-    const noise: string[] = [];
-    page.on('pageerror', (error) => noise.push(error.message));
-    await page.goto('/sign-in');
-    await page.getByLabel('Mail address').fill('engineer@quay.example');
-    await page.getByLabel('Password', { exact: true }).fill(stack.password);
-    await page.getByRole('button', { name: 'Sign in' }).click();
-    await page.waitForURL((url) => url.pathname !== '/sign-in');
+    const { page, noise } = await signIn();
 
-    await page.goto('/strategies/new');
-    await page.getByLabel('Machine and its revision').selectOption({ label: 'No. 2, 10 kW, revision 1' });
-    await page.getByRole('group', { name: 'Grade group' }).getByRole('radio', { name: 'S355', exact: true }).check();
-    await page.getByLabel('Thinnest plate').fill('19.5');
-    await page.getByLabel('Thickness the range ends before').fill('20.5');
-    await page.getByLabel('Hottest plate').fill('150');
-    await page.getByLabel('Nozzle', { exact: true }).selectOption({ index: 1 });
-    await page.getByLabel('Name', { exact: true }).fill('Designed on a phone');
-    await page.getByRole('button', { name: 'Begin the draft' }).click();
-    await page.waitForURL('**/revisions/*');
+    await beginStrategy(page, { name: 'Designed on a phone', from: '19.5', to: '20.5' });
 
-    // The designer proposes in a worker; the proposal is drawn behind the draft before it is taken.
+    // The draft is a proposal already: the shortest pierce that keeps the plant's rules.
+    await page.getByText(/^All \d+ checks are in order\.$/).waitFor();
+
+    // More reserve is wished for. The designer proposes in a worker; it is drawn behind the draft before it is taken.
     await page.getByRole('button', { name: 'Propose', exact: true }).click();
+    await page.getByLabel('Reserve on a cold plate, at least').fill('2.6');
     await page.getByRole('button', { name: 'Work it out' }).click();
     await page.getByText(/^Proposed: \d stages over/).waitFor();
     await page.getByTestId('section-ghost').waitFor();
@@ -93,9 +79,106 @@ describe('the pierce designer on a phone', () => {
     expect(await sectionWords(page)).toBe(shown);
     expect(await peakOf(knot)).toBe(adjusted);
     expect(noise).toEqual([]);
-    await context.close();
+    await page.context().close();
   });
+
+  it('computes in Chromium, in the worker it ships, what the server computes, each number to a billionth of itself', async () => {
+    const { page } = await signIn();
+    const shipped = new Promise<string>((found) => page.once('worker', (worker) => found(worker.url())));
+    await beginStrategy(page, { name: 'Computed in both places', from: '16', to: '18' });
+    const code = await shipped;
+
+    const read = await page.context().request.get('/api/machines');
+    const machines = machineEndpoints.list.answer.parse(await read.json()).items;
+    const profiles = machines.flatMap(({ revisions }) => revisions.slice(0, 1).map((revision) => revision.profile));
+    expect(profiles.length).toBeGreaterThan(1);
+    let compared = 0;
+    for (const profile of profiles) {
+      for (const plate of [0.012, 0.0195]) {
+        const asked: ProposeAsked = {
+          profile,
+          nozzle: NOZZLE_1_5,
+          thickness: { min: plate, max: plate + 0.002 },
+          hottestPlateTemperature: 430,
+          reserve: { cold: 2, hot: 2.2 },
+          houseRules: [],
+        };
+        const proposal = await proposedInBrowser(page, code, asked);
+        if (proposal.kind !== 'ok') continue;
+        const { stages, prediction } = proposal;
+        compared += numbersAlike(prediction, strategyPrediction({ ...asked, stages }));
+      }
+    }
+    // traces of depth among them, cold and hot
+    expect(compared).toBeGreaterThan(1000);
+    await page.context().close();
+  });
+
+  async function signIn() {
+    const context = await browser.newContext({
+      viewport: { width: 390, height: 844 },
+      baseURL: stack.address,
+      hasTouch: true,
+    });
+    const page = await context.newPage();
+    page.setDefaultTimeout(30_000);
+    const noise: string[] = [];
+    page.on('pageerror', (error) => noise.push(error.message));
+    await page.goto('/sign-in');
+    await page.getByLabel('Mail address').fill('engineer@quay.example');
+    await page.getByLabel('Password', { exact: true }).fill(stack.password);
+    await page.getByRole('button', { name: 'Sign in' }).click();
+    await page.waitForURL((url) => url.pathname !== '/sign-in');
+    return { page, noise };
+  }
 });
+
+/** A new strategy for S355 on the 10 kW machine, up to its draft. */
+async function beginStrategy(page: Page, { name, from, to }: { name: string; from: string; to: string }) {
+  await page.goto('/strategies/new');
+  await page.getByLabel('Machine and its revision').selectOption({ label: 'No. 2, 10 kW, revision 1' });
+  await page.getByRole('group', { name: 'Grade group' }).getByRole('radio', { name: 'S355', exact: true }).check();
+  await page.getByLabel('Thinnest plate').fill(from);
+  await page.getByLabel('Thickness the range ends before').fill(to);
+  await page.getByLabel('Hottest plate').fill('150');
+  await page.getByLabel('Nozzle', { exact: true }).selectOption({ index: 1 });
+  await page.getByLabel('Name', { exact: true }).fill(name);
+  await page.getByRole('button', { name: 'Begin the draft' }).click();
+  await page.waitForURL('**/revisions/*');
+}
+
+/** What the built worker at this address answers, computed by the browser. */
+const proposedInBrowser = (page: Page, code: string, asked: ProposeAsked): Promise<PierceProposal> =>
+  page.evaluate(
+    ([address, question]) =>
+      new Promise<PierceProposal>((answered, failed) => {
+        const worker = new Worker(address);
+        worker.onerror = (event) => failed(new Error(event.message));
+        worker.onmessage = ({ data }: MessageEvent<ProposeSaid>) => {
+          if (data.kind === 'done') answered(data.proposal);
+          if (data.kind === 'refused') failed(new Error(data.why));
+        };
+        worker.postMessage(question);
+      }),
+    [code, asked] as const,
+  );
+
+/** Expects every number of both, wherever it stands, to be the same to 1e-9 of itself; how many there were. */
+function numbersAlike(browser: unknown, server: unknown, at = 'prediction'): number {
+  if (typeof server === 'number') {
+    const apart = Math.abs(Number(browser) - server);
+    expect(apart, `${at}: ${String(browser)} and ${server}`).toBeLessThanOrEqual(1e-9 * Math.abs(server));
+    return 1;
+  }
+  if (typeof server !== 'object' || server === null) {
+    expect(browser, at).toBe(server);
+    return 0;
+  }
+  const entries = Object.entries(server);
+  expect(Object.keys(browser ?? {}), at).toEqual(entries.map(([name]) => name));
+  const other = new Map(Object.entries(browser ?? {}));
+  return entries.reduce((sum, [name, value]) => sum + numbersAlike(other.get(name), value, `${at}.${name}`), 0);
+}
 
 const sectionWords = (page: Page) =>
   page
