@@ -14,7 +14,7 @@ export type DrawnPaths = {
   leadIns: readonly Path[];
   plate: Box | null;
   outline: readonly Path[];
-  traces: readonly (Path & { readonly id: string; readonly kind: 'chosen' | 'way' })[];
+  traces: readonly (Path & { readonly id: string; readonly kind: 'chosen' | 'way' | 'ease' })[];
 };
 
 /** Loops and slugs smaller than this are not worth drawing, px. */

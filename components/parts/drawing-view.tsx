@@ -36,25 +36,28 @@ export type DrawingControl = {
   goTo: (place: Point, metres: number) => void;
 };
 
-type Path = { readonly segments: readonly Segment[] };
+/** Told apart by line: heavy for what is chosen, dotted for a way between cuts, long dashes for what is eased. */
+export type DrawnTrace = 'chosen' | 'way' | 'ease';
+
+type Drawn = { readonly segments: readonly Segment[] };
 
 type DrawingViewProps = {
   /** What the drawing shows, for who doesn't see it. */
   label: string;
-  contours: readonly Path[];
+  contours: readonly Drawn[];
   /** Chains that don't close: dashed, they bound nothing. */
-  open?: readonly Path[];
+  open?: readonly Drawn[];
   /** Plate around the part. */
   plate?: Box | null;
   /** Its edge and openings where it is no rectangle. */
-  outline?: readonly Path[];
+  outline?: readonly Drawn[];
   /** Thin lines over the drawing: what is chosen, the way between cuts. They don't change what is in view. */
-  traces?: readonly (Path & { id: string; kind: 'chosen' | 'way' })[];
+  traces?: readonly (Drawn & { id: string; kind: DrawnTrace })[];
   /** Loops of the corner plan; the chosen one is drawn heavier. */
-  loops?: readonly (Path & { id: string })[];
+  loops?: readonly (Drawn & { id: string })[];
   /** What loops cut out and let fall. */
-  slugs?: readonly Path[];
-  leadIns?: readonly Path[];
+  slugs?: readonly Drawn[];
+  leadIns?: readonly Drawn[];
   marks?: readonly DrawingMark[];
   chosen?: string | null;
   onChoose?: (id: string | null) => void;
@@ -273,7 +276,7 @@ type StillProps = {
   open: string;
   plate: string;
   outline: string;
-  traces: readonly { id: string; kind: 'chosen' | 'way'; data: string }[];
+  traces: readonly { id: string; kind: DrawnTrace; data: string }[];
   leadIns: string;
   slugs: string;
   loops: readonly { id: string; data: string }[];
@@ -330,9 +333,7 @@ const Still = memo(function Still({
             testID={`drawing-${kind}`}
             d={data}
             fill="none"
-            stroke={kind === 'chosen' ? roles.ember : roles.softInk}
-            strokeWidth={kind === 'chosen' ? 3 : 1.2}
-            strokeDasharray={kind === 'chosen' ? undefined : '2 4'}
+            {...traceLines[kind]}
             vectorEffect="non-scaling-stroke"
           />
         ))}
@@ -361,6 +362,12 @@ const Still = memo(function Still({
     </>
   );
 });
+
+const traceLines = {
+  chosen: { stroke: roles.ember, strokeWidth: 3 },
+  way: { stroke: roles.softInk, strokeWidth: 1.2, strokeDasharray: '2 4' },
+  ease: { stroke: roles.ember, strokeWidth: 3, strokeDasharray: '9 3' },
+} as const satisfies Record<DrawnTrace, object>;
 
 function Stroke({ data, colour, width, dash }: { data: string; colour: string; width: number; dash?: string }) {
   if (data === '') return null;
