@@ -1,17 +1,19 @@
-import { millimetres } from '../../units/said.ts';
 import type { Contour } from '../contour.ts';
+import { contourArea } from '../contour.ts';
 import { contourCorners, cornerOfPath } from '../corner.ts';
 import type { CutPath, CutPiece, CutRun } from '../cut-path.ts';
 import { segmentPointDistance } from '../distance.ts';
-import type { Box, Point } from '../point.ts';
+import type { Point } from '../point.ts';
 import { pointDistance } from '../point.ts';
 import type { Segment } from '../segment.ts';
 import { segmentEnd, segmentLength, segmentPart, segmentStart } from '../segment.ts';
 import type { LeadIn } from './lead-in.ts';
+import { narrowFeatures } from './narrow.ts';
+import { gapsBetweenContours, narrowSentence } from './narrow-said.ts';
 import type { OffsetLoop } from './offset.ts';
 import { kerfOffset } from './offset.ts';
 import type { OutsideCorner } from './parallel.ts';
-import type { LeadInRule, StartPath } from './pierce-place.ts';
+import type { CutPlate, LeadInRule, StartPath } from './pierce-place.ts';
 import { piercePlace } from './pierce-place.ts';
 import { segmentIndex } from './segment-index.ts';
 import { shareAt } from './share.ts';
@@ -40,7 +42,8 @@ export type CornerInsert = {
       readonly as: 'loop' | 'contour';
       readonly segments: readonly Segment[];
     }
-  | { readonly kind: 'dwell'; readonly duration: number } // s
+  /** The wait, s, with the beam off: in the path's corner when no other place of the path is given. */
+  | { readonly kind: 'dwell'; readonly duration: number; readonly at?: Point }
 );
 
 export type CutPathRequest = {
@@ -51,8 +54,8 @@ export type CutPathRequest = {
   /** How the path goes round corners without an insert. */
   readonly outside: OutsideCorner;
   readonly leadIn: LeadInRule;
-  /** Outline of the plate, m, or null when nothing need keep to one. */
-  readonly plate: Box | Contour | null;
+  /** What there is to cut from, m, or null when nothing need keep to it. */
+  readonly plate: CutPlate | null;
   /** Cut this far past the start again, m; 0 ends where it began. */
   readonly overcut?: number;
   /** Where the programmer wants a contour's cut to begin, m, by contour id. */
@@ -62,7 +65,8 @@ export type CutPathRequest = {
 /** Something the programmer must look at; a contour that can't be cut is left out of the path. */
 export type CutPathProblem = {
   readonly contourId: string;
-  readonly kind: 'offset' | 'corner' | 'pierce' | 'lead-in';
+  /** The scrap is narrower than the kerf; a treatment has no path; no room for a pierce; a lead-in shorter than needed. */
+  readonly kind: 'narrow' | 'corner' | 'pierce' | 'lead-in';
   readonly at: Point; // m
   readonly why: string;
   /** Whether the contour is left out of the path for it. */
@@ -100,6 +104,7 @@ export function cutPathOf(request: CutPathRequest): CutPathPlan {
       contour.segments.map((segment) => ({ segment, of: { contourId: id, name } })),
     ),
   );
+  problems.push(...gapsBetweenContours(contours, edges, kerfWidth));
   const loops = segmentIndex(
     rings.flatMap(({ ring }) =>
       ring.segments.flatMap((segment, i) => {
@@ -174,35 +179,34 @@ function ringsOf(contour: CutContour, request: CutPathRequest, problems: CutPath
   const { kerfWidth, outside } = request;
   const own = request.inserts.filter(({ contourId }) => contourId === contour.id);
   const loops = kerfOffset(contour.contour, kerfWidth, { outside, sharpAt: new Set(own.map(({ index }) => index)) });
-  if (loops.length === 0) {
-    const at = segmentStart(
-      contour.contour.segments[0] ?? { kind: 'line', start: { x: 0, y: 0 }, end: { x: 0, y: 0 } },
-    );
-    problems.push({
-      contourId: contour.id,
-      kind: 'offset',
-      at,
-      why: `${contour.name} is narrower than the kerf of ${millimetres(kerfWidth)}`,
-      leftOut: true,
-    });
+  for (const feature of narrowFeatures(contour.contour, kerfWidth, loops)) {
+    const why = narrowSentence(contour.name, feature, kerfWidth);
+    problems.push({ contourId: contour.id, kind: 'narrow', at: feature.at, why, leftOut: feature.kind === 'hole' });
   }
   const placed = new Set<CornerInsert>();
-  const rings = loops.map((loop, i): NamedRing => {
-    const ring = ringOf(contour, loop, own, kerfWidth, placed);
-    const name = loops.length > 1 ? `${contour.name}, piece ${i + 1} of ${loops.length}` : contour.name;
-    return { contour, ring, name, closedIn: contour.role === 'hole' };
-  });
-  for (const insert of own) {
-    if (placed.has(insert) || loops.length === 0) continue;
+  const rings = loops.map((loop): Omit<NamedRing, 'name'> => ({
+    contour,
+    ring: ringOf(contour, loop, own, kerfWidth, placed),
+    // the scrap lies within: a hole, or what a neck shuts off outside an outline
+    closedIn: contourArea(loop.contour) < 0,
+  }));
+  for (const insert of loops.length > 0 ? own : []) {
+    if (placed.has(insert)) continue;
     problems.push({
       contourId: contour.id,
       kind: 'corner',
       at: segmentStart(contour.contour.segments[insert.index] ?? contour.contour.segments[0] ?? never()),
-      why: `${insert.name} is left out: its place is not on the path of ${contour.name}`,
+      why: `${insert.name} is left out: the path of ${contour.name} does not come there`,
       leftOut: false,
     });
   }
-  return rings;
+  // what a neck shuts off is cut before what lies around it
+  return rings
+    .sort((a, b) => Number(b.closedIn) - Number(a.closedIn))
+    .map((ring, i) => ({
+      ...ring,
+      name: rings.length > 1 ? `${contour.name}, piece ${i + 1} of ${rings.length}` : contour.name,
+    }));
 }
 
 function never(): never {
@@ -227,7 +231,7 @@ function ringOf(
     const [from, to] =
       insert.kind === 'path'
         ? [segmentStart(insert.segments[0] ?? never()), segmentEnd(insert.segments.at(-1) ?? never())]
-        : [expected, expected];
+        : [insert.at ?? expected, insert.at ?? expected];
     if (!from || !to) continue;
     const changed = withInsert(segments, insert, from, to);
     if (!changed) continue;

@@ -1,12 +1,13 @@
 import { millimetres } from '../../units/said.ts';
 import type { Contour } from '../contour.ts';
+import { contourContains } from '../contour.ts';
 import { smallestBreak } from '../corner.ts';
 import { segmentDistance, segmentPointDistance } from '../distance.ts';
 import { leavesPlate } from '../loop-fit.ts';
 import type { Box, Point } from '../point.ts';
 import { pointCross, pointDistance, pointDot } from '../point.ts';
 import type { Segment } from '../segment.ts';
-import { lineBetween, segmentLength, segmentPart, segmentPointAt, segmentTangentAt } from '../segment.ts';
+import { lineBetween, segmentLength, segmentPart, segmentPointAt, segmentStart, segmentTangentAt } from '../segment.ts';
 import { largestCircleInside } from './inscribed.ts';
 import type { LeadIn, LeadInShape, StartPlace } from './lead-in.ts';
 import { straightLeadIn, tangentLeadIn } from './lead-in.ts';
@@ -23,10 +24,13 @@ export type LeadInRule = {
   readonly clearance: number;
 };
 
+/** What there is to cut from: a rectangle, an outline, or an outline with what was cut out of it before. m */
+export type CutPlate = Box | Contour | { readonly edge: Contour; readonly openings: readonly Contour[] };
+
 /** What a lead-in must stay clear of on the plate. Lengths in m. */
 export type PierceSurroundings = {
   readonly kerfWidth: number;
-  readonly plate: Box | Contour | null;
+  readonly plate: CutPlate | null;
   /** Finished edges of all contours. */
   readonly edges: SegmentIndex<{ readonly contourId: string; readonly name: string }>;
   /** What is cut beside the contours: loops at corners. */
@@ -251,7 +255,8 @@ function inTheWay(
   });
 
   const away =
-    leavesPlate(pierce, plate, crater + clearance) ?? leavesPlateAny(leadIn.segments, plate, half + clearance);
+    offPlate(pierce, plate, crater + clearance) ??
+    leadIn.segments.map((segment) => offPlate(segment, plate, half + clearance)).find((at) => at !== null);
   if (away) return block('plate', away, `the plate's edge is nearer than the crater and ${millimetres(clearance)}`);
 
   // its own path: the pierce by its distance, the way in by the clearance except where it joins
@@ -316,10 +321,17 @@ function bodyOf({ segments }: LeadIn, end: number): Segment[] {
   return slantedEnd < length ? [...before, segmentPart(last, 0, 1 - slantedEnd / length)] : before;
 }
 
-const leavesPlateAny = (segments: readonly Segment[], plate: Box | Contour | null, needed: number): Point | null => {
-  for (const segment of segments) {
-    const at = leavesPlate(segment, plate, needed);
-    if (at) return at;
+/** Where a segment is nearer to the plate's edge or to an opening in it than `needed` m, or off the plate; null where it is not. */
+function offPlate(segment: Segment, plate: CutPlate | null, needed: number): Point | null {
+  if (plate === null || !('edge' in plate)) return leavesPlate(segment, plate, needed);
+  const away = leavesPlate(segment, plate.edge, needed);
+  if (away) return away;
+  for (const opening of plate.openings) {
+    if (contourContains(opening, segmentStart(segment))) return segmentStart(segment);
+    for (const edge of opening.segments) {
+      const found = segmentDistance(segment, edge);
+      if (found.distance < needed - rounding) return found.onSecond;
+    }
   }
   return null;
-};
+}

@@ -39,7 +39,7 @@ type Stretch = {
 export type TrimmedLoop = { readonly pieces: readonly ParallelPiece[] };
 
 /** Places nearer than this share of the distance are one; a parallel with less free scrap on its right than half of it is none. */
-const nearness = 1e-6;
+const nearness = 1e-7;
 
 /**
  * The parallels of a contour without whatever lies nearer to it than `distance` m, inside the part or behind a sharp corner, joined to closed loops; or null
@@ -176,7 +176,8 @@ function freeSpace(
       if (kite && kiteContains(kite, place)) return false;
     }
     let inside = false;
-    for (const i of edges.search(x, y, Infinity, y)) {
+    // a little higher than the ray: an arc's end is where the next segment starts, up to rounding outside its own box
+    for (const i of edges.search(x, y - tolerance, Infinity, y + tolerance)) {
       const segment = contour[i];
       const to = starts[(i + 1) % starts.length];
       if (segment && to && segmentCrossesRay(segment, to, place)) inside = !inside;
@@ -324,7 +325,14 @@ function mergedPieces(loop: readonly Stretch[], pieces: readonly ParallelPiece[]
     merged[0] = closing;
     merged.pop();
   }
-  return merged;
+  return merged.map((part, i) => welded(part, merged.at(i - 1) ?? part, merged[(i + 1) % merged.length] ?? part));
+}
+
+/** A line whose ends are brought to those of its neighbours: an arc's exactly, and another line's start exactly. */
+function welded(part: ParallelPiece, before: ParallelPiece, after: ParallelPiece): ParallelPiece {
+  if (part.segment.kind === 'arc' || before === part) return part;
+  const start = before.segment.kind === 'arc' ? segmentEnd(before.segment) : part.segment.start;
+  return { ...part, segment: { kind: 'line', start, end: segmentStart(after.segment) } };
 }
 
 /** Two lines of which the second goes straight on, as one; null for anything else, and for two different edges that happen to be in line. */
