@@ -6,7 +6,7 @@ export const tableGrants: Readonly<Record<string, readonly string[]>> = {
   plants: ['SELECT'],
   users: ['SELECT (id, mail, name)'],
   memberships: ['SELECT', 'INSERT', 'UPDATE (role, may_approve, ended_at, version)'],
-  machines: ['SELECT', 'INSERT', 'UPDATE (version)'],
+  machines: ['SELECT', 'INSERT', 'UPDATE (version, block_unit, block_header, block_footer)'],
   machine_revisions: ['SELECT', 'INSERT'],
   grades: ['SELECT', 'INSERT'],
   nozzles: ['SELECT', 'INSERT'],

@@ -28,6 +28,7 @@ import type { Services } from './services.ts';
 import { sessionRoutes } from './sessions/routes.ts';
 import { inlineScriptHashes, webApp } from './static.ts';
 import { strategyRoutes } from './strategies/routes.ts';
+import { takeAwayRoutes } from './take-away/routes.ts';
 
 /** Every route of the API on a router of its own, which a test can walk. */
 export function apiRouter(services: Services): Router {
@@ -49,6 +50,7 @@ export function apiRouter(services: Services): Router {
   partRoutes(mount);
   layoutRoutes(mount);
   cornerPlanRoutes(mount);
+  takeAwayRoutes(mount);
   reportRoutes(mount);
   recordRoutes(mount);
   return router;

@@ -15,6 +15,7 @@ import { createDrawingReader } from './drawings/reader.ts';
 import { createFileStore } from './files/store.ts';
 import { sweepStrayFiles } from './files/sweep.ts';
 import type { Services } from './services.ts';
+import { createCutFiles } from './take-away/cut-files.ts';
 
 /** From the signal until the process is gone at the latest, ms. */
 const longestGoodbye = 10_000;
@@ -43,6 +44,7 @@ export async function serve(env: Environment = process.env): Promise<Serving> {
       () => services.files.close(),
       () => services.passwords.close(),
       () => services.drawings.close(),
+      () => services.cutFiles.close(),
     );
 
     const sweep = () => void sweepAll(services);
@@ -88,6 +90,7 @@ function servicesFor(config: Config, database: Database, log: Logger, closing: (
     passwords: createPasswords(),
     tokens: createTokens(config.sessionSecret),
     drawings: createDrawingReader(),
+    cutFiles: createCutFiles(),
     log,
     now: () => new Date(),
     secure: config.tls !== null,

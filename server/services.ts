@@ -4,6 +4,7 @@ import type { Passwords } from './auth/passwords.ts';
 import type { Tokens } from './auth/token.ts';
 import type { DrawingReader } from './drawings/reader.ts';
 import type { FileStore } from './files/store.ts';
+import type { CutFiles } from './take-away/cut-files.ts';
 
 /** What the routes work with, made once by whoever starts the server. */
 export type Services = {
@@ -12,6 +13,7 @@ export type Services = {
   readonly passwords: Passwords;
   readonly tokens: Tokens;
   readonly drawings: DrawingReader;
+  readonly cutFiles: CutFiles;
   readonly log: Logger;
   readonly now: () => Date;
   /** Cookies for TLS only, and the headers that go with it. */

@@ -11,6 +11,7 @@ import { healthEndpoints, recordEndpoints } from './record.ts';
 import { reportEndpoints } from './reports.ts';
 import { sessionEndpoints } from './sessions.ts';
 import { reviewEndpoints, revisionEndpoints, strategyEndpoints } from './strategies.ts';
+import { blockFrameEndpoints, cutPathEndpoints } from './take-away.ts';
 
 /** Every endpoint by name, for the description and the tests that walk them all. Screens import their own noun instead. */
 export const endpoints: Readonly<Record<string, Endpoint>> = Object.fromEntries(
@@ -30,6 +31,8 @@ export const endpoints: Readonly<Record<string, Endpoint>> = Object.fromEntries(
     part: partEndpoints,
     layout: layoutEndpoints,
     cornerPlan: cornerPlanEndpoints,
+    cutPath: cutPathEndpoints,
+    blockFrame: blockFrameEndpoints,
     report: reportEndpoints,
     record: recordEndpoints,
     service: healthEndpoints,

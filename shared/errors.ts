@@ -17,6 +17,7 @@ export const problemCodes = {
   stale: { status: 412, title: 'Somebody changed this meanwhile' },
   'too-large': { status: 413, title: 'The file is too large' },
   'bad-drawing': { status: 422, title: 'The drawing could not be read' },
+  'no-cut-path': { status: 422, title: 'This plan has no cut path' },
   'bad-photo': { status: 422, title: 'The picture could not be read' },
   'key-reused': { status: 422, title: 'This Idempotency-Key belongs to another request' },
   'version-missing': { status: 428, title: 'If-Match is needed' },

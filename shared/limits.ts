@@ -18,6 +18,8 @@ export const limits = {
   ruleExpression: 200,
   ruleSentence: 300,
   rules: 50,
+  /** The plant's own lines before the blocks of a path, and those after them, characters. */
+  blockLines: 2000,
   /** A drawing's file, bytes. */
   drawingBytes: 10 * 1024 * 1024,
   /** A photo as it comes from a phone, bytes. */

@@ -37,6 +37,8 @@ const byRole = {
   'layout.read': programmersUp,
   'layout.write': programmersUp,
   'cornerPlan.write': programmersUp,
+  /** Take a plan’s cut path away as a file, and read what the machine’s blocks begin and end with. */
+  'cutPath.take': programmersUp,
   /** Operators read approved strategies on the plate card, never drafts. */
   'strategy.read': programmersUp,
   'strategy.write': engineersUp,

@@ -3,6 +3,7 @@ const events: Readonly<Record<string, string>> = {
   'member.added': 'added a person',
   'member.changed': 'changed what a person may do',
   'machine.added': 'added a machine',
+  'machine.blockFrameWritten': 'wrote what a machine’s blocks begin and end with',
   'machine.revised': 'wrote a machine’s next revision',
   'nozzle.added': 'added a nozzle',
   'grade.added': 'added a grade',

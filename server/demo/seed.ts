@@ -25,6 +25,7 @@ import { createPasswords } from '../auth/passwords.ts';
 import { createTokens } from '../auth/token.ts';
 import { readConfig, type Environment } from '../config.ts';
 import { createDrawingReader } from '../drawings/reader.ts';
+import { createCutFiles } from '../take-away/cut-files.ts';
 import { createFileStore } from '../files/store.ts';
 import { createClient, listenPrivately, type Client } from './client.ts';
 
@@ -41,6 +42,7 @@ export async function seedDemo(env: Environment): Promise<void> {
   if (!ownerUrl || !password) throw new Error('Set DATABASE_OWNER_URL and DEMO_PASSWORD to fill in the demo plants.');
   const passwords = createPasswords();
   const drawings = createDrawingReader();
+  const cutFiles = createCutFiles();
   const files = createFileStore(config.s3);
   const log = pino({ level: 'warn' });
   const { database, close } = openDatabase(config.databaseUrl, (error) => log.warn({ err: error }, 'connection lost'));
@@ -50,6 +52,7 @@ export async function seedDemo(env: Environment): Promise<void> {
     passwords,
     tokens: createTokens(config.sessionSecret),
     drawings,
+    cutFiles,
     log,
     now: () => new Date(),
     secure: false,
@@ -66,7 +69,7 @@ export async function seedDemo(env: Environment): Promise<void> {
     for (const plant of ['upland', 'quay'] as const) await fillPlant(plant, door.base, password);
   } finally {
     await door.close();
-    await Promise.all([close(), passwords.close(), drawings.close()]);
+    await Promise.all([close(), passwords.close(), drawings.close(), cutFiles.close()]);
     files.close();
   }
 }

@@ -13,6 +13,7 @@ import { partEndpoints } from '../../shared/parts.ts';
 import { can, roles, type Role } from '../../shared/policy.ts';
 import { recordEndpoints } from '../../shared/record.ts';
 import { reportEndpoints } from '../../shared/reports.ts';
+import { blockFrameEndpoints } from '../../shared/take-away.ts';
 import { FOUR_KILOWATT } from '../support/machines.ts';
 import {
   made,
@@ -403,6 +404,14 @@ const matrix: Readonly<Record<string, Cell>> = {
     const programmer = await plant.as('programmer');
     const { version } = await made(programmer.call(cornerPlanEndpoints.get, { params: { planId } }));
     return { params: { planId }, body: { revisionId: approvedId, ...choices }, version };
+  },
+  'cutPath.take': ({ planId }) => ({ params: { planId }, query: { as: 'dxf', unit: 'inch' } }),
+  'blockFrame.get': ({ plant }) => ({ params: { machineId: plant.machineId } }),
+  'blockFrame.change': async ({ plant }) => {
+    const engineer = await plant.as('engineer');
+    const params = { machineId: plant.machineId };
+    const { version } = await made(engineer.call(blockFrameEndpoints.get, { params }));
+    return { params, body: { unit: 'inch', header: 'G70', footer: '' }, version };
   },
   'report.list': () => ({}),
   'report.get': ({ reportId }) => ({ params: { reportId } }),

@@ -14,6 +14,7 @@ const added: Readonly<Record<Role, readonly Action[]>> = {
     'layout.read',
     'layout.write',
     'cornerPlan.write',
+    'cutPath.take',
     'strategy.read',
   ],
   engineer: [

@@ -13,6 +13,7 @@ import { startFakeS3 } from '../../server/dev/fake-s3.mjs';
 import { createDrawingReader } from '../../server/drawings/reader.ts';
 import { createFileStore } from '../../server/files/store.ts';
 import type { Services } from '../../server/services.ts';
+import { createCutFiles } from '../../server/take-away/cut-files.ts';
 import type { AnswerOf, Endpoint } from '../../shared/endpoint.ts';
 import { sessionEndpoints } from '../../shared/sessions.ts';
 import { testDatabase, type TestDatabase } from './database.ts';
@@ -76,12 +77,14 @@ export async function startTestServer(change: Partial<Services> = {}): Promise<T
   const files = createFileStore(config.s3);
   const passwords = createPasswords(4);
   const drawings = createDrawingReader();
+  const cutFiles = createCutFiles();
   const services: Services = {
     database: drizzled,
     files,
     passwords,
     tokens: createTokens(config.sessionSecret),
     drawings,
+    cutFiles,
     log: pino({ level: 'silent' }),
     now: () => new Date(),
     secure: false,
@@ -114,7 +117,7 @@ export async function startTestServer(change: Partial<Services> = {}): Promise<T
         server.close(() => resolve());
         server.closeAllConnections();
       });
-      await Promise.all([passwords.close(), drawings.close(), closePool()]);
+      await Promise.all([passwords.close(), drawings.close(), cutFiles.close(), closePool()]);
       files.close();
       await bucket.stop();
       rmSync(path.join(import.meta.dirname, '../../.house', folder), { recursive: true, force: true });

@@ -13,7 +13,7 @@ export type BlockFrame = { readonly header: string; readonly footer: string };
 /** Digits after the point: 0.05 µm at most in millimetres, 0.02 µm in inches. */
 const digits = { mm: 4, inch: 6 } as const;
 /** Pieces of a run join closer than this, m; further apart, the machine would go where the path does not. */
-const joinTolerance = 1e-7;
+const joinTolerance = 5e-7;
 /**
  * An arc that stands off its chord by less than this, m, is written as a line: of one so short or so flat, rounded ends may come to lie in
  * the wrong order on the circle, and then it would be run nearly all the way round.

@@ -1,0 +1,40 @@
+import { URL } from 'node:url';
+import { AppError } from '../errors.ts';
+import { createPool, WorkerRefusal } from '../workers/pool.ts';
+import type { FileAnswer, FileAsked } from './file.ts';
+
+/** Makes the files of cut paths away from the thread that answers requests, within a time and a memory. */
+export type CutFiles = {
+  /** 422 with a sentence when a contour can't be cut. */
+  make(asked: FileAsked): Promise<Uint8Array>;
+  close(): Promise<void>;
+};
+
+/** Time for one file, s. A sheet of 2,000 corners takes a tenth of it. */
+const seconds = 20;
+
+export function createCutFiles(): CutFiles {
+  const module = new URL('./cut-file.worker.ts', import.meta.url);
+  const pool = createPool<FileAsked, FileAnswer>({
+    module,
+    threads: 1,
+    waiting: 20,
+    memory: 384,
+    deadline: seconds * 1000,
+  });
+  return {
+    make: async (asked) => {
+      const answer = await pool.ask(asked).catch((error: unknown) => {
+        if (!(error instanceof WorkerRefusal)) throw error;
+        if (error.why === 'busy') throw new AppError('unavailable', 'Too many files at once.', { retryAfter: 5 });
+        throw new AppError(
+          'unavailable',
+          `The file could not be made within ${seconds} s: the plan has too much in it.`,
+        );
+      });
+      if (answer.kind === 'none') throw new AppError('no-cut-path', answer.why);
+      return answer.bytes;
+    },
+    close: () => pool.close(),
+  };
+}
