@@ -178,5 +178,8 @@ function worstEruption(cases: readonly PierceCase[]): Omit<StrategyEruption, 'li
   );
   const [first, ...others] = all;
   if (first === undefined) throw new RangeError('a pierce without stages has no eruption index');
-  return { ...others.reduce((worst, next) => (next.index > worst.index ? next : worst), first), perStage };
+  // A stage erupts alike on every plate that it finds closed: which of them is named must not hang on rounding, which engines do
+  // differently.
+  const worse = (next: number, worst: number) => next > worst * (1 + 1e-9);
+  return { ...others.reduce((worst, next) => (worse(next.index, worst.index) ? next : worst), first), perStage };
 }
