@@ -13,7 +13,7 @@ import {
 import { endpoint } from './endpoint.ts';
 import { limits } from './limits.ts';
 
-export const drawingUnits = ['mm', 'cm', 'dm', 'm', 'km', 'µm', 'inch', 'foot', 'yard', 'mil'] as const;
+export const drawingUnits = ['mm', 'cm', 'dm', 'm', 'km', 'µm', 'inch', 'foot', 'yard', 'mil', 'px'] as const;
 
 export const segmentSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('line'), start: pointSchema, end: pointSchema }),
@@ -53,6 +53,14 @@ export const drawingQuestionSchema = z.discriminatedUnion('kind', [
   }),
 ]);
 
+/** Something left out or repaired: how often, where the first times, and the largest of its sizes (a gap's width, a length), m. */
+const notedSchema = z.object({
+  what: z.string(),
+  count: z.number().int(),
+  at: z.array(pointSchema).default([]),
+  largest: z.number().nullable().default(null),
+});
+
 export const drawingReadingSchema = z.object({
   unit: z.enum(drawingUnits).nullable(),
   gapTolerance: z.number(), // m
@@ -61,12 +69,18 @@ export const drawingReadingSchema = z.object({
   openChains: z.array(z.object({ layer: z.string(), length: z.number(), segments: z.array(segmentSchema) })),
   layers: z.array(z.object({ name: z.string(), pieces: z.number().int(), taken: z.boolean() })),
   /** Named and not part of the geometry: text, dimensions, hatches. */
-  leftOut: z.array(z.object({ what: z.string(), count: z.number().int() })),
-  repaired: z.array(z.object({ what: z.string(), count: z.number().int() })),
+  leftOut: z.array(notedSchema),
+  repaired: z.array(notedSchema),
+  /** Geometry that was left out, so that it can be shown where it was: of layers not taken, page rectangles. */
+  aside: z.array(z.object({ what: z.string(), segments: z.array(segmentSchema) })).default([]),
   /** Largest distance between a curve and the arcs that stand for it, m. */
   deviation: z.number(),
   /** Places where contours cross each other or themselves: such a drawing is no part yet. */
   crossings: z.array(pointSchema).default([]),
+  /** Places where more than two pieces meet: there the way on was chosen. */
+  branches: z.array(pointSchema).default([]),
+  /** So many pieces touch each other that overlaps and crossings are not all found. */
+  tooDense: z.boolean().default(false),
   questions: z.array(drawingQuestionSchema),
 });
 export type DrawingReadingWire = z.infer<typeof drawingReadingSchema>;

@@ -97,7 +97,7 @@ export function PartNewScreen() {
       hint={partsText.fileHint}
       file={file}
       onChange={choose}
-      accept=".dxf"
+      accept=".dxf,.svg"
       maxBytes={limits.drawingBytes}
       tooLarge={partsText.tooLarge}
       error={sent && !file ? partsText.needFile : undefined}

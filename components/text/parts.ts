@@ -36,6 +36,7 @@ const unitNames: Readonly<Record<DrawingUnit, string>> = {
   inch: 'Inches',
   foot: 'Feet',
   yard: 'Yards',
+  px: 'Pixels, 96 to the inch',
 };
 
 export const partsText = {
@@ -47,13 +48,13 @@ export const partsText = {
   loading: 'Fetching parts',
   search: 'Find by name or file',
   empty: 'No part yet',
-  emptyHint: 'A part is read from a DXF drawing. Then its corners can be planned with a strategy.',
+  emptyHint: 'A part is read from a DXF or SVG drawing. Then its corners can be planned with a strategy.',
   noneFound: (text: string) => `No part matches “${text}”.`,
   holds: (part: Pick<PartSummary, 'outlines' | 'holes'>) =>
     `${count(part.outlines, 'outline')}, ${count(part.holes, 'hole')}`,
   plans: (number: number) => (number === 0 ? 'no corner plan' : count(number, 'corner plan')),
   file: 'Drawing',
-  fileHint: 'DXF, at most 10 MiB. It is read here and kept only when you say so.',
+  fileHint: 'DXF or SVG, at most 10 MiB. It is read here and kept only when you say so.',
   reading: 'Reading the drawing',
   rereading: 'Reading it again with your answers',
   questions: 'Questions',

@@ -1,6 +1,6 @@
 import type { DrawingReadingWire } from '../../shared/parts.ts';
 import { pathLength } from '../../strategy/path/index.ts';
-import { unitLength, type DrawingQuestion, type DrawingReading } from '../../strategy/path/drawing/index.ts';
+import type { DrawingQuestion, DrawingReading, Noted, Repair } from '../../strategy/path/drawing/index.ts';
 
 /** A reading as it goes over the wire and into the database: every field named, lengths in m. */
 export function wireReading(reading: DrawingReading): DrawingReadingWire {
@@ -23,37 +23,27 @@ export function wireReading(reading: DrawingReading): DrawingReadingWire {
       length: pathLength(segments),
     })),
     layers: reading.layers.map(({ name, pieces, taken }) => ({ name, pieces, taken })),
-    leftOut: reading.leftOut.map(({ what, count }) => ({ what, count })),
-    repaired: countedBy(reading.repaired.map(({ what }) => what)),
+    leftOut: reading.leftOut.map(wireNoted),
+    repaired: [...countedRepairs(reading.repaired), ...reading.mended.map(wireNoted)],
+    aside: reading.aside.map(({ what, segments }) => ({ what, segments: [...segments] })),
     deviation: reading.deviation,
-    crossings: reading.crossings.map(({ x, y }) => ({ x, y })),
+    crossings: reading.crossings.map(wirePoint),
+    branches: reading.branches.slice(0, mostPlaces).map(wirePoint),
+    tooDense: reading.tooDense,
     questions: reading.questions.flatMap(wireQuestion),
   };
 }
 
 function wireQuestion(question: DrawingQuestion): DrawingReadingWire['questions'] {
   switch (question.kind) {
-    case 'unit': {
-      const { asMillimetres, asInches } = question.sizes;
+    case 'unit':
       return [
         {
           kind: 'unit',
           why: question.why,
-          readings: [
-            {
-              unit: 'mm',
-              width: asMillimetres.mm.width * unitLength.mm,
-              height: asMillimetres.mm.height * unitLength.mm,
-            },
-            {
-              unit: 'inch',
-              width: asInches.inch.width * unitLength.inch,
-              height: asInches.inch.height * unitLength.inch,
-            },
-          ],
+          readings: question.readings.map(({ unit, width, height }) => ({ unit, width, height })),
         },
       ];
-    }
     case 'gaps':
       return [
         {
@@ -69,8 +59,22 @@ function wireQuestion(question: DrawingQuestion): DrawingReadingWire['questions'
   }
 }
 
-function countedBy(words: readonly string[]): { what: string; count: number }[] {
-  const counts = new Map<string, number>();
-  for (const what of words) counts.set(what, (counts.get(what) ?? 0) + 1);
-  return [...counts].map(([what, count]) => ({ what, count }));
+/** Places of one kind that go over the wire: more would only cover each other on the screen. */
+const mostPlaces = 100;
+
+const wirePoint = ({ x, y }: { readonly x: number; readonly y: number }) => ({ x, y });
+
+const wireNoted = ({ what, count, at }: Noted) => ({ what, count, at: at.map(wirePoint), largest: null });
+
+/** Repairs by what they are, with the first places of each and the largest size. */
+function countedRepairs(repairs: readonly Repair[]): DrawingReadingWire['repaired'] {
+  const byWhat = new Map<string, DrawingReadingWire['repaired'][number]>();
+  for (const { what, at, size } of repairs) {
+    let noted = byWhat.get(what);
+    if (!noted) byWhat.set(what, (noted = { what, count: 0, at: [], largest: null }));
+    noted.count++;
+    if (noted.at.length < mostPlaces) noted.at.push(wirePoint(at));
+    if (size !== undefined) noted.largest = Math.max(noted.largest ?? 0, size);
+  }
+  return [...byWhat.values()];
 }

@@ -19,11 +19,14 @@ export const pointDot = (a: Point, b: Point): number => a.x * b.x + a.y * b.y;
 /** Third component of the vector product; positive when b lies counter-clockwise of a. */
 export const pointCross = (a: Point, b: Point): number => a.x * b.y - a.y * b.x;
 
-/** Length of the vector. */
-export const pointLength = (a: Point): number => Math.hypot(a.x, a.y);
+/** Length of the vector. Plain, since Math.hypot takes ten times as long and no place of a plate overflows a square. */
+export const pointLength = (a: Point): number => Math.sqrt(a.x * a.x + a.y * a.y);
 
 /** Distance between two places, m. */
-export const pointDistance = (a: Point, b: Point): number => Math.hypot(a.x - b.x, a.y - b.y);
+export function pointDistance(a: Point, b: Point): number {
+  const [dx, dy] = [a.x - b.x, a.y - b.y];
+  return Math.sqrt(dx * dx + dy * dy);
+}
 
 /** The vector turned counter-clockwise by `angle` rad about the origin. */
 export function pointRotate(a: Point, angle: number): Point {

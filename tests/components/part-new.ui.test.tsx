@@ -32,10 +32,13 @@ const reading: DrawingReadingWire = {
   ],
   openChains: [],
   layers: [{ name: 'CUT', pieces: 5, taken: true }],
-  leftOut: [{ what: 'text', count: 3 }],
+  leftOut: [{ what: 'text', count: 3, at: [{ x: 0.1, y: 0.05 }], largest: null }],
   repaired: [],
   deviation: 0,
   crossings: [],
+  aside: [],
+  branches: [],
+  tooDense: false,
   questions: [],
 };
 const asking: DrawingReadingWire = {

@@ -10,7 +10,10 @@ export function bytesAsLatin(bytes: Uint8Array, from = 0, to = bytes.length): st
   // a call takes only so many arguments
   const chunk = 8192;
   let text = '';
-  for (let i = from; i < to; i += chunk) text += String.fromCharCode(...bytes.subarray(i, Math.min(to, i + chunk)));
+  for (let i = from; i < to; i += chunk) {
+    // a typed array is as good a list of arguments as an array, only the compiler's library does not say so; spreading one is ten times slower
+    text += String.fromCharCode.apply(null, bytes.subarray(i, Math.min(to, i + chunk)) as unknown as number[]);
+  }
   return text;
 }
 

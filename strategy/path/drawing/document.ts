@@ -11,6 +11,8 @@ export type Block = {
   readonly name: string;
   readonly base: { readonly x: number; readonly y: number };
   readonly entities: readonly RawEntity[];
+  /** Its geometry lies in another file. */
+  readonly elsewhere: boolean;
 };
 
 export type LayerEntry = { readonly name: string; readonly hidden: boolean };
@@ -28,13 +30,12 @@ export type DxfDocument = {
 };
 
 /** Value of a tag as text, decoded and trimmed. */
-export const tagText = (tags: Tags, i: number): string => nameDecode(String(tags.values[i] ?? '').trim());
+export const tagText = (tags: Tags, i: number): string => nameDecode(String(tags.valueOf(i)));
 
 /** Value of a tag as a number. Throws DrawingRefusal with the place when it is none, or larger than a drawing can hold. */
 export function tagNumber(tags: Tags, i: number): number {
-  const value = tags.values[i];
-  if (typeof value === 'number') return withinReason(tags, i, value);
-  const text = (value ?? '').trim();
+  const text = tags.valueOf(i);
+  if (typeof text === 'number') return withinReason(tags, i, text);
   if (/^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/.test(text)) return withinReason(tags, i, Number(text));
   const shown = text.slice(0, 30).replace(/[^\x20-\x7e]/g, '?');
   if (/^[+-]?\d*,\d+([eE][+-]?\d+)?$/.test(text)) {
@@ -58,8 +59,8 @@ function withinReason(tags: Tags, i: number, value: number): number {
 
 /** Parts the tags into header values, layers, blocks and entities. Throws DrawingRefusal when there is no ENTITIES section. */
 export function documentOf(tags: Tags): DxfDocument {
-  const { codes, values } = tags;
-  const is = (i: number, code: number, text: string) => codes[i] === code && String(values[i]).trim() === text;
+  const { codes } = tags;
+  const is = (i: number, code: number, text: string) => codes[i] === code && String(tags.valueOf(i)) === text;
   let insertUnits: number | null = null;
   let measurement: number | null = null;
   const layers: LayerEntry[] = [];
@@ -70,9 +71,10 @@ export function documentOf(tags: Tags): DxfDocument {
   for (let i = 0; i < codes.length; i++) {
     if (is(i, 0, 'EOF')) endMissing = false;
     if (!is(i, 0, 'SECTION')) continue;
-    const section = codes[i + 1] === 2 ? String(values[i + 1]).trim() : '';
+    const section = codes[i + 1] === 2 ? String(tags.valueOf(i + 1)) : '';
     let end = i + 1;
-    while (end < codes.length && !is(end, 0, 'ENDSEC') && !is(end, 0, 'EOF')) end++;
+    // a section that is never ended stops where the next begins
+    while (end < codes.length && !(codes[end] === 0 && endsSection.has(String(tags.valueOf(end))))) end++;
     if (section === 'HEADER') {
       for (let k = i + 2; k + 1 < end; k++) {
         if (codes[k] !== 9) continue;
@@ -83,7 +85,7 @@ export function documentOf(tags: Tags): DxfDocument {
       for (const entry of recordsOf(tags, i + 2, end)) if (entry.type === 'LAYER') layers.push(layerOf(tags, entry));
     } else if (section === 'BLOCKS') readBlocks(tags, recordsOf(tags, i + 2, end), blocks);
     else if (section === 'ENTITIES') entities = [...(entities ?? []), ...recordsOf(tags, i + 2, end)];
-    i = is(end, 0, 'EOF') ? end - 1 : end;
+    i = is(end, 0, 'ENDSEC') ? end : end - 1;
   }
   if (!entities) {
     throw new DrawingRefusal(
@@ -93,16 +95,29 @@ export function documentOf(tags: Tags): DxfDocument {
   return { tags, insertUnits, measurement, layers, blocks, entities, endMissing };
 }
 
+const endsSection: ReadonlySet<string> = new Set(['ENDSEC', 'EOF', 'SECTION']);
+
 /** Records from each group code 0 to the next. */
 function recordsOf(tags: Tags, from: number, end: number): RawEntity[] {
   const records: RawEntity[] = [];
   let first = -1;
   for (let i = from; i <= end; i++) {
     if (i < end && tags.codes[i] !== 0) continue;
-    if (first >= 0) records.push({ type: String(tags.values[first]).trim(), first: first + 1, end: i });
+    if (first >= 0) records.push({ type: typeOf(String(tags.valueOf(first))), first: first + 1, end: i });
     first = i;
   }
   return records;
+}
+
+/** A type as it is shown: a damaged one may hold anything. */
+const typeOf = (text: string): string => (/^[A-Z0-9_]{1,40}$/.test(text) ? text : typeShown(text));
+
+function typeShown(text: string): string {
+  const plain = text
+    .slice(0, 40)
+    .toUpperCase()
+    .replace(/[^A-Z0-9_$*-]/g, '?');
+  return plain === '' ? 'entity without a type' : plain;
 }
 
 function layerOf(tags: Tags, entry: RawEntity): LayerEntry {
@@ -118,18 +133,25 @@ function layerOf(tags: Tags, entry: RawEntity): LayerEntry {
 }
 
 function readBlocks(tags: Tags, records: readonly RawEntity[], blocks: Map<string, Block>): void {
-  let open: { name: string; base: { x: number; y: number }; entities: RawEntity[] } | null = null;
+  let open: { name: string; base: { x: number; y: number }; entities: RawEntity[]; elsewhere: boolean } | null = null;
+  const shut = () => {
+    if (open) blocks.set(open.name.toUpperCase(), open);
+    open = null;
+  };
   for (const record of records) {
     if (record.type === 'BLOCK') {
-      open = { name: '', base: { x: 0, y: 0 }, entities: [] };
+      // one that is never ended stops where the next begins
+      shut();
+      open = { name: '', base: { x: 0, y: 0 }, entities: [], elsewhere: false };
       for (let i = record.first; i < record.end; i++) {
         if (tags.codes[i] === 2) open.name = tagText(tags, i);
         if (tags.codes[i] === 10) open.base.x = tagNumber(tags, i);
         if (tags.codes[i] === 20) open.base.y = tagNumber(tags, i);
+        // bits 4 and 8: a reference to another drawing, or laid over it
+        if (tags.codes[i] === 70) open.elsewhere = (tagNumber(tags, i) & (4 | 8)) !== 0;
       }
-    } else if (record.type === 'ENDBLK') {
-      if (open) blocks.set(open.name.toUpperCase(), open);
-      open = null;
-    } else open?.entities.push(record);
+    } else if (record.type === 'ENDBLK') shut();
+    else open?.entities.push(record);
   }
+  shut();
 }

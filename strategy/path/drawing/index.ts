@@ -1,4 +1,5 @@
 export type {
+  Aside,
   DrawingAnswers,
   DrawingContour,
   DrawingLayer,
@@ -9,6 +10,7 @@ export type {
   Size,
 } from './reading.ts';
 export { drawingRead } from './reading.ts';
+export type { Noted } from './source.ts';
 export type { Repair } from './clean.ts';
 export type { Gap } from './gaps.ts';
 export type { ContourRole } from './nest.ts';

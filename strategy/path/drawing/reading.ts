@@ -1,26 +1,32 @@
 import { quantityText } from '../../units/index.ts';
 import type { Contour } from '../contour.ts';
+import { contourArea } from '../contour.ts';
 import type { Box, Point } from '../point.ts';
-import { boxUnion, emptyBox } from '../point.ts';
+import { pointDistance } from '../point.ts';
 import type { Segment } from '../segment.ts';
-import { segmentBox, segmentStart } from '../segment.ts';
-import type { Chain, Piece } from './chain.ts';
+import { pathLength, segmentEnd, segmentStart } from '../segment.ts';
+import type { Chain } from './chain.ts';
 import { chainPieces } from './chain.ts';
 import type { Repair } from './clean.ts';
 import { cleanPieces, closeJoints } from './clean.ts';
-import { documentOf } from './document.ts';
-import { drawnEntities, entityCounts } from './entities.ts';
-import { contourCrossings } from './crossings.ts';
+import { copiesUsed } from './copies.ts';
+import { dxfSource } from './dxf-source.ts';
 import type { Gap } from './gaps.ts';
 import { nearGaps } from './gaps.ts';
+import { joinEnds } from './join.ts';
 import { drawingLimits } from './limits.ts';
 import type { ContourRole } from './nest.ts';
 import { nestContours } from './nest.ts';
+import type { Loose, Meeting } from './overlap.ts';
+import { sortPieces } from './overlap.ts';
+import type { Piece } from './piece.ts';
 import { DrawingRefusal } from './refusal.ts';
-import { shapeMap, shapeReach, shapeSegments } from './shape.ts';
-import { tagsOf } from './tags.ts';
+import { shapeInto, shapeReach } from './shape.ts';
+import { writeBox } from './soup.ts';
+import type { Noted, Source } from './source.ts';
+import { svgSource } from './svg-source.ts';
 import type { DrawingUnit } from './unit.ts';
-import { headerUnit, plausibleSize, unitLength } from './unit.ts';
+import { plausibleSize, unitLength } from './unit.ts';
 import { whatItIs } from './what-it-is.ts';
 
 /** What the reader of a drawing has been told about it. */
@@ -60,11 +66,8 @@ export type DrawingQuestion =
       readonly why: string;
       /** Unit taken until it is answered. */
       readonly taken: DrawingUnit;
-      /** The same numbers read as millimetres and as inches: size in mm if drawn in mm, in inches if drawn in inches, each also in the other. */
-      readonly sizes: {
-        readonly asMillimetres: { readonly mm: Size; readonly inch: Size };
-        readonly asInches: { readonly mm: Size; readonly inch: Size };
-      };
+      /** Size of the drawing under each reading, m. */
+      readonly readings: readonly { readonly unit: DrawingUnit; readonly width: number; readonly height: number }[];
     }
   | {
       readonly kind: 'gaps';
@@ -84,8 +87,13 @@ export type DrawingReading = {
   readonly bounds: Box; // m, of contours and open chains
   readonly contours: readonly DrawingContour[];
   readonly openChains: readonly OpenChain[];
-  readonly leftOut: readonly { readonly what: string; readonly count: number }[];
+  /** What is no part of the cut, by name, with the first places. */
+  readonly leftOut: readonly Noted[];
+  /** Geometry that was not taken, so that it can be shown where it was. The first so many. */
+  readonly aside: readonly Aside[];
   readonly repaired: readonly Repair[];
+  /** What was put right in single entities, by name, with the first places. */
+  readonly mended: readonly Noted[];
   readonly questions: readonly DrawingQuestion[];
   readonly layers: readonly DrawingLayer[];
   readonly gapTolerance: number; // m
@@ -97,7 +105,12 @@ export type DrawingReading = {
   readonly branches: readonly Point[];
   /** Places where contours cross each other or themselves, m: such a drawing is no part yet. The first hundred. */
   readonly crossings: readonly Point[];
+  /** More pieces touch each other than can be compared: overlaps and crossings are not all found. */
+  readonly tooDense: boolean;
 };
+
+/** Geometry that was left out, and why. m */
+export type Aside = { readonly what: string; readonly segments: readonly Segment[] };
 
 export type NoDrawing = { readonly kind: 'none'; readonly why: string };
 
@@ -108,9 +121,10 @@ const curveTolerance = 1e-5;
 const roundingShare = 1e-6;
 
 /**
- * The part on a DXF drawing as closed contours of lines and arcs, m, turned so that the part lies on the left and nested, with everything that was
+ * The part on a DXF or SVG drawing as closed contours of lines and arcs, m, turned so that the part lies on the left and nested, with everything that was
  * left out, repaired or must be asked; or `{ kind: 'none', why }` with a sentence that says what is wrong, where, and what to do. Never throws for
- * what a file holds; a gap tolerance below 0 throws RangeError. Format: DXF reference ("DXF Group Codes", "ENTITIES Section").
+ * what a file holds; a gap tolerance below 0 throws RangeError. Formats: DXF reference ("DXF Group Codes", "ENTITIES Section"); Scalable Vector
+ * Graphics 1.1 (W3C 2011).
  */
 export function drawingRead(bytes: Uint8Array, answers: DrawingAnswers = {}): DrawingReading | NoDrawing {
   if (answers.gapTolerance !== undefined && !(answers.gapTolerance >= 0 && answers.gapTolerance < Infinity)) {
@@ -131,57 +145,34 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
       `The file is ${(bytes.length / 1048576).toFixed(1)} MiB; at most ${drawingLimits.bytes / 1048576} MiB are read. Draw the part alone and export again.`,
     );
   }
-  const other = whatItIs(bytes);
-  if (other) return none(other);
+  const what = whatItIs(bytes);
+  if (what.kind === 'other') return none(what.why);
+  const source = what.kind === 'svg' ? svgSource(bytes, answers.unit) : dxfSource(bytes, answers.unit);
+  const { unit, notes } = source;
 
-  const tags = tagsOf(bytes);
-  const document = documentOf(tags);
-  const drawn = drawnEntities(document);
-  const stated = headerUnit(document.insertUnits, document.measurement);
-  const unit = answers.unit ?? stated.unit;
-  const scale = unitLength[unit];
+  const layers = layersOf(source, answers);
+  const { pieces, aside, deviation } = piecesOf(source, layers);
+  if (pieces.length === 0) return none(nothingDrawn(notes.leftOut, layers, answers));
 
-  const leftOut = new Map(drawn.leftOut);
-  if (document.endMissing || tags.cutShort) leftOut.set('end of the file (it stops before its EOF mark)', 1);
-  const layerPieces = new Map<string, number>();
-  for (const { layer } of drawn.paths) layerPieces.set(layer, (layerPieces.get(layer) ?? 0) + 1);
-  const hidden = new Set(document.layers.filter((layer) => layer.hidden).map((layer) => layer.name));
-  const taken = (layer: string) => (answers.layers ? answers.layers.includes(layer) : !hidden.has(layer));
-  for (const { type, layer } of drawn.paths) {
-    if (taken(layer)) continue;
-    const what = `${type} on the ${hidden.has(layer) ? 'hidden ' : ''}layer "${layer}"`;
-    leftOut.set(what, (leftOut.get(what) ?? 0) + 1);
-  }
-
-  let deviation = 0;
-  let count = 0;
-  const all = drawn.paths
-    .filter(({ layer }) => taken(layer))
-    .map(({ shapes, layer }): Piece => {
-      const segments = shapes.flatMap((shape) => {
-        const scaled = shapeMap({ a: scale, b: 0, c: 0, d: scale, e: 0, f: 0 }, shape);
-        if (!(shapeReach(scaled) <= drawingLimits.reach)) throw new DrawingRefusal(tooFar(unit));
-        const fit = shapeSegments(scaled, curveTolerance);
-        deviation = Math.max(deviation, fit.deviation);
-        count += fit.segments.length;
-        if (count > drawingLimits.segments) throw new DrawingRefusal(tooFine);
-        return fit.segments;
-      });
-      return { segments, layer };
-    })
-    .filter((piece) => piece.segments.length > 0);
-  if (all.length === 0) return none(nothingDrawn(leftOut, layerPieces, answers));
-
-  const bounds = all.reduce((box, piece) => piece.segments.reduce((b, s) => boxUnion(b, segmentBox(s)), box), emptyBox);
+  const bounds = boundsOf(pieces);
   const diagonal = Math.hypot(bounds.maxX - bounds.minX, bounds.maxY - bounds.minY);
   const rounding = Math.max(diagonal * roundingShare, Number.MIN_VALUE);
   const gapTolerance = answers.gapTolerance ?? rounding;
 
-  const { kept, repaired: cleaned } = cleanPieces(all, rounding);
-  const chains = chainPieces(kept, gapTolerance);
-  const joined = chains.closed.map((chain) => closeJoints(chain.segments, rounding));
-  const closed = joined.map(({ segments }, i) => ({ contour: { segments }, layer: chains.closed[i]?.layer ?? '0' }));
-  const repaired = [...cleaned, ...joined.flatMap((one) => one.repaired)];
+  const cleaned = cleanPieces(pieces, rounding);
+  const join = (loose: readonly Piece[]) => joinEnds(loose, Math.min(rounding, gapTolerance), gapTolerance);
+  const sorted = sortPieces(cleaned, rounding, Math.max(rounding, gapTolerance, 2 * curveTolerance), join);
+  const joints = join(sorted.loose.pieces);
+  const used = copiesUsed(sorted.loose, joints);
+  const chains = chainPieces(sorted.loose, joints, used);
+  const { whole, flat } = withoutFlat(
+    [...sorted.closed.map((place) => chainOfOne(cleaned.kept, place)), ...chains.closed],
+    rounding,
+  );
+  const joined = whole.map((chain) => closeJoints(chain.segments, rounding));
+  const closed = joined.map(({ segments }, i) => ({ contour: { segments }, layer: whole[i]?.layer ?? '0' }));
+  const repaired = [...cleaned.repaired, ...sorted.repaired, ...copiesSaid(sorted.loose, used), ...flat];
+  for (const one of joined) for (const repair of one.repaired) repaired.push(repair);
   // Ends that lie within the tolerance and were still not joined meet where the way was chosen: a wider one would not join them.
   const gaps = nearGaps(chains.open, diagonal).filter(({ size }) => size > gapTolerance);
   if (closed.length === 0 && gaps.length === 0) return noContour(chains.open, unit);
@@ -196,14 +187,9 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
       parent: parent === null ? null : String(parent + 1),
     }),
   );
+  const scale = unitLength[unit];
   const size = { width: (bounds.maxX - bounds.minX) / scale, height: (bounds.maxY - bounds.minY) / scale };
-  const doubt = answers.unit ? null : (stated.doubt ?? implausible(bounds, unit));
-  const layers = [...layerPieces].map(([name, pieces]) => ({
-    name,
-    pieces,
-    hidden: hidden.has(name),
-    taken: taken(name),
-  }));
+  const doubt = answers.unit ? null : (source.unitDoubt ?? implausible(bounds, unit));
   return {
     kind: 'drawing',
     unit,
@@ -211,31 +197,150 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
     bounds,
     contours,
     openChains: chains.open.map(({ segments, layer }) => ({ segments, layer })),
-    leftOut: [...leftOut].map(([what, count]) => ({ what, count })),
+    leftOut: notes.leftOut,
+    aside,
     repaired,
-    questions: [
-      ...unitQuestion(doubt, unit, size),
-      ...gapQuestion(gaps),
-      ...(answers.layers === undefined && layers.length > 1
-        ? [
-            {
-              kind: 'layers' as const,
-              why: `The drawing has ${layers.length} layers with geometry: which of them are the part?`,
-              layers: layers.map((l) => l.name),
-            },
-          ]
-        : []),
-    ],
+    mended: notes.mended,
+    questions: [...unitQuestion(doubt, unit, size), ...gapQuestion(gaps), ...layerQuestion(layers, answers)],
     layers,
     gapTolerance,
     deviation,
-    entityCounts: entityCounts(document),
+    entityCounts: source.counts,
     branches: chains.branches,
-    crossings: contourCrossings(
-      contours.map(({ contour }) => contour),
-      rounding,
-    ),
+    crossings: crossingsOf(sorted.meetings, whole),
+    tooDense: sorted.tooDense,
   };
+}
+
+function layersOf({ paths, hiddenLayers }: Source, answers: DrawingAnswers): DrawingLayer[] {
+  const pieces = new Map<string, number>();
+  for (const { layer } of paths) pieces.set(layer, (pieces.get(layer) ?? 0) + 1);
+  const chosen = answers.layers ? new Set(answers.layers) : null;
+  return [...pieces].map(([name, count]) => {
+    const hidden = hiddenLayers.has(name);
+    return { name, pieces: count, hidden, taken: chosen ? chosen.has(name) : !hidden };
+  });
+}
+
+/** Segments kept of what was left out: enough to see what it was. */
+const mostAside = 3000;
+
+/** What was drawn as lines and arcs: the pieces of layers that are taken, and what else there is for looking at. */
+function piecesOf(source: Source, layers: readonly DrawingLayer[]) {
+  const byName = new Map(layers.map((layer) => [layer.name, layer]));
+  const pieces: Piece[] = [];
+  const asideByName = new Map<string, Segment[]>();
+  let deviation = 0;
+  let count = 0;
+  let asideCount = 0;
+  for (const { type, layer, shapes } of source.paths) {
+    const { taken, hidden } = byName.get(layer) ?? { taken: true, hidden: false };
+    const segments: Segment[] = [];
+    if (!taken) {
+      const what = `${type} on the ${hidden ? 'hidden ' : ''}layer "${layer}"`;
+      source.notes.leave(what, null);
+      if (asideCount > mostAside) continue;
+      for (const shape of shapes) {
+        if (shapeReach(shape) <= drawingLimits.reach) shapeInto(shape, lookTolerance, segments);
+      }
+      asideCount += segments.length;
+      const there = asideByName.get(what);
+      if (there) for (const segment of segments) there.push(segment);
+      else asideByName.set(what, segments);
+      continue;
+    }
+    for (const shape of shapes) {
+      if (!(shapeReach(shape) <= drawingLimits.reach)) throw new DrawingRefusal(tooFar(source.unit));
+      deviation = Math.max(deviation, shapeInto(shape, curveTolerance, segments));
+    }
+    count += segments.length;
+    if (count > drawingLimits.segments) throw new DrawingRefusal(tooFine);
+    if (segments.length === 1) pieces.push({ segments, layer });
+    else for (const run of connectedRuns(segments)) pieces.push({ segments: run, layer });
+  }
+  const aside = [...asideByName].map(([what, segments]): Aside => ({ what, segments }));
+  return { pieces, aside, deviation };
+}
+
+/** For looking at only, m. */
+const lookTolerance = 1e-4;
+
+/** A jump within one entity, m, as a spline has whose inner knots part it: what follows is a piece of its own. */
+const jump = 1e-6;
+
+function connectedRuns(segments: Segment[]): Segment[][] {
+  if (segments.length === 0) return [];
+  const runs: Segment[][] = [];
+  let from = 0;
+  for (let i = 1; i < segments.length; i++) {
+    const [before, here] = [segments[i - 1], segments[i]];
+    if (!before || !here || pointDistance(segmentEnd(before), segmentStart(here)) <= jump) continue;
+    runs.push(segments.slice(from, i));
+    from = i;
+  }
+  runs.push(from === 0 ? segments : segments.slice(from));
+  return runs;
+}
+
+function boundsOf(pieces: readonly Piece[]): Box {
+  let minX = Infinity;
+  let minY = Infinity;
+  let maxX = -Infinity;
+  let maxY = -Infinity;
+  const box = new Float64Array(4);
+  for (const { segments } of pieces) {
+    for (const segment of segments) {
+      writeBox(box, 0, segment);
+      minX = Math.min(minX, box[0] ?? minX);
+      minY = Math.min(minY, box[1] ?? minY);
+      maxX = Math.max(maxX, box[2] ?? maxX);
+      maxY = Math.max(maxY, box[3] ?? maxY);
+    }
+  }
+  return { minX, minY, maxX, maxY };
+}
+
+function chainOfOne(pieces: readonly Piece[], place: number): Chain {
+  const { segments, layer } = pieces[place] ?? { segments: [], layer: '0' };
+  return { segments, layer, order: place, members: [place] };
+}
+
+/** Closed chains in the order of the drawing, without those that go and come back on themselves. */
+function withoutFlat(closed: readonly Chain[], rounding: number): { whole: Chain[]; flat: Repair[] } {
+  const flat: Repair[] = [];
+  const whole = closed.filter(({ segments }) => {
+    const [first] = segments;
+    const length = pathLength(segments);
+    if (!first || Math.abs(contourArea({ segments })) > rounding * length) return true;
+    flat.push({ what: 'outline that encloses nothing dropped', at: segmentStart(first), size: length });
+    return false;
+  });
+  return { whole: whole.sort((a, b) => a.order - b.order), flat };
+}
+
+/** What is said of pieces drawn more than once. */
+function copiesSaid({ unused, least }: Loose, used: Uint8Array): Repair[] {
+  const said: Repair[] = [];
+  for (const [i, copies] of unused) {
+    const more = (used[i] ?? 0) - (least[i] ?? 0);
+    const [first] = copies;
+    for (const copy of copies.slice(more)) said.push(copy);
+    if (more > 0 && first) said.push({ ...first, what: 'edge drawn twice, kept for the outline on either side' });
+  }
+  return said;
+}
+
+/** Crossings returned at most: what is found after that many would add nothing. */
+const mostCrossings = 100;
+
+/** Places where pieces of closed contours cross. */
+function crossingsOf(meetings: readonly Meeting[], closed: readonly Chain[]): Point[] {
+  if (meetings.length === 0) return [];
+  const contours = new Set(closed.flatMap(({ members }) => members));
+  return meetings
+    .filter(({ first, second }) => contours.has(first) && contours.has(second))
+    .slice(0, mostCrossings)
+    .map(({ at }) => at);
 }
 
 const tooFar = (unit: DrawingUnit): string =>
@@ -253,14 +358,19 @@ function implausible(bounds: Box, unit: DrawingUnit): string | null {
 
 function unitQuestion(doubt: string | null, taken: DrawingUnit, size: Size): DrawingQuestion[] {
   if (doubt === null) return [];
-  const times = (factor: number): Size => ({ width: size.width * factor, height: size.height * factor });
-  const inch = unitLength.inch / unitLength.mm;
+  const units: DrawingUnit[] = ['mm', 'inch'];
+  // what was taken meanwhile is an answer too
+  if (!units.includes(taken)) units.push(taken);
   return [
     {
       kind: 'unit',
       why: `In which unit is this drawing? ${doubt.charAt(0).toUpperCase()}${doubt.slice(1)}.`,
       taken,
-      sizes: { asMillimetres: { mm: size, inch: times(1 / inch) }, asInches: { mm: times(inch), inch: size } },
+      readings: units.map((unit) => ({
+        unit,
+        width: size.width * unitLength[unit],
+        height: size.height * unitLength[unit],
+      })),
     },
   ];
 }
@@ -280,15 +390,17 @@ function gapQuestion(gaps: readonly Gap[]): DrawingQuestion[] {
   ];
 }
 
-function nothingDrawn(
-  leftOut: ReadonlyMap<string, number>,
-  layers: ReadonlyMap<string, number>,
-  answers: DrawingAnswers,
-): string {
-  if (answers.layers !== undefined && layers.size > 0) {
-    return `None of the chosen layers holds geometry. Layers with geometry: ${[...layers.keys()].join(', ')}.`;
+function layerQuestion(layers: readonly DrawingLayer[], answers: DrawingAnswers): DrawingQuestion[] {
+  if (answers.layers !== undefined || layers.length < 2) return [];
+  const why = `The drawing has ${layers.length} layers with geometry: which of them are the part?`;
+  return [{ kind: 'layers', why, layers: layers.map(({ name }) => name) }];
+}
+
+function nothingDrawn(leftOut: readonly Noted[], layers: readonly DrawingLayer[], answers: DrawingAnswers): string {
+  if (answers.layers !== undefined && layers.length > 0) {
+    return `None of the chosen layers holds geometry. Layers with geometry: ${layers.map(({ name }) => name).join(', ')}.`;
   }
-  const found = [...leftOut].map(([what, count]) => `${count} ${what}`).join(', ');
+  const found = leftOut.map(({ what, count }) => `${count} ${what}`).join(', ');
   return `The drawing holds no lines, arcs or curves to cut${found ? `, only ${found}` : ''}. Export the part's outline.`;
 }
 

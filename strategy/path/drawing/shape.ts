@@ -57,32 +57,42 @@ export function shapeReach(shape: Shape): number {
   }
 }
 
-/** Lines and arcs within `tolerance` of the shape, and how far they really are from it at most (0 when exact). Same unit throughout. */
-export function shapeSegments(shape: Shape, tolerance: number): { segments: Segment[]; deviation: number } {
+/** Puts lines and arcs within `tolerance` of the shape behind `into`; how far they really are from it at most (0 when exact). Same unit throughout. */
+export function shapeInto(shape: Shape, tolerance: number, into: Segment[]): number {
   switch (shape.kind) {
     case 'line':
-      return { segments: [lineBetween(shape.from, shape.to)], deviation: 0 };
+      into.push(lineBetween(shape.from, shape.to));
+      return 0;
     case 'conic':
-      return conicSegments(shape, tolerance);
+      return conicInto(shape, tolerance, into);
     case 'spline':
-      return joined(splinePieces(shape).map((piece) => fitBiarcs(piece, tolerance)));
+      return fitted(splinePieces(shape), tolerance, into);
   }
 }
 
-const joined = (fits: { segments: Segment[]; deviation: number }[]) => ({
-  segments: fits.flatMap((fit) => fit.segments),
-  deviation: fits.reduce((most, fit) => Math.max(most, fit.deviation), 0),
-});
+function fitted(curves: readonly Curve[], tolerance: number, into: Segment[]): number {
+  let deviation = 0;
+  for (const curve of curves) {
+    const fit = fitBiarcs(curve, tolerance);
+    for (const segment of fit.segments) into.push(segment);
+    deviation = Math.max(deviation, fit.deviation);
+  }
+  return deviation;
+}
 
-function conicSegments({ centre, u, v, start, sweep }: Extract<Shape, { kind: 'conic' }>, tolerance: number) {
+function conicInto(
+  { centre, u, v, start, sweep }: Extract<Shape, { kind: 'conic' }>,
+  tolerance: number,
+  into: Segment[],
+): number {
   const long = Math.max(pointLength(u), pointLength(v));
   // equal and square to each other within rounding: still a circle
   const round =
     Math.abs(pointLength(u) - pointLength(v)) < 1e-9 * long && Math.abs(pointDot(u, v)) < 1e-9 * long * long;
   if (round) {
     const turn = Math.sign(pointCross(u, v));
-    const segments = [arcOf(centre, pointLength(u), Math.atan2(u.y, u.x) + turn * start, turn * sweep)];
-    return { segments, deviation: 0 };
+    into.push(arcOf(centre, pointLength(u), Math.atan2(u.y, u.x) + turn * start, turn * sweep));
+    return 0;
   }
   const at = (t: number): Point => ({
     x: centre.x + u.x * Math.cos(t) + v.x * Math.sin(t),
@@ -94,11 +104,10 @@ function conicSegments({ centre, u, v, start, sweep }: Extract<Shape, { kind: 'c
   });
   // quarters, so that no piece has its ends on top of each other
   const parts = Math.max(1, Math.ceil(Math.abs(sweep) / (Math.PI / 2) - 1e-9));
-  return joined(
-    Array.from({ length: parts }, (_, i): Curve => {
-      const from = start + (sweep * i) / parts;
-      const to = start + (sweep * (i + 1)) / parts;
-      return { at, along, from, to };
-    }).map((curve) => fitBiarcs(curve, tolerance)),
-  );
+  const quarters = Array.from({ length: parts }, (_, i): Curve => {
+    const from = start + (sweep * i) / parts;
+    const to = start + (sweep * (i + 1)) / parts;
+    return { at, along, from, to };
+  });
+  return fitted(quarters, tolerance, into);
 }

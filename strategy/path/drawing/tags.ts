@@ -3,8 +3,9 @@ import { DrawingRefusal } from './refusal.ts';
 
 /** The group codes and values of a DXF in order. Text values are still undecoded bytes; see `nameDecode`. */
 export type Tags = {
-  readonly codes: readonly number[];
-  readonly values: readonly (string | number)[];
+  readonly codes: Int32Array;
+  /** Value of tag i, text without the blanks around it. Made when asked for, since most values of a file are never looked at. */
+  readonly valueOf: (i: number) => string | number;
   /** Where the value of tag i stands, for a sentence: "line 214" or "byte 1042". */
   readonly placeOf: (i: number) => string;
   /** The file stops in the middle of a tag. */
@@ -23,32 +24,80 @@ export const isBinaryDxf = (bytes: Uint8Array): boolean => binaryMark.every((byt
 /** Tags of a DXF, text or binary. Throws DrawingRefusal where the pairs of group code and value break. */
 export const tagsOf = (bytes: Uint8Array): Tags => (isBinaryDxf(bytes) ? binaryTags(bytes) : textTags(bytes));
 
+const [tab, newLine, carriageReturn, blank, minus, zero, nine] = [9, 10, 13, 32, 45, 48, 57];
+
 function textTags(bytes: Uint8Array): Tags {
   const start = bytes[0] === 0xef && bytes[1] === 0xbb && bytes[2] === 0xbf ? 3 : 0;
-  const text = bytesAsLatin(bytes, start);
-  const lines = text.includes('\n') ? text.split(/\r*\n/) : text.split('\r');
-  while (lines.length > 0 && /^[\s\0\x1a]*$/.test(lines.at(-1) ?? '')) lines.pop();
-  const codes: number[] = [];
-  const values: string[] = [];
-  for (let i = 0; i + 1 < lines.length; i += 2) {
-    const code = (lines[i] ?? '').trim();
-    if (!/^-?\d{1,4}$/.test(code)) {
-      throw new DrawingRefusal(
-        `Line ${i + 1} should hold a DXF group code but reads "${shown(code)}". The file is damaged or no DXF; export it again.`,
-      );
+  // files end with blank lines, zeros or the end mark of an old system
+  let stop = bytes.length;
+  while (stop > start && isFiller(bytes[stop - 1] ?? 0)) stop--;
+  const lineEnd = bytes.includes(newLine) ? newLine : carriageReturn;
+  const text = bytesAsLatin(bytes, 0, stop);
+  // two lines a tag, of which the shortest have one character
+  const most = Math.ceil((stop - start) / 3) + 1;
+  const codes = new Int32Array(most);
+  // where each value starts; it ends before the line end
+  const starts = new Int32Array(most);
+  let count = 0;
+  let at = start;
+  let line = 1;
+  let cutShort = false;
+  while (at < stop) {
+    let end = bytes.indexOf(lineEnd, at);
+    if (end < 0 || end > stop) end = stop;
+    const code = codeIn(bytes, at, end);
+    if (end >= stop) {
+      // a last 0 without its EOF says nothing more than that the end is missing
+      cutShort = code !== 0;
+      break;
     }
-    codes.push(Number(code));
-    values.push(lines[i + 1] ?? '');
+    if (code === null) throw noCode(text.slice(at, end), line);
+    codes[count] = code;
+    starts[count++] = end + 1;
+    at = bytes.indexOf(lineEnd, end + 1) + 1;
+    if (at === 0) at = stop;
+    line += 2;
   }
-  return {
-    codes,
-    values,
-    placeOf: (i) => `line ${2 * i + 2}`,
-    cutShort: lines.length % 2 === 1 && (lines.at(-1) ?? '').trim() !== '0',
+  const valueOf = (i: number): string => {
+    const from = starts[i] ?? stop;
+    const to = bytes.indexOf(lineEnd, from);
+    return text.slice(from, to < 0 ? stop : to).trim();
   };
+  return { codes: codes.subarray(0, count), valueOf, placeOf: (i) => `line ${2 * i + 2}`, cutShort };
 }
 
-const shown = (text: string): string => text.slice(0, 40).replace(/[^\x20-\x7e]/g, '?');
+const isFiller = (byte: number): boolean => byte <= blank;
+
+/** The group code on a line: a whole number of at most four digits between blanks, or null. */
+function codeIn(bytes: Uint8Array, from: number, to: number): number | null {
+  let i = from;
+  let end = to;
+  while (i < end && isBlank(bytes[i] ?? 0)) i++;
+  while (end > i && isBlank(bytes[end - 1] ?? 0)) end--;
+  const negative = bytes[i] === minus;
+  if (negative) i++;
+  if (end - i < 1 || end - i > 4) return null;
+  let code = 0;
+  for (; i < end; i++) {
+    const digit = bytes[i] ?? 0;
+    if (digit < zero || digit > nine) return null;
+    code = 10 * code + digit - zero;
+  }
+  return negative ? -code : code;
+}
+
+const isBlank = (byte: number): boolean => byte === blank || byte === tab || byte === carriageReturn;
+
+const noCode = (line: string, number: number): DrawingRefusal =>
+  new DrawingRefusal(
+    `Line ${number} should hold a DXF group code but reads "${shown(line)}". The file is damaged or no DXF; export it again.`,
+  );
+
+const shown = (text: string): string =>
+  text
+    .trim()
+    .slice(0, 40)
+    .replace(/[^\x20-\x7e]/g, '?');
 
 type Kind = 'text' | 'double' | 'int16' | 'int32' | 'int64' | 'bool' | 'chunk';
 
@@ -122,7 +171,7 @@ function binaryTags(bytes: Uint8Array): Tags {
           let end = at;
           while (end < bytes.length && bytes[end] !== 0) end++;
           if (end === bytes.length) throw new RangeError('text without end');
-          value = bytesAsLatin(bytes, at, end);
+          value = bytesAsLatin(bytes, at, end).trim();
           at = end + 1;
         }
       }
@@ -141,5 +190,10 @@ function binaryTags(bytes: Uint8Array): Tags {
     if (!(error instanceof RangeError)) throw error;
     cutShort = true;
   }
-  return { codes, values, placeOf: (i) => `byte ${places[i] ?? bytes.length}`, cutShort };
+  return {
+    codes: Int32Array.from(codes),
+    valueOf: (i) => values[i] ?? '',
+    placeOf: (i) => `byte ${places[i] ?? bytes.length}`,
+    cutShort,
+  };
 }

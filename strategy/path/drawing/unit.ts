@@ -1,5 +1,5 @@
 /** Units a drawing may be in. */
-export type DrawingUnit = 'mm' | 'cm' | 'dm' | 'm' | 'km' | 'µm' | 'inch' | 'foot' | 'yard' | 'mil';
+export type DrawingUnit = 'mm' | 'cm' | 'dm' | 'm' | 'km' | 'µm' | 'inch' | 'foot' | 'yard' | 'mil' | 'px';
 
 /** Metres a unit. The inch is 0.0254 m exactly. */
 export const unitLength: Readonly<Record<DrawingUnit, number>> = {
@@ -13,6 +13,8 @@ export const unitLength: Readonly<Record<DrawingUnit, number>> = {
   inch: 0.0254,
   foot: 0.3048,
   yard: 0.9144,
+  /** A pixel of an SVG: 96 to the inch (CSS Values and Units, section 6.2). */
+  px: 0.0254 / 96,
 };
 
 /** $INSUNITS of the DXF reference. What is missing here is no unit a plate is drawn in. */

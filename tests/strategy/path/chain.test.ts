@@ -9,8 +9,16 @@ import {
   segmentStart,
 } from '../../../strategy/path/index.ts';
 import { chainPieces } from '../../../strategy/path/drawing/chain.ts';
+import { joinEnds } from '../../../strategy/path/drawing/join.ts';
+import type { Piece } from '../../../strategy/path/drawing/piece.ts';
 
 const tolerance = 1e-6;
+/** Joined where the ends are within the tolerance, each piece used once. */
+function chained(pieces: readonly Piece[], gap: number) {
+  const order = Int32Array.from(pieces, (_, i) => i);
+  const joints = joinEnds(pieces, Math.min(gap, tolerance / 100), gap);
+  return chainPieces({ pieces, order, cut: new Set() }, joints, new Uint8Array(pieces.length).fill(1));
+}
 const unit = fc.double({ min: -1, max: 1, noNaN: true });
 
 describe('pieces put together', () => {
@@ -39,7 +47,7 @@ describe('pieces put together', () => {
           const order = pieces
             .map((piece, i) => ({ piece, key: shuffle[i % shuffle.length] ?? 0 }))
             .sort((a, b) => a.key - b.key);
-          const { closed, open, branches } = chainPieces(
+          const { closed, open, branches } = chained(
             order.map(({ piece }) => piece),
             tolerance,
           );
@@ -68,7 +76,7 @@ describe('pieces put together', () => {
             { segments: [lineBetween({ x: far - 1, y: 0 }, end)], layer: '0' },
             { segments: [lineBetween(start, { x: far + 1, y: 5 })], layer: '0' },
           ];
-          expect(chainPieces(pieces, tolerance).open).toHaveLength(2);
+          expect(chained(pieces, tolerance).open).toHaveLength(2);
         },
       ),
     );
@@ -80,7 +88,7 @@ describe('pieces put together', () => {
       { segments: [lineBetween({ x: 0.1, y: 0.3 }, { x: 1, y: 1 })], layer: '0' },
       { segments: [lineBetween({ x: 1 + 1e-15, y: 1 }, { x: 2, y: 1 })], layer: '0' },
     ];
-    expect(chainPieces(pieces, 0).open.map((c) => c.segments.length)).toEqual([2, 1]);
+    expect(chained(pieces, 0).open.map((c) => c.segments.length)).toEqual([2, 1]);
   });
 
   it('that only touch an outline do not open it', () => {
@@ -92,7 +100,7 @@ describe('pieces put together', () => {
     ];
     const outline = corners.map((p, i) => ({ segments: [lineBetween(p, corners[(i + 1) % 4] ?? p)], layer: '0' }));
     const mark = { segments: [lineBetween({ x: 1, y: 1 }, { x: 2, y: 2 })], layer: '0' };
-    const { closed, open } = chainPieces([mark, ...outline], tolerance);
+    const { closed, open } = chained([mark, ...outline], tolerance);
     expect([closed.map((c) => pathLength(c.segments)), open.length]).toEqual([[4], 1]);
   });
 
@@ -105,7 +113,7 @@ describe('pieces put together', () => {
       ];
       return corners.map((p, i) => ({ segments: [lineBetween(p, corners[(i + 1) % 3] ?? p)], layer: '0' }));
     };
-    const { closed, branches } = chainPieces([...loop(1), ...loop(-1)], tolerance);
+    const { closed, branches } = chained([...loop(1), ...loop(-1)], tolerance);
     expect(closed.map((c) => c.segments.length)).toEqual([3, 3]);
     expect(branches).toHaveLength(1);
   });
@@ -116,7 +124,7 @@ describe('pieces put together', () => {
       segments: [lineBetween({ x: 0, y: 0 }, { x: Math.cos(i), y: Math.sin(i) })],
       layer: '0',
     }));
-    const { closed, open } = chainPieces(pieces, tolerance);
+    const { closed, open } = chained(pieces, tolerance);
     expect([closed.length, open.length]).toEqual([0, 10_000]);
   });
 });
