@@ -104,7 +104,7 @@ describe('a drawing', () => {
     [
       'is something else with a drawing’s name',
       drawing('not-a-drawing.dxf'),
-      'This file is not a DXF: it does not begin with the pair 0, SECTION. Export the part as DXF.',
+      'This file is neither a DXF, which begins with the pair 0, SECTION, nor an SVG. Export the part as DXF or SVG.',
     ],
     [
       'has no closed contour',
@@ -124,7 +124,7 @@ describe('a drawing', () => {
     [
       'is bytes of no meaning',
       { name: 'noise.dxf', bytes: Buffer.from(Array.from({ length: 5000 }, (_, n) => (n * n * 31) % 251)) },
-      'Export the part as DXF.',
+      'Export the part as DXF or SVG.',
     ],
   ])('that %s is refused with what is wrong, where and what to do, and nothing is kept', async (_what, file, why) => {
     const [keys, parts, files] = [await server.storedKeys(), await rowsOf('parts'), await rowsOf('files')];
