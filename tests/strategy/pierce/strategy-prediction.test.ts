@@ -251,6 +251,53 @@ describe('what an engineer would say', () => {
     });
   });
 
+  it('a pierce near its eruption, between four fifths of the limit and the limit', () => {
+    const stages = everywhere(GOOD, {});
+    const raised = (factor: number) =>
+      stages.map((stage) => ({
+        ...stage,
+        from: { ...stage.from, peakPower: stage.from.peakPower * factor },
+        to: { ...stage.to, peakPower: stage.to.peakPower * factor },
+      }));
+    const states = [0.8, 0.9, 1, 1.1, 1.2, 1.3, 1.4, 1.5, 1.7].map((factor) => {
+      const { index, limit } = predicted(raised(factor)).eruption;
+      const { state, sentence } = checked(raised(factor), 'eruption');
+      expect(state).toBe(index >= limit ? 'wrong' : index >= 0.8 * limit ? 'caution' : 'ok');
+      if (state === 'caution') expect(sentence).toMatch(/^Close to erupting: in stage \d/);
+      return state;
+    });
+    expect(new Set(states)).toEqual(new Set(['ok', 'caution', 'wrong']));
+  });
+
+  it('a plate too hot for the contour to begin beside the pierce at all', () => {
+    const prediction = strategyPrediction({
+      stages: GOOD,
+      thickness: { min: 0.018, max: 0.02 },
+      hottestPlateTemperature: 533.15,
+      profile: TEN_KILOWATT,
+      nozzle: NOZZLE_1_5,
+    });
+    for (const leadInLength of [undefined, 0.02]) {
+      const found = pierceChecks({
+        stages: GOOD,
+        prediction,
+        profile: TEN_KILOWATT,
+        ...(leadInLength === undefined ? {} : { leadInLength }),
+      }).find(({ id }) => id === 'lead-in');
+      expect(found).toMatchObject({ state: 'caution', sentence: /plate itself, at 260 °C, is not below the 250 °C/ });
+    }
+  });
+
+  it('a bottom that stands still: wrong when it never gets through, a caution when it does', () => {
+    expect(checked(held(1000, 20), 'stall').state).toBe('wrong');
+    expect(checked([...held(700, 12), ...held(3500, 20)], 'stall')).toMatchObject({
+      state: 'caution',
+      stages: [0],
+      sentence: /^Stage 1, after \d+(\.\d)? s, for \d+(\.\d)? s: The bottom stands still/,
+    });
+    expect(checked(held(1000, 20), 'idle-stage').sentence).toBe('Every stage acts: the hole is not through.');
+  });
+
   it('the crater against the widest a plant accepts', () => {
     const prediction = predicted(GOOD);
     const crater = (widestCrater: number) =>

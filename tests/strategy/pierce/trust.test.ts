@@ -7,12 +7,14 @@ import {
   piercePredict,
   pierceWarmth,
   leadInNeeded,
+  oxygenMassFlow,
   peakRiseAroundLine,
   type PierceParameters,
   type Stage,
   type StageQuantities,
 } from '../../../strategy/pierce/index.ts';
 import {
+  BORE_RADIUS,
   BOTTOM_LIGHT,
   boreMoment,
   boreMomentEmpty,
@@ -21,6 +23,7 @@ import {
   boreRamp,
   boreSetAt,
   CONDUCTION,
+  CRATER,
   EXPULSION,
   FLOWS,
   MELT,
@@ -31,7 +34,15 @@ import {
   WALL_LIGHT,
 } from '../../../strategy/pierce/bore.ts';
 import { pierceParameters } from '../../../strategy/pierce/parameters.ts';
-import { meltingEnthalpy, STEEL_DENSITY, steelSpecificHeat } from '../../../strategy/steel/index.ts';
+import {
+  heatingEnthalpy,
+  HOT_DIFFUSIVITY,
+  IRON_MELTING_TEMPERATURE,
+  meltingEnthalpy,
+  oxidation,
+  STEEL_DENSITY,
+  steelSpecificHeat,
+} from '../../../strategy/steel/index.ts';
 import { NOZZLE_1_5, TEN_KILOWATT } from '../../support/machines.ts';
 import { seededNumbers } from '../../bench/line.ts';
 import { movingDisk } from './moving-disk.ts';
@@ -228,6 +239,37 @@ describe('each term of the ledger, against what it must be', () => {
     );
   });
 
+  it('no more burns than the nozzle’s oxygen can, nor than the burnt share of what is removed', () => {
+    const { heatPerOxygen, heatPerIron } = oxidation('FeO');
+    fc.assert(
+      fc.property(anyStages, anyThickness, anyPlate, (stages, thickness, plateTemperature) => {
+        const { ledger, oxygenUsed } = pierceOutline(input(stages, { thickness, plateTemperature }));
+        const removed = ledger.melt / meltingEnthalpy(plateTemperature);
+        const most = 1 + 1e-9;
+        expect(ledger.oxidation).toBeLessThanOrEqual(PIERCE_DEFAULTS.burntShare * removed * heatPerIron * most);
+        expect(ledger.oxidation).toBeLessThanOrEqual(PIERCE_DEFAULTS.oxygenUse * oxygenUsed * heatPerOxygen * most);
+      }),
+    );
+  });
+
+  it('the oxygen used is the nozzle’s flow over the whole routine, through or not', () => {
+    fc.assert(
+      fc.property(anyStages, anyThickness, (stages, thickness) => {
+        const { oxygenUsed } = pierceOutline(input(stages, { thickness }));
+        const parts = 400;
+        const flow = (pressure: number) => oxygenMassFlow(0.0015, pressure, PIERCE_DEFAULTS.dischargeCoefficient);
+        const sum = stages.reduce((all, { duration, from, to }) => {
+          const at = (part: number) => from.oxygenPressure * (1 - part) + to.oxygenPressure * part;
+          const mean = Array.from({ length: parts }, (_, i) => flow(at((i + 0.5) / parts))).reduce((a, b) => a + b, 0);
+          return all + (duration * mean) / parts;
+        }, 0);
+        // The flow begins as a root of the pressure, so the sum itself is that coarse near nothing.
+        expect(Math.abs(oxygenUsed - sum)).toBeLessThan(1e-4 * sum + 1e-9);
+      }),
+      { numRuns: 40 },
+    );
+  });
+
   it('the energy leaving the source is what a fine sum over the stages gives', () => {
     fc.assert(
       fc.property(anyStages, anyThickness, (stages, thickness) => {
@@ -314,6 +356,60 @@ describe('the mechanism of each quantity', () => {
     },
   );
 });
+
+describe('the crater', () => {
+  it('is as wide as the greatest heat at the mouth melts, followed by another method, or as the bore', () => {
+    const next = seededNumbers(23);
+    let byHeat = 0;
+    for (let round = 0; round < 10; round++) {
+      const powers = Array.from({ length: 4 }, (_, i) => (round + 1) * (300 + 300 * i * next()));
+      const stages = rampsThrough(powers, () => 0.4 + 1.2 * next());
+      const { craterRadius } = pierceOutline(input(stages, { thickness: 0.06 }));
+      const { heat, bore } = mouthOf(stages);
+      // Point source on the surface, evaluated at the rise to melting: r³ = 2Q/(ρc·ΔT)·(3/2πe)^1.5.
+      const rise = IRON_MELTING_TEMPERATURE - 293.15;
+      const capacity = (STEEL_DENSITY * heatingEnthalpy(293.15)) / rise;
+      const molten = Math.cbrt(((2 * heat) / capacity / rise) * (3 / (2 * Math.PI * Math.E)) ** 1.5);
+      if (molten > bore) byHeat += 1;
+      expect(Math.abs(craterRadius / Math.max(molten, bore) - 1), `round ${round}`).toBeLessThan(1e-4);
+    }
+    expect(byHeat).toBeGreaterThan(3);
+  });
+});
+
+/** Greatest heat that stands at the mouth, J, and widest bore, m: fed by the flow that comes there, fading with its own time. */
+function mouthOf(stages: readonly Stage[]) {
+  const bore = boreOf(TEN_KILOWATT, NOZZLE_1_5, 293.15, PIERCE_DEFAULTS);
+  const set = new Float64Array(SET_SIZE);
+  const ramp = new Float64Array(2 * SET_SIZE);
+  const moment = boreMomentEmpty();
+  const memory = 0.003 ** 2 / (6 * HOT_DIFFUSIVITY);
+  let depth = 0;
+  let heat = 0;
+  let greatest = 0;
+  let widest = 0;
+  for (const stage of stages) {
+    boreRamp(ramp, stage);
+    const slopes = (part: number, z: number, q: number) => {
+      boreSetAt(set, ramp, part);
+      const speed = boreMoment(bore, set, z, moment);
+      widest = Math.max(widest, moment[BORE_RADIUS] ?? 0);
+      return [speed, (moment[CRATER] ?? 0) - q / memory] as const;
+    };
+    const steps = 1000;
+    const h = stage.duration / steps;
+    for (let i = 0; i < steps; i++) {
+      const a = slopes(i / steps, depth, heat);
+      const b = slopes((i + 0.5) / steps, depth + (h / 2) * a[0], heat + (h / 2) * a[1]);
+      const c = slopes((i + 0.5) / steps, depth + (h / 2) * b[0], heat + (h / 2) * b[1]);
+      const d = slopes((i + 1) / steps, depth + h * c[0], heat + h * c[1]);
+      depth += (h / 6) * (a[0] + 2 * b[0] + 2 * c[0] + d[0]);
+      heat += (h / 6) * (a[1] + 2 * b[1] + 2 * c[1] + d[1]);
+      greatest = Math.max(greatest, heat);
+    }
+  }
+  return { heat: greatest, bore: widest };
+}
 
 describe('the eruption index', () => {
   const eruption = (set: StageQuantities) =>
