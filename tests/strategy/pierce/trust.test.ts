@@ -264,7 +264,7 @@ describe('each term of the ledger, against what it must be', () => {
           return all + (duration * mean) / parts;
         }, 0);
         // The flow begins as a root of the pressure, so the sum itself is that coarse near nothing.
-        expect(Math.abs(oxygenUsed - sum)).toBeLessThan(1e-4 * sum + 1e-9);
+        expect(Math.abs(oxygenUsed - sum)).toBeLessThan(5e-4 * sum + 1e-9);
       }),
       { numRuns: 40 },
     );
