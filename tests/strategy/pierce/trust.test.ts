@@ -254,7 +254,10 @@ describe('each term of the ledger, against what it must be', () => {
 
   it('the oxygen used is the nozzle’s flow over the whole routine, through or not', () => {
     fc.assert(
-      fc.property(anyStages, anyThickness, (stages, thickness) => {
+      fc.property(anyStages, anyThickness, (any, thickness) => {
+        // From 0.05 bar: from nothing the flow begins as a root of the pressure, which a plain sum does not follow.
+        const least = (set: StageQuantities) => ({ ...set, oxygenPressure: Math.max(5e3, set.oxygenPressure) });
+        const stages = any.map((stage) => ({ ...stage, from: least(stage.from), to: least(stage.to) }));
         const { oxygenUsed } = pierceOutline(input(stages, { thickness }));
         const parts = 400;
         const flow = (pressure: number) => oxygenMassFlow(0.0015, pressure, PIERCE_DEFAULTS.dischargeCoefficient);
@@ -263,8 +266,7 @@ describe('each term of the ledger, against what it must be', () => {
           const mean = Array.from({ length: parts }, (_, i) => flow(at((i + 0.5) / parts))).reduce((a, b) => a + b, 0);
           return all + (duration * mean) / parts;
         }, 0);
-        // The flow begins as a root of the pressure, so the sum itself is that coarse near nothing.
-        expect(Math.abs(oxygenUsed - sum)).toBeLessThan(5e-4 * sum + 1e-9);
+        expect(Math.abs(oxygenUsed / sum - 1)).toBeLessThan(1e-4);
       }),
       { numRuns: 40 },
     );
