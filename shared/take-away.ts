@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { type BlockFrame, type CutFileUnit } from '../strategy/path/drawing/write/index.ts';
+import type { BlockFrame, CutFileUnit } from '../strategy/path/drawing/write/index.ts';
 import { idSchema, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
 import { limits } from './limits.ts';

@@ -29,6 +29,7 @@ import { CornerList } from './corner-list.tsx';
 import { CornerSheet } from './corner-sheet.tsx';
 import { cornersInward } from './corner-inward.ts';
 import { PlanForm, type PlanChoices } from './plan-form.tsx';
+import { TakeAway } from './take-away.tsx';
 import { TemperatureScale } from './temperature-scale.tsx';
 import { BadgeShape, TreatmentBadge } from './treatment-badge.tsx';
 
@@ -182,6 +183,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
       {!wide && trouble}
       {!wide && panel}
       <Totals plan={plan} />
+      {actor !== null && may(actor, 'cutPath.take') && <TakeAway planId={plan.id} approved={plan.revision.approved} />}
       <TemperatureScale />
       <EstimateNote />
     </Page>

@@ -45,6 +45,20 @@ export async function apiCall<E extends Endpoint>(endpoint: E, options: CallOpti
   return parsed.data as AnswerOf<E>; // the endpoint's own schema has just said so
 }
 
+/** The file of an endpoint that answers with bytes, and the name it wants to be saved under. Throws as `apiCall`. */
+export async function apiFile<E extends Endpoint>(
+  endpoint: E,
+  options: CallOptions<E>,
+): Promise<{ readonly bytes: Blob; readonly name: string }> {
+  const response = await send(endpoint, options);
+  const name = /filename="?([^";]+)/.exec(response.headers.get('content-disposition') ?? '')?.[1];
+  try {
+    return { bytes: await response.blob(), name: name ?? 'file' };
+  } catch (cause) {
+    throw lostConnection(cause); // the answer broke off on its way
+  }
+}
+
 /** Address of a GET endpoint, for an image or a download. */
 export function apiAddress<E extends Endpoint>(endpoint: E, options: { query?: QueryOf<E> } & Params<E>): string {
   return addressOf(endpoint, options);

@@ -18,6 +18,7 @@ import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { Machine, MachineRevision } from '@/shared/machines.ts';
 import { may } from '@/shared/policy.ts';
 import { numberText, quantityText } from '@/strategy/units/index.ts';
+import { BlockFrameSection } from './block-frame-section.tsx';
 import { FocusCheck } from './focus-check.tsx';
 import { MachineReviseForm } from './machine-revise-form.tsx';
 import { ProfileView } from './profile-view.tsx';
@@ -86,6 +87,7 @@ function MachineSheet({ machine }: { readonly machine: Machine }) {
       )}
       <Block revision={shown} />
       <ProfileView profile={shown.profile} />
+      {actor !== null && may(actor, 'cutPath.take') ? <BlockFrameSection machineId={machine.id} /> : null}
     </Page>
   );
 }

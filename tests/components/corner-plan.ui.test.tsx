@@ -172,6 +172,7 @@ describe('a corner plan', () => {
     await userEvent.click(await rowOf(1));
     expect(screen.queryByRole('button', { name: 'Choose the dwell' })).toBeNull();
     expect(screen.queryByRole('button', { name: 'Plan with these' })).toBeNull();
+    expect(screen.queryByRole('heading', { name: 'Take the cut path away' })).toBeNull();
     expect(requests.map(({ path }) => path)).toEqual([`/api/corner-plans/${ids.report}`]);
   });
 
