@@ -36,7 +36,7 @@ export function narrowFeatures(contour: Contour, kerfWidth: number, loops: reado
   const { segments } = contour;
   const area = contourArea(contour);
   if (loops.length === 0 && area < 0) {
-    const widest = largestCircleInside(contour, 1e-6 * kerfWidth);
+    const widest = largestCircleInside(contour, 1e-2 * kerfWidth);
     return [{ kind: 'hole', width: 2 * widest.radius, at: widest.centre }];
   }
   const gaps = gapsBetween(segments, kerfWidth, scrapBeside(segments, area > 0));

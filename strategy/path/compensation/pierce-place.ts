@@ -8,6 +8,7 @@ import type { Box, Point } from '../point.ts';
 import { pointCross, pointDistance, pointDot } from '../point.ts';
 import type { Segment } from '../segment.ts';
 import { lineBetween, segmentLength, segmentPart, segmentPointAt, segmentStart, segmentTangentAt } from '../segment.ts';
+import type { Circle } from './inscribed.ts';
 import { largestCircleInside } from './inscribed.ts';
 import type { LeadIn, LeadInShape, StartPlace } from './lead-in.ts';
 import { straightLeadIn, tangentLeadIn } from './lead-in.ts';
@@ -110,29 +111,24 @@ export function piercePlace(path: StartPath, rule: LeadInRule, around: PierceSur
     return null;
   };
   const shortest = Math.max(craterRadius, around.kerfWidth);
-  const distances = [full];
-  if (path.closedIn && shortest < full) {
-    for (let i = 1; i <= steps; i++) distances.push(full * (shortest / full) ** (i / steps));
-  }
-  // how far a place in the hole can be from the path at all: longer distances need no trial
-  const widest = path.closedIn ? largestCircleInside({ segments: path.segments }, full * 1e-3) : null;
-  const reach = widest ? widest.radius + full * 1e-3 : Infinity;
-  for (const distance of distances) {
-    if (distance > reach) continue;
+  const tryAll = (distance: number): PiercePlace | null => {
     for (const candidate of candidates) {
       const found = attempt(candidate, distance);
       if (found) return found;
     }
-  }
-  if (widest && widest.radius < shortest) {
-    const counted =
-      craterRadius > around.kerfWidth ? `the crater is ${millimetres(craterRadius)} in radius` : 'the kerf is wider';
-    return {
-      kind: 'none',
-      what: 'too small',
-      at: widest.centre,
-      why: `${path.name} is too small to be pierced in: no place in it is farther than ${millimetres(widest.radius)} from the cut, and ${counted}`,
-    };
+    return null;
+  };
+  const found = tryAll(full);
+  if (found) return found;
+  if (path.closedIn && shortest < full) {
+    // how far a place in the hole can be from the path at all: longer distances need no trial
+    const widest = largestCircleInside({ segments: path.segments }, 0.02 * shortest, full);
+    if (widest.radius < shortest) return tooSmall(path, widest, craterRadius, around.kerfWidth);
+    for (let i = 1; i <= steps; i++) {
+      const distance = full * (shortest / full) ** (i / steps);
+      const shorter = distance <= widest.radius * 1.02 ? tryAll(distance) : null;
+      if (shorter) return shorter;
+    }
   }
   return (
     first ?? {
@@ -142,6 +138,19 @@ export function piercePlace(path: StartPath, rule: LeadInRule, around: PierceSur
       why: `${path.name} has no place between its corners to begin at`,
     }
   );
+}
+
+function tooSmall({ name }: StartPath, { centre, radius }: Circle, craterRadius: number, kerfWidth: number): Block {
+  const counted =
+    craterRadius > kerfWidth
+      ? `the crater is ${millimetres(craterRadius)} in radius`
+      : `the kerf is ${millimetres(kerfWidth)} wide`;
+  return {
+    kind: 'none',
+    what: 'too small',
+    at: centre,
+    why: `${name} is too small to be pierced in: no place in it is farther than ${millimetres(radius)} from the cut, and ${counted}`,
+  };
 }
 
 /** Lead-ins to a place whose pierce lies `distance` m from the path there, the wanted shape first. */
