@@ -4,3 +4,4 @@ export const revisionsRoot = ['revisions'] as const;
 export const reviewsRoot = ['reviews'] as const;
 export const cardsRoot = ['cards'] as const;
 export const partsRoot = ['parts'] as const;
+export const layoutsRoot = ['layouts'] as const;

@@ -10,6 +10,7 @@ const places: readonly Place[] = [
   place('/at-the-machine', shell.menuOf.atTheMachine, 'card.read'),
   place('/strategies', shell.menuOf.strategies, 'strategy.read'),
   place('/parts', shell.menuOf.parts, 'part.read'),
+  place('/layouts', shell.menuOf.layouts, 'layout.read'),
   place('/reviews', shell.menuOf.reviews, 'review.read'),
   place('/plates', shell.menuOf.plates, 'plate.read'),
   place('/machines', shell.menuOf.machines, 'machine.read'),

@@ -10,7 +10,7 @@ export const roleNames: Record<Role, string> = {
 /** What a role gets done here, for whoever gives it to somebody. */
 export const roleDeeds: Record<Role, string> = {
   operator: 'finds the card for a plate, says what went wrong',
-  programmer: 'brings drawings, plans corners',
+  programmer: 'brings drawings, lays plates out, plans corners',
   engineer: 'designs pierces and corner rules, keeps machines',
   lead: 'approves, withdraws, decides who may do what',
 };
@@ -42,6 +42,7 @@ export const shell = {
     atTheMachine: 'At the machine',
     strategies: 'Strategies',
     parts: 'Parts',
+    layouts: 'Plate layouts',
     reviews: 'Reviews',
     plates: 'Plates',
     machines: 'Machines',
@@ -66,6 +67,9 @@ export const titles = {
   parts: 'Parts',
   partNew: 'New part',
   part: 'Part',
+  layouts: 'Plate layouts',
+  layoutNew: 'Lay a plate out',
+  layout: 'Plate layout',
   cornerPlan: 'Corner plan',
   plates: 'Plates',
   plateNew: 'Book a plate in',

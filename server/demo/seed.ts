@@ -6,6 +6,7 @@ import { openDatabase } from '../../db/database.ts';
 import { demoHouseRules } from '../../db/demo/house-rules.ts';
 import { demoGrades, demoNozzles, demoPlates } from '../../db/demo/materials.ts';
 import { demoMachines } from '../../db/demo/machines.ts';
+import { demoLayout } from '../../db/demo/layouts.ts';
 import { demoCornerPlans, demoParts } from '../../db/demo/parts.ts';
 import { demoId } from '../../db/demo/ids.ts';
 import { demoMembers, demoPlants } from '../../db/demo/people.ts';
@@ -13,6 +14,7 @@ import { demoStrategies, type DemoStrategy } from '../../db/demo/strategies.ts';
 import { requestEndpoints } from '../../shared/cards.ts';
 import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
 import { houseRuleEndpoints } from '../../shared/house-rules.ts';
+import { laidPart, layoutEndpoints, type PlacementWire } from '../../shared/layouts.ts';
 import { gradeEndpoints, machineEndpoints, nozzleEndpoints } from '../../shared/machines.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { peopleEndpoints } from '../../shared/people.ts';
@@ -20,6 +22,7 @@ import { plateEndpoints } from '../../shared/plates.ts';
 import { reportEndpoints } from '../../shared/reports.ts';
 import { sessionEndpoints } from '../../shared/sessions.ts';
 import { revisionEndpoints, strategyEndpoints } from '../../shared/strategies.ts';
+import { placementArray } from '../../strategy/path/plate/index.ts';
 import { createApp } from '../app.ts';
 import { createPasswords } from '../auth/passwords.ts';
 import { createTokens } from '../auth/token.ts';
@@ -215,6 +218,7 @@ async function addWork(as: Cast): Promise<void> {
       body: { id, partId, revisionId, thickness, plateTemperature, skeleton, overrides: {} },
     });
   }
+  await addLayout(programmer);
 
   const operator = await as('operator@quay.example');
   const engineer = await as('engineer@quay.example');
@@ -250,6 +254,31 @@ async function addWork(as: Cast): Promise<void> {
       },
     });
   }
+}
+
+/** A plate layout of the parts above. */
+async function addLayout(programmer: Client): Promise<void> {
+  const { id, name, plateId, kerfWidth, clearance, edgeMargin, arrays } = demoLayout();
+  if (await programmer.find(layoutEndpoints.get, { layoutId: id })) return;
+  const placements: PlacementWire[] = [];
+  for (const { partId, array } of arrays) {
+    const part = await programmer.call(partEndpoints.get, { params: { partId } });
+    if (!part) throw new Error(`the demo part ${partId} is not there`);
+    const laid = laidPart({ id: part.id, name: part.name, contours: part.reading.contours });
+    placements.push(...placementArray(laid, array, placements.length + 1));
+  }
+  await programmer.call(layoutEndpoints.add, {
+    body: {
+      id,
+      name,
+      plate: { kind: 'plate', plateId },
+      kerfWidth,
+      clearance,
+      edgeMargin,
+      placements,
+      order: null,
+    },
+  });
 }
 
 // Run as a program?

@@ -43,8 +43,8 @@ export async function routesOf(context, who) {
     const answer = await context.request.get(url);
     return answer.ok() ? answer.json() : { items: [] };
   };
-  const [machines, plates, strategies, parts, reports] = await Promise.all(
-    ['/api/machines', '/api/plates', '/api/strategies', '/api/parts', '/api/reports'].map(
+  const [machines, plates, strategies, parts, layouts, reports] = await Promise.all(
+    ['/api/machines', '/api/plates', '/api/strategies', '/api/parts', '/api/layouts', '/api/reports'].map(
       async (url) => (await get(url)).items,
     ),
   );
@@ -84,6 +84,8 @@ export async function routesOf(context, who) {
     ['strategies', '/strategies'],
     ['parts', '/parts'],
     ['part-new', '/parts/new'],
+    ['layouts', '/layouts'],
+    ['layout-new', '/layouts/new'],
     ['plate-new', '/plates/new'],
   );
   for (const state of ['draft', 'inReview', 'returned', 'approved']) {
@@ -97,6 +99,7 @@ export async function routesOf(context, who) {
     const plan = whole.flatMap((part) => part.cornerPlans ?? [])[0];
     if (plan) routes.push(['corner-plan', `/corner-plans/${plan.id}`]);
   }
+  if (layouts[0]) routes.push(['layout', `/layouts/${layouts[0].id}`]);
   if (who === 'programmer') return routes;
   routes.push(
     ['strategy-new', '/strategies/new'],

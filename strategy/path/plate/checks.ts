@@ -44,7 +44,8 @@ const slack = 1e-6;
  * exact distances of lines and arcs. A piece that lies in another's hole is no overlap. Throws RangeError for a room below 0.
  */
 export function layoutProblems(parts: readonly PlacedPart[], plate: PlateOutline, room: LayoutRoom): LayoutProblems {
-  for (const [what, value] of Object.entries(room)) {
+  const { kerfWidth, clearance, edgeMargin } = room;
+  for (const [what, value] of Object.entries({ kerfWidth, clearance, edgeMargin })) {
     if (!(value >= 0)) throw new RangeError(`${what} ${value} m is outside [0, ∞)`);
   }
   const problems: LayoutProblem[] = [];
@@ -58,7 +59,7 @@ export function layoutProblems(parts: readonly PlacedPart[], plate: PlateOutline
     const found = atEdge(piece, plate, edge, room);
     if (found) problems.push(found);
   }
-  const needed = 2 * room.kerfWidth + room.clearance;
+  const needed = 2 * kerfWidth + clearance;
   for (const [a, b] of neighbours(parts, needed)) {
     const [first, second] = [pieces[a], pieces[b]];
     if (!first || !second) continue;

@@ -10,6 +10,9 @@ export type OrderChange =
 
 const corner: Point = { x: 0, y: 0 };
 
+/** Distances that differ by less are equal, m: rounding decides nothing. */
+const tie = 1e-9;
+
 /**
  * The computed cut order: ids of all contours. Part by part, each time the one whose first contour begins nearest to where the beam is, from the plate's
  * corner on; within a part what lies inside before what lies around it, holes before outlines, again the nearest next. A piece that lies in another's hole
@@ -23,6 +26,7 @@ export function cutOrder(parts: readonly PlacedPart[], from: Point = corner): st
     waiting.set(hole.placement, (waiting.get(hole.placement) ?? 0) + 1);
     holding.set(number, [...(holding.get(number) ?? []), hole.placement]);
   }
+  const begins = new Map(parts.map((part) => [part, firstContours(part).map(startOf)]));
   const left = new Set([...parts].sort((a, b) => a.number - b.number));
   const order: string[] = [];
   let at = from;
@@ -31,8 +35,10 @@ export function cutOrder(parts: readonly PlacedPart[], from: Point = corner): st
     let least = Infinity;
     for (const part of left) {
       if ((waiting.get(part.number) ?? 0) > 0) continue;
-      const distance = Math.min(...firstContours(part).map((contour) => pointDistance(at, startOf(contour))));
-      if (next && !(distance < least)) continue;
+      let square = Infinity;
+      for (const { x, y } of begins.get(part) ?? []) square = Math.min(square, (x - at.x) ** 2 + (y - at.y) ** 2);
+      const distance = Math.sqrt(square);
+      if (next && !(distance < least - tie)) continue;
       next = part;
       least = distance;
     }
@@ -185,14 +191,9 @@ function holdersOf(parts: readonly PlacedPart[]): Map<number, PlacedContour> {
     if (!outline) continue;
     for (const hole of holes) {
       const held = hole.box;
-      const within =
-        hole.placement !== number &&
-        box.minX > held.minX &&
-        box.maxX < held.maxX &&
-        box.minY > held.minY &&
-        box.maxY < held.maxY;
+      if (box.minX <= held.minX || box.maxX >= held.maxX || box.minY <= held.minY || box.maxY >= held.maxY) continue;
       const known = holders.get(number);
-      if (!within || (known && area(known) <= area(hole))) continue;
+      if (hole.placement === number || (known && area(known) <= area(hole))) continue;
       if (contourContains(hole.contour, startOf(outline))) holders.set(number, hole);
     }
   }
@@ -220,7 +221,7 @@ function contoursInOrder({ contours }: PlacedPart, from: Point): PlacedContour[]
     for (const contour of left) {
       if ((inside.get(contour.id) ?? 0) > 0 || (contour.role === 'outer' && holesLeft > 0)) continue;
       const distance = pointDistance(at, startOf(contour));
-      if (next && !(distance < least)) continue;
+      if (next && !(distance < least - tie)) continue;
       next = contour;
       least = distance;
     }
