@@ -9,18 +9,29 @@ export function cornersInward(
   corners: readonly Pick<PlannedCorner, 'id' | 'contourId' | 'at'>[],
   contours: readonly { id: string; segments: readonly Segment[] }[],
 ): ReadonlyMap<string, Point> {
+  const own = new Map<string, Pick<PlannedCorner, 'id' | 'contourId' | 'at'>[]>();
+  for (const corner of corners) {
+    const known = own.get(corner.contourId);
+    if (known) known.push(corner);
+    else own.set(corner.contourId, [corner]);
+  }
   const found = new Map<string, Point>();
   for (const contour of contours) {
-    const own = corners.filter((corner) => corner.contourId === contour.id);
-    if (own.length === 0) continue;
-    const breaks = contourCorners(contour);
-    for (const corner of own) {
-      const nearest = breaks.reduce<{ at: number; inward: Point } | null>((best, one) => {
-        const at = Math.hypot(one.point.x - corner.at.x, one.point.y - corner.at.y);
-        return best === null || at < best.at ? { at, inward: cornerInward(one) } : best;
-      }, null);
-      if (nearest && nearest.at < 1e-4) found.set(corner.id, nearest.inward);
+    const planned = own.get(contour.id);
+    if (!planned) continue;
+    const breaks = new Map(contourCorners(contour).map((one) => [cellOf(one.point), one]));
+    for (const { id, at } of planned) {
+      const one = cellsAround(at).flatMap((cell) => breaks.get(cell) ?? [])[0];
+      if (one) found.set(id, cornerInward(one));
     }
   }
   return found;
 }
+
+/** A drawing's corner and the plan's lie nearer than this, m; corners of a drawing lie farther apart. */
+const cellSize = 1e-4;
+const cellOf = ({ x, y }: Point) => `${Math.round(x / cellSize)} ${Math.round(y / cellSize)}`;
+
+/** The cell of a place first, then those that it may have been rounded into. */
+const cellsAround = ({ x, y }: Point) =>
+  [0, 1, -1].flatMap((i) => [0, 1, -1].map((j) => cellOf({ x: x + i * cellSize, y: y + j * cellSize })));

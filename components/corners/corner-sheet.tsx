@@ -1,4 +1,5 @@
 import { View } from 'react-native';
+import { cornerToolText } from '@/components/text/corner-preview.ts';
 import { asSentence, cornerText, treatmentText } from '@/components/text/corners.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { space } from '@/components/theme/space.ts';
@@ -22,11 +23,30 @@ type CornerSheetProps = {
   /** None for who only reads. */
   onOverride: ((treatment: Treatment | null) => void) | null;
   busy: boolean;
+  /** To the corner before (−1) or after (+1); none at the ends. */
+  onTurn: (by: -1 | 1) => void;
+  first: boolean;
+  last: boolean;
+  onShow: () => void;
   onClose: () => void;
+  /** Within a sheet that has its own frame. */
+  framed?: boolean;
 };
 
 /** All about one corner: angle, return temperature without and with its treatment, what else would do and why not. */
-export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }: CornerSheetProps) {
+export function CornerSheet({
+  corner,
+  number,
+  limit,
+  onOverride,
+  busy,
+  onTurn,
+  first,
+  last,
+  onShow,
+  onClose,
+  framed = true,
+}: CornerSheetProps) {
   const system = useUnitSystem();
   const length = (metres: number) => quantityText(metres, 'length', system, { figures: 3 }).text;
   const seconds = (value: number) => quantityText(value, 'time', system, { figures: 3 }).text;
@@ -72,16 +92,20 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
         ]
       : []),
   ];
+  const Frame = framed ? Panel : Stack;
   return (
-    <Panel>
-      <Row justify="space-between" wrap={false} align="flex-start">
-        <Row gap="s" wrap={false} grow>
-          <TreatmentBadge treatment={corner.treatment} trouble={corner.trouble !== null} size={44} />
-          <Stack gap="hair" grow>
-            <Small>{cornerText.row(number)}</Small>
-            <Heading level={2}>{`${treatmentText[corner.treatment]}, ${cornerText.angle(corner.angle)}`}</Heading>
-          </Stack>
-        </Row>
+    <Frame>
+      <Row gap="s" wrap={false}>
+        <TreatmentBadge treatment={corner.treatment} trouble={corner.trouble !== null} size={44} />
+        <Stack gap="hair" grow>
+          {framed && <Small>{cornerText.row(number)}</Small>}
+          <Heading level={2}>{`${treatmentText[corner.treatment]}, ${cornerText.angle(corner.angle)}`}</Heading>
+        </Stack>
+      </Row>
+      <Row gap="s">
+        <Button label="←" spoken={cornerToolText.cornerBefore} disabled={first} onPress={() => onTurn(-1)} />
+        <Button label="→" spoken={cornerToolText.cornerAfter} disabled={last} onPress={() => onTurn(1)} />
+        <Button label={cornerToolText.show} spoken={cornerToolText.showOnDrawing} onPress={onShow} />
         <Button kind="quiet" label={cornerText.close} onPress={onClose} />
       </Row>
       {corner.trouble !== null && <Notice kind="caution">{asSentence(corner.trouble)}</Notice>}
@@ -140,7 +164,7 @@ export function CornerSheet({ corner, number, limit, onOverride, busy, onClose }
       {onOverride && corner.chosenBy === 'person' && (
         <Button kind="quiet" label={cornerText.byRule} busy={busy} onPress={() => onOverride(null)} />
       )}
-    </Panel>
+    </Frame>
   );
 }
 

@@ -69,8 +69,9 @@ type DrawingViewProps = {
   onTake?: (place: Point) => { move: (by: Point) => void; drop: () => void; cancel: () => void } | null;
   /** Drawn over the rest and moved with it; drawn again without it. */
   over?: (space: DrawingSpace) => ReactNode;
-  /** Beside the buttons. */
+  /** Beside the buttons, and what else is to be known of them. */
   tools?: ReactNode;
+  ways?: string;
   control?: Ref<DrawingControl>;
   height: number;
 };
@@ -79,8 +80,8 @@ const markOff = 22;
 const fingerReach = 30;
 /** A tap nearer than this means the mark, and not what lies under it. */
 const markReach = 16;
-/** More marks than this are dots, but for those that matter most. */
-const mostMarks = 140;
+/** More marks than this in the frame are dots, but for those that matter most. */
+const mostMarks = 100;
 const none: readonly never[] = [];
 
 /** The part as a technical drawing: outline, section hatch, holes, centre lines; moved and enlarged by touch, wheel, keys and buttons. */
@@ -102,6 +103,7 @@ export function DrawingView({
   onTake,
   over,
   tools,
+  ways = '',
   control,
   height,
 }: DrawingViewProps) {
@@ -122,16 +124,28 @@ export function DrawingView({
   /** Marks near the frame, px from the drawing's middle. */
   const placeMarks = (seen: ViewWindow) => {
     const middle = windowToFrame(seen, frame, origin);
+    const beyond = (at: Point, by: number) =>
+      Math.abs(at.x + middle.x - width / 2) > width * (0.5 + by) ||
+      Math.abs(at.y + middle.y - height / 2) > height * (0.5 + by);
     const near = ranked.flatMap((mark) => {
       const at = { x: (mark.at.x - origin.x) * seen.scale, y: (origin.y - mark.at.y) * seen.scale };
-      const far =
-        Math.abs(at.x + middle.x - width / 2) > width * (0.5 + drawnAround) ||
-        Math.abs(at.y + middle.y - height / 2) > height * (0.5 + drawnAround);
-      if (far && mark.id !== chosen) return [];
-      const off = mark.off ?? { x: 0, y: 0 };
-      return [{ id: mark.id, x: at.x + off.x * markOff, y: at.y - off.y * markOff }];
+      return beyond(at, drawnAround) && mark.id !== chosen ? [] : [{ mark, at, seen: !beyond(at, 0) }];
     });
-    return marksSpread(near, 24, mostMarks);
+    // too many to tell apart? Then what is in order is a dot on its place, and only the rest stands off it
+    const crowded = near.filter((one) => one.seen).length > mostMarks;
+    const stands = ({ id, weight = 0 }: DrawingMark) => !crowded || weight > 1 || id === chosen;
+    const standing = near.filter(({ mark }) => stands(mark)).sort((a, b) => Number(b.seen) - Number(a.seen));
+    const placed = marksSpread(
+      standing.map(({ mark: { id, off = { x: 0, y: 0 } }, at }) => ({
+        id,
+        x: at.x + off.x * markOff,
+        y: at.y - off.y * markOff,
+      })),
+      24,
+      2 * mostMarks,
+    );
+    const lying = near.flatMap(({ mark, at }) => (stands(mark) ? [] : [{ id: mark.id, ...at, full: false }]));
+    return [...placed, ...lying];
   };
 
   const { view, fitted, fit, zoomBy, goTo } = usePanZoom({
@@ -259,10 +273,10 @@ export function DrawingView({
       </View>
       <View style={styles.ways}>
         {wide ? (
-          <Small>{drawingText.ways}</Small>
+          <Small>{`${drawingText.ways} ${ways}`}</Small>
         ) : (
           <Fold label={drawingText.waysTitle}>
-            <Small>{drawingText.ways}</Small>
+            <Small>{`${drawingText.ways} ${ways}`}</Small>
           </Fold>
         )}
       </View>
@@ -421,6 +435,6 @@ const styles = StyleSheet.create({
     borderTopWidth: 1,
     borderTopColor: roles.rule,
   },
-  tools: { flexDirection: 'row', flexGrow: 1, gap: 8 },
+  tools: { flexDirection: 'row', flexWrap: 'wrap', flexGrow: 1, gap: 8 },
   ways: { paddingHorizontal: 12, paddingBottom: 8 },
 });

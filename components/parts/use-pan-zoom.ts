@@ -18,7 +18,7 @@ const fineKeyStep = 6;
 const zoomStep = 1.4;
 const fitMargin = 28;
 /** After so long without a movement what is seen is drawn anew, sharp and with its details, ms. */
-const restTime = 160;
+const restTime = 200;
 /** How far beyond each edge of the frame is drawn, in frames: so far the drawing is pushed without being drawn again. */
 export const drawnAround = 0.5;
 
@@ -68,6 +68,8 @@ export function usePanZoom({ frameRef, layersRef, box, frame, onTap, onEnter, on
   const seen = useRef<ViewWindow | null>(null);
   const latest = useRef({ view, fitView, frame, bounds, box, onTap, onEnter, onTake });
   const pending = useRef<{ frame: number | null; rest: number | null }>({ frame: null, rest: null });
+  /** While a finger or the mouse holds the drawing it is not at rest, however still it is held. */
+  const holding = useRef(false);
 
   const push = useCallback(() => {
     const layers = layersRef.current;
@@ -97,7 +99,7 @@ export function usePanZoom({ frameRef, layersRef, box, frame, onTap, onEnter, on
       seen.current = next;
       const { current } = pending;
       if (current.rest !== null) window.clearTimeout(current.rest);
-      current.rest = window.setTimeout(() => draw(seen.current), restTime);
+      current.rest = holding.current ? null : window.setTimeout(() => draw(seen.current), restTime);
       current.frame ??= requestAnimationFrame(() => {
         current.frame = null;
         const { view: drawn, fitView: whole, frame: size, box: all } = latest.current;
@@ -145,10 +147,13 @@ export function usePanZoom({ frameRef, layersRef, box, frame, onTap, onEnter, on
         held = what ? { from: placeOf(event), what } : null;
       } else letGo();
       pointers.set(event.pointerId, placeOf(event));
+      holding.current = true;
     };
     const drag = (event: PointerEvent) => {
       const was = pointers.get(event.pointerId);
       if (!was) return;
+      // a mouse let go outside the frame comes back without its button
+      if (event.pointerType === 'mouse' && event.buttons === 0) return cancel(event);
       const at = placeOf(event);
       const step = Math.hypot(at.x - was.x, at.y - was.y);
       if (step === 0) return;
@@ -174,17 +179,22 @@ export function usePanZoom({ frameRef, layersRef, box, frame, onTap, onEnter, on
     };
     const up = (event: PointerEvent) => {
       const known = pointers.delete(event.pointerId);
+      holding.current = pointers.size > 0;
       if (known && held && travelled > tapSlack) {
         held.what.drop();
         held = null;
       }
       letGo();
-      if (known && pointers.size === 0 && travelled <= tapSlack) latest.current.onTap(placeOf(event), now());
+      if (!known || pointers.size > 0) return;
+      if (travelled <= tapSlack) latest.current.onTap(placeOf(event), now());
+      else if (seen.current) move(seen.current);
     };
     // the browser has taken the finger to scroll the page: then the drawing was not meant
     const cancel = (event: PointerEvent) => {
       letGo();
-      if (pointers.delete(event.pointerId) && pointers.size === 0) draw(before);
+      const known = pointers.delete(event.pointerId);
+      holding.current = pointers.size > 0;
+      if (known && pointers.size === 0) draw(before);
     };
     const wheel = (event: WheelEvent) => {
       // does the page need the wheel to scroll? then the drawing takes it only once it was clicked, or with the control key

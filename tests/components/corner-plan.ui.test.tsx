@@ -3,114 +3,10 @@ import { userEvent } from '@testing-library/user-event';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { cornersInward } from '@/components/corners/corner-inward.ts';
 import { CornerPlanScreen } from '@/components/corners/corner-plan-screen.tsx';
-import type { CornerPlan, PlannedCorner } from '@/shared/corner-plans.ts';
-import { arcOf, lineBetween } from '@/strategy/path/index.ts';
 import { ids, json, problem, serveWith, show } from '../support/page.tsx';
+import { planOf } from './corner-plan-fixtures.ts';
 
 afterEach(() => vi.unstubAllGlobals());
-
-const square = [
-  { x: 0, y: 0 },
-  { x: 0.1, y: 0 },
-  { x: 0.1, y: 0.1 },
-  { x: 0, y: 0.1 },
-];
-const segments = square.map((start, i) => lineBetween(start, square[(i + 1) % 4] ?? start));
-
-const corner = (n: number, more: Partial<PlannedCorner> = {}): PlannedCorner => ({
-  id: `c0-${n}`,
-  contourId: 'c0',
-  at: square[n] ?? { x: 0, y: 0 },
-  angle: Math.PI / 2,
-  convex: true,
-  treatment: 'leave',
-  why: 'the tip returns at 180 °C, under the limit',
-  chosenBy: 'rule',
-  untreated: 453.15,
-  treated: 453.15,
-  straightEdge: 330,
-  addedTime: 0,
-  dwell: null,
-  loop: null,
-  options: [
-    {
-      treatment: 'leave',
-      fits: true,
-      returnTemperature: 453.15,
-      addedTime: 0,
-      why: 'the tip returns at 180 °C',
-      at: null,
-    },
-    {
-      treatment: 'loop',
-      fits: false,
-      returnTemperature: null,
-      addedTime: null,
-      why: 'the loop would come within 1 mm of the plate’s edge',
-      at: { x: 0.12, y: -0.005 },
-    },
-    { treatment: 'dwell', fits: true, returnTemperature: 400, addedTime: 1.2, why: 'after waiting 1.2 s', at: null },
-  ],
-  trouble: null,
-  ...more,
-});
-
-const planOf = (more: Partial<CornerPlan> = {}): CornerPlan => ({
-  id: ids.report,
-  version: 5,
-  part: {
-    id: ids.plate,
-    name: 'Bracket',
-    contours: [{ id: 'c0', depth: 0, role: 'outer', parent: null, layer: 'CUT', segments }],
-  },
-  revision: {
-    id: ids.revision,
-    number: 3,
-    strategyId: ids.strategy,
-    strategyName: 'Bearing plate',
-    state: 'approved',
-    approved: true,
-  },
-  thickness: 0.02,
-  plateTemperature: 293.15,
-  skeleton: { left: 0.02, right: 0.02, below: 0.02, above: 0.02 },
-  overrides: {},
-  limit: 523.15,
-  cutting: { feed: 0.02, acceleration: 2, jerk: 50, travel: 1, pierce: 1.5, kerfWidth: 5e-4 },
-  corners: [
-    corner(0),
-    corner(1, {
-      treatment: 'loop',
-      untreated: 700,
-      treated: 450,
-      addedTime: 2.6,
-      loop: {
-        radius: 5e-3,
-        extension: 5e-3,
-        length: 0.0336,
-        slugArea: 4e-5,
-        segments: [arcOf({ x: 0.105, y: -0.005 }, 5e-3, 0, 4)],
-        slug: [],
-      },
-    }),
-    corner(2, { trouble: 'nothing keeps this tip under the limit', treated: 700, untreated: 700 }),
-    corner(3, { treatment: 'dwell', dwell: 1.2, treated: 400, addedTime: 1.2 }),
-  ],
-  totals: {
-    corners: 4,
-    loops: 1,
-    dwells: 1,
-    trouble: 1,
-    addedTime: 3.8,
-    addedLength: 0.0336,
-    addedOxygen: 0.004,
-    hottestUntreated: 700,
-    hottestTreated: 700,
-  },
-  changedAt: '2031-03-03T14:02:00Z',
-  changedBy: { id: ids.user, name: 'Programmer' },
-  ...more,
-});
 
 const rowOf = (number: number) => screen.findByRole('button', { name: new RegExp(`^Corner ${number},`) });
 
@@ -132,7 +28,10 @@ describe('a corner plan', () => {
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
     await userEvent.click(await rowOf(1));
     expect(await screen.findByRole('heading', { name: 'Leave, 90° inside the part' })).toBeTruthy();
-    expect(screen.getByText('The loop would come within 1 mm of the plate’s edge.')).toBeTruthy();
+    // in the sheet, and below the drawing where the place is marked
+    expect(screen.getAllByText('The loop would come within 1 mm of the plate’s edge.')).toHaveLength(2);
+    expect(screen.getByText('In the way of a loop at corner 1')).toBeTruthy();
+    expect(screen.getByTestId('in-the-way')).toBeTruthy();
     expect(screen.getByRole<HTMLButtonElement>('button', { name: 'Choose the loop' }).disabled).toBe(true);
   });
 

@@ -125,6 +125,21 @@ describe('a drawing of very many pieces', () => {
 });
 
 describe('marks on a drawing', () => {
+  it('lie on their corners as dots where there are too many to tell apart, but for what is in trouble', () => {
+    const marks = Array.from({ length: 300 }, (_, i) => ({
+      id: String(i),
+      at: { x: 0.005 * (i % 20), y: 0.006 * Math.floor(i / 20) },
+      off: { x: 0.7, y: 0.7 },
+      weight: i === 150 ? 2 : 1,
+      draw: <circle r={9} />,
+    }));
+    const contours = [{ segments: [circleOf({ x: 0.05, y: 0.05 }, 0.05)] }];
+    render(<DrawingView label="Part" contours={contours} marks={marks} height={300} />);
+    expect(screen.getAllByTestId('drawing-mark')).toHaveLength(1);
+    const dots = screen.getAllByTestId('drawing-dots').map((path) => path.getAttribute('d') ?? '');
+    expect(dots.join('').match(/M/g)?.length).toBe(299);
+  });
+
   it('draws only so many in full, and dots that would lie on each other once', () => {
     const many = Array.from({ length: 50 }, (_, i) => ({ id: String(i), x: 40 * i, y: 0 }));
     expect(marksSpread(many, 24, 12).filter(({ full }) => full)).toHaveLength(12);
@@ -204,6 +219,7 @@ describe('the drawing', () => {
     await new Promise((resolve) => requestAnimationFrame(resolve));
     expect(layers?.getAttribute('style')).toMatch(/transform: translate\(40.00px, 10.00px\) scale\(1\)/);
     expect(drawn()).toBe(before);
+    fireEvent.pointerUp(drawing, { pointerId: 1, clientX: 340, clientY: 110 });
     await waitFor(() => expect(drawn()).not.toBe(before));
     expect(layers?.getAttribute('style')).toMatch(/transform: translate\(0.00px, 0.00px\) scale\(1\)/);
   });

@@ -1,0 +1,199 @@
+import { useMemo, type ReactNode, type Ref } from 'react';
+import { View } from 'react-native';
+import Svg, { Circle, G, Path } from 'react-native-svg';
+import { pathsBox } from '@/components/parts/drawing-geometry.ts';
+import type { DrawingSpace } from '@/components/parts/drawing-space.ts';
+import { DrawingView, type DrawingControl, type DrawingMark } from '@/components/parts/drawing-view.tsx';
+import { snapAt, type Snap } from '@/components/parts/measure.ts';
+import { cornerToolText, measureText } from '@/components/text/corner-preview.ts';
+import { asSentence, cornerText } from '@/components/text/corners.ts';
+import { roles } from '@/components/theme/roles.ts';
+import { Button } from '@/components/ui/button.tsx';
+import { Row, Stack } from '@/components/ui/stack.tsx';
+import { Small } from '@/components/ui/text.tsx';
+import type { CornerPlan, PlannedCorner } from '@/shared/corner-plans.ts';
+import type { Point } from '@/strategy/path/index.ts';
+import { cornersInward } from './corner-inward.ts';
+import { MeasureLayer } from './measure-layer.tsx';
+import { MeasurePanel } from './measure-panel.tsx';
+import { RunLayer, type Dropped } from './run-layer.tsx';
+import type { RunClock } from './run-clock.ts';
+import type { CutTimeline } from './cut-timeline.ts';
+import { BadgeShape } from './treatment-badge.tsx';
+
+type PlanDrawingProps = {
+  plan: CornerPlan;
+  chosen: string | null;
+  onChoose: (id: string | null) => void;
+  /** Places measured so far; null while nothing is measured. */
+  measured: readonly Snap[] | null;
+  onMeasure: (places: readonly Snap[] | null) => void;
+  timeline: CutTimeline;
+  dropped: readonly Dropped[];
+  clock: RunClock;
+  control: Ref<DrawingControl>;
+  /** Steps back and forth; none for who only reads. */
+  steps: ReactNode;
+  height: number;
+};
+
+/** The part on its plate: contours, loops with their slugs, a badge a corner, what stands in a loop's way, the run of the cut, what is measured. */
+export function PlanDrawing({
+  plan,
+  chosen,
+  onChoose,
+  measured,
+  onMeasure,
+  timeline,
+  dropped,
+  clock,
+  control,
+  steps,
+  height,
+}: PlanDrawingProps) {
+  const { corners } = plan;
+  const { contours } = plan.part;
+  const loops = useMemo(
+    () =>
+      corners.flatMap(({ id, loop, round }) => [
+        ...(loop ? [{ id, segments: loop.segments }] : []),
+        ...(round ? [{ id, segments: round.finished }] : []),
+      ]),
+    [corners],
+  );
+  const slugs = useMemo(() => corners.flatMap(({ loop }) => (loop ? [{ segments: loop.slug }] : [])), [corners]);
+  const eased = useMemo(
+    () => corners.flatMap(({ id, ease }) => (ease ? [{ id, kind: 'ease' as const, segments: ease.segments }] : [])),
+    [corners],
+  );
+  const plate = useMemo(() => {
+    const box = pathsBox(contours);
+    const { left, right, below, above } = plan.skeleton;
+    return { minX: box.minX - left, minY: box.minY - below, maxX: box.maxX + right, maxY: box.maxY + above };
+  }, [contours, plan.skeleton]);
+  const marks = useMarks(plan, chosen);
+
+  const index = corners.findIndex(({ id }) => id === chosen);
+  const corner = corners[index];
+  const blocked = corner ? inTheWay(corner) : null;
+  const shown = useMemo(
+    () => ({ paths: [...contours, ...loops], corners: corners.map(({ at }) => at) }),
+    [contours, loops, corners],
+  );
+  const aim = (place: Point, reach: number) => {
+    const next = snapAt(place, reach, shown);
+    // a third place begins again
+    onMeasure(measured?.length === 1 ? [...measured, next] : [next]);
+  };
+
+  return (
+    <Stack gap="m">
+      <DrawingView
+        label={cornerText.drawing(plan.part.name, plan.totals)}
+        contours={contours}
+        plate={plate}
+        loops={loops}
+        slugs={slugs}
+        traces={eased}
+        marks={marks}
+        chosen={chosen}
+        onChoose={onChoose}
+        onAim={measured ? aim : null}
+        over={(space) => (
+          <>
+            <RunLayer space={space} timeline={timeline} dropped={dropped} clock={clock} />
+            {corner && blocked && <InTheWay space={space} from={corner.at} at={blocked.at} />}
+            {measured && <MeasureLayer space={space} places={measured} />}
+          </>
+        )}
+        tools={
+          <>
+            <Button
+              label={measured ? measureText.end : measureText.toggle}
+              expanded={measured !== null}
+              onPress={() => onMeasure(measured ? null : [])}
+            />
+            {steps}
+          </>
+        }
+        ways={steps ? cornerToolText.keys : ''}
+        control={control}
+        height={height}
+      />
+      {measured && <MeasurePanel places={measured} />}
+      {blocked && (
+        <Row gap="s" wrap={false}>
+          <Svg width={28} height={28} viewBox="-14 -14 28 28" aria-hidden style={{ flexShrink: 0 }}>
+            <Obstacle />
+          </Svg>
+          <View style={{ flexShrink: 1 }}>
+            <Small strong>{cornerToolText.inTheWay(index + 1)}</Small>
+            <Small>{asSentence(blocked.why)}</Small>
+          </View>
+        </Row>
+      )}
+    </Stack>
+  );
+}
+
+/** A badge a corner. Choosing one changes that one and the one before, and leaves the others as they are. */
+function useMarks({ corners, part }: CornerPlan, chosen: string | null): readonly DrawingMark[] {
+  const inward = useMemo(() => cornersInward(corners, part.contours), [corners, part.contours]);
+  const unchosen = useMemo(
+    () => corners.map((corner) => markOf(corner, inward.get(corner.id), false)),
+    [corners, inward],
+  );
+  return useMemo(() => {
+    const index = corners.findIndex(({ id }) => id === chosen);
+    const corner = corners[index];
+    return corner ? unchosen.with(index, markOf(corner, inward.get(corner.id), true)) : unchosen;
+  }, [corners, inward, unchosen, chosen]);
+}
+
+const markOf = (
+  { id, at, angle, treatment, trouble }: PlannedCorner,
+  inward: Point | undefined,
+  chosen: boolean,
+): DrawingMark => ({
+  id,
+  at,
+  off: badgeOff(inward, angle),
+  weight: trouble !== null ? 2 : treatment === 'leave' ? 0 : 1,
+  draw: <BadgeShape treatment={treatment} trouble={trouble !== null} chosen={chosen} />,
+});
+
+/** The narrower the tip, the further in its badge stands, so that it lies on the steel; within twice the usual distance. */
+function badgeOff(inward: Point | undefined, angle: number): Point | undefined {
+  const further = Math.min(2, Math.max(1, Math.SQRT1_2 / Math.sin(Math.min(angle, Math.PI) / 2)));
+  return inward && { x: inward.x * further, y: inward.y * further };
+}
+
+/** Where and why a loop was refused, when something stood in its way. */
+function inTheWay({ options }: PlannedCorner): { at: Point; why: string } | null {
+  const loop = options.find(({ treatment, fits }) => treatment === 'loop' && !fits);
+  return loop?.at ? { at: loop.at, why: loop.why } : null;
+}
+
+/** What stands in the way, and a line to it from the corner whose loop was refused. */
+function InTheWay({ space, from, at }: { space: DrawingSpace; from: Point; at: Point }) {
+  const a = space.at(from);
+  const b = space.at(at);
+  return (
+    <G testID="in-the-way">
+      <Path d={`M${a.x} ${a.y}L${b.x} ${b.y}`} stroke={roles.hot} strokeWidth={1.6} strokeDasharray="3 3" />
+      <G transform={`translate(${b.x} ${b.y})`}>
+        <Obstacle />
+      </G>
+    </G>
+  );
+}
+
+/** A ring with a bar across: no way through. */
+function Obstacle() {
+  return (
+    <>
+      <Circle r={10} fill={roles.sheet} stroke={roles.hot} strokeWidth={2.4} />
+      <Path d="M-6.5 6.5 6.5 -6.5" stroke={roles.hot} strokeWidth={2.4} />
+    </>
+  );
+}

@@ -1,0 +1,28 @@
+import type { CornerPlan } from '@/shared/corner-plans.ts';
+import type { CutPath } from '@/strategy/path/cut-path.ts';
+import { segmentStart } from '@/strategy/path/index.ts';
+import { cutTimeline, timeOfLoop, type CutTimeline } from './cut-timeline.ts';
+import type { Dropped } from './run-layer.tsx';
+
+/**
+ * The cut of a plan in time, and what drops out when: the slug of each loop when the loop is cut, what a hole leaves when the hole is, and
+ * the part itself when its outline is.
+ */
+export function planRun(
+  { part, corners, cutting }: Pick<CornerPlan, 'part' | 'corners' | 'cutting'>,
+  path: CutPath,
+): { timeline: CutTimeline; dropped: Dropped[] } {
+  const timeline = cutTimeline(path, cutting);
+  const contours = new Map(part.contours.map((contour) => [contour.id, contour]));
+  const dropped: Dropped[] = timeline.runs.flatMap(({ contourId, end }) => {
+    const contour = contours.get(contourId);
+    return contour ? [{ time: end, scrap: contour.role === 'hole', segments: contour.segments }] : [];
+  });
+  for (const { contourId, loop } of corners) {
+    const first = loop?.segments[0];
+    if (!loop || !first || loop.slug.length === 0) continue;
+    const time = timeOfLoop(timeline, contourId, segmentStart(first), loop.segments.length);
+    if (time !== null) dropped.push({ time, scrap: true, segments: loop.slug });
+  }
+  return { timeline, dropped: dropped.sort((a, b) => a.time - b.time) };
+}

@@ -1,0 +1,68 @@
+import { View } from 'react-native';
+import { runText } from '@/components/text/corner-preview.ts';
+import { Button } from '@/components/ui/button.tsx';
+import { Fold } from '@/components/ui/fold.tsx';
+import { Panel } from '@/components/ui/panel.tsx';
+import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
+import { Body, Figure, Small } from '@/components/ui/text.tsx';
+import { CutSlider } from './cut-slider.tsx';
+import { cutMoment, type CutTimeline } from './cut-timeline.ts';
+import { countBefore, type Dropped } from './run-layer.tsx';
+import { runSpeed, useRunning, useRunTime, type RunClock } from './run-clock.ts';
+
+type RunPanelProps = { timeline: CutTimeline; dropped: readonly Dropped[]; clock: RunClock };
+
+/** The cut run in order: a slider over its time, what happens then, and a button that runs it. */
+export function RunPanel({ timeline, dropped, clock }: RunPanelProps) {
+  const { running, toggle } = useRunning(clock, timeline.duration);
+  if (timeline.runs.length === 0) {
+    return (
+      <Panel title={runText.title}>
+        <Body>{runText.nothing}</Body>
+      </Panel>
+    );
+  }
+  return (
+    <Panel title={runText.title}>
+      <RunNow timeline={timeline} dropped={dropped} clock={clock} />
+      <Row gap="s">
+        <Button label={running ? runText.stop : runText.run} onPress={toggle} />
+        <Button label={runText.begin} kind="quiet" onPress={() => clock.set(0)} />
+        <Cell least={150}>
+          <Small>{runText.speed(runSpeed(timeline.duration))}</Small>
+        </Cell>
+      </Row>
+      <Small>{runText.legend}</Small>
+      <Fold label={runText.about}>
+        <Stack gap="xs">
+          <Small>{runText.keys}</Small>
+          <Small>{runText.counted}</Small>
+        </Stack>
+      </Fold>
+    </Panel>
+  );
+}
+
+/** What the clock changes: nothing around it is drawn in a frame of the run. */
+function RunNow({ timeline, dropped, clock }: RunPanelProps) {
+  const time = useRunTime(clock);
+  const { duration, runs } = timeline;
+  const moment = cutMoment(timeline, time);
+  const at = runText.at(time, duration);
+  const doing =
+    time <= 0 || !moment
+      ? runText.still
+      : time >= duration
+        ? runText.done
+        : runText.doing(moment.phase, runs[moment.run]?.name ?? '');
+  const fallen = runText.fallen(countBefore(dropped, time));
+  return (
+    <View>
+      <CutSlider timeline={timeline} clock={clock} words={`${at}, ${doing}, ${fallen}`} />
+      <Row justify="space-between" gap="s">
+        <Figure value={at} />
+        <Small strong>{`${doing}; ${fallen}`}</Small>
+      </Row>
+    </View>
+  );
+}
