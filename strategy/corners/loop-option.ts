@@ -1,6 +1,6 @@
 import { returnOf } from '../heat/return-temperature.ts';
 import type { Loop } from '../path/loop.ts';
-import { flatLoopAt, loopAt, loopExtension, loopReach } from '../path/loop.ts';
+import { flatLoopAt, flatLoopReach, loopAt, loopExtension, loopReach } from '../path/loop.ts';
 import type { LoopRoom } from '../path/loop-fit.ts';
 import { loopFitsIn, loopRoom } from '../path/loop-fit.ts';
 import { flatExtensions, loopRadii } from '../path/loop-radius.ts';
@@ -29,10 +29,15 @@ type Bounds = Pick<CornerPlanRequest, 'rules' | 'profile'>;
 const boundsOf = ({ rules, profile }: Bounds) => ({ ...rules.loop, smallestArc: profile.smallestArc });
 
 /** How far any loop of a corner can reach from the path's corner, m; 0 where none is tried. */
-export function mostReach(corner: Corner, request: Bounds): number {
-  if (!request.rules.loop.allowed || !corner.convex) return 0;
-  const sizes = loopRadii(corner.angle, boundsOf(request));
-  return sizes.kind === 'none' ? 0 : loopReach(loopExtension(Math.max(...sizes.radii), corner.angle), corner.angle);
+export function mostReach({ convex, angle }: Corner, request: Bounds): number {
+  if (!request.rules.loop.allowed || !convex) return 0;
+  const sizes = loopRadii(angle, boundsOf(request));
+  if (sizes.kind === 'none') return 0;
+  const tangent = loopReach(loopExtension(Math.max(...sizes.radii), angle), angle);
+  const flats = flatExtensions(angle, boundsOf(request));
+  return flats.kind === 'none'
+    ? tangent
+    : Math.max(tangent, flatLoopReach(flats.radius, Math.max(...flats.extensions)));
 }
 
 /** The loops that fit, or why none is even tried. Clearance alone: no heat, no time. */
@@ -44,7 +49,7 @@ export function fittingLoops(
   const sizes = loopRadii(corner.angle, boundsOf(request));
   if (sizes.kind === 'none') return sizes;
   const [design, smallest] = [Math.max(...sizes.radii), Math.min(...sizes.radii)];
-  const reach = loopReach(loopExtension(design, corner.angle), corner.angle);
+  const reach = mostReach(corner, request);
   const { kerfWidth } = request.cut;
   const { clearance } = request.rules.loop;
   const room = loopRoom(onPath.point, reach, {

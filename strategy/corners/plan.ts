@@ -136,7 +136,8 @@ export function cornerPlan(request: CornerPlanRequest): CornerPlan {
 
 const roleName = { outer: 'outline', hole: 'hole', island: 'island' } as const;
 
-function contextOf(request: CornerPlanRequest, loopsNear: Context['loopsNear']): Context {
+/** What all corners of a plan share. Throws RangeError for two contours of the same id. */
+export function contextOf(request: CornerPlanRequest, loopsNear: Context['loopsNear']): Context {
   const { contours, cut, plateTemperature, properties, rules, leadIns } = request;
   if (new Set(contours.map(({ id }) => id)).size < contours.length)
     throw new RangeError('two contours of the plan have the same id');

@@ -1,5 +1,5 @@
 import { degrees, millimetres } from '../units/said.ts';
-import { loopExtension } from './loop.ts';
+import { loopExtension, loopLength } from './loop.ts';
 
 /** Bounds of a loop's size. Lengths in m. */
 export type LoopBounds = {
@@ -51,14 +51,19 @@ export function loopRadii(angle: number, bounds: LoopBounds): LoopRadii {
 const flatter = 1.05;
 
 /**
- * Flat loops to try on a corner of the given angle (rad): both arcs as small as the machine follows, the extension (m) that of the design's tangent loop first, then
- * shorter in equal ratios down to the least extension, or to where nothing is left of the straight. None where the tangent loop is as small already.
+ * Flat loops to try on a corner of the given angle (rad): both arcs as small as the machine follows, the extension (m) first the one with which the path is as long
+ * as the designed loop's, which costs as much time and stands less deep into the skeleton, or the longest allowed; then shorter in equal ratios down
+ * to the least, or to where nothing is left of the straight. None where the designed loop is as small already.
  */
 export function flatExtensions(angle: number, bounds: LoopBounds): FlatExtensions {
   const sizes = loopRadii(angle, bounds);
   if (sizes.kind === 'none') return sizes;
   const radius = bounds.smallestArc;
-  const longest = loopExtension(Math.max(...sizes.radii), angle);
+  const design = Math.max(...sizes.radii);
+  const [s, c] = [Math.sin(angle / 2), Math.cos(angle / 2)];
+  const length = loopLength(design, loopExtension(design, angle), angle);
+  const asLong = (length - radius * (Math.PI + angle - 2 * c)) / (2 + 2 * s);
+  const longest = Math.min(bounds.maxExtension, asLong);
   const shortest = Math.max(bounds.minExtension, flatter * loopExtension(radius, angle));
   if (longest < shortest) {
     return { kind: 'none', why: `with the machine's smallest arc, ${millimetres(radius)}, a flat loop is no smaller` };

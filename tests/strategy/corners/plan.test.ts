@@ -10,10 +10,12 @@ import type {
   CutConditions,
   PlannedCorner,
 } from '../../../strategy/corners/index.ts';
-import { cornerPlan, leastDwell } from '../../../strategy/corners/index.ts';
+import { cornerInsert, cornerPlan, leastDwell, slugRise } from '../../../strategy/corners/index.ts';
 import type { Contour, Point } from '../../../strategy/path/index.ts';
 import {
+  arcOf,
   contourContains,
+  contourCorners,
   contourReverse,
   contourRotate,
   contourShift,
@@ -21,7 +23,9 @@ import {
   pointDistance,
   pointRotate,
   segmentDistance,
+  segmentLength,
   segmentPointAt,
+  segmentPointDistance,
 } from '../../../strategy/path/index.ts';
 import { drawingRead } from '../../../strategy/path/drawing/index.ts';
 
@@ -261,6 +265,376 @@ describe('room for a loop', () => {
     const loop = ofHole.find((c) => c.loop)?.loop;
     for (const segment of loop?.segments ?? [])
       expect(contourContains(window, segmentPointAt(segment, 0.6))).toBe(true);
+  });
+});
+
+describe('a narrow skeleton', () => {
+  const diamond = contourRotate(square, Math.PI / 4);
+  const far = 0.2 * Math.SQRT1_2;
+  /** The diamond's right tip points at the plate's edge, which leaves `depth` beyond the path's corner and what clearance needs. */
+  const before = (depth: number) => {
+    const edge = far + (cut.kerfWidth / 2) * Math.SQRT2 + depth + cut.kerfWidth / 2 + rules.loop.clearance;
+    return { min: { x: -0.5, y: -0.5 }, max: { x: edge, y: 0.5 } };
+  };
+  const cool = { ...rules, returnExcessLimit: 273.15 + 165 - straightEdge };
+  const atTip = (change: Partial<CornerPlanRequest>) => {
+    const { corners } = plan({ contours: [{ id: '1', contour: diamond, role: 'outer' }], rules: cool, ...change });
+    const corner = corners.find((c) => pointDistance(c.point, { x: far, y: 0.1 * Math.SQRT2 }) < 1e-9);
+    if (!corner) throw new Error('the diamond has a tip on the right');
+    return corner;
+  };
+
+  it('gets a flat loop where the one arc would have to be too small to cool the tip', () => {
+    const corner = atTip({ plate: before(8e-3) });
+    expect([corner.treatment, corner.loop?.shape]).toEqual(['loop', 'flat']);
+    expect(corner.returnWith).toBeLessThanOrEqual(273.15 + 165);
+    expect(corner.why).toMatch(
+      /a flat loop .* past the corner with arcs of 1.0 mm fits, in place of the design's 5.0 mm/,
+    );
+    // with a machine that follows no smaller arc than the design there is only the one arc, and it does not fit
+    const coarse = atTip({ plate: before(8e-3), profile: { ...request.profile, smallestArc: 5e-3 } });
+    expect(coarse.treatment).toBe('leave');
+    expect(coarse.problem).toContain("the plate's edge");
+  });
+
+  it('is no reason for a flat loop where the designed one fits', () => {
+    expect(atTip({ plate: before(0.02) }).loop).toMatchObject({ shape: 'tangent', radius: 5e-3 });
+  });
+
+  it('takes the quicker one when the smaller arc and the flat loop both cool enough', () => {
+    const warm = { ...rules, returnExcessLimit: 273.15 + 180 - straightEdge };
+    const { loop, why } = atTip({ plate: before(9e-3), rules: warm });
+    // 9 mm hold an arc of 9/(1 + √2) mm, which is shorter than a flat loop as long as the designed one
+    expect(loop?.shape).toBe('tangent');
+    expect(loop?.radius).toBeLessThanOrEqual(9e-3 / (1 + Math.SQRT2));
+    expect(loop?.radius).toBeGreaterThan(3e-3);
+    expect(why).toContain("smaller than the design's 5.0 mm");
+  });
+});
+
+describe('the cut order', () => {
+  const hole = contourReverse(
+    polygon([
+      { x: -0.05, y: -0.05 },
+      { x: 0.25, y: -0.05 },
+      { x: 0.25, y: 0.25 },
+      { x: -0.05, y: 0.25 },
+    ]),
+  );
+  const frame = polygon([
+    { x: -0.2, y: -0.2 },
+    { x: 0.4, y: -0.2 },
+    { x: 0.4, y: 0.4 },
+    { x: -0.2, y: 0.4 },
+  ]);
+  const [island, around, outline] = [
+    { id: '3', contour: square, role: 'island', name: 'the bracket in the frame' },
+    { id: '2', contour: hole, role: 'hole', name: 'hole 1 of the frame' },
+    { id: '1', contour: frame, role: 'outer' },
+  ] as const;
+  const islandsOf = (p: CornerPlan) => p.corners.filter(({ contourId }) => contourId === '3');
+
+  it('gives a part in a hole its loops when it is cut before the hole', () => {
+    const corners = islandsOf(plan({ contours: [island, around, outline] }));
+    expect(corners.map(({ treatment }) => treatment)).toEqual(['loop', 'loop', 'loop', 'loop']);
+  });
+
+  it('refuses them when the hole has dropped out with the steel they would run in, and says so', () => {
+    for (const corner of islandsOf(plan({ contours: [around, island, outline] }))) {
+      expect(corner.treatment).toBe('leave');
+      expect(corner.problem).toContain('hole 1 of the frame, around this corner, is cut before and has dropped out');
+      expect(corner.options.find(({ treatment }) => treatment === 'loop')?.at).toEqual(corner.pathPoint);
+    }
+  });
+
+  it('tells a neighbour that is gone from one that is still to be cut', () => {
+    const beside = { id: '9', contour: contourShift(square, { x: 0.2 + 6e-3, y: 0.1 }), role: 'outer' } as const;
+    const own = { id: '1', contour: square, role: 'outer' } as const;
+    const whyOf = (p: CornerPlan) =>
+      p.corners
+        .find((c) => pointDistance(c.point, { x: 0.2, y: 0.2 }) < 1e-9)
+        ?.options.find((o) => o.treatment === 'loop')?.why;
+    expect(whyOf(plan({ contours: [own, beside] }))).toContain('outline 9 is in the way');
+    expect(whyOf(plan({ contours: [beside, own] }))).toContain('outline 9 is cut before and has dropped out');
+  });
+
+  it('of two contours with the same id is none', () => {
+    expect(() => plan({ contours: [outline, outline] })).toThrow(/same id/);
+  });
+});
+
+describe('a lead-in that is placed already', () => {
+  it('is in the way of a loop, with its place', () => {
+    const at = { x: 0.2 + 4e-3, y: 0.2 + 5e-3 };
+    const leadIns = [
+      { contourId: '1', segments: [lineBetween(at, { x: 0.2, y: 0.15 })], crater: { at, radius: 3e-3 } },
+    ];
+    const corner = plan({ leadIns }).corners.find((c) => pointDistance(c.point, { x: 0.2, y: 0.2 }) < 1e-9);
+    const option = corner?.options.find(({ treatment }) => treatment === 'loop');
+    expect(option?.why).toMatch(/the (lead-in|pierce) of outline 1 is in the way/);
+    expect(option?.at).toBeDefined();
+    expect(corner?.loop?.radius ?? 0).toBeLessThan(5e-3);
+  });
+});
+
+describe('a slug', () => {
+  it('that can tip above the nozzle is cautioned about, with how far; one that the kerf holds is not', () => {
+    const loose = first(plan({ thickness: 0.01 }));
+    expect(loose.caution).toMatch(/the slug, \d+\.\d mm wide, can tip on a slat/);
+    expect(first(plan({ thickness: 0.04 })).caution).toBeUndefined();
+  });
+
+  it('rises until the kerf holds it: as far as its tilted section fills the hole', () => {
+    fc.assert(
+      fc.property(
+        fc.double({ min: 3e-3, max: 0.06, noNaN: true }),
+        fc.double({ min: 0.005, max: 0.04, noNaN: true }),
+        fc.double({ min: 3e-4, max: 1.2e-3, noNaN: true }),
+        (extent, thickness, kerfWidth) => {
+          const rise = slugRise({ extent }, thickness, kerfWidth);
+          const tilt = Math.asin(rise / extent);
+          const across = extent * Math.cos(tilt) + thickness * Math.sin(tilt);
+          if (rise < extent) expect(across).toBeCloseTo(extent + 2 * kerfWidth, 9);
+          else expect(Math.hypot(extent, thickness)).toBeLessThanOrEqual(extent + 2 * kerfWidth);
+          // half the kerf holds it sooner, twice the plate too
+          expect(slugRise({ extent }, thickness, kerfWidth / 2)).toBeLessThanOrEqual(rise);
+          expect(slugRise({ extent }, 2 * thickness, kerfWidth)).toBeLessThanOrEqual(rise);
+        },
+      ),
+    );
+    expect(() => slugRise({ extent: 0.01 }, 0, 1e-3)).toThrow(/thickness 0 m/);
+  });
+});
+
+describe('an ease', () => {
+  const easing: CornerRules = {
+    ...rules,
+    loop: { ...rules.loop, allowed: false },
+    ease: { allowed: true, length: 6e-3, feedShare: 0.3, powerShare: 0.3 },
+  };
+
+  it('cools the tip by the time it takes, which is that of its lower feed', () => {
+    const corner = first(
+      plan({ rules: { ...easing, returnExcessLimit: 273.15 + 1000 - straightEdge }, overrides: { 'c1-0': 'ease' } }),
+    );
+    expect(corner.treatment).toBe('ease');
+    expect(corner.returnWith).toBeLessThan(corner.returnWithout - 10);
+    // 12 mm on which the feed falls evenly to 0.3 of itself and rises again: ∫ds/v = L·ln(1/0.3)/(0.7·v)
+    const eased = (12e-3 * Math.log(1 / 0.3)) / 0.7 / cut.feed;
+    expect(corner.addedTime).toBeCloseTo(eased - 12e-3 / cut.feed, 1);
+    expect(corner.ease).toMatchObject({ before: 6e-3, after: 6e-3, feedShare: 0.3, powerShare: 0.3 });
+    const pieces = corner.ease?.pieces ?? [];
+    expect(pieces.reduce((sum, { segment }) => sum + segmentLength(segment), 0)).toBeCloseTo(12e-3, 12);
+    // it leads through the path's corner, half a kerf beside the finished edges
+    const edge = lineBetween({ x: 0, y: 0.2 }, { x: 0, y: 0 });
+    const into = pieces[0];
+    expect(into && segmentDistance(into.segment, edge).distance).toBeCloseTo(cut.kerfWidth / 2, 12);
+    expect(pointDistance(segmentPointAt(pieces[7]?.segment ?? edge, 1), corner.pathPoint)).toBeLessThan(1e-12);
+  });
+
+  it('with more power than feed heats more, and never reaches past halfway to the next corner', () => {
+    const at = (powerShare: number) =>
+      first(
+        plan({
+          rules: { ...easing, ease: { allowed: true, length: 6e-3, feedShare: 0.5, powerShare } },
+          overrides: { 'c1-0': 'ease' },
+        }),
+      ).returnWith;
+    expect(at(0.7)).toBeGreaterThan(at(0.5));
+    const long = { ...easing, ease: { allowed: true, length: 0.5, feedShare: 0.5, powerShare: 0.5 } };
+    const corner = first(plan({ rules: long, overrides: { 'c1-0': 'ease' } }));
+    expect(corner.ease?.before).toBeCloseTo(0.1, 12);
+    expect(corner.ease?.after).toBeCloseTo(0.1, 12);
+  });
+
+  it('counts as heat what its power leaves beyond that of its length', () => {
+    const heatOf = (powerShare: number) =>
+      plan({
+        rules: { ...easing, ease: { allowed: true, length: 6e-3, feedShare: 0.5, powerShare } },
+        overrides: { 'c1-0': 'ease' },
+      }).totals;
+    expect(heatOf(0.5)).toMatchObject({ addedLength: 0 });
+    expect(heatOf(0.5).addedHeat).toBeCloseTo(0, 9);
+    expect(heatOf(0.8).addedHeat).toBeGreaterThan(0);
+  });
+
+  it('is refused where the rules do not name it, as in strategies from before there were eases', () => {
+    const corner = first(plan({ overrides: { 'c1-0': 'ease' } }));
+    expect(corner.problem).toContain('allow no ease');
+  });
+});
+
+describe('a round', () => {
+  const rounding: CornerRules = {
+    ...rules,
+    loop: { ...rules.loop, allowed: false },
+    round: { allowed: true, radius: 2e-3, tolerance: 1e-3 },
+  };
+  const asked = { overrides: { 'c1-0': 'round' } } as const;
+
+  it('has the designed radius where the tolerance allows it, states what it is off the drawing, and spares the stop', () => {
+    const corner = first(plan({ rules: rounding, ...asked }));
+    expect(corner.round?.radius).toBeCloseTo(2e-3, 12);
+    expect(corner.round?.deviation).toBeCloseTo(2e-3 * (Math.SQRT2 - 1), 12);
+    expect(corner.why).toContain('0.83 mm off the drawing, 1.00 mm are allowed');
+    expect(corner.round?.onPath.radius).toBeCloseTo(2e-3 + cut.kerfWidth / 2, 12);
+    expect(corner.addedTime).toBeLessThan(0);
+  });
+
+  it('is smaller where the tolerance is, and refused where the machine could not follow it', () => {
+    const tight = (tolerance: number) =>
+      first(plan({ rules: { ...rounding, round: { allowed: true, radius: 2e-3, tolerance } }, ...asked }));
+    const corner = tight(4e-4);
+    expect(corner.round?.deviation).toBeCloseTo(4e-4, 9);
+    expect(corner.round?.radius).toBeCloseTo(4e-4 / (Math.SQRT2 - 1), 9);
+    expect(tight(1e-4).problem).toMatch(/the path would turn on 0.64 mm, and the machine's smallest arc is 1.00 mm/);
+  });
+
+  it('of a spike is taken before anything that costs time when it keeps the tip under the limit', () => {
+    const spike = polygon([
+      { x: 0, y: 0 },
+      { x: 0.2 * Math.cos(degrees(10)), y: -0.2 * Math.sin(degrees(10)) },
+      { x: 0.2 * Math.cos(degrees(10)), y: 0.2 * Math.sin(degrees(10)) },
+    ]);
+    const contours = [{ id: '1', contour: spike, role: 'outer' }] as const;
+    const round = { allowed: true, radius: 7e-4, tolerance: 5e-3 };
+    const tolerant = { ...rounding, round, returnExcessLimit: 1 };
+    const hand = first(plan({ contours, rules: tolerant, ...asked }));
+    expect(hand.returnWith).toBeLessThan(hand.returnWithout - 5);
+    const limited = { ...tolerant, loop: rules.loop, returnExcessLimit: hand.returnWith + 0.5 - straightEdge };
+    const chosen = first(plan({ contours, rules: limited }));
+    expect([chosen.treatment, chosen.problem]).toEqual(['round', undefined]);
+    expect(chosen.why).toMatch(/and \d+\.\d s less$/);
+  });
+
+  it('returns as hot as the same rounding in the drawing, left as it is', () => {
+    const r = 1.2e-3;
+    const sharp = first(
+      plan({ rules: { ...rounding, round: { allowed: true, radius: r, tolerance: 1e-3 } }, ...asked }),
+    );
+    const drawn: Contour = {
+      segments: [
+        arcOf({ x: r, y: r }, r, Math.PI, Math.PI / 2),
+        lineBetween({ x: r, y: 0 }, { x: 0.2, y: 0 }),
+        lineBetween({ x: 0.2, y: 0 }, { x: 0.2, y: 0.2 }),
+        lineBetween({ x: 0.2, y: 0.2 }, { x: 0, y: 0.2 }),
+        lineBetween({ x: 0, y: 0.2 }, { x: 0, y: r }),
+      ],
+    };
+    const corner = first(
+      plan({ contours: [{ id: '1', contour: drawn, role: 'outer' }], overrides: { 'c1-0r': 'leave' } }),
+    );
+    expect(corner.id).toBe('c1-0r');
+    expect(corner.returnWithout).toBeCloseTo(sharp.returnWith, 6);
+  });
+
+  it('keeps its finished edge within the tolerance of the drawing also beside curved edges', () => {
+    const bowed: Contour = {
+      segments: [
+        arcOf({ x: 0.05, y: 0.0375 }, 0.0625, Math.atan2(-0.0375, -0.05), 2 * Math.atan2(0.05, 0.0375)),
+        lineBetween({ x: 0.1, y: 0 }, { x: 0.1, y: 0.1 }),
+        lineBetween({ x: 0.1, y: 0.1 }, { x: 0, y: 0.1 }),
+        lineBetween({ x: 0, y: 0.1 }, { x: 0, y: 0 }),
+      ],
+    };
+    for (const { id, point } of contourCorners(bowed).map((c) => ({ id: `c1-${c.index}`, point: c.point }))) {
+      const { corners } = plan({
+        contours: [{ id: '1', contour: bowed, role: 'outer' }],
+        rules: { ...rounding, round: { allowed: true, radius: 5e-3, tolerance: 5e-4 } },
+        overrides: { [id]: 'round' },
+      });
+      const corner = corners.find((c) => c.id === id);
+      const { round } = corner ?? {};
+      if (!round) throw new Error(corner?.problem ?? 'no round');
+      expect(round.deviation).toBeLessThanOrEqual(5e-4 * (1 + 1e-9));
+      expect(segmentPointDistance(round.finished, point)).toBeCloseTo(round.deviation, 10);
+    }
+  });
+});
+
+describe('a corner that the drawing rounds', () => {
+  const r = 6e-4;
+  const drawn: Contour = {
+    segments: [
+      arcOf({ x: r, y: r }, r, Math.PI, Math.PI / 2),
+      lineBetween({ x: r, y: 0 }, { x: 0.2, y: 0 }),
+      lineBetween({ x: 0.2, y: 0 }, { x: 0.2, y: 0.2 }),
+      lineBetween({ x: 0.2, y: 0.2 }, { x: 0, y: 0.2 }),
+      lineBetween({ x: 0, y: 0.2 }, { x: 0, y: r }),
+    ],
+  };
+  const contours = [{ id: '1', contour: drawn, role: 'outer' }] as const;
+
+  it('gets no loop unless the tolerance allows it to be left sharp', () => {
+    const strict = first(plan({ contours }));
+    expect(strict.treatment).toBe('leave');
+    expect(strict.problem).toContain(
+      'the drawing rounds this corner with 0.60 mm; a loop leaves it sharp, 0.25 mm more steel',
+    );
+    const tolerant = first(
+      plan({ contours, rules: { ...rules, round: { allowed: false, radius: 1e-3, tolerance: 3e-4 } } }),
+    );
+    expect(tolerant.treatment).toBe('loop');
+    const insert = cornerInsert(tolerant);
+    if (insert?.kind !== 'path') throw new Error('a loop is a piece of path');
+    // it leaves the path where the arc would begin and comes back where it would end
+    const [from, to] = [insert.segments[0], insert.segments.at(-1)];
+    const beside = r + cut.kerfWidth / 2;
+    expect(
+      from && pointDistance(segmentPointAt(from, 0), { x: -cut.kerfWidth / 2, y: -cut.kerfWidth / 2 + beside }),
+    ).toBeLessThan(1e-12);
+    expect(
+      to && pointDistance(segmentPointAt(to, 1), { x: -cut.kerfWidth / 2 + beside, y: -cut.kerfWidth / 2 }),
+    ).toBeLessThan(1e-12);
+  });
+
+  it('may wait or be eased like any other', () => {
+    const dwelling = { ...rules, dwell: { allowed: true, maxDuration: 8, restart: 0 } };
+    const corner = first(plan({ contours, rules: dwelling }));
+    expect(corner.treatment).toBe('dwell');
+    const insert = cornerInsert(corner);
+    if (insert?.kind !== 'dwell') throw new Error('a dwell is a wait');
+    const beside = r + cut.kerfWidth / 2;
+    expect(pointDistance(insert.at, { x: -cut.kerfWidth / 2 + beside, y: -cut.kerfWidth / 2 })).toBeLessThan(1e-12);
+    const eased = first(
+      plan({
+        contours,
+        rules: { ...rules, ease: { allowed: true, length: 5e-3, feedShare: 0.4, powerShare: 0.4 } },
+        overrides: { 'c1-0r': 'ease' },
+      }),
+    );
+    expect(eased.ease?.pieces.some(({ segment, eased: by }) => segment.kind === 'arc' && by === 1)).toBe(true);
+    expect(eased.returnWith).toBeLessThan(eased.returnWithout);
+  });
+});
+
+describe('what a corner puts into the path', () => {
+  it('is a loop from the path’s corner back to it, a wait there, an arc for a round, and nothing for the rest', () => {
+    const looped = first(plan());
+    const insert = cornerInsert(looped);
+    expect(insert).toMatchObject({
+      kind: 'path',
+      as: 'loop',
+      contourId: '1',
+      index: 0,
+      name: 'the loop of corner c1-0',
+    });
+    if (insert?.kind !== 'path') throw new Error('a loop is a piece of path');
+    const [from, to] = [insert.segments[0], insert.segments.at(-1)];
+    expect(from && pointDistance(segmentPointAt(from, 0), looped.pathPoint)).toBe(0);
+    expect(to && pointDistance(segmentPointAt(to, 1), looped.pathPoint)).toBe(0);
+
+    const waits = first(plan({ rules: { ...rules, dwell: { allowed: true, maxDuration: 4, restart: 0 } } }));
+    expect(cornerInsert(waits)).toMatchObject({ kind: 'dwell', duration: waits.dwell?.duration, at: waits.pathPoint });
+
+    const rounded = first(
+      plan({
+        rules: { ...rules, round: { allowed: true, radius: 2e-3, tolerance: 1e-3 } },
+        overrides: { 'c1-0': 'round' },
+      }),
+    );
+    expect(cornerInsert(rounded)).toMatchObject({ kind: 'path', as: 'contour', segments: [rounded.round?.onPath] });
+    expect(cornerInsert(first(plan({ overrides: { 'c1-0': 'leave' } })))).toBeNull();
   });
 });
 

@@ -1,21 +1,31 @@
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import type { ReturnTreatment } from '../../../strategy/heat/index.ts';
+import type { HeatedPiece, ReturnTreatment } from '../../../strategy/heat/index.ts';
 import {
+  heatedPath,
   leftOutStretch,
   measuringPlace,
   movingLine,
+  pathRise,
+  returnOf,
   returnTemperature,
   straightEdgeReturn,
 } from '../../../strategy/heat/index.ts';
 import type { LoopCorner, Segment } from '../../../strategy/path/index.ts';
 import {
+  arcOf,
   contourCorners,
+  cornerInward,
   cornerOfPath,
+  flatLoopAt,
   lineBetween,
   loopAt,
+  loopExtension,
   pointDistance,
   pointRotate,
+  pointScale,
+  segmentLength,
+  segmentPart,
   segmentRotate,
 } from '../../../strategy/path/index.ts';
 
@@ -164,6 +174,73 @@ describe('the return temperature', () => {
         properties,
       }).without;
     expect(ask(strip)).toBeGreaterThan(ask(strip.slice(2)));
+  });
+
+  it('of a flat loop that is nearly the one of a single arc is that of the single arc, and falls with its extension', () => {
+    const [beta, r] = [Math.PI / 3, 3e-3];
+    const nearly = flatLoopAt(tip(60), r, loopExtension(r, beta) * (1 + 1e-6));
+    expect(at(60, { kind: 'loop', loop: nearly }).withTreatment).toBeCloseTo(at(60, loop(60, r)).withTreatment, 2);
+    const flats = [3e-3, 5e-3, 8e-3, 12e-3].map(
+      (e) => at(60, { kind: 'loop', loop: flatLoopAt(tip(60), 1e-3, e) }).withTreatment,
+    );
+    expect([...flats].sort((a, b) => b - a)).toEqual(flats);
+  });
+
+  it('round a corner is taken at the arc’s end without the last 2 mm, 1.5 mm inside the rounded tip', () => {
+    const [beta, radius] = [Math.PI / 3, 3e-3];
+    const corner = tip(60);
+    const taken = radius / Math.tan(beta / 2);
+    const arc = arcOf({ x: -taken, y: radius }, radius, -Math.PI / 2, Math.PI - beta);
+    const kept = segmentPart(arc, 0, 1 - leftOutStretch / segmentLength(arc));
+    const q = cut.heatIntoPlate * cut.feed;
+    const pieces = heatedPath([lineBetween({ x: -0.3, y: 0 }, { x: -taken, y: 0 }), kept], cut.feed, 0, q);
+    // the arc's nearest place to the corner, then half a kerf and 1.5 mm towards its centre
+    const apex = radius / Math.sin(beta / 2) - radius;
+    const place = pointScale(cornerInward(corner), apex + cut.kerfWidth / 2 + 1.5e-3);
+    const expected = cold + pathRise(pieces, place, leftOutStretch / cut.feed, properties);
+    const question = { corner, cut, plateTemperature: cold, properties, round: radius };
+    expect(returnOf({ ...question, treatment: { kind: 'leave' } })).toBeCloseTo(expected, 6);
+    const waited = returnOf({ ...question, treatment: { kind: 'dwell', duration: 2 } });
+    expect(waited).toBeCloseTo(cold + pathRise(pieces, place, leftOutStretch / cut.feed + 2, properties), 6);
+  });
+
+  it('of an eased corner is that of the same path run in steps of feed and power', () => {
+    const [length, share] = [8e-3, 0.4];
+    const corner = tip(90);
+    const q = cut.heatIntoPlate * cut.feed;
+    const steps = 8;
+    const step = length / steps;
+    let time = 0;
+    const eased: HeatedPiece[] = Array.from({ length: steps }, (_, i) => {
+      const by = 1 - ((i + 0.5) / steps) * (1 - share);
+      const from = time;
+      time += step / (cut.feed * by);
+      const segment = lineBetween({ x: -length + i * step, y: 0 }, { x: -length + (i + 1) * step, y: 0 });
+      return { segment, from, to: time, powerPerLength: q * by };
+    });
+    // 2 mm are the last two steps
+    const pieces = [
+      ...heatedPath([lineBetween({ x: -0.3, y: 0 }, { x: -length, y: 0 })], cut.feed, 0, q),
+      ...eased.slice(0, -2),
+    ];
+    const expected = cold + pathRise(pieces, measuringPlace(corner, cut.kerfWidth), time, properties);
+    const treatment = { kind: 'ease', length, feedShare: share, powerShare: share } as const;
+    expect(returnOf({ corner, treatment, cut, plateTemperature: cold, properties })).toBeCloseTo(expected, 6);
+  });
+
+  it('falls as feed and power are eased further together, and is untouched where neither is', () => {
+    const ease = (share: number): ReturnTreatment => ({
+      kind: 'ease',
+      length: 6e-3,
+      feedShare: share,
+      powerShare: share,
+    });
+    for (const degrees of [30, 60, 90]) {
+      expect(at(degrees, ease(1)).withTreatment).toBeCloseTo(at(degrees).without, 6);
+      const eased = [1, 0.8, 0.6, 0.4, 0.2].map((share) => at(degrees, ease(share)).withTreatment);
+      expect([...eased].sort((a, b) => b - a)).toEqual(eased);
+    }
+    expect(() => at(60, ease(0))).toThrow(/shares of feed 0/);
   });
 
   it('refuses a plate below absolute zero and a dwell below 0', () => {

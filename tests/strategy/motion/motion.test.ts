@@ -157,6 +157,18 @@ describe('time along a path', () => {
     expect(pathTime(path, drive).time).toBeCloseTo(expected, 6);
   });
 
+  it('is held back on single pieces by bounds of their own, and by none that lies above the feed', () => {
+    const piece = (from: number, to: number) => lineBetween({ x: from, y: 0 }, { x: to, y: 0 });
+    const path = [piece(0, 0.1), piece(0.1, 0.2), piece(0.2, 0.3)];
+    const drive = { feed: 0.02, acceleration: 2, jerk: 50 };
+    const free = pathTime(path, drive).time;
+    expect(pathTime(path, { ...drive, bounds: [undefined, 0.5, undefined] }).time).toBe(free);
+    // the middle at half the feed takes as long again, but for the two changes of speed
+    const held = pathTime(path, { ...drive, bounds: [undefined, 0.01, undefined] }).time;
+    expect(held).toBeCloseTo(free + 0.1 / 0.02, 1);
+    expect(held).toBeGreaterThan(free + 0.1 / 0.02);
+  });
+
   it('obeys acceleration on every stretch of a random path: never faster than the same path with a better drive', () => {
     const turns = fc.array(
       fc.record({

@@ -234,12 +234,22 @@ describe('a flat loop', () => {
 describe('the sizes of a flat loop', () => {
   const bounds = { radius: 5e-3, minExtension: 2e-3, maxExtension: 3e-2, smallestArc: 1e-3 };
 
-  it('begin with the extension of the designed loop and end at the least one, on arcs as small as the machine follows', () => {
-    const found = flatExtensions(Math.PI / 2, bounds);
-    if (found.kind !== 'extensions') throw new Error(found.why);
-    expect(found.radius).toBe(1e-3);
-    expect(found.extensions[0]).toBeCloseTo(5e-3, 12);
-    expect(found.extensions.at(-1)).toBeCloseTo(2e-3, 12);
+  it('begin with a path as long as the designed loop’s and end at the least extension, on arcs as small as the machine follows', () => {
+    fc.assert(
+      fc.property(fc.double({ min: 0.4, max: 2.4, noNaN: true }), (angle) => {
+        const found = flatExtensions(angle, { ...bounds, maxExtension: 0.1 });
+        const sizes = loopRadii(angle, { ...bounds, maxExtension: 0.1 });
+        if (found.kind !== 'extensions' || sizes.kind !== 'radii') return;
+        expect(found.radius).toBe(1e-3);
+        const [first, last] = [found.extensions[0] ?? NaN, found.extensions.at(-1) ?? NaN];
+        const [flattened, whole] = [flatLoopAt(tip(angle), 1e-3, first), loopAt(tip(angle), sizes.radii[0] ?? NaN)];
+        expect(flattened.length).toBeCloseTo(whole.length, 12);
+        expect(flatLoopDepth(1e-3, first, angle)).toBeLessThan(whole.reach);
+        expect(last).toBeCloseTo(Math.max(2e-3, 1.05 * loopExtension(1e-3, angle)), 12);
+      }),
+    );
+    const bounded = flatExtensions(Math.PI / 2, { ...bounds, maxExtension: 6e-3 });
+    expect(bounded.kind === 'extensions' && bounded.extensions[0]).toBeCloseTo(6e-3, 12);
   });
 
   it('are none where the designed loop has the smallest arc already', () => {
