@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { memo, useState } from 'react';
 import { knotText } from '@/components/text/pierce-designer.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { NumberField } from '@/components/ui/number-field.tsx';
@@ -26,7 +26,7 @@ type KnotEditorProps = {
 };
 
 /** The chosen number without dragging: one step less or more, or typed with its unit. */
-export function KnotEditor({ editing, target, stages, system }: KnotEditorProps) {
+export const KnotEditor = memo(function KnotEditor({ editing, target, stages, system }: KnotEditorProps) {
   const value = targetValue(stages, target);
   // a text that is no number of this range, with the number it was typed over
   const [unread, setUnread] = useState<{ value: number | null; over: number } | null>(null);
@@ -80,4 +80,4 @@ export function KnotEditor({ editing, target, stages, system }: KnotEditorProps)
       {knot?.lane === 'meanPower' && <Small>{knotText.mean(knot.set, knot.duty, system)}</Small>}
     </Stack>
   );
-}
+});

@@ -358,8 +358,8 @@ function DimensionRow({ condition, plate, short, colour, x, end, y, routineTime,
       : [dimensionSpan(x(0), end, sectionText.notThrough(plate))];
   return (
     <>
-      {spans.map((span) => (
-        <Fragment key={span.from}>
+      {spans.map((span, index) => (
+        <Fragment key={index}>
           {span.gap && (
             <Rect x={span.gap.from} y={y - 11} width={span.gap.to - span.gap.from} height={20} fill={roles.sheet} />
           )}

@@ -225,6 +225,28 @@ describe('steps back and forth', () => {
   });
 });
 
+describe('a duplicated stage', () => {
+  it('holds the same numbers right after the first, makes the routine longer by its time, and is one step back', async () => {
+    open();
+    await userEvent.click(await screen.findByRole('button', { name: 'Add, move or remove at stage 2' }));
+    const written = (name: string) => screen.getByRole<HTMLInputElement>('textbox', { name }).value;
+    const routine = () => Number(/over ([\d.]+) s/.exec(words() ?? '')?.[1]);
+    const before = routine();
+    const lasts = Number(written('Duration of stage 2, s'));
+    await userEvent.click(button('Duplicate stage 2'));
+    expect(screen.getAllByRole('group', { name: /^Stage \d$/ })).toHaveLength(content.stages.length + 1);
+    for (const number of [
+      'Duration of stage #, s',
+      'Standoff at the start of stage #, mm',
+      'Peak power at the end of stage #, kW',
+    ])
+      expect(written(number.replace('#', '3'))).toBe(written(number.replace('#', '2')));
+    expect(routine()).toBeCloseTo(before + lasts, 1);
+    await userEvent.click(button('Undo'));
+    expect(screen.getAllByRole('group', { name: /^Stage \d$/ })).toHaveLength(content.stages.length);
+  });
+});
+
 describe('the comparison with the revision before', () => {
   it('draws it in dots with its name, and says the difference in words', async () => {
     const former = revisionOf({ id: ids.other, number: 3, state: 'approved' });
@@ -340,6 +362,21 @@ describe('the designer’s proposal', { timeout: 60_000 }, () => {
     await userEvent.click(button('Undo'));
     expect(words()).toBe(before);
     expect(button('Undo').disabled).toBe(true);
+  });
+
+  it('is not made when the search is stopped, and the draft stays as it was', async () => {
+    open();
+    const begin = await propose();
+    const before = words();
+    fireEvent.click(begin);
+    expect(screen.getByRole('progressbar', { name: 'Trying routines' })).toBeTruthy();
+    fireEvent.click(button('Cancel'));
+    expect(screen.queryByRole('progressbar')).toBeNull();
+    // long enough for an answer that was on its way all the same
+    await act(() => new Promise((later) => setTimeout(later, 1500)));
+    expect(screen.queryByTestId('section-ghost')).toBeNull();
+    expect(screen.getByRole('button', { name: 'Work it out' })).toBeTruthy();
+    expect(words()).toBe(before);
   });
 
   it('keeps the stages that are ticked as they are', async () => {
