@@ -1,8 +1,9 @@
 import { z } from 'zod';
 import type { BlockFrame, CutFileUnit } from '../strategy/path/drawing/write/index.ts';
-import { idSchema, versionSchema } from './basics.ts';
+import { idSchema, pointSchema, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
 import { limits } from './limits.ts';
+import { segmentSchema } from './parts.ts';
 
 /** What a cut path is taken away as: a drawing, a picture, blocks after ISO 6983, a sheet to read. */
 export const takeAwayFormats = ['dxf', 'svg', 'iso', 'pdf'] as const;
@@ -59,7 +60,37 @@ export type MachineBlockFrame = z.infer<typeof blockFrameSchema>;
 
 const machineParams = z.object({ machineId: idSchema });
 
+const cutPieceSchema = z.discriminatedUnion('kind', [
+  z.object({ kind: z.enum(['lead-in', 'contour', 'loop']), segments: z.array(segmentSchema) }),
+  z.object({ kind: z.literal('dwell'), at: pointSchema, duration: z.number() }), // s
+]) satisfies z.ZodType<CutPiece>;
+
+/** The path that a plan's files hold, to be looked at: in the order of cutting, with what could not be cut as planned. */
+export const shownPathSchema = z.object({
+  runs: z.array(
+    z.object({ contourId: z.string(), name: z.string(), pierce: pointSchema, pieces: z.array(cutPieceSchema) }),
+  ),
+  problems: z.array(
+    z.object({
+      contourId: z.string(),
+      at: pointSchema,
+      why: z.string(),
+      /** Whether the contour is left out of the path for it. */
+      leftOut: z.boolean(),
+    }),
+  ),
+});
+export type ShownPath = z.infer<typeof shownPathSchema>;
+
 export const cutPathEndpoints = {
+  show: endpoint({
+    method: 'GET',
+    path: '/api/corner-plans/:planId/path',
+    summary: 'A corner plan’s cut path, to be run on the screen',
+    access: 'card.read',
+    params: z.object({ planId: idSchema }),
+    answer: shownPathSchema,
+  }),
   take: endpoint({
     method: 'GET',
     path: '/api/corner-plans/:planId/cut-path',

@@ -10,6 +10,13 @@ import { apiCall, apiFile } from './call.ts';
 import { machineQuery, machinesQuery } from './machines.ts';
 import { saveFile } from './save-file.ts';
 
+/** A plan's path, of the version that is seen: planned again it is another. */
+export const cutPathQuery = (planId: string, version: number) =>
+  queryOptions({
+    queryKey: ['cut-paths', planId, version],
+    queryFn: ({ signal }) => apiCall(cutPathEndpoints.show, { params: { planId }, signal }),
+  });
+
 type Taken = { planId: string; as: TakeAwayFormat; unit: (typeof takeAwayUnits)[number] };
 
 /** Has the file made and saves it on this device; nothing is saved when it can't be made. */

@@ -1,4 +1,4 @@
-import type { Transaction } from '../../db/database.ts';
+import { inPlant, type Transaction } from '../../db/database.ts';
 import { blockFrameEndpoints, cutPathEndpoints, type TakeAwayFormat } from '../../shared/take-away.ts';
 import { notFound } from '../errors.ts';
 import { lockMachine } from '../machines/repository.ts';
@@ -16,6 +16,19 @@ const contentTypes: Readonly<Record<TakeAwayFormat, string>> = {
 };
 
 export function takeAwayRoutes({ route, services }: Mount): void {
+  // Computing it takes seconds for thousands of corners: not while a transaction is open. An operator sees it as long as the plan.
+  route(
+    cutPathEndpoints.show,
+    async ({ actor, params }) => {
+      const taken = await inPlant(services.database, actor.plantId, (tx) => findTakenPlan(tx, params.planId), 'read');
+      if (!taken || (actor.role === 'operator' && taken.revision.state !== 'approved')) {
+        throw notFound('There is no such corner plan');
+      }
+      return { value: await services.cutFiles.path(taken) };
+    },
+    async ({ prepared }) => ({ body: prepared }),
+  );
+
   route(cutPathEndpoints.take, async ({ tx, params, query: { as, unit } }) => {
     const taken = await findTakenPlan(tx, params.planId);
     if (!taken) throw notFound('There is no such corner plan');

@@ -206,6 +206,18 @@ describe('a corner plan’s cut path', () => {
     ]);
   });
 
+  test('is shown as it is taken: run by run from its lead-in on, to an operator too while the plan is approved', async () => {
+    const { body: shown } = await made(programmer.call(cutPathEndpoints.show, { params: { planId: approvedPlan } }));
+    const { body: plan } = await made(programmer.call(cornerPlanEndpoints.get, { params: { planId: approvedPlan } }));
+    expect(shown.runs.map(({ contourId }) => contourId).sort()).toEqual(plan.part.contours.map(({ id }) => id).sort());
+    for (const { pieces } of shown.runs) expect(pieces[0]?.kind).toBe('lead-in');
+    const loops = shown.runs.flatMap(({ pieces }) => pieces.filter(({ kind }) => kind === 'loop'));
+    expect(loops).toHaveLength(plan.totals.loops);
+    expect(shown.problems.filter(({ leftOut }) => leftOut)).toEqual([]);
+    const operator = await plant.as('operator');
+    expect((await operator.call(cutPathEndpoints.show, { params: { planId: approvedPlan } })).status).toBe(200);
+  });
+
   test('is not an operator’s to take', async () => {
     expect((await take(approvedPlan, 'pdf', 'mm', await plant.as('operator'))).problem.code).toBe('not-allowed');
   });
