@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { partsText, sizeBoth } from '@/components/text/parts.ts';
+import { Button } from '@/components/ui/button.tsx';
 import { Choice } from '@/components/ui/choice.tsx';
 import { NumberField } from '@/components/ui/number-field.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
@@ -29,7 +30,6 @@ export function DrawingQuestions({ reading, answers, onAnswer }: DrawingQuestion
   const gapsAsked = useLastAsked(reading.questions.find((one): one is Question<'gaps'> => one.kind === 'gaps'));
   const [otherGap, setOtherGap] = useState(false);
   const several = reading.layers.length > 1;
-  if (!unitAsked && !gapsAsked && !several) return null;
 
   // Leaving them open is an answer too: a tolerance just below the narrowest.
   const narrowest = Math.min(Infinity, ...(gapsAsked?.gaps ?? []).map(({ size }) => size));
@@ -86,6 +86,15 @@ export function DrawingQuestions({ reading, answers, onAnswer }: DrawingQuestion
           {otherGap && <OtherGap value={answers.gapTolerance ?? gapsAsked.closesAt} onGap={withGap} />}
         </Stack>
       )}
+      {!gapsAsked &&
+        (otherGap || answers.gapTolerance !== undefined ? (
+          <OtherGap value={answers.gapTolerance ?? reading.gapTolerance} onGap={withGap} />
+        ) : (
+          <Stack gap="s">
+            <Body>{partsText.joined(reading.gapTolerance, system)}</Body>
+            <Button label={partsText.joinWider} onPress={() => setOtherGap(true)} />
+          </Stack>
+        ))}
       {several && (
         <Stack gap="hair">
           <Heading level={3}>{partsText.layers}</Heading>

@@ -8,9 +8,10 @@ import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { Part } from '@/shared/parts.ts';
 import { contourCorners } from '@/strategy/path/index.ts';
 import { DrawingView } from './drawing-view.tsx';
+import { asideTraces, readingMarks } from './reading-marks.tsx';
 
-/** A part's technical drawing with its title block. */
-export function PartDrawing({ part }: { part: Part }) {
+/** A part's technical drawing with its title block; `noted` with the places of what was noted while reading. */
+export function PartDrawing({ part, noted = false }: { part: Part; noted?: boolean }) {
   const { wide } = useLayout();
   const system = useUnitSystem();
   const { reading } = part;
@@ -19,6 +20,8 @@ export function PartDrawing({ part }: { part: Part }) {
     () => reading.contours.reduce((sum, contour) => sum + contourCorners(contour).length, 0),
     [reading.contours],
   );
+  const marks = useMemo(() => readingMarks(reading), [reading]);
+  const traces = useMemo(() => asideTraces(reading), [reading]);
   const count = (role: 'outer' | 'hole') => String(reading.contours.filter((one) => one.role === role).length);
   return (
     <Stack gap="m">
@@ -26,6 +29,8 @@ export function PartDrawing({ part }: { part: Part }) {
         label={partsText.drawing(part.name, reading, system)}
         contours={reading.contours}
         open={reading.openChains}
+        traces={noted ? traces : undefined}
+        marks={noted ? marks : undefined}
         height={wide ? 560 : 340}
       />
       <Sheet

@@ -1,13 +1,11 @@
 import { useRouter } from 'expo-router';
 import { useMemo, useState } from 'react';
-import { Circle, Path } from 'react-native-svg';
 import { newId } from '@/components/data/call.ts';
 import { useDrawingRead, usePartAdd } from '@/components/data/parts.ts';
 import { isProblem } from '@/components/data/problem.ts';
 import { Page } from '@/components/shell/page.tsx';
 import { partsText, sizeText } from '@/components/text/parts.ts';
 import { useLayout } from '@/components/theme/layout.ts';
-import { roles } from '@/components/theme/roles.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { FilePicker, fits } from '@/components/ui/file-picker.tsx';
@@ -23,6 +21,7 @@ import { limits } from '@/shared/limits.ts';
 import type { DrawingAnswers, DrawingReadingWire } from '@/shared/parts.ts';
 import { DrawingQuestions } from './drawing-questions.tsx';
 import { DrawingView } from './drawing-view.tsx';
+import { asideTraces, readingMarks } from './reading-marks.tsx';
 import { ReadingNotes } from './reading-notes.tsx';
 
 /** A drawing becomes a part: read, shown, asked about, and kept only then. The file stays chosen through every error. */
@@ -38,6 +37,7 @@ export function PartNewScreen() {
   const [reading, setReading] = useState<DrawingReadingWire | null>(null);
   const [typedName, setName] = useState<string | null>(null);
   const [sent, setSent] = useState(false);
+  const [marked, setMarked] = useState(true);
 
   const readWith = (chosen: File, given: DrawingAnswers) => {
     setAnswers(given);
@@ -55,22 +55,8 @@ export function PartNewScreen() {
   const suggested = file ? file.name.replace(/\.[^.]+$/, '').slice(0, limits.name) : '';
   const name = nameSchema.safeParse(typedName ?? suggested);
   const gaps = reading?.questions.find((question) => question.kind === 'gaps');
-  const crossings = reading?.crossings;
-  const marks = useMemo(
-    () => [
-      ...(crossings ?? []).map((at, index) => ({
-        id: `crossing ${index}`,
-        at,
-        draw: <Path d="M-8 -8 8 8M-8 8 8 -8" fill="none" stroke={roles.wrong} strokeWidth={2.6} />,
-      })),
-      ...(gaps?.gaps ?? []).map(({ at }, index) => ({
-        id: `gap ${index}`,
-        at,
-        draw: <Circle r={9} fill="none" stroke={roles.hot} strokeWidth={2.4} />,
-      })),
-    ],
-    [gaps, crossings],
-  );
+  const marks = useMemo(() => (reading && marked ? readingMarks(reading) : []), [reading, marked]);
+  const traces = useMemo(() => (reading && marked ? asideTraces(reading) : []), [reading, marked]);
   const refusal = !reading
     ? null
     : reading.contours.length === 0
@@ -118,7 +104,7 @@ export function PartNewScreen() {
   const form = reading && file && (
     <Form onSubmit={keep} label={partsText.newTitle}>
       <DrawingQuestions reading={reading} answers={answers} onAnswer={(given) => readWith(file, given)} />
-      <ReadingNotes reading={reading} />
+      <ReadingNotes reading={reading} marked={marked} onMark={setMarked} />
       <TextField
         label={partsText.name}
         value={typedName ?? suggested}
@@ -148,6 +134,7 @@ export function PartNewScreen() {
             label={partsText.drawing(file?.name ?? partsText.one, reading, system)}
             contours={reading.contours}
             open={reading.openChains}
+            traces={traces}
             marks={marks}
             height={wide ? 560 : 340}
           />

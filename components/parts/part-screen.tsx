@@ -47,6 +47,7 @@ export function PartScreen({ id }: { id: string }) {
 
 function PartOf({ part }: { part: Part }) {
   const actor = useActor();
+  const [marked, setMarked] = useState(true);
   const aside = (
     <>
       <Panel title={partsText.plansTitle}>
@@ -72,14 +73,14 @@ function PartOf({ part }: { part: Part }) {
   );
   return (
     <Page title={part.name} eyebrow={partsText.one} aside={aside} estimates>
-      <PartDrawing part={part} />
+      <PartDrawing part={part} noted={marked} />
       <Body>
         <FileLink address={partFileAddress(part.id)} name={part.fileName}>
           {partsText.download}
         </FileLink>
       </Body>
       <Small>{`${part.addedBy.name}, ${momentText(part.addedAt)}`}</Small>
-      <ReadingNotes reading={part.reading} />
+      <ReadingNotes reading={part.reading} marked={marked} onMark={setMarked} />
     </Page>
   );
 }

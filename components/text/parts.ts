@@ -75,7 +75,20 @@ export const partsText = {
   layer: (name: string, pieces: number) => `${name} (${count(pieces, 'piece')})`,
   noted: 'What was read',
   leftOut: (what: string, number: number) => `Left out: ${number} × ${what}`,
-  repaired: (what: string, number: number) => `Repaired: ${number} × ${what}`,
+  repaired: (what: string, number: number, largest: number | null, system: UnitSystem) =>
+    `Repaired: ${number} × ${what}${
+      largest === null
+        ? ''
+        : `, ${number === 1 ? '' : 'at most '}${quantityText(largest, 'length', system, { figures: 3 }).text}`
+    }`,
+  branches: (places: number) =>
+    `More than two ends meet at ${count(places, 'place')}: there the way that keeps each outline to itself was taken. Look whether it is the right one.`,
+  aside: 'Lines that were left out are drawn dotted where they were.',
+  tooDense: 'So many lines touch each other that not every overlap and crossing was looked for.',
+  joined: (metres: number, system: UnitSystem) =>
+    `Ends up to ${quantityText(metres, 'length', system, { figures: 2 }).text} apart were joined.`,
+  joinWider: 'Join ends that are farther apart',
+  showPlaces: 'Show on the drawing where',
   openChains: (number: number) => `${count(number, 'chain')} not closed, shown dashed: not part of the cut.`,
   deviation: (metres: number) =>
     `Curves are drawn with arcs that stay within ${numberText(metres * 1e6, 1)} µm of them.`,

@@ -128,9 +128,46 @@ describe('adding a part', () => {
     show(<PartNewScreen />, 'programmer');
     await choose();
     expect(await screen.findByText(/cross each other at 1 place/)).toBeTruthy();
-    expect(screen.getAllByTestId('drawing-mark')).toHaveLength(1);
+    // and the text that was left out
+    expect(screen.getAllByTestId('drawing-mark')).toHaveLength(2);
     await userEvent.click(screen.getByRole('button', { name: 'Keep as a part' }));
     expect(requests).toHaveLength(1);
+  });
+
+  it('marks where something was repaired, how large it was, and takes the marks away when asked', async () => {
+    const repaired = [
+      {
+        what: 'gap closed',
+        count: 2,
+        at: [
+          { x: 0, y: 0 },
+          { x: 0.2, y: 0 },
+        ],
+        largest: 4e-4,
+      },
+    ];
+    serveWith(() => json({ ...reading, leftOut: [], repaired, branches: [{ x: 0.1, y: 0.1 }] }));
+    show(<PartNewScreen />, 'programmer');
+    await choose();
+    expect(await screen.findByText('Repaired: 2 × gap closed, at most 0.4 mm')).toBeTruthy();
+    expect(screen.getByText(/More than two ends meet at 1 place/)).toBeTruthy();
+    expect(screen.getAllByTestId('drawing-mark')).toHaveLength(3);
+    await userEvent.click(screen.getByRole('checkbox', { name: 'Show on the drawing where' }));
+    expect(screen.queryAllByTestId('drawing-mark')).toHaveLength(0);
+  });
+
+  it('says up to which distance ends were joined, and joins wider ones when asked', async () => {
+    const requests = serveWith(() => json(reading));
+    show(<PartNewScreen />, 'programmer');
+    await choose();
+    expect((await screen.findAllByText('Ends up to 0.01 mm apart were joined.')).length).toBeGreaterThan(0);
+    await userEvent.click(screen.getByRole('button', { name: 'Join ends that are farther apart' }));
+    const field = screen.getByRole('textbox', { name: /Largest gap to close/ });
+    await userEvent.clear(field);
+    await userEvent.type(field, '0.25');
+    await userEvent.tab();
+    await waitFor(() => expect(requests).toHaveLength(2));
+    expect(sent(requests[1]?.body)).toEqual({ gapTolerance: 2.5e-4 });
   });
 
   it('asks for the unit with the size in millimetres and inches, and does not keep a part of unknown size', async () => {

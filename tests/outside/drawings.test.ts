@@ -1,6 +1,6 @@
 import { existsSync, readFileSync } from 'node:fs';
 import path from 'node:path';
-import { describe, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { drawingRead, unitLength } from '../../strategy/path/drawing/index.ts';
 import type { DrawingReading } from '../../strategy/path/drawing/index.ts';
 import { contourArea, contourLength } from '../../strategy/path/index.ts';
@@ -57,54 +57,56 @@ type Expected = {
 /** Pieces that branch and planes that tilt leave the count to the way of reading. */
 const indicative = new Set(['S18', 'S19', 'S24', 'S35']);
 
-if (there) {
-  // the shape is that of the file beside the drawings, and each value is compared below
-  const all = JSON.parse(readFileSync(path.join(folder, 'expected.json'), 'utf8')) as Expected[];
-  outsideChecks(
-    'real drawings',
-    all
-      .filter((e) => e.file.endsWith('.dxf') && !indicative.has(e.id))
-      .flatMap((e): OutsideCheck[] => {
-        const base = {
-          source: `${e.origin.repo}, ${e.origin.path}, read with Python ezdxf 0.18.1`,
-          standing: 'published' as const,
-        };
-        const file = path.join(folder, e.file);
-        const checks: OutsideCheck[] = [];
-        const closed = e.closedContours?.['1e-6d'];
-        if (closed !== undefined) {
-          checks.push({
-            ...base,
-            id: `${e.id}-closed`,
-            what: `closed contours of ${e.file}`,
-            unit: '1',
-            got: () => read(file).contours.length,
-            expected: closed,
-            tolerance: { abs: 0 },
-          });
-        }
-        const bounds = e.boundsFileUnits;
-        if (bounds) {
-          const [x0 = NaN, y0 = NaN, x1 = NaN, y1 = NaN] = bounds;
-          const got = () => {
-            const r = read(file);
-            return Math.hypot(r.bounds.maxX - r.bounds.minX, r.bounds.maxY - r.bounds.minY) / unitLength[r.unit];
-          };
-          checks.push({
-            ...base,
-            id: `${e.id}-diagonal`,
-            what: `diagonal of ${e.file}, file units`,
-            unit: '1',
-            got,
-            expected: Math.hypot(x1 - x0, y1 - y0),
-            tolerance: { rel: 1e-3 },
-          });
-        }
-        return checks;
-      }),
-  );
-} else {
-  describe('real drawings', () => {
-    it.skip('are compared where they stand beside the project', () => undefined);
-  });
+// the shape is that of the file beside the drawings, and each value is compared below
+const all = there ? (JSON.parse(readFileSync(path.join(folder, 'expected.json'), 'utf8')) as Expected[]) : [];
+/** What an independent reader found in a drawing, against what ours finds. */
+function drawingChecks(e: Expected): OutsideCheck[] {
+  const picture = e.file.endsWith('.svg');
+  const base = {
+    source: `${e.origin.repo}, ${e.origin.path}, read with Python ${picture ? 'svgelements 1.7.2' : 'ezdxf 0.18.1'}`,
+    standing: 'published' as const,
+  };
+  const file = path.join(folder, e.file);
+  const checks: OutsideCheck[] = [];
+  const closed = e.closedContours?.['1e-6d'];
+  if (closed !== undefined) {
+    checks.push({
+      ...base,
+      id: `${e.id}-closed`,
+      what: `closed contours of ${e.file}`,
+      unit: '1',
+      got: () => read(file).contours.length,
+      expected: closed,
+      tolerance: { abs: 0 },
+    });
+  }
+  const bounds = e.boundsFileUnits;
+  if (bounds) {
+    const [x0 = NaN, y0 = NaN, x1 = NaN, y1 = NaN] = bounds;
+    const got = () => {
+      const r = read(file);
+      // the sizes of pictures are given in millimetres, those of drawings in their own units
+      const unit = picture ? unitLength.mm : unitLength[r.unit];
+      return Math.hypot(r.bounds.maxX - r.bounds.minX, r.bounds.maxY - r.bounds.minY) / unit;
+    };
+    checks.push({
+      ...base,
+      id: `${e.id}-diagonal`,
+      what: `diagonal of ${e.file}, ${picture ? 'mm' : 'file units'}`,
+      unit: '1',
+      got,
+      expected: Math.hypot(x1 - x0, y1 - y0),
+      tolerance: { rel: 1e-3 },
+    });
+  }
+  return checks;
 }
+
+const gated = all.filter((e) => !indicative.has(e.id));
+describe.skipIf(!there)('real drawings that stand beside the project', () => {
+  outsideChecks('read as by an independent reader', gated.flatMap(drawingChecks));
+
+  it('are all there', () => {
+    for (const e of all) expect([e.file, existsSync(path.join(folder, e.file))]).toEqual([e.file, true]);
+  });
+});

@@ -109,7 +109,7 @@ export type DrawingReading = {
   readonly tooDense: boolean;
 };
 
-/** Geometry that was left out, and why. m */
+/** A connected piece of geometry that was left out, and why. m */
 export type Aside = { readonly what: string; readonly segments: readonly Segment[] };
 
 export type NoDrawing = { readonly kind: 'none'; readonly why: string };
@@ -168,6 +168,7 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
   const { whole, flat } = withoutFlat(
     [...sorted.closed.map((place) => chainOfOne(cleaned.kept, place)), ...chains.closed],
     rounding,
+    sorted.meetings,
   );
   const joined = whole.map((chain) => closeJoints(chain.segments, rounding));
   const closed = joined.map(({ segments }, i) => ({ contour: { segments }, layer: whole[i]?.layer ?? '0' }));
@@ -229,7 +230,7 @@ const mostAside = 3000;
 function piecesOf(source: Source, layers: readonly DrawingLayer[]) {
   const byName = new Map(layers.map((layer) => [layer.name, layer]));
   const pieces: Piece[] = [];
-  const asideByName = new Map<string, Segment[]>();
+  const aside: Aside[] = [];
   let deviation = 0;
   let count = 0;
   let asideCount = 0;
@@ -244,9 +245,7 @@ function piecesOf(source: Source, layers: readonly DrawingLayer[]) {
         if (shapeReach(shape) <= drawingLimits.reach) shapeInto(shape, lookTolerance, segments);
       }
       asideCount += segments.length;
-      const there = asideByName.get(what);
-      if (there) for (const segment of segments) there.push(segment);
-      else asideByName.set(what, segments);
+      for (const run of connectedRuns(segments)) aside.push({ what, segments: run });
       continue;
     }
     for (const shape of shapes) {
@@ -258,7 +257,6 @@ function piecesOf(source: Source, layers: readonly DrawingLayer[]) {
     if (segments.length === 1) pieces.push({ segments, layer });
     else for (const run of connectedRuns(segments)) pieces.push({ segments: run, layer });
   }
-  const aside = [...asideByName].map(([what, segments]): Aside => ({ what, segments }));
   return { pieces, aside, deviation };
 }
 
@@ -306,12 +304,18 @@ function chainOfOne(pieces: readonly Piece[], place: number): Chain {
 }
 
 /** Closed chains in the order of the drawing, without those that go and come back on themselves. */
-function withoutFlat(closed: readonly Chain[], rounding: number): { whole: Chain[]; flat: Repair[] } {
+function withoutFlat(
+  closed: readonly Chain[],
+  rounding: number,
+  meetings: readonly Meeting[],
+): { whole: Chain[]; flat: Repair[] } {
   const flat: Repair[] = [];
-  const whole = closed.filter(({ segments }) => {
+  const whole = closed.filter(({ segments, members }) => {
     const [first] = segments;
     const length = pathLength(segments);
     if (!first || Math.abs(contourArea({ segments })) > rounding * length) return true;
+    // a figure of eight has no area either, but a place where it crosses
+    if (meetings.some((meeting) => members.includes(meeting.first) && members.includes(meeting.second))) return true;
     flat.push({ what: 'outline that encloses nothing dropped', at: segmentStart(first), size: length });
     return false;
   });

@@ -58,7 +58,7 @@ export function svgSource(bytes: Uint8Array, given: DrawingUnit | undefined): So
   const toMetres: Affine = { a: scale, b: 0, c: 0, d: -scale, e: 0, f: page.height * scale };
 
   const reader = new Reader(root, notes);
-  reader.content(root, affineCompose(toMetres, map), inner, firstStyle, null);
+  reader.whole(affineCompose(toMetres, map), inner);
   const size = { width: page.width * scale, height: page.height * scale };
   return {
     paths: reader.paths.map((path) => (isPage(path, size, reader) ? { ...path, layer: pageLayer } : path)),
@@ -97,12 +97,14 @@ type SvgPath = DrawnPath & { readonly painted: boolean };
 class Reader {
   readonly paths: SvgPath[] = [];
   readonly counts = new Map<string, number>();
+  readonly #root: SvgNode;
   readonly #notes: Notes;
   readonly #byId = new Map<string, SvgNode>();
   readonly #sheet;
   readonly #count = entityCounter();
 
   constructor(root: SvgNode, notes: Notes) {
+    this.#root = root;
     this.#notes = notes;
     const styles: string[] = [];
     const nodes = [root];
@@ -113,6 +115,12 @@ class Reader {
       for (const child of node.children) nodes.push(child);
     }
     this.#sheet = styleSheet(styles.reverse());
+  }
+
+  whole(map: Affine, port: Viewport): void {
+    const style = styleOf(this.#root, firstStyle, this.#sheet);
+    if (style.shown) this.content(this.#root, map, port, style, null);
+    else this.#notes.leave('picture that is not displayed', null);
   }
 
   content(node: SvgNode, map: Affine, port: Viewport, style: SvgStyle, layer: string | null, uses = 0): void {
