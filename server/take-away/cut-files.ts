@@ -15,7 +15,7 @@ export type CutFiles = {
   close(): Promise<void>;
 };
 
-/** Time for one file, s. A sheet of 2,000 corners takes a tenth of it. */
+/** Time for one file, s. A sheet of 2,000 corners takes a fifth of it. */
 const seconds = 20;
 
 export function createCutFiles(): CutFiles {

@@ -62,9 +62,11 @@ function arcBeside(finished: Segment, beside: number): Segment {
   return { ...finished, radius: finished.radius + Math.sign(finished.sweep) * beside };
 }
 
-/** Corners are named `c{contour}-{segment}` by the planner. */
+/** As the planner names a corner: by its contour and the segment that starts there. */
+export const cornerId = (contourId: string, index: number | ''): string => `c${contourId}-${index}`;
+
 function cornerIndex(id: string, contourId: string): number {
-  const start = `c${contourId}-`;
+  const start = cornerId(contourId, '');
   const index = id.startsWith(start) ? Number(id.slice(start.length)) : Number.NaN;
   if (!Number.isInteger(index)) throw new Error(`corner ${id} is not one of contour ${contourId}`);
   return index;

@@ -10,6 +10,10 @@ import { numberText } from '../../strategy/units/index.ts';
 
 export type SheetCorner = {
   readonly at: Point; // m
+  /** Direction from the corner into the part, unit length: there its number stands. */
+  readonly inward: Point;
+  /** Inside the part, rad. */
+  readonly angle: number;
   readonly treatment: string;
   /** A row of the table, a text for each of `columns` but the first, which is the corner's number. */
   readonly row: readonly string[];
@@ -97,51 +101,30 @@ type Face = keyof typeof faces;
 const widthOf = (document: Document) => document.page.width - 2 * margin;
 const bottomOf = (document: Document) => document.page.height - margin - footHeight;
 
+type Set = { x: number; y: number; width: number; face?: Face; size: number; colour?: string; right?: boolean };
+
 /** One line of text, cut off where it has no room; `right` is set against the right end. */
 function line(
   document: Document,
   text: string,
-  {
-    x,
-    y,
-    width,
-    face = 'plain',
-    size,
-    colour = ink,
-    right = false,
-  }: {
-    x: number;
-    y: number;
-    width: number;
-    face?: Face;
-    size: number;
-    colour?: string;
-    right?: boolean;
-  },
+  { x, y, width, face = 'plain', size, colour = ink, right = false }: Set,
 ): void {
   document.font(face).fontSize(size).fillColor(colour);
-  document.text(text, x, y, {
-    width,
-    height: size * 1.4,
-    ellipsis: true,
-    lineBreak: true,
-    align: right ? 'right' : 'left',
-  });
+  // no letter is wider than its size: most texts need no measuring
+  const measured = right || text.length * size > width;
+  const shown = measured ? shortened(document, text, width) : text;
+  document.text(shown, right ? x + width - document.widthOfString(shown) : x, y, { lineBreak: false });
+}
+
+function shortened(document: Document, text: string, width: number): string {
+  if (document.widthOfString(text) <= width) return text;
+  let end = text.length;
+  while (end > 0 && document.widthOfString(`${text.slice(0, end).trimEnd()}…`) > width) end--;
+  return `${text.slice(0, end).trimEnd()}…`;
 }
 
 /** Text over as many lines as it takes; gives where it ends. */
-function lines(
-  document: Document,
-  text: string,
-  {
-    x,
-    y,
-    width,
-    face = 'plain',
-    size,
-    colour = ink,
-  }: { x: number; y: number; width: number; face?: Face; size: number; colour?: string },
-): number {
+function lines(document: Document, text: string, { x, y, width, face = 'plain', size, colour = ink }: Set): number {
   document.font(face).fontSize(size).fillColor(colour).text(text, x, y, { width });
   return document.y;
 }
@@ -149,7 +132,6 @@ function lines(
 function drawHead(document: Document, sheet: Sheet, top: number): number {
   const width = widthOf(document);
   line(document, sheet.kind, { x: margin, y: top, width: width / 2, face: 'narrow', size: 10, colour: softInk });
-  line(document, sheet.title, { x: margin, y: top + 12, width: width * 0.6, face: 'strong', size: 20 });
   // told by frame and words, not by colour
   document.font('strong').fontSize(11);
   const stateWidth = Math.min(width * 0.38, document.widthOfString(sheet.state) + 20);
@@ -159,6 +141,10 @@ function drawHead(document: Document, sheet: Sheet, top: number): number {
     .strokeColor(ink)
     .rect(left, top + 8, stateWidth, 26)
     .stroke();
+  const room = left - margin - 12;
+  const size =
+    [20, 16, 13].find((one) => document.font('strong').fontSize(one).widthOfString(sheet.title) <= room) ?? 11;
+  line(document, sheet.title, { x: margin, y: top + 12 + (20 - size) / 2, width: room, face: 'strong', size });
   line(document, sheet.state, { x: left + 8, y: top + 14, width: stateWidth - 10, face: 'strong', size: 11 });
   return top + 40;
 }
@@ -201,8 +187,7 @@ function drawPicture(document: Document, sheet: Sheet, top: number): number {
     const place = paperPlace(at);
     bars(document, place);
   }
-  if (sheet.corners.length <= mostNumbers)
-    drawNumbers(document, sheet, paperPlace, left + (wide * perMetre) / 2, above + (high * perMetre) / 2);
+  if (sheet.corners.length <= mostNumbers) drawNumbers(document, sheet, paperPlace);
   drawLegend(document, sheet, frame.y + frame.height - 22, scaleText(perMetre / points));
   return frame.y + frame.height;
 }
@@ -250,21 +235,17 @@ function bars(document: Document, { x, y }: Point): void {
     .stroke();
 }
 
-/** Each corner's number beside it, on the side towards the middle of the drawing. */
-function drawNumbers(
-  document: Document,
-  { corners }: Sheet,
-  place: (p: Point) => Point,
-  middleX: number,
-  middleY: number,
-): void {
+/** Each corner's number on the part, the further in the narrower the tip is. */
+function drawNumbers(document: Document, { corners }: Sheet, place: (p: Point) => Point): void {
   document.font('narrow').fontSize(8).fillColor(ink);
-  corners.forEach(({ at, trouble }, i) => {
+  corners.forEach(({ at, inward, angle, trouble }, i) => {
     const { x, y } = place(at);
     const text = `${i + 1}${trouble === null ? '' : '!'}`;
-    const dx = x > middleX ? -5 - document.widthOfString(text) : 5;
-    const dy = y > middleY ? -11 : 3;
-    document.text(text, x + dx, y + dy, { lineBreak: false });
+    const off = Math.min(26, 8 / Math.sin(Math.min(angle, Math.PI) / 2));
+    // y runs down on paper
+    document.text(text, x + inward.x * off - document.widthOfString(text) / 2, y - inward.y * off - 5, {
+      lineBreak: false,
+    });
   });
 }
 

@@ -2,9 +2,10 @@ import type { RevisionState } from '../../shared/strategies.ts';
 import { takeAwayCautions, type TakeAwayFormat } from '../../shared/take-away.ts';
 import type { CutPath } from '../../strategy/path/cut-path.ts';
 import { cutFileUnits, type CutFileUnit } from '../../strategy/path/drawing/write/index.ts';
-import type { Point } from '../../strategy/path/index.ts';
+import { contourCorners, cornerInward, type Point } from '../../strategy/path/index.ts';
 import { quantityText, type Dimension, type UnitSystem } from '../../strategy/units/index.ts';
 import type { Sheet, SheetCorner } from './sheet.ts';
+import { cornerId } from './cut-path.ts';
 import type { TakenPlan } from './repository.ts';
 
 const systems = { mm: 'metric', inch: 'inch' } as const satisfies Record<CutFileUnit, UnitSystem>;
@@ -81,6 +82,11 @@ export function planSheet(
   const shown = (value: number, dimension: Dimension, figures?: number) =>
     quantityText(value, dimension, system, figures === undefined ? {} : { figures }).text;
   const approved = revision.state === 'approved';
+  const inward = new Map(
+    part.reading.contours.flatMap(({ id, segments }) =>
+      contourCorners({ segments }).map((corner) => [cornerId(id, corner.index), cornerInward(corner)] as const),
+    ),
+  );
   const { totals } = plan;
   const hottest = totals.hottestTreated === null ? '' : `, hottest ${shown(totals.hottestTreated, 'temperature')}`;
   return {
@@ -128,6 +134,8 @@ export function planSheet(
       const wait = corner.dwell === null ? '' : ` ${shown(corner.dwell, 'time')}`;
       return {
         at: corner.at,
+        inward: inward.get(corner.id) ?? { x: 0, y: 0 },
+        angle: corner.angle,
         treatment: corner.treatment,
         row: [
           placeText(corner.at, system),

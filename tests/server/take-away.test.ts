@@ -28,6 +28,7 @@ let programmer: Caller;
 let engineer: Caller;
 let partId: string;
 let approvedPlan: string;
+let unapprovedPlan: string | undefined;
 
 const room = { left: 0.06, right: 0.06, above: 0.06, below: 0.06 };
 const choices = { thickness: 0.0185, plateTemperature: 300, skeleton: room, overrides: {} };
@@ -88,7 +89,14 @@ async function loopsOf(part: string, revisionId: string): Promise<string> {
 
 const take = (planId: string, as: string, unit = 'mm', caller = programmer) =>
   caller.call(cutPathEndpoints.take, { params: { planId }, query: { as, unit } });
-const taken = async (planId: string, as: TakeAwayFormat, unit = 'mm') => (await made(take(planId, as, unit))).bytes;
+/** Bytes of a file; sheets, which take longest, are made once. */
+const taken = async (planId: string, as: TakeAwayFormat, unit = 'mm'): Promise<Buffer> => {
+  const key = `${planId} ${as} ${unit}`;
+  const bytes = sheets.get(key) ?? (await made(take(planId, as, unit))).bytes;
+  if (as === 'pdf') sheets.set(key, bytes);
+  return bytes;
+};
+const sheets = new Map<string, Buffer>();
 const textOf = async (planId: string, as: Exclude<TakeAwayFormat, 'pdf'>, unit = 'mm') =>
   (await taken(planId, as, unit)).toString('utf8');
 /** All that stands in a PDF, by a package that reads PDFs, without its line breaks. */
@@ -176,13 +184,38 @@ describe('a corner plan’s cut path', () => {
   test.each(takeAwayFormats)(
     'as %s says when its strategy is not approved, in the file and in its name',
     async (as) => {
-      const { id } = await makeSubmitted(plant, { gradeGroup: `not approved ${as}` });
-      const planId = await planOf(partId, id);
-      const { bytes, headers } = await made(take(planId, as));
+      unapprovedPlan ??= await planOf(partId, (await makeSubmitted(plant, { gradeGroup: 'not approved' })).id);
+      const { bytes, headers } = await made(take(unapprovedPlan, as));
       expect(await spoken[as](bytes)).toContain('NOT APPROVED: the strategy revision is in review.');
       expect(headers['content-disposition']).toContain('not-approved');
     },
   );
+
+  test('goes round a rounded corner beside its arc, and says that an ease is not in the file', async () => {
+    const cornerRules = {
+      ...plant.content.cornerRules,
+      ease: { allowed: true, length: 0.01, feedShare: 0.5, powerShare: 0.5 },
+      round: { allowed: true, radius: 0.003, tolerance: 0.005 },
+    };
+    const { id } = await makeApproved(plant, { gradeGroup: 'rounds and eases', cornerRules });
+    const params = { planId: await planOf(partId, id) };
+    const tips = (await made(programmer.call(cornerPlanEndpoints.get, { params }))).body.corners.filter(({ options }) =>
+      options.some((one) => one.treatment === 'round' && one.fits),
+    );
+    const [first, second] = tips;
+    if (!first || !second) throw new Error('the bracket has no two corners that may be rounded');
+    const overrides = Object.fromEntries(tips.map((tip) => [tip.id, tip === first ? 'round' : 'leave']));
+    const planId = await planOf(partId, id, { overrides: { ...overrides, [second.id]: 'ease' } });
+    const { body } = await made(programmer.call(cornerPlanEndpoints.get, { params: { planId } }));
+    const radius = body.corners.find((corner) => corner.id === first.id)?.round?.radius ?? Number.NaN;
+    const dxf = new SecondReader().parseSync(await textOf(planId, 'dxf'));
+    const radii = dxf?.entities.flatMap((entity) => ('radius' in entity ? [Number(entity.radius)] : []));
+    const beside = (radius + plant.content.cut.kerfWidth / 2) * 1000;
+    expect(radii?.some((one) => Math.abs(one - beside) < 1e-3)).toBe(true);
+    const said = await spoken.iso(await taken(planId, 'iso'));
+    expect(said).toContain('One corner is eased: feed and power are lowered there, which no file of a path says.');
+    expect(said).not.toContain('is left out');
+  });
 
   test('whose contour has no room for a lead-in is refused with a sentence, and nothing is saved', async () => {
     const { id } = await makeApproved(plant, { gradeGroup: 'no room' });
