@@ -2,7 +2,11 @@ import type { z } from 'zod';
 import type { CornerPlan, cornerPlanEndpoints, PlannedCorner } from '../../shared/corner-plans.ts';
 import type { DrawingReadingWire } from '../../shared/parts.ts';
 import type { StrategyContent } from '../../shared/strategies.ts';
-import type { CornerPlan as Computed, PlannedCorner as ComputedCorner } from '../../strategy/corners/index.ts';
+import {
+  cornerInsert,
+  type CornerPlan as Computed,
+  type PlannedCorner as ComputedCorner,
+} from '../../strategy/corners/index.ts';
 import type { MachineProfile } from '../../strategy/machine.ts';
 import { oxygenMassFlow, PIERCE_DEFAULTS, routineTime } from '../../strategy/pierce/index.ts';
 import type { DrawingReader } from '../drawings/reader.ts';
@@ -54,6 +58,7 @@ export async function computePlan(
 
 function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): PlannedCorner {
   const { loop, ease, round } = corner;
+  const insert = cornerInsert(corner);
   return {
     id: corner.id,
     contourId: corner.contourId,
@@ -86,7 +91,8 @@ function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): Pla
           extension: loop.extension,
           length: loop.length,
           slugArea: loop.slug?.area ?? 0,
-          segments: [...loop.segments],
+          // as it is put into the path: where the drawing rounds the corner with the way to the loop and from it
+          segments: [...(insert?.kind === 'path' ? insert.segments : loop.segments)],
           slug: [...(loop.slug?.contour.segments ?? [])],
         }
       : null,

@@ -52,7 +52,7 @@ export type PlannedRound = {
 };
 
 export type PlannedCorner = {
-  /** `c{contour}-{segment}`, with an r behind it for a corner that the drawing rounds: the same drawing gives the same ids. */
+  /** `c{contour}-{segment}`: the same drawing gives the same ids. */
   readonly id: string;
   readonly contourId: string;
   /** The segment of the contour at whose start the corner stands. */
@@ -185,7 +185,7 @@ export function prospectsOf(contour: PlanContour, { cut }: Pick<CornerPlanReques
     const { point: finished, incoming, outgoing, angle, fillet, index } = corner;
     const point = cornerOfPath({ point: finished, incoming, outgoing, angle }, cut.kerfWidth);
     return {
-      id: `c${contour.id}-${index}${fillet ? 'r' : ''}`,
+      id: `c${contour.id}-${index}`,
       contour,
       corner,
       onPath: { point, incoming, outgoing, angle },
@@ -300,9 +300,9 @@ function pathBefore({ segments }: Contour, corner: Corner, onPath: Point): Segme
     length += segmentLength(edge);
     if (length > 0) before.push(segmentShift(edge, shift));
   }
-  const own = fillet ? fillet.pieces : 0;
+  const [first, own] = [fillet?.first ?? corner.index, fillet?.pieces ?? 0];
   for (let back = 1; back < segments.length - own && length < countedPath; back++) {
-    const segment = segments[(corner.index + segments.length - back) % segments.length];
+    const segment = segments[(first + segments.length - back) % segments.length];
     if (!segment) break;
     before.unshift(segmentShift(segment, shift));
     length += segmentLength(segment);
@@ -313,11 +313,11 @@ function pathBefore({ segments }: Contour, corner: Corner, onPath: Point): Segme
 /** The path behind a corner for at least `wanted` m, or until the first edge comes again. */
 function pathAfter({ segments }: Contour, corner: Corner, onPath: Point, wanted: number): Segment[] {
   const shift = pointSubtract(onPath, corner.point);
-  const own = corner.fillet?.pieces ?? 0;
+  const [first, own] = [corner.fillet?.first ?? corner.index, corner.fillet?.pieces ?? 0];
   const after: Segment[] = [];
   let length = 0;
   for (let i = own; i < segments.length - 1 && length < wanted; i++) {
-    const segment = segments[(corner.index + i) % segments.length];
+    const segment = segments[(first + i) % segments.length];
     if (!segment) break;
     after.push(segmentShift(segment, shift));
     length += segmentLength(segment);

@@ -7,7 +7,8 @@ import { segmentEnd, segmentLength, segmentStart, segmentTangentAt } from './seg
 /** The rounding that the drawing itself gives a corner. */
 export type Fillet = {
   readonly radius: number; // m, of its arc, or length over turn where it is drawn in pieces
-  /** So many segments of the contour make it up, from the corner's index on. */
+  /** The segments of the contour that make it up: the first, and how many. */
+  readonly first: number;
   readonly pieces: number;
   readonly start: Point; // m
   readonly end: Point; // m
@@ -15,7 +16,10 @@ export type Fillet = {
 
 /** A break of direction on a finished contour whose part lies on the left, or a fillet so small that heat takes it for one. */
 export type Corner = {
-  /** The corner stands at the start of this segment of the contour; a fillet begins there. */
+  /**
+   * The corner stands at the start of this segment of the contour, unlike any other; a fillet begins there, or ends there where it begins in a
+   * sharp corner.
+   */
   readonly index: number;
   /** Where the two finished edges meet, m; with a fillet where their tangents do. */
   readonly point: Point;
@@ -137,9 +141,10 @@ function tightness({ segment, length, turnBefore, sweep }: Piece, turnAfter: num
 function filletOf(run: readonly Piece[], before: Piece, after: Piece, leastBreak: number) {
   const [first, last] = [run[0], run[run.length - 1]];
   if (!first || !last) return null;
-  // an arc that begins or ends in a sharp corner leaves that corner to itself
+  // an arc that begins or ends in a sharp corner leaves that corner to itself; between two of them it is no third
   const startsSharp = first.segment.kind === 'arc' && Math.abs(first.turnBefore) >= leastBreak;
   const endsSharp = last.segment.kind === 'arc' && Math.abs(after.turnBefore) >= leastBreak;
+  if (startsSharp && endsSharp) return null;
   const incoming = startsSharp ? first.startTangent : before.endTangent;
   const outgoing = endsSharp ? last.endTangent : after.startTangent;
   const turn =
@@ -153,8 +158,11 @@ function filletOf(run: readonly Piece[], before: Piece, after: Piece, leastBreak
   const point = pointAdd(start, pointScale(incoming, along));
   const length = run.reduce((sum, piece) => sum + piece.length, 0);
   const radius = run.length === 1 && first.segment.kind === 'arc' ? first.segment.radius : length / Math.abs(turn);
-  const fillet: Fillet = { radius, pieces: run.length, start, end };
-  const corner: Corner = { ...cornerOf(first.index, point, turn, incoming, outgoing), fillet };
+  const fillet: Fillet = { radius, first: first.index, pieces: run.length, start, end };
+  const corner: Corner = {
+    ...cornerOf(startsSharp ? after.index : first.index, point, turn, incoming, outgoing),
+    fillet,
+  };
   return { corner, startsSharp, endsSharp };
 }
 
@@ -182,4 +190,16 @@ export function cornerOfPath(
 ): Point {
   const away = -kerfWidth / 2 / Math.sin(corner.angle / 2);
   return pointAdd(corner.point, pointScale(cornerInward(corner), away));
+}
+
+/**
+ * Where the path waits at a tip before the second edge begins, m: in its corner, or where the arc beside a drawn fillet ends, half a kerf outside it.
+ */
+export function cornerWait(corner: Corner, kerfWidth: number): Point {
+  const point = cornerOfPath(corner, kerfWidth);
+  if (!corner.fillet) return point;
+  return pointAdd(
+    point,
+    pointScale(corner.outgoing, (corner.fillet.radius + kerfWidth / 2) / Math.tan(corner.angle / 2)),
+  );
 }

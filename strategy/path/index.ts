@@ -48,7 +48,7 @@ export type { SvgOptions } from './svg.ts';
 export { svgContourData, svgPathData } from './svg.ts';
 export { pathPart, pathWithoutLast } from './path-part.ts';
 export type { Corner, Fillet } from './corner.ts';
-export { contourCorners, cornerInward, cornerOfPath, largestFillet, smallestBreak } from './corner.ts';
+export { contourCorners, cornerInward, cornerOfPath, cornerWait, largestFillet, smallestBreak } from './corner.ts';
 export type { FlatLoop, Loop, LoopCorner, Slug, TangentLoop } from './loop.ts';
 export {
   flatLoopAt,

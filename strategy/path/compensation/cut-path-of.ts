@@ -1,6 +1,6 @@
 import type { Contour } from '../contour.ts';
 import { contourArea } from '../contour.ts';
-import { contourCorners, cornerOfPath } from '../corner.ts';
+import { contourCorners, cornerWait } from '../corner.ts';
 import type { CutPath, CutPiece, CutRun } from '../cut-path.ts';
 import { segmentPointDistance } from '../distance.ts';
 import type { Point } from '../point.ts';
@@ -227,7 +227,7 @@ function ringOf(
   );
   for (const insert of inserts) {
     const corner = corners.get(insert.index);
-    const expected = corner && corner.convex ? cornerOfPath(corner, kerfWidth) : null;
+    const expected = corner?.convex ? cornerWait(corner, kerfWidth) : null;
     const [from, to] =
       insert.kind === 'path'
         ? [segmentStart(insert.segments[0] ?? never()), segmentEnd(insert.segments.at(-1) ?? never())]

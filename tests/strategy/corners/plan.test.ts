@@ -522,9 +522,9 @@ describe('a round', () => {
       ],
     };
     const corner = first(
-      plan({ contours: [{ id: '1', contour: drawn, role: 'outer' }], overrides: { 'c1-0r': 'leave' } }),
+      plan({ contours: [{ id: '1', contour: drawn, role: 'outer' }], overrides: { 'c1-0': 'leave' } }),
     );
-    expect(corner.id).toBe('c1-0r');
+    expect(corner.id).toBe('c1-0');
     expect(corner.returnWithout).toBeCloseTo(sharp.returnWith, 6);
   });
 
@@ -600,7 +600,7 @@ describe('a corner that the drawing rounds', () => {
       plan({
         contours,
         rules: { ...rules, ease: { allowed: true, length: 5e-3, feedShare: 0.4, powerShare: 0.4 } },
-        overrides: { 'c1-0r': 'ease' },
+        overrides: { 'c1-0': 'ease' },
       }),
     );
     expect(eased.ease?.pieces.some(({ segment, eased: by }) => segment.kind === 'arc' && by === 1)).toBe(true);

@@ -163,7 +163,10 @@ describe('a round', () => {
     expect(() =>
       cornerRound(
         notch,
-        { ...cornerAt(notch, 1), fillet: { radius: 1e-3, pieces: 1, start: { x: 0, y: 0 }, end: { x: 0, y: 0 } } },
+        {
+          ...cornerAt(notch, 1),
+          fillet: { radius: 1e-3, first: 1, pieces: 1, start: { x: 0, y: 0 }, end: { x: 0, y: 0 } },
+        },
         1e-3,
       ),
     ).toThrow(/sharp tip/);

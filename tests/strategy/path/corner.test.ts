@@ -156,6 +156,26 @@ describe('a fillet', () => {
     ]);
   });
 
+  it('that begins in a sharp corner stands where it ends, so that no two corners share a place', () => {
+    const r = 1e-3;
+    // the edge along y = 0 breaks by a right angle into a quarter arc that runs out upwards
+    const part: Contour = {
+      segments: [
+        lineBetween({ x: 0, y: 0 }, { x: 0.05, y: 0 }),
+        arcOf({ x: 0.05, y: r }, r, -Math.PI / 2, Math.PI / 3),
+        lineBetween({ x: 0.05 + r * Math.cos(-Math.PI / 6), y: r + r * Math.sin(-Math.PI / 6) }, { x: 0.02, y: 0.06 }),
+        lineBetween({ x: 0.02, y: 0.06 }, { x: 0, y: 0.05 }),
+        lineBetween({ x: 0, y: 0.05 }, { x: 0, y: 0 }),
+      ],
+    };
+    const corners = contourCorners(part);
+    expect(new Set(corners.map(({ index }) => index)).size).toBe(corners.length);
+    const reversed = contourCorners({ segments: contourReverse(part).segments });
+    expect(new Set(reversed.map(({ index }) => index)).size).toBe(reversed.length);
+    const fillet = corners.find((corner) => corner.fillet);
+    expect(fillet).toMatchObject({ index: 1, fillet: { first: 1, pieces: 1 } });
+  });
+
   it('turns and moves with its contour', () => {
     const contour = tipWith(1.1, radiusOf(7e-4, 1.1));
     fc.assert(
