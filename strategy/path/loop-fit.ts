@@ -45,7 +45,10 @@ export type LoopRoom = {
 /** The cut beside a loop's own corner leaves this share of half a kerf to the rounding of curved edges taken by their tangents. */
 const tangentSlack = 0.02;
 
-/** Rounding of coordinates that is no contact, m. */
+/** Rounding that is no contact, as a share of the kerf: about a nanometre. */
+const contact = 1e-6;
+
+/** Rounding of coordinates beside a plate's edge that is no contact, m. */
 const rounding = 1e-9;
 
 /** What loops that start in a place and reach no farther than `reach` (m) can meet. Throws RangeError when the field has no such contour. */
@@ -98,11 +101,12 @@ export function loopFitsIn(loop: Loop, room: LoopRoom): LoopFit {
   const { kerfWidth, clearance, field, loops } = room.around;
   const half = kerfWidth / 2;
   const needed = half + clearance;
+  const slack = contact * kerfWidth;
   const pieces = loopPieces(loop, needed);
 
   if (field.plate && 'minX' in field.plate) {
     for (const { box } of pieces) {
-      const at = leavesRectangle(box, field.plate, needed);
+      const at = leavesRectangle(box, field.plate, needed - slack);
       if (at) return blocked('plate', at, tooNearThePlatesEdge(clearance));
     }
   }
@@ -111,7 +115,7 @@ export function loopFitsIn(loop: Loop, room: LoopRoom): LoopFit {
       const least = leastDistance(obstacle, room, besideCorner);
       if (apart(box, obstacle.box, least)) continue;
       const found = segmentDistance(segment, obstacle.segment);
-      if (found.distance - obstacle.radius >= least - rounding) continue;
+      if (found.distance - obstacle.radius >= least - slack) continue;
       return inTheWay(obstacle, found.distance - obstacle.radius, found.onSecond, room);
     }
   }
@@ -121,7 +125,7 @@ export function loopFitsIn(loop: Loop, room: LoopRoom): LoopFit {
       for (const { segment, box } of pieces) {
         if (apart(box, theirBox, kerfWidth + clearance)) continue;
         const found = segmentDistance(segment, theirs);
-        if (found.distance >= kerfWidth + clearance - rounding) continue;
+        if (found.distance >= kerfWidth + clearance - slack) continue;
         return found.distance > kerfWidth
           ? blocked('loop', found.onSecond, `${other.name} is in the way: ${roomLeft(found.distance - kerfWidth)}`)
           : blocked(
@@ -198,7 +202,7 @@ const lastOf = (loop: Loop): Line => (loop.shape === 'tangent' ? loop.segments[2
 /** Where a segment comes nearer than `needed` m to the edge of a plate, a rectangle or an outline, or lies outside it; null where it does not. */
 export function leavesPlate(segment: Segment, plate: Box | Contour | null, needed: number): Point | null {
   if (plate === null) return null;
-  if ('minX' in plate) return leavesRectangle(segmentBox(segment), plate, needed);
+  if ('minX' in plate) return leavesRectangle(segmentBox(segment), plate, needed - rounding);
   if (!contourContains(plate, segmentStart(segment))) return segmentStart(segment);
   for (const edge of plate.segments) {
     const found = segmentDistance(segment, edge);
@@ -209,7 +213,7 @@ export function leavesPlate(segment: Segment, plate: Box | Contour | null, neede
 
 function leavesRectangle(box: Box, plate: Box, needed: number): Point | null {
   const middle = { x: (box.minX + box.maxX) / 2, y: (box.minY + box.maxY) / 2 };
-  const grown = boxGrow(box, needed - rounding);
+  const grown = boxGrow(box, needed);
   if (grown.minX < plate.minX) return { x: plate.minX, y: middle.y };
   if (grown.maxX > plate.maxX) return { x: plate.maxX, y: middle.y };
   if (grown.minY < plate.minY) return { x: middle.x, y: plate.minY };

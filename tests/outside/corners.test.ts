@@ -3,6 +3,9 @@ import { cutEndWake, heatedPath, pathRise, returnOf } from '../../strategy/heat/
 import type { LoopCorner, Point } from '../../strategy/path/index.ts';
 import {
   cornerInward,
+  flatLoopAt,
+  flatLoopDepth,
+  flatLoopReach,
   lineBetween,
   loopAt,
   loopExtension,
@@ -10,6 +13,7 @@ import {
   loopReach,
   pathLength,
   pointScale,
+  roundDeviation,
 } from '../../strategy/path/index.ts';
 import type { OutsideCheck } from './check.ts';
 import { outsideChecks } from './check.ts';
@@ -89,6 +93,56 @@ outsideChecks('geometry of a loop', [
     expected,
     tolerance: { rel: 1e-6 },
     source: 'length over feed',
+    standing: FORMULA,
+  })),
+]);
+
+const FLAT = 'plane geometry of two circles and their common tangent; evaluated independently of this program';
+
+/** Degrees, arc radius and extension in mm; length, reach and depth in mm by adding up the figure's pieces from their coordinates. */
+const FLATS = [
+  [90, 1, 6.9, 26.85625, 7.97209, 6.58614],
+  [60, 1.5, 8, 27.68511, 9.63941, 9.1782],
+  [45, 2, 12, 37.34287, 14.16553, 13.85192],
+] as const;
+
+outsideChecks(
+  'geometry of a flat loop',
+  FLATS.flatMap(([degrees, r, e, length, reach, depth]): OutsideCheck[] =>
+    (
+      [
+        ['length', length, () => pathLength(flatLoopAt(tip(degrees), r * 1e-3, e * 1e-3).segments)],
+        ['reach', reach, () => flatLoopReach(r * 1e-3, e * 1e-3)],
+        ['depth', depth, () => flatLoopDepth(r * 1e-3, e * 1e-3, rad(degrees))],
+      ] as const
+    ).map(([what, expected, got]) => ({
+      id: `flat-${degrees}-${what}`,
+      what: `${what} of a flat loop at ${degrees}°`,
+      unit: 'mm',
+      got: () => got() * 1e3,
+      expected,
+      tolerance: { abs: 1e-4 },
+      source: FLAT,
+      standing: FORMULA,
+    })),
+  ),
+);
+
+outsideChecks('what a rounded corner is off the drawing', [
+  ...(
+    [
+      [90, 1, 0.41421356],
+      [60, 1, 1],
+      [30, 0.5, 1.43185165],
+    ] as const
+  ).map(([degrees, r, expected]): OutsideCheck => ({
+    id: `round-${degrees}`,
+    what: `deviation of a round of ${r} mm at ${degrees}°`,
+    unit: 'mm',
+    got: () => roundDeviation(r * 1e-3, rad(degrees)) * 1e3,
+    expected,
+    tolerance: { rel: 1e-6 },
+    source: 'plane geometry: distance of the corner from the circle that touches both edges',
     standing: FORMULA,
   })),
 ]);

@@ -1,7 +1,15 @@
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import type { Contour, FieldLeadIn, FieldPlate, LoopSurroundings, Point } from '../../../strategy/path/index.ts';
+import type {
+  Contour,
+  FieldLeadIn,
+  FieldPlate,
+  LoopSurroundings,
+  Point,
+  Segment,
+} from '../../../strategy/path/index.ts';
 import {
+  arcOf,
   contourArea,
   contourContains,
   contourCorners,
@@ -504,5 +512,81 @@ describe('whether a loop fits', () => {
     // the property says something only when loops were found
     expect(fitting).toBeGreaterThan(100);
     expect(flats).toBeGreaterThan(30);
+  });
+});
+
+describe('the judgement of a loop', () => {
+  type Move = { readonly of: (p: Point) => Point; readonly scale: number; readonly mirrored: boolean };
+  const segmentMoved = (segment: Segment, { of, scale, mirrored }: Move): Segment => {
+    if (segment.kind === 'line') return lineBetween(of(segment.start), of(segment.end));
+    const centre = of(segment.centre);
+    const start = of(segmentStart(segment));
+    const angle = Math.atan2(start.y - centre.y, start.x - centre.x);
+    return arcOf(centre, segment.radius * scale, angle, mirrored ? -segment.sweep : segment.sweep);
+  };
+  const contourMoved = (contour: Contour, move: Move): Contour => {
+    const segments = contour.segments.map((segment) => segmentMoved(segment, move));
+    return move.mirrored ? contourReverse({ segments }) : { segments };
+  };
+  const part = polygon([
+    { x: 0, y: 0 },
+    { x: 0.1, y: -0.01 },
+    { x: 0.06, y: 0.05 },
+    { x: 0.08, y: 0.1 },
+    { x: -0.01, y: 0.08 },
+  ]);
+  const neighbour: Contour = {
+    segments: [
+      lineBetween({ x: 0.115, y: -0.03 }, { x: 0.2, y: -0.03 }),
+      lineBetween({ x: 0.2, y: -0.03 }, { x: 0.2, y: 0.1 }),
+      lineBetween({ x: 0.2, y: 0.1 }, { x: 0.115, y: 0.1 }),
+      arcOf(
+        { x: 0.2775, y: 0.035 },
+        Math.hypot(0.1625, 0.065),
+        Math.PI - Math.atan2(0.065, 0.1625),
+        2 * Math.atan2(0.065, 0.1625),
+      ),
+    ],
+  };
+  /** For every tip and some sizes whether a loop of one arc and a flat one fit, in the order of places. */
+  const judged = (move: Move): string[] => {
+    const { scale } = move;
+    const [own, other] = [contourMoved(part, move), contourMoved(neighbour, move)];
+    const surroundings = around([own, other], { kerfWidth: kerf * scale, clearance: clearance * scale });
+    const tips = contourCorners(own, undefined, 1.5e-3 * scale).filter(({ convex, angle }) => convex && angle < 2.2);
+    return tips
+      .map((corner) => {
+        const onPath = { ...corner, point: cornerOfPath(corner, kerf * scale) };
+        const fits = [2, 3, 4, 5, 6, 8, 10].flatMap((mm) => {
+          const flat = flatLoopAt(onPath, 1e-3 * scale, loopExtension(1e-3 * scale, corner.angle) + mm * 1e-3 * scale);
+          return [loopAt(onPath, mm * 1e-3 * scale), flat].map((loop) => loopFits(loop, surroundings).kind);
+        });
+        return `${(corner.angle * 1e6).toFixed(0)}: ${fits.join(' ')}`;
+      })
+      .sort();
+  };
+  const still: Move = { of: (p) => p, scale: 1, mirrored: false };
+
+  it('is the same wherever the plate lies, however it is turned, mirrored, and however large it is', () => {
+    const expected = judged(still);
+    // both answers are among them, or the law says nothing
+    expect(expected.join(' ')).toContain('none');
+    expect(expected.join(' ')).toContain('fits');
+    fc.assert(
+      fc.property(
+        fc.double({ min: -3, max: 3, noNaN: true }),
+        fc.double({ min: -2, max: 2, noNaN: true }),
+        fc.boolean(),
+        fc.constantFrom(1e-6, 1e-3, 1, 1e3, 1e6),
+        (turn, by, mirrored, scale) => {
+          const of = (p: Point): Point => {
+            const turned = pointRotate({ x: mirrored ? -p.x : p.x, y: p.y }, turn);
+            return { x: (turned.x + by) * scale, y: (turned.y - by) * scale };
+          };
+          expect(judged({ of, scale, mirrored })).toEqual(expected);
+        },
+      ),
+      { numRuns: runs(30, 300) },
+    );
   });
 });
