@@ -161,11 +161,14 @@ function framesOf({ profile, pinned, limits }: ProposeInput): readonly Frame[] {
   if (pinned === undefined) {
     return STAGE_COUNTS.map((count) => frameOf(profile, new Array<null>(count).fill(null), mostPower));
   }
-  const given = pinned.filter((stage) => stage !== null);
-  const [problem] = given.length === 0 ? [] : stageProblems(given, profile);
-  if (problem !== undefined) throw new RangeError(`pinned ${problem.path}: ${problem.problem}`);
   if (!(pinned.length >= 1 && pinned.length <= MOST_STAGES)) {
     throw new RangeError(`${pinned.length} stages are outside [1, ${MOST_STAGES}]`);
+  }
+  for (const [index, stage] of pinned.entries()) {
+    const [problem] = stage === null ? [] : stageProblems([stage], profile);
+    if (problem === undefined) continue;
+    const end = problem.path.includes('.from.') ? ' at its start' : problem.path.includes('.to.') ? ' at its end' : '';
+    throw new RangeError(`Stage ${index + 1} cannot be kept as it is${end}. ${problem.problem}`);
   }
   return [frameOf(profile, pinned, mostPower)];
 }

@@ -12,6 +12,7 @@ import {
   type PierceProposal,
   type ProposalRule,
   type ProposeInput,
+  type Stage,
   type StageQuantities,
 } from '../../../strategy/pierce/index.ts';
 import { boreOf } from '../../../strategy/pierce/bore.ts';
@@ -261,9 +262,22 @@ describe('given stages', () => {
     expect(short.kind).toBe('none');
   });
 
-  it('are refused when the machine cannot do them', () => {
-    const pinned = [{ ...soft, from: { ...soft.from, peakPower: 20_000 } }, null];
-    expect(() => piercePropose(wanted(TEN_KILOWATT, 20, { pinned }))).toThrow(/pinned stages\[0\]\.from\.peakPower/);
+  it.each<[string, Stage, string]>([
+    [
+      'a peak beyond the source',
+      { ...soft, from: { ...soft.from, peakPower: 20_000 } },
+      'Stage 2 cannot be kept as it is at its start. Peak power 20 kW is outside [0.5 kW, 10 kW].',
+    ],
+    [
+      'a focus beyond the dial',
+      { ...soft, to: { ...soft.to, focusPosition: -0.025 } },
+      'Stage 2 cannot be kept as it is at its end. Focus position −25 mm is outside [−22 mm, 22 mm], which the dial reaches at this standoff.',
+    ],
+    ['no time', { ...soft, duration: 0 }, 'Stage 2 cannot be kept as it is. Duration 0 s is outside (0, 600] s.'],
+  ])('of %s are refused by their number', (_, stage, message) => {
+    const ask = () => piercePropose(wanted(TEN_KILOWATT, 20, { pinned: [null, stage, null] }));
+    expect(ask).toThrow(RangeError);
+    expect(ask).toThrow(message);
   });
 });
 
