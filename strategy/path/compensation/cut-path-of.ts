@@ -11,7 +11,7 @@ import type { LeadIn } from './lead-in.ts';
 import { narrowFeatures } from './narrow.ts';
 import { gapsBetweenContours, narrowSentence } from './narrow-said.ts';
 import type { OffsetLoop } from './offset.ts';
-import { kerfOffset } from './offset.ts';
+import { offsetLoops } from './offset.ts';
 import type { OutsideCorner } from './parallel.ts';
 import type { CutPlate, LeadInRule, StartPath } from './pierce-place.ts';
 import { piercePlace } from './pierce-place.ts';
@@ -65,7 +65,7 @@ export type CutPathRequest = {
 /** Something the programmer must look at; a contour that can't be cut is left out of the path. */
 export type CutPathProblem = {
   readonly contourId: string;
-  /** The scrap is narrower than the kerf; a treatment has no path; no room for a pierce; a lead-in shorter than needed. */
+  /** The scrap is narrower than the kerf, or the contour crosses itself; a treatment has no path; no room for a pierce; a lead-in shorter than needed. */
   readonly kind: 'narrow' | 'corner' | 'pierce' | 'lead-in';
   readonly at: Point; // m
   readonly why: string;
@@ -95,6 +95,7 @@ const onPath = 1e-7;
  */
 export function cutPathOf(request: CutPathRequest): CutPathPlan {
   const { kerfWidth, leadIn: rule, plate, overcut = 0, starts } = request;
+  if (!(kerfWidth > 0)) throw new RangeError(`kerf width ${kerfWidth} m is outside (0, ∞)`);
   if (!(overcut >= 0)) throw new RangeError(`overcut ${overcut} m is below 0`);
   const problems: CutPathProblem[] = [];
   const contours = insideFirst(request.contours);
@@ -178,7 +179,18 @@ type NamedRing = {
 function ringsOf(contour: CutContour, request: CutPathRequest, problems: CutPathProblem[]): NamedRing[] {
   const { kerfWidth, outside } = request;
   const own = request.inserts.filter(({ contourId }) => contourId === contour.id);
-  const loops = kerfOffset(contour.contour, kerfWidth, { outside, sharpAt: new Set(own.map(({ index }) => index)) });
+  const sharpAt = new Set(own.map(({ index }) => index));
+  const loops = offsetLoops(contour.contour, kerfWidth / 2, { outside, sharpAt });
+  if (loops === null) {
+    problems.push({
+      contourId: contour.id,
+      kind: 'narrow',
+      at: segmentStart(contour.contour.segments[0] ?? never()),
+      why: `${contour.name} crosses itself: no path closes beside it`,
+      leftOut: true,
+    });
+    return [];
+  }
   for (const feature of narrowFeatures(contour.contour, kerfWidth, loops)) {
     const why = narrowSentence(contour.name, feature, kerfWidth);
     problems.push({ contourId: contour.id, kind: 'narrow', at: feature.at, why, leftOut: feature.kind === 'hole' });

@@ -8,6 +8,7 @@ import type { Segment } from '../segment.ts';
 import { segmentBox, segmentEnd, segmentLength, segmentPointAt, segmentStart, segmentTangentAt } from '../segment.ts';
 import { largestCircleInside } from './inscribed.ts';
 import type { OffsetLoop } from './offset.ts';
+import { parallelOf } from './parallel.ts';
 import type { SegmentIndex } from './segment-index.ts';
 import { segmentIndex } from './segment-index.ts';
 
@@ -25,6 +26,9 @@ const even = 1e-6;
 /** A disc between two edges that face each other is this empty, or it lies in a corner. */
 const emptiness = 1e-3;
 
+/** Pairs of edges looked at for gaps at most: a contour with more of them so near to each other is nothing for this kerf anyway. */
+const mostPairs = 4000;
+
 /** An end that the cut comes nearer to than this many kerfs is like any inside corner, which the kerf rounds. */
 const likeAnyCorner = 1;
 
@@ -39,7 +43,7 @@ export function narrowFeatures(contour: Contour, kerfWidth: number, loops: reado
     const widest = largestCircleInside(contour, 1e-2 * kerfWidth);
     return [{ kind: 'hole', width: 2 * widest.radius, at: widest.centre }];
   }
-  const gaps = gapsBetween(segments, kerfWidth, scrapBeside(segments, area > 0));
+  const gaps = gapsBetween(segments, kerfWidth, scrapBeside(segments, area > 0), cutShort(segments, kerfWidth, loops));
   const inGap = new Set(gaps.flatMap(({ edges }) => edges));
   const n = segments.length;
   const path = segmentIndex(loops.flatMap((loop) => loop.contour.segments.map((segment) => ({ segment, of: null }))));
@@ -118,6 +122,26 @@ function scrapBeside(segments: readonly Segment[], partIsInside: boolean): Scrap
   };
 }
 
+/** Whether the path beside an edge is shorter than its parallel: no edge of a gap has all of it. */
+function cutShort(
+  segments: readonly Segment[],
+  kerfWidth: number,
+  loops: readonly OffsetLoop[],
+): (edge: number) => boolean {
+  const kept = new Float64Array(segments.length);
+  for (const { contour, sources } of loops) {
+    sources.forEach(({ kind, index }, i) => {
+      const segment = contour.segments[i];
+      if (kind === 'edge' && segment) kept[index] = (kept[index] ?? 0) + segmentLength(segment);
+    });
+  }
+  return (edge) => {
+    const segment = segments[edge];
+    const parallel = segment ? parallelOf(segment, kerfWidth / 2) : null;
+    return !parallel || (kept[edge] ?? 0) < segmentLength(parallel) - even * kerfWidth;
+  };
+}
+
 /** Two edges that face each other, and how far from all their ends the place is where they do, m. */
 type Facing = { readonly i: number; readonly k: number; readonly feature: GapFeature; readonly fromEnds: number };
 
@@ -127,14 +151,22 @@ const fromEnds = (p: Point, a: Segment, b: Segment): number =>
 type Gap = { readonly feature: GapFeature; readonly edges: number[] };
 
 /** Gaps across the scrap between edges that are not neighbours; along a slot of many pieces only its narrowest place. */
-function gapsBetween(segments: readonly Segment[], kerfWidth: number, scrap: Scrap): Gap[] {
+function gapsBetween(
+  segments: readonly Segment[],
+  kerfWidth: number,
+  scrap: Scrap,
+  isCutShort: (edge: number) => boolean,
+): Gap[] {
   const n = segments.length;
   const most = kerfWidth * (1 + even);
+  let pairs = 0;
   const found = new Map<string, Facing>();
   segments.forEach((a, i) => {
+    if (!isCutShort(i)) return;
     for (const k of scrap.near(a, most)) {
       const b = segments[k];
-      if (!b || k <= i || k - i === 1 || k - i === n - 1) continue;
+      if (!b || k <= i || k - i === 1 || k - i === n - 1 || !isCutShort(k)) continue;
+      if (++pairs > mostPairs) return;
       let feature: GapFeature | null = null;
       for (const [p, q] of facing(a, b)) {
         const width = pointDistance(p, q);

@@ -27,9 +27,19 @@ const nudges = [0, 1e-7, -1e-7, 5e-7, -5e-7];
  * only necks are. They keep the contour's direction; what a neck shuts off outside an outline runs the other way round. Edges that happen to lie
  * nearer than the distance to others have no path beside them.
  *
- * Throws RangeError for a contour that is empty, open, without area or with a segment without length, and for a distance that is not finite.
+ * Throws RangeError for a contour that is empty, open, without area or with a segment without length, for one that crosses itself so that no path closes
+ * beside it, and for a distance that is not finite.
  */
 export function contourOffset(contour: Contour, distance: number, rule: OffsetRule): OffsetLoop[] {
+  const loops = offsetLoops(contour, distance, rule);
+  if (loops) return loops;
+  throw new RangeError(
+    `no path at ${distance} m beside a contour of ${contour.segments.length} segments: it crosses itself`,
+  );
+}
+
+/** As `contourOffset`; null, where that throws, for a contour that crosses itself so that its path does not close. */
+export function offsetLoops(contour: Contour, distance: number, rule: OffsetRule): OffsetLoop[] | null {
   if (!Number.isFinite(distance)) throw new RangeError(`distance ${distance} m is not finite`);
   if (rule.outside.kind === 'sharp' && !(rule.outside.limit >= 1)) {
     throw new RangeError(`limit ${rule.outside.limit} of sharp corners is below 1`);
@@ -48,7 +58,7 @@ export function contourOffset(contour: Contour, distance: number, rule: OffsetRu
     const loops = trimParallels(segments, area > 0, parallels, by);
     if (loops) return loops.map(loopOf);
   }
-  throw new RangeError(`no path at ${distance} m beside a contour of ${segments.length} segments: it crosses itself`);
+  return null;
 }
 
 /** Half a kerf into the scrap: the middle of the kerf that leaves the contour as the finished edge. Part on the left of travel. */
@@ -63,16 +73,19 @@ const loopOf = ({ pieces }: { readonly pieces: readonly ParallelPiece[] }): Offs
 });
 
 /** The same seen from the contour's other side: travelled the other way, segment i is segment n − 1 − i and its start is the end of that. */
-function otherSide(contour: Contour, distance: number, rule: OffsetRule): OffsetLoop[] {
+function otherSide(contour: Contour, distance: number, rule: OffsetRule): OffsetLoop[] | null {
   const n = contour.segments.length;
   const edge = (index: number) => n - 1 - index;
   const corner = (index: number) => (n - index) % n;
   const sharpAt = rule.sharpAt && new Set([...rule.sharpAt].map(corner));
-  const loops = contourOffset(contourReverse(contour), distance, { ...rule, ...(sharpAt ? { sharpAt } : {}) });
-  return loops.map(({ contour: { segments }, sources }) => ({
-    contour: { segments: segments.map((s): Segment => segmentReverse(s)).reverse() },
-    sources: sources
-      .map(({ kind, index }): PathSource => ({ kind, index: kind === 'edge' ? edge(index) : corner(index) }))
-      .reverse(),
-  }));
+  const loops = offsetLoops(contourReverse(contour), distance, { ...rule, ...(sharpAt ? { sharpAt } : {}) });
+  return (
+    loops &&
+    loops.map(({ contour: { segments }, sources }) => ({
+      contour: { segments: segments.map((s): Segment => segmentReverse(s)).reverse() },
+      sources: sources
+        .map(({ kind, index }): PathSource => ({ kind, index: kind === 'edge' ? edge(index) : corner(index) }))
+        .reverse(),
+    }))
+  );
 }

@@ -13,7 +13,7 @@ import { largestCircleInside } from './inscribed.ts';
 import type { LeadIn, LeadInShape, StartPlace } from './lead-in.ts';
 import { straightLeadIn, tangentLeadIn } from './lead-in.ts';
 import type { SegmentIndex } from './segment-index.ts';
-import { nearestWithin, segmentIndex } from './segment-index.ts';
+import { anyWithin, segmentIndex } from './segment-index.ts';
 
 export type LeadInRule = {
   readonly shape: LeadInShape;
@@ -76,8 +76,9 @@ const shares = [1 / 2, 1 / 4, 3 / 4, 1 / 8, 7 / 8, 3 / 8, 5 / 8];
 const slants = [0, Math.PI / 6, -Math.PI / 6, Math.PI / 4, -Math.PI / 4];
 /** Steps in which the distance is shortened in a hole from what is needed to the crater. */
 const steps = 6;
-/** Candidates tried at most for each distance: a contour of thousands of pieces has no better places than these. */
-const mostTried = 400;
+/** Candidates tried at most for each distance, no two of them nearer along the path than this share of its length. */
+const mostTried = 100;
+const spacing = 1 / 250;
 /** The path may be this share of half a kerf nearer to its own finished edge than half a kerf: curved edges come in pieces. */
 const tangentSlack = 0.02;
 /** Rounding of coordinates that is no contact, m. */
@@ -94,7 +95,7 @@ export function piercePlace(path: StartPath, rule: LeadInRule, around: PierceSur
   if (!(craterRadius >= 0)) throw new RangeError(`crater radius ${craterRadius} m is negative`);
   const full = Math.max(needed, craterRadius);
   const own = segmentIndex(path.segments.map((segment) => ({ segment, of: null })));
-  const candidates = startCandidates(path, full).slice(0, mostTried);
+  const candidates = startCandidates(path, full);
   let first: Block | null = null;
   const attempt = (candidate: Candidate, distance: number): PiercePlace | null => {
     for (const leadIn of leadInsTo(candidate, distance, rule.shape)) {
@@ -118,17 +119,16 @@ export function piercePlace(path: StartPath, rule: LeadInRule, around: PierceSur
     }
     return null;
   };
-  const found = tryAll(full);
-  if (found) return found;
-  if (path.closedIn && shortest < full) {
-    // how far a place in the hole can be from the path at all: longer distances need no trial
-    const widest = largestCircleInside({ segments: path.segments }, 0.02 * shortest, full);
-    if (widest.radius < shortest) return tooSmall(path, widest, craterRadius, around.kerfWidth);
-    for (let i = 1; i <= steps; i++) {
-      const distance = full * (shortest / full) ** (i / steps);
-      const shorter = distance <= widest.radius * 1.02 ? tryAll(distance) : null;
-      if (shorter) return shorter;
-    }
+  // how far a place in a hole can be from the path at all: longer distances need no trial
+  const widest = path.closedIn ? largestCircleInside({ segments: path.segments }, 0.02 * shortest, full) : null;
+  if (widest && widest.radius < shortest) return tooSmall(path, widest, craterRadius, around.kerfWidth);
+  const distances = [full];
+  if (widest && shortest < full) {
+    for (let i = 1; i <= steps; i++) distances.push(full * (shortest / full) ** (i / steps));
+  }
+  for (const distance of distances) {
+    const found = widest && distance > widest.radius * 1.02 ? null : tryAll(distance);
+    if (found) return found;
   }
   return (
     first ?? {
@@ -203,17 +203,18 @@ function startCandidates({ segments, busyJoints, free, near }: StartPath, wanted
     const length = lengths[index] ?? 0;
     const wantedShares = near ? [...shares, shareNearest(segment, near)] : shares;
     return wantedShares.map((share, rank) => {
-      const margin = marginAt((ends[index] ?? 0) - (1 - share) * length);
+      const along = (ends[index] ?? 0) - (1 - share) * length;
+      const margin = marginAt(along);
       const curvature = segment.kind === 'arc' ? 1 / segment.radius : 0;
       // 1 far from corners on a straight piece; a curve of the wanted distance as radius loses a quarter
       const score = Math.min(1, margin / wanted) - (curvature * wanted) / 4;
       const away = near ? pointDistance(segmentPointAt(segment, share), near) : 0;
-      return { segment, share, index, rank, length, margin, score, away };
+      return { segment, share, index, rank, length, along, margin, score, away };
     });
   });
   // rounding must not decide between equals: turned, the part would start elsewhere
   const grade = (value: number, step: number) => Math.round(value / step);
-  return found
+  const sorted = found
     .filter(({ margin }) => margin > 1e-6 * wanted)
     .sort(
       (a, b) =>
@@ -223,6 +224,17 @@ function startCandidates({ segments, busyJoints, free, near }: StartPath, wanted
         grade(b.length - a.length, 1e-6 * wanted) ||
         a.index - b.index,
     );
+  // one of neighbours is enough: a curve drawn in thousands of pieces has no better places than a circle
+  const taken: (typeof sorted)[number][] = [];
+  for (const candidate of sorted) {
+    const apart = (one: { readonly along: number }): boolean => {
+      const between = Math.abs(one.along - candidate.along);
+      return Math.min(between, total - between) >= spacing * total;
+    };
+    if (taken.every(apart)) taken.push(candidate);
+    if (taken.length === mostTried) break;
+  }
+  return taken;
 }
 
 function shareNearest(segment: Segment, p: Point): number {
@@ -269,7 +281,7 @@ function inTheWay(
   if (away) return block('plate', away, `the plate's edge is nearer than the crater and ${millimetres(clearance)}`);
 
   // its own path: the pierce by its distance, the way in by the clearance except where it joins
-  const tooNear = nearestWithin(own, pierce, distance * (1 - 1e-9) - rounding);
+  const tooNear = anyWithin(own, pierce, distance * (1 - 1e-9) - rounding);
   if (tooNear) {
     return block(
       'own contour',
@@ -279,22 +291,22 @@ function inTheWay(
   }
   const free = Math.min(half + clearance, distance);
   for (const segment of bodyOf(leadIn, free)) {
-    const found = nearestWithin(own, segment, free * (1 - 1e-6) - rounding);
+    const found = anyWithin(own, segment, free * (1 - 1e-6) - rounding);
     if (found) return block('own contour', found.onSecond, 'its own contour is in the way');
   }
   const isOwn = ({ contourId }: { readonly contourId: string }) => contourId === path.contourId;
   for (const segment of leadIn.segments) {
-    const gouged = nearestWithin(edges, segment, half * (1 - tangentSlack) - rounding, isOwn);
+    const gouged = anyWithin(edges, segment, half * (1 - tangentSlack) - rounding, isOwn);
     if (gouged) return block('own contour', gouged.onSecond, 'the lead-in would cut into its own contour');
     const widest = half + kerfWidth + clearance;
-    const other = nearestWithin(edges, segment, widest - rounding, (of) => !isOwn(of));
+    const other = anyWithin(edges, segment, widest - rounding, (of) => !isOwn(of));
     if (other) return block('contour', other.onSecond, `${other.of.name} is in the way`);
-    const loop = nearestWithin(loops, segment, kerfWidth + clearance - rounding);
+    const loop = anyWithin(loops, segment, kerfWidth + clearance - rounding);
     if (loop) return block('loop', loop.onSecond, `${loop.of} is in the way`);
   }
-  const other = nearestWithin(edges, pierce, crater + kerfWidth + clearance - rounding, (of) => !isOwn(of));
+  const other = anyWithin(edges, pierce, crater + kerfWidth + clearance - rounding, (of) => !isOwn(of));
   if (other) return block('contour', other.onSecond, `${other.of.name} is in the way of the crater`);
-  const loop = nearestWithin(loops, pierce, crater + half + clearance - rounding);
+  const loop = anyWithin(loops, pierce, crater + half + clearance - rounding);
   if (loop) return block('loop', loop.onSecond, `${loop.of} is in the way of the crater`);
 
   for (const { name, leadIn: theirs } of leadIns) {

@@ -40,3 +40,20 @@ export function nearestWithin<T>(
   }
   return best;
 }
+
+/** An indexed segment nearer to another than `least` m, or null when there is none: the first that is met, not the nearest. */
+export function anyWithin<T>(
+  { items, boxes }: SegmentIndex<T>,
+  segment: Segment,
+  least: number,
+  counts: (of: T) => boolean = () => true,
+): (Nearest & { readonly of: T }) | null {
+  const box = boxGrow(segmentBox(segment), least);
+  for (const i of boxes?.search(box.minX, box.minY, box.maxX, box.maxY) ?? []) {
+    const item = items[i];
+    if (!item || !counts(item.of)) continue;
+    const found = segmentDistance(segment, item.segment);
+    if (found.distance < least) return { ...found, of: item.of };
+  }
+  return null;
+}
