@@ -2,13 +2,14 @@ import { useQuery } from '@tanstack/react-query';
 import { useCallback, useMemo, useRef, useState } from 'react';
 import { View } from 'react-native';
 import { cornerPlanQuery } from '@/components/data/corner-plans.ts';
+import { cutPathQuery } from '@/components/data/take-away.ts';
 import type { DrawingControl } from '@/components/parts/drawing-view.tsx';
 import type { Snap } from '@/components/parts/measure.ts';
 import { useActor } from '@/components/shell/actor.tsx';
 import { Page } from '@/components/shell/page.tsx';
 import { common } from '@/components/text/common.ts';
 import { cornerToolText } from '@/components/text/corner-preview.ts';
-import { cornerText } from '@/components/text/corners.ts';
+import { asSentence, cornerText } from '@/components/text/corners.ts';
 import { stateText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { Button } from '@/components/ui/button.tsx';
@@ -67,7 +68,10 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
   const mayWrite = actor !== null && may(actor, 'cornerPlan.write');
   const choices = usePlanChoices(plan, mayWrite, refetch);
   const { corners } = plan;
-  const { timeline, dropped } = useMemo(() => planRun(plan, planPath(plan)), [plan]);
+  const shown = useQuery(cutPathQuery(plan.id, plan.version));
+  const edges = useMemo(() => planPath(plan), [plan]);
+  const path = shown.data ?? edges;
+  const { timeline, dropped } = useMemo(() => planRun(plan, path), [plan, path]);
 
   const index = corners.findIndex(({ id }) => id === chosen);
   const corner = corners[index];
@@ -148,6 +152,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
           }}
           measured={measured}
           onMeasure={setMeasured}
+          path={path}
           timeline={timeline}
           dropped={dropped}
           clock={clock}
@@ -156,7 +161,14 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
           height={wide ? 520 : 360}
         />
       </View>
-      <RunPanel timeline={timeline} dropped={dropped} clock={clock} />
+      {shown.isError && <ErrorNotice error={shown.error} onRetry={() => void shown.refetch()} />}
+      <RunPanel
+        timeline={timeline}
+        dropped={dropped}
+        clock={clock}
+        alongEdges={!shown.data}
+        problems={shown.data?.problems.map(({ why }) => asSentence(why)) ?? []}
+      />
       {!wide && corners.length > 0 && (
         <Button
           fill

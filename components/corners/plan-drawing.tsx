@@ -2,9 +2,11 @@ import { useMemo, type ReactNode, type Ref } from 'react';
 import { View } from 'react-native';
 import Svg, { Circle, G, Path } from 'react-native-svg';
 import { pathsBox } from '@/components/parts/drawing-geometry.ts';
+import { dotsData } from '@/components/parts/drawing-marks.ts';
 import type { DrawingSpace } from '@/components/parts/drawing-space.ts';
 import { DrawingView, type DrawingControl, type DrawingMark } from '@/components/parts/drawing-view.tsx';
 import { snapAt, type Snap } from '@/components/parts/measure.ts';
+import type { CutPath } from '@/strategy/path/cut-path.ts';
 import { cornerToolText, measureText } from '@/components/text/corner-preview.ts';
 import { asSentence, cornerText } from '@/components/text/corners.ts';
 import { roles } from '@/components/theme/roles.ts';
@@ -28,6 +30,8 @@ type PlanDrawingProps = {
   /** Places measured so far; null while nothing is measured. */
   measured: readonly Snap[] | null;
   onMeasure: (places: readonly Snap[] | null) => void;
+  /** Lead-ins and where they pierce; none until the path is known. */
+  path: CutPath;
   timeline: CutTimeline;
   dropped: readonly Dropped[];
   clock: RunClock;
@@ -44,6 +48,7 @@ export function PlanDrawing({
   onChoose,
   measured,
   onMeasure,
+  path,
   timeline,
   dropped,
   clock,
@@ -53,6 +58,13 @@ export function PlanDrawing({
 }: PlanDrawingProps) {
   const { corners } = plan;
   const { contours } = plan.part;
+  const leadIns = useMemo(
+    () =>
+      path.runs.flatMap(({ pieces }) =>
+        pieces.flatMap((piece) => (piece.kind === 'lead-in' ? [{ segments: piece.segments }] : [])),
+      ),
+    [path],
+  );
   const loops = useMemo(
     () =>
       corners.flatMap(({ id, loop, round }) => [
@@ -94,6 +106,7 @@ export function PlanDrawing({
         plate={plate}
         loops={loops}
         slugs={slugs}
+        leadIns={leadIns}
         traces={eased}
         marks={marks}
         chosen={chosen}
@@ -101,6 +114,7 @@ export function PlanDrawing({
         onAim={measured ? aim : null}
         over={(space) => (
           <>
+            <Pierces space={space} path={path} />
             <RunLayer space={space} timeline={timeline} dropped={dropped} clock={clock} />
             {corner && blocked && <InTheWay space={space} from={corner.at} at={blocked.at} />}
             {measured && <MeasureLayer space={space} places={measured} />}
@@ -134,6 +148,13 @@ export function PlanDrawing({
       )}
     </Stack>
   );
+}
+
+/** Where it pierces, if it does so beside the contours. */
+function Pierces({ space, path: { runs } }: { space: DrawingSpace; path: CutPath }) {
+  const places = runs.flatMap(({ pierce, pieces }) => (pieces[0]?.kind === 'lead-in' ? [space.at(pierce)] : []));
+  if (places.length === 0) return null;
+  return <Path testID="pierces" d={dotsData(places, 3)} stroke={roles.ember} strokeWidth={7} strokeLinecap="round" />;
 }
 
 /** A badge a corner. Choosing one changes that one and the one before, and leaves the others as they are. */

@@ -22,6 +22,13 @@ export function PlanLegend({ plan: { corners } }: { plan: CornerPlan }) {
         <TreatmentBadge treatment="leave" trouble />
         <Small>{cornerText.trouble}</Small>
       </Row>
+      <Row gap="xs" wrap={false}>
+        <Svg width={36} height={36} aria-hidden style={{ flexShrink: 0 }}>
+          <Path d="M6 18H34" stroke={roles.ember} strokeWidth={1.4} strokeDasharray="4 2.5" />
+          <Path d="M6 18h0" stroke={roles.ember} strokeWidth={7} strokeLinecap="round" />
+        </Svg>
+        <Small>{cornerToolText.leadIn}</Small>
+      </Row>
       {corners.some(({ loop }) => loop && loop.slug.length > 0) && (
         <Row gap="xs" wrap={false}>
           <Svg width={36} height={36} aria-hidden style={{ flexShrink: 0 }}>

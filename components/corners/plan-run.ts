@@ -13,10 +13,11 @@ export function planRun(
   path: CutPath,
 ): { timeline: CutTimeline; dropped: Dropped[] } {
   const timeline = cutTimeline(path, cutting);
-  const contours = new Map(part.contours.map((contour) => [contour.id, contour]));
-  const dropped: Dropped[] = timeline.runs.flatMap(({ contourId, end }) => {
-    const contour = contours.get(contourId);
-    return contour ? [{ time: end, scrap: contour.role === 'hole', segments: contour.segments }] : [];
+  // a contour with necks is cut in pieces: it falls with the last of them
+  const ends = new Map(timeline.runs.map(({ contourId, end }) => [contourId, end]));
+  const dropped: Dropped[] = part.contours.flatMap(({ id, role, segments }) => {
+    const time = ends.get(id);
+    return time === undefined ? [] : [{ time, scrap: role === 'hole', segments }];
   });
   for (const { contourId, loop } of corners) {
     const first = loop?.segments[0];

@@ -2,6 +2,7 @@ import { View } from 'react-native';
 import { runText } from '@/components/text/corner-preview.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Fold } from '@/components/ui/fold.tsx';
+import { Notice } from '@/components/ui/notice.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Figure, Small } from '@/components/ui/text.tsx';
@@ -10,20 +11,29 @@ import { cutMoment, type CutTimeline } from './cut-timeline.ts';
 import { countBefore, type Dropped } from './run-layer.tsx';
 import { runSpeed, useRunning, useRunTime, type RunClock } from './run-clock.ts';
 
-type RunPanelProps = { timeline: CutTimeline; dropped: readonly Dropped[]; clock: RunClock };
+type RunProps = { timeline: CutTimeline; dropped: readonly Dropped[]; clock: RunClock };
+
+type RunPanelProps = RunProps & {
+  /** The path beside the edges, with its lead-ins, is not known. */
+  alongEdges: boolean;
+  /** Sentences of what is not cut as planned. */
+  problems: readonly string[];
+};
 
 /** The cut run in order: a slider over its time, what happens then, and a button that runs it. */
-export function RunPanel({ timeline, dropped, clock }: RunPanelProps) {
+export function RunPanel({ timeline, dropped, clock, alongEdges, problems }: RunPanelProps) {
   const { running, toggle } = useRunning(clock, timeline.duration);
   if (timeline.runs.length === 0) {
     return (
       <Panel title={runText.title}>
+        <Problems problems={problems} />
         <Body>{runText.nothing}</Body>
       </Panel>
     );
   }
   return (
     <Panel title={runText.title}>
+      <Problems problems={problems} />
       <RunNow timeline={timeline} dropped={dropped} clock={clock} />
       <Row gap="s">
         <Button label={running ? runText.stop : runText.run} onPress={toggle} />
@@ -32,6 +42,7 @@ export function RunPanel({ timeline, dropped, clock }: RunPanelProps) {
           <Small>{runText.speed(runSpeed(timeline.duration))}</Small>
         </Cell>
       </Row>
+      {alongEdges && <Small strong>{runText.alongEdges}</Small>}
       <Small>{runText.legend}</Small>
       <Fold label={runText.about}>
         <Stack gap="xs">
@@ -43,8 +54,23 @@ export function RunPanel({ timeline, dropped, clock }: RunPanelProps) {
   );
 }
 
+function Problems({ problems }: { problems: readonly string[] }) {
+  if (problems.length === 0) return null;
+  return (
+    <Notice kind="caution" title={runText.problems}>
+      {problems.slice(0, mostProblems).map((why) => (
+        <Body key={why}>{why}</Body>
+      ))}
+      {problems.length > mostProblems && <Body>{runText.more(problems.length - mostProblems)}</Body>}
+    </Notice>
+  );
+}
+
+/** Of a drawing that is wrong throughout the rest says nothing new. */
+const mostProblems = 5;
+
 /** What the clock changes: nothing around it is drawn in a frame of the run. */
-function RunNow({ timeline, dropped, clock }: RunPanelProps) {
+function RunNow({ timeline, dropped, clock }: RunProps) {
   const time = useRunTime(clock);
   const { duration, runs } = timeline;
   const moment = cutMoment(timeline, time);

@@ -27,6 +27,9 @@ export const runText = {
   counted:
     'Counted: ways between pierces, each pierce’s routine, the path at its feed and the waits. Not the head’s travel up and down.',
   about: 'Keys, and what is counted',
+  alongEdges: 'Run along the finished edges: lead-ins and the kerf are not in it.',
+  problems: 'Not cut as planned',
+  more: (number: number) => `And ${number} more.`,
   nothing: 'There is nothing to cut in this plan.',
 } as const;
 
@@ -67,5 +70,5 @@ export const cornerToolText = {
   showOnDrawing: 'Show this corner on the drawing',
   slugLegend: 'slug, falls',
   eased: 'eased',
-  leadIn: 'lead-in',
+  leadIn: 'pierce and lead-in',
 } as const;

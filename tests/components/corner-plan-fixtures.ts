@@ -1,5 +1,6 @@
 import type { CornerPlan, PlannedCorner } from '@/shared/corner-plans.ts';
-import { arcOf, lineBetween } from '@/strategy/path/index.ts';
+import type { ShownPath } from '@/shared/take-away.ts';
+import { arcOf, lineBetween, segmentStart } from '@/strategy/path/index.ts';
 import { ids } from '../support/page.tsx';
 
 const square = [
@@ -105,3 +106,23 @@ export const planOf = (more: Partial<CornerPlan> = {}): CornerPlan => ({
   changedBy: { id: ids.user, name: 'Programmer' },
   ...more,
 });
+
+/** The plan's path as the server would answer it, without lead-ins' room to be looked for: pierced 5 mm below each contour's start. */
+export function pathOf({ part, corners }: Pick<CornerPlan, 'part' | 'corners'>): ShownPath {
+  const inside = [...part.contours].sort((a, b) => b.depth - a.depth);
+  return {
+    problems: [],
+    runs: inside.map(({ id, role, segments: own }) => {
+      const start = segmentStart(own[0] ?? lineBetween({ x: 0, y: 0 }, { x: 0, y: 0 }));
+      const pierce = { x: start.x, y: start.y - 5e-3 };
+      const pieces: ShownPath['runs'][number]['pieces'] = [{ kind: 'lead-in', segments: [lineBetween(pierce, start)] }];
+      own.forEach((segment, i) => {
+        pieces.push({ kind: 'contour', segments: [segment] });
+        const next = corners.find((one) => one.id === `c${id}-${(i + 1) % own.length}`);
+        if (next?.loop) pieces.push({ kind: 'loop', segments: next.loop.segments });
+        else if (next?.dwell) pieces.push({ kind: 'dwell', at: next.at, duration: next.dwell });
+      });
+      return { contourId: id, name: `${role === 'outer' ? 'outline' : role} ${id}`, pierce, pieces };
+    }),
+  };
+}

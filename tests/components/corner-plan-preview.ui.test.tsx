@@ -5,7 +5,7 @@ import { CornerPlanScreen } from '@/components/corners/corner-plan-screen.tsx';
 import type { CornerPlan } from '@/shared/corner-plans.ts';
 import { planOfStars } from '../support/many-corners.ts';
 import { ids, json, problem, serveWith, show } from '../support/page.tsx';
-import { planOf } from './corner-plan-fixtures.ts';
+import { pathOf, planOf } from './corner-plan-fixtures.ts';
 
 afterEach(() => {
   vi.unstubAllGlobals();
@@ -21,6 +21,7 @@ const setWidth = (width: number) => {
 function serve(first: CornerPlan = planOf()) {
   let now = first;
   return serveWith(({ method, path, body }) => {
+    if (path.endsWith('/path')) return json(pathOf(now));
     if (!path.startsWith('/api/corner-plans')) return json({ items: [] });
     if (method === 'PUT') {
       // the body is what the screen has sent, and the requests' own schema is tested with the server
@@ -109,6 +110,7 @@ describe('a treatment chosen by hand', () => {
 
   it('is still there when somebody else was first, and what is theirs can’t be taken back', async () => {
     const requests = serveWith(({ method, path }) => {
+      if (path.endsWith('/path')) return json(pathOf(planOf()));
       if (!path.startsWith('/api/corner-plans')) return json({ items: [] });
       return method === 'PUT' ? problem('stale') : json(planOf({ version: 9, overrides: { 'c0-2': 'leave' } }));
     });
@@ -155,7 +157,9 @@ describe('the run of the cut', () => {
     serve();
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
     await rowOf(1);
-    const slider = screen.getByRole('slider', { name: 'Time of the cut' });
+    const slider = await screen.findByRole('slider', { name: 'Time of the cut' });
+    await screen.findByTestId('pierces');
+    expect(screen.queryByText(/Run along the finished edges/)).toBeNull();
     expect(screen.queryByTestId('run-head')).toBeNull();
     slider.focus();
     await userEvent.keyboard('{ArrowRight}');
@@ -171,6 +175,24 @@ describe('the run of the cut', () => {
     expect(slider.getAttribute('aria-valuenow')).toBe('0');
   });
 
+  it('says what is not cut as planned, and can be asked for again when it could not be worked out', async () => {
+    let asked = 0;
+    serveWith(({ path }) => {
+      if (!path.endsWith('/path')) return json(path.startsWith('/api/corner-plans') ? planOf() : { items: [] });
+      asked += 1;
+      if (asked === 1) return problem('unavailable', 'Too many files at once.');
+      const why = 'hole 3 is left out: it is narrower than the kerf';
+      return json({ runs: [], problems: [{ contourId: '3', at: { x: 0, y: 0 }, why, leftOut: true }] });
+    });
+    show(<CornerPlanScreen id={ids.report} />, 'programmer');
+    // until it is known the cut is run along the edges
+    expect(await screen.findByText(/Run along the finished edges/)).toBeTruthy();
+    expect(screen.getByRole('slider', { name: 'Time of the cut' })).toBeTruthy();
+    await userEvent.click(await screen.findByRole('button', { name: 'Try again' }));
+    expect(await screen.findByText('Hole 3 is left out: it is narrower than the kerf.')).toBeTruthy();
+    expect(screen.getByText('There is nothing to cut in this plan.')).toBeTruthy();
+  });
+
   it('goes in steps of a second for who wants less movement, and stops when told', async () => {
     vi.stubGlobal('matchMedia', (query: string) => ({
       matches: query.includes('reduced-motion'),
@@ -181,7 +203,7 @@ describe('the run of the cut', () => {
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
     await rowOf(1);
     const now = () => Number(screen.getByRole('slider', { name: 'Time of the cut' }).getAttribute('aria-valuenow'));
-    await userEvent.click(screen.getByRole('button', { name: 'Run the cut' }));
+    await userEvent.click(await screen.findByRole('button', { name: 'Run the cut' }));
     expect(now()).toBe(0);
     await waitFor(() => expect(now()).toBeGreaterThanOrEqual(1), { timeout: 4000 });
     expect(now() % 1).toBe(0);

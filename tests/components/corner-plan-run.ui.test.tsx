@@ -8,7 +8,7 @@ import { snapAt } from '@/components/parts/measure.ts';
 import type { CutPath } from '@/strategy/path/cut-path.ts';
 import { pathTime } from '@/strategy/motion/index.ts';
 import { circleOf, lineBetween, pathLength, pointDistance } from '@/strategy/path/index.ts';
-import { corner, planOf } from './corner-plan-fixtures.ts';
+import { corner, pathOf, planOf } from './corner-plan-fixtures.ts';
 
 const plan = planOf();
 const hole = { id: '1', depth: 1, role: 'hole' as const, parent: '0', layer: 'CUT' };
@@ -19,7 +19,7 @@ const withHole = planOf({
   },
 });
 
-describe('the cut of a plan', () => {
+describe('the cut along the edges of a plan', () => {
   it('takes holes before the outline around them, and puts loops and waits where their corners are', () => {
     const { runs } = planPath(withHole);
     expect(runs.map(({ name }) => name)).toEqual(['hole 1', 'outline 0']);
@@ -102,7 +102,7 @@ describe('the cut in time', () => {
         },
       }),
     ];
-    const run = planRun({ ...withHole, corners }, planPath({ ...withHole, corners }));
+    const run = planRun({ ...withHole, corners }, pathOf({ ...withHole, corners }));
     expect(run.dropped.map(({ scrap }) => scrap)).toEqual([true, true, false]);
     const [fromHole, slug, piece] = run.dropped;
     expect(pathLength(fromHole?.segments ?? [])).toBeCloseTo(2 * Math.PI * 0.02);

@@ -4,15 +4,21 @@ import { afterEach, describe, expect, it, vi } from 'vitest';
 import { cornersInward } from '@/components/corners/corner-inward.ts';
 import { CornerPlanScreen } from '@/components/corners/corner-plan-screen.tsx';
 import { ids, json, problem, serveWith, show } from '../support/page.tsx';
-import { planOf } from './corner-plan-fixtures.ts';
+import { pathOf, planOf } from './corner-plan-fixtures.ts';
 
 afterEach(() => vi.unstubAllGlobals());
+
+/** The plan, its path, and nothing of anything else. */
+const answerTo = (path: string) => {
+  if (path.endsWith('/path')) return pathOf(planOf());
+  return path.startsWith('/api/corner-plans') ? planOf() : { items: [] };
+};
 
 const rowOf = (number: number) => screen.findByRole('button', { name: new RegExp(`^Corner ${number},`) });
 
 describe('a corner plan', () => {
   it('lists each corner with angle, treatment and both return temperatures, trouble included', async () => {
-    serveWith(({ path }) => json(path.startsWith('/api/corner-plans') ? planOf() : { items: [] }));
+    serveWith(({ path }) => json(answerTo(path)));
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
     expect((await rowOf(2)).getAttribute('aria-label')).toBe(
       'Corner 2, 90° inside the part: loop, back at 177 °C instead of 427 °C',
@@ -24,7 +30,7 @@ describe('a corner plan', () => {
   });
 
   it('opens a corner’s sheet with what else would do and why it would not', async () => {
-    serveWith(({ path }) => json(path.startsWith('/api/corner-plans') ? planOf() : { items: [] }));
+    serveWith(({ path }) => json(answerTo(path)));
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
     await userEvent.click(await rowOf(1));
     expect(await screen.findByRole('heading', { name: 'Leave, 90° inside the part' })).toBeTruthy();
@@ -37,7 +43,7 @@ describe('a corner plan', () => {
 
   it('plans again with what a person chose for a corner, from the version that was seen', async () => {
     const requests = serveWith(({ method, path }) => {
-      if (!path.startsWith('/api/corner-plans')) return json({ items: [] });
+      if (!path.startsWith('/api/corner-plans') || path.endsWith('/path')) return json(answerTo(path));
       return json(method === 'PUT' ? planOf({ version: 6, overrides: { 'c0-0': 'dwell' } }) : planOf());
     });
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
@@ -52,7 +58,7 @@ describe('a corner plan', () => {
   it('asks what to do when somebody else planned first, and can plan again over theirs', async () => {
     let puts = 0;
     const requests = serveWith(({ method, path }) => {
-      if (!path.startsWith('/api/corner-plans')) return json({ items: [] });
+      if (!path.startsWith('/api/corner-plans') || path.endsWith('/path')) return json(answerTo(path));
       if (method !== 'PUT') return json(planOf({ version: puts > 0 ? 9 : 5 }));
       puts += 1;
       return puts === 1 ? problem('stale') : json(planOf({ version: 10, overrides: { 'c0-0': 'dwell' } }));
@@ -66,18 +72,21 @@ describe('a corner plan', () => {
   });
 
   it('is read only for an operator, who is not asked for strategies', async () => {
-    const requests = serveWith(() => json(planOf()));
+    const requests = serveWith(({ path }) => json(answerTo(path)));
     show(<CornerPlanScreen id={ids.report} />, 'operator');
     await userEvent.click(await rowOf(1));
     expect(screen.queryByRole('button', { name: 'Choose the dwell' })).toBeNull();
     expect(screen.queryByRole('button', { name: 'Plan with these' })).toBeNull();
     expect(screen.queryByRole('heading', { name: 'Take the cut path away' })).toBeNull();
-    expect(requests.map(({ path }) => path)).toEqual([`/api/corner-plans/${ids.report}`]);
+    expect(requests.map(({ path }) => path)).toEqual([
+      `/api/corner-plans/${ids.report}`,
+      `/api/corner-plans/${ids.report}/path`,
+    ]);
   });
 
   it('warns that a plan of an unapproved revision is on no card', async () => {
     const revision = { ...planOf().revision, state: 'inReview' as const, approved: false };
-    serveWith(({ path }) => json(path.startsWith('/api/corner-plans') ? planOf({ revision }) : { items: [] }));
+    serveWith(({ path }) => json(path.endsWith(ids.report) ? planOf({ revision }) : answerTo(path)));
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
     expect(await screen.findByText(/not approved \(In review\). It is not shown on a card/)).toBeTruthy();
   });
