@@ -1,6 +1,6 @@
 import { memo } from 'react';
 import { StyleSheet, View } from 'react-native';
-import { common } from '@/components/text/common.ts';
+import { common, unbroken } from '@/components/text/common.ts';
 import {
   explainText,
   explanationOf,
@@ -78,7 +78,7 @@ export function ExplainDialog({ explained, from, onClose }: ExplainDialogProps) 
           </Stack>
           <Stack gap="xs">
             <Heading level={3}>{explainText.inputs}</Heading>
-            <Facts items={told.inputs.map(({ label, value }) => ({ label, value: together(value) }))} />
+            <Facts items={told.inputs.map(({ label, value }) => ({ label, value: unbroken(value) }))} />
           </Stack>
           {told.parameters.length > 0 && (
             <Stack gap="xs">
@@ -88,7 +88,7 @@ export function ExplainDialog({ explained, from, onClose }: ExplainDialogProps) 
                   const row = parameterRow(name, from.system);
                   if (!row) return [];
                   const label = `${row.meaning}. ${explainText.origin(row.origin)}`;
-                  return [{ label: `${label.charAt(0).toUpperCase()}${label.slice(1)}`, value: together(row.value) }];
+                  return [{ label: `${label.charAt(0).toUpperCase()}${label.slice(1)}`, value: unbroken(row.value) }];
                 })}
               />
             </Stack>
@@ -103,9 +103,6 @@ export function ExplainDialog({ explained, from, onClose }: ExplainDialogProps) 
     </Dialog>
   );
 }
-
-/** A number and its unit on one line. */
-const together = (value: string): string => value.replaceAll(' ', '\u00a0');
 
 const styles = StyleSheet.create({
   grid: {

@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { View } from 'react-native';
+import { unbroken } from '@/components/text/common.ts';
 import { compareWords, proposeText } from '@/components/text/pierce-designer.ts';
 import { resultLabel, resultValue } from '@/components/text/pierce-explain.ts';
 import { Button } from '@/components/ui/button.tsx';
@@ -225,7 +226,7 @@ function Beside({ proposed, now, system }: { proposed: Prediction; now: Predicti
     <Facts
       items={compared.map((name) => ({
         label: resultLabel[name],
-        value: `${resultValue(name, proposed, system)} (${proposeText.now} ${resultValue(name, now, system)})`,
+        value: `${unbroken(resultValue(name, proposed, system))} (${unbroken(`${proposeText.now} ${resultValue(name, now, system)}`)})`,
       }))}
     />
   );

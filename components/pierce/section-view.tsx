@@ -132,17 +132,6 @@ export function SectionView({
             />
           )}
         </G>
-        {chosen !== null && ends[chosen] !== undefined && (
-          <Rect
-            x={x((ends[chosen] ?? 0) - (stages[chosen]?.duration ?? 0))}
-            y={top}
-            width={x(stages[chosen]?.duration ?? 0) - left}
-            height={lanesBottom - top - 12}
-            fill={roles.ember}
-            fillOpacity={0.08}
-          />
-        )}
-
         {ends.map((end, index) => {
           const from = x(end - (stages[index]?.duration ?? 0));
           const label = fittingLabel(x(end) - from, sectionText.stage(index + 1));
@@ -286,6 +275,17 @@ export function SectionView({
             {`${tick} s`}
           </Lettering>
         ))}
+        {/* over all the rest, so that the ground of a lettering leaves no hole in it */}
+        {chosen !== null && ends[chosen] !== undefined && (
+          <Rect
+            x={x((ends[chosen] ?? 0) - (stages[chosen]?.duration ?? 0))}
+            y={top}
+            width={x(stages[chosen]?.duration ?? 0) - left}
+            height={lanesBottom - top - 12}
+            fill={roles.ember}
+            fillOpacity={0.08}
+          />
+        )}
       </Svg>
       {editing && <KnotLayer {...{ editing, stages, lanes, scales, geometry, system }} />}
     </View>

@@ -44,8 +44,8 @@ export function StageSentence({ index, stage, through, results, onExplain, onCho
   const key = draft.stageKeys[index] ?? '';
   const number = index + 1;
   const count = draft.content.stages.length;
-  const mean = [stage.from, stage.to].map(
-    (at) => quantityText(at.peakPower * at.duty, 'power', system, { figures: 3 }).text,
+  const [meanFrom, meanTo] = [stage.from, stage.to].map((at) =>
+    quantityText(at.peakPower * at.duty, 'power', system, { figures: 3 }),
   );
   const dial = scale ? [stage.from, stage.to].map((at) => dialForFocus(scale, at.focusPosition, at.standoff)) : [];
   const firstDial = dial[0];
@@ -89,7 +89,7 @@ export function StageSentence({ index, stage, through, results, onExplain, onCho
         <Clause index={index} stage={stage} quantity="peakPower" dimension="power" />
         {pulsed && (
           <Clause index={index} stage={stage} quantity="duty" dimension="ratio">
-            <Aside>{stageText.mean(mean[0] ?? '', mean[1] ?? '')}</Aside>
+            {meanFrom && meanTo && <Aside>{stageText.mean(meanFrom, meanTo)}</Aside>}
           </Clause>
         )}
         {pulsed ? (

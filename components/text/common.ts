@@ -31,3 +31,6 @@ export const common = {
     take: 'Drop my text and take theirs',
   },
 } as const;
+
+/** Kept on one line, as a number and its unit. */
+export const unbroken = (words: string): string => words.replaceAll(' ', '\u00a0');

@@ -1,5 +1,5 @@
 import type { Check, Condition, Prediction, Revision, RevisionState } from '@/shared/strategies.ts';
-import { quantityText, type UnitSystem } from '@/strategy/units/index.ts';
+import { quantityText, type QuantityText, type UnitSystem } from '@/strategy/units/index.ts';
 import type { LaneName } from '@/components/pierce/section-layout.ts';
 
 export const reserveText = (reserve: number | null): string =>
@@ -127,7 +127,11 @@ export const stageText = {
     oxygenPressure: 'Oxygen',
   },
   dial: (from: number, to: number) => ` type ${dialText(from, to)} on the dial`,
-  mean: (from: string, to: string) => (from === to ? ` ${from} mean` : ` ${from} to ${to} mean`),
+  /** The unit once where both have the same. */
+  mean: (from: QuantityText, to: QuantityText) => {
+    if (from.text === to.text) return ` ${to.text} mean`;
+    return ` ${from.unit === to.unit ? from.number : from.text} to ${to.text} mean`;
+  },
   continuous: 'Continuous power, no pulses.',
   makeContinuous: 'make continuous',
   makeContinuousSpoken: (number: number) => `Make the power of stage ${number} continuous`,

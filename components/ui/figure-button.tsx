@@ -1,4 +1,5 @@
 import { Pressable, StyleSheet, Text } from 'react-native';
+import { unbroken } from '@/components/text/common.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { touch } from '@/components/theme/space.ts';
 import { family } from '@/components/theme/type.ts';
@@ -26,7 +27,7 @@ export function FigureButton({
       style={label === undefined ? styles.alone : [styles.cell, ringInside]}
     >
       {label === undefined ? null : <Text style={styles.label}>{label}</Text>}
-      <Text style={[styles.value, { textAlign: align }]}>{value.replaceAll(' ', '\u00a0')}</Text>
+      <Text style={[styles.value, { textAlign: align }]}>{unbroken(value)}</Text>
     </Pressable>
   );
 }

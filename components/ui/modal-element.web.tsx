@@ -18,12 +18,16 @@ export function ModalElement({
     const dialog = ref.current;
     if (dialog === null || !open) return;
     dialog.showModal();
+    // The browser goes to the first button, which may be the last line of a long sheet: that one is read from its beginning.
+    if (dialog.scrollTop > 0) dialog.focus();
+    dialog.scrollTop = 0;
     // Before the element leaves the page, so that the browser gives the focus back to where it came from.
     return () => dialog.close();
   }, [open]);
   return (
     <dialog
       ref={ref}
+      tabIndex={-1}
       data-look="dialog"
       aria-labelledby={labelledBy}
       onCancel={(event) => {

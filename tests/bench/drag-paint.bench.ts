@@ -119,7 +119,7 @@ function knotOf(page: Page) {
   return page.getByRole('slider', { name: 'Power where stage 1 meets stage 2' });
 }
 
-/** Up and down with a knot, by finger or mouse, as often as a screen draws and without waiting for it. */
+/** Up and down with a knot, by finger or mouse, as often as a screen draws or, where the page is slower, as it takes them. */
 async function drag(page: Page, inputs: CDPSession, size: Size, moves: number): Promise<void> {
   const knot = knotOf(page);
   await knot.evaluate((element) => element.scrollIntoView({ block: 'center' }));
@@ -140,13 +140,12 @@ async function drag(page: Page, inputs: CDPSession, size: Size, moves: number): 
     });
   const phone = size === 'phone';
   await (phone ? finger('touchStart', 0) : mouse('mousePressed', 0));
-  const sent: Promise<void>[] = [];
   for (let i = 1; i <= moves; i++) {
     const down = -25 * Math.sin(i / 8);
-    sent.push(phone ? finger('touchMove', down) : mouse('mouseMoved', down));
-    await new Promise((later) => setTimeout(later, EVERY));
+    // taken, not drawn: the next waits for the frame that this one is being drawn in
+    const taken = phone ? finger('touchMove', down) : mouse('mouseMoved', down);
+    await Promise.all([taken, new Promise((later) => setTimeout(later, EVERY))]);
   }
-  await Promise.all(sent);
   await (phone ? finger('touchEnd', 0) : mouse('mouseReleased', 0));
   await drawn(page);
 }
@@ -164,7 +163,10 @@ function drawn(page: Page) {
   return page.evaluate(() => new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(done))));
 }
 
-/** What Chromium says of its own events of a kind: from when the input came to when the frame that shows it was handed to the screen. */
+/**
+ * What Chromium says of its own events of a kind: from when the browser had the input to when the frame that shows it was handed to the
+ * screen. What the debugging protocol holds back of a finger before that is not the page's.
+ */
 async function timesOf(within: Browser, kind: RegExp, work: () => Promise<void>): Promise<Times> {
   await within.startTracing(undefined, { categories: ['cc', 'benchmark', 'input'] });
   await work();
@@ -172,8 +174,10 @@ async function timesOf(within: Browser, kind: RegExp, work: () => Promise<void>)
   const begun = new Map<string, number>();
   const times: number[] = [];
   for (const { name, ph, ts, pid, id2, args } of trace.traceEvents) {
-    if (name !== 'EventLatency' || id2 === undefined) continue;
+    if (id2 === undefined) continue;
     const id = `${pid} ${id2.local ?? id2.global}`;
+    if (name === 'GenerationToBrowserMain' && ph === 'e' && begun.has(id)) begun.set(id, ts);
+    if (name !== 'EventLatency') continue;
     const event = args?.event_latency;
     // an input that changed nothing on the screen has no frame of its own
     if (ph === 'b' && event?.display_trace_id !== undefined && kind.test(event.event_type)) begun.set(id, ts);

@@ -67,6 +67,11 @@ describe('the pierce designer on a phone', () => {
     await page.getByRole('button', { name: /^through, cold: .*How it is worked out/ }).click();
     const sheet = page.getByRole('dialog', { name: 'Through on a cold plate' });
     await sheet.getByText(/The bottom sinks as fast as the heat that reaches it melts steel/).waitFor();
+    // a long sheet is read from its beginning, though the button that closes it stands at its end
+    expect(await sheet.evaluate((dialog) => [dialog.scrollTop, dialog.scrollHeight > dialog.clientHeight])).toEqual([
+      0,
+      true,
+    ]);
     await sheet.getByRole('button', { name: 'Close' }).click();
     await page.getByRole('heading', { name: 'Checks' }).waitFor();
     expect(await page.getByRole('main').innerText()).not.toMatch(/NaN|Infinity|undefined/);
