@@ -35,7 +35,7 @@ export const tableGrants: Readonly<Record<string, readonly string[]>> = {
   corner_plans: [
     'SELECT',
     'INSERT',
-    `UPDATE (revision_id, thickness, plate_temperature, skeleton, overrides, temperature_limit, corners, totals, version,
+    `UPDATE (revision_id, layout_version, thickness, plate_temperature, skeleton, overrides, temperature_limit, corners, totals, version,
       changed_at, changed_by)`,
   ],
   reports: ['SELECT', 'INSERT', 'UPDATE (closed_at, closed_by, closed_words, version)'],

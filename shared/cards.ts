@@ -50,7 +50,9 @@ export const cardSchema = z.object({
       cornerPlans: z.array(
         z.object({
           id: idSchema,
-          partId: idSchema,
+          /** Null for the plan of a plate layout. */
+          partId: idSchema.nullable(),
+          /** Name of the part or of the layout. */
           partName: z.string(),
           corners: z.number().int(),
           loops: z.number().int(),

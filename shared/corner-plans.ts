@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { idSchema, instantSchema, personSchema, pointSchema, quantity, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
+import { outlineSchema } from './layouts.ts';
 import { contourSchema, segmentSchema } from './parts.ts';
 import { revisionStates } from './strategies.ts';
 
@@ -75,8 +76,21 @@ export type PlannedCorner = z.infer<typeof plannedCornerSchema>;
 export const cornerPlanSchema = z.object({
   id: idSchema,
   version: versionSchema,
-  /** With its contours: an operator reads the plan's drawing, and has no access to parts. */
+  /**
+   * What is planned: a part, or a layout with its pieces as they lie. With its contours: an operator reads the plan's drawing, and has no access
+   * to parts. A layout's are in the order of cutting, each called `<placement>.<contour>`.
+   */
   part: z.object({ id: idSchema, name: z.string(), contours: z.array(contourSchema) }),
+  /** Of a layout: the version that was planned and the newest there is, and the plate. */
+  layout: z
+    .object({
+      id: idSchema,
+      version: z.number().int(),
+      newest: z.number().int(),
+      outline: outlineSchema,
+    })
+    .nullable()
+    .default(null),
   revision: z.object({
     id: idSchema,
     number: z.number().int(),
@@ -124,6 +138,7 @@ const planParams = z.object({ planId: idSchema });
 const choices = {
   plateTemperature: quantity(273.15, 900, '0 to 626 °C'),
   thickness: quantity(1e-3, 60e-3, '1 to 60 mm'),
+  /** Around a part; a layout has its own plate, and nothing beside it counts. */
   skeleton: skeletonSchema,
   overrides: z.record(z.string().max(40), z.enum(treatments)),
 };
@@ -140,9 +155,20 @@ export const cornerPlanEndpoints = {
   add: endpoint({
     method: 'POST',
     path: '/api/corner-plans',
-    summary: 'Plan a part’s corners with a strategy revision',
+    summary: 'Plan the corners of a part or of a plate layout with a strategy revision',
     access: 'cornerPlan.write',
-    body: z.strictObject({ id: idSchema, partId: idSchema, revisionId: idSchema, ...choices }),
+    body: z
+      .strictObject({
+        id: idSchema,
+        partId: idSchema.optional(),
+        layoutId: idSchema.optional(),
+        revisionId: idSchema,
+        ...choices,
+      })
+      .refine(({ partId, layoutId }) => (partId === undefined) !== (layoutId === undefined), {
+        message: 'Name a part or a layout, one of the two.',
+        path: ['partId'],
+      }),
     answer: cornerPlanSchema,
   }),
   redo: endpoint({

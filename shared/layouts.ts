@@ -99,6 +99,16 @@ export const layoutSchema = z.object({
   cutLength: z.number(), // m
   changedAt: instantSchema,
   changedBy: personSchema,
+  cornerPlans: z.array(
+    z.object({
+      id: idSchema,
+      strategyName: z.string(),
+      revisionNumber: z.number().int(),
+      /** The version of the layout that it was made for. */
+      layoutVersion: z.number().int(),
+      changedAt: instantSchema,
+    }),
+  ),
 });
 export type Layout = z.infer<typeof layoutSchema>;
 
@@ -135,6 +145,10 @@ export const outlineOf = ({ edge, openings, width, height }: z.infer<typeof outl
   openings: openings.map((segments) => ({ segments })),
   box: { minX: 0, minY: 0, maxX: width, maxY: height },
 });
+
+/** The plate's edge and openings as closed paths, for a drawing. */
+export const outlinePaths = ({ edge, openings }: Pick<z.infer<typeof outlineSchema>, 'edge' | 'openings'>) =>
+  [edge, ...openings].map((segments) => ({ segments }));
 
 /** An outline as it goes over the wire. */
 export const wireOutline = ({ edge, openings, box }: PlateOutline, of: string | null): Layout['outline'] => ({

@@ -16,10 +16,11 @@ import { Button } from '@/components/ui/button.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
 import { EstimateNote } from '@/components/ui/estimate-note.tsx';
 import { Notice } from '@/components/ui/notice.tsx';
+import { TextLink } from '@/components/ui/link.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
 import { Row, Stack } from '@/components/ui/stack.tsx';
-import { Small } from '@/components/ui/text.tsx';
+import { Body, Small } from '@/components/ui/text.tsx';
 import type { CornerPlan, PlannedCorner } from '@/shared/corner-plans.ts';
 import { may } from '@/shared/policy.ts';
 import { BottomSheet } from './bottom-sheet.tsx';
@@ -137,6 +138,25 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
       {!plan.revision.approved && (
         <Notice kind="caution">{cornerText.notApproved(stateText[plan.revision.state])}</Notice>
       )}
+      {plan.layout && plan.layout.version !== plan.layout.newest && (
+        <Notice kind="caution">
+          <Body>{cornerText.otherVersion(plan.layout.version, plan.layout.newest)}</Body>
+          {mayWrite && (
+            <Row>
+              <Button
+                label={cornerText.planNewest}
+                busy={choices.busy}
+                onPress={() => choices.planAgain(choicesOf(plan))}
+              />
+            </Row>
+          )}
+        </Notice>
+      )}
+      {plan.layout && mayWrite && (
+        <Body>
+          <TextLink href={`/layouts/${plan.layout.id}`}>{cornerText.openLayout}</TextLink>
+        </Body>
+      )}
       <View
         // on the web a view's host is the page's own element
         ref={(host: unknown) => {
@@ -228,6 +248,7 @@ function PlanSettings({ plan, mayWrite, choices }: PlanSettingsProps) {
       <Stack>
         <PlanForm
           initial={choicesOf(plan)}
+          ownPlate={plan.layout !== null}
           current={{
             id: revision.id,
             label: cornerText.revisionOption(revision.strategyName, revision.number, stateText[revision.state]),

@@ -14,6 +14,7 @@ import { Button } from '@/components/ui/button.tsx';
 import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Small } from '@/components/ui/text.tsx';
 import type { CornerPlan, PlannedCorner } from '@/shared/corner-plans.ts';
+import { outlinePaths } from '@/shared/layouts.ts';
 import type { Point } from '@/strategy/path/index.ts';
 import { cornersInward } from './corner-inward.ts';
 import { MeasureLayer } from './measure-layer.tsx';
@@ -78,11 +79,14 @@ export function PlanDrawing({
     () => corners.flatMap(({ id, ease }) => (ease ? [{ id, kind: 'ease' as const, segments: ease.segments }] : [])),
     [corners],
   );
+  const { layout } = plan;
+  const outline = useMemo(() => layout && outlinePaths(layout.outline), [layout]);
   const plate = useMemo(() => {
+    if (layout) return null;
     const box = pathsBox(contours);
     const { left, right, below, above } = plan.skeleton;
     return { minX: box.minX - left, minY: box.minY - below, maxX: box.maxX + right, maxY: box.maxY + above };
-  }, [contours, plan.skeleton]);
+  }, [contours, layout, plan.skeleton]);
   const marks = useMarks(plan, chosen);
 
   const index = corners.findIndex(({ id }) => id === chosen);
@@ -104,6 +108,7 @@ export function PlanDrawing({
         label={cornerText.drawing(plan.part.name, plan.totals)}
         contours={contours}
         plate={plate}
+        {...(outline ? { outline } : {})}
         loops={loops}
         slugs={slugs}
         leadIns={leadIns}

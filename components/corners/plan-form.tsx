@@ -27,6 +27,8 @@ type PlanFormProps = {
   initial: Omit<PlanChoices, 'revisionId'> & { revisionId: string | null };
   /** The revision used now, which the list may not offer any more. */
   current?: { id: string; label: string };
+  /** Of a layout: its own plate, no skeleton to ask for. */
+  ownPlate?: boolean;
   label: string;
   busy: boolean;
   error: ReactNode;
@@ -34,7 +36,7 @@ type PlanFormProps = {
 };
 
 /** With which strategy revision, how thick and how hot, and how much skeleton there is. */
-export function PlanForm({ initial, current, label, busy, error, onPlan }: PlanFormProps) {
+export function PlanForm({ initial, current, ownPlate = false, label, busy, error, onPlan }: PlanFormProps) {
   const strategies = useQuery(strategiesQuery());
   const [revisionId, setRevision] = useState(initial.revisionId);
   const [thickness, setThickness] = useState<number | null>(initial.revisionId === null ? null : initial.thickness);
@@ -101,23 +103,27 @@ export function PlanForm({ initial, current, label, busy, error, onPlan }: PlanF
           />
         </Cell>
       </Row>
-      <Stack gap="xs">
-        <Body strong>{cornerText.skeletonTitle}</Body>
-        <Small>{cornerText.skeletonHint}</Small>
-      </Stack>
-      <Row align="flex-start">
-        {sides.map((side) => (
-          <Cell key={side} least={130}>
-            <NumberField
-              label={cornerText.skeleton[side]}
-              dimension="length"
-              value={skeleton[side]}
-              onChange={(value) => setSkeleton((before) => ({ ...before, [side]: value }))}
-              error={errorOf(`skeleton.${side}`)}
-            />
-          </Cell>
-        ))}
-      </Row>
+      {!ownPlate && (
+        <Stack gap="xs">
+          <Body strong>{cornerText.skeletonTitle}</Body>
+          <Small>{cornerText.skeletonHint}</Small>
+        </Stack>
+      )}
+      {!ownPlate && (
+        <Row align="flex-start">
+          {sides.map((side) => (
+            <Cell key={side} least={130}>
+              <NumberField
+                label={cornerText.skeleton[side]}
+                dimension="length"
+                value={skeleton[side]}
+                onChange={(value) => setSkeleton((before) => ({ ...before, [side]: value }))}
+                error={errorOf(`skeleton.${side}`)}
+              />
+            </Cell>
+          ))}
+        </Row>
+      )}
       {error}
       <Button kind="main" submit label={label} busy={busy} />
     </Form>

@@ -6,18 +6,22 @@ const roleNames = { outer: 'outline', hole: 'hole', island: 'island' } as const;
 
 type PlanContour = CornerPlan['part']['contours'][number];
 
+type PathOf = Pick<CornerPlan, 'part' | 'corners'> & Partial<Pick<CornerPlan, 'layout'>>;
+
 /**
  * The cut along the finished edges in order: what lies deeper within the part first, from the plate's lower left corner on the nearest next; each corner
  * with the loop or the wait that the plan gives it. Without lead-ins: where a contour is drawn to begin, its cut begins.
  */
-export function planPath({ part, corners }: Pick<CornerPlan, 'part' | 'corners'>): CutPath {
+export function planPath({ part, corners, layout = null }: PathOf): CutPath {
   const byContour = new Map<string, PlannedCorner[]>();
   for (const corner of corners) {
     const known = byContour.get(corner.contourId);
     if (known) known.push(corner);
     else byContour.set(corner.contourId, [corner]);
   }
-  return { runs: inOrder(part.contours).map((contour) => runOf(contour, byContour.get(contour.id) ?? [])) };
+  // a layout's contours come in its own order of cutting
+  const contours = layout ? part.contours.filter(({ segments }) => segments.length > 0) : inOrder(part.contours);
+  return { runs: contours.map((contour) => runOf(contour, byContour.get(contour.id) ?? [])) };
 }
 
 function inOrder(contours: readonly PlanContour[]): PlanContour[] {

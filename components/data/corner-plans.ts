@@ -2,7 +2,7 @@ import { queryOptions, useMutation, useQueryClient, type QueryClient } from '@ta
 import { cornerPlanEndpoints, type CornerPlan } from '@/shared/corner-plans.ts';
 import type { BodyOf } from '@/shared/endpoint.ts';
 import { apiCall } from './call.ts';
-import { cardsRoot, partsRoot } from './roots.ts';
+import { cardsRoot, layoutsRoot, partsRoot } from './roots.ts';
 
 const root = ['corner-plans'] as const;
 
@@ -14,7 +14,7 @@ export const cornerPlanQuery = (planId: string) =>
 
 async function settle(client: QueryClient, plan: CornerPlan): Promise<void> {
   client.setQueryData(cornerPlanQuery(plan.id).queryKey, plan);
-  await Promise.all([partsRoot, cardsRoot].map((queryKey) => client.invalidateQueries({ queryKey })));
+  await Promise.all([partsRoot, layoutsRoot, cardsRoot].map((queryKey) => client.invalidateQueries({ queryKey })));
 }
 
 export function useCornerPlanAdd() {

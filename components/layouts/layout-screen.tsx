@@ -35,6 +35,7 @@ import {
 } from './layout-draft.ts';
 import { LayoutBlock } from './layout-block.tsx';
 import { LayoutDrawing } from './layout-drawing.tsx';
+import { LayoutPlans } from './layout-plans.tsx';
 import { OrderList } from './order-list.tsx';
 import { PieceList } from './piece-list.tsx';
 import { PiecePanel } from './piece-panel.tsx';
@@ -52,6 +53,7 @@ export function LayoutScreen({ id }: { id: string }) {
         layout={layout.data}
         userId={actor.userId}
         mayWrite={may(actor, 'layout.write')}
+        mayPlan={may(actor, 'cornerPlan.write')}
         refetch={async () => (await layout.refetch()).data ?? null}
       />
     );
@@ -78,6 +80,7 @@ type LayoutEditorProps = {
   layout: Layout;
   userId: string;
   mayWrite: boolean;
+  mayPlan: boolean;
   /** Fetches the layout as it stands on the server. */
   refetch: () => Promise<Layout | null>;
 };
@@ -85,7 +88,7 @@ type LayoutEditorProps = {
 /** A stretch around a problem that shows both pieces' edges, m. */
 const problemStretch = 0.15;
 
-function LayoutEditor({ layout, userId, mayWrite, refetch }: LayoutEditorProps) {
+function LayoutEditor({ layout, userId, mayWrite, mayPlan, refetch }: LayoutEditorProps) {
   const { wide } = useLayout();
   const [before] = useState(() => (mayWrite ? keptLayout(userId, layout.id) : null));
   // the version this draft was made from: what If-Match says, also after somebody else has saved
@@ -196,6 +199,7 @@ function LayoutEditor({ layout, userId, mayWrite, refetch }: LayoutEditorProps) 
       {wide && piecePanel}
       {mayWrite && <AddPieces draft={draft} lies={lies} dispatch={act} onPlaced={setChosen} />}
       {pieces}
+      <LayoutPlans layout={layout} unsaved={dirty} mayPlan={mayPlan} />
       {mayWrite && (
         <Panel>
           <Fold label={layoutsText.plateAndRoom}>

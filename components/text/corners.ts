@@ -1,4 +1,4 @@
-import type { PlannedCorner, Treatment } from '@/shared/corner-plans.ts';
+import type { CornerPlan, PlannedCorner, Treatment } from '@/shared/corner-plans.ts';
 import { numberText, quantityText, type UnitSystem } from '@/strategy/units/index.ts';
 
 export const treatmentText: Readonly<Record<Treatment, string>> = {
@@ -12,8 +12,10 @@ export const treatmentText: Readonly<Record<Treatment, string>> = {
 export const cornerText = {
   scale: 'Temperature scale: temper and glow of steel',
   page: 'Corner plan',
-  drawing: (part: string, plan: { corners: number; loops: number; dwells: number; trouble: number }) =>
+  drawing: (part: string, plan: CornerPlan['totals']) =>
     `Drawing of ${part} on its plate with ${count(plan.corners, 'corner')}: ${count(plan.loops, 'loop')}, ${count(plan.dwells, 'dwell')}, ${
+      plan.eases ? `${count(plan.eases, 'ease')}, ` : ''
+    }${plan.rounds ? `${count(plan.rounds, 'round')}, ` : ''}${
       plan.trouble === 0 ? 'no trouble' : `${plan.trouble} in trouble`
     }. The list beside it says the same.`,
   corners: 'Corners',
@@ -54,6 +56,10 @@ export const cornerText = {
   },
   byRule: 'Leave it to the rules',
   close: 'All corners',
+  otherVersion: (planned: number, newest: number) =>
+    `This plan was made for version ${planned} of the layout, which was laid out anew since then: version ${newest} is the newest. The drawing shows the pieces as they were planned.`,
+  planNewest: 'Plan the newest layout',
+  openLayout: 'Open the layout',
   settings: 'Plan again',
   settingsSave: 'Plan with these',
   operator: 'Read only: the programmer changes the plan.',
@@ -82,6 +88,8 @@ export const cornerText = {
     corners: 'corners',
     loops: 'loops',
     dwells: 'dwells',
+    eases: 'eases',
+    rounds: 'rounds',
     trouble: 'in trouble',
     time: 'added time',
     length: 'added path',

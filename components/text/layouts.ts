@@ -133,4 +133,9 @@ export const layoutsText = {
   mixed: 'between others',
   numbered: (place: number) => `No. ${place}`,
   plans: 'Corner plans',
+  plannedFor: (version: number, newest: number) =>
+    version === newest
+      ? 'for this layout as it is saved'
+      : `for version ${version}: the plate was laid out anew since then`,
+  saveFirst: 'Save the layout first: corners are planned of what is saved.',
 } as const;

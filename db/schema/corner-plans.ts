@@ -12,17 +12,21 @@ import {
 } from 'drizzle-orm/pg-core';
 import type { CornerPlan } from '../../shared/corner-plans.ts';
 import { instant, plantId } from './columns.ts';
+import { layoutVersions } from './layout-versions.ts';
 import { memberships } from './memberships.ts';
 import { parts } from './parts.ts';
 import { strategyRevisions } from './strategy-revisions.ts';
 
-/** A part's corners planned with a strategy revision: the choices made and what the server computed from them. */
+/** The corners of a part or a layout planned with a strategy revision: the choices made and what the server computed from them. */
 export const cornerPlans = pgTable(
   'corner_plans',
   {
     plantId: plantId(),
     id: uuid().notNull(),
-    partId: uuid().notNull(),
+    /** A part, or a version of a layout. */
+    partId: uuid(),
+    layoutId: uuid(),
+    layoutVersion: integer(),
     revisionId: uuid().notNull(),
     thickness: doublePrecision().notNull(), // m
     plateTemperature: doublePrecision().notNull(), // K
@@ -43,6 +47,11 @@ export const cornerPlans = pgTable(
       foreignColumns: [parts.plantId, parts.id],
     }),
     foreignKey({
+      name: 'corner_plans_layout',
+      columns: [t.plantId, t.layoutId, t.layoutVersion],
+      foreignColumns: [layoutVersions.plantId, layoutVersions.layoutId, layoutVersions.version],
+    }),
+    foreignKey({
       name: 'corner_plans_revision',
       columns: [t.plantId, t.revisionId],
       foreignColumns: [strategyRevisions.plantId, strategyRevisions.id],
@@ -53,7 +62,10 @@ export const cornerPlans = pgTable(
       foreignColumns: [memberships.plantId, memberships.userId],
     }),
     index('corner_plans_of_part').on(t.plantId, t.partId),
+    index('corner_plans_of_layout').on(t.plantId, t.layoutId),
     index('corner_plans_of_revision').on(t.plantId, t.revisionId),
+    check('corner_plans_of_one', sql`(${t.partId} is null) <> (${t.layoutId} is null)`),
+    check('corner_plans_layout_version', sql`(${t.layoutId} is null) = (${t.layoutVersion} is null)`),
     check('corner_plans_thickness', sql`${t.thickness} > 0 and ${t.thickness} <= 0.06`),
   ],
 );

@@ -1,6 +1,5 @@
 import type { z } from 'zod';
 import type { CornerPlan, cornerPlanEndpoints, PlannedCorner } from '../../shared/corner-plans.ts';
-import type { DrawingReadingWire } from '../../shared/parts.ts';
 import type { StrategyContent } from '../../shared/strategies.ts';
 import {
   cornerInsert,
@@ -10,34 +9,32 @@ import {
 import type { MachineProfile } from '../../strategy/machine.ts';
 import { oxygenMassFlow, PIERCE_DEFAULTS, routineTime } from '../../strategy/pierce/index.ts';
 import type { DrawingReader } from '../drawings/reader.ts';
+import type { Planned } from './planned.ts';
 
 /** What the programmer chose. */
 export type Choices = Omit<z.output<NonNullable<(typeof cornerPlanEndpoints.redo)['body']>>, 'revisionId'>;
 
 export type PlanSource = {
-  readonly reading: DrawingReadingWire;
+  readonly planned: Planned;
   readonly content: StrategyContent;
   readonly profile: MachineProfile;
   readonly nozzleDiameter: number; // m
 };
 
-/** The part's corners planned with a strategy's rules and cut, on a plate that leaves the skeleton asked for. */
+/** The corners planned with a strategy's rules and cut, on what plate there is. */
 export async function computePlan(
   drawings: DrawingReader,
-  { reading, content, profile, nozzleDiameter }: PlanSource,
+  { planned, content, profile, nozzleDiameter }: PlanSource,
   choices: Choices,
 ): Promise<Pick<CornerPlan, 'limit' | 'corners' | 'totals'>> {
-  const { bounds, contours } = reading;
-  const { skeleton } = choices;
   const plan = await drawings.plan({
-    // what lies inside is cut before what lies around it: an island before its hole, holes before the outline
-    contours: [...contours]
-      .sort((a, b) => b.depth - a.depth)
-      .map(({ id, role, segments }) => ({ id, role, contour: { segments } })),
-    plate: {
-      min: { x: bounds.min.x - skeleton.left, y: bounds.min.y - skeleton.below },
-      max: { x: bounds.max.x + skeleton.right, y: bounds.max.y + skeleton.above },
-    },
+    contours: planned.contours.map(({ id, role, segments, said }) => ({
+      id,
+      role,
+      contour: { segments },
+      ...(said === undefined ? {} : { name: said }),
+    })),
+    plate: planned.plate,
     rules: content.cornerRules,
     cut: content.cut,
     profile: { axes: profile.axes, smallestArc: profile.smallestArc },

@@ -1,6 +1,5 @@
 import { inPlant, type Transaction } from '../../db/database.ts';
 import { cornerPlanEndpoints, type CornerPlan } from '../../shared/corner-plans.ts';
-import { drawingReadingSchema } from '../../shared/parts.ts';
 import { AppError, notFound } from '../errors.ts';
 import { findNozzle } from '../nozzles/routes.ts';
 import { namesOf } from '../people/names.ts';
@@ -8,7 +7,14 @@ import { note } from '../record/note.ts';
 import type { Mount } from '../route.ts';
 import type { Services } from '../services.ts';
 import { computePlan, cuttingOf, unknownOverrides, type Choices, type PlanSource } from './compute.ts';
-import { addCornerPlan, findCornerPlan, lockCornerPlan, planSources, replaceCornerPlan } from './repository.ts';
+import {
+  addCornerPlan,
+  findCornerPlan,
+  lockCornerPlan,
+  planSources,
+  replaceCornerPlan,
+  type PlanOf,
+} from './repository.ts';
 
 export function cornerPlanRoutes({ route, services }: Mount): void {
   // An operator reads a plan only while its strategy is approved, like the card that lists it.
@@ -23,19 +29,22 @@ export function cornerPlanRoutes({ route, services }: Mount): void {
       const source = await inPlant(
         services.database,
         actor.plantId,
-        (tx) => sourceOf(tx, body.partId, body.revisionId),
+        (tx) => sourceOf(tx, planOf(body), choicesOf(body), body.revisionId),
         'read',
       );
-      return { value: await planned(services, source, choicesOf(body)) };
+      return { value: { source, computed: await computedFor(services, source, choicesOf(body)) } };
     },
-    async ({ tx, actor, body, prepared: computed }) => {
+    async ({ tx, actor, body, prepared: { source, computed } }) => {
       await addCornerPlan(tx, {
         plantId: actor.plantId,
         id: body.id,
-        partId: body.partId,
+        partId: body.partId ?? null,
+        layoutId: body.layoutId ?? null,
+        layoutVersion: source.planned.layout?.version ?? null,
         changedBy: actor.userId,
         revisionId: body.revisionId,
         ...choicesOf(body),
+        skeleton: skeletonOf(source, body),
         ...computed,
       });
       await note(
@@ -44,7 +53,7 @@ export function cornerPlanRoutes({ route, services }: Mount): void {
         'cornerPlan.added',
         { kind: 'cornerPlan', id: body.id },
         {
-          partId: body.partId,
+          ...planOf(body),
           revisionId: body.revisionId,
           ...choicesOf(body),
         },
@@ -62,19 +71,27 @@ export function cornerPlanRoutes({ route, services }: Mount): void {
         async (tx) => {
           const found = await findCornerPlan(tx, params.planId);
           if (!found) throw notFound('There is no such corner plan');
-          return { seen: found.plan.version, source: await sourceOf(tx, found.part.id, body.revisionId) };
+          const { partId, layoutId } = found.plan;
+          const of = planOf({ partId: partId ?? undefined, layoutId: layoutId ?? undefined });
+          return { seen: found.plan.version, source: await sourceOf(tx, of, choicesOf(body), body.revisionId) };
         },
         'read',
       );
-      return { value: { seen, computed: await planned(services, source, choicesOf(body)) } };
+      const asked = {
+        ...choicesOf(body),
+        skeleton: skeletonOf(source, body),
+        overrides: stillThere(source, body.overrides),
+      };
+      return { value: { seen, source, asked, computed: await computedFor(services, source, asked) } };
     },
-    async ({ tx, actor, params, body, unchanged, prepared: { seen, computed } }) => {
+    async ({ tx, actor, params, body, unchanged, prepared: { seen, source, asked, computed } }) => {
       const row = await lockCornerPlan(tx, params.planId);
       if (!row) throw notFound('There is no such corner plan');
       unchanged(row.version);
       // The version that was planned from: the caller's If-Match and this say the same, or it is stale.
       if (row.version !== seen) throw new AppError('stale', 'Somebody changed this meanwhile. Read it again.');
-      const choices = { revisionId: body.revisionId, ...choicesOf(body) };
+      const layoutVersion = source.planned.layout?.version ?? null;
+      const choices = { revisionId: body.revisionId, ...asked, layoutVersion };
       await replaceCornerPlan(tx, row, { ...choices, ...computed }, actor.userId);
       await note(
         tx,
@@ -98,9 +115,32 @@ const choicesOf = ({ plateTemperature, thickness, skeleton, overrides }: Choices
   overrides,
 });
 
-async function sourceOf(tx: Transaction, partId: string, revisionId: string): Promise<PlanSource> {
-  const { part, strategy } = await planSources(tx, partId, revisionId);
-  if (!part) throw notFound('There is no such part');
+/** What the request names; the schema has seen to it that it is one of the two. */
+function planOf({ partId, layoutId }: { partId?: string | undefined; layoutId?: string | undefined }): PlanOf {
+  if (layoutId !== undefined) return { layoutId };
+  return { partId: partId ?? '' };
+}
+
+/** A layout has its own plate: nothing beside it counts. */
+const skeletonOf = (
+  { planned: { layout } }: PlanSource,
+  { skeleton }: Pick<Choices, 'skeleton'>,
+): Choices['skeleton'] => (layout ? { left: 0, right: 0, below: 0, above: 0 } : skeleton);
+
+/** On a layout, choices for pieces that were taken away since then go with them. */
+function stillThere({ planned: { layout, contours } }: PlanSource, overrides: Choices['overrides']) {
+  if (!layout) return overrides;
+  return Object.fromEntries(
+    Object.entries(overrides).filter(([corner]) => contours.some(({ id }) => corner.startsWith(`c${id}-`))),
+  );
+}
+
+async function sourceOf(tx: Transaction, of: PlanOf, choices: Choices, revisionId: string): Promise<PlanSource> {
+  const { planned, strategy } = await planSources(tx, of, choices.skeleton, revisionId);
+  if (!planned) throw notFound('layoutId' in of ? 'There is no such layout' : 'There is no such part');
+  if (planned.contours.length === 0) {
+    throw new AppError('wrong-state', 'Nothing lies on this plate yet: there is no corner to plan.');
+  }
   if (!strategy) throw notFound('There is no such revision');
   const { revision, profile } = strategy;
   if (revision.state === 'draft') {
@@ -112,14 +152,14 @@ async function sourceOf(tx: Transaction, partId: string, revisionId: string): Pr
   const nozzle = await findNozzle(tx, revision.content.nozzleId);
   if (!nozzle) throw notFound('There is no such nozzle');
   return {
-    reading: drawingReadingSchema.parse(part.reading),
+    planned,
     content: revision.content,
     profile,
     nozzleDiameter: nozzle.diameter,
   };
 }
 
-async function planned(services: Services, source: PlanSource, choices: Choices) {
+async function computedFor(services: Services, source: PlanSource, choices: Choices) {
   const computed = await computePlan(services.drawings, source, choices);
   const unknown = unknownOverrides(computed.corners, choices.overrides);
   if (unknown.length > 0) {
@@ -137,14 +177,19 @@ async function replyWith(
 ): Promise<{ body: CornerPlan; version: number }> {
   const found = await findCornerPlan(tx, id);
   if (!found || (onlyApproved && found.revision.state !== 'approved')) throw notFound('There is no such corner plan');
-  const { plan, part, revision, strategyName, profile } = found;
+  const { plan, planned, newestLayout, revision, strategyName, profile } = found;
   const names = await namesOf(tx);
   return {
     version: plan.version,
     body: {
       id: plan.id,
       version: plan.version,
-      part: { id: part.id, name: part.name, contours: part.reading.contours },
+      part: {
+        id: planned.id,
+        name: planned.name,
+        contours: planned.contours.map(({ said: _said, ...contour }) => contour),
+      },
+      layout: planned.layout && { ...planned.layout, newest: newestLayout ?? planned.layout.version },
       revision: {
         id: revision.id,
         number: revision.number,

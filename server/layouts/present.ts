@@ -1,7 +1,7 @@
 import type { Person } from '../../shared/basics.ts';
 import { laidPart, wireOutline, type Layout, type LayoutSummary } from '../../shared/layouts.ts';
 import { plateRectangle, plateRemnant, type PlateOutline } from '../../strategy/path/plate/index.ts';
-import type { layoutLines, PartGeometry, WholeLayout } from './repository.ts';
+import type { layoutLines, PartGeometry, plansOfLayout, WholeLayout } from './repository.ts';
 
 type Names = (userId: string) => Person;
 
@@ -23,14 +23,18 @@ export function presentLayoutLine(
   };
 }
 
-export function presentLayout(whole: WholeLayout, names: Names): Layout {
-  const { layout, version, tag, remnant } = whole;
+export function presentLayout(
+  whole: WholeLayout,
+  plans: Awaited<ReturnType<typeof plansOfLayout>>,
+  names: Names,
+): Layout {
+  const { layout, version } = whole;
   return {
     id: layout.id,
     version: version.version,
     name: layout.name,
     plate: plateOf(whole),
-    outline: wireOutline(outlineFrom(whole), tag ?? remnant?.name ?? null),
+    outline: wireOutlineOf(whole),
     kerfWidth: version.kerfWidth,
     clearance: version.clearance,
     edgeMargin: version.edgeMargin,
@@ -44,8 +48,20 @@ export function presentLayout(whole: WholeLayout, names: Names): Layout {
     cutLength: version.cutLength,
     changedAt: layout.changedAt.toISOString(),
     changedBy: names(layout.changedBy),
+    cornerPlans: plans.map(({ id, strategyName, revisionNumber, layoutVersion, changedAt }) => ({
+      id,
+      strategyName,
+      revisionNumber,
+      layoutVersion: layoutVersion ?? 0,
+      changedAt: changedAt.toISOString(),
+    })),
   };
 }
+
+export const plateNameOf = ({ tag, remnant }: WholeLayout): string | null => tag ?? remnant?.name ?? null;
+
+export const wireOutlineOf = (whole: WholeLayout): Layout['outline'] =>
+  wireOutline(outlineFrom(whole), plateNameOf(whole));
 
 export const laidPartOf = ({ id, name, reading }: PartGeometry): Layout['parts'][number] => ({
   id,

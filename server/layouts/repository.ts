@@ -1,10 +1,13 @@
 import { and, desc, eq, inArray, sql } from 'drizzle-orm';
 import type { Transaction } from '../../db/database.ts';
+import { cornerPlans } from '../../db/schema/corner-plans.ts';
 import { layoutVersions } from '../../db/schema/layout-versions.ts';
 import { layouts } from '../../db/schema/layouts.ts';
 import { parts } from '../../db/schema/parts.ts';
 import { placements } from '../../db/schema/placements.ts';
 import { plates } from '../../db/schema/plates.ts';
+import { strategies } from '../../db/schema/strategies.ts';
+import { strategyRevisions } from '../../db/schema/strategy-revisions.ts';
 import type { PlacementWire } from '../../shared/layouts.ts';
 import { limits } from '../../shared/limits.ts';
 import type { DrawingReadingWire } from '../../shared/parts.ts';
@@ -71,6 +74,23 @@ export async function findLayout(tx: Transaction, id: string, version?: number):
     })),
     parts: known.filter(({ id: one }) => lying.some(({ partId }) => partId === one)),
   };
+}
+
+/** Corner plans made for any of its versions, the newest first. */
+export async function plansOfLayout(tx: Transaction, layoutId: string) {
+  return tx
+    .select({
+      id: cornerPlans.id,
+      strategyName: strategies.name,
+      revisionNumber: strategyRevisions.number,
+      layoutVersion: cornerPlans.layoutVersion,
+      changedAt: cornerPlans.changedAt,
+    })
+    .from(cornerPlans)
+    .innerJoin(strategyRevisions, eq(strategyRevisions.id, cornerPlans.revisionId))
+    .innerJoin(strategies, eq(strategies.id, strategyRevisions.strategyId))
+    .where(eq(cornerPlans.layoutId, layoutId))
+    .orderBy(desc(cornerPlans.changedAt));
 }
 
 export async function lockLayout(tx: Transaction, id: string): Promise<LayoutRow | null> {

@@ -22,6 +22,7 @@ import {
   layoutLines,
   lockLayout,
   partGeometries,
+  plansOfLayout,
   type LayoutContent,
 } from './repository.ts';
 
@@ -167,5 +168,6 @@ const invalid = (pointer: string, detail: string) =>
 async function replyWith(tx: Transaction, id: string) {
   const found = await findLayout(tx, id);
   if (!found) throw notFound('There is no such layout');
-  return { body: presentLayout(found, await namesOf(tx)), version: found.layout.version };
+  const body = presentLayout(found, await plansOfLayout(tx, id), await namesOf(tx));
+  return { body, version: found.layout.version };
 }

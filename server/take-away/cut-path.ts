@@ -9,15 +9,13 @@ const sharpLimit = 10;
 
 const roleNames = { outer: 'outline', hole: 'hole', island: 'island' } as const;
 
-/** What a stored plan asks of the cut path: its part's contours, what its corners got, its strategy's kerf and pierce, its plate. */
-export function cutPathRequestOf({ plan, part, revision }: TakenPlan): CutPathRequest {
-  const { contours, bounds } = part.reading;
-  const { skeleton } = plan;
+/** What a stored plan asks of the cut path: its contours in their order, what its corners got, its strategy's kerf and pierce, its plate. */
+export function cutPathRequestOf({ plan, planned, revision }: TakenPlan): CutPathRequest {
   const { cut, cornerRules } = revision.content;
   return {
-    contours: contours.map(({ id, role, parent, segments }) => ({
+    contours: planned.contours.map(({ id, role, parent, segments, said }) => ({
       id,
-      name: `${roleNames[role]} ${id}`,
+      name: said ?? `${roleNames[role]} ${id}`,
       role,
       parent,
       contour: { segments },
@@ -31,13 +29,13 @@ export function cutPathRequestOf({ plan, part, revision }: TakenPlan): CutPathRe
       craterRadius: revision.prediction.craterRadius,
       clearance: cornerRules.loop.clearance,
     },
-    plate: {
-      minX: bounds.min.x - skeleton.left,
-      minY: bounds.min.y - skeleton.below,
-      maxX: bounds.max.x + skeleton.right,
-      maxY: bounds.max.y + skeleton.above,
-    },
+    plate: plateOf(planned.plate),
   };
+}
+
+function plateOf(plate: TakenPlan['planned']['plate']): CutPathRequest['plate'] {
+  if (!('min' in plate)) return plate;
+  return { minX: plate.min.x, minY: plate.min.y, maxX: plate.max.x, maxY: plate.max.y };
 }
 
 /** What a corner puts into the path `beside` m from the finished edge. An ease changes feed and power, not the path. */

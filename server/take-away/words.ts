@@ -19,7 +19,7 @@ const states: Readonly<Record<RevisionState, string>> = {
   withdrawn: 'withdrawn',
 };
 
-export const planTitle = ({ part }: TakenPlan): string => `Corner plan of ${part.name}`;
+export const planTitle = ({ planned }: TakenPlan): string => `Corner plan of ${planned.name}`;
 
 /** What must stand in every file, a sentence each: of what, in which state, what the programmer must look at, the cautions. */
 export function planNotes(taken: TakenPlan, unit: CutFileUnit, problems: readonly string[], at: Date): string[] {
@@ -77,13 +77,13 @@ export function planSheet(
   problems: readonly string[],
   at: Date,
 ): Sheet {
-  const { plan, part, revision, strategyName, machine, plannedBy } = taken;
+  const { plan, planned, revision, strategyName, machine, plannedBy } = taken;
   const system = systems[unit];
   const shown = (value: number, dimension: Dimension, figures?: number) =>
     quantityText(value, dimension, system, figures === undefined ? {} : { figures }).text;
   const approved = revision.state === 'approved';
   const inward = new Map(
-    part.reading.contours.flatMap(({ id, segments }) =>
+    planned.contours.flatMap(({ id, segments }) =>
       contourCorners({ segments }).map((corner) => [cornerId(id, corner.index), cornerInward(corner)] as const),
     ),
   );
@@ -92,7 +92,7 @@ export function planSheet(
   return {
     paper: unit === 'mm' ? 'A4' : 'LETTER',
     kind: 'Corner plan',
-    title: part.name,
+    title: planned.name,
     approved,
     state: approved ? 'Approved' : `Not approved: ${states[revision.state]}`,
     block: [
@@ -118,7 +118,7 @@ export function planSheet(
       { label: 'corner plan', value: `version ${plan.version}, ${plan.id.slice(-8)}` },
       { label: 'taken away', value: momentText(at) },
     ],
-    contours: part.reading.contours.map(({ segments }) => ({ segments })),
+    contours: planned.contours.map(({ segments }) => ({ segments })),
     path,
     legend: {
       edge: 'finished edge',
@@ -180,8 +180,8 @@ function placeText({ x, y }: Point, system: UnitSystem): string {
 const extensions: Readonly<Record<TakeAwayFormat, string>> = { dxf: 'dxf', svg: 'svg', iso: 'nc', pdf: 'pdf' };
 
 /** A name for the file that every system takes: letters, figures and hyphens, and that it isn't approved. */
-export function fileName({ part, revision, plan }: TakenPlan, as: TakeAwayFormat, unit: CutFileUnit): string {
-  const name = part.name
+export function fileName({ planned, revision, plan }: TakenPlan, as: TakeAwayFormat, unit: CutFileUnit): string {
+  const name = planned.name
     .normalize('NFKD')
     .replace(/\p{M}/gu, '')
     .replace(/[^A-Za-z0-9]+/g, '-')

@@ -58,6 +58,7 @@ export const planOf = (more: Partial<CornerPlan> = {}): CornerPlan => ({
     name: 'Bracket',
     contours: [{ id: '0', depth: 0, role: 'outer', parent: null, layer: 'CUT', segments }],
   },
+  layout: null,
   revision: {
     id: ids.revision,
     number: 3,

@@ -99,6 +99,7 @@ function layoutOf(more: Partial<LayoutForm> = {}, version = 3): Layout {
     cutLength: judged.cutLength,
     changedAt: '2031-03-01T09:00:00Z',
     changedBy: { id: ids.other, name: 'Programmer' },
+    cornerPlans: [],
   };
 }
 

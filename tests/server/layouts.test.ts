@@ -2,13 +2,16 @@ import { readFileSync } from 'node:fs';
 import path from 'node:path';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
 import { v7 as newId } from 'uuid';
+import { cardEndpoints } from '../../shared/cards.ts';
 import { laidOut, layoutEndpoints, type Layout } from '../../shared/layouts.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { plateEndpoints } from '../../shared/plates.ts';
 import { recordEndpoints } from '../../shared/record.ts';
+import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
+import { cutPathEndpoints } from '../../shared/take-away.ts';
 import { cutOrderFault, partMoved, partSequence } from '../../strategy/path/plate/index.ts';
 import { connected } from '../support/database.ts';
-import { made, makePlant, testPlate, type TestPlant } from '../support/plant.ts';
+import { made, makeApproved, makePlant, testPlate, type TestPlant } from '../support/plant.ts';
 import { startTestServer, type Caller, type TestServer } from '../support/server.ts';
 
 let server: TestServer;
@@ -246,5 +249,124 @@ describe('a version of a layout', () => {
   ])('%s, whoever tries', async (_what, statement, why) => {
     const layout = await begin();
     await expect(asOwner(layout.id, statement)).rejects.toThrow(why);
+  });
+});
+
+describe('a corner plan of a layout', () => {
+  const nothing = { left: 0, right: 0, above: 0, below: 0 };
+  const choices = { thickness: 0.0185, plateTemperature: 300, skeleton: nothing, overrides: {} };
+  let revisionId: string;
+  beforeAll(async () => {
+    ({ id: revisionId } = await makeApproved(plant, { gradeGroup: 'layouts' }));
+  });
+  const plan = async (layoutId: string, more: object = {}) =>
+    made(
+      programmer.call(cornerPlanEndpoints.add, {
+        body: { id: newId(), layoutId, revisionId, ...choices, ...more },
+      }),
+    );
+
+  test('plans the corners of all pieces where they lie, in the order in which they are cut', async () => {
+    const layout = await begin();
+    const { body } = await plan(layout.id, { skeleton: { ...nothing, left: 0.2 } });
+    expect(body.part).toMatchObject({ id: layout.id, name: 'Brackets' });
+    expect(body.part.contours.map(({ id }) => id)).toEqual(layout.order);
+    expect(body.layout).toMatchObject({ id: layout.id, version: 1, newest: 1, outline: { width: 3, height: 1.5 } });
+    // a layout has its own plate
+    expect(body.skeleton).toEqual(nothing);
+    const pieces = new Set(body.corners.map(({ contourId }) => contourId.split('.')[0]));
+    expect([...pieces]).toEqual(['1', '2', '3']);
+    expect(body.corners.some(({ treatment }) => treatment !== 'leave')).toBe(true);
+    const { body: again } = await made(programmer.call(layoutEndpoints.get, { params: { layoutId: layout.id } }));
+    expect(again.cornerPlans).toMatchObject([{ id: body.id, layoutVersion: 1 }]);
+  });
+
+  test('says by name what stands in a loop’s way', async () => {
+    const apart = 4e-3;
+    const lies = laidOut((await begin()).parts, [piece(1)]);
+    const width = (lies[0]?.box.maxX ?? 0) - (lies[0]?.box.minX ?? 0);
+    const layout = await begin({
+      placements: [piece(1, { at: { x: 0.1, y: 0.1 } }), piece(2, { at: { x: 0.1 + width + apart, y: 0.1 } })],
+    });
+    const { body } = await plan(layout.id);
+    const whys = body.corners.flatMap(({ options }) => options.map(({ why }) => why)).join(' | ');
+    expect(whys).toMatch(/outline of part [12], Bracket/);
+  });
+
+  test('stands on what was planned when the plate is laid out anew, until it is planned again', async () => {
+    const layout = await begin();
+    const first = await plan(layout.id);
+    const treated = first.body.corners.find(({ contourId }) => contourId.startsWith('3.'));
+    if (!treated) throw new Error('the third piece has no corner');
+    const chosen = await made(
+      programmer.call(cornerPlanEndpoints.redo, {
+        params: { planId: first.body.id },
+        body: { revisionId, ...choices, overrides: { [treated.id]: 'leave' } },
+        version: first.version,
+      }),
+    );
+    await made(
+      programmer.call(layoutEndpoints.change, {
+        params: { layoutId: layout.id },
+        body: { ...formOf(layout), placements: layout.placements.slice(0, 2) },
+        version: 1,
+      }),
+    );
+    const params = { planId: first.body.id };
+    const seen = await made(programmer.call(cornerPlanEndpoints.get, { params }));
+    expect(seen.body.layout).toMatchObject({ version: 1, newest: 2 });
+    expect(seen.body.part.contours).toEqual(first.body.part.contours);
+    // what was chosen for a piece that is gone goes with it
+    const redone = await made(
+      programmer.call(cornerPlanEndpoints.redo, {
+        params,
+        body: { revisionId, ...choices, overrides: chosen.body.overrides },
+        version: chosen.version,
+      }),
+    );
+    expect(redone.body.layout).toMatchObject({ version: 2, newest: 2 });
+    expect(redone.body.overrides).toEqual({});
+    expect(new Set(redone.body.corners.map(({ contourId }) => contourId.split('.')[0]))).toEqual(new Set(['1', '2']));
+  });
+
+  test('is of a part or a layout, of one, and of a layout with something on it', async () => {
+    const [layout, empty] = [await begin(), await begin({ placements: [] })];
+    const add = (body: object) =>
+      programmer.call(cornerPlanEndpoints.add, { body: { id: newId(), revisionId, ...choices, ...body } });
+    expect((await add({})).status).toBe(400);
+    expect((await add({ layoutId: layout.id, partId: bracketId })).status).toBe(400);
+    expect((await add({ layoutId: newId() })).status).toBe(404);
+    expect((await add({ layoutId: empty.id })).problem.code).toBe('wrong-state');
+    await expect(
+      connected(server.database.ownerUrl, async (client) => {
+        await client.query('begin');
+        await client.query("select set_config('app.plant_id', $1, true)", [plant.id]);
+        await client.query('update corner_plans set part_id = null, layout_id = null');
+      }),
+    ).rejects.toThrow(/corner_plans_of_one|corner_plans_layout_version/);
+  });
+
+  test('is named on the card, read by an operator, and taken away as a cut path in its order', async () => {
+    const layout = await begin();
+    const { body } = await plan(layout.id);
+    const operator = await plant.as('operator');
+    const query = { machineId: plant.machineId, gradeGroup: 'layouts', thickness: 19_000 };
+    const { match } = (await made(operator.call(cardEndpoints.get, { query }))).body;
+    if (match.kind !== 'approved') throw new Error('no strategy is approved');
+    expect(match.cornerPlans.find(({ id }) => id === body.id)).toMatchObject({ partId: null, partName: 'Brackets' });
+    expect((await operator.call(cornerPlanEndpoints.get, { params: { planId: body.id } })).status).toBe(200);
+    const taken = await programmer.call(cutPathEndpoints.take, {
+      params: { planId: body.id },
+      query: { as: 'iso', unit: 'mm' },
+    });
+    expect(taken.status, JSON.stringify(taken.problem)).toBe(200);
+    const text = taken.bytes.toString('ascii');
+    const places = layout.order.map((id) => {
+      const [number, contour] = id.split('.');
+      const name = contour === '1' ? `outline of part ${number}` : `hole ${Number(contour) - 1} of part ${number}`;
+      return text.toLowerCase().indexOf(name);
+    });
+    expect(places.every((place) => place >= 0)).toBe(true);
+    expect([...places].sort((a, b) => a - b)).toEqual(places);
   });
 });
