@@ -42,6 +42,8 @@ export function PlanTotals({ plan }: { plan: CornerPlan }) {
           { label: cornerText.block.corners, value: String(totals.corners) },
           { label: cornerText.block.loops, value: String(totals.loops) },
           { label: cornerText.block.dwells, value: String(totals.dwells) },
+          ...(totals.eases ? [{ label: cornerText.block.eases, value: String(totals.eases) }] : []),
+          ...(totals.rounds ? [{ label: cornerText.block.rounds, value: String(totals.rounds) }] : []),
           { label: cornerText.block.trouble, value: String(totals.trouble) },
           { label: cornerText.block.time, value: quantityText(totals.addedTime, 'time', system, { figures: 3 }).text },
           {
