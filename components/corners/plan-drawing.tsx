@@ -155,11 +155,22 @@ export function PlanDrawing({
   );
 }
 
+/** About what a pierce's crater takes of the plate, m; never larger than a finger's dot, never lost. */
+const pierceSize = 5e-3;
+
 /** Where it pierces, if it does so beside the contours. */
 function Pierces({ space, path: { runs } }: { space: DrawingSpace; path: CutPath }) {
   const places = runs.flatMap(({ pierce, pieces }) => (pieces[0]?.kind === 'lead-in' ? [space.at(pierce)] : []));
   if (places.length === 0) return null;
-  return <Path testID="pierces" d={dotsData(places, 3)} stroke={roles.ember} strokeWidth={7} strokeLinecap="round" />;
+  return (
+    <Path
+      testID="pierces"
+      d={dotsData(places, 3)}
+      stroke={roles.ember}
+      strokeWidth={Math.min(7, Math.max(2.5, pierceSize * space.scale))}
+      strokeLinecap="round"
+    />
+  );
 }
 
 /** A badge a corner. Choosing one changes that one and the one before, and leaves the others as they are. */

@@ -238,8 +238,8 @@ export function DrawingView({
                 strokeWidth={1}
                 strokeDasharray={centreLine}
               />
-              <Dots data={dots(false)} width={3.6} />
-              <Dots data={dots(true)} width={6} />
+              <Dots data={dots(false)} width={3} />
+              <Dots data={dots(true)} width={5} />
               {/* what matters most is drawn last */}
               {placed
                 .filter(({ full }) => full)
