@@ -1,4 +1,5 @@
 import type { Contour, Point } from '../../strategy/path/index.ts';
+import { seededNumbers } from '../bench/line.ts';
 import {
   contourArea,
   contourReverse,
@@ -11,16 +12,8 @@ import {
   segmentStart,
 } from '../../strategy/path/index.ts';
 
-/** Evenly spread numbers in [0, 1) from a seed: the same seed, the same contours. mulberry32, 32 bits of state. */
-export function seeded(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (state + 0x6d2b79f5) >>> 0;
-    let t = Math.imul(state ^ (state >>> 15), 1 | state);
-    t = (t + Math.imul(t ^ (t >>> 7), 61 | t)) ^ t;
-    return ((t ^ (t >>> 14)) >>> 0) / 4294967296;
-  };
-}
+/** Numbers in [0, 1) from a seed: the same seed, the same contours. */
+export const seeded = seededNumbers;
 
 /** A closed contour through points, with bulges from each to the next (0 straight). */
 export const bulged = (points: readonly Point[], bulges: readonly number[] = []): Contour => ({

@@ -1,7 +1,7 @@
 import Flatbush from 'flatbush';
 import { segmentCrossesRay } from '../contour.ts';
 import { segmentMeetings, segmentPointDistance } from '../distance.ts';
-import type { Point } from '../point.ts';
+import type { Box, Point } from '../point.ts';
 import {
   boxGrow,
   pointAdd,
@@ -91,10 +91,12 @@ function cutAtMeetings(pieces: readonly ParallelPiece[], tolerance: number): { s
         cut(k, at, place);
       }
       // ends that touch the other piece: coinciding pieces meet nowhere else, and rounding may hide a touch
+      const other = boxes[k];
       endsOfB.forEach((end, side) => {
-        if (segmentPointDistance(a.segment, end) <= tolerance) cut(i, end, 2 * k + side);
+        if (boxHolds(grown, end) && segmentPointDistance(a.segment, end) <= tolerance) cut(i, end, 2 * k + side);
       });
       endsOfA.forEach((end, side) => {
+        if (!other || !boxHolds(boxGrow(other, tolerance), end)) return;
         if (segmentPointDistance(b.segment, end) <= tolerance) cut(k, end, 2 * i + side);
       });
     }
@@ -118,37 +120,47 @@ function cutAtMeetings(pieces: readonly ParallelPiece[], tolerance: number): { s
   return { stretches, nodes: places.length };
 }
 
-/** A number for every place, the same for places within the tolerance of each other. */
+const boxHolds = (box: Box, { x, y }: Point): boolean =>
+  x >= box.minX && x <= box.maxX && y >= box.minY && y <= box.maxY;
+
+/** A number for every place, the same for places within the tolerance of each other and for chains of such places. */
 function clusters(places: readonly Point[], tolerance: number): Int32Array {
-  const index = new Flatbush(places.length);
-  for (const { x, y } of places) index.add(x, y, x, y);
-  index.finish();
-  const node = new Int32Array(places.length).fill(-1);
-  for (let i = 0; i < places.length; i++) {
-    if ((node[i] ?? 0) >= 0) continue;
-    node[i] = i;
-    const open = [i];
-    for (let k = open.pop(); k !== undefined; k = open.pop()) {
-      const p = places[k];
-      if (!p) continue;
-      for (const near of index.search(p.x - tolerance, p.y - tolerance, p.x + tolerance, p.y + tolerance)) {
-        if ((node[near] ?? 0) >= 0) continue;
-        node[near] = i;
-        open.push(near);
-      }
+  // sorted along a direction that no drawing is laid out in, so that few places stand level with each other
+  const along = Float64Array.from(places, ({ x, y }) => 0.8191520442889918 * x + 0.573576436351046 * y);
+  const sorted = Int32Array.from(places, (_, i) => i).sort((a, b) => (along[a] ?? 0) - (along[b] ?? 0));
+  const parent = Int32Array.from(places, (_, i) => i);
+  const root = (i: number): number => {
+    let at = i;
+    for (let up = parent[at] ?? at; up !== at; up = parent[at] ?? at) at = up;
+    parent[i] = at;
+    return at;
+  };
+  for (let s = 0; s < sorted.length; s++) {
+    const i = sorted[s] ?? 0;
+    const p = places[i];
+    for (let next = s + 1; p && next < sorted.length; next++) {
+      const k = sorted[next] ?? 0;
+      const q = places[k];
+      if (!q || (along[k] ?? 0) - (along[i] ?? 0) > tolerance) break;
+      if (Math.abs(p.x - q.x) > tolerance || Math.abs(p.y - q.y) > tolerance) continue;
+      const [a, b] = [root(i), root(k)];
+      parent[Math.max(a, b)] = Math.min(a, b);
     }
   }
-  return node;
+  return parent.map((_, i) => root(i));
 }
 
-/** Whether a place is scrap that the path may bound: outside the part, the distance away from it, behind no sharp corner. */
+/**
+ * Whether a place is scrap that the path may bound: outside the part, the distance away from it, behind no sharp corner. A place on a straight way to a
+ * sharp corner's tip lies `beyond` the distance.
+ */
 function freeSpace(
   contour: readonly Segment[],
   partIsInside: boolean,
   kites: readonly Kite[],
   distance: number,
   tolerance: number,
-): (place: Point) => boolean {
+): (place: Point, beyond: boolean) => boolean {
   const edges = new Flatbush(contour.length);
   for (const segment of contour) {
     const box = segmentBox(segment);
@@ -164,7 +176,7 @@ function freeSpace(
   corners?.finish();
 
   const least = distance + tolerance / 4;
-  return (place) => {
+  return (place, beyond) => {
     const { x, y } = place;
     const near = edges.search(x - distance, y - distance, x + distance, y + distance);
     for (const i of near) {
@@ -175,6 +187,8 @@ function freeSpace(
       const kite = kites[i];
       if (kite && kiteContains(kite, place)) return false;
     }
+    // no edge is nearer than the one that the place belongs to? Then it lies on that edge's side, which is the scrap's
+    if (!beyond) return true;
     let inside = false;
     // a little higher than the ray: an arc's end is where the next segment starts, up to rounding outside its own box
     for (const i of edges.search(x, y - tolerance, Infinity, y + tolerance)) {
@@ -200,7 +214,7 @@ function keepFree(
   stretches: readonly Stretch[],
   nodes: number,
   pieces: readonly ParallelPiece[],
-  isFree: (place: Point) => boolean,
+  isFree: (place: Point, beyond: boolean) => boolean,
   tolerance: number,
 ): Stretch[][] {
   const arrivals = new Int32Array(nodes);
@@ -223,7 +237,8 @@ function keepFree(
     if (!piece) return false;
     const t = (longest.t0 + longest.t1) / 2;
     const right = pointScale(pointLeft(segmentTangentAt(piece.segment, t)), -tolerance / 2);
-    return isFree(pointAdd(segmentPointAt(piece.segment, t), right));
+    const beyond = piece.source.kind === 'corner' && piece.segment.kind === 'line';
+    return isFree(pointAdd(segmentPointAt(piece.segment, t), right), beyond);
   });
 }
 
