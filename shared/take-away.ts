@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import type { CutPiece } from '../strategy/path/cut-path.ts';
 import type { BlockFrame, CutFileUnit } from '../strategy/path/drawing/write/index.ts';
 import { idSchema, pointSchema, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
