@@ -1,4 +1,5 @@
 import type { StrategyContent } from '../../shared/strategies.ts';
+import { easeDefaults, roundDefaults } from '../../strategy/corners/rules.ts';
 import type { MachineProfile } from '../../strategy/machine.ts';
 import { pierceStageDefaults } from '../../strategy/pierce/index.ts';
 import { demoId } from './ids.ts';
@@ -34,6 +35,8 @@ type Wish = {
   readonly focus: number; // mm
   readonly hottest: number; // °C
   readonly loopRadius: number; // mm
+  /** Corners may be eased and a little rounded too. */
+  readonly gentle?: boolean;
 };
 
 /** Stages come from the designer's own defaults, so that every number on the screen is computed, none is remembered. */
@@ -74,6 +77,7 @@ function content(plant: string, wish: Wish): StrategyContent {
         clearance: 0.002,
       },
       dwell: { allowed: true, maxDuration: 12, restart: 2 },
+      ...(wish.gentle ? { ease: { ...easeDefaults }, round: { ...roundDefaults } } : {}),
     },
   };
 }
@@ -103,6 +107,7 @@ const bearing = {
   focus: 4,
   hottest: 120,
   loopRadius: 4,
+  gentle: true,
 };
 const lug = {
   machine: two,
