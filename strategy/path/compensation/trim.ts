@@ -68,25 +68,29 @@ function cutAtMeetings(pieces: readonly ParallelPiece[], tolerance: number): { s
   const ends = pieces.map(({ segment }) => [segmentStart(segment), segmentEnd(segment)] as const);
   const lengths = pieces.map(({ segment }) => segmentLength(segment));
 
-  const places: Point[] = ends.flat();
-  /** Beside the two ends: share of the length and number of the place. */
+  // each piece's start and end, then every meeting
+  const places = new Places(2 * pieces.length);
+  /** Between the two ends: share of the length and number of the place. */
   const cuts: { t: number; place: number }[][] = pieces.map(() => []);
   const cut = (i: number, at: Point, place: number): void => {
     const piece = pieces[i];
     const length = lengths[i] ?? 0;
     if (!piece) return;
     const t = shareAt(piece.segment, at);
-    if (t * length > tolerance && (1 - t) * length > tolerance) cuts[i]?.push({ t, place });
+    if (t * length <= tolerance) places.join(place, 2 * i);
+    else if ((1 - t) * length <= tolerance) places.join(place, 2 * i + 1);
+    else cuts[i]?.push({ t, place });
   };
   for (let i = 0; i < pieces.length; i++) {
     const [a, box, endsOfA] = [pieces[i], boxes[i], ends[i]];
     if (!a || !box || !endsOfA) continue;
     const grown = boxGrow(box, tolerance);
+    if (pointDistance(...endsOfA) <= tolerance) places.join(2 * i, 2 * i + 1);
     for (const k of index.search(grown.minX, grown.minY, grown.maxX, grown.maxY, (other) => other > i)) {
       const [b, endsOfB] = [pieces[k], ends[k]];
       if (!b || !endsOfB) continue;
       for (const at of segmentMeetings(a.segment, b.segment)) {
-        const place = places.push(at) - 1;
+        const place = places.add();
         cut(i, at, place);
         cut(k, at, place);
       }
@@ -101,53 +105,62 @@ function cutAtMeetings(pieces: readonly ParallelPiece[], tolerance: number): { s
       });
     }
   }
-  const node = clusters(places, tolerance);
+  const inOrder = cuts.map((own, piece) => {
+    own.sort((a, b) => a.t - b.t);
+    own.forEach(({ t, place }, k) => {
+      const before = own[k - 1];
+      if (before && (t - before.t) * (lengths[piece] ?? 0) <= tolerance) places.join(before.place, place);
+    });
+    return own;
+  });
   const stretches: Stretch[] = [];
-  pieces.forEach((_, piece) => {
+  inOrder.forEach((own, piece) => {
     const length = lengths[piece] ?? 0;
-    const own = (cuts[piece] ?? []).sort((a, b) => a.t - b.t);
     const stops = [{ t: 0, place: 2 * piece }, ...own, { t: 1, place: 2 * piece + 1 }];
     for (let s = 1; s < stops.length; s++) {
       const [a, b] = [stops[s - 1], stops[s]];
       if (!a || !b) continue;
-      const [from, to] = [node[a.place] ?? 0, node[b.place] ?? 0];
+      const [from, to] = [places.of(a.place), places.of(b.place)];
       const stretch = { piece, t0: a.t, t1: b.t, from, to, length: (b.t - a.t) * length };
       // too short to be seen: its two ends are one place
       if (from === to && stretch.length <= 4 * tolerance) continue;
       stretches.push(stretch);
     }
   });
-  return { stretches, nodes: places.length };
+  return { stretches, nodes: places.count };
 }
 
 const boxHolds = (box: Box, { x, y }: Point): boolean =>
   x >= box.minX && x <= box.maxX && y >= box.minY && y <= box.maxY;
 
-/** A number for every place, the same for places within the tolerance of each other and for chains of such places. */
-function clusters(places: readonly Point[], tolerance: number): Int32Array {
-  // sorted along a direction that no drawing is laid out in, so that few places stand level with each other
-  const along = Float64Array.from(places, ({ x, y }) => 0.8191520442889918 * x + 0.573576436351046 * y);
-  const sorted = Int32Array.from(places, (_, i) => i).sort((a, b) => (along[a] ?? 0) - (along[b] ?? 0));
-  const parent = Int32Array.from(places, (_, i) => i);
-  const root = (i: number): number => {
-    let at = i;
-    for (let up = parent[at] ?? at; up !== at; up = parent[at] ?? at) at = up;
-    parent[i] = at;
-    return at;
-  };
-  for (let s = 0; s < sorted.length; s++) {
-    const i = sorted[s] ?? 0;
-    const p = places[i];
-    for (let next = s + 1; p && next < sorted.length; next++) {
-      const k = sorted[next] ?? 0;
-      const q = places[k];
-      if (!q || (along[k] ?? 0) - (along[i] ?? 0) > tolerance) break;
-      if (Math.abs(p.x - q.x) > tolerance || Math.abs(p.y - q.y) > tolerance) continue;
-      const [a, b] = [root(i), root(k)];
-      parent[Math.max(a, b)] = Math.min(a, b);
-    }
+/** Numbers of places that turn out to be one: each stands for the lowest of those joined with it. */
+class Places {
+  private readonly parent: number[];
+
+  constructor(count: number) {
+    this.parent = Array.from({ length: count }, (_, i) => i);
   }
-  return parent.map((_, i) => root(i));
+
+  get count(): number {
+    return this.parent.length;
+  }
+
+  /** A new place's number. */
+  add(): number {
+    return this.parent.push(this.parent.length) - 1;
+  }
+
+  of(place: number): number {
+    let at = place;
+    for (let up = this.parent[at] ?? at; up !== at; up = this.parent[at] ?? at) at = up;
+    this.parent[place] = at;
+    return at;
+  }
+
+  join(one: number, other: number): void {
+    const [a, b] = [this.of(one), this.of(other)];
+    this.parent[Math.max(a, b)] = Math.min(a, b);
+  }
 }
 
 /**

@@ -165,7 +165,7 @@ describe('the path beside a contour', () => {
           });
         }
       }),
-      { numRuns: runs(40, 5000) },
+      { numRuns: runs(30, 5000) },
     );
   });
 
@@ -198,7 +198,7 @@ describe('the path beside a contour', () => {
         for (const p of places(contour)) expect(distanceFrom(back.contour, p)).toBeLessThan(1e-9);
         for (const p of places(back.contour)) expect(distanceFrom(contour, p)).toBeLessThan(1e-9);
       }),
-      { numRuns: runs(60, 3000) },
+      { numRuns: runs(40, 3000) },
     );
     expect(compared).toBeGreaterThan(5);
   });
