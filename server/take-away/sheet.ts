@@ -14,7 +14,6 @@ export type SheetCorner = {
   readonly inward: Point;
   /** Inside the part, rad. */
   readonly angle: number;
-  readonly treatment: string;
   /** A row of the table, a text for each of `columns` but the first, which is the corner's number. */
   readonly row: readonly string[];
   /** What the programmer must look at. */

@@ -136,7 +136,6 @@ export function planSheet(
         at: corner.at,
         inward: inward.get(corner.id) ?? { x: 0, y: 0 },
         angle: corner.angle,
-        treatment: corner.treatment,
         row: [
           placeText(corner.at, system),
           quantityText(corner.angle, 'angle', system).text,
@@ -150,7 +149,7 @@ export function planSheet(
         caution: corner.caution ? sentence(corner.caution) : null,
       };
     }),
-    noCorners: 'The part has no corner below the angle that the rules treat.',
+    noCorners: 'No corner here is below the angle that the rules treat.',
     notes: [stateSentence(taken), ...easeSentence(taken), ...problems, ...takeAwayCautions, hazards],
     foot: `${takeAwayCautions[0]} ${takeAwayCautions[1]}`,
     at,
