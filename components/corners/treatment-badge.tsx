@@ -28,7 +28,7 @@ export function BadgeShape({ treatment, trouble = false, chosen = false }: Badge
       )}
       {treatment === 'ease' && (
         <>
-          <Path d="M0 -13 13 0 0 13 -13 0Z" fill={roles.sheet} stroke={edge} strokeWidth={weight} />
+          <Path d="M0 -12 12 0 0 12 -12 0Z" fill={roles.sheet} stroke={edge} strokeWidth={weight} />
           <Path d="M-7 -2.6 0 -0.5 7 -2.6V2.6L0 0.5 -7 2.6Z" fill={roles.ink} />
         </>
       )}

@@ -26,6 +26,7 @@ import type {
   EasedPath,
   PlanContour,
 } from './case.ts';
+import type { Decision } from './decide.ts';
 import { decide } from './decide.ts';
 import { loopOption, mostReach } from './loop-option.ts';
 import { dwellOption, easeOption, leaveOption, roundOption } from './options.ts';
@@ -121,7 +122,7 @@ export function cornerPlan(request: CornerPlanRequest): CornerPlan {
   const prospects = contours.flatMap((contour) => prospectsOf(contour, request));
   const places = loopPlaces(
     prospects.map(({ onPath, corner, id }) => {
-      const tried = treated(corner, rules.treatBelowAngle) || overrides?.[id] === 'loop';
+      const tried = treated(corner, rules.treatBelowAngle) || (overrides?.[id] === 'loop' && !doublesBack(corner));
       return { at: onPath.point, reach: tried ? mostReach(corner, request) : 0 };
     }),
   );
@@ -161,10 +162,16 @@ function plateOf(plate: CornerPlanRequest['plate']): FieldPlate | null {
   return { minX: plate.min.x, minY: plate.min.y, maxX: plate.max.x, maxY: plate.max.y };
 }
 
-const treated = (corner: Corner, belowAngle: number): boolean => corner.convex && corner.angle < belowAngle;
+const treated = (corner: Corner, belowAngle: number): boolean =>
+  corner.convex && corner.angle < belowAngle && !doublesBack(corner);
+
+const doublesBack = ({ angle }: Corner): boolean => angle < spike || angle > 2 * Math.PI - spike;
 
 /** A corner with its place on the path, before anything is known of its heat. */
 export type Prospect = Omit<Case, 'without' | 'before'>;
+
+/** Sharper than this a tip, or a notch, is a spike of no use: within any kerf for centimetres, rad (about 2°). */
+const spike = 0.04;
 
 /** The corners of a contour in the order of travel. */
 export function prospectsOf(contour: PlanContour, { cut }: Pick<CornerPlanRequest, 'cut'>): Prospect[] {
@@ -182,7 +189,8 @@ export function prospectsOf(contour: PlanContour, { cut }: Pick<CornerPlanReques
     return way > 0 ? way : way + whole;
   };
   return corners.map((corner, i) => {
-    const { point: finished, incoming, outgoing, angle, fillet, index } = corner;
+    const { point: finished, incoming, outgoing, fillet, index } = corner;
+    const angle = Math.min(2 * Math.PI - spike, Math.max(spike, corner.angle));
     const point = cornerOfPath({ point: finished, incoming, outgoing, angle }, cut.kerfWidth);
     return {
       id: `c${contour.id}-${index}`,
@@ -230,7 +238,8 @@ function planCorner(prospect: Prospect, context: Context): { planned: PlannedCor
   const asked = overrides?.[id];
   const sharp = treated(corner, rules.treatBelowAngle);
   const candidates: Candidate[] = [leaveOption(found, context.limit)];
-  if (sharp || (asked && asked !== 'leave')) {
+  const usable = !doublesBack(corner);
+  if (usable && (sharp || (asked && asked !== 'leave'))) {
     candidates.push(
       loopOption(found, context),
       dwellOption(found, context),
@@ -238,7 +247,9 @@ function planCorner(prospect: Prospect, context: Context): { planned: PlannedCor
       roundOption(found, context),
     );
   }
-  const { chosen, why, problem } = decide(found, candidates, asked, sharp, rules, context.limit);
+  const { chosen, why, problem } = usable
+    ? decide(found, candidates, asked, sharp, rules, context.limit)
+    : doubledBack(corner, candidates[0] ?? leaveOption(found, context.limit));
 
   const returnWith = chosen.returnWith ?? without;
   const loop = chosen.loop ? plannedLoop(onPath, chosen.loop, cut.kerfWidth) : undefined;
@@ -275,6 +286,17 @@ function planCorner(prospect: Prospect, context: Context): { planned: PlannedCor
     ...(caution ? { caution } : {}),
   };
   return { planned, loop: chosen.loop };
+}
+
+function doubledBack({ convex }: Corner, leave: Candidate): Decision {
+  const why = convex
+    ? 'the contour doubles back in a spike without width'
+    : 'the contour doubles back in a slit without width';
+  return {
+    chosen: leave,
+    why,
+    problem: `${why}: no path goes round it, and nothing can be said of its heat; mend the drawing`,
+  };
 }
 
 function drawnOf({ corner, onPath, drawnRound }: Prospect): PlannedCorner['drawn'] {

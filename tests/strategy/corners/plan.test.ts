@@ -28,6 +28,7 @@ import {
   segmentPointDistance,
 } from '../../../strategy/path/index.ts';
 import { drawingRead } from '../../../strategy/path/drawing/index.ts';
+import { runs } from '../../support/runs.ts';
 
 const polygon = (points: readonly Point[]): Contour => ({
   segments: points.map((p, i) => lineBetween(p, points[(i + 1) % points.length] ?? p)),
@@ -763,5 +764,59 @@ describe('the least wait', () => {
     expect(leastDwell(() => 300, 400, 4)).toBe(0);
     expect(leastDwell(() => 500, 400, 4)).toBe(4);
     expect(() => leastDwell(() => 500, 400, 0)).toThrow(/longest dwell 0 s/);
+  });
+});
+
+describe('a contour that doubles back', () => {
+  const rulesOfAll: CornerRules = {
+    ...rules,
+    dwell: { allowed: true, maxDuration: 4, restart: 0 },
+    ease: { allowed: true, length: 5e-3, feedShare: 0.4, powerShare: 0.4 },
+    round: { allowed: true, radius: 1e-3, tolerance: 3e-4 },
+  };
+  const spiked = polygon([
+    { x: 0, y: 0 },
+    { x: 0.1, y: 0 },
+    { x: 0.05, y: 0 },
+    { x: 0.05, y: 0.05 },
+  ]);
+
+  it('in a spike is named there, whatever is asked for, and the other corners are planned', () => {
+    for (const asked of ['loop', 'dwell', 'ease', 'round', 'leave'] as const) {
+      const { corners } = plan({
+        contours: [{ id: '1', contour: spiked, role: 'outer' }],
+        rules: rulesOfAll,
+        overrides: { 'c1-1': asked },
+      });
+      const spike = corners.find(({ index }) => index === 1);
+      expect(spike?.treatment).toBe('leave');
+      expect(spike?.problem).toContain('doubles back in a spike without width');
+      expect(corners.length).toBeGreaterThan(1);
+      expect(JSON.stringify(corners)).not.toContain('null,"y"');
+    }
+  });
+
+  it('or is otherwise of no use never stops a plan or leaves a number out of it', () => {
+    const coordinate = fc.integer({ min: 0, max: 20 }).map((i) => i * 5e-3);
+    const place = fc.record({ x: coordinate, y: coordinate });
+    const treatments = ['loop', 'dwell', 'ease', 'round', 'leave'] as const;
+    fc.assert(
+      fc.property(fc.array(place, { minLength: 3, maxLength: 9 }), fc.constantFrom(...treatments), (points, asked) => {
+        const contours = [{ id: '1', contour: polygon(points), role: 'outer' }] as const;
+        const ids = plan({ contours, rules: rulesOfAll }).corners.map(({ id }) => id);
+        const { corners } = plan({
+          contours,
+          rules: rulesOfAll,
+          overrides: Object.fromEntries(ids.map((id) => [id, asked])),
+        });
+        // what JSON can't say it writes as null
+        const numbers = JSON.stringify(
+          corners.map(({ options: _options, drawn: _drawn, loop, ...rest }) => [rest, loop?.segments]),
+        );
+        expect(numbers).not.toMatch(/:null[,}]/);
+        for (const corner of corners) cornerInsert(corner);
+      }),
+      { numRuns: runs(60, 1000) },
+    );
   });
 });
