@@ -1,7 +1,7 @@
 import type { PlacementArray } from '../../strategy/path/plate/index.ts';
 import { demoId } from './ids.ts';
 import { demoPlates } from './materials.ts';
-import { demoParts } from './parts.ts';
+import { approvedDemoRevision, demoParts } from './parts.ts';
 
 /** Between the boxes of neighbours, m: two kerfs and a little more than the clearance. */
 const gap = 0.014;
@@ -17,6 +17,7 @@ type DemoLayout = {
   readonly kerfWidth: number; // m
   readonly clearance: number; // m
   readonly edgeMargin: number; // m
+  readonly plan: { readonly id: string; readonly revisionId: string; readonly thickness: number }; // m
   readonly arrays: readonly { readonly partId: string; readonly array: PlacementArray }[];
 };
 
@@ -31,6 +32,11 @@ export function demoLayout(): DemoLayout {
     kerfWidth: 7e-4,
     clearance: 0.012,
     edgeMargin: 0.012,
+    plan: {
+      id: demoId('quay plan layout footbridge'),
+      revisionId: approvedDemoRevision('Bearing plates 20, No. 2'),
+      thickness: 0.02,
+    },
     arrays: [
       array(demoParts.bearing, 2, 2, 0.015, 0.015),
       array(demoParts.bracket, 3, 1, 0.845, 0.015, true),

@@ -23,17 +23,19 @@ export type DemoCornerPlan = {
 
 const skeleton = 0.025;
 
+/** The revision of a demo strategy that is approved. */
+export function approvedDemoRevision(name: string): string {
+  const revisions = demoStrategies().quay.find((strategy) => strategy.name === name)?.revisions ?? [];
+  const last = revisions.filter(({ fate }) => fate.approve).at(-1);
+  if (!last) throw new RangeError(`no demo strategy ${name} is approved`);
+  return last.id;
+}
+
 export function demoCornerPlans(): readonly DemoCornerPlan[] {
-  const approved = (name: string): string => {
-    const revisions = demoStrategies().quay.find((strategy) => strategy.name === name)?.revisions ?? [];
-    const last = revisions.filter(({ fate }) => fate.approve).at(-1);
-    if (!last) throw new RangeError(`no demo strategy ${name} is approved`);
-    return last.id;
-  };
   const plan = (of: { id: string; name: string }, strategy: string, thickness: number, plateTemperature: number) => ({
     id: demoId(`quay plan ${of.name} ${strategy}`),
     partId: of.id,
-    revisionId: approved(strategy),
+    revisionId: approvedDemoRevision(strategy),
     thickness,
     plateTemperature,
     skeleton,

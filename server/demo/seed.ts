@@ -256,28 +256,26 @@ async function addWork(as: Cast): Promise<void> {
   }
 }
 
-/** A plate layout of the parts above. */
+/** A plate layout of the parts above, and its corners planned. */
 async function addLayout(programmer: Client): Promise<void> {
-  const { id, name, plateId, kerfWidth, clearance, edgeMargin, arrays } = demoLayout();
-  if (await programmer.find(layoutEndpoints.get, { layoutId: id })) return;
-  const placements: PlacementWire[] = [];
-  for (const { partId, array } of arrays) {
-    const part = await programmer.call(partEndpoints.get, { params: { partId } });
-    if (!part) throw new Error(`the demo part ${partId} is not there`);
-    const laid = laidPart({ id: part.id, name: part.name, contours: part.reading.contours });
-    placements.push(...placementArray(laid, array, placements.length + 1));
+  const { id, name, plateId, kerfWidth, clearance, edgeMargin, arrays, plan } = demoLayout();
+  if (!(await programmer.find(layoutEndpoints.get, { layoutId: id }))) {
+    const placements: PlacementWire[] = [];
+    for (const { partId, array } of arrays) {
+      const part = await programmer.call(partEndpoints.get, { params: { partId } });
+      if (!part) throw new Error(`the demo part ${partId} is not there`);
+      const laid = laidPart({ id: part.id, name: part.name, contours: part.reading.contours });
+      placements.push(...placementArray(laid, array, placements.length + 1));
+    }
+    const plate = { kind: 'plate' as const, plateId };
+    await programmer.call(layoutEndpoints.add, {
+      body: { id, name, plate, kerfWidth, clearance, edgeMargin, placements, order: null },
+    });
   }
-  await programmer.call(layoutEndpoints.add, {
-    body: {
-      id,
-      name,
-      plate: { kind: 'plate', plateId },
-      kerfWidth,
-      clearance,
-      edgeMargin,
-      placements,
-      order: null,
-    },
+  if (await programmer.find(cornerPlanEndpoints.get, { planId: plan.id })) return;
+  const skeleton = { left: 0, right: 0, below: 0, above: 0 };
+  await programmer.call(cornerPlanEndpoints.add, {
+    body: { ...plan, layoutId: id, plateTemperature: 313.15, skeleton, overrides: {} },
   });
 }
 

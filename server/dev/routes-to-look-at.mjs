@@ -99,7 +99,11 @@ export async function routesOf(context, who) {
     const plan = whole.flatMap((part) => part.cornerPlans ?? [])[0];
     if (plan) routes.push(['corner-plan', `/corner-plans/${plan.id}`]);
   }
-  if (layouts[0]) routes.push(['layout', `/layouts/${layouts[0].id}`]);
+  if (layouts[0]) {
+    routes.push(['layout', `/layouts/${layouts[0].id}`]);
+    const plan = (await get(`/api/layouts/${layouts[0].id}`)).cornerPlans?.[0];
+    if (plan) routes.push(['layout-corner-plan', `/corner-plans/${plan.id}`]);
+  }
   if (who === 'programmer') return routes;
   routes.push(
     ['strategy-new', '/strategies/new'],

@@ -1,6 +1,7 @@
 import { act, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { userEvent } from '@testing-library/user-event';
 import { afterEach, describe, expect, it, vi } from 'vitest';
+import { CornerPlanScreen } from '@/components/corners/corner-plan-screen.tsx';
 import {
   formOf,
   historyOf,
@@ -16,6 +17,7 @@ import { laidOut, laidPart, outlineOf, wireOutline, type Layout, type LayoutForm
 import { lineBetween } from '@/strategy/path/index.ts';
 import { layoutJudged, plateRectangle } from '@/strategy/path/plate/index.ts';
 import { router } from '../support/expo-router.tsx';
+import { answerTo, planOf } from './corner-plan-fixtures.ts';
 import { ids, json, offline, problem, serveWith, show, type Asked } from '../support/page.tsx';
 
 afterEach(() => {
@@ -361,6 +363,55 @@ describe('a layout', () => {
     expect(screen.queryByTestId('layout-ghost')).toBeNull();
     expect(screen.getByText('120 mm from the left, 120 mm from below')).toBeTruthy();
     await user.click(screen.getByRole('button', { name: 'Undo' }));
+  });
+});
+
+describe('the corner plans of a layout', () => {
+  const plans = [
+    {
+      id: ids.revision,
+      strategyName: 'Bearing plate',
+      revisionNumber: 3,
+      layoutVersion: 2,
+      changedAt: '2031-03-01T09:00:00Z',
+    },
+  ];
+
+  it('are listed with the version they were made for, and made of what is saved alone', async () => {
+    serveLayout({ ...layoutOf(), cornerPlans: plans });
+    const user = await open();
+    const row = screen.getByRole('link', { name: /Bearing plate, revision 3/ });
+    expect(row.textContent).toContain('for version 2: the plate was laid out anew since then');
+    expect(await screen.findByText('No strategy was handed in yet to plan with.')).toBeTruthy();
+    await choose(user, /^Piece 1, Block/);
+    await user.click(screen.getByRole('button', { name: 'Push up by 1 mm' }));
+    expect(screen.getByText('Save the layout first: corners are planned of what is saved.')).toBeTruthy();
+    await user.click(screen.getByRole('button', { name: 'Undo' }));
+  });
+
+  const layout = { id: ids.plate, version: 2, newest: 3, outline: wireOutline(plateRectangle(1, 0.5), null) };
+
+  it('say that the plate was laid out anew, and are planned again for it', async () => {
+    const requests = serveWith(({ method, path }) => {
+      if (!path.startsWith('/api/corner-plans') || path.endsWith('/path')) return json(answerTo(path));
+      return json(planOf({ layout: method === 'PUT' ? { ...layout, version: 3 } : layout, version: 5 }));
+    });
+    show(<CornerPlanScreen id={ids.report} />, 'programmer');
+    expect(await screen.findByText(/made for version 2 of the layout.*version 3 is the newest/)).toBeTruthy();
+    expect(screen.queryByLabelText('Below')).toBeNull();
+    await userEvent.click(screen.getByRole('button', { name: 'Plan the newest layout' }));
+    await waitFor(() => expect(screen.queryByText(/made for version 2/)).toBeNull());
+    expect(requests.find(({ method }) => method === 'PUT')?.headers.get('if-match')).toBe('"5"');
+  });
+
+  it('say it to an operator too, who can’t plan', async () => {
+    serveWith(({ path }) =>
+      json(path.startsWith('/api/corner-plans') && !path.endsWith('/path') ? planOf({ layout }) : answerTo(path)),
+    );
+    show(<CornerPlanScreen id={ids.report} />, 'operator');
+    expect(await screen.findByText(/made for version 2 of the layout/)).toBeTruthy();
+    expect(screen.queryByRole('button', { name: 'Plan the newest layout' })).toBeNull();
+    expect(screen.queryByRole('link', { name: 'Open the layout' })).toBeNull();
   });
 });
 
