@@ -245,7 +245,8 @@ function ringOf(
         ? [segmentStart(insert.segments[0] ?? never()), segmentEnd(insert.segments.at(-1) ?? never())]
         : [insert.at ?? expected, insert.at ?? expected];
     if (!from || !to) continue;
-    const changed = withInsert(segments, insert, from, to);
+    const changed =
+      insert.kind === 'dwell' ? withDwell(segments, insert.duration, from) : withInsert(segments, insert, from, to);
     if (!changed) continue;
     placed.add(insert);
     segments = changed;
@@ -257,10 +258,29 @@ function ringOf(
   };
 }
 
+type PathInsert = Extract<CornerInsert, { kind: 'path' }>;
+
 type RingItem = { readonly segment: Segment; readonly insert: CornerInsert | null; readonly dwell: number };
 
+/** The ring with a wait at a place of it, its end or in the middle of a segment; null when the place is not on it. */
+function withDwell(ring: readonly RingItem[], duration: number, at: Point): RingItem[] | null {
+  const i = ring.findIndex(
+    ({ segment }) => segmentPointDistance(segment, at) <= onPath && pointDistance(segmentStart(segment), at) > onPath,
+  );
+  const item = ring[i];
+  if (!item) return null;
+  const share = pointDistance(segmentEnd(item.segment), at) <= onPath ? 1 : shareAt(item.segment, at);
+  const waiting: RingItem = {
+    ...item,
+    segment: share < 1 ? segmentPart(item.segment, 0, share) : item.segment,
+    dwell: item.dwell > 0 && share === 1 ? item.dwell + duration : duration,
+  };
+  const rest: RingItem[] = share < 1 ? [{ ...item, segment: segmentPart(item.segment, share, 1) }] : [];
+  return [...ring.slice(0, i), waiting, ...rest, ...ring.slice(i + 1)];
+}
+
 /** The ring with an insert that leaves it at `from` and comes back at `to`, a little further on or the same place; null when they are not on it. */
-function withInsert(ring: readonly RingItem[], insert: CornerInsert, from: Point, to: Point): RingItem[] | null {
+function withInsert(ring: readonly RingItem[], insert: PathInsert, from: Point, to: Point): RingItem[] | null {
   const n = ring.length;
   const holds = (item: RingItem | undefined, p: Point): boolean =>
     item !== undefined && item.insert === null && segmentPointDistance(item.segment, p) <= onPath;
@@ -287,7 +307,7 @@ function spliced(
   leaves: number,
   k: number,
   comes: number,
-  insert: CornerInsert,
+  insert: PathInsert,
 ): RingItem[] | null {
   const [before, after] = [ring[i], ring[k]];
   if (!before || !after) return null;
@@ -295,10 +315,9 @@ function spliced(
   const head: RingItem = {
     ...before,
     segment: leaves >= 1 - 1e-12 ? before.segment : segmentPart(before.segment, 0, leaves),
-    dwell: insert.kind === 'dwell' ? insert.duration : 0,
+    dwell: 0,
   };
-  const put: RingItem[] =
-    insert.kind === 'path' ? insert.segments.map((segment) => ({ segment, insert, dwell: 0 })) : [];
+  const put = insert.segments.map((segment): RingItem => ({ segment, insert, dwell: 0 }));
   const tail: RingItem = {
     ...after,
     segment: comes <= 1e-12 ? after.segment : segmentPart(after.segment, comes, 1),

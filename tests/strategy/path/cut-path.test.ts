@@ -4,6 +4,7 @@ import { cutPathOf } from '../../../strategy/path/compensation/index.ts';
 import type { CutRun } from '../../../strategy/path/cut-path.ts';
 import type { Contour, Point, Segment } from '../../../strategy/path/index.ts';
 import {
+  arcOf,
   circleOf,
   contourCorners,
   contourReverse,
@@ -12,6 +13,7 @@ import {
   loopAt,
   pathLength,
   pointDistance,
+  segmentDistance,
   segmentEnd,
   segmentPointDistance,
   segmentStart,
@@ -130,5 +132,95 @@ describe('the path of a cut', () => {
       );
     expect(length(2e-3) - length()).toBeCloseTo(2e-3, 12);
     expect(() => cutPathOf(request({ overcut: -1e-3 }))).toThrow(RangeError);
+  });
+
+  it('takes a round instead of the corner, and a wait at the place it is planned for', () => {
+    const arc = arcOf({ x: 0.295, y: 0.195 }, 5e-3 + kerf / 2, 0, Math.PI / 2);
+    const round: CornerInsert = {
+      contourId: '1',
+      index: 2,
+      name: 'the round of corner c1-2',
+      kind: 'path',
+      as: 'contour',
+      segments: [arc],
+    };
+    // a millimetre past the corner at the upper left
+    const at = { x: -kerf / 2, y: 0.199 };
+    const dwell: CornerInsert = {
+      contourId: '1',
+      index: 3,
+      name: 'the dwell of corner c1-3',
+      kind: 'dwell',
+      duration: 1,
+      at,
+    };
+    const { path, problems } = cutPathOf(request({ inserts: [round, dwell] }));
+    expect(problems).toEqual([]);
+    const [run] = path.runs;
+    if (!run) throw new Error('nothing is cut');
+    expect(widestGap(run)).toBeLessThan(1e-12);
+    expect(run.pieces.map(({ kind }) => kind)).toEqual(['lead-in', 'contour', 'dwell', 'contour']);
+    const length = pathLength(run.pieces.flatMap((piece) => (piece.kind === 'contour' ? piece.segments : [])));
+    expect(length).toBeCloseTo(1 + 8 * (kerf / 2) - (2 - Math.PI / 2) * (5e-3 + kerf / 2), 12);
+  });
+
+  it('says which treatment found no path, and cuts the contour without it', () => {
+    const astray: CornerInsert = {
+      contourId: '1',
+      index: 2,
+      name: 'the loop of corner c1-2',
+      kind: 'path',
+      as: 'loop',
+      segments: loopAt(
+        { point: { x: 0.4, y: 0.2 }, incoming: { x: 0, y: 1 }, outgoing: { x: -1, y: 0 }, angle: 1.5 },
+        5e-3,
+      ).segments,
+    };
+    const { path, problems } = cutPathOf(request({ inserts: [astray] }));
+    expect(path.runs).toHaveLength(1);
+    expect(problems).toMatchObject([
+      {
+        kind: 'corner',
+        leftOut: false,
+        why: 'the loop of corner c1-2 is left out: the path of outline 1 does not come there',
+      },
+    ]);
+  });
+
+  it('keeps lead-ins off loops, those of other contours too', () => {
+    const { path } = cutPathOf(request({ inserts: loops, starts: { 1: { x: 0.3, y: -0.01 } } }));
+    const [run] = path.runs;
+    if (!run) throw new Error('nothing is cut');
+    const leadIn = run.pieces[0]?.kind === 'lead-in' ? run.pieces[0].segments : [];
+    for (const piece of run.pieces) {
+      if (piece.kind !== 'loop') continue;
+      for (const a of leadIn) {
+        for (const b of piece.segments) {
+          expect(segmentDistance(a, b).distance).toBeGreaterThan(kerf + 2e-3 - 1e-9);
+        }
+      }
+    }
+  });
+
+  it('names what is narrower than the kerf: a hole is left out, a gap between contours is said', () => {
+    const slit = bore('2', 0.1, 6e-4);
+    const wide = bore('3', 0.2, 0.03);
+    const island: CutContour = {
+      id: '4',
+      name: 'island 4',
+      contour: { segments: [circleOf({ x: 0.2, y: 0.1 }, 0.03 - 1.2e-3)] },
+      role: 'island',
+      parent: '3',
+    };
+    const { path, problems } = cutPathOf(request({ contours: [outline, slit, wide, island] }));
+    const narrow = problems.filter(({ kind }) => kind === 'narrow');
+    expect(narrow.map(({ why, leftOut }) => ({ why, leftOut }))).toEqual([
+      { why: 'hole 2 at (100.0 mm, 100.0 mm) is narrower than the kerf: 1.2 mm against 1.6 mm', leftOut: true },
+      expect.objectContaining({ leftOut: false }),
+    ]);
+    expect(narrow[1]?.why).toMatch(
+      /^the gap between island 4 and hole 3 at \(.*\) is narrower than the kerf: 1\.2 mm against 1\.6 mm$/,
+    );
+    expect(path.runs.map(({ name }) => name)).not.toContain('hole 2');
   });
 });
