@@ -17,7 +17,7 @@ import { laidOut, laidPart, outlineOf, wireOutline, type Layout, type LayoutForm
 import { lineBetween } from '@/strategy/path/index.ts';
 import { layoutJudged, plateRectangle } from '@/strategy/path/plate/index.ts';
 import { router } from '../support/expo-router.tsx';
-import { answerTo, planOf } from './corner-plan-fixtures.ts';
+import { pathOf, planOf } from './corner-plan-fixtures.ts';
 import { ids, json, offline, problem, serveWith, show, type Asked } from '../support/page.tsx';
 
 afterEach(() => {
@@ -366,6 +366,9 @@ describe('a layout', () => {
   });
 });
 
+/** Of a plan's page all but the plan itself. */
+const besidePlan = (path: string) => (path.endsWith('/path') ? pathOf(planOf()) : { items: [] });
+
 describe('the corner plans of a layout', () => {
   const plans = [
     {
@@ -393,7 +396,7 @@ describe('the corner plans of a layout', () => {
 
   it('say that the plate was laid out anew, and are planned again for it', async () => {
     const requests = serveWith(({ method, path }) => {
-      if (!path.startsWith('/api/corner-plans') || path.endsWith('/path')) return json(answerTo(path));
+      if (!path.startsWith('/api/corner-plans') || path.endsWith('/path')) return json(besidePlan(path));
       return json(planOf({ layout: method === 'PUT' ? { ...layout, version: 3 } : layout, version: 5 }));
     });
     show(<CornerPlanScreen id={ids.report} />, 'programmer');
@@ -406,7 +409,7 @@ describe('the corner plans of a layout', () => {
 
   it('say it to an operator too, who can’t plan', async () => {
     serveWith(({ path }) =>
-      json(path.startsWith('/api/corner-plans') && !path.endsWith('/path') ? planOf({ layout }) : answerTo(path)),
+      json(path.startsWith('/api/corner-plans') && !path.endsWith('/path') ? planOf({ layout }) : besidePlan(path)),
     );
     show(<CornerPlanScreen id={ids.report} />, 'operator');
     expect(await screen.findByText(/made for version 2 of the layout/)).toBeTruthy();
