@@ -1,4 +1,3 @@
-import { View } from 'react-native';
 import { runText } from '@/components/text/corner-preview.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Fold } from '@/components/ui/fold.tsx';
@@ -83,12 +82,12 @@ function RunNow({ timeline, dropped, clock }: RunProps) {
         : runText.doing(moment.phase, runs[moment.run]?.name ?? '');
   const fallen = runText.fallen(countBefore(dropped, time));
   return (
-    <View>
+    <Stack gap="s">
       <CutSlider timeline={timeline} clock={clock} words={`${at}, ${doing}, ${fallen}`} />
       <Row justify="space-between" gap="s">
         <Figure value={at} />
         <Small strong>{`${doing}; ${fallen}`}</Small>
       </Row>
-    </View>
+    </Stack>
   );
 }

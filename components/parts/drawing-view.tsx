@@ -267,9 +267,11 @@ export function DrawingView({
       </View>
       <View style={styles.buttons}>
         <View style={styles.tools}>{tools}</View>
-        <Button label="+" spoken={drawingText.larger} onPress={() => zoomBy(1.5)} />
-        <Button label="−" spoken={drawingText.smaller} onPress={() => zoomBy(1 / 1.5)} />
-        <Button label={drawingText.whole} spoken={drawingText.wholeSpoken} onPress={fit} />
+        <View style={styles.zoom}>
+          <Button label="+" spoken={drawingText.larger} onPress={() => zoomBy(1.5)} />
+          <Button label="−" spoken={drawingText.smaller} onPress={() => zoomBy(1 / 1.5)} />
+          <Button label={drawingText.whole} spoken={drawingText.wholeSpoken} onPress={fit} />
+        </View>
       </View>
       <View style={styles.ways}>
         {wide ? (
@@ -436,5 +438,6 @@ const styles = StyleSheet.create({
     borderTopColor: roles.rule,
   },
   tools: { flexDirection: 'row', flexWrap: 'wrap', flexGrow: 1, gap: 8 },
+  zoom: { flexDirection: 'row', gap: 8 },
   ways: { paddingHorizontal: 12, paddingBottom: 8 },
 });
