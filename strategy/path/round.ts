@@ -44,7 +44,7 @@ export function cornerRound(contour: Contour, corner: Corner, radius: number): C
   if (!(radius > 0)) throw new RangeError(`radius ${radius} m is outside (0, ∞)`);
   const { segments } = contour;
   const [before, after] = [segments[(corner.index + segments.length - 1) % segments.length], segments[corner.index]];
-  if (!before || !after) return null;
+  if (!before || !after || segmentLength(before) === 0 || segmentLength(after) === 0) return null;
   const [inBefore, inAfter] = [moved(before, radius), moved(after, radius)];
   if (!inBefore || !inAfter) return null;
   // of two places where the moved edges meet the one by the corner is meant
