@@ -6,7 +6,7 @@ export const drawingText = {
   keys: 'Drawing. Arrow keys move it, plus and minus enlarge and reduce, 0 shows the whole.',
   placeKeys: 'Enter takes the place under the cross in the middle.',
   waysTitle: 'How to move it',
-  ways: 'Drag to move it, pinch or turn the wheel over it to enlarge. Keys: arrows (finer with Shift), + and −, 0 for the whole.',
+  ways: 'Drag to move it; pinch, or click it and turn the wheel, to enlarge. Keys: arrows (finer with Shift), + and −, 0 for the whole.',
   larger: 'Enlarge the drawing',
   smaller: 'Reduce the drawing',
   whole: 'Fit',
