@@ -25,16 +25,19 @@ export type DrawingReader = {
   close(): Promise<void>;
 };
 
-/** Time for one drawing or layout, s. The largest real ones take a tenth of it. */
-const readSeconds = 5;
+/** Time for one drawing, s. The largest real ones take a tenth of it. */
+const readSeconds = 2;
+/** Time for one layout, s. */
+const layoutSeconds = 5;
 /** Time for one plan, s. */
 const planSeconds = 20;
 
 export function createDrawingReader(): DrawingReader {
   const module = new URL('./drawing.worker.ts', import.meta.url);
   const common = { module, threads: 1, waiting: 20, memory: 384 };
-  // Two threads and not one queue: a long plan must not keep a drawing waiting.
+  // A thread for each and not one queue: a long plan must not keep a drawing waiting.
   const reads = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: readSeconds * 1000 });
+  const layouts = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: layoutSeconds * 1000 });
   const plans = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: planSeconds * 1000 });
   return {
     read: async (bytes, answers) => {
@@ -50,11 +53,11 @@ export function createDrawingReader(): DrawingReader {
       return answer.reading;
     },
     layout: async (asked) => {
-      const answer = await reads.ask({ kind: 'layout', asked }).catch((error: unknown) => {
+      const answer = await layouts.ask({ kind: 'layout', asked }).catch((error: unknown) => {
         throw asRefusal(
           error,
           'unavailable',
-          `The layout could not be checked within ${readSeconds} s: too much lies on this plate for one layout.`,
+          `The layout could not be checked within ${layoutSeconds} s: too much lies on this plate for one layout.`,
         );
       });
       if (answer.kind !== 'layout') throw new Error('the drawing worker answered another question');
@@ -72,7 +75,7 @@ export function createDrawingReader(): DrawingReader {
       return answer.plan;
     },
     close: async () => {
-      await Promise.all([reads.close(), plans.close()]);
+      await Promise.all([reads.close(), layouts.close(), plans.close()]);
     },
   };
 }

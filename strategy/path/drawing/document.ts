@@ -34,6 +34,8 @@ export const tagText = (tags: Tags, i: number): string => nameDecode(String(tags
 
 /** Value of a tag as a number. Throws DrawingRefusal with the place when it is none, or larger than a drawing can hold. */
 export function tagNumber(tags: Tags, i: number): number {
+  const plain = tags.numberOf(i);
+  if (Math.abs(plain) <= drawingLimits.number) return plain;
   const text = tags.valueOf(i);
   if (typeof text === 'number') return withinReason(tags, i, text);
   if (/^[+-]?(\d+\.?\d*|\.\d+)([eE][+-]?\d+)?$/.test(text)) return withinReason(tags, i, Number(text));
@@ -110,7 +112,19 @@ function recordsOf(tags: Tags, from: number, end: number): RawEntity[] {
 }
 
 /** A type as it is shown: a damaged one may hold anything. */
-const typeOf = (text: string): string => (/^[A-Z0-9_]{1,40}$/.test(text) ? text : typeShown(text));
+function typeOf(text: string): string {
+  const known = commonTypes.get(text);
+  if (known !== undefined) return known;
+  return /^[A-Z0-9_]{1,40}$/.test(text) ? text : typeShown(text);
+}
+
+/** Types that come by thousands, so that one text stands for all. */
+const commonTypes = new Map(
+  ['LINE', 'ARC', 'CIRCLE', 'LWPOLYLINE', 'POLYLINE', 'VERTEX', 'SEQEND', 'INSERT', 'SPLINE'].map((type) => [
+    type,
+    type,
+  ]),
+);
 
 function typeShown(text: string): string {
   const plain = text

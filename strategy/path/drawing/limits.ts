@@ -11,6 +11,8 @@ export const drawingLimits = {
   splineDegree: 25,
   /** Lines and arcs all curves together may become. */
   segments: 300_000,
+  /** Closed contours, of which each is compared with all around it. */
+  contours: 30_000,
   /** Farthest place from the origin, m. */
   reach: 1e4,
   /** Largest number of any kind in the file's own units: a hundred times the reach in micrometres. */

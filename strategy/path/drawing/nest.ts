@@ -1,11 +1,11 @@
 import Flatbush from 'flatbush';
 import type { Contour } from '../contour.ts';
-import { contourArea, contourBox, contourContains, contourReverse } from '../contour.ts';
+import { contourArea, contourContains, contourReverse } from '../contour.ts';
 import { segmentPointDistance } from '../distance.ts';
 import type { Box, Point } from '../point.ts';
 import type { Segment } from '../segment.ts';
 import { arcCovers, segmentPointAt, segmentStart } from '../segment.ts';
-import { segmentBoxes, sortedBy } from './soup.ts';
+import { segmentBoxes, sortedBy, writeBox } from './soup.ts';
 
 /** Outer outlines (depth 0), holes (odd depths) and islands, which are parts inside holes (even depths from 2). */
 export type ContourRole = 'outer' | 'hole' | 'island';
@@ -20,13 +20,13 @@ export type Nested = {
 /** Contours with their depth, role and the index of the contour around each, turned so that the part lies on the left of travel. */
 export function nestContours(contours: readonly Contour[]): Nested[] {
   if (contours.length === 0) return [];
-  const boxes = contours.map(contourBox);
-  const areas = contours.map((c) => Math.abs(contourArea(c)));
+  const boxes = contours.map(boxOf);
+  const signed = Float64Array.from(contours, contourArea);
   const index = new Flatbush(contours.length);
   for (const box of boxes) index.add(box.minX, box.minY, box.maxX, box.maxY);
   index.finish();
 
-  const bySize = sortedBy(Float64Array.from(areas, (area) => -area));
+  const bySize = sortedBy(signed.map((area) => -Math.abs(area)));
   const rank = new Int32Array(contours.length);
   for (let k = 0; k < bySize.length; k++) rank[bySize[k] ?? 0] = k;
   const parents: (number | null)[] = contours.map(() => null);
@@ -54,7 +54,8 @@ export function nestContours(contours: readonly Contour[]): Nested[] {
     });
     // the smallest of those around it
     let parent: number | undefined;
-    for (const k of around.sort((a, b) => b - a)) {
+    if (around.length > 1) around.sort((a, b) => b - a);
+    for (const k of around) {
       const candidate = bySize[k] ?? 0;
       const [outer, outerBox] = [contours[candidate], boxes[candidate]];
       if (!outer || !outerBox || !boxHolds(outerBox, box)) continue;
@@ -69,9 +70,25 @@ export function nestContours(contours: readonly Contour[]): Nested[] {
   return contours.map((contour, i) => {
     const depth = depths[i] ?? 0;
     const role = depth === 0 ? 'outer' : depth % 2 === 1 ? 'hole' : 'island';
-    const turned = contourArea(contour) > 0 === (role !== 'hole') ? contour : contourReverse(contour);
+    const turned = (signed[i] ?? 0) > 0 === (role !== 'hole') ? contour : contourReverse(contour);
     return { contour: turned, depth, role, parent: parents[i] ?? null };
   });
+}
+
+function boxOf({ segments }: Contour): Box {
+  let minX = Infinity;
+  let minY = Infinity;
+  let maxX = -Infinity;
+  let maxY = -Infinity;
+  const box = new Float64Array(4);
+  for (const segment of segments) {
+    writeBox(box, 0, segment);
+    minX = Math.min(minX, box[0] ?? minX);
+    minY = Math.min(minY, box[1] ?? minY);
+    maxX = Math.max(maxX, box[2] ?? maxX);
+    maxY = Math.max(maxY, box[3] ?? maxY);
+  }
+  return { minX, minY, maxX, maxY };
 }
 
 const slackOf = (box: Box): number => 1e-9 + 1e-6 * Math.hypot(box.maxX - box.minX, box.maxY - box.minY);

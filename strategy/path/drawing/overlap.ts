@@ -74,12 +74,16 @@ export function sortPieces(
     if (known) known.push(...shares);
     else cuts.set(i, [...shares]);
   };
+  let shares = 0;
   const whole = touchingPairs(segmentBoxes(segments), tolerance, (i, k) => {
     const [a, b] = [segments[i], segments[k]];
     const [first, second] = [owner[i] ?? 0, owner[k] ?? 0];
     if (!a || !b || (first === second && k === i + 1 && a.kind === 'line' && b.kind === 'line')) return;
+    if (a.kind === 'line' && b.kind === 'line' && (liesAside(a, b, tolerance) || liesAside(b, a, tolerance))) return;
     const shared = first === second ? null : overlapOf(a, b, tolerance);
     if (shared) {
+      shares += shared.onFirst.length + shared.onSecond.length;
+      if (shares > mostCuts) return;
       cutAt(i, shared.onFirst);
       cutAt(k, shared.onSecond);
     } else if (meetings.length < mostMeetings) {
@@ -101,13 +105,14 @@ export function sortPieces(
     for (const copy of copies.get(i) ?? []) repaired.push(copy);
   }
   let loose = looseOf(pieces, copies, (i) => isOwn[i] === 0);
-  if (cuts.size > 0) {
+  // lines that lie on each other by ten thousands are no outline: they stay as they were drawn
+  if (cuts.size > 0 && shares <= mostCuts) {
     const cutUp = cutPieces(pieces, copies, isOwn, segments, owner, cuts, tolerance);
     const mended = restored(pieces, copies, cutUp, join);
     loose = mended.loose;
     for (const repair of mended.repaired) repaired.push(repair);
   }
-  return { closed, loose, meetings, repaired, tooDense: !whole };
+  return { closed, loose, meetings, repaired, tooDense: !whole || shares > mostCuts };
 }
 
 function looseOf(pieces: readonly Piece[], copies: Cleaned['copies'], take: (i: number) => boolean): Loose {
@@ -206,6 +211,9 @@ function looseJoined(a: Loose, b: Loose): Loose {
   };
 }
 
+/** Cuts made at most. */
+const mostCuts = 50_000;
+
 /** Meetings kept: those of pieces that are no contour are left out later. */
 const mostMeetings = 5000;
 
@@ -224,6 +232,17 @@ export function overlapOf(a: Segment, b: Segment, tolerance: number): Shared | n
   if (a.kind === 'line' && b.kind === 'line') return overlapOfLines(a, b, tolerance);
   if (a.kind === 'arc' && b.kind === 'arc') return overlapOfArcs(a, b, tolerance);
   return null;
+}
+
+/** Whether all of one line lies to one side of the other's, by more than the tolerance: the quick answer for most pairs. */
+function liesAside({ start, end }: Line, from: Line, tolerance: number): boolean {
+  const dx = from.end.x - from.start.x;
+  const dy = from.end.y - from.start.y;
+  const first = dx * (start.y - from.start.y) - dy * (start.x - from.start.x);
+  const second = dx * (end.y - from.start.y) - dy * (end.x - from.start.x);
+  if (first > 0 !== second > 0) return false;
+  const least = Math.min(Math.abs(first), Math.abs(second));
+  return least * least > tolerance * tolerance * (dx * dx + dy * dy);
 }
 
 /** Least length of an overlap in tolerances: shorter ones are ends that all but meet. */

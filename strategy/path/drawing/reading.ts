@@ -170,6 +170,11 @@ function read(bytes: Uint8Array, answers: DrawingAnswers): DrawingReading | NoDr
     rounding,
     sorted.meetings,
   );
+  if (whole.length > drawingLimits.contours) {
+    return none(
+      `The drawing holds more than ${drawingLimits.contours} closed outlines. Draw the part alone and export again.`,
+    );
+  }
   const joined = whole.map((chain) => closeJoints(chain.segments, rounding));
   const closed = joined.map(({ segments }, i) => ({ contour: { segments }, layer: whole[i]?.layer ?? '0' }));
   const repaired = [...cleaned.repaired, ...sorted.repaired, ...copiesSaid(sorted.loose, used), ...flat];

@@ -48,7 +48,7 @@ export function writeBox(boxes: Float64Array, at: number, segment: Segment): voi
 }
 
 /** Pairs of boxes tried at most: a drawing so dense that more touch is no part. */
-const mostPairs = 2_000_000;
+const mostPairs = 600_000;
 
 /** Comparisons in one sweep, a box: where more would be needed a tree of boxes is quicker. */
 const mostSwept = 200;

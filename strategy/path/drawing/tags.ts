@@ -6,6 +6,8 @@ export type Tags = {
   readonly codes: Int32Array;
   /** Value of tag i, text without the blanks around it. Made when asked for, since most values of a file are never looked at. */
   readonly valueOf: (i: number) => string | number;
+  /** Value of tag i where it is plainly a number of a few digits, NaN for anything else: then its text says what it is. */
+  readonly numberOf: (i: number) => number;
   /** Where the value of tag i stands, for a sentence: "line 214" or "byte 1042". */
   readonly placeOf: (i: number) => string;
   /** The file stops in the middle of a tag. */
@@ -24,7 +26,7 @@ export const isBinaryDxf = (bytes: Uint8Array): boolean => binaryMark.every((byt
 /** Tags of a DXF, text or binary. Throws DrawingRefusal where the pairs of group code and value break. */
 export const tagsOf = (bytes: Uint8Array): Tags => (isBinaryDxf(bytes) ? binaryTags(bytes) : textTags(bytes));
 
-const [tab, newLine, carriageReturn, blank, minus, zero, nine] = [9, 10, 13, 32, 45, 48, 57];
+const [tab, newLine, carriageReturn, blank, plus, minus, point, zero, nine] = [9, 10, 13, 32, 43, 45, 46, 48, 57];
 
 function textTags(bytes: Uint8Array): Tags {
   const start = bytes[0] === 0xef && bytes[1] === 0xbb && bytes[2] === 0xbf ? 3 : 0;
@@ -33,11 +35,9 @@ function textTags(bytes: Uint8Array): Tags {
   while (stop > start && isFiller(bytes[stop - 1] ?? 0)) stop--;
   const lineEnd = bytes.includes(newLine) ? newLine : carriageReturn;
   const text = bytesAsLatin(bytes, 0, stop);
-  // two lines a tag, of which the shortest have one character
-  const most = Math.ceil((stop - start) / 3) + 1;
-  const codes = new Int32Array(most);
+  let codes = new Int32Array(Math.ceil(bytes.length / 12) + 16);
   // where each value starts; it ends before the line end
-  const starts = new Int32Array(most);
+  let starts = new Int32Array(codes.length);
   let count = 0;
   let at = start;
   let line = 1;
@@ -52,6 +52,10 @@ function textTags(bytes: Uint8Array): Tags {
       break;
     }
     if (code === null) throw noCode(text.slice(at, end), line);
+    if (count === codes.length) {
+      codes = grown(codes);
+      starts = grown(starts);
+    }
     codes[count] = code;
     starts[count++] = end + 1;
     at = bytes.indexOf(lineEnd, end + 1) + 1;
@@ -63,7 +67,53 @@ function textTags(bytes: Uint8Array): Tags {
     const to = bytes.indexOf(lineEnd, from);
     return text.slice(from, to < 0 ? stop : to).trim();
   };
-  return { codes: codes.subarray(0, count), valueOf, placeOf: (i) => `line ${2 * i + 2}`, cutShort };
+  return {
+    codes: codes.subarray(0, count),
+    valueOf,
+    numberOf: (i) => plainNumber(bytes, starts[i] ?? stop, stop, lineEnd),
+    placeOf: (i) => `line ${2 * i + 2}`,
+    cutShort,
+  };
+}
+
+function grown(array: Int32Array<ArrayBuffer>): Int32Array<ArrayBuffer> {
+  const larger = new Int32Array(2 * array.length);
+  larger.set(array);
+  return larger;
+}
+
+/** Powers of ten that a double holds exactly. */
+const powersOfTen = Array.from({ length: 23 }, (_, i) => Number(`1e${i}`));
+
+/**
+ * The decimal number a line begins with, or NaN for one with an exponent, of more than 15 digits, or none at all. Of so few digits the quotient of two whole numbers is the
+ * nearest double, as Number would give it (Clinger, Proc. PLDI 1990, from memory); read so, a drawing's numbers need no texts of their own.
+ */
+function plainNumber(bytes: Uint8Array, from: number, stop: number, lineEnd: number): number {
+  let i = from;
+  while (i < stop && bytes[i] !== lineEnd && isBlank(bytes[i] ?? 0)) i++;
+  const sign = bytes[i];
+  if (sign === minus || sign === plus) i++;
+  let whole = 0;
+  // digits at all, those that count, and those behind the point
+  let seen = 0;
+  let figures = 0;
+  let behind = -1;
+  for (; i < stop && bytes[i] !== lineEnd; i++) {
+    const byte = bytes[i] ?? 0;
+    if (byte >= zero && byte <= nine) {
+      seen++;
+      if (figures > 0 || byte !== zero) figures++;
+      whole = 10 * whole + byte - zero;
+      if (behind >= 0) behind++;
+    } else if (byte === point && behind < 0) behind = 0;
+    else break;
+  }
+  // blanks may follow, but nothing else
+  while (i < stop && bytes[i] !== lineEnd && isBlank(bytes[i] ?? 0)) i++;
+  if ((i < stop && bytes[i] !== lineEnd) || seen === 0 || figures > 15 || behind > 22) return Number.NaN;
+  const size = behind > 0 ? whole / (powersOfTen[behind] ?? 1) : whole;
+  return sign === minus ? -size : size;
 }
 
 const isFiller = (byte: number): boolean => byte <= blank;
@@ -190,9 +240,14 @@ function binaryTags(bytes: Uint8Array): Tags {
     if (!(error instanceof RangeError)) throw error;
     cutShort = true;
   }
+  const numberOf = (i: number): number => {
+    const value = values[i];
+    return typeof value === 'number' ? value : Number.NaN;
+  };
   return {
     codes: Int32Array.from(codes),
     valueOf: (i) => values[i] ?? '',
+    numberOf,
     placeOf: (i) => `byte ${places[i] ?? bytes.length}`,
     cutShort,
   };
