@@ -114,7 +114,7 @@ export function planSheet(
         label: 'treatments add',
         value: `${shown(totals.addedTime, 'time', 3)}, ${shown(totals.addedLength, 'length', 3)} of path${hottest}`,
       },
-      { label: 'planned', value: `${plannedBy}, ${momentText(plan.changedAt)}` },
+      { label: 'planned', value: `${plannedBy}, ${plan.changedAt.toISOString().slice(0, 10)}` },
       { label: 'corner plan', value: `version ${plan.version}, ${plan.id.slice(-8)}` },
       { label: 'taken away', value: momentText(at) },
     ],
