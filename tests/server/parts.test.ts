@@ -83,6 +83,53 @@ describe('a drawing', () => {
     expect(await kept(question.closesAt)).toBe((await kept((gap?.size ?? 0) / 2)) + 1);
   });
 
+  test('as SVG is read, kept, and given back to be saved, never shown', async () => {
+    const file = drawing('window.svg');
+    const id = newId();
+    const { body } = await made(
+      programmer.call(partEndpoints.add, { body: { id, name: 'Window', answers: {} }, file }),
+    );
+    expect(body.reading.unit).toBe('mm');
+    expect([body.reading.bounds.max.x, body.reading.bounds.max.y]).toEqual([
+      expect.closeTo(0.08, 9) as number,
+      expect.closeTo(0.04, 9) as number,
+    ]);
+    const given = await programmer.call(partEndpoints.file, { params: { partId: id } });
+    expect(given.headers['content-type']).toBe('application/octet-stream');
+    expect(given.headers['content-disposition']).toMatch(/^attachment; filename/);
+    expect(given.bytes.equals(file.bytes)).toBe(true);
+  });
+
+  test('says what was repaired and left out with its places', async () => {
+    const { body } = await made(
+      programmer.call(partEndpoints.read, { body: { unit: 'mm' }, file: drawing('bracket-duplicates.dxf') }),
+    );
+    for (const { at, count, largest } of body.repaired)
+      expect([at.length, largest ?? 0]).toEqual([count, largest ?? 0]);
+    expect(body.repaired.map(({ what }) => what)).toContain('duplicate dropped');
+    const framed = await made(
+      programmer.call(partEndpoints.read, { body: { unit: 'mm' }, file: drawing('bracket-hidden-frame.dxf') }),
+    );
+    expect(framed.body.aside).toMatchObject([{ what: 'LWPOLYLINE on the hidden layer "FRAME"' }]);
+  });
+
+  test('that takes too long is refused with a sentence, and others are read meanwhile and after it', async () => {
+    const [points, degree] = [60_000, 25];
+    const coordinates = Array.from({ length: points }, (_, i) => `10\n${(i * 37) % 1000}\n20\n${(i * 91) % 1000}\n`);
+    const knots = Array.from({ length: points + degree + 1 }, (_, i) => `40\n${i}\n`);
+    const entity = `0\nSPLINE\n71\n${degree}\n${knots.join('')}${coordinates.join('')}`;
+    const bytes = Buffer.from(`0\nSECTION\n2\nENTITIES\n${entity}0\nENDSEC\n0\nEOF\n`);
+    const slow = programmer.call(partEndpoints.read, { body: { unit: 'mm' }, file: { name: 'slow.dxf', bytes } });
+    // the thread that answers is free all the while
+    expect((await programmer.call(partEndpoints.list, {})).status).toBe(200);
+    const answer = await slow;
+    expect(answer.problem).toMatchObject({
+      code: 'bad-drawing',
+      detail: 'The drawing could not be read within 2 s. Draw the part alone and export it again.',
+    });
+    await made(programmer.call(partEndpoints.read, { body: { unit: 'mm' }, file: drawing('bracket.dxf') }));
+  });
+
   test('whose only outline has a gap is asked about, and refused only when the gap is to stay', async () => {
     const file = drawing('bracket-not-closed.dxf');
     const add = (answers: object) =>
