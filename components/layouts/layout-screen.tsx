@@ -96,6 +96,7 @@ function LayoutEditor({ layout, userId, mayWrite, mayPlan, refetch }: LayoutEdit
   const [history, dispatch] = useReducer(layoutReduce, before?.draft ?? draftOf(layout), historyOf);
   const { draft } = history;
   const { form } = draft;
+  const [restored, setRestored] = useState(before !== null);
   const [chosen, setChosen] = useState<number | null>(null);
   const [step, setStep] = useState(1e-3);
   const [way, setWay] = useState(true);
@@ -125,6 +126,7 @@ function LayoutEditor({ layout, userId, mayWrite, mayPlan, refetch }: LayoutEdit
       {
         onSuccess: (saved) => {
           setBase({ version: saved.version, form: formOf(saved) });
+          setRestored(false);
           // What was changed while it was being saved stays changed.
           dispatch({ do: 'saved', sent: form, draft: draftOf(saved) });
         },
@@ -136,6 +138,7 @@ function LayoutEditor({ layout, userId, mayWrite, mayPlan, refetch }: LayoutEdit
     if (!theirs) return;
     setBase({ version: theirs.version, form: formOf(theirs) });
     dispatch({ do: 'load', draft: draftOf(theirs) });
+    setRestored(false);
     change.reset();
   };
   const saveMine = async () => {
@@ -239,7 +242,7 @@ function LayoutEditor({ layout, userId, mayWrite, mayPlan, refetch }: LayoutEdit
       <LayoutBlock draft={draft} lies={lies} judgement={judgement} />
       {mayWrite && (
         <Stack gap="s">
-          {before && dirty && <Small strong>{layoutsText.kept}</Small>}
+          {restored && dirty && <Small strong>{layoutsText.kept}</Small>}
           <Row>
             <Button
               kind="main"
