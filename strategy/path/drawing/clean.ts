@@ -153,18 +153,19 @@ export function closeJoints(
     return { segments, repaired };
   }
   const count = segments.length;
-  const sizes = new Float64Array(count);
-  let widest = 0;
-  for (let i = 0; i < count; i++) {
+  const sizeAt = (i: number): number => {
     const before = segments[i === 0 ? count - 1 : i - 1];
     const segment = segments[i];
-    if (!before || !segment) continue;
-    const size = pointDistance(segmentEnd(before), segmentStart(segment));
-    if (size > mention) repaired.push({ what: 'gap closed', at: segmentStart(segment), size });
-    sizes[i] = size;
-    if (size > widest) widest = size;
-  }
+    return before && segment ? pointDistance(segmentEnd(before), segmentStart(segment)) : 0;
+  };
+  let widest = 0;
+  for (let i = 0; i < count; i++) widest = Math.max(widest, sizeAt(i));
   if (widest <= exact) return { segments, repaired };
+  const sizes = Float64Array.from(segments, (segment, i) => {
+    const size = sizeAt(i);
+    if (size > mention) repaired.push({ what: 'gap closed', at: segmentStart(segment), size });
+    return size;
+  });
   const points = segments.map((segment, i): Point => {
     const b = segmentStart(segment);
     const before = segments[i === 0 ? count - 1 : i - 1] ?? segment;

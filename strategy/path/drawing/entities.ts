@@ -40,9 +40,10 @@ export function drawnEntities(document: DxfDocument, scale: number, notes: Notes
       entity.take(record);
       const own = nameOf(entity.tagOf(8));
       const layer = own === '0' && insertLayer !== null ? insertLayer : own;
-      const place = () => affinePoint(map, placeOf(entity, record.type));
       if (entity.number(67, 0) === 1) notes.leave(`${record.type} on a paper-space sheet`, null);
-      else if (entity.number(60, 0) === 1) notes.leave(`invisible ${record.type}`, place());
+      else if (entity.number(60, 0) === 1)
+        notes.leave(`invisible ${record.type}`, affinePoint(map, placeOf(entity, record.type)));
+      else if (record.type === 'LINE') paths.push({ type: 'LINE', layer, shapes: [lineShape(entity, map)] });
       else if (record.type === 'INSERT') insert(map, layer, depth);
       else {
         let next = i + 1;
@@ -53,7 +54,7 @@ export function drawnEntities(document: DxfDocument, scale: number, notes: Notes
         else {
           // the point of an old polyline says nothing, its first vertex does
           if (vertices[0]) entity.take(vertices[0]);
-          notes.leave(found, place());
+          notes.leave(found, affinePoint(map, placeOf(entity, record.type)));
         }
       }
     }
@@ -222,7 +223,14 @@ class Entity {
   }
 }
 
-/** Shapes of an entity under the map, or what it is left out as. */
+/** The commonest entity by far. Its places are the world's own, whatever its extrusion. */
+const lineShape = (entity: Entity, map: Affine): Shape => ({
+  kind: 'line',
+  from: affinePoint(map, { x: entity.number(10, 0), y: entity.number(20, 0) }),
+  to: affinePoint(map, { x: entity.number(11, 0), y: entity.number(21, 0) }),
+});
+
+/** Shapes of any other entity under the map, or what it is left out as. */
 function shapesOf(
   tags: Tags,
   record: RawEntity,
@@ -240,8 +248,6 @@ function shapesOf(
   };
   const mapped = (shapes: readonly Shape[]): Shape[] => shapes.map((shape) => shapeMap(map, shape));
   switch (record.type) {
-    case 'LINE':
-      return [{ kind: 'line', from: affinePoint(map, point(10)), to: affinePoint(map, point(11)) }];
     case 'CIRCLE': {
       const radius = Math.abs(entity.number(40, 0));
       return radius > 0 ? inPlane([circular(point(10), radius, 0, 2 * Math.PI)]) : 'CIRCLE without radius';

@@ -20,7 +20,8 @@ export type Nested = {
 /** Contours with their depth, role and the index of the contour around each, turned so that the part lies on the left of travel. */
 export function nestContours(contours: readonly Contour[]): Nested[] {
   if (contours.length === 0) return [];
-  const boxes = contours.map(boxOf);
+  const scratch = new Float64Array(4);
+  const boxes = contours.map((contour) => boxOf(contour, scratch));
   const signed = Float64Array.from(contours, contourArea);
   const index = new Flatbush(contours.length);
   for (const box of boxes) index.add(box.minX, box.minY, box.maxX, box.maxY);
@@ -75,12 +76,11 @@ export function nestContours(contours: readonly Contour[]): Nested[] {
   });
 }
 
-function boxOf({ segments }: Contour): Box {
+function boxOf({ segments }: Contour, box: Float64Array): Box {
   let minX = Infinity;
   let minY = Infinity;
   let maxX = -Infinity;
   let maxY = -Infinity;
-  const box = new Float64Array(4);
   for (const segment of segments) {
     writeBox(box, 0, segment);
     minX = Math.min(minX, box[0] ?? minX);

@@ -93,18 +93,27 @@ function sweepOf(boxes: Float64Array, axis: 0 | 1, slack: number): Sweep {
 
 function sweptPairs(boxes: Float64Array, slack: number, sweep: Sweep, meet: (a: number, b: number) => void): boolean {
   const { axis, order, lows } = sweep;
-  const other = 1 - axis;
   const count = order.length;
+  // in the order of the sweep, so that what is compared lies side by side in memory
+  const highs = new Float64Array(count);
+  const froms = new Float64Array(count);
+  const tos = new Float64Array(count);
+  for (let k = 0; k < count; k++) {
+    const at = 4 * (order[k] ?? 0);
+    highs[k] = (boxes[at + axis + 2] ?? 0) + slack;
+    froms[k] = boxes[at + 1 - axis] ?? 0;
+    tos[k] = (boxes[at + 3 - axis] ?? 0) + slack;
+  }
   let pairs = 0;
   for (let k = 0; k < count; k++) {
-    const a = order[k] ?? 0;
-    const high = (boxes[4 * a + axis + 2] ?? 0) + slack;
-    const low = (boxes[4 * a + other] ?? 0) - slack;
-    const top = (boxes[4 * a + other + 2] ?? 0) + slack;
+    const high = highs[k] ?? 0;
+    const from = froms[k] ?? 0;
+    const to = tos[k] ?? 0;
     for (let m = k + 1; m < count && (lows[m] ?? 0) <= high; m++) {
-      const b = order[m] ?? 0;
-      if ((boxes[4 * b + other] ?? 0) > top || (boxes[4 * b + other + 2] ?? 0) < low) continue;
+      if ((froms[m] ?? 0) > to || (tos[m] ?? 0) < from) continue;
       pairs++;
+      const a = order[k] ?? 0;
+      const b = order[m] ?? 0;
       if (a < b) meet(a, b);
       else meet(b, a);
     }
