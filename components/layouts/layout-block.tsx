@@ -34,13 +34,17 @@ export function LayoutBlock({
     <Sheet
       label={form.name}
       cells={[
-        { label: layoutsText.block.plate, value: layoutsText.on({ width, height, of }, system), share: 2.4 },
+        { label: layoutsText.block.plate, value: layoutsText.on({ width, height, of }, system), share: 2.6 },
         { label: layoutsText.block.pieces, value: String(lies.length), share: 0.8 },
         { label: layoutsText.block.contours, value: String(judgement.order.length), share: 0.8 },
         { label: layoutsText.block.used, value: quantityText(steel / plate, 'ratio', system).text },
         { label: layoutsText.block.cut, value: metres(judgement.cutLength) },
         { label: layoutsText.block.way, value: metres(judgement.travel) },
-        { label: layoutsText.block.order, value: layoutsText.orderBy[form.order === null ? 'computed' : 'hand'] },
+        {
+          label: layoutsText.block.order,
+          value: layoutsText.orderBy[form.order === null ? 'computed' : 'hand'],
+          share: 1.35,
+        },
         { label: layoutsText.block.problems, value: String(judgement.problems.length), share: 0.8 },
       ]}
     />
