@@ -7,6 +7,7 @@ import type { Point } from '../point.ts';
 import { pointDistance } from '../point.ts';
 import type { Segment } from '../segment.ts';
 import { segmentEnd, segmentLength, segmentPart, segmentStart } from '../segment.ts';
+import { besidePlate } from './beside-plate.ts';
 import type { LeadIn } from './lead-in.ts';
 import { narrowFeatures } from './narrow.ts';
 import { gapsBetweenContours, narrowSentence } from './narrow-said.ts';
@@ -65,8 +66,11 @@ export type CutPathRequest = {
 /** Something the programmer must look at; a contour that can't be cut is left out of the path. */
 export type CutPathProblem = {
   readonly contourId: string;
-  /** The scrap is narrower than the kerf, or the contour crosses itself; a treatment has no path; no room for a pierce; a lead-in shorter than needed. */
-  readonly kind: 'narrow' | 'corner' | 'pierce' | 'lead-in';
+  /**
+   * The scrap is narrower than the kerf, or the contour crosses itself; a treatment has no path; no room for a pierce; a lead-in shorter than needed; the path
+   * runs outside the plate, which is cut all the same: on a remnant an edge may be meant to.
+   */
+  readonly kind: 'narrow' | 'corner' | 'pierce' | 'lead-in' | 'plate';
   readonly at: Point; // m
   readonly why: string;
   /** Whether the contour is left out of the path for it. */
@@ -90,7 +94,7 @@ const onPath = 1e-7;
 /**
  * All that is cut on a plate, in order: each contour's path at half a kerf from the finished edge with its lead-in and what its corners get. The pieces of a run join
  * within rounding. With it, what could not be done as asked, each with its place: features narrower than the kerf, corners whose treatment found no
- * path, contours without room for a pierce. Throws RangeError for a kerf width or a lead-in that is not positive, an overcut below 0 and a
+ * path, contours without room for a pierce, paths that leave the plate. Throws RangeError for a kerf width or a lead-in that is not positive, an overcut below 0 and a
  * contour that is open or without area.
  */
 export function cutPathOf(request: CutPathRequest): CutPathPlan {
@@ -105,7 +109,7 @@ export function cutPathOf(request: CutPathRequest): CutPathPlan {
       contour.segments.map((segment) => ({ segment, of: { contourId: id, name } })),
     ),
   );
-  problems.push(...gapsBetweenContours(contours, edges, kerfWidth));
+  problems.push(...gapsBetweenContours(contours, edges, kerfWidth), ...besidePlate(contours, plate, kerfWidth));
   const loops = segmentIndex(
     rings.flatMap(({ ring }) =>
       ring.segments.flatMap((segment, i) => {

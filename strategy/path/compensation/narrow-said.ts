@@ -29,7 +29,8 @@ function against(width: number, kerfWidth: number): string {
   return `is narrower than the kerf: ${text(width, digits)} against ${text(kerfWidth, digits)}`;
 }
 
-const placeText = ({ x, y }: Point): string => {
+/** A place as a sentence says it: "(120.0 mm, 35.5 mm)". */
+export const placeText = ({ x, y }: Point): string => {
   const text = (value: number) => quantityText(value, 'length', 'metric', { unit: 'mm', decimals: 1 }).text;
   return `(${text(x)}, ${text(y)})`;
 };

@@ -223,4 +223,53 @@ describe('the path of a cut', () => {
     );
     expect(path.runs.map(({ name }) => name)).not.toContain('hole 2');
   });
+
+  it('says where and how far it runs outside the plate, and cuts the contour all the same', () => {
+    const box = { minX: 0, minY: -0.05, maxX: 0.4, maxY: 0.2003 };
+    const { path, problems } = cutPathOf(request({ plate: box }));
+    expect(path.runs).toHaveLength(1);
+    // on the left edge; nearer to the upper one, but not as bad
+    expect(problems).toEqual([
+      {
+        contourId: '1',
+        kind: 'plate',
+        at: { x: 0, y: 0 },
+        why: expect.stringMatching(
+          /^outline 1 lies on the plate's edge at .*: its cut runs outside the plate by 0\.8 mm$/,
+        ) as string,
+        leftOut: false,
+      },
+    ]);
+    const [near] = cutPathOf(request({ plate: { ...box, minX: -0.05 } })).problems;
+    expect(near?.kind).toBe('plate');
+    expect(near?.why).toMatch(/^outline 1 is 0\.3 mm from the plate's edge .* nearer than half a kerf: .* by 0\.5 mm$/);
+    // its lower left part is missing: 20 mm over, where it has nothing to be pierced in
+    const [over] = cutPathOf(request({ plate: { ...box, minX: 0.02 } })).problems;
+    expect(over?.why).toMatch(/^outline 1 reaches 20(\.0+)? mm over the plate's edge .* by 20\.8 mm$/);
+    expect(cutPathOf(request({ plate: { ...box, minX: -0.05, maxY: 0.2008 } })).problems).toEqual([]);
+  });
+
+  it('says that it runs into an opening of a remnant, of the part once and not of all holes in it', () => {
+    const edge = polygon([
+      { x: -0.1, y: -0.1 },
+      { x: 0.5, y: -0.1 },
+      { x: 0.5, y: 0.4 },
+      { x: -0.1, y: 0.4 },
+    ]);
+    const opening = (x: number) => contourReverse({ segments: [circleOf({ x, y: 0.1 }, 0.05)] });
+    const problemsWith = (x: number) =>
+      cutPathOf(
+        request({ contours: [bore('2', 0.25, 0.02), outline], plate: { edge, openings: [opening(x)] } }),
+      ).problems.filter(({ kind }) => kind === 'plate');
+    expect(problemsWith(0.351)).toEqual([]);
+    expect(problemsWith(0.3505).map(({ why }) => why)).toEqual([
+      expect.stringMatching(
+        /^outline 1 is 0\.5 mm from an opening in the plate at \(300\.0 mm, 100\.0 mm\), .* by 0\.3 mm$/,
+      ),
+    ]);
+    // the opening reaches into the part and over a piece of its hole
+    expect(problemsWith(0.305).map(({ contourId }) => contourId)).toEqual(['1']);
+    // within the part the hole alone meets it
+    expect(problemsWith(0.21).map(({ contourId }) => contourId)).toEqual(['2']);
+  });
 });
