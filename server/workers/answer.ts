@@ -14,4 +14,6 @@ export function answerQuestions<Q, A>(answer: (question: Q) => A | Promise<A>): 
   parentPort?.on('message', (question: Q) => {
     void answered(question).then((message) => parentPort?.postMessage(message));
   });
+  // its code is loaded: from now on the time is its own
+  parentPort?.postMessage('ready');
 }

@@ -27,9 +27,12 @@ type Settings = {
   readonly waiting: number;
   /** Bound on a thread's memory, MB. */
   readonly memory: number;
-  /** Time for one answer, ms; the thread is ended when it takes longer. */
+  /** Time for one answer, ms, beside what a new thread needs to start; the thread is ended when it takes longer. */
   readonly deadline: number;
 };
+
+/** Time a new thread may take to load its code on a busy machine, ms. */
+const startTime = 10_000;
 
 type Task<Q, A> = { readonly question: Q; resolve(answer: A): void; reject(error: Error): void };
 
@@ -41,19 +44,23 @@ export function createPool<Q, A>({ module, threads, waiting, memory, deadline }:
 
   const give = () => {
     while (queue.length > 0) {
-      const worker = idle.pop() ?? (busy.size < threads ? start() : null);
+      const waited = idle.pop();
+      const worker = waited ?? (busy.size < threads ? start() : null);
       const task = worker ? queue.shift() : undefined;
       if (!worker || !task) return;
-      const timer = setTimeout(() => {
-        drop(worker)?.reject(new WorkerRefusal('deadline'));
-        void worker.terminate();
-        give();
-      }, deadline);
-      busy.set(worker, { task, timer });
+      // a new thread must load its code first, which says nothing about the question
+      busy.set(worker, { task, timer: endAfter(worker, waited ? deadline : deadline + startTime) });
       worker.ref();
       worker.postMessage(task.question);
     }
   };
+
+  const endAfter = (worker: Worker, time: number): NodeJS.Timeout =>
+    setTimeout(() => {
+      drop(worker)?.reject(new WorkerRefusal('deadline'));
+      void worker.terminate();
+      give();
+    }, time);
 
   /** Takes the thread out of the books; gives the task it was at. */
   const drop = (worker: Worker): Task<Q, A> | undefined => {
@@ -67,7 +74,13 @@ export function createPool<Q, A>({ module, threads, waiting, memory, deadline }:
 
   const start = (): Worker => {
     const worker = startWorker(module, memory);
-    worker.on('message', (message: WorkerMessage<A>) => {
+    worker.on('message', (message: WorkerMessage<A> | 'ready') => {
+      if (message === 'ready') {
+        const at = busy.get(worker);
+        clearTimeout(at?.timer);
+        if (at) busy.set(worker, { ...at, timer: endAfter(worker, deadline) });
+        return;
+      }
       const task = drop(worker);
       worker.unref(); // an idle thread keeps no process alive
       idle.push(worker);
