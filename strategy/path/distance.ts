@@ -44,31 +44,39 @@ export function segmentDistance(a: Segment, b: Segment): Nearest {
   const meeting = segmentMeetings(a, b)[0];
   if (meeting) return { distance: 0, onFirst: meeting, onSecond: meeting };
   let best: Nearest = { distance: Infinity, onFirst: segmentStart(a), onSecond: segmentStart(b) };
-  const offer = (onFirst: Point, onSecond: Point) => {
-    const distance = pointDistance(onFirst, onSecond);
-    if (distance < best.distance) best = { distance, onFirst, onSecond };
-  };
-  for (const p of [segmentStart(a), segmentEnd(a)]) offer(p, segmentNearestPoint(b, p));
-  for (const p of [segmentStart(b), segmentEnd(b)]) offer(segmentNearestPoint(a, p), p);
+  for (const p of [segmentStart(a), segmentEnd(a)]) best = nearer(best, p, segmentNearestPoint(b, p));
+  for (const p of [segmentStart(b), segmentEnd(b)]) best = nearer(best, segmentNearestPoint(a, p), p);
   // the common normal passes through the centre of every arc involved
-  if (a.kind === 'arc') offerThroughCentre(a, b, offer);
-  if (b.kind === 'arc') offerThroughCentre(b, a, (q, p) => offer(p, q));
+  if (a.kind === 'arc') {
+    for (const { onArc, onOther } of throughCentre(a, b)) best = nearer(best, onArc, onOther);
+  }
+  if (b.kind === 'arc') {
+    for (const { onArc, onOther } of throughCentre(b, a)) best = nearer(best, onOther, onArc);
+  }
   return best;
 }
 
-function offerThroughCentre(arc: Arc, other: Segment, offer: (onArc: Point, onOther: Point) => void): void {
+/** The nearer of the best pair so far and another. No function of each call's own: this runs millions of times. */
+function nearer(best: Nearest, onFirst: Point, onSecond: Point): Nearest {
+  const distance = pointDistance(onFirst, onSecond);
+  return distance < best.distance ? { distance, onFirst, onSecond } : best;
+}
+
+function throughCentre(arc: Arc, other: Segment): { readonly onArc: Point; readonly onOther: Point }[] {
   const towards = pointSubtract(
     other.kind === 'line' ? segmentNearestPoint(other, arc.centre) : other.centre,
     arc.centre,
   );
   // concentric? Then the ends, which are tried already, are as near as anything
-  if (other.kind === 'arc' && pointLength(towards) === 0) return;
+  if (other.kind === 'arc' && pointLength(towards) === 0) return [];
   const direction = Math.atan2(towards.y, towards.x);
+  const found: { onArc: Point; onOther: Point }[] = [];
   for (const angle of [direction, direction + Math.PI]) {
     if (!arcCovers(arc, angle)) continue;
     const onArc = arcPointAtAngle(arc, angle);
-    offer(onArc, segmentNearestPoint(other, onArc));
+    found.push({ onArc, onOther: segmentNearestPoint(other, onArc) });
   }
+  return found;
 }
 
 function lineMeetsLine(a: Line, b: Line): Point[] {

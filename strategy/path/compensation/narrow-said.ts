@@ -50,16 +50,12 @@ export function gapsBetweenContours(
     for (const segment of first.contour.segments) {
       const found = nearestWithin(edges, segment, kerfWidth * (1 - 1e-6), (of) => (place.get(of.contourId) ?? 0) > i);
       if (!found) continue;
-      const at = between(found);
-      // inside an odd number of contours there is steel to be kept between them, not scrap
-      if (
-        contours.filter(({ contour }, k) => boxHolds(boxes[k], at) && contourContains(contour, at)).length % 2 ===
-        1
-      ) {
-        continue;
-      }
       const key = `${i} ${found.of.contourId}`;
       if (found.distance >= (closest.get(key)?.distance ?? Infinity)) continue;
+      const at = between(found);
+      // inside an odd number of contours there is steel to be kept between them, not scrap
+      const around = contours.filter(({ contour }, k) => boxHolds(boxes[k], at) && contourContains(contour, at)).length;
+      if (around % 2 === 1) continue;
       closest.set(key, { ...found, first, second: found.of.name });
     }
   });

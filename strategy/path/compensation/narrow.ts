@@ -80,13 +80,12 @@ function middleOf(edges: readonly number[], segments: readonly Segment[]): Point
 }
 
 function distanceFrom(path: SegmentIndex<null>, p: Point): number {
-  const place = { kind: 'line', start: p, end: p } as const;
-  return path.items.reduce((least, { segment }) => Math.min(least, segmentDistance(place, segment).distance), Infinity);
+  return path.items.reduce((least, { segment }) => Math.min(least, segmentPointDistance(segment, p)), Infinity);
 }
 
 type Scrap = {
-  /** Distance of a place from the contour, m, as far as `reach`; Infinity beyond. */
-  readonly room: (place: Point, reach: number) => number;
+  /** Whether the contour keeps `reach` m away from a place. */
+  readonly clear: (place: Point, reach: number) => boolean;
   readonly holds: (place: Point) => boolean;
   readonly near: (segment: Segment, reach: number) => number[];
 };
@@ -100,11 +99,13 @@ function scrapBeside(segments: readonly Segment[], partIsInside: boolean): Scrap
   index.finish();
   const starts = segments.map(segmentStart);
   return {
-    room: ({ x, y }, reach) =>
-      index.search(x - reach, y - reach, x + reach, y + reach).reduce((least, i) => {
+    clear: (place, reach) => {
+      const { x, y } = place;
+      return !index.search(x - reach, y - reach, x + reach, y + reach).some((i) => {
         const segment = segments[i];
-        return segment ? Math.min(least, segmentPointDistance(segment, { x, y })) : least;
-      }, Infinity),
+        return segment !== undefined && segmentPointDistance(segment, place) < reach;
+      });
+    },
     holds: (place) => {
       let inside = false;
       const slack = 1e-9;
@@ -172,7 +173,7 @@ function gapsBetween(
         const width = pointDistance(p, q);
         if (!(width > 0 && width <= most) || width >= (feature?.width ?? Infinity) * (1 - even)) continue;
         const at = { x: (p.x + q.x) / 2, y: (p.y + q.y) / 2 };
-        if (scrap.room(at, width) < (width / 2) * (1 - emptiness) || !scrap.holds(at)) continue;
+        if (!scrap.clear(at, (width / 2) * (1 - emptiness)) || !scrap.holds(at)) continue;
         feature = { kind: 'gap', width, at };
       }
       if (feature) found.set(`${i} ${k}`, { i, k, feature, fromEnds: fromEnds(feature.at, a, b) });
