@@ -2,9 +2,7 @@ import { queryOptions, useMutation, useQueryClient, type QueryClient } from '@ta
 import { cornerPlanEndpoints, type CornerPlan } from '@/shared/corner-plans.ts';
 import type { BodyOf } from '@/shared/endpoint.ts';
 import { apiCall } from './call.ts';
-import { cardsRoot, layoutsRoot, partsRoot } from './roots.ts';
-
-const root = ['corner-plans'] as const;
+import { cardsRoot, cornerPlansRoot as root, layoutsRoot, partsRoot } from './roots.ts';
 
 export const cornerPlanQuery = (planId: string) =>
   queryOptions({

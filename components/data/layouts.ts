@@ -2,7 +2,7 @@ import { queryOptions, useMutation, useQueryClient, type QueryClient } from '@ta
 import type { BodyOf } from '@/shared/endpoint.ts';
 import { layoutEndpoints, type Layout } from '@/shared/layouts.ts';
 import { apiCall } from './call.ts';
-import { layoutsRoot as root } from './roots.ts';
+import { cornerPlansRoot, layoutsRoot as root } from './roots.ts';
 
 export const layoutsQuery = () =>
   queryOptions({
@@ -18,7 +18,8 @@ export const layoutQuery = (layoutId: string) =>
 
 async function settle(client: QueryClient, layout: Layout): Promise<void> {
   client.setQueryData(layoutQuery(layout.id).queryKey, layout);
-  await client.invalidateQueries({ queryKey: root });
+  // a plan says which version of its layout is the newest
+  await Promise.all([root, cornerPlansRoot].map((queryKey) => client.invalidateQueries({ queryKey })));
 }
 
 export function useLayoutAdd() {

@@ -5,3 +5,4 @@ export const reviewsRoot = ['reviews'] as const;
 export const cardsRoot = ['cards'] as const;
 export const partsRoot = ['parts'] as const;
 export const layoutsRoot = ['layouts'] as const;
+export const cornerPlansRoot = ['corner-plans'] as const;
