@@ -9,6 +9,8 @@ export type Circle = { readonly centre: Point; readonly radius: number };
 
 /** Cells along the longer side at first, at most: a slit a thousand times as long as wide begins with cells wider than itself. */
 const mostAcross = 256;
+/** Moves of the best centre at most: some 30 halve the step down to rounding. */
+const mostMoves = 500;
 /** Coordinates differ by less from rounding, m. */
 const rounding = 1e-9;
 /** Directions in which a centre is moved as long as that makes the circle larger. */
@@ -18,12 +20,16 @@ const directions = Array.from({ length: 8 }, (_, i) => ({
 }));
 
 /**
- * The largest circle inside a closed contour, its radius at most `precision` m below the largest possible. Cells of the plane are halved as long as they can
+ * The largest circle inside a closed contour, its radius at most `precision` m, or this `share` of it, below the largest possible. Cells of the plane are halved as long as they can
  * hold a centre that much better, then the best centre is moved to the middle of where it is, to rounding. Ends as soon as a radius of `enough` m is found,
  * wherever that is.
  * Throws RangeError for a precision that is not positive.
  */
-export function largestCircleInside(contour: Contour, precision: number, enough = Infinity): Circle {
+export function largestCircleInside(
+  contour: Contour,
+  precision: number,
+  { enough = Infinity, share = 0 } = {},
+): Circle {
   if (!(precision > 0)) throw new RangeError(`precision ${precision} m is outside (0, ∞)`);
   const box = contourBox(contour);
   const reachOf = reachInto(contour);
@@ -45,7 +51,7 @@ export function largestCircleInside(contour: Contour, precision: number, enough 
     const found = cells.map((centre) => ({ centre, radius: reached(centre) }));
     const [size, h] = [half, half / 2];
     cells = found
-      .filter(({ radius }) => radius + size * Math.SQRT2 > best.radius + precision)
+      .filter(({ radius }) => radius + size * Math.SQRT2 > best.radius + Math.max(precision, share * best.radius))
       .flatMap(({ centre: { x, y } }) => [
         { x: x - h, y: y - h },
         { x: x + h, y: y - h },
@@ -54,10 +60,12 @@ export function largestCircleInside(contour: Contour, precision: number, enough 
       ]);
     half = h;
   }
-  for (let step = precision; step > 1e-9 * precision && best.radius < enough;) {
+  let step = precision;
+  for (let moves = 0; moves < mostMoves && step > 1e-9 * precision && best.radius < enough; moves++) {
     const { centre, radius } = best;
     for (const { x, y } of directions) reached({ x: centre.x + step * x, y: centre.y + step * y });
-    if (best.radius <= radius) step /= 2;
+    // between parallel edges a circle gains nothing but rounding, all along them
+    if (best.radius <= radius + 1e-6 * step) step /= 2;
   }
   return best;
 }
@@ -83,7 +91,10 @@ function reachInto({ segments }: Contour): (p: Point) => number {
     let square = least * least;
     let inside = false;
     for (let i = 0, b = 0; i < segments.length; i++, b += 4) {
-      const [minX, minY, maxX, maxY] = [boxes[b] ?? 0, boxes[b + 1] ?? 0, boxes[b + 2] ?? 0, boxes[b + 3] ?? 0];
+      const minX = boxes[b] ?? 0;
+      const minY = boxes[b + 1] ?? 0;
+      const maxX = boxes[b + 2] ?? 0;
+      const maxY = boxes[b + 3] ?? 0;
       const dx = x < minX ? minX - x : x > maxX ? x - maxX : 0;
       const dy = y < minY ? minY - y : y > maxY ? y - maxY : 0;
       if (dx * dx + dy * dy < square) {

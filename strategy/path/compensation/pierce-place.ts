@@ -119,8 +119,10 @@ export function piercePlace(path: StartPath, rule: LeadInRule, around: PierceSur
     }
     return null;
   };
-  // how far a place in a hole can be from the path at all: longer distances need no trial
-  const widest = path.closedIn ? largestCircleInside({ segments: path.segments }, 0.02 * shortest, full) : null;
+  // how far a place in a hole can be from the path at all, to a fiftieth: longer distances need no trial
+  const widest = path.closedIn
+    ? largestCircleInside({ segments: path.segments }, 0.02 * shortest, { enough: full, share: 0.019 })
+    : null;
   if (widest && widest.radius < shortest) return tooSmall(path, widest, craterRadius, around.kerfWidth);
   const distances = [full];
   if (widest && shortest < full) {
