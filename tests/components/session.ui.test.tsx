@@ -125,7 +125,7 @@ describe('the list of pages', () => {
 
   it('offers the lead all of them', () => {
     expect(placesOf(actorOf('lead')).map((one) => one.path)).toContain('/record');
-    expect(placesOf(actorOf('lead'))).toHaveLength(10);
+    expect(placesOf(actorOf('lead'))).toHaveLength(11);
   });
 
   it('knows which page an address belongs to', () => {
