@@ -62,7 +62,13 @@ export type MachineBlockFrame = z.infer<typeof blockFrameSchema>;
 const machineParams = z.object({ machineId: idSchema });
 
 const cutPieceSchema = z.discriminatedUnion('kind', [
-  z.object({ kind: z.enum(['lead-in', 'contour', 'loop']), segments: z.array(segmentSchema) }),
+  z.object({
+    kind: z.enum(['lead-in', 'contour', 'loop']),
+    segments: z.array(segmentSchema),
+    /** Shares of the cut's feed and mean power where it is eased. */
+    feedShare: z.number().optional(),
+    powerShare: z.number().optional(),
+  }),
   z.object({ kind: z.literal('dwell'), at: pointSchema, duration: z.number() }), // s
 ]) satisfies z.ZodType<CutPiece>;
 

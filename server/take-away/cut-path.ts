@@ -1,5 +1,5 @@
 import type { PlannedCorner } from '../../shared/corner-plans.ts';
-import type { Segment } from '../../strategy/path/segment.ts';
+import { segmentEnd, segmentStart, type Segment } from '../../strategy/path/segment.ts';
 import { leadInNeeded } from '../../strategy/pierce/index.ts';
 import type { CornerInsert, CutPathRequest } from '../../strategy/path/compensation/index.ts';
 import type { TakenPlan } from './repository.ts';
@@ -38,8 +38,11 @@ function plateOf(plate: TakenPlan['planned']['plate']): CutPathRequest['plate'] 
   return { minX: plate.min.x, minY: plate.min.y, maxX: plate.max.x, maxY: plate.max.y };
 }
 
-/** What a corner puts into the path `beside` m from the finished edge. An ease changes feed and power, not the path. */
-function insertsOf({ id, contourId, treatment, loop, dwell, round }: PlannedCorner, beside: number): CornerInsert[] {
+/** What a corner puts into the path `beside` m from the finished edge, and the stretch of it that is eased. */
+function insertsOf(
+  { id, contourId, treatment, loop, dwell, ease, round }: PlannedCorner,
+  beside: number,
+): CornerInsert[] {
   const index = cornerIndex(id, contourId);
   if (treatment === 'loop' && loop !== null) {
     return [{ contourId, index, name: `the loop of corner ${id}`, kind: 'path', as: 'loop', segments: loop.segments }];
@@ -50,6 +53,13 @@ function insertsOf({ id, contourId, treatment, loop, dwell, round }: PlannedCorn
   if (treatment === 'round' && round) {
     const segments = round.finished.map((arc) => arcBeside(arc, beside));
     return [{ contourId, index, name: `the round of corner ${id}`, kind: 'path', as: 'contour', segments }];
+  }
+  const [first, last] = [ease?.segments[0], ease?.segments.at(-1)];
+  if (treatment === 'ease' && ease && first && last) {
+    const { before, after, feedShare, powerShare } = ease;
+    const [from, to] = [segmentStart(first), segmentEnd(last)];
+    const name = `the ease of corner ${id}`;
+    return [{ contourId, index, name, kind: 'ease', from, to, before, after, feedShare, powerShare }];
   }
   return [];
 }

@@ -33,7 +33,7 @@ export async function cutFile({ taken, as, unit, at }: FileAsked): Promise<FileA
   const { frame } = taken;
   const own: BlockFrame = frame.unit === unit ? frame : { header: '', footer: '' };
   const without = as === 'iso' && own !== frame && (frame.header !== '' || frame.footer !== '');
-  const notes = [...(without ? [otherUnitNote(frame.unit)] : []), ...planNotes(taken, unit, cautions, at)];
+  const notes = [...(without ? [otherUnitNote(frame.unit)] : []), ...planNotes(taken, as, unit, cautions, at)];
   const file = { path, unit, title: planTitle(taken), notes };
   const text = { dxf: () => dxfText(file), svg: () => svgText(file), iso: () => blocksText(file, own) }[as]();
   return { kind: 'file', bytes: new TextEncoder().encode(text) };

@@ -22,7 +22,13 @@ const states: Readonly<Record<RevisionState, string>> = {
 export const planTitle = ({ planned }: TakenPlan): string => `Corner plan of ${planned.name}`;
 
 /** What must stand in every file, a sentence each: of what, in which state, what the programmer must look at, the cautions. */
-export function planNotes(taken: TakenPlan, unit: CutFileUnit, problems: readonly string[], at: Date): string[] {
+export function planNotes(
+  taken: TakenPlan,
+  as: TakeAwayFormat,
+  unit: CutFileUnit,
+  problems: readonly string[],
+  at: Date,
+): string[] {
   const { plan, revision, strategyName, machine } = taken;
   const shown = (value: number, dimension: Dimension) => quantityText(value, dimension, systems[unit]).text;
   const { feed, kerfWidth } = revision.content.cut;
@@ -32,7 +38,7 @@ export function planNotes(taken: TakenPlan, unit: CutFileUnit, problems: readonl
     `Plate ${shown(plan.thickness, 'length')} thick, at ${shown(plan.plateTemperature, 'temperature')}. Feed ${shown(feed, 'speed')}, kerf ${shown(kerfWidth, 'length')}.`,
     `Corner plan ${plan.id}, version ${plan.version}, taken away ${momentText(at)}.`,
     ...troubleSentence(taken),
-    ...easeSentence(taken),
+    ...easeSentence(taken, easeTold[as]),
     ...problems,
     ...takeAwayCautions,
   ];
@@ -51,11 +57,19 @@ function troubleSentence({ plan }: TakenPlan): string[] {
   ];
 }
 
-function easeSentence({ plan }: TakenPlan): string[] {
+const easeTold: Readonly<Record<TakeAwayFormat, string>> = {
+  dxf: 'listed in the comments below',
+  svg: 'told at each piece by data-feed-share and data-power-share',
+  iso: 'told in a comment before each',
+  pdf: 'down to the shares of the cut’s own in the table',
+};
+
+/** `where` says how the file tells it. */
+function easeSentence({ plan }: TakenPlan, where: string): string[] {
   const eased = plan.corners.filter(({ treatment }) => treatment === 'ease').length;
   if (eased === 0) return [];
   const corners = eased === 1 ? 'One corner is eased' : `${eased} corners are eased`;
-  return [`${corners}: feed and power are lowered there, which no file of a path says. See the plan.`];
+  return [`${corners}: feed and power are lowered there in steps, ${where}.`];
 }
 
 /** Said first where blocks go without the plant's own lines. */
@@ -139,7 +153,7 @@ export function planSheet(
         row: [
           placeText(corner.at, system),
           quantityText(corner.angle, 'angle', system).text,
-          `${corner.treatment}${wait}${corner.chosenBy === 'person' ? ', by hand' : ''}`,
+          `${corner.treatment}${wait}${easedTo(corner.ease)}${corner.chosenBy === 'person' ? ', by hand' : ''}`,
           radius === undefined ? '–' : shown(radius, 'length'),
           shown(corner.untreated, 'temperature'),
           shown(corner.treated, 'temperature'),
@@ -150,10 +164,17 @@ export function planSheet(
       };
     }),
     noCorners: 'No corner here is below the angle that the rules treat.',
-    notes: [stateSentence(taken), ...easeSentence(taken), ...problems, ...takeAwayCautions, hazards],
+    notes: [stateSentence(taken), ...easeSentence(taken, easeTold.pdf), ...problems, ...takeAwayCautions, hazards],
     foot: `${takeAwayCautions[0]} ${takeAwayCautions[1]}`,
     at,
   };
+}
+
+/** Feed before power where the two differ. */
+function easedTo(ease: TakenPlan['plan']['corners'][number]['ease']): string {
+  if (!ease) return '';
+  const [feed, power] = [ease.feedShare, ease.powerShare].map((share) => Math.round(share * 100));
+  return feed === power ? ` to ${feed} %` : ` to ${feed}, ${power} %`;
 }
 
 const hazards = 'Class 4 laser radiation, oxygen-fed burning, fume, a hot plate, ejected slag.';

@@ -1,7 +1,7 @@
 import type { Point } from '../path/point.ts';
 import { pointDistance } from '../path/point.ts';
 import type { Segment } from '../path/segment.ts';
-import { lineBetween } from '../path/segment.ts';
+import { lineBetween, segmentEnd, segmentStart } from '../path/segment.ts';
 import type { PlannedCorner } from './plan.ts';
 
 /** What a planned corner puts into its contour's path. */
@@ -21,14 +21,24 @@ export type PlannedInsert = {
     }
   /** The wait, s, with the beam off, and where: in the path's corner, or where the arc around a drawn fillet ends, m. */
   | { readonly kind: 'dwell'; readonly duration: number; readonly at: Point }
+  /** The stretch of the path that is eased, m: how long into the corner and out of it, and to which shares of feed and mean power in it. */
+  | {
+      readonly kind: 'ease';
+      readonly from: Point;
+      readonly to: Point;
+      readonly before: number;
+      readonly after: number;
+      readonly feedShare: number;
+      readonly powerShare: number;
+    }
 );
 
 /**
- * The pieces of path, m, or the wait, s, that the treatment of a corner puts into its contour's path; null for a corner that is left or eased: an ease changes
- * how fast the path is cut, not where.
+ * The pieces of path, m, or the wait, s, that the treatment of a corner puts into its contour's path, or the stretch of it that an ease cuts more slowly; null
+ * for a corner that is left.
  */
 export function cornerInsert(corner: PlannedCorner): PlannedInsert | null {
-  const { id, contourId, index, loop, dwell, round, drawn, pathPoint } = corner;
+  const { id, contourId, index, loop, dwell, ease, round, drawn, pathPoint } = corner;
   const named = { contourId, index, name: `the ${corner.treatment} of corner ${id}` };
   if (loop) {
     const into = drawn && pointDistance(drawn.from, pathPoint) > 0 ? [lineBetween(drawn.from, pathPoint)] : [];
@@ -36,5 +46,11 @@ export function cornerInsert(corner: PlannedCorner): PlannedInsert | null {
     return { ...named, kind: 'path', as: 'loop', segments: [...into, ...loop.segments, ...outOf] };
   }
   if (round) return { ...named, kind: 'path', as: 'contour', segments: [round.onPath] };
+  const [first, last] = [ease?.pieces[0], ease?.pieces.at(-1)];
+  if (ease && first && last) {
+    const { before, after, feedShare, powerShare } = ease;
+    const [from, to] = [segmentStart(first.segment), segmentEnd(last.segment)];
+    return { ...named, kind: 'ease', from, to, before, after, feedShare, powerShare };
+  }
   return dwell ? { ...named, kind: 'dwell', duration: dwell.duration, at: drawn?.to ?? pathPoint } : null;
 }

@@ -1,9 +1,12 @@
 import type { Point } from './point.ts';
 import type { Segment } from './segment.ts';
 
+/** Shares of the cut's own feed and mean power, in (0, 1]: of a contour's piece that is eased; left out where neither is. */
+export type CutEase = { readonly feedShare: number; readonly powerShare: number };
+
 /** A piece of a cut: one after another they make up what is cut from a pierce to where the beam goes off. */
 export type CutPiece =
-  | { readonly kind: 'lead-in' | 'contour' | 'loop'; readonly segments: readonly Segment[] }
+  | ({ readonly kind: 'lead-in' | 'contour' | 'loop'; readonly segments: readonly Segment[] } & Partial<CutEase>)
   /** The cut waits with the beam off before it goes on along the next piece. */
   | { readonly kind: 'dwell'; readonly at: Point; readonly duration: number }; // s
 

@@ -6,7 +6,7 @@ import { pathLength } from './segment.ts';
 export type EasedPiece = { readonly segment: Segment; readonly eased: number };
 
 /** Steps that stand for the even change along a stretch. */
-const steps = 8;
+export const easeSteps = 8;
 
 /**
  * The last `length` m of a path that leads into a corner, in pieces along which the ease grows evenly from 0 to 1, each with its middle value; what lies before
@@ -20,10 +20,12 @@ export function easedInto(
   const taken = Math.min(length, whole);
   if (!(taken > 0)) return { rest: path, eased: [] };
   const start = whole - taken;
-  const eased = Array.from({ length: steps }, (_, i) =>
-    pathPart(path, start + (taken * i) / steps, i + 1 === steps ? Infinity : start + (taken * (i + 1)) / steps).map(
-      (segment) => ({ segment, eased: (i + 0.5) / steps }),
-    ),
+  const eased = Array.from({ length: easeSteps }, (_, i) =>
+    pathPart(
+      path,
+      start + (taken * i) / easeSteps,
+      i + 1 === easeSteps ? Infinity : start + (taken * (i + 1)) / easeSteps,
+    ).map((segment) => ({ segment, eased: (i + 0.5) / easeSteps })),
   );
   return { rest: pathPart(path, 0, start), eased: eased.flat() };
 }
@@ -35,10 +37,10 @@ export function easedOutOf(
 ): { readonly rest: readonly Segment[]; readonly eased: readonly EasedPiece[] } {
   const taken = Math.min(length, pathLength(path));
   if (!(taken > 0)) return { rest: path, eased: [] };
-  const eased = Array.from({ length: steps }, (_, i) =>
-    pathPart(path, (taken * i) / steps, (taken * (i + 1)) / steps).map((segment) => ({
+  const eased = Array.from({ length: easeSteps }, (_, i) =>
+    pathPart(path, (taken * i) / easeSteps, (taken * (i + 1)) / easeSteps).map((segment) => ({
       segment,
-      eased: 1 - (i + 0.5) / steps,
+      eased: 1 - (i + 0.5) / easeSteps,
     })),
   );
   return { rest: pathPart(path, taken, Infinity), eased: eased.flat() };

@@ -191,7 +191,7 @@ describe('a corner plan’s cut path', () => {
     },
   );
 
-  test('goes round a rounded corner beside its arc, and says that an ease is not in the file', async () => {
+  test('goes round a rounded corner beside its arc, and says in each file where it is eased', async () => {
     const cornerRules = {
       ...plant.content.cornerRules,
       ease: { allowed: true, length: 0.01, feedShare: 0.5, powerShare: 0.5 },
@@ -213,7 +213,19 @@ describe('a corner plan’s cut path', () => {
     const beside = (radius + plant.content.cut.kerfWidth / 2) * 1000;
     expect(radii?.some((one) => Math.abs(one - beside) < 1e-3)).toBe(true);
     const said = await spoken.iso(await taken(planId, 'iso'));
-    expect(said).toContain('One corner is eased: feed and power are lowered there, which no file of a path says.');
+    expect(said).toContain(
+      'One corner is eased: feed and power are lowered there in steps, told in a comment before each.',
+    );
+    expect(said).toMatch(/ease: feed and power 53\.\d % of the cut's until/);
+    expect(await textOf(planId, 'svg')).toContain('data-feed-share="0.5');
+    expect(await textOf(planId, 'dxf')).toContain("shares of the cut's own:");
+    expect(await spoken.pdf(await taken(planId, 'pdf'))).toContain('ease to 50 %');
+    const shown = (await made(programmer.call(cutPathEndpoints.show, { params: { planId } }))).body;
+    const shares = shown.runs.flatMap(({ pieces }) =>
+      pieces.flatMap((piece) => (piece.kind === 'dwell' || piece.feedShare === undefined ? [] : [piece.feedShare])),
+    );
+    expect(Math.min(...shares)).toBeLessThan(0.55);
+    expect(shown.problems).toEqual([]);
     expect(said).not.toContain('is left out');
   });
 
@@ -227,6 +239,19 @@ describe('a corner plan’s cut path', () => {
       expect(answer.problem.detail).toMatch(/^[A-Z].*(outline|plate).*\.$/);
       expect(answer.headers['content-disposition']).toBeUndefined();
       expect(answer.headers['content-type']).toMatch(/^application\/problem\+json/);
+    }
+  });
+
+  test('that runs beside the plate’s own edge is cut, and each file and the screen say so', async () => {
+    const { id } = await makeApproved(plant, { gradeGroup: 'at the edge' });
+    const planId = await planOf(partId, id, { skeleton: { ...room, left: 0 } });
+    const why = /outline.* lies on the plate's edge at .*: its cut runs outside the plate by/;
+    const { problems } = (await made(programmer.call(cutPathEndpoints.show, { params: { planId } }))).body;
+    expect(problems).toEqual([expect.objectContaining({ leftOut: false, why: expect.stringMatching(why) as string })]);
+    for (const as of takeAwayFormats) {
+      expect((await spoken[as](await taken(planId, as))).replace(/\s+/g, ' ')).toMatch(
+        /its cut runs outside the plate by/,
+      );
     }
   });
 

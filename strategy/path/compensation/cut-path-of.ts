@@ -1,7 +1,7 @@
 import type { Contour } from '../contour.ts';
 import { contourArea } from '../contour.ts';
 import { contourCorners, cornerWait } from '../corner.ts';
-import type { CutPath, CutPiece, CutRun } from '../cut-path.ts';
+import type { CutEase, CutPath, CutPiece, CutRun } from '../cut-path.ts';
 import { segmentPointDistance } from '../distance.ts';
 import type { Point } from '../point.ts';
 import { pointDistance } from '../point.ts';
@@ -9,6 +9,8 @@ import type { Segment } from '../segment.ts';
 import { segmentEnd, segmentLength, segmentPart, segmentStart } from '../segment.ts';
 import { besidePlate } from './beside-plate.ts';
 import type { LeadIn } from './lead-in.ts';
+import type { EaseStretch } from './eased-along.ts';
+import { easedAlong } from './eased-along.ts';
 import { narrowFeatures } from './narrow.ts';
 import { gapsBetweenContours, narrowSentence } from './narrow-said.ts';
 import type { OffsetLoop } from './offset.ts';
@@ -30,7 +32,7 @@ export type CutContour = {
   readonly parent: string | null;
 };
 
-/** What a corner of a contour gets: pieces of path put in, or a wait. The corner stands at the start of the contour's segment `index`. */
+/** What a corner of a contour gets: pieces of path put in, a wait, or a stretch of its path eased. The corner stands at the start of the contour's segment `index`. */
 export type CornerInsert = {
   readonly contourId: string;
   readonly index: number;
@@ -45,6 +47,7 @@ export type CornerInsert = {
     }
   /** The wait, s, with the beam off: in the path's corner when no other place of the path is given. */
   | { readonly kind: 'dwell'; readonly duration: number; readonly at?: Point }
+  | ({ readonly kind: 'ease' } & EaseStretch)
 );
 
 export type CutPathRequest = {
@@ -84,6 +87,8 @@ type Ring = {
   readonly segments: readonly Segment[];
   /** For each segment the insert it belongs to, or null for the contour's own. */
   readonly inserts: readonly (CornerInsert | null)[];
+  /** For each segment what it is eased to, or null. */
+  readonly eases: readonly (CutEase | null)[];
   /** Seconds waited at the end of a segment, by its place. */
   readonly dwells: ReadonlyMap<number, number>;
 };
@@ -131,7 +136,11 @@ export function cutPathOf(request: CutPathRequest): CutPathPlan {
       closedIn,
       ...(near ? { near } : {}),
     };
-    const place = piercePlace(path, rule, { kerfWidth, plate, edges, loops, leadIns });
+    const around = { kerfWidth, plate, edges, loops, leadIns };
+    // where the feed changes only if there is room nowhere else
+    const atFullFeed = (i: number): boolean => path.free(i) && ring.eases[i] === null;
+    const first = ring.eases.some((ease) => ease) ? piercePlace({ ...path, free: atFullFeed }, rule, around) : null;
+    const place = first?.kind === 'place' ? first : piercePlace(path, rule, around);
     if (place.kind === 'none') {
       problems.push({ contourId: contour.id, kind: 'pierce', at: place.at, why: place.why, leftOut: true });
       continue;
@@ -238,10 +247,22 @@ function ringOf(
   placed: Set<CornerInsert>,
 ): Ring {
   const corners = new Map(contourCorners(contour).map((corner) => [corner.index, corner]));
-  let segments: { segment: Segment; insert: CornerInsert | null; dwell: number }[] = loop.contour.segments.map(
-    (segment) => ({ segment, insert: null, dwell: 0 }),
-  );
-  for (const insert of inserts) {
+  let segments: readonly RingItem[] = loop.contour.segments.map((segment) => ({
+    segment,
+    insert: null,
+    ease: null,
+    dwell: 0,
+  }));
+  // what is eased lies between what is put in
+  const inOrder = [...inserts].sort((a, b) => Number(a.kind === 'ease') - Number(b.kind === 'ease'));
+  for (const insert of inOrder) {
+    if (insert.kind === 'ease') {
+      const eased = easedAlong(segments, insert, onPath);
+      if (!eased) continue;
+      placed.add(insert);
+      segments = eased;
+      continue;
+    }
     const corner = corners.get(insert.index);
     const expected = corner?.convex ? cornerWait(corner, kerfWidth) : null;
     const [from, to] =
@@ -258,13 +279,19 @@ function ringOf(
   return {
     segments: segments.map(({ segment }) => segment),
     inserts: segments.map(({ insert }) => insert),
+    eases: segments.map(({ ease }) => ease),
     dwells: new Map(segments.flatMap(({ dwell }, i) => (dwell > 0 ? [[i, dwell] as const] : []))),
   };
 }
 
 type PathInsert = Extract<CornerInsert, { kind: 'path' }>;
 
-type RingItem = { readonly segment: Segment; readonly insert: CornerInsert | null; readonly dwell: number };
+type RingItem = {
+  readonly segment: Segment;
+  readonly insert: CornerInsert | null;
+  readonly ease: CutEase | null;
+  readonly dwell: number;
+};
 
 /** The ring with a wait at a place of it, its end or in the middle of a segment; null when the place is not on it. */
 function withDwell(ring: readonly RingItem[], duration: number, at: Point): RingItem[] | null {
@@ -321,7 +348,7 @@ function spliced(
     segment: leaves >= 1 - 1e-12 ? before.segment : segmentPart(before.segment, 0, leaves),
     dwell: 0,
   };
-  const put = insert.segments.map((segment): RingItem => ({ segment, insert, dwell: 0 }));
+  const put = insert.segments.map((segment): RingItem => ({ segment, insert, ease: null, dwell: 0 }));
   const tail: RingItem = {
     ...after,
     segment: comes <= 1e-12 ? after.segment : segmentPart(after.segment, comes, 1),
@@ -352,10 +379,15 @@ function busyJoints({ segments, inserts, dwells }: Ring): Set<number> {
 function piecesFrom(ring: Ring, start: number, share: number, overcut: number): CutPiece[] {
   const n = ring.segments.length;
   const pieces: CutPiece[] = [];
-  const add = (kind: 'contour' | 'loop', segment: Segment): void => {
-    const last = pieces.at(-1);
-    if (last && last.kind === kind) pieces[pieces.length - 1] = { kind, segments: [...last.segments, segment] };
-    else pieces.push({ kind, segments: [segment] });
+  const open: ({ readonly kind: 'contour' | 'loop'; readonly segments: Segment[] } & Partial<CutEase>)[] = [];
+  const add = (kind: 'contour' | 'loop', segment: Segment, ease: CutEase | null): void => {
+    const last = open.at(-1);
+    if (last && last === pieces.at(-1) && last.kind === kind && sameEase(last, ease)) last.segments.push(segment);
+    else {
+      const piece = { kind, segments: [segment], ...ease };
+      open.push(piece);
+      pieces.push(piece);
+    }
   };
   const kindOf = (i: number): 'contour' | 'loop' => {
     const insert = ring.inserts[i];
@@ -368,18 +400,24 @@ function piecesFrom(ring: Ring, start: number, share: number, overcut: number): 
   };
   const first = ring.segments[start];
   if (!first) return [];
-  add('contour', segmentPart(first, share, 1));
+  const firstEase = ring.eases[start] ?? null;
+  add('contour', segmentPart(first, share, 1), firstEase);
   waitAfter(start);
   for (let k = 1; k < n; k++) {
     const i = (start + k) % n;
     const segment = ring.segments[i];
     if (!segment) continue;
-    add(kindOf(i), segment);
+    add(kindOf(i), segment, ring.eases[i] ?? null);
     waitAfter(i);
   }
-  add('contour', segmentPart(first, 0, share));
+  add('contour', segmentPart(first, 0, share), firstEase);
   // past the start as far as asked, but not into the next corner
   const rest = (1 - share) * segmentLength(first);
-  if (overcut > 0) add('contour', segmentPart(first, share, share + (1 - share) * Math.min(1, overcut / rest)));
+  if (overcut > 0) {
+    add('contour', segmentPart(first, share, share + (1 - share) * Math.min(1, overcut / rest)), firstEase);
+  }
   return pieces;
 }
+
+const sameEase = (a: Partial<CutEase>, b: CutEase | null): boolean =>
+  a.feedShare === b?.feedShare && a.powerShare === b?.powerShare;

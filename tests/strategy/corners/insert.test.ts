@@ -2,7 +2,16 @@ import { describe, expect, it } from 'vitest';
 import type { CornerPlanRequest, CornerTreatment } from '../../../strategy/corners/index.ts';
 import { cornerInsert, cornerPlan } from '../../../strategy/corners/index.ts';
 import type { Contour } from '../../../strategy/path/index.ts';
-import { arcOf, lineBetween, pointDistance, segmentEnd, segmentStart } from '../../../strategy/path/index.ts';
+import {
+  arcOf,
+  easedShare,
+  lineBetween,
+  pathLength,
+  pointDistance,
+  segmentEnd,
+  segmentLength,
+  segmentStart,
+} from '../../../strategy/path/index.ts';
 import { cutPathOf } from '../../../strategy/path/compensation/index.ts';
 
 /** A plate of 100 mm with a sharp corner, a chamfer of 0.7 mm, a fillet of 0.8 mm and a bow, cut off at the fourth corner. */
@@ -110,7 +119,40 @@ describe('what corners put into the path of a contour', () => {
     expect(radii.filter((r) => Math.abs(r - 1.2e-3) < 1e-9)).toHaveLength(1);
   });
 
-  it('is nothing for an ease', () => {
-    expect(cutWith('ease').inserts).toEqual([]);
+  it('eases the path into each corner and out of it in even steps, without changing where it runs', () => {
+    const { corners, problems, pieces } = cutWith('ease');
+    expect(problems).toEqual([]);
+    const cut = pieces.flatMap((piece) => (piece.kind === 'contour' ? [piece] : []));
+    const lengthOf = (some: typeof cut) => some.reduce((sum, { segments }) => sum + pathLength(segments), 0);
+    const eased = cut.filter(({ feedShare }) => feedShare !== undefined);
+    const planned = corners.flatMap(({ ease }) => (ease ? [ease] : []));
+    expect(planned).toHaveLength(4);
+    const round = lengthOf(eased) - planned.reduce((sum, { before, after }) => sum + before + after, 0);
+    // the arc of the fillet and the chamfer lie between
+    expect(round).toBeGreaterThan(0);
+    expect(round).toBeLessThan(4e-3);
+    // 0.4 of the feed in the corner, half a step before it 1/16 of the way back to the whole
+    expect(Math.min(...eased.map(({ feedShare = 1 }) => feedShare))).toBeCloseTo(0.4, 9);
+    expect(Math.max(...eased.map(({ feedShare = 1 }) => feedShare))).toBeCloseTo(1 - 0.6 / 16, 9);
+    for (const { feedShare, powerShare } of eased) expect(powerShare).toBe(feedShare);
+    const plain = cutWith('leave').pieces.flatMap((piece) => (piece.kind === 'contour' ? [piece] : []));
+    expect(lengthOf(cut)).toBeCloseTo(lengthOf(plain), 9);
+    // as much time as the plan's own steps take at their feeds, of a sharp corner
+    const sharp = corners.find(({ id }) => id === 'c1-5')?.ease;
+    const tip = corners.find(({ id }) => id === 'c1-5')?.pathPoint;
+    if (!sharp || !tip) throw new Error('corner c1-5 is not eased');
+    const beside = eased.filter(({ segments }) =>
+      segments.every(
+        (one) => pointDistance(segmentStart(one), tip) < 6e-3 && pointDistance(segmentEnd(one), tip) < 6e-3,
+      ),
+    );
+    const slowly = (some: readonly { length: number; share: number }[]) =>
+      some.reduce((sum, { length, share }) => sum + length / share, 0);
+    expect(
+      slowly(beside.map(({ segments, feedShare = 1 }) => ({ length: pathLength(segments), share: feedShare }))),
+    ).toBeCloseTo(
+      slowly(sharp.pieces.map((one) => ({ length: segmentLength(one.segment), share: easedShare(one.eased, 0.4) }))),
+      9,
+    );
   });
 });

@@ -70,8 +70,13 @@ const arcStep: fc.Arbitrary<Step> = fc
     return arcOf(centre, radius, angle + Math.PI, left ? sweep : -sweep);
   });
 const step = fc.oneof(lineStep, bulgeStep, arcStep);
+const shareOf = near(0.05, 1);
 const piece = fc.oneof(
-  fc.record({ kind: fc.constantFrom(...cutLayers), steps: fc.array(step, { minLength: 1, maxLength: 5 }) }),
+  fc.record({
+    kind: fc.constantFrom(...cutLayers),
+    steps: fc.array(step, { minLength: 1, maxLength: 5 }),
+    ease: fc.option(fc.record({ feedShare: shareOf, powerShare: shareOf }), { nil: {} }),
+  }),
   fc.record({ kind: fc.constant('dwell' as const), duration: near(0.1, 12) }),
 );
 const cutPath: fc.Arbitrary<CutPath> = fc
@@ -89,7 +94,7 @@ const cutPath: fc.Arbitrary<CutPath> = fc
           at = segmentEnd(segment);
           return segment;
         });
-        return { kind: one.kind, segments };
+        return { kind: one.kind, segments, ...(one.kind === 'contour' ? one.ease : {}) };
       });
       return { contourId: String(i), name: `hole ${i} (bracket)`, pierce, pieces: joined };
     }),
@@ -539,3 +544,58 @@ function examplePath(): CutPath {
     ],
   };
 }
+
+describe('a stretch that is eased', () => {
+  const places = [0, 0.01, 0.015, 0.02, 0.03].map((x) => ({ x, y: 0 }));
+  const along = (i: number) => [lineBetween(places[i] ?? { x: 0, y: 0 }, places[i + 1] ?? { x: 0, y: 0 })];
+  const path: CutPath = {
+    runs: [
+      {
+        contourId: '1',
+        name: 'outline',
+        pierce: { x: 0, y: 0 },
+        pieces: [
+          { kind: 'contour', segments: along(0) },
+          { kind: 'contour', segments: along(1), feedShare: 0.7, powerShare: 0.7 },
+          { kind: 'contour', segments: along(2), feedShare: 0.4125, powerShare: 0.55 },
+          { kind: 'contour', segments: along(3) },
+        ],
+      },
+    ],
+  };
+
+  it('is said in comments of the blocks, before each step and where it ends', () => {
+    const lines = blocksText(fileOf(path), noFrame).trimEnd().split('\n');
+    expect(lines.slice(lines.indexOf('(contour)'), -1)).toEqual([
+      '(contour)',
+      'G01 X10.0 Y0.0',
+      '(contour)',
+      "(ease: feed and power 70 % of the cut's until the next comment)",
+      'G01 X15.0 Y0.0',
+      '(contour)',
+      "(ease: feed 41.3 % and power 55 % of the cut's until the next comment)",
+      'G01 X20.0 Y0.0',
+      '(contour)',
+      '(ease ends: feed and power of the cut again)',
+      'G01 X30.0 Y0.0',
+    ]);
+  });
+
+  it('is told by each path of the picture', () => {
+    const ofPath = [...svgText(fileOf(path)).matchAll(/<path d="[^"]*"(.*)\/>/g)].map(([, rest]) => rest);
+    expect(ofPath).toEqual([
+      '',
+      ' data-feed-share="0.7" data-power-share="0.7"',
+      ' data-feed-share="0.4125" data-power-share="0.55"',
+      '',
+    ]);
+  });
+
+  it('is listed in comments of the drawing, with the places where the steps end', () => {
+    const lines = dxfText(fileOf(path)).split('\n');
+    const comments = lines.filter((_, i) => lines[i - 1] === '999').join(' ');
+    expect(comments).toContain(
+      "Ease of outline from 10, 0, shares of the cut's own: feed and power 70 % to 15, 0; feed 41.3 % and power 55 % to 20, 0.",
+    );
+  });
+});

@@ -4,7 +4,7 @@ import { pointDistance } from '../../point.ts';
 import type { Segment } from '../../segment.ts';
 import { segmentEnd, segmentStart } from '../../segment.ts';
 import type { CutFile } from './cut-file.ts';
-import { cutFileUnits, segmentWithin } from './cut-file.ts';
+import { cutFileUnits, easeText, pieceEase, segmentWithin } from './cut-file.ts';
 import { plainLines, plainText } from './plain-text.ts';
 
 /** A plant's own lines before and after the blocks, as they are: nothing in them is read or changed. */
@@ -24,7 +24,7 @@ const commentWidth = 78;
 
 /**
  * The path as blocks after ISO 6983-1: G00 to the pierce, G01, G02 and G03 along the cut with I and J from an arc's start to its centre,
- * G04 for a dwell, and comments; no other word. Absolute positions in `file.unit`, middle of the kerf, y up. The unit and absolute
+ * G04 for a dwell, and comments, which say feed and power where they are eased; no other word. Absolute positions in `file.unit`, middle of the kerf, y up. The unit and absolute
  * positions are said in a comment and set by the plant's own header: the words for it differ between controls (G70 and G71 in the
  * standard; elsewhere G20 and G21, which yet others take for something else). RangeError where the pieces of a run don't join.
  */
@@ -48,6 +48,13 @@ export function blocksText(file: CutFile, frame: BlockFrame): string {
 function runBlocks(run: CutRun, number: string, file: CutFile): string[] {
   const write = writer(file.unit);
   let at = run.pierce;
+  let eased = false;
+  const said = (one: Exclude<CutPiece, { kind: 'dwell' }>): string[] => {
+    const [ease, before] = [pieceEase(one), eased];
+    eased = ease !== null;
+    if (ease) return [one.kind, `ease: ${easeText(ease)} of the cut's until the next comment`];
+    return before ? [one.kind, 'ease ends: feed and power of the cut again'] : [one.kind];
+  };
   const piece = (one: CutPiece): string[] => {
     if (one.kind === 'dwell') {
       mustJoin(at, one.at, run);
@@ -59,7 +66,7 @@ function runBlocks(run: CutRun, number: string, file: CutFile): string[] {
       at = segmentEnd(segment);
       return segmentWithin(segment, Math.PI).flatMap(write.segment);
     });
-    return [...commentOf(one.kind), ...blocks];
+    return [...said(one).flatMap(commentOf), ...blocks];
   };
   return [
     ...commentOf(`${number}: ${plainText(run.name)}`),

@@ -1,4 +1,4 @@
-import type { CutPath, CutPiece } from '../../cut-path.ts';
+import type { CutEase, CutPath, CutPiece, CutRun } from '../../cut-path.ts';
 import type { Segment } from '../../segment.ts';
 import { segmentPart } from '../../segment.ts';
 
@@ -36,4 +36,39 @@ export function segmentWithin(segment: Segment, most: number): readonly Segment[
   const parts = Math.ceil(Math.abs(segment.sweep) / most - 1e-9);
   if (parts <= 1) return [segment];
   return Array.from({ length: parts }, (_, i) => segmentPart(segment, i / parts, (i + 1) / parts));
+}
+
+/** What a piece is eased to; null of one at the cut's own feed and power. */
+export function pieceEase(piece: CutPiece): CutEase | null {
+  if (piece.kind === 'dwell' || piece.feedShare === undefined) return null;
+  return { feedShare: piece.feedShare, powerShare: piece.powerShare ?? 1 };
+}
+
+/** "feed 93 % and power 88 %": shares in words, to a tenth of a percent. */
+export function easeText({ feedShare, powerShare }: CutEase): string {
+  const percent = (share: number) => `${Number((share * 100).toFixed(1))} %`;
+  return feedShare === powerShare
+    ? `feed and power ${percent(feedShare)}`
+    : `feed ${percent(feedShare)} and power ${percent(powerShare)}`;
+}
+
+/** A stretch of a run that is eased: its pieces one after another. */
+export type EasedStretch = {
+  readonly run: CutRun;
+  readonly pieces: readonly { readonly segments: readonly Segment[]; readonly ease: CutEase }[];
+};
+
+/** Stretches of a path that are eased, in the order of cutting. */
+export function easedStretches({ runs }: CutPath): EasedStretch[] {
+  return runs.flatMap((run) => {
+    const stretches: { run: CutRun; pieces: { segments: readonly Segment[]; ease: CutEase }[] }[] = [];
+    let last: (typeof stretches)[number] | null = null;
+    for (const piece of run.pieces) {
+      const ease = pieceEase(piece);
+      if (ease === null) last = null;
+      else if (last) last.pieces.push({ segments: pieceSegments(piece), ease });
+      else stretches.push((last = { run, pieces: [{ segments: pieceSegments(piece), ease }] }));
+    }
+    return stretches;
+  });
 }

@@ -1,7 +1,9 @@
 import Drawing from 'dxf-writer';
+import type { Point } from '../../point.ts';
 import type { Arc, Segment } from '../../segment.ts';
-import type { CutFile } from './cut-file.ts';
-import { cutFileUnits, cutLayers, pieceSegments, segmentWithin } from './cut-file.ts';
+import { segmentEnd, segmentStart } from '../../segment.ts';
+import type { CutFile, EasedStretch } from './cut-file.ts';
+import { cutFileUnits, cutLayers, easedStretches, easeText, pieceSegments, segmentWithin } from './cut-file.ts';
 import { plainLines } from './plain-text.ts';
 
 /** The drawing index of every layer: black or white, whichever the ground is not. Layers tell the pieces apart, colours don't. */
@@ -12,7 +14,7 @@ const toDegrees = 180 / Math.PI;
 
 /**
  * Text of a DXF (ASCII, AC1021) with the path as lines and arcs on the layers contour, lead-in and loop, in `file.unit` ($INSUNITS). The
- * notes are its first lines, as comments (group 999). Middle of the kerf. Dwells are no geometry and are left out; pieces stand layer by
+ * notes are its first lines, as comments (group 999), followed by the stretches that are eased, which layers can't tell. Middle of the kerf. Dwells are no geometry and are left out; pieces stand layer by
  * layer, each layer's in the order of cutting.
  */
 export function dxfText(file: CutFile): string {
@@ -25,7 +27,8 @@ export function dxfText(file: CutFile): string {
     drawing.setActiveLayer(piece.kind);
     for (const segment of pieceSegments(piece).flatMap((one) => segmentWithin(one, Math.PI))) draw(segment);
   }
-  return `${[file.title, ...file.notes].flatMap(commentOf).join('')}${drawing.toDxfString()}\n`;
+  const eased = easedStretches(file.path).map((stretch) => easeSentence(stretch, scale));
+  return `${[file.title, ...file.notes, ...eased].flatMap(commentOf).join('')}${drawing.toDxfString()}\n`;
 
   function draw(segment: Segment): void {
     if (segment.kind === 'line') {
@@ -59,3 +62,15 @@ const rounded = (value: number, decimals: number): number => Number(value.toFixe
 
 /** Lines stay well below the 255 characters that old readers take. */
 const commentOf = (note: string): string[] => plainLines(note, 100).map((line) => `999\n${line}\n`);
+
+/** Where a stretch is eased, step by step: each from where the one before ends. */
+function easeSentence({ run, pieces }: EasedStretch, scale: number): string {
+  const place = ({ x, y }: Point) => `${rounded(x * scale, 4)}, ${rounded(y * scale, 4)}`;
+  const first = pieces[0]?.segments[0];
+  const steps = pieces.flatMap(({ segments, ease }) => {
+    const last = segments.at(-1);
+    return last ? [`${easeText(ease)} to ${place(segmentEnd(last))}`] : [];
+  });
+  const from = first ? ` from ${place(segmentStart(first))}` : '';
+  return `Ease of ${run.name}${from}, shares of the cut's own: ${steps.join('; ')}.`;
+}

@@ -1,8 +1,9 @@
+import type { CutPiece } from '../../cut-path.ts';
 import { boxGrow, boxUnion, emptyBox } from '../../point.ts';
 import { segmentBox } from '../../segment.ts';
 import { svgPathData } from '../../svg.ts';
 import type { CutFile, CutLayer } from './cut-file.ts';
-import { cutFileUnits, cutLayers, pieceSegments, segmentWithin } from './cut-file.ts';
+import { cutFileUnits, cutLayers, pieceEase, pieceSegments, segmentWithin } from './cut-file.ts';
 
 /** Free paper around the path, m, so that no line is cut in half. */
 const margin = 1e-3;
@@ -16,7 +17,8 @@ const dashes: Readonly<Record<CutLayer, string>> = { contour: '', 'lead-in': '2 
 
 /**
  * Text of an SVG in real size, in millimetres whatever unit the file was asked for in: x as in the drawing, y downwards. Groups with the
- * ids contour, lead-in and loop hold the path (middle of the kerf), a run's pieces in the order of cutting. The notes stand in `desc`, not
+ * ids contour, lead-in and loop hold the path (middle of the kerf), a run's pieces in the order of cutting; one that is eased has the shares of the cut's feed and
+ * power as data-feed-share and data-power-share. The notes stand in `desc`, not
  * in the picture: what is drawn in it may get cut.
  */
 export function svgText({ path, title, notes }: Omit<CutFile, 'unit'>): string {
@@ -31,10 +33,11 @@ export function svgText({ path, title, notes }: Omit<CutFile, 'unit'>): string {
     const dash = dashes[layer] === '' ? '' : ` stroke-dasharray="${dashes[layer]}"`;
     const paths = pieces
       .filter(({ kind }) => kind === layer)
-      .map((piece) => pieceSegments(piece).flatMap((one) => segmentWithin(one, largestSweep)))
-      .map((segments) => svgPathData(segments, { scale, digits }))
-      .filter((data) => data !== '')
-      .map((data) => `    <path d="${data}"/>\n`);
+      .map((piece) => {
+        const segments = pieceSegments(piece).flatMap((one) => segmentWithin(one, largestSweep));
+        const data = svgPathData(segments, { scale, digits });
+        return data === '' ? '' : `    <path d="${data}"${easeData(piece)}/>\n`;
+      });
     return `  <g id="${layer}" fill="none" stroke="#000000" stroke-width="0.1"${dash}>\n${paths.join('')}  </g>\n`;
   };
 
@@ -59,3 +62,9 @@ const escaped = (text: string): string =>
       ' ',
     )
     .replace(/[&<>"]/g, (letter) => entities[letter] ?? letter);
+
+function easeData(piece: CutPiece): string {
+  const ease = pieceEase(piece);
+  const share = (value: number) => String(Number(value.toFixed(4)));
+  return ease ? ` data-feed-share="${share(ease.feedShare)}" data-power-share="${share(ease.powerShare)}"` : '';
+}
