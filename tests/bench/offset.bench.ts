@@ -1,14 +1,17 @@
-import { ClipperOffset, EndType, JoinType } from 'clipper2-ts';
+import { area, ClipperOffset, EndType, JoinType } from 'clipper2-ts';
 import type { Path64, Paths64 } from 'clipper2-ts';
 import { contourOffset } from '../../strategy/path/compensation/index.ts';
 import type { Contour } from '../../strategy/path/index.ts';
-import { circleOf, segmentPointAt, segmentPointDistance } from '../../strategy/path/index.ts';
+import { circleOf, contourArea, segmentPointAt, segmentPointDistance } from '../../strategy/path/index.ts';
 import { bulged, flattened, randomContour, randomKinds, seeded } from '../support/random-contours.ts';
 import { sayLine, timeOf } from './line.ts';
 
 const kerf = 1.6e-3;
-/** What a file of the path must keep, m: the peer's chords stand off their arcs by no more. */
-const error = 1e-6;
+/**
+ * Error that the peer is asked to keep, m: the step of whole numbers that a plate in 10⁻⁴ mm has. Its chords stand off their arcs by no more, before the offset
+ * and in what it rounds. Ours keeps arcs and is exact to rounding: with chords the same is not to be had in any time.
+ */
+const error = 1e-7;
 const unit = 1e-8;
 
 // Two hundred contours as a plate has them: bores, outlines of lines and arcs, curves in short pieces.
@@ -26,6 +29,10 @@ const ours = (contour: Contour): number =>
   );
 
 function peer(contour: Contour): number {
+  return peerPaths(contour).reduce((count, points) => count + points.length, 0);
+}
+
+function peerPaths(contour: Contour): Paths64 {
   const offset = new ClipperOffset(2, error / unit);
   const path: Path64 = flattened(contour, error).map(({ x, y }) => ({
     x: Math.round(x / unit),
@@ -34,8 +41,28 @@ function peer(contour: Contour): number {
   offset.addPath(path, JoinType.Round, EndType.Polygon);
   const solution: Paths64 = [];
   offset.execute(kerf / 2 / unit, solution);
-  return solution.reduce((count, points) => count + points.length, 0);
+  return solution;
 }
+
+/** Largest error of an area within the path, as a share of it, over the circles: there it is known. */
+function largestAreaError(areaOf: (contour: Contour) => number): number {
+  return contours.reduce((largest, contour) => {
+    const [circle] = contour.segments;
+    if (contour.segments.length !== 1 || circle?.kind !== 'arc') return largest;
+    const exact = Math.PI * (circle.radius + kerf / 2) ** 2;
+    return Math.max(largest, Math.abs(areaOf(contour) / exact - 1));
+  }, 0);
+}
+const areaErrors = {
+  ours: largestAreaError((contour) =>
+    contourOffset(contour, kerf / 2, { outside: { kind: 'arc' } }).reduce(
+      (sum, one) => sum + contourArea(one.contour),
+      0,
+    ),
+  ),
+  peer: largestAreaError((contour) => peerPaths(contour).reduce((sum, points) => sum + area(points) * unit ** 2, 0)),
+};
+console.error(`largest area error of circles: ours ${areaErrors.ours}, peer ${areaErrors.peer}`);
 
 /** How far places of our path are from half a kerf away from the contour, as a share of it. */
 const errors = contours.flatMap((contour) =>
