@@ -2,16 +2,7 @@ import Flatbush from 'flatbush';
 import { segmentCrossesRay } from '../contour.ts';
 import { segmentMeetings, segmentPointDistance } from '../distance.ts';
 import type { Box, Point } from '../point.ts';
-import {
-  boxGrow,
-  pointAdd,
-  pointCross,
-  pointDistance,
-  pointDot,
-  pointLeft,
-  pointScale,
-  pointSubtract,
-} from '../point.ts';
+import { pointAdd, pointCross, pointDistance, pointDot, pointLeft, pointScale, pointSubtract } from '../point.ts';
 import type { Segment } from '../segment.ts';
 import {
   segmentBox,
@@ -81,28 +72,37 @@ function cutAtMeetings(pieces: readonly ParallelPiece[], tolerance: number): { s
     else if ((1 - t) * length <= tolerance) places.join(place, 2 * i + 1);
     else cuts[i]?.push({ t, place });
   };
+  // an end that touches another piece: coinciding pieces meet nowhere else, and rounding may hide a touch
+  const touch = (end: Point, place: number, segment: Segment, box: Box, i: number): void => {
+    if (boxHolds(box, end, tolerance) && segmentPointDistance(segment, end) <= tolerance) cut(i, end, place);
+  };
   for (let i = 0; i < pieces.length; i++) {
-    const [a, box, endsOfA] = [pieces[i], boxes[i], ends[i]];
+    const a = pieces[i];
+    const box = boxes[i];
+    const endsOfA = ends[i];
     if (!a || !box || !endsOfA) continue;
-    const grown = boxGrow(box, tolerance);
-    if (pointDistance(...endsOfA) <= tolerance) places.join(2 * i, 2 * i + 1);
-    for (const k of index.search(grown.minX, grown.minY, grown.maxX, grown.maxY, (other) => other > i)) {
-      const [b, endsOfB] = [pieces[k], ends[k]];
-      if (!b || !endsOfB) continue;
+    if (pointDistance(endsOfA[0], endsOfA[1]) <= tolerance) places.join(2 * i, 2 * i + 1);
+    const near = index.search(
+      box.minX - tolerance,
+      box.minY - tolerance,
+      box.maxX + tolerance,
+      box.maxY + tolerance,
+      (other) => other > i,
+    );
+    for (const k of near) {
+      const b = pieces[k];
+      const other = boxes[k];
+      const endsOfB = ends[k];
+      if (!b || !other || !endsOfB) continue;
       for (const at of segmentMeetings(a.segment, b.segment)) {
         const place = places.add();
         cut(i, at, place);
         cut(k, at, place);
       }
-      // ends that touch the other piece: coinciding pieces meet nowhere else, and rounding may hide a touch
-      const other = boxes[k];
-      endsOfB.forEach((end, side) => {
-        if (boxHolds(grown, end) && segmentPointDistance(a.segment, end) <= tolerance) cut(i, end, 2 * k + side);
-      });
-      endsOfA.forEach((end, side) => {
-        if (!other || !boxHolds(boxGrow(other, tolerance), end)) return;
-        if (segmentPointDistance(b.segment, end) <= tolerance) cut(k, end, 2 * i + side);
-      });
+      touch(endsOfB[0], 2 * k, a.segment, box, i);
+      touch(endsOfB[1], 2 * k + 1, a.segment, box, i);
+      touch(endsOfA[0], 2 * i, b.segment, other, k);
+      touch(endsOfA[1], 2 * i + 1, b.segment, other, k);
     }
   }
   const inOrder = cuts.map((own, piece) => {
@@ -116,12 +116,14 @@ function cutAtMeetings(pieces: readonly ParallelPiece[], tolerance: number): { s
   const stretches: Stretch[] = [];
   inOrder.forEach((own, piece) => {
     const length = lengths[piece] ?? 0;
-    const stops = [{ t: 0, place: 2 * piece }, ...own, { t: 1, place: 2 * piece + 1 }];
-    for (let s = 1; s < stops.length; s++) {
-      const [a, b] = [stops[s - 1], stops[s]];
-      if (!a || !b) continue;
-      const [from, to] = [places.of(a.place), places.of(b.place)];
-      const stretch = { piece, t0: a.t, t1: b.t, from, to, length: (b.t - a.t) * length };
+    let a = { t: 0, place: 2 * piece };
+    for (let s = 0; s <= own.length; s++) {
+      const before = a;
+      const b = own[s] ?? { t: 1, place: 2 * piece + 1 };
+      a = b;
+      const from = places.of(before.place);
+      const to = places.of(b.place);
+      const stretch = { piece, t0: before.t, t1: b.t, from, to, length: (b.t - before.t) * length };
       // too short to be seen: its two ends are one place
       if (from === to && stretch.length <= 4 * tolerance) continue;
       stretches.push(stretch);
@@ -130,8 +132,9 @@ function cutAtMeetings(pieces: readonly ParallelPiece[], tolerance: number): { s
   return { stretches, nodes: places.count };
 }
 
-const boxHolds = (box: Box, { x, y }: Point): boolean =>
-  x >= box.minX && x <= box.maxX && y >= box.minY && y <= box.maxY;
+/** Whether a place lies in a box or beside it by no more than `slack` m. */
+const boxHolds = (box: Box, { x, y }: Point, slack: number): boolean =>
+  x >= box.minX - slack && x <= box.maxX + slack && y >= box.minY - slack && y <= box.maxY + slack;
 
 /** Numbers of places that turn out to be one: each stands for the lowest of those joined with it. */
 class Places {
@@ -158,7 +161,9 @@ class Places {
   }
 
   join(one: number, other: number): void {
-    const [a, b] = [this.of(one), this.of(other)];
+    const a = this.of(one);
+    const b = this.of(other);
+    if (a === b) return;
     this.parent[Math.max(a, b)] = Math.min(a, b);
   }
 }
@@ -335,13 +340,11 @@ function mergedPieces(loop: readonly Stretch[], pieces: readonly ParallelPiece[]
     runs[0] = { ...last, t1: first.t1, to: first.to };
     runs.pop();
   }
-  const parts = runs.flatMap(({ piece, t0, t1 }) => {
-    const whole = pieces[piece];
-    if (!whole) return [];
-    return [t0 === 0 && t1 === 1 ? whole : { ...whole, segment: segmentPart(whole.segment, t0, t1) }];
-  });
   const merged: ParallelPiece[] = [];
-  for (const part of parts) {
+  for (const { piece, t0, t1 } of runs) {
+    const whole = pieces[piece];
+    if (!whole) continue;
+    const part = t0 === 0 && t1 === 1 ? whole : { segment: segmentPart(whole.segment, t0, t1), source: whole.source };
     const before = merged.at(-1);
     const line = before && straightOn(before, part, tolerance);
     if (line) merged[merged.length - 1] = line;
