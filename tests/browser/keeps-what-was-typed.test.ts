@@ -147,10 +147,15 @@ describe('what somebody typed', () => {
     await page.goto('/parts/new');
     const before = await stored();
     const large = { name: 'large.dxf', mimeType: 'image/vnd.dxf', buffer: Buffer.alloc(11 * 1024 * 1024, '0\n') };
+    const picture = {
+      name: 'picture.svg',
+      mimeType: 'image/svg+xml',
+      buffer: Buffer.from('\x89PNG\r\n\x1a\n', 'latin1'),
+    };
     const refused: readonly [name: string, file: string | typeof large, sentence: RegExp][] = [
       ['empty.dxf', path.join(drawings, 'empty.dxf'), /empty/i],
-      ['not-a-drawing.dxf', path.join(drawings, 'not-a-drawing.dxf'), /not a DXF|no DXF/i],
-      ['window.svg', path.join(drawings, 'window.svg'), /SVG/],
+      ['not-a-drawing.dxf', path.join(drawings, 'not-a-drawing.dxf'), /neither a DXF/],
+      ['picture.svg', picture, /picture of pixels/],
       ['decimal-comma.dxf', path.join(drawings, 'decimal-comma.dxf'), /comma/i],
       ['open-lines.dxf', path.join(drawings, 'open-lines.dxf'), /no closed contour/],
       ['large.dxf', large, /at most 10 MiB/],
