@@ -10,7 +10,7 @@ import { segmentEnd, segmentLength, segmentPart, segmentStart } from '../segment
 import { besidePlate } from './beside-plate.ts';
 import type { LeadIn } from './lead-in.ts';
 import type { EaseStretch } from './eased-along.ts';
-import { easedAlong } from './eased-along.ts';
+import { easedAbout, easedAlong } from './eased-along.ts';
 import { narrowFeatures } from './narrow.ts';
 import { gapsBetweenContours, narrowSentence } from './narrow-said.ts';
 import type { OffsetLoop } from './offset.ts';
@@ -256,15 +256,16 @@ function ringOf(
   // what is eased lies between what is put in
   const inOrder = [...inserts].sort((a, b) => Number(a.kind === 'ease') - Number(b.kind === 'ease'));
   for (const insert of inOrder) {
+    const corner = corners.get(insert.index);
+    const expected = corner?.convex ? cornerWait(corner, kerfWidth) : null;
     if (insert.kind === 'ease') {
-      const eased = easedAlong(segments, insert, onPath);
+      const eased =
+        easedAlong(segments, insert, onPath) ?? (expected && easedAbout(segments, expected, insert, onPath));
       if (!eased) continue;
       placed.add(insert);
       segments = eased;
       continue;
     }
-    const corner = corners.get(insert.index);
-    const expected = corner?.convex ? cornerWait(corner, kerfWidth) : null;
     const [from, to] =
       insert.kind === 'path'
         ? [segmentStart(insert.segments[0] ?? never()), segmentEnd(insert.segments.at(-1) ?? never())]

@@ -56,6 +56,38 @@ export function easedAlong<T extends Item>(ring: readonly T[], stretch: EaseStre
   return null;
 }
 
+/**
+ * The same about a corner of the path, where the stretch's ends are not on it: beside inside corners the path is shorter than the edges' parallels. As much before
+ * the corner and after it, as far as nothing is put in; null where the corner is not on the path either.
+ */
+export function easedAbout<T extends Item>(
+  ring: readonly T[],
+  corner: Point,
+  stretch: EaseStretch,
+  slack: number,
+): T[] | null {
+  const n = ring.length;
+  const i = ring.findIndex(({ segment, insert }) => !insert && pointDistance(segmentEnd(segment), corner) <= slack);
+  if (i < 0) return null;
+  // how many segments a way takes from the corner, the share of the last, and its length
+  const wayOf = (step: 1 | -1, wanted: number) => {
+    let length = 0;
+    for (let k = 0; k < n / 2; k++) {
+      const item = ring[(step === 1 ? i + 1 + k : i - k + n) % n];
+      const own = item && item.insert === null ? segmentLength(item.segment) : 0;
+      if (own === 0) return k === 0 ? null : { count: k, share: 1, length };
+      if (length + own >= wanted) return { count: k + 1, share: (wanted - length) / own, length: wanted };
+      length += own;
+    }
+    return null;
+  };
+  const [back, on] = [wayOf(-1, stretch.before), wayOf(1, stretch.after)];
+  if (!back || !on || back.count + on.count > n) return null;
+  const start = (i - back.count + 1 + n) % n;
+  const actual = { ...stretch, before: back.length, after: on.length };
+  return split(ring, start, 1 - back.share, back.count + on.count - 1, on.share, actual);
+}
+
 const startsOn = (segment: Segment, p: Point, slack: number): boolean =>
   segmentPointDistance(segment, p) <= slack && pointDistance(segmentEnd(segment), p) > slack;
 

@@ -272,4 +272,26 @@ describe('the path of a cut', () => {
     // within the part the hole alone meets it
     expect(problemsWith(0.21).map(({ contourId }) => contourId)).toEqual(['2']);
   });
+
+  it('eases about the corner where an inside corner beside it cuts the planned stretch short', () => {
+    const ease = { before: 5e-3, after: 5e-3, feedShare: 0.4, powerShare: 0.5 };
+    // the stretch is planned to begin and end beside the path
+    const stretch = { from: { x: 0.295, y: -0.01 }, to: { x: 0.31, y: 5e-3 }, ...ease };
+    const insert: CornerInsert = {
+      contourId: '1',
+      index: 1,
+      name: 'the ease of corner c1-1',
+      kind: 'ease',
+      ...stretch,
+    };
+    const { path, problems } = cutPathOf(request({ inserts: [insert] }));
+    expect(problems).toEqual([]);
+    const eased = path.runs.flatMap(({ pieces }) =>
+      pieces.flatMap((piece) => (piece.kind === 'dwell' || piece.feedShare === undefined ? [] : [piece])),
+    );
+    expect(pathLength(eased.flatMap(({ segments }) => segments))).toBeCloseTo(10e-3, 9);
+    expect(Math.min(...eased.map(({ powerShare = 1 }) => powerShare))).toBeCloseTo(1 - 0.5 * (15 / 16), 9);
+    const elsewhere = { ...insert, index: 77 };
+    expect(cutPathOf(request({ inserts: [elsewhere] })).problems.map(({ kind }) => kind)).toEqual(['corner']);
+  });
 });
