@@ -20,7 +20,7 @@ await runCommand(async () => {
   await buildWeb();
   const { startDemoStack } = await import('./demo-stack.mjs');
   const { launchBrowser } = await import('./browser.mjs');
-  const { contextOf, lookers, routesOf, settled, sizes, themes } = await import('./routes-to-look-at.mjs');
+  const { contextOf, isOwnNote, lookers, routesOf, settled, sizes, themes } = await import('./routes-to-look-at.mjs');
   const cluster = await startCluster({ kind: 'test' });
   const stack = await startDemoStack({ cluster, database: `look_${process.pid}` });
   const browser = await launchBrowser();
@@ -52,7 +52,10 @@ await runCommand(async () => {
   async function look({ context, url, picture }) {
     const page = await context.newPage();
     page.on('pageerror', (error) => say(`${picture}: page error: ${error.message}`));
-    page.on('console', (message) => message.type() === 'error' && say(`${picture}: console: ${message.text()}`));
+    page.on('console', (message) => {
+      if (message.type() !== 'error' || isOwnNote(message.text(), message.location().url, url)) return;
+      say(`${picture}: console: ${message.text()}`);
+    });
     try {
       await page.goto(url, { waitUntil: 'load' });
       await settled(page);

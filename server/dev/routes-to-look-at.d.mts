@@ -9,4 +9,4 @@ export const themes: readonly ('light' | 'night')[];
 export function contextOf(browser: Browser, stack: DemoStack, who: Looker, size: Size): Promise<BrowserContext>;
 export function routesOf(context: BrowserContext, who: Looker): Promise<readonly (readonly [string, string])[]>;
 export function settled(page: Page): Promise<void>;
-export const unknownTag: string;
+export function isOwnNote(text: string, from: string, page: string): boolean;

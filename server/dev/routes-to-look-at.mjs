@@ -6,7 +6,7 @@ export const sizes = { phone: { width: 390, height: 844 }, wide: { width: 1440, 
 export const themes = ['light', 'night'];
 
 /** The tag of a plate that nobody booked in. */
-export const unknownTag = 'NOBODY-KNOWS';
+const unknownTag = 'NOBODY-KNOWS';
 
 const strangersRoutes = [
   ['sign-in', '/sign-in'],
@@ -126,4 +126,13 @@ export async function settled(page) {
   await page.evaluate(() => document.fonts.ready);
   // Charts are drawn once their width is known, and predictions a moment after what they are made of.
   await page.waitForTimeout(250);
+}
+
+/** The browser notes every refused request; a stranger's question who is signed in, a page that isn't there and a plate that nobody booked in are meant to be refused. */
+export function isOwnNote(text, from, page) {
+  const status = /status of (401|404)/.exec(text)?.[1];
+  if (!status) return false;
+  const { pathname, searchParams } = new URL(from);
+  if (status === '401') return pathname === '/api/sessions/current';
+  return pathname === page || (pathname === '/api/card' && searchParams.get('tag') === unknownTag);
 }

@@ -6,11 +6,11 @@ import { startDemoStack, type DemoStack } from '../../server/dev/demo-stack.mjs'
 import { startCluster } from '../../server/dev/postgres.mjs';
 import {
   contextOf,
+  isOwnNote,
   lookers,
   routesOf,
   settled,
   sizes,
-  unknownTag,
   type Looker,
   type Size,
 } from '../../server/dev/routes-to-look-at.mjs';
@@ -77,14 +77,6 @@ describe('every page of every role, loaded by its own address', () => {
     return faults;
   }
 });
-
-/** The browser notes every refused request; a stranger's question who is signed in, a page that isn't there and a plate that nobody booked in are meant to be refused. */
-const isOwnNote = (text: string, from: string, page: string): boolean =>
-  (text.includes('status of 401') && from.endsWith('/api/sessions/current')) ||
-  (text.includes('status of 404') && (new URL(from).pathname === page || asksForUnknownTag(new URL(from))));
-
-const asksForUnknownTag = ({ pathname, searchParams }: URL): boolean =>
-  pathname === '/api/card' && searchParams.get('tag') === unknownTag;
 
 /** What breaks axe's rules, and by night, which changes nothing but colours, its rule of contrast. */
 async function unreadable(page: Page): Promise<string[]> {
