@@ -50,8 +50,8 @@ export type CutMoment = {
 };
 
 /**
- * The cut in time: to each pierce at the machine's greatest feed, its routine, and along the path between the waits under the bounds of feed,
- * acceleration and jerk. What the head does up and down isn't counted.
+ * The cut in time: to each pierce at the machine's greatest feed, its routine, and along the path between the waits under the bounds of feed, eased
+ * where a corner is, acceleration and jerk. What the head does up and down isn't counted.
  */
 export function cutTimeline({ runs }: CutPath, cutting: CornerPlan['cutting']): CutTimeline {
   const steps: CutStep[] = [];
@@ -71,11 +71,12 @@ export function cutTimeline({ runs }: CutPath, cutting: CornerPlan['cutting']): 
     head = pierce;
     const segments: Segment[] = [];
     const kinds: CutPiece['kind'][] = [];
+    const bounds: (number | undefined)[] = [];
     let first = 0;
     const cut = () => {
       const stretch = segments.slice(first);
       if (stretch.length === 0) return;
-      const clock = pathClock(stretch, cutting);
+      const clock = pathClock(stretch, { ...cutting, bounds: bounds.slice(first) });
       let length = 0;
       const reached = Float64Array.from(stretch, (segment) => (length += segmentLength(segment)));
       const end = now + (clock.time.at(-1) ?? 0);
@@ -96,6 +97,7 @@ export function cutTimeline({ runs }: CutPath, cutting: CornerPlan['cutting']): 
       for (const segment of piece.segments) {
         segments.push(segment);
         kinds.push(piece.kind);
+        bounds.push(piece.feedShare === undefined ? undefined : piece.feedShare * cutting.feed);
       }
     }
     cut();

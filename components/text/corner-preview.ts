@@ -25,7 +25,7 @@ export const runText = {
   keys: 'Keys on the slider: arrows 1 s (10 s with Shift), Page Up and Page Down from contour to contour, Home and End.',
   legend: 'Heavy: already cut. Hatched the other way: dropped out. Ring with a cross: the head.',
   counted:
-    'Counted: ways between pierces, each pierce’s routine, the path at its feed and the waits. Not counted: the head’s travel up and down, the lower feed of an ease.',
+    'Counted: ways between pierces, each pierce’s routine, the path at its feed, lower where a corner is eased, and the waits. Not counted: the head’s travel up and down.',
   about: 'Keys, and what is counted',
   alongEdges: 'Run along the finished edges: lead-ins and the kerf are not in it.',
   problems: 'Not cut as planned',

@@ -61,6 +61,34 @@ describe('the cut in time', () => {
     expect(timeline.duration - (first?.end ?? 0)).toBeLessThan(1.8 + 1.5 + along(0.1));
   });
 
+  it('goes at the lower feed where a corner is eased', () => {
+    const [before, eased, after] = [0, 0.1, 0.2].map((x) => lineBetween({ x, y: 0 }, { x: x + 0.1, y: 0 }));
+    if (!before || !eased || !after) throw new Error('three pieces');
+    const { duration } = cutTimeline(
+      {
+        runs: [
+          {
+            contourId: 'a',
+            name: 'outline a',
+            pierce: { x: 0, y: 0 },
+            pieces: [
+              { kind: 'contour', segments: [before] },
+              { kind: 'contour', segments: [eased], feedShare: 0.25, powerShare: 0.5 },
+              { kind: 'contour', segments: [after] },
+            ],
+          },
+        ],
+      },
+      cutting,
+    );
+    const whole = pathTime([before, eased, after], {
+      ...cutting,
+      bounds: [undefined, 0.25 * cutting.feed, undefined],
+    }).time;
+    expect(duration).toBeCloseTo(1.5 + whole, 9);
+    expect(whole - along(0.3)).toBeGreaterThan((0.99 * 3 * 0.1) / cutting.feed);
+  });
+
   it('pierces, cuts, waits and travels, and the head never leaves its path', () => {
     const at = (time: number) => cutMoment(timeline, time);
     expect(at(0)).toMatchObject({ phase: 'pierce', at: { x: 0, y: 0 } });
