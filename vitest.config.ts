@@ -1,7 +1,10 @@
+import { availableParallelism } from 'node:os';
 import path from 'node:path';
 import { defineConfig } from 'vitest/config';
 
 const root = import.meta.dirname;
+/** A test file a core: of its own accord vitest leaves one of them idle. */
+const maxWorkers = availableParallelism();
 const web = {
   alias: [
     { find: /^react-native$/, replacement: 'react-native-web' },
@@ -25,6 +28,7 @@ export default defineConfig({
           include: ['tests/**/*.test.ts'],
           exclude: ['tests/browser/**'],
           globalSetup: ['tests/support/test-cluster.ts'],
+          maxWorkers,
           testTimeout: 30_000,
           hookTimeout: 120_000,
         },
@@ -37,6 +41,7 @@ export default defineConfig({
           environment: 'happy-dom',
           include: ['tests/**/*.ui.test.tsx'],
           setupFiles: ['tests/support/setup-ui.ts'],
+          maxWorkers,
           server: { deps: { inline: [/react-native/] } },
           testTimeout: 20_000,
         },
