@@ -1,3 +1,4 @@
+import { historyMoved, historyNext, historyOf, type History } from '@/components/ui/history.ts';
 import type { Layout, LayoutForm, PlacementWire } from '@/shared/layouts.ts';
 import type { LayoutPart, PlateOutline } from '@/strategy/path/plate/index.ts';
 
@@ -10,13 +11,7 @@ export type LayoutDraft = {
   readonly parts: readonly LayoutPart[];
 };
 
-export type DraftHistory = {
-  readonly past: readonly LayoutDraft[];
-  readonly draft: LayoutDraft;
-  readonly future: readonly LayoutDraft[];
-  /** What is typed into one field, or pushed again and again, is one step. */
-  readonly open: string | null;
-};
+export type DraftHistory = History<LayoutDraft>;
 
 export type LayoutAction =
   | { do: 'place'; pieces: readonly PlacementWire[]; part: LayoutPart }
@@ -35,22 +30,12 @@ export type LayoutAction =
   /** What was sent is saved; what was changed since then stays changed. */
   | { do: 'saved'; sent: LayoutForm; draft: LayoutDraft };
 
-/** Steps that can be taken back. */
-const mostSteps = 200;
-
-export const historyOf = (draft: LayoutDraft): DraftHistory => ({ past: [], draft, future: [], open: null });
-
 export function layoutReduce(history: DraftHistory, action: LayoutAction): DraftHistory {
-  const { past, draft, future, open } = history;
+  const { draft } = history;
   switch (action.do) {
-    case 'undo': {
-      const before = past.at(-1);
-      return before ? { past: past.slice(0, -1), draft: before, future: [draft, ...future], open: null } : history;
-    }
-    case 'redo': {
-      const [after, ...later] = future;
-      return after ? { past: [...past, draft], draft: after, future: later, open: null } : history;
-    }
+    case 'undo':
+    case 'redo':
+      return historyMoved(history, action.do);
     case 'load':
       return historyOf(action.draft);
     case 'saved':
@@ -59,8 +44,7 @@ export function layoutReduce(history: DraftHistory, action: LayoutAction): Draft
       const next = draftReduce(draft, action);
       if (next === draft) return history;
       const field = action.do === 'put' && action.field !== undefined ? `${action.number} ${action.field}` : null;
-      const goesOn = field !== null && field === open;
-      return { past: goesOn ? past : [...past, draft].slice(-mostSteps), draft: next, future: [], open: field };
+      return historyNext(history, next, field);
     }
   }
 }

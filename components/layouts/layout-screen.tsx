@@ -9,6 +9,7 @@ import { common } from '@/components/text/common.ts';
 import { layoutsText } from '@/components/text/layouts.ts';
 import { momentText } from '@/components/text/moments.ts';
 import { useLayout } from '@/components/theme/layout.ts';
+import { historyOf } from '@/components/ui/history.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Empty } from '@/components/ui/empty.tsx';
 import { ErrorNotice } from '@/components/ui/error-notice.tsx';
@@ -24,15 +25,7 @@ import { may } from '@/shared/policy.ts';
 import type { LayoutProblem } from '@/strategy/path/plate/index.ts';
 import { AddPieces } from './add-pieces.tsx';
 import { forgetLayout, keepLayout, keptLayout } from './kept-layouts.ts';
-import {
-  formOf,
-  formSame,
-  historyOf,
-  layoutReduce,
-  nextNumber,
-  type LayoutAction,
-  type LayoutDraft,
-} from './layout-draft.ts';
+import { formOf, formSame, layoutReduce, nextNumber, type LayoutAction, type LayoutDraft } from './layout-draft.ts';
 import { LayoutBlock } from './layout-block.tsx';
 import { LayoutDrawing } from './layout-drawing.tsx';
 import { LayoutPlans } from './layout-plans.tsx';

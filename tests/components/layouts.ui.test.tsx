@@ -2,14 +2,8 @@ import { act, fireEvent, screen, waitFor, within } from '@testing-library/react'
 import { userEvent } from '@testing-library/user-event';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { CornerPlanScreen } from '@/components/corners/corner-plan-screen.tsx';
-import {
-  formOf,
-  historyOf,
-  layoutReduce,
-  nextNumber,
-  turnWithin,
-  type LayoutDraft,
-} from '@/components/layouts/layout-draft.ts';
+import { historyOf } from '@/components/ui/history.ts';
+import { formOf, layoutReduce, nextNumber, turnWithin, type LayoutDraft } from '@/components/layouts/layout-draft.ts';
 import { LayoutNewScreen } from '@/components/layouts/layout-new-screen.tsx';
 import { LayoutScreen } from '@/components/layouts/layout-screen.tsx';
 import { LayoutsScreen } from '@/components/layouts/layouts-screen.tsx';
