@@ -1,16 +1,8 @@
 import { memo } from 'react';
 import { StyleSheet, View } from 'react-native';
 import { common, unbroken } from '@/components/text/common.ts';
-import {
-  explainText,
-  explanationOf,
-  parameterRow,
-  resultLabel,
-  resultValue,
-  type Explained,
-  type ExplainedFrom,
-  type ResultName,
-} from '@/components/text/pierce-explain.ts';
+import { explainText, explanationOf, type Explained, type ExplainedFrom } from '@/components/text/pierce-explain.ts';
+import { parameterRow, resultLabel, resultValue, type ResultName } from '@/components/text/pierce-results.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { line } from '@/components/theme/space.ts';

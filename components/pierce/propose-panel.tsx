@@ -2,7 +2,7 @@ import { useState } from 'react';
 import { View } from 'react-native';
 import { unbroken } from '@/components/text/common.ts';
 import { compareWords, proposeText } from '@/components/text/pierce-designer.ts';
-import { resultLabel, resultValue } from '@/components/text/pierce-explain.ts';
+import { resultLabel, resultValue } from '@/components/text/pierce-results.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Columns } from '@/components/ui/columns.tsx';
 import { Facts } from '@/components/ui/facts.tsx';

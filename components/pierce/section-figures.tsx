@@ -1,12 +1,7 @@
 import { memo, useState } from 'react';
 import { useLayout } from '@/components/theme/layout.ts';
-import {
-  explainText,
-  resultLabel,
-  resultValue,
-  type Explained,
-  type ResultName,
-} from '@/components/text/pierce-explain.ts';
+import { explainText, type Explained } from '@/components/text/pierce-explain.ts';
+import { resultLabel, resultValue, type ResultName } from '@/components/text/pierce-results.ts';
 import {
   conditionWords,
   nozzleWords,

@@ -1,7 +1,8 @@
 import { useState } from 'react';
 import { View } from 'react-native';
 import { splitText, stageResultText } from '@/components/text/pierce-designer.ts';
-import { estimate, explainText, type StageResultName } from '@/components/text/pierce-explain.ts';
+import { explainText } from '@/components/text/pierce-explain.ts';
+import { estimate, type StageResultName } from '@/components/text/pierce-results.ts';
 import { editorText, stageText } from '@/components/text/pierce.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { InlineNumber } from '@/components/ui/inline-number.tsx';
