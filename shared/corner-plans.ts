@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import type { PlateDrive } from '../strategy/motion/plate-clock.ts';
 import { idSchema, instantSchema, personSchema, pointSchema, quantity, versionSchema } from './basics.ts';
 import { endpoint } from './endpoint.ts';
 import { outlineSchema } from './layouts.ts';
@@ -24,7 +25,13 @@ export const cornerOptionSchema = z.object({
   why: z.string(),
   /** Where what stands in a loop's way is, m; plans computed before it was kept have none. */
   at: pointSchema.nullable().default(null),
+  /** Hottest at the measuring place afterwards, K, and how deep the ignition threshold is passed, m. */
+  peak: z.number().nullish(),
+  burnBack: z.number().nullish(),
 });
+
+/** Where a figure lies with the calibration's certainty; in its own unit. */
+const figureRangeSchema = z.object({ low: z.number(), high: z.number() });
 
 export const plannedCornerSchema = z.object({
   id: z.string(),
@@ -70,8 +77,42 @@ export const plannedCornerSchema = z.object({
   options: z.array(cornerOptionSchema),
   /** Still above the limit, or refused: said on the drawing. */
   trouble: z.string().nullable(),
+  // what follows is null or missing in plans that were made before the plate's own heat was counted
+  /** What the plate has warmed to at the measuring place when the cut comes back, before the corner's own edge heats it, K. */
+  background: z.number().nullish(),
+  /** When cutting along the second edge begins, s from the start of the plate's cut. */
+  returnTime: z.number().nullish(),
+  /** Hottest at the measuring place afterwards, K. */
+  peak: z.number().nullish(),
+  /** How far inside the finished tip the peak passes the ignition threshold, m. */
+  burnBack: z.number().nullish(),
+  /** Null where no calibration of the heat was used. */
+  intervals: z
+    .object({
+      treated: figureRangeSchema.nullish(),
+      peak: figureRangeSchema.nullish(),
+      burnBack: figureRangeSchema.nullish(),
+    })
+    .nullish(),
+  /** The next best treatment that stays under the limits too, and what it costs more, s; treatment null where there is none, and why. */
+  runnerUp: z
+    .object({ treatment: z.enum(treatments).nullable(), costsMore: z.number().nullable(), why: z.string() })
+    .nullish(),
 });
 export type PlannedCorner = z.infer<typeof plannedCornerSchema>;
+
+/** What the heat of a cut follows from. */
+type HeatLeft = { readonly heatIntoPlate: number; readonly pierceHeat: number | null };
+
+/** Another cut order that comes back later to what is hot; it is taken in the layout. */
+export const orderSuggestionSchema = z.object({
+  /** Contours in the order of cutting. */
+  order: z.array(z.string()),
+  why: z.string(),
+  rapidTime: z.number(), // s more between the cuts
+  addedTime: z.number(), // s of treatments spared
+  overLimit: z.number().int(), // corners fewer over a limit
+});
 
 export const cornerPlanSchema = z.object({
   id: idSchema,
@@ -103,8 +144,9 @@ export const cornerPlanSchema = z.object({
   plateTemperature: z.number(), // K
   skeleton: skeletonSchema,
   overrides: z.record(z.string(), z.enum(treatments)),
-  limit: z.number(), // K
-  /** What the time of the cut follows from, of the strategy revision and its machine: nobody needs access to either to see the cut run. */
+  /** The straight edge on the plate as it comes and the excess allowed, K: it does not rise with what the cut itself warms. */
+  limit: z.number(),
+  /** What the time and the heat of the cut follow from, of the strategy revision and its machine: nobody needs access to either to see the cut run. */
   cutting: z.object({
     feed: z.number(), // m/s
     acceleration: z.number(), // m/s²
@@ -114,7 +156,30 @@ export const cornerPlanSchema = z.object({
     /** Routine of one pierce, s. */
     pierce: z.number(),
     kerfWidth: z.number(), // m
-  }),
+    /** What getting the cut going again after a wait costs beside it, s. */
+    restart: z.number(),
+    /** The head's way up and down: heights of the nozzle above the plate, m. */
+    heights: z.object({
+      travel: z.number(),
+      pierceFrom: z.number(),
+      pierceTo: z.number(),
+      cut: z.number(),
+      speed: z.number(), // m/s
+      acceleration: z.number(), // m/s²
+      jerk: z.number(), // m/s³
+    }),
+    /** What the straight cut leaves in the plate, J per m² of cut face, and what a pierce leaves in this one, J; null where the model can't follow it. */
+    heatIntoPlate: z.number(),
+    pierceHeat: z.number().nullable(),
+    /** Of the beam along the straight cut, W: peak × duty; and over one pierce, J. */
+    meanPower: z.number(),
+    pierceEnergy: z.number(),
+    /** Through the nozzle while it cuts, kg/s, and over one pierce, kg. */
+    oxygenFlow: z.number(),
+    pierceOxygen: z.number(),
+    /** Heat the plate gives to the air, W/(m² K) on each face. */
+    lossCoefficient: z.number(),
+  }) satisfies z.ZodType<PlateDrive & HeatLeft>,
   corners: z.array(plannedCornerSchema),
   totals: z.object({
     corners: z.number().int(),
@@ -128,6 +193,16 @@ export const cornerPlanSchema = z.object({
     addedOxygen: z.number(), // kg
     hottestUntreated: z.number().nullable(), // K
     hottestTreated: z.number().nullable(), // K
+    // as for the corners: not in older plans
+    /** Highest temperature the plate has at a corner before the corner's own cut, K. */
+    highestBackground: z.number().nullish(),
+    /** Mean of the plate when the cut ends, K. */
+    meanPlateTemperature: z.number().nullish(),
+    hottestPeak: z.number().nullish(), // K
+    deepestBurnBack: z.number().nullish(), // m
+    /** When the last cut ends, s. */
+    cutTime: z.number().nullish(),
+    orderSuggestions: z.array(orderSuggestionSchema).nullish(),
   }),
   changedAt: instantSchema,
   changedBy: personSchema,

@@ -87,7 +87,7 @@ export const cornerRulesSchema = z.strictObject({
     maxDuration: quantity(0.1, 120, '0.1 to 120 s'),
     restart: quantity(0, 60, '0 to 60 s'),
   }),
-  // not in strategies that were kept before there were these two: then they are not allowed
+  // not in strategies that were kept before there were these: then they are not allowed, and burn-back is not judged
   ease: z
     .strictObject({
       allowed: z.boolean(),
@@ -101,6 +101,13 @@ export const cornerRulesSchema = z.strictObject({
       allowed: z.boolean(),
       radius: quantity(0.05 * mm, 50 * mm, '0.05 to 50 mm'),
       tolerance: quantity(0.01 * mm, 5 * mm, '0.01 to 5 mm'),
+    })
+    .optional(),
+  burnBack: z
+    .strictObject({
+      judged: z.boolean(),
+      limit: quantity(0.05 * mm, 20 * mm, '0.05 to 20 mm'),
+      ignition: quantity(900, 1800, '627 to 1527 °C'),
     })
     .optional(),
 }) satisfies z.ZodType<CornerRules>;

@@ -3,6 +3,7 @@ import { Sentence } from '@/components/ui/sentence.tsx';
 import { Stack } from '@/components/ui/stack.tsx';
 import { Tick } from '@/components/ui/tick.tsx';
 import type { CornerRules } from '@/strategy/corners/rules.ts';
+import { BurnBackRule } from './burn-back-rule.tsx';
 import { DraftNumber, useDraft } from './draft-context.tsx';
 import { EaseRoundRules } from './ease-round-rules.tsx';
 
@@ -100,15 +101,17 @@ export function CornerRulesSentence() {
         </Sentence>
       )}
       <EaseRoundRules rules={rules} change={change} readOnly={readOnly} />
+      <BurnBackRule rules={rules} change={change} readOnly={readOnly} />
     </Stack>
   );
 }
 
 /** The schema's type has writable fields; a rule made here is nobody else's. */
-const mutable = ({ loop, dwell, ease, round, ...rules }: CornerRules) => ({
+const mutable = ({ loop, dwell, ease, round, burnBack, ...rules }: CornerRules) => ({
   ...rules,
   loop: { ...loop },
   dwell: { ...dwell },
   ...(ease ? { ease: { ...ease } } : {}),
   ...(round ? { round: { ...round } } : {}),
+  ...(burnBack ? { burnBack: { ...burnBack } } : {}),
 });

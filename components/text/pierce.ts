@@ -203,6 +203,10 @@ export const cornerRulesText = {
   roundRadius: 'Round with',
   roundTolerance: 'as long as the finished corner is no more than',
   roundEnd: 'off the drawing.',
+  burnBack: 'Burn-back of the tip is judged',
+  burnBackNoDeeper: 'No deeper than',
+  burnBackAbove: 'inside the finished tip may it become hotter than',
+  burnBackEnd: ', from where steel is taken to burn in oxygen.',
   label: {
     treatBelowAngle: 'Corners below this angle are treated',
     returnExcessLimit: 'Excess over a straight edge left untreated',
@@ -218,6 +222,7 @@ export const cornerRulesText = {
       powerShare: 'Share of the mean power in the corner',
     },
     round: { radius: 'Radius of the round', tolerance: 'Allowed off the drawing' },
+    burnBack: { limit: 'Deepest burn-back', ignition: 'Ignition threshold' },
   },
 } as const;
 

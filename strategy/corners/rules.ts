@@ -38,6 +38,14 @@ export type CornerRules = {
     /** How far a finished corner may be off the drawn one, m. */
     readonly tolerance: number;
   };
+  /** How far the tip may burn back. Only the return temperature is judged when left out. */
+  readonly burnBack?: {
+    readonly judged: boolean;
+    /** Greatest depth inside the finished tip to which the peak may pass the ignition threshold, m. */
+    readonly limit: number;
+    /** Ignition threshold, K: a fit parameter. */
+    readonly ignition: number;
+  };
 };
 
 /** An ease to start from: feed and power fall together, so that each metre of cut gets what it always gets. Own choice, no source. */
@@ -45,6 +53,15 @@ export const easeDefaults = { allowed: true, length: 5e-3, feedShare: 0.4, power
 
 /** A round to start from: small enough for most drawings. Own choice, no source. */
 export const roundDefaults = { allowed: true, radius: 1e-3, tolerance: 0.2e-3 } as const;
+
+/**
+ * A judgement of burn-back to start from. The depth is an own choice, no source; the threshold is the lower of two published anchors for iron in
+ * oxygen, 1233 K for thin foil and 1644 K for bulk iron (the melting of its oxide), so on the careful side until test cuts fit it.
+ */
+export const burnBackDefaults = { judged: true, limit: 1e-3, ignition: 1233 } as const;
+
+/** Between which the ignition threshold may be set, K: a margin beside the two published anchors, 1233 and 1644 K. */
+export const ignitionRange = { least: 900, most: 1800 } as const;
 
 /** Conditions of the straight cut. SI. */
 export type CutConditions = {
