@@ -13,12 +13,13 @@ export { biotNumber, lostShare, plateCoolingTime, radiativeCoefficient } from '.
 export { levellingTime, stepShareAtDepth, surfaceRiseUnderFlux } from './half-space.ts';
 export type { HeatedPiece } from './path-heat.ts';
 export { heatedPath, pathRise } from './path-heat.ts';
-export type { ReturnQuestion, ReturnTemperature, ReturnTreatment } from './return-temperature.ts';
-export {
-  leftOutStretch,
-  measuringDepth,
-  measuringPlace,
-  returnOf,
-  returnTemperature,
-  straightEdgeReturn,
-} from './return-temperature.ts';
+export type { ReturnQuestion, ReturnTreatment } from './return-question.ts';
+export { leftOutStretch, measuringDepth } from './return-question.ts';
+export type { ReturnTemperature } from './return-temperature.ts';
+export { measuringPlace, returnOf, returnTemperature, straightEdgeReturn } from './return-temperature.ts';
+export { wedgeKernelScaled } from './wedge-kernel.ts';
+export type { TipPeak } from './corner-peak.ts';
+export { coolingCurve, peakAfter, returnDelay } from './corner-peak.ts';
+export { burnBack, ignitionRange, ignitionThreshold, straightEdgeBurnBack } from './burn-back.ts';
+export type { CornerHeatInterval, HeatFit, HeatParameterName, HeatParameters, HeatRange } from './heat-fit.ts';
+export { cornerHeatInterval, heatParameters, heatParameterTable, withParameters } from './heat-fit.ts';

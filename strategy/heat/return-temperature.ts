@@ -1,47 +1,15 @@
-import type { CutConditions } from '../corners/rules.ts';
-import type { Loop, LoopCorner } from '../path/loop.ts';
+import type { LoopCorner } from '../path/loop.ts';
 import type { Point } from '../path/point.ts';
 import { cornerInward } from '../path/corner.ts';
-import { easedInto, easedShare } from '../path/ease.ts';
-import { pathWithoutLast } from '../path/path-part.ts';
-import { pointAdd, pointScale, pointSubtract } from '../path/point.ts';
-import { arcRound, roundTangent } from '../path/round.ts';
-import type { Segment } from '../path/segment.ts';
-import { lineBetween, segmentLength, segmentPart } from '../path/segment.ts';
-import type { HeatedPiece } from './path-heat.ts';
+import { pointAdd, pointScale } from '../path/point.ts';
+import { travelledTo, withoutLast } from './corner-way.ts';
 import { pathRise } from './path-heat.ts';
 import type { PlateProperties } from './properties.ts';
 import { midZoneProperties } from './properties.ts';
+import type { ReturnQuestion } from './return-question.ts';
+import { checkReturnQuestion, leftOutStretch, measuringDepth, roundOf } from './return-question.ts';
 
-/** Depth of the measuring place inside the finished tip, along the bisector, m. */
-export const measuringDepth = 1.5e-3;
-
-/** Last stretch of path whose heat is left out, m: so near the source no closed form and no grid agrees with another. */
-export const leftOutStretch = 2e-3;
-
-/** Straight cut taken before a corner when nothing else is said, m; older heat no longer shows at the front. */
-const straightRun = 0.3;
-
-/** What happens between the end of the first edge and the beginning of the second. */
-export type ReturnTreatment =
-  | { readonly kind: 'leave' }
-  | { readonly kind: 'loop'; readonly loop: Loop }
-  | { readonly kind: 'dwell'; readonly duration: number } // s
-  /** Feed and mean power fall evenly over the last `length` m to these shares of the straight cut's. */
-  | { readonly kind: 'ease'; readonly length: number; readonly feedShare: number; readonly powerShare: number };
-
-export type ReturnQuestion = {
-  /** Corner of the path (half the kerf outside the finished edges). */
-  readonly corner: LoopCorner;
-  /** Radius of the arc on which the path goes round the corner, m; sharp when left out. A loop runs on to the corner itself. */
-  readonly round?: number;
-  /** Path cut before the corner, in order of travel, ending in it; a straight cut when left out. */
-  readonly before?: readonly Segment[];
-  readonly treatment: ReturnTreatment;
-  readonly cut: Pick<CutConditions, 'feed' | 'kerfWidth' | 'heatIntoPlate'>;
-  readonly plateTemperature: number; // K
-  readonly properties?: PlateProperties;
-};
+export type { ReturnQuestion, ReturnTreatment } from './return-question.ts';
 
 /** All in K; `excess` is what the corner with its treatment is hotter than a straight edge at the same feed. */
 export type ReturnTemperature = {
@@ -90,80 +58,13 @@ export function measuringPlace(corner: LoopCorner, kerfWidth: number, round?: nu
   return pointAdd(corner.point, pointScale(cornerInward(corner), tip + measuringDepth));
 }
 
-/** A piece of path with its feed, m/s, and what it leaves, W per metre of thickness. */
-type Travelled = { readonly segment: Segment; readonly feed: number; readonly power: number };
-
 /** Return temperature, K, for one treatment; see `returnTemperature`. */
 export function returnOf(question: ReturnQuestion): number {
+  checkReturnQuestion(question);
   const { corner, treatment, cut, plateTemperature, properties = midZoneProperties } = question;
-  if (!(plateTemperature > 0)) throw new RangeError(`plate temperature ${plateTemperature} K is outside (0, ∞)`);
-  if (!(cut.heatIntoPlate >= 0))
-    throw new RangeError(`heat into the plate ${cut.heatIntoPlate} J/m² is outside [0, ∞)`);
-  if (!(cut.feed > 0)) throw new RangeError(`feed ${cut.feed} m/s is outside (0, ∞)`);
-  const round = treatment.kind === 'loop' ? undefined : question.round;
+  const round = roundOf(question);
   const wait = treatment.kind === 'dwell' ? treatment.duration : 0;
-  if (!(wait >= 0)) throw new RangeError(`dwell ${wait} s is outside [0, ∞)`);
-  const pieces = withoutLast(travelledTo(question, round), leftOutStretch);
+  const pieces = withoutLast(travelledTo(question), leftOutStretch);
   const place = measuringPlace(corner, cut.kerfWidth, round);
   return plateTemperature + pathRise(pieces.counted, place, pieces.arrival + wait, properties);
-}
-
-/** All that is cut before the second edge begins, in order. */
-function travelledTo({ corner, treatment, cut, before }: ReturnQuestion, round: number | undefined): Travelled[] {
-  const { feed } = cut;
-  const power = cut.heatIntoPlate * feed;
-  const straight = (segment: Segment): Travelled => ({ segment, feed, power });
-  const edge = before ?? [
-    lineBetween(pointSubtract(corner.point, pointScale(corner.incoming, straightRun)), corner.point),
-  ];
-  if (treatment.kind === 'loop') {
-    const [out, ...far] = treatment.loop.segments.slice(0, -1);
-    const way = treatment.loop.segments.slice(-1);
-    return [
-      ...[...edge, ...(out ? [out] : [])].map(straight),
-      ...far.map((segment) => ({ segment, feed, power: power / 2 })),
-      ...way.map((segment) => ({ segment, feed, power: 0 })),
-    ];
-  }
-  const rounded = round === undefined ? edge : pathWithoutLast(edge, roundTangent(round, corner.angle));
-  const arc = round === undefined ? [] : [arcRound(corner, round)];
-  if (treatment.kind !== 'ease') return [...rounded, ...arc].map(straight);
-  const { length, feedShare, powerShare } = treatment;
-  if (!(feedShare > 0 && feedShare <= 1 && powerShare >= 0 && powerShare <= 1))
-    throw new RangeError(`shares of feed ${feedShare} and power ${powerShare} are outside (0, 1]`);
-  const { rest, eased } = easedInto(rounded, length);
-  const slowly = ({ segment, share }: { segment: Segment; share: number }): Travelled => ({
-    segment,
-    feed: feed * easedShare(share, feedShare),
-    power: power * easedShare(share, powerShare),
-  });
-  return [
-    ...rest.map(straight),
-    ...eased.map(({ segment, eased: share }) => slowly({ segment, share })),
-    ...arc.map((segment) => slowly({ segment, share: 1 })),
-  ];
-}
-
-/** The pieces with their times from the start, s, without the last `length` m of them, and when the whole way is done. */
-function withoutLast(way: readonly Travelled[], length: number): { counted: HeatedPiece[]; arrival: number } {
-  let left = way.reduce((sum, { segment }) => sum + segmentLength(segment), 0) - length;
-  let time = 0;
-  const counted: HeatedPiece[] = [];
-  for (const { segment, feed, power } of way) {
-    const whole = segmentLength(segment);
-    const to = time + whole / feed;
-    if (left >= whole) counted.push({ segment, from: time, to, powerPerLength: power });
-    else if (left > 0) {
-      const share = left / whole;
-      counted.push({
-        segment: segmentPart(segment, 0, share),
-        from: time,
-        to: time + (to - time) * share,
-        powerPerLength: power,
-      });
-    }
-    left -= whole;
-    time = to;
-  }
-  return { counted, arrival: time };
 }
