@@ -34,3 +34,6 @@ export const drawingSpace = (
   at: (place) => ({ x: (place.x - origin.x) * scale, y: (origin.y - place.y) * scale }),
   write,
 });
+
+/** The drawn sheet, px: twice as wide and as high as the frame around whose middle it lies, with the drawing's middle at `x` and `y` of it. */
+export type DrawnSheet = { readonly width: number; readonly height: number; readonly x: number; readonly y: number };

@@ -13,7 +13,7 @@ import { Small } from '@/components/ui/text.tsx';
 import type { Box, Point, Segment } from '@/strategy/path/index.ts';
 import { dotsData, markNearest, marksSpread } from './drawing-marks.ts';
 import { useDrawnBox, useDrawnTexts } from './drawing-paths.ts';
-import { drawingSpace, type DrawingSpace } from './drawing-space.ts';
+import { drawingSpace, type DrawingSpace, type DrawnSheet } from './drawing-space.ts';
 import { drawnAround, usePanZoom } from './use-pan-zoom.ts';
 import { useWidth } from './use-width.ts';
 import { windowToFrame, windowToPlace, type ViewWindow } from './view-window.ts';
@@ -68,7 +68,9 @@ type DrawingViewProps = {
   /** What of the drawing a pointer may push; by how much so far, m. A finger then no longer scrolls the page here. */
   onTake?: (place: Point) => { move: (by: Point) => void; drop: () => void; cancel: () => void } | null;
   /** Drawn over the rest and moved with it; drawn again without it. */
-  over?: (space: DrawingSpace) => ReactNode;
+  over?: (space: DrawingSpace, sheet: DrawnSheet) => ReactNode;
+  /** Laid under the lines and moved with them, in the place of the steel's own fill. */
+  under?: ((space: DrawingSpace, sheet: DrawnSheet) => ReactNode) | undefined;
   /** Beside the buttons, and what else is to be known of them. */
   tools?: ReactNode;
   ways?: string;
@@ -102,6 +104,7 @@ export function DrawingView({
   onAim = null,
   onTake,
   over,
+  under,
   tools,
   ways = '',
   control,
@@ -178,13 +181,16 @@ export function DrawingView({
     () => drawingSpace(texts.origin, view.scale, texts.write),
     [texts.origin, texts.write, view.scale],
   );
-  const middle = windowToFrame(view, frame, texts.origin);
-  const sheet = {
-    width: width * (1 + 2 * drawnAround),
-    height: height * (1 + 2 * drawnAround),
-    x: middle.x + width * drawnAround,
-    y: middle.y + height * drawnAround,
-  };
+  const { x: middleX, y: middleY } = windowToFrame(view, frame, texts.origin);
+  const sheet: DrawnSheet = useMemo(
+    () => ({
+      width: width * (1 + 2 * drawnAround),
+      height: height * (1 + 2 * drawnAround),
+      x: middleX + width * drawnAround,
+      y: middleY + height * drawnAround,
+    }),
+    [width, height, middleX, middleY],
+  );
   const placed = placeMarks(view);
   const drawnMarks = useMemo(() => new Map(marks.map(({ id, draw }) => [id, draw])), [marks]);
   const matters = useMemo(() => new Set(marks.filter(({ weight }) => weight !== 0).map(({ id }) => id)), [marks]);
@@ -218,7 +224,10 @@ export function DrawingView({
             webStyle({ transformOrigin: `${width * drawnAround}px ${height * drawnAround}px` }),
           ]}
         >
-          <Svg width={sheet.width} height={sheet.height} role="img" aria-label={label}>
+          {under && (
+            <View style={[styles.under, { width: sheet.width, height: sheet.height }]}>{under(space, sheet)}</View>
+          )}
+          <Svg width={sheet.width} height={sheet.height} role="img" aria-label={label} style={styles.drawn}>
             <G transform={`translate(${sheet.x} ${sheet.y})`}>
               <Still
                 zoom={space.zoom}
@@ -231,6 +240,7 @@ export function DrawingView({
                 slugs={texts.slugs}
                 loops={texts.loops}
                 chosen={chosen}
+                filled={!under}
               />
               <Path
                 d={texts.circles.map(({ centre, radius }) => cross(space.at(centre), radius * view.scale)).join('')}
@@ -252,7 +262,7 @@ export function DrawingView({
           {over && (
             <View style={[styles.over, { width: sheet.width, height: sheet.height }]}>
               <Svg width={sheet.width} height={sheet.height} aria-hidden>
-                <G transform={`translate(${sheet.x} ${sheet.y})`}>{over(space)}</G>
+                <G transform={`translate(${sheet.x} ${sheet.y})`}>{over(space, sheet)}</G>
               </Svg>
             </View>
           )}
@@ -297,6 +307,8 @@ type StillProps = {
   slugs: string;
   loops: readonly { id: string; data: string }[];
   chosen: string | null;
+  /** The steel has its own fill, and not what is laid under it. */
+  filled: boolean;
 };
 
 /** What is drawn the same wherever it is moved to: drawn again only when the scale or the drawing changes. */
@@ -311,6 +323,7 @@ const Still = memo(function Still({
   slugs,
   loops,
   chosen,
+  filled,
 }: StillProps) {
   const id = useId().replace(/\W/g, '');
   const others = useMemo(
@@ -330,10 +343,23 @@ const Still = memo(function Still({
       </Defs>
       <G transform={`scale(${zoom})`}>
         <Stroke data={plate} colour={roles.ink} width={1.4} />
-        <Path d={part} fill={roles.steelFill} fillRule="evenodd" />
+        {filled ? (
+          <Path d={part} fill={roles.steelFill} fillRule="evenodd" />
+        ) : (
+          // a casing of paper: the outline is seen on any ground
+          <Path
+            d={part}
+            fill="none"
+            stroke={roles.sheet}
+            strokeWidth={line.outline + 2.6}
+            strokeLinejoin="round"
+            vectorEffect="non-scaling-stroke"
+          />
+        )}
         <Path
           d={part}
           fill={`url(#${id}steel)`}
+          fillOpacity={filled ? 1 : 0.5}
           fillRule="evenodd"
           stroke={roles.ink}
           strokeWidth={line.outline}
@@ -426,6 +452,9 @@ const styles = StyleSheet.create({
   sheet: { backgroundColor: roles.sheet, borderWidth: 1, borderColor: roles.rule },
   // a layer of its own: moving it draws nothing anew
   layers: { position: 'absolute', ...webStyle({ willChange: 'transform' }) },
+  under: { position: 'absolute', left: 0, top: 0, pointerEvents: 'none' },
+  // what is laid under it has a place of its own, and would else stand above
+  drawn: { position: 'relative' },
   over: { position: 'absolute', left: 0, top: 0, pointerEvents: 'none', ...webStyle({ willChange: 'transform' }) },
   // below the drawing, so that nothing is ever covered
   buttons: {

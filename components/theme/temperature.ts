@@ -20,17 +20,20 @@ export const temperatureStops = [
 const zeroCelsius = 273.15; // K
 
 /** Colour of steel at a temperature, K, as `rgb(r, g, b)`; held at the ends of the scale. */
-export function temperatureColour(kelvin: number): string {
+export const temperatureColour = (kelvin: number): string => rgb(temperatureChannels(kelvin));
+
+/** The same as red, green and blue, 0 to 255 each, not rounded. */
+export function temperatureChannels(kelvin: number): readonly number[] {
   const celsius = kelvin - zeroCelsius;
   const above = temperatureStops.findIndex((stop) => stop.celsius >= celsius);
   const last = temperatureStops[temperatureStops.length - 1];
-  if (above < 0 || last === undefined) return rgb(channels(last?.colour ?? '#FFFFFF'));
+  if (above < 0 || last === undefined) return channels(last?.colour ?? '#FFFFFF');
   const upper = temperatureStops[above] ?? last;
   const lower = temperatureStops[above - 1] ?? upper;
   const share = upper === lower ? 0 : (celsius - lower.celsius) / (upper.celsius - lower.celsius);
   const from = channels(lower.colour);
   const to = channels(upper.colour);
-  return rgb(from.map((value, i) => value + share * ((to[i] ?? value) - value)));
+  return from.map((value, i) => value + share * ((to[i] ?? value) - value));
 }
 
 /** Word for the colour a temperature, K, is near: the last stop it has reached. */

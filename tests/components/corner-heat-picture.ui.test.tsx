@@ -1,0 +1,88 @@
+import { describe, expect, it } from 'vitest';
+import { heatMoment, temperatureAt, temperaturesOn } from '@/components/corners/heat-field.ts';
+import { heatLevels } from '@/components/corners/heat-levels.ts';
+import { levelLabels, paintHeat } from '@/components/corners/heat-paint.ts';
+import { plateHeatOf } from './corner-heat-fixtures.ts';
+
+const heat = plateHeatOf();
+const at = (time: number) => {
+  const moment = heatMoment(heat, time, 5e-4);
+  if (!moment) throw new Error('there is no moment');
+  return moment;
+};
+
+describe('the plate at a moment', () => {
+  it('is what lies on the raster between two of its times, and hotter near the front', () => {
+    expect(temperatureAt(at(5), { x: 0.09, y: 0.11 })).toBeCloseTo(298.15, 2);
+    expect(temperatureAt(at(15), { x: 0.073, y: 0.05 })).toBeGreaterThan(600);
+    // ahead of the cut it is still cold
+    expect(temperatureAt(at(15), { x: 0.115, y: 0.05 })).toBeLessThan(309);
+  });
+
+  it('is held before the cut and after it', () => {
+    expect(at(-3).time).toBe(0);
+    expect(at(1e6).time).toBe(20);
+    expect(heatMoment({ ...heat, windows: [] }, 3, 1e-3)).toBeNull();
+  });
+
+  it('is the same on a finer raster as at each of its places', () => {
+    const raster = { x: 0.04, y: 0.08, dx: 0.002, dy: -0.002, columns: 40, rows: 30 };
+    const found = temperaturesOn(at(12), raster);
+    for (const [column, row] of [
+      [0, 0],
+      [9, 14],
+      [39, 29],
+    ] as const) {
+      const place = { x: raster.x + column * raster.dx, y: raster.y + row * raster.dy };
+      const there = temperatureAt(at(12), place);
+      expect(Math.abs((found[row * 40 + column] ?? 0) - there)).toBeLessThan(0.05 + 2e-3 * (there - 293));
+    }
+  });
+});
+
+describe('the picture of the plate', () => {
+  const columns = 60;
+  // from 20 °C on the left, 10 K a point
+  const slope = Float32Array.from({ length: columns * 8 }, (_, i) => 293.15 + 10 * (i % columns));
+  const opacity = (picture: Uint8ClampedArray, column: number, row = 3) =>
+    picture[4 * (row * columns + column) + 3] ?? 0;
+  const red = (picture: Uint8ClampedArray, column: number, row = 3) => picture[4 * (row * columns + column)] ?? 0;
+  const palette = { ink: [0, 0, 0] as const, levels: [473.15], limit: Infinity };
+
+  it('leaves cold steel as it is and has its full colour where the temper colours begin', () => {
+    const picture = paintHeat(slope, columns, 8, palette);
+    expect(opacity(picture, 0)).toBe(0);
+    expect(opacity(picture, 10)).toBeLessThan(opacity(picture, 16));
+    expect(opacity(picture, 30)).toBeGreaterThan(220);
+  });
+
+  it('draws a dark line at a named temperature, and none where lines would run into each other', () => {
+    const gentle = slope.map((kelvin) => 293.15 + (kelvin - 293.15) / 2);
+    const picture = paintHeat(gentle, columns, 8, palette);
+    // 200 °C is at point 36
+    expect(red(picture, 36)).toBeLessThan(red(picture, 33) / 2);
+    const crowded = paintHeat(gentle, columns, 8, { ...palette, levels: [463.15, 473.15, 483.15] });
+    expect(red(crowded, 36)).toBeGreaterThan(red(picture, 36) + 30);
+  });
+
+  it('is hatched above the limit, so that it can be told without its colours', () => {
+    const picture = paintHeat(slope, columns, 8, { ...palette, levels: [], limit: 500 });
+    const rows = [0, 1, 2, 3, 4, 5, 6, 7];
+    const along = (column: number) => new Set(rows.map((row) => red(picture, column, row))).size;
+    expect(along(10)).toBe(1);
+    expect(along(40)).toBeGreaterThan(1);
+  });
+
+  it('has a figure on each line that lies in the frame, apart from each other', () => {
+    const levels = heatLevels('metric');
+    const inside = { left: 0, top: 0, right: columns, bottom: 8 };
+    const labels = levelLabels(slope, columns, levels, inside, 4);
+    for (const { kelvin, column } of labels) expect(293.15 + 10 * column).toBeCloseTo(kelvin, 3);
+    expect(new Set(labels.map(({ kelvin }) => kelvin)).size).toBeGreaterThan(5);
+    labels.forEach((one, i) =>
+      labels.slice(i + 1).forEach((other) => {
+        expect(Math.hypot(one.column - other.column, 2 * (one.row - other.row))).toBeGreaterThan(4);
+      }),
+    );
+  });
+});
