@@ -28,6 +28,10 @@ export type MachineProfile = {
     readonly jerk: number; // m/s³
   };
   readonly bed: { readonly length: number; readonly width: number; readonly shuttleTable: boolean }; // m
+  /** How the head moves up and down: its height above the plate while it travels, m, and how fast. An own default where it is not known. */
+  readonly heights?: { readonly travel: number; readonly speed: number; readonly acceleration: number } | undefined; // m, m/s, m/s²
+  /** How a plate gets onto the machine: clearing and loading a table, s, and with a second one the swap, s. An own default likewise. */
+  readonly loading?: { readonly time: number; readonly exchange: number } | undefined;
   /** Smallest arc the machine follows at cutting feed, m. */
   readonly smallestArc: number;
 };

@@ -5,7 +5,7 @@ import { useWidth } from '@/components/parts/use-width.ts';
 import { runText } from '@/components/text/corner-preview.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { webStyle } from '@/components/theme/web-style.ts';
-import type { CutTimeline } from './cut-timeline.ts';
+import type { PlateClock } from '@/strategy/motion/index.ts';
 import { useRunTime, type RunClock } from './run-clock.ts';
 
 const height = 56;
@@ -14,7 +14,7 @@ const edge = 14;
 const mostTicks = 80;
 
 /** Time of the cut, set by finger, mouse and keys; each contour's beginning is a tick. */
-export function CutSlider({ timeline, clock, words }: { timeline: CutTimeline; clock: RunClock; words: string }) {
+export function CutSlider({ timeline, clock, words }: { timeline: PlateClock; clock: RunClock; words: string }) {
   const time = useRunTime(clock);
   const track = useRef<HTMLElement>(null);
   const width = useWidth(track, 320);
@@ -79,7 +79,7 @@ export function CutSlider({ timeline, clock, words }: { timeline: CutTimeline; c
   );
 }
 
-function keyed(key: string, step: number, time: number, { duration, runs }: CutTimeline): number | null {
+function keyed(key: string, step: number, time: number, { duration, runs }: PlateClock): number | null {
   switch (key) {
     case 'ArrowRight':
     case 'ArrowUp':

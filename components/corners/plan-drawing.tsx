@@ -15,13 +15,13 @@ import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Small } from '@/components/ui/text.tsx';
 import type { CornerPlan, PlannedCorner } from '@/shared/corner-plans.ts';
 import { outlinePaths } from '@/shared/layouts.ts';
+import type { PlateClock } from '@/strategy/motion/index.ts';
 import type { Point } from '@/strategy/path/index.ts';
 import { cornersInward } from './corner-inward.ts';
 import { MeasureLayer } from './measure-layer.tsx';
 import { MeasurePanel } from './measure-panel.tsx';
 import { RunLayer, type Dropped } from './run-layer.tsx';
 import type { RunClock } from './run-clock.ts';
-import type { CutTimeline } from './cut-timeline.ts';
 import { BadgeShape } from './treatment-badge.tsx';
 
 type PlanDrawingProps = {
@@ -33,7 +33,7 @@ type PlanDrawingProps = {
   onMeasure: (places: readonly Snap[] | null) => void;
   /** Lead-ins and where they pierce; none until the path is known. */
   path: CutPath;
-  timeline: CutTimeline;
+  timeline: PlateClock;
   dropped: readonly Dropped[];
   clock: RunClock;
   control: Ref<DrawingControl>;

@@ -1,7 +1,7 @@
 import type { CornerPlan } from '@/shared/corner-plans.ts';
 import type { CutPath } from '@/strategy/path/cut-path.ts';
+import { plateClock, timeOfLoop, type PlateClock } from '@/strategy/motion/index.ts';
 import { segmentStart } from '@/strategy/path/index.ts';
-import { cutTimeline, timeOfLoop, type CutTimeline } from './cut-timeline.ts';
 import type { Dropped } from './run-layer.tsx';
 
 /**
@@ -11,8 +11,8 @@ import type { Dropped } from './run-layer.tsx';
 export function planRun(
   { part, corners, cutting }: Pick<CornerPlan, 'part' | 'corners' | 'cutting'>,
   path: CutPath,
-): { timeline: CutTimeline; dropped: Dropped[] } {
-  const timeline = cutTimeline(path, cutting);
+): { timeline: PlateClock; dropped: Dropped[] } {
+  const timeline = plateClock(path, cutting);
   // a contour with necks is cut in pieces: it falls with the last of them
   const ends = new Map(timeline.runs.map(({ contourId, end }) => [contourId, end]));
   const dropped: Dropped[] = part.contours.flatMap(({ id, role, segments }) => {

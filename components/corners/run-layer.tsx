@@ -3,8 +3,8 @@ import { Circle, Defs, G, Path } from 'react-native-svg';
 import type { DrawingSpace } from '@/components/parts/drawing-space.ts';
 import { HatchPattern } from '@/components/pierce/hatch.tsx';
 import { roles } from '@/components/theme/roles.ts';
+import { clockMoment, type ClockMoment, type PlateClock } from '@/strategy/motion/index.ts';
 import { segmentPart, type Segment } from '@/strategy/path/index.ts';
-import { cutMoment, type CutMoment, type CutTimeline } from './cut-timeline.ts';
 import { useRunTime, type RunClock } from './run-clock.ts';
 
 /** What falls out, a piece to be kept or scrap, and when, s. */
@@ -12,7 +12,7 @@ export type Dropped = { readonly time: number; readonly scrap: boolean; readonly
 
 type RunLayerProps = {
   space: DrawingSpace;
-  timeline: CutTimeline;
+  timeline: PlateClock;
   /** In the order of time. */
   dropped: readonly Dropped[];
   clock: RunClock;
@@ -25,7 +25,7 @@ const chunk = 64;
 export function RunLayer({ space, timeline, dropped, clock }: RunLayerProps) {
   const time = useRunTime(clock);
   if (time <= 0) return null;
-  const moment = cutMoment(timeline, time);
+  const moment = clockMoment(timeline, time);
   if (!moment) return null;
   const whole = Math.floor(moment.segment / chunk);
   return (
@@ -113,8 +113,13 @@ const CutChunks = memo(function CutChunks({
 });
 
 /** From a segment on up to the head. */
-function headData(space: DrawingSpace, { runs }: CutTimeline, { run, segment, share, phase }: CutMoment, from: number) {
-  if (phase === 'travel' || phase === 'pierce') return '';
+function headData(
+  space: DrawingSpace,
+  { runs }: PlateClock,
+  { run, segment, share, phase }: ClockMoment,
+  from: number,
+) {
+  if (phase === 'rapid' || phase === 'pierce') return '';
   const all = runs[run]?.segments ?? [];
   const last = all[segment];
   const cut = all.slice(from, segment);
@@ -138,7 +143,7 @@ function Heavy({ data }: { data: string }) {
 }
 
 /** A ring with a cross through it; the beam's dot within while it is on. */
-function Head({ space, moment: { at, phase } }: { space: DrawingSpace; moment: CutMoment }) {
+function Head({ space, moment: { at, phase } }: { space: DrawingSpace; moment: ClockMoment }) {
   const { x, y } = space.at(at);
   return (
     <G testID="run-head" transform={`translate(${x} ${y})`}>

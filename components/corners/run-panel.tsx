@@ -5,12 +5,12 @@ import { Notice } from '@/components/ui/notice.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Figure, Small } from '@/components/ui/text.tsx';
+import { clockMoment, type PlateClock } from '@/strategy/motion/index.ts';
 import { CutSlider } from './cut-slider.tsx';
-import { cutMoment, type CutTimeline } from './cut-timeline.ts';
 import { countBefore, type Dropped } from './run-layer.tsx';
 import { runSpeed, useRunning, useRunTime, type RunClock } from './run-clock.ts';
 
-type RunProps = { timeline: CutTimeline; dropped: readonly Dropped[]; clock: RunClock };
+type RunProps = { timeline: PlateClock; dropped: readonly Dropped[]; clock: RunClock };
 
 type RunPanelProps = RunProps & {
   /** The path beside the edges, with its lead-ins, is not known. */
@@ -72,7 +72,7 @@ const mostProblems = 5;
 function RunNow({ timeline, dropped, clock }: RunProps) {
   const time = useRunTime(clock);
   const { duration, runs } = timeline;
-  const moment = cutMoment(timeline, time);
+  const moment = clockMoment(timeline, time);
   const at = runText.at(time, duration);
   const doing =
     time <= 0 || !moment

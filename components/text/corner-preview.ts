@@ -1,3 +1,4 @@
+import type { ClockPhase } from '@/strategy/motion/index.ts';
 import { numberText, quantityText } from '@/strategy/units/index.ts';
 import { count } from './corners.ts';
 
@@ -17,15 +18,22 @@ export const runText = {
     times > 1.05 ? `shown ${numberText(times, 1)} times as fast` : 'shown as fast as it is cut',
   at: (now: number, whole: number) =>
     `${time(now)} of ${time(whole)}, ${numberText(whole > 0 ? (100 * now) / whole : 0, 0)} %`,
-  phase: { travel: 'on the way to', pierce: 'piercing', cut: 'cutting', wait: 'waiting at a corner of' },
-  doing: (phase: 'travel' | 'pierce' | 'cut' | 'wait', name: string) => `${runText.phase[phase]} ${name}`,
+  phase: {
+    rapid: 'on the way to',
+    lower: 'lowering the head over',
+    raise: 'raising the head from',
+    pierce: 'piercing',
+    cut: 'cutting',
+    wait: 'waiting at a corner of',
+  },
+  doing: (phase: ClockPhase, name: string) => `${runText.phase[phase]} ${name}`,
   still: 'before the first pierce',
   done: 'all is cut',
   fallen: (pieces: number) => (pieces === 0 ? 'nothing has dropped out' : `${count(pieces, 'piece')} dropped out`),
   keys: 'Keys on the slider: arrows 1 s (10 s with Shift), Page Up and Page Down from contour to contour, Home and End.',
   legend: 'Heavy: already cut. Hatched the other way: dropped out. Ring with a cross: the head.',
   counted:
-    'Counted: ways between pierces, each pierce’s routine, the path at its feed, lower where a corner is eased, and the waits. Not counted: the head’s travel up and down.',
+    'Counted: ways between pierces, the head’s way down and up, each pierce’s routine, the path at its feed, lower where a corner is eased, and the waits with what getting the cut going again takes.',
   about: 'Keys, and what is counted',
   alongEdges: 'Run along the finished edges: lead-ins and the kerf are not in it.',
   problems: 'Not cut as planned',

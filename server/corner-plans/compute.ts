@@ -7,7 +7,7 @@ import {
   type PlannedCorner as ComputedCorner,
 } from '../../strategy/corners/index.ts';
 import type { MachineProfile } from '../../strategy/machine.ts';
-import { oxygenMassFlow, PIERCE_DEFAULTS, routineTime } from '../../strategy/pierce/index.ts';
+import { oxygenMassFlow, PIERCE_DEFAULTS } from '../../strategy/pierce/index.ts';
 import type { DrawingReader } from '../drawings/reader.ts';
 import type { Planned } from './planned.ts';
 
@@ -102,18 +102,6 @@ function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): Pla
       at: at ?? null,
     })),
     trouble: corner.problem ?? null,
-  };
-}
-
-/** What the time of the cut follows from. The machine's own greatest feed bounds the cut's, as in the plan, and is what it travels at. */
-export function cuttingOf(content: StrategyContent, { axes }: Pick<MachineProfile, 'axes'>): CornerPlan['cutting'] {
-  return {
-    feed: Math.min(content.cut.feed, axes.maxFeed),
-    acceleration: axes.acceleration,
-    jerk: axes.jerk,
-    travel: axes.maxFeed,
-    pierce: routineTime(content.stages),
-    kerfWidth: content.cut.kerfWidth,
   };
 }
 

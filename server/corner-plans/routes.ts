@@ -6,7 +6,8 @@ import { namesOf } from '../people/names.ts';
 import { note } from '../record/note.ts';
 import type { Mount } from '../route.ts';
 import type { Services } from '../services.ts';
-import { computePlan, cuttingOf, unknownOverrides, type Choices, type PlanSource } from './compute.ts';
+import { computePlan, unknownOverrides, type Choices, type PlanSource } from './compute.ts';
+import { cuttingOf } from './cutting.ts';
 import {
   addCornerPlan,
   findCornerPlan,
@@ -178,6 +179,8 @@ async function replyWith(
   const found = await findCornerPlan(tx, id);
   if (!found || (onlyApproved && found.revision.state !== 'approved')) throw notFound('There is no such corner plan');
   const { plan, planned, newestLayout, revision, strategyName, profile } = found;
+  const nozzle = await findNozzle(tx, revision.content.nozzleId);
+  if (!nozzle) throw new Error(`corner plan ${id} is for a nozzle that is not there`);
   const names = await namesOf(tx);
   return {
     version: plan.version,
@@ -203,7 +206,7 @@ async function replyWith(
       skeleton: plan.skeleton,
       overrides: plan.overrides,
       limit: plan.limit,
-      cutting: cuttingOf(revision.content, profile),
+      cutting: cuttingOf(revision.content, profile, { ...plan, nozzle }),
       corners: plan.corners,
       totals: plan.totals,
       changedAt: plan.changedAt.toISOString(),

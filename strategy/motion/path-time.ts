@@ -17,6 +17,9 @@ export type PathDrive = DriveLimits & {
 /** Time along a path, s, its length, m, and how often the machine comes to rest on the way. */
 export type PathTime = { readonly time: number; readonly length: number; readonly stops: number };
 
+/** Pieces below this are rounding, m: nothing moves along them. */
+const nothing = 1e-12;
+
 /** Breaks of direction below this are rounding, rad. */
 const smoothBreak = 1e-3;
 
@@ -72,7 +75,7 @@ function spansOf(path: readonly Segment[], drive: PathDrive): Span[] {
   let before: Segment | null = null;
   path.forEach((segment, i) => {
     const length = segmentLength(segment);
-    if (length === 0) return;
+    if (length < nothing) return;
     const feed = Math.min(drive.feed, drive.bounds?.[i] ?? Infinity);
     const limit = segment.kind === 'arc' ? Math.min(feed, arcFeedLimit(drive.acceleration, segment.radius)) : feed;
     const last = spans.at(-1);
@@ -107,15 +110,30 @@ function lookAhead(spans: readonly Span[], drive: DriveLimits): number[] {
   return speeds;
 }
 
+/** The highest speed within a span, m/s: its bound, or what leaves room to brake again. */
 function peakOf(span: Span, from: number, to: number, drive: DriveLimits): number {
-  const cost = (peak: number) => speedChangeDistance(from, peak, drive) + speedChangeDistance(peak, to, drive);
-  if (cost(span.limit) <= span.length) return span.limit;
-  let low = Math.max(from, to);
-  let high = span.limit;
-  for (let i = 0; i < 60; i++) {
-    const middle = (low + high) / 2;
-    if (cost(middle) <= span.length) low = middle;
-    else high = middle;
+  const { length, limit } = span;
+  const over = (peak: number) => speedChangeDistance(from, peak, drive) + speedChangeDistance(peak, to, drive) - length;
+  if (over(limit) <= 0) return limit;
+  // from rest to rest, or as it came: half the length each way
+  if (from === to) return speedReached(from, length / 2, limit, drive);
+  let [low, high] = [Math.max(from, to), limit];
+  let [below, above] = [over(low), over(high)];
+  if (below >= 0) return low;
+  // false position; where one end stays put its weight is halved, so that both close in (the Illinois rule)
+  let kept = 0;
+  for (let i = 0; i < 60 && high - low > 1e-15 * high; i++) {
+    const middle = i % 8 === 7 ? (low + high) / 2 : (low * above - high * below) / (above - below);
+    const at = over(middle);
+    if (at <= 0) {
+      [low, below] = [middle, at];
+      if (kept === 1) above /= 2;
+      kept = 1;
+    } else {
+      [high, above] = [middle, at];
+      if (kept === -1) below /= 2;
+      kept = -1;
+    }
   }
   return low;
 }
