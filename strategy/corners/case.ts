@@ -1,4 +1,5 @@
 import type { PlateProperties } from '../heat/properties.ts';
+import type { ReturnQuestion } from '../heat/return-temperature.ts';
 import type { MachineProfile } from '../machine.ts';
 import type { Contour } from '../path/contour.ts';
 import type { Corner } from '../path/corner.ts';
@@ -61,17 +62,22 @@ export type Context = {
   readonly loopsNear: (place: Point, reach: number) => readonly PlacedLoop[];
 };
 
-/** What is known of a corner before anything is decided. */
-export type Case = {
+/** A corner with its place on the path, before anything is known of its heat. */
+export type Prospect = {
   readonly id: string;
   readonly contour: PlanContour;
   readonly corner: Corner;
   readonly onPath: LoopCorner;
   /** Radius of the path's arc where the drawing rounds the corner itself, m. */
   readonly drawnRound: number | undefined;
-  readonly before: readonly Segment[];
   /** Length of path that is the corner's own: half the way to the corner before and to the next, m. */
   readonly room: { readonly before: number; readonly after: number };
+};
+
+/** What is known of a corner before anything is decided. */
+export type Case = Prospect & {
+  /** Path cut before the corner, in order of travel, ending in it. */
+  readonly before: readonly Segment[];
   readonly without: number; // K
 };
 
@@ -84,12 +90,24 @@ export type EasedPath = {
   readonly pieces: readonly EasedPiece[];
 };
 
-/** An option with what it would put on the plate. */
-export type Candidate = CornerOption & {
-  /** The rules allow it at no corner: not worth a word where a corner is in trouble. */
-  readonly ruledOut?: true;
-  readonly loop?: Loop;
-  readonly dwell?: number;
-  readonly ease?: EasedPath;
-  readonly round?: CornerRound;
+/** What a treatment puts on the plate. */
+type Put = { readonly loop?: Loop; readonly ease?: EasedPath; readonly round?: CornerRound };
+
+/** A treatment that fits, before anything is known of its heat. */
+export type Way = Put & {
+  readonly treatment: CornerTreatment;
+  /** s; of a dwell what getting the cut going again costs beside the wait. */
+  readonly addedTime: number;
+  /** What is asked about its heat; of a dwell without a wait. */
+  readonly asks: Pick<ReturnQuestion, 'treatment' | 'round'>;
+  /** The sentence about it, with the temperature that the tip returns at. */
+  readonly say: (returnsAt: string) => string;
 };
+
+/** An option with what it would put on the plate. */
+export type Candidate = CornerOption &
+  Put & {
+    /** The rules allow it at no corner: not worth a word where a corner is in trouble. */
+    readonly ruledOut?: true;
+    readonly dwell?: number;
+  };

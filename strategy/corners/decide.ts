@@ -1,3 +1,4 @@
+import type { Corner } from '../path/corner.ts';
 import { celsius, degrees, seconds } from '../units/said.ts';
 import type { Candidate, Case, CornerTreatment } from './case.ts';
 import { leaveOption } from './options.ts';
@@ -85,4 +86,16 @@ function least<T>(items: readonly T[], measure: (item: T) => number): T | undefi
     (best, item) => (best === undefined || measure(item) < measure(best) ? item : best),
     undefined,
   );
+}
+
+/** What is said of a corner that has no width. */
+export function doubledBack({ convex }: Corner, leave: Candidate): Decision {
+  const why = convex
+    ? 'the contour doubles back in a spike without width'
+    : 'the contour doubles back in a slit without width';
+  return {
+    chosen: leave,
+    why,
+    problem: `${why}: no path goes round it, and nothing can be said of its heat; mend the drawing`,
+  };
 }

@@ -1,6 +1,8 @@
 export type { CornerRules, CutConditions } from './rules.ts';
 export type { CornerOption, CornerPlanRequest, CornerTreatment, EasedPath, PlanContour } from './case.ts';
-export type { CornerPlan, CornerPlanTotals, PlannedCorner, PlannedLoop, PlannedRound } from './plan.ts';
+export type { PlannedCorner, PlannedLoop, PlannedRound } from './planned.ts';
+export type { CornerPlanTotals } from './totals.ts';
+export type { CornerPlan } from './plan.ts';
 export { cornerPlan } from './plan.ts';
 export type { PlannedInsert } from './insert.ts';
 export { cornerInsert } from './insert.ts';

@@ -2,7 +2,7 @@ import type { Point } from '../path/point.ts';
 import { pointDistance } from '../path/point.ts';
 import type { Segment } from '../path/segment.ts';
 import { lineBetween, segmentEnd, segmentStart } from '../path/segment.ts';
-import type { PlannedCorner } from './plan.ts';
+import type { PlannedCorner } from './planned.ts';
 
 /** What a planned corner puts into its contour's path. */
 export type PlannedInsert = {

@@ -1,4 +1,3 @@
-import { returnOf } from '../heat/return-temperature.ts';
 import type { Loop } from '../path/loop.ts';
 import { flatLoopAt, flatLoopReach, loopAt, loopExtension, loopReach } from '../path/loop.ts';
 import type { LoopRoom } from '../path/loop-fit.ts';
@@ -7,10 +6,11 @@ import { flatExtensions, loopRadii } from '../path/loop-radius.ts';
 import type { Corner } from '../path/corner.ts';
 import type { Point } from '../path/point.ts';
 import { roundDeviation } from '../path/round.ts';
-import { celsius, millimetres } from '../units/said.ts';
+import { millimetres } from '../units/said.ts';
 import { loopAddedTime } from './added-time.ts';
-import type { Candidate, Case, Context, CornerPlanRequest } from './case.ts';
+import type { Candidate, Case, Context, CornerPlanRequest, Prospect, Way } from './case.ts';
 import { hundredths } from './hundredths.ts';
+import { heated } from './heated.ts';
 import { refused, ruledOut } from './refused.ts';
 
 /** The largest loops that fit a corner: of one arc, and flat where that one had to be smaller than designed or does not fit. */
@@ -42,7 +42,7 @@ export function mostReach({ convex, angle }: Corner, request: Bounds): number {
 
 /** The loops that fit, or why none is even tried. Clearance alone: no heat, no time. */
 export function fittingLoops(
-  { corner, contour, onPath }: Pick<Case, 'corner' | 'contour' | 'onPath'>,
+  { corner, contour, onPath }: Pick<Prospect, 'corner' | 'contour' | 'onPath'>,
   context: Pick<Context, 'request' | 'field' | 'loopsNear'>,
 ): FittingLoops | { readonly kind: 'none'; readonly why: string } {
   const { request, field, loopsNear } = context;
@@ -82,10 +82,13 @@ function firstFitting(sizes: readonly number[], loopOf: (size: number) => Loop, 
 }
 
 /**
- * The loop of one arc at the design number when it fits; otherwise the largest of one arc and the largest flat one that fit, of these the quicker one that
- * stays under the limit, or the one that leaves the cooler tip; or why none fits.
+ * The loop of one arc at the design number when it fits; otherwise the largest of one arc and the largest flat one that fit; or why none does. Clearance and
+ * time, no heat.
  */
-export function loopOption(found: Case, context: Context): Candidate {
+export function loopWays(
+  found: Prospect,
+  context: Pick<Context, 'request' | 'field' | 'loopsNear'>,
+): readonly Way[] | Candidate {
   const { rules } = context.request;
   const { corner } = found;
   if (!rules.loop.allowed) return ruledOut('loop', 'loops');
@@ -95,11 +98,19 @@ export function loopOption(found: Case, context: Context): Candidate {
   const loops = fittingLoops(found, context);
   if ('kind' in loops) return refused('loop', loops.why);
   const { design, smallest, tangent, flat, inTheWay } = loops;
-  const candidates = [tangent, flat].flatMap((loop) => (loop ? [candidateOf(found, loop, loops, context)] : []));
-  const [first, second] = candidates;
-  if (first) return second && better(second, first, context.limit) ? second : first;
+  const ways = [tangent, flat].flatMap((loop) => (loop ? [wayOf(found, loop, loops, context.request)] : []));
+  if (ways.length > 0) return ways;
   const tried = smallest < design ? `, and down to ${millimetres(smallest)} or flattened something is in the way` : '';
   return refused('loop', `at ${millimetres(design)} radius ${inTheWay?.why ?? 'nothing fits'}${tried}`, inTheWay?.at);
+}
+
+/** Of the loops that fit the quicker one that stays under the limit, or the one that leaves the cooler tip; or why none fits. */
+export function loopOption(found: Case, context: Context): Candidate {
+  const ways = loopWays(found, context);
+  if ('fits' in ways) return ways;
+  const [first, second] = ways.map((way) => heated(found, way, context));
+  if (!first) throw new Error('there is a way or a reason why not');
+  return second && better(second, first, context.limit) ? second : first;
 }
 
 /** Why a loop would leave a drawn fillet too sharp, or null where there is none or the tolerance allows it. */
@@ -111,17 +122,12 @@ function filletLost({ fillet, angle }: Corner, tolerance: number): string | null
   return `the drawing rounds this corner with ${hundredths(fillet.radius)}; a loop leaves it sharp, ${hundredths(left)} more steel than drawn, and ${allowed}`;
 }
 
-function candidateOf(found: Case, loop: Loop, { design, inTheWay }: FittingLoops, context: Context): Candidate {
-  const { cut, plateTemperature, properties } = context.request;
-  const { onPath, before, drawnRound } = found;
-  const returnWith = returnOf({
-    corner: onPath,
-    before,
-    treatment: { kind: 'loop', loop },
-    cut,
-    plateTemperature,
-    properties,
-  });
+function wayOf(
+  { onPath, drawnRound }: Prospect,
+  loop: Loop,
+  { design, inTheWay }: FittingLoops,
+  request: CornerPlanRequest,
+): Way {
   const said =
     loop.shape === 'flat'
       ? `a flat loop ${millimetres(loop.extension)} past the corner with arcs of ${millimetres(loop.radius)} fits`
@@ -130,10 +136,9 @@ function candidateOf(found: Case, loop: Loop, { design, inTheWay }: FittingLoops
   const smaller = inTheWay ? `, ${instead} the design's ${millimetres(design)} because ${inTheWay.why}` : '';
   return {
     treatment: 'loop',
-    fits: true,
-    returnWith,
-    addedTime: loopAddedTime(onPath, loop, drawnRound, context.request),
-    why: `${said}${smaller}; the tip returns at ${celsius(returnWith)}`,
+    addedTime: loopAddedTime(onPath, loop, drawnRound, request),
+    asks: { treatment: { kind: 'loop', loop } },
+    say: (returnsAt) => `${said}${smaller}; the tip returns at ${returnsAt}`,
     loop,
   };
 }

@@ -1,4 +1,3 @@
-import type { ReturnTreatment } from '../heat/return-temperature.ts';
 import { returnOf } from '../heat/return-temperature.ts';
 import { easedInto, easedOutOf } from '../path/ease.ts';
 import { arcRound, cornerRound, roundRadius, roundTangent } from '../path/round.ts';
@@ -7,16 +6,11 @@ import type { Segment } from '../path/segment.ts';
 import { pathWithoutLast } from '../path/path-part.ts';
 import { celsius, millimetres, percent, seconds } from '../units/said.ts';
 import { easeAddedTime, roundAddedTime } from './added-time.ts';
-import type { Candidate, Case, Context, EasedPath } from './case.ts';
+import type { Candidate, Case, Context, CornerPlanRequest, EasedPath, Prospect, Way } from './case.ts';
 import { leastDwell } from './dwell.ts';
 import { hundredths } from './hundredths.ts';
 import { refused, ruledOut } from './refused.ts';
-
-/** Return temperature of a corner with a treatment, K. */
-function returnsAt(found: Case, treatment: ReturnTreatment, { request }: Context, round = found.drawnRound): number {
-  const { cut, plateTemperature, properties } = request;
-  return returnOf({ corner: found.onPath, before: found.before, round, treatment, cut, plateTemperature, properties });
-}
+import type { CornerRules } from './rules.ts';
 
 /** Leaving the corner as it is. */
 export function leaveOption({ without }: Pick<Case, 'without'>, limit: number): Candidate {
@@ -30,12 +24,22 @@ export function leaveOption({ without }: Pick<Case, 'without'>, limit: number): 
   };
 }
 
+/** What is asked about the heat of a corner that is left as it is. */
+export const leftAlone = (found: Prospect): Way['asks'] => ({
+  treatment: { kind: 'leave' },
+  ...roundAsked(found.drawnRound),
+});
+
+const roundAsked = (round: number | undefined) => (round === undefined ? {} : { round });
+
 /** The least wait that brings the tip under the limit, or the longest allowed; the restart adds time, and its cooling is left out. */
 export function dwellOption(found: Case, context: Context): Candidate {
-  const { rules } = context.request;
+  const { rules, cut, plateTemperature, properties } = context.request;
   if (!rules.dwell.allowed) return ruledOut('dwell', 'dwell');
   if (found.without <= context.limit) return refused('dwell', 'the tip is under the limit without waiting');
-  const after = (duration: number) => returnsAt(found, { kind: 'dwell', duration }, context);
+  const { onPath: corner, before, drawnRound: round } = found;
+  const after = (duration: number) =>
+    returnOf({ corner, before, round, treatment: { kind: 'dwell', duration }, cut, plateTemperature, properties });
   const duration = leastDwell(after, context.limit, rules.dwell.maxDuration);
   const returnWith = after(duration);
   return {
@@ -43,22 +47,27 @@ export function dwellOption(found: Case, context: Context): Candidate {
     fits: true,
     returnWith,
     addedTime: duration + rules.dwell.restart,
-    why:
-      returnWith <= context.limit
-        ? `after waiting ${seconds(duration)} the tip is at ${celsius(returnWith)}; ${seconds(rules.dwell.restart)} more get the cut going again`
-        : `after ${seconds(duration)}, the longest wait allowed, the tip is still at ${celsius(returnWith)}`,
+    why: dwellSaid(duration, returnWith <= context.limit, celsius(returnWith), rules),
     dwell: duration,
   };
 }
 
+/** The sentence about a wait, s: least to get under the limits, or the longest allowed. */
+export const dwellSaid = (duration: number, under: boolean, returnsAt: string, { dwell }: CornerRules): string =>
+  under
+    ? `after waiting ${seconds(duration)} the tip is at ${returnsAt}; ${seconds(dwell.restart)} more get the cut going again`
+    : `after ${seconds(duration)}, the longest wait allowed, the tip is still at ${returnsAt}`;
+
 /** Feed and mean power eased into the corner and out of it, over as much path as lies halfway to the corners beside it. */
-export function easeOption(found: Case, after: readonly Segment[], context: Context): Candidate {
-  const rule = context.request.rules.ease;
+export function easeWay(
+  found: Prospect & Pick<Case, 'before'>,
+  after: readonly Segment[],
+  request: CornerPlanRequest,
+): Way | Candidate {
+  const rule = request.rules.ease;
   if (!rule?.allowed) return ruledOut('ease', 'ease');
   const { feedShare, powerShare } = rule;
   const lengths = { before: Math.min(rule.length, found.room.before), after: Math.min(rule.length, found.room.after) };
-  const treatment = { kind: 'ease', length: lengths.before, feedShare, powerShare } as const;
-  const returnWith = returnsAt(found, treatment, context);
   const pieces = easedPieces(found, after, lengths);
   const over =
     lengths.before < rule.length
@@ -66,16 +75,19 @@ export function easeOption(found: Case, after: readonly Segment[], context: Cont
       : millimetres(rule.length);
   return {
     treatment: 'ease',
-    fits: true,
-    returnWith,
-    addedTime: easeAddedTime(pieces, feedShare, context.request),
-    why: `eased over ${over} to ${percent(feedShare)} of the feed and ${percent(powerShare)} of the mean power the tip returns at ${celsius(returnWith)}`,
+    addedTime: easeAddedTime(pieces, feedShare, request),
+    asks: {
+      treatment: { kind: 'ease', length: lengths.before, feedShare, powerShare },
+      ...roundAsked(found.drawnRound),
+    },
+    say: (returnsAt) =>
+      `eased over ${over} to ${percent(feedShare)} of the feed and ${percent(powerShare)} of the mean power the tip returns at ${returnsAt}`,
     ease: { ...lengths, feedShare, powerShare, pieces },
   };
 }
 
 function easedPieces(
-  { onPath, drawnRound, before }: Case,
+  { onPath, drawnRound, before }: Prospect & Pick<Case, 'before'>,
   after: readonly Segment[],
   lengths: { readonly before: number; readonly after: number },
 ): EasedPath['pieces'] {
@@ -85,8 +97,8 @@ function easedPieces(
 }
 
 /** The corner rounded by the design's radius, or by as much as the tolerance allows. */
-export function roundOption(found: Case, context: Context): Candidate {
-  const { rules, cut, profile } = context.request;
+export function roundWay(found: Prospect, request: CornerPlanRequest): Way | Candidate {
+  const { rules, cut, profile } = request;
   const { corner, onPath, contour } = found;
   const rule = rules.round;
   if (!rule?.allowed) return ruledOut('round', 'rounding');
@@ -104,22 +116,21 @@ export function roundOption(found: Case, context: Context): Candidate {
       `the path would turn on ${hundredths(radius)}, and the machine's smallest arc is ${hundredths(profile.smallestArc)}; a larger round is more than ${hundredths(rule.tolerance)} off the drawing`,
     );
   }
-  const returnWith = returnsAt(found, { kind: 'leave' }, context, radius);
   const smaller = round.radius < rule.radius * (1 - 1e-9) ? `, less than the ${hundredths(rule.radius)} asked for` : '';
   return {
     treatment: 'round',
-    fits: true,
-    returnWith,
-    addedTime: roundAddedTime(onPath, radius, context.request),
-    why: `rounded with ${hundredths(round.radius)}${smaller} the corner of ${nameOf(contour)} is ${hundredths(round.deviation)} off the drawing, ${hundredths(rule.tolerance)} are allowed; the tip returns at ${celsius(returnWith)}`,
+    addedTime: roundAddedTime(onPath, radius, request),
+    asks: { treatment: { kind: 'leave' }, round: radius },
+    say: (returnsAt) =>
+      `rounded with ${hundredths(round.radius)}${smaller} the corner of ${nameOf(contour)} is ${hundredths(round.deviation)} off the drawing, ${hundredths(rule.tolerance)} are allowed; the tip returns at ${returnsAt}`,
     round,
   };
 }
 
-const nameOf = ({ name, id }: Case['contour']): string => name ?? `contour ${id}`;
+const nameOf = ({ name, id }: Prospect['contour']): string => name ?? `contour ${id}`;
 
 /** The round whose deviation, exact on curved edges, is within the tolerance and that leaves half of each edge; null when none is. */
-function withinTolerance({ contour, corner }: Case, wished: number, tolerance: number): CornerRound | null {
+function withinTolerance({ contour, corner }: Prospect, wished: number, tolerance: number): CornerRound | null {
   let radius = wished;
   // beside curved edges the deviation grows a little otherwise than with straight ones: a few corrections bring it in
   for (let tries = 0; tries < 6 && radius > 0; tries++) {

@@ -12,7 +12,9 @@ import {
   type Paths64,
 } from 'clipper2-ts';
 import Flatbush from 'flatbush';
-import { contextOf, loopPlaces, prospectsOf, type Prospect } from '../../strategy/corners/plan.ts';
+import { contextOf, loopPlaces } from '../../strategy/corners/context.ts';
+import type { Prospect } from '../../strategy/corners/case.ts';
+import { prospectsOf } from '../../strategy/corners/prospects.ts';
 import { fittingLoops, mostReach } from '../../strategy/corners/loop-option.ts';
 import type { CornerPlanRequest } from '../../strategy/corners/index.ts';
 import type { Box, Contour, Loop, Segment } from '../../strategy/path/index.ts';
