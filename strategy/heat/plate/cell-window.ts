@@ -1,0 +1,169 @@
+import type { KerfLinks } from './kerf-links.ts';
+import type { PlateGrid } from './plate-grid.ts';
+
+/** Cells across a window at most: a row of it is a word of bits. */
+export const widestWindow = 31;
+
+/**
+ * A window of the grid about a place with a bell in it: the weights of its columns and rows (heat that the plate's edge throws back folded in), and which of its
+ * cells are reached from given ones without crossing an open kerf. One object is filled again and again: windows are looked at by the ten thousand.
+ */
+export type CellWindow = {
+  i0: number;
+  i1: number;
+  j0: number;
+  j1: number;
+  readonly across: Float64Array;
+  readonly upwards: Float64Array;
+  /** For each row of the window the cells, as bits, that conduct to their right, and to above. */
+  readonly right: Int32Array;
+  readonly up: Int32Array;
+  /** Is a way cut anywhere in the window? */
+  parted: boolean;
+};
+
+export const cellWindow = (): CellWindow => ({
+  i0: 0,
+  i1: -1,
+  j0: 0,
+  j1: -1,
+  across: new Float64Array(widestWindow),
+  upwards: new Float64Array(widestWindow),
+  right: new Int32Array(widestWindow),
+  up: new Int32Array(widestWindow),
+  parted: false,
+});
+
+/** Half the width of a bell's window in its standard deviations: what lies beyond is 1e-5 of it. */
+const reach = 4.5;
+
+/**
+ * Lays the window about a place, m, with bells of variances `varianceX` and `varianceY`, m². The window is at most 31 cells wide: false, and nothing else, when the bell
+ * is too wide for that.
+ */
+export function layWindow(
+  window: CellWindow,
+  grid: PlateGrid,
+  x: number,
+  y: number,
+  varianceX: number,
+  varianceY: number,
+): boolean {
+  const u = (x - grid.minX) / grid.cellX - 0.5;
+  const v = (y - grid.minY) / grid.cellY - 0.5;
+  const su = varianceX / (grid.cellX * grid.cellX);
+  const sv = varianceY / (grid.cellY * grid.cellY);
+  const ru = Math.ceil(reach * Math.sqrt(su));
+  const rv = Math.ceil(reach * Math.sqrt(sv));
+  if (2 * ru + 1 > widestWindow || 2 * rv + 1 > widestWindow) return false;
+  const i = Math.round(u);
+  const j = Math.round(v);
+  window.i0 = Math.max(0, i - ru);
+  window.i1 = Math.min(grid.nx - 1, i + ru);
+  window.j0 = Math.max(0, j - rv);
+  window.j1 = Math.min(grid.ny - 1, j + rv);
+  bell(window.across, window.i0, window.i1, u, su, grid.nx);
+  bell(window.upwards, window.j0, window.j1, v, sv, grid.ny);
+  return true;
+}
+
+/** Weights of the cells from..to of a row of `count` that add up to 1. What passes an end of the row comes back as from a mirror. */
+function bell(weights: Float64Array, from: number, to: number, at: number, variance: number, count: number): void {
+  const scale = -0.5 / variance;
+  let sum = 0;
+  const [low, high] = [-1 - at, 2 * count - 1 - at];
+  const folded = from === 0 || to === count - 1;
+  for (let k = from; k <= to; k++) {
+    let weight = Math.exp(scale * (k - at) * (k - at));
+    if (folded) weight += Math.exp(scale * (low - k) * (low - k)) + Math.exp(scale * (high - k) * (high - k));
+    weights[k - from] = weight;
+    sum += weight;
+  }
+  for (let k = 0; k <= to - from; k++) weights[k] = (weights[k] ?? 0) / sum;
+}
+
+/** Notes which ways of the window conduct at `time`, s. */
+export function partWindow(window: CellWindow, links: KerfLinks, nx: number, time: number): void {
+  const { i0, i1, j0, j1, right, up } = window;
+  let parted = false;
+  for (let j = j0; j <= j1; j++) {
+    let [toRight, toAbove] = [0, 0];
+    const o = j * nx;
+    for (let i = i0; i < i1; i++) {
+      if ((links.right[o + i] ?? 0) > time) toRight |= 1 << (i - i0);
+      else parted = true;
+    }
+    if (j < j1) {
+      for (let i = i0; i <= i1; i++) {
+        if ((links.up[o + i] ?? 0) > time) toAbove |= 1 << (i - i0);
+        else parted = true;
+      }
+    }
+    right[j - j0] = toRight;
+    up[j - j0] = toAbove;
+  }
+  window.parted = parted;
+}
+
+/** Marks in `reached`, a word a row, the cells that heat comes to from cell (i, j) within the window without crossing an open kerf. */
+export function reachFrom(window: CellWindow, i: number, j: number, reached: Int32Array): void {
+  const { i0, j0, j1, right, up } = window;
+  const rows = j1 - j0 + 1;
+  reached.fill(0, 0, rows);
+  reached[j - j0] = along(1 << (i - i0), right[j - j0] ?? 0);
+  let changed = true;
+  while (changed) {
+    changed = false;
+    for (let row = 1; row < rows; row++) {
+      const from = (reached[row - 1] ?? 0) & (up[row - 1] ?? 0);
+      const known = reached[row] ?? 0;
+      if ((from | known) === known) continue;
+      reached[row] = along(known | from, right[row] ?? 0);
+      changed = true;
+    }
+    for (let row = rows - 2; row >= 0; row--) {
+      const from = (reached[row + 1] ?? 0) & (up[row] ?? 0);
+      const known = reached[row] ?? 0;
+      if ((from | known) === known) continue;
+      reached[row] = along(known | from, right[row] ?? 0);
+      changed = true;
+    }
+  }
+}
+
+/** The cells of a row that are reached from some of them: bits doubled up to the right and then to the left, over ways that conduct. */
+function along(cells: number, toRight: number): number {
+  let open = toRight << 1;
+  cells |= open & (cells << 1);
+  open &= open << 1;
+  cells |= open & (cells << 2);
+  open &= open << 2;
+  cells |= open & (cells << 4);
+  open &= open << 4;
+  cells |= open & (cells << 8);
+  open &= open << 8;
+  cells |= open & (cells << 16);
+  let back = toRight;
+  cells |= back & (cells >>> 1);
+  back &= back >>> 1;
+  cells |= back & (cells >>> 2);
+  back &= back >>> 2;
+  cells |= back & (cells >>> 4);
+  back &= back >>> 4;
+  cells |= back & (cells >>> 8);
+  back &= back >>> 8;
+  cells |= back & (cells >>> 16);
+  return cells;
+}
+
+/** Share of the window's bell that lies in cells, 0..1. */
+export function shareOf({ i0, i1, j0, j1, across, upwards }: CellWindow, cells: Int32Array): number {
+  let share = 0;
+  for (let j = j0; j <= j1; j++) {
+    const word = cells[j - j0] ?? 0;
+    let row = 0;
+    for (let i = 0; i <= i1 - i0; i++) if ((word >>> i) & 1) row += across[i] ?? 0;
+    share += row * (upwards[j - j0] ?? 0);
+  }
+  return share;
+}
