@@ -1,6 +1,7 @@
 import type { CornerPlan } from '../../shared/corner-plans.ts';
 import type { StrategyContent } from '../../shared/strategies.ts';
 import type { MachineProfile, Nozzle } from '../../strategy/machine.ts';
+import { usualLoss } from '../../strategy/heat/plate/index.ts';
 import { heightDefaults } from '../../strategy/motion/index.ts';
 import {
   oxygenMassFlow,
@@ -12,9 +13,6 @@ import {
 
 /** What a plan is cut on. */
 export type CutOn = Pick<CornerPlan, 'thickness' | 'plateTemperature'> & { readonly nozzle: Nozzle };
-
-/** Heat a lying plate gives to still air, W/(m² K) on each face: natural convection and some radiation below 200 °C. Common practice, no source. */
-const lossCoefficient = 20;
 
 /**
  * What the time and the heat of a cut follow from. The machine's own greatest feed bounds the cut's, as in the plan, and is what it travels at. What a pierce
@@ -47,7 +45,7 @@ export function cuttingOf(content: StrategyContent, profile: MachineProfile, on:
     pierceEnergy: stages.reduce((sum, stage) => sum + stageMeanPower(stage) * stage.duration, 0),
     oxygenFlow: oxygenMassFlow(on.nozzle.diameter, cut.oxygenPressure, PIERCE_DEFAULTS.dischargeCoefficient),
     pierceOxygen: pierce?.oxygenUsed ?? oxygenOver(stages, on.nozzle),
-    lossCoefficient,
+    lossCoefficient: usualLoss,
   };
 }
 

@@ -1,5 +1,12 @@
-import { arcAcceleration, arcFeedLimit, pathTime, sCurveMove, trapezoidMove } from '../../strategy/motion/index.ts';
-import { lineBetween } from '../../strategy/path/index.ts';
+import {
+  arcAcceleration,
+  arcFeedLimit,
+  pathTime,
+  plateClock,
+  sCurveMove,
+  trapezoidMove,
+} from '../../strategy/motion/index.ts';
+import { lineBetween, loopAt, type Segment } from '../../strategy/path/index.ts';
 import type { OutsideCheck } from './check.ts';
 import { outsideChecks } from './check.ts';
 
@@ -37,6 +44,7 @@ outsideChecks('time and speed of a move', [
     0.141421356237,
     KINEMATICS,
   ),
+  check('V01b-peak', 'its peak speed', 'm/s', () => trapezoidMove(0.01, 0.5, 2).peakSpeed, 0.141421356237, KINEMATICS),
   check(
     'V01d-time',
     '125 mm, where the feed is just reached',
@@ -47,9 +55,16 @@ outsideChecks('time and speed of a move', [
   ),
   check('V01d-peak', 'its peak speed', 'm/s', () => trapezoidMove(0.125, 0.5, 2).peakSpeed, 0.5, KINEMATICS),
   check('V02a-time', '0.5 m with bounded jerk', 's', () => sCurveMove(0.5, 0.5, 2, 50).time, 1.29, BIAGIOTTI),
+  check('V02a-peak', 'its peak speed', 'm/s', () => sCurveMove(0.5, 0.5, 2, 50).peakSpeed, 0.5, BIAGIOTTI),
   check('V02b-time', '50 mm with bounded jerk', 's', () => sCurveMove(0.05, 0.5, 2, 50).time, 0.35874754901, BIAGIOTTI),
   check('V02b-peak', 'its peak speed', 'm/s', () => sCurveMove(0.05, 0.5, 2, 50).peakSpeed, 0.27874754901, BIAGIOTTI),
   check('V02d-time', '1 m at 1 m/s with bounded jerk', 's', () => sCurveMove(1, 1, 10, 200).time, 1.15, BIAGIOTTI),
+  check('V02d-peak', 'its peak speed', 'm/s', () => sCurveMove(1, 1, 10, 200).peakSpeed, 1, BIAGIOTTI),
+  {
+    ...check('V02-2', '2 mm with bounded jerk', 's', () => sCurveMove(0.002, 0.5, 2, 50).time, 0.1086, BIAGIOTTI),
+    // given to four digits
+    tolerance: { abs: 5e-5 },
+  },
   check(
     'V02b-path',
     '50 mm with bounded jerk, as a path',
@@ -77,6 +92,14 @@ outsideChecks('time and speed of a move', [
     CENTRIPETAL,
   ),
   check(
+    'V04-1',
+    'acceleration on 1 mm radius at 1 m/min',
+    'm/s²',
+    () => arcAcceleration(1 / 60, 1e-3),
+    0.277777777778,
+    CENTRIPETAL,
+  ),
+  check(
     'V04-3',
     'acceleration on 3 mm radius at 1 m/min',
     'm/s²',
@@ -95,5 +118,63 @@ outsideChecks('time and speed of a move', [
     ),
     // starting and stopping, which the plain quotient leaves out, take 0.05 s
     tolerance: { abs: 0.06 },
+  },
+  {
+    ...check(
+      'V06-plate',
+      'the same as a plate’s whole cut, without pierce and travel',
+      's',
+      () =>
+        plateClock(
+          {
+            runs: [
+              {
+                contourId: 'a',
+                name: 'outline a',
+                pierce: { x: 0, y: 0 },
+                pieces: [{ kind: 'contour', segments: [lineBetween({ x: 0, y: 0 }, { x: 2, y: 0 })] }],
+              },
+            ],
+          },
+          { feed: 0.015, acceleration: 2, jerk: 50, travel: 1, pierce: 0 },
+        ).duration,
+      133.333333333,
+      'length over feed, kinematics',
+    ),
+    tolerance: { abs: 0.06 },
+  },
+  {
+    ...check(
+      'K02-time',
+      'a loop of 5 mm at a right angle, at 1 m/min',
+      's',
+      () => {
+        const corner = {
+          point: { x: 0, y: 0 },
+          incoming: { x: 1, y: 0 },
+          outgoing: { x: 0, y: 1 },
+          angle: Math.PI / 2,
+        };
+        const path = (segments: readonly Segment[]) =>
+          pathTime(
+            [lineBetween({ x: -0.1, y: 0 }, corner.point), ...segments, lineBetween(corner.point, { x: 0, y: 0.1 })],
+            {
+              feed: 1 / 60,
+              acceleration: 2,
+              jerk: 50,
+            },
+          );
+        const straight = pathTime([lineBetween({ x: -0.1, y: 0 }, { x: 0.1, y: 0 })], {
+          feed: 1 / 60,
+          acceleration: 2,
+          jerk: 50,
+        });
+        return path(loopAt(corner, 5e-3).segments).time - straight.time;
+      },
+      2.01,
+      'length of the tangent loop over feed, geometry',
+    ),
+    // given to three digits
+    tolerance: { abs: 0.005 },
   },
 ]);
