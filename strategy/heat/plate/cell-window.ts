@@ -105,55 +105,49 @@ export function partWindow(window: CellWindow, links: KerfLinks, nx: number, tim
   window.parted = parted;
 }
 
-/** Marks in `reached`, a word a row, the cells that heat comes to from cell (i, j) within the window without crossing an open kerf. */
+/**
+ * Marks in `reached`, a word a row, the cells that heat comes to from cell (i, j) within the window without crossing an open kerf or turning back: what lies behind the end of a kerf
+ * is not reached around it.
+ */
 export function reachFrom(window: CellWindow, i: number, j: number, reached: Int32Array): void {
   const { i0, j0, j1, right, up } = window;
   const rows = j1 - j0 + 1;
-  reached.fill(0, 0, rows);
-  reached[j - j0] = along(1 << (i - i0), right[j - j0] ?? 0);
-  let changed = true;
-  while (changed) {
-    changed = false;
-    for (let row = 1; row < rows; row++) {
-      const from = (reached[row - 1] ?? 0) & (up[row - 1] ?? 0);
-      const known = reached[row] ?? 0;
-      if ((from | known) === known) continue;
-      reached[row] = along(known | from, right[row] ?? 0);
-      changed = true;
-    }
-    for (let row = rows - 2; row >= 0; row--) {
-      const from = (reached[row + 1] ?? 0) & (up[row] ?? 0);
-      const known = reached[row] ?? 0;
-      if ((from | known) === known) continue;
-      reached[row] = along(known | from, right[row] ?? 0);
-      changed = true;
-    }
-  }
+  const column = i - i0;
+  const middle = j - j0;
+  reached[middle] = along(1 << column, right[middle] ?? 0, column);
+  for (let row = middle + 1; row < rows; row++)
+    reached[row] = along((reached[row - 1] ?? 0) & (up[row - 1] ?? 0), right[row] ?? 0, column);
+  for (let row = middle - 1; row >= 0; row--)
+    reached[row] = along((reached[row + 1] ?? 0) & (up[row] ?? 0), right[row] ?? 0, column);
 }
 
-/** The cells of a row that are reached from some of them: bits doubled up to the right and then to the left, over ways that conduct. */
-function along(cells: number, toRight: number): number {
-  let open = toRight << 1;
-  cells |= open & (cells << 1);
+/** The cells of a row that are reached from some of them away from a column: bits doubled up over ways that conduct, to the right of it and to the left. */
+function along(cells: number, toRight: number, column: number): number {
+  const above = -1 << column;
+  let ahead = cells & above;
+  let open = (toRight & above) << 1;
+  ahead |= open & (ahead << 1);
   open &= open << 1;
-  cells |= open & (cells << 2);
+  ahead |= open & (ahead << 2);
   open &= open << 2;
-  cells |= open & (cells << 4);
+  ahead |= open & (ahead << 4);
   open &= open << 4;
-  cells |= open & (cells << 8);
+  ahead |= open & (ahead << 8);
   open &= open << 8;
-  cells |= open & (cells << 16);
-  let back = toRight;
-  cells |= back & (cells >>> 1);
+  ahead |= open & (ahead << 16);
+  const below = (1 << column) - 1;
+  let behind = cells & (below | (1 << column));
+  let back = toRight & below;
+  behind |= back & (behind >>> 1);
   back &= back >>> 1;
-  cells |= back & (cells >>> 2);
+  behind |= back & (behind >>> 2);
   back &= back >>> 2;
-  cells |= back & (cells >>> 4);
+  behind |= back & (behind >>> 4);
   back &= back >>> 4;
-  cells |= back & (cells >>> 8);
+  behind |= back & (behind >>> 8);
   back &= back >>> 8;
-  cells |= back & (cells >>> 16);
-  return cells;
+  behind |= back & (behind >>> 16);
+  return ahead | behind;
 }
 
 /** Share of the window's bell that lies in cells, 0..1. */

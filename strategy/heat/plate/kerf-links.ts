@@ -1,5 +1,5 @@
-import { arcCovers } from '../../path/segment.ts';
 import type { Arc, Segment } from '../../path/segment.ts';
+import { arcCovers } from '../../path/segment.ts';
 import type { HeatedPiece } from '../path-heat.ts';
 import type { PlateGrid } from './plate-grid.ts';
 
@@ -7,7 +7,13 @@ import type { PlateGrid } from './plate-grid.ts';
  * When the way from the middle of each cell to the middle of the next is cut, s: to the right (`right`) and upwards (`up`), row by row. ∞ where no kerf
  * crosses it, −∞ where it leads out of the steel. A path that closes crosses every way out of what it encloses, whatever its shape.
  */
-export type KerfLinks = { readonly right: Float64Array; readonly up: Float64Array };
+export type KerfLinks = {
+  readonly right: Float64Array;
+  readonly up: Float64Array;
+  /** Number of the piece that cuts it, −1 where none does. */
+  readonly rightBy: Int32Array;
+  readonly upBy: Int32Array;
+};
 
 /** A way between two cells that is cut at a time: `index` of the first cell, to the right or upwards. */
 export type LinkCut = { readonly time: number; readonly index: number; readonly upwards: boolean };
@@ -30,19 +36,26 @@ export function kerfLinks(
   const up = new Float64Array(nx * ny).fill(Infinity);
   const startX = minX + (0.5 + offX) * cellX;
   const startY = minY + (0.5 + offY) * cellY;
-  const cut = (links: Float64Array, index: number, time: number): void => {
-    if (time < (links[index] ?? 0)) links[index] = time;
+  const rightBy = new Int32Array(nx * ny).fill(-1);
+  const upBy = new Int32Array(nx * ny).fill(-1);
+  const cut = (links: Float64Array, by: Int32Array, index: number, time: number, piece: number): void => {
+    if (!(time < (links[index] ?? 0))) return;
+    links[index] = time;
+    by[index] = piece;
   };
-  for (const { segment, from, to } of pieces) {
+  for (let piece = 0; piece < pieces.length; piece++) {
+    const one = pieces[piece];
+    if (!one) continue;
+    const { segment, from, to } = one;
     const lasts = to - from;
     // columns of middles: what crosses one cuts a way upwards
     crossings(segment, 'x', startX, cellX, nx, (column, share, y) => {
       const row = Math.floor((y - startY) / cellY);
-      if (row >= 0 && row < ny - 1) cut(up, row * nx + column, from + share * lasts);
+      if (row >= 0 && row < ny - 1) cut(up, upBy, row * nx + column, from + share * lasts, piece);
     });
     crossings(segment, 'y', startY, cellY, ny, (row, share, x) => {
       const column = Math.floor((x - startX) / cellX);
-      if (column >= 0 && column < nx - 1) cut(right, row * nx + column, from + share * lasts);
+      if (column >= 0 && column < nx - 1) cut(right, rightBy, row * nx + column, from + share * lasts, piece);
     });
   }
   if (steel) {
@@ -58,7 +71,7 @@ export function kerfLinks(
     if (upwards < Infinity) cuts.push({ time: upwards, index, upwards: true });
   }
   cuts.sort((a, b) => a.time - b.time);
-  return { links: { right, up }, cuts };
+  return { links: { right, up, rightBy, upBy }, cuts };
 }
 
 /** Calls back with number, share of the segment's length and the other coordinate wherever the segment crosses one of the parallels `start + k·step`, 0 ≤ k < count. */

@@ -14,6 +14,7 @@ import { conductionOver } from './conduction-step.ts';
 import type { HeatDrop, PierceHeat } from './heat-drops.ts';
 import { dropsBetween, piecesInside } from './heat-drops.ts';
 import { kerfLinks } from './kerf-links.ts';
+import { kerfSides } from './kerf-sides.ts';
 import type { PlateGrid, PlateShape } from './plate-grid.ts';
 import { cellMiddle, plateGrid, steelCells } from './plate-grid.ts';
 
@@ -90,6 +91,10 @@ const laidVariance = 2;
 const stepVariance = 1;
 /** Variance that a reading adds, in cells², at least: narrower bells can't be summed over cells. */
 const readVariance = 0.5;
+/** How far from a kerf's middle it is looked which side a cell is on, m. */
+const beside = 1e-6;
+/** What a bridge between cells that only share a corner carries, as a share of a face. */
+const bridgeWidth = 0.5;
 /** Values that are kept for readings, at most. */
 const keptValues = 8e6;
 const usualMoments = 60;
@@ -131,7 +136,9 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
     x >= plate.minX && x <= plate.maxX && y >= plate.minY && y <= plate.maxY && (!steelAt || steelAt({ x, y }));
   const spots = pierces.filter(({ at }) => holds(at));
   const lost = lostPerLength * thickness + pierces.reduce((sum, { at, heat }) => sum + (holds(at) ? 0 : heat), 0);
-  const { links, cuts } = kerfLinks(grid, question.kerfs ?? pieces, steel);
+  const kerfs = question.kerfs ?? pieces;
+  const { links, cuts } = kerfLinks(grid, kerfs, steel);
+  const sides = kerfSides(grid, kerfs, links);
 
   const end = Math.max(
     question.until ?? 0,
@@ -152,6 +159,7 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
   const conduction = conductionOver(grid, alpha, step);
   const { rise, warm } = conduction;
   const fade = Math.exp(-step / coolingTime);
+  const bridged = Math.exp((-bridgeWidth * 2 * alpha * step) / (cellX * cellY));
   const perHeat = 1 / (capacity * cellX * cellY);
   const window = cellWindow();
   const left = new Int32Array(widestWindow);
@@ -174,12 +182,15 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
       addBell(amount, null);
       return;
     }
-    const sides = besides(grid, drop);
-    const halves = (sides.left >= 0 ? 1 : 0) + (sides.right >= 0 ? 1 : 0);
-    if (halves === 0) return;
+    const { x, y, tangent } = drop;
+    const [across, along] = tangent ? [-tangent.y * beside, tangent.x * beside] : [0, 0];
+    const onLeft = sides.cellBeside(x + across, y + along, time);
+    const onRight = tangent ? sides.cellBeside(x - across, y - along, time) : -1;
+    const halves = (onLeft >= 0 ? 1 : 0) + (onRight >= 0 ? 1 : 0);
+    if (halves === 0) addBell(amount, null);
     for (const [cell, reached] of [
-      [sides.left, left],
-      [sides.right, right],
+      [onLeft, left],
+      [onRight, right],
     ] as const) {
       if (cell < 0) continue;
       reachFrom(window, cell % nx, Math.floor(cell / nx), reached);
@@ -226,6 +237,7 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
     const time = n * step;
     for (let cut = cuts[nextCut]; cut && cut.time <= time - step; cut = cuts[++nextCut]) conduction.cut(cut);
     conduction.step();
+    for (const { cell, beyond, since } of sides.bridges) if (since <= time) exchange(rise, cell, beyond, bridged);
     if (fade < 1) fadeBy(rise, warm, nx, fade);
     const until = time - age;
     const after = until - step;
@@ -283,8 +295,9 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
       return faded * readWide(grid, state, point, variance);
     partWindow(window, links, nx, state.time);
     if (window.parted) {
-      const i = Math.min(nx - 1, Math.max(0, Math.floor((point.x - grid.minX) / cellX)));
-      const j = Math.min(ny - 1, Math.max(0, Math.floor((point.y - grid.minY) / cellY)));
+      const seed = sides.cellBeside(point.x, point.y, state.time);
+      const i = seed >= 0 ? seed % nx : Math.min(nx - 1, Math.floor((point.x - grid.minX) / cellX));
+      const j = seed >= 0 ? Math.floor(seed / nx) : Math.min(ny - 1, Math.floor((point.y - grid.minY) / cellY));
       reachFrom(window, i, j, left);
     } else left.fill(-1);
     const { across, upwards } = window;
@@ -466,22 +479,12 @@ function between(piece: HeatedPiece, after: number, until: number): HeatedPiece 
   return { ...piece, segment: part, from: start, to: end };
 }
 
-/** Cells whose middles are nearest to a drop on its left and on its right; −1 where there are none. Of a drop without travel one cell, as its left. */
-function besides({ minX, minY, cellX, cellY, nx, ny }: PlateGrid, { x, y, tangent }: HeatDrop) {
-  const u = (x - minX) / cellX - 0.5;
-  const v = (y - minY) / cellY - 0.5;
-  const sides = { left: -1, right: -1 };
-  let [nearestLeft, nearestRight] = [Infinity, Infinity];
-  for (let j = Math.max(0, Math.floor(v) - 1); j <= Math.min(ny - 1, Math.floor(v) + 2); j++) {
-    for (let i = Math.max(0, Math.floor(u) - 1); i <= Math.min(nx - 1, Math.floor(u) + 2); i++) {
-      const [dx, dy] = [(i - u) * cellX, (j - v) * cellY];
-      const distance = dx * dx + dy * dy;
-      if (!tangent || tangent.x * dy - tangent.y * dx > 0) {
-        if (distance < nearestLeft) [nearestLeft, sides.left] = [distance, j * nx + i];
-      } else if (distance < nearestRight) [nearestRight, sides.right] = [distance, j * nx + i];
-    }
-  }
-  return sides;
+/** Brings two cells nearer to each other, to `share` of what parts them; their heat together stays. */
+function exchange(rise: Float64Array, a: number, b: number, share: number): void {
+  const mean = ((rise[a] ?? 0) + (rise[b] ?? 0)) / 2;
+  const half = (((rise[a] ?? 0) - (rise[b] ?? 0)) / 2) * share;
+  rise[a] = mean + half;
+  rise[b] = mean - half;
 }
 
 function fadeBy(rise: Float64Array, { i0, i1, j0, j1 }: Warm, nx: number, share: number): void {
