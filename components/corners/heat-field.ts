@@ -4,16 +4,10 @@ import type { PlateProperties } from '@/strategy/heat/properties.ts';
 import type { Point } from '@/strategy/path/index.ts';
 
 /**
- * A stretch of the cut, s, for which the plate is known on the raster without the young heat: what its start temperature and all heat let go before `since` leave
- * at `from` and at `to`, K, row by row. What was let go after `since` is too young for the raster and is added in its closed form.
+ * The plate at a moment, s, on the raster, K, row by row: what its start temperature and all heat let go before `since` leave. Heat let go after that is too young
+ * for the raster and is added in its closed form.
  */
-export type HeatWindow = {
-  readonly since: number;
-  readonly from: number;
-  readonly to: number;
-  readonly early: Float32Array;
-  readonly late: Float32Array;
-};
+export type HeatFrame = { readonly time: number; readonly since: number; readonly temperatures: Float32Array };
 
 /** Heat of a pierce, J per m of thickness, at a place, m, and a moment, s. */
 export type PierceHeat = { readonly at: Point; readonly time: number; readonly heat: number };
@@ -21,8 +15,9 @@ export type PierceHeat = { readonly at: Point; readonly time: number; readonly h
 /** The plate's temperature through the whole cut, as the worker sends it. */
 export type PlateHeat = {
   readonly raster: Raster;
-  /** One after the other from 0 to the cut's end. */
-  readonly windows: readonly HeatWindow[];
+  /** From the cut's beginning to its end; seldom further apart than the age at which heat comes onto the raster. */
+  readonly frames: readonly HeatFrame[];
+  /** In the order of time. */
   readonly heat: readonly HeatedPiece[];
   readonly pierces: readonly PierceHeat[];
   readonly properties: PlateProperties;
@@ -40,26 +35,40 @@ export type HeatMoment = {
   readonly properties: PlateProperties;
 };
 
-/** The plate at a time, s, held at both ends of the cut; null where there is no window. `grain`, m, is what is told apart. */
+/** The plate at a time, s, held at both ends of the cut; null where there is no frame. `grain`, m, is what is told apart. */
 export function heatMoment(plate: PlateHeat, at: number, grain: number): HeatMoment | null {
-  const { windows, raster, heat, pierces, properties } = plate;
-  const time = Math.min(windows.at(-1)?.to ?? 0, Math.max(0, at));
-  const window = windows[windowAt(windows, time)];
-  if (!window) return null;
-  const { early, late, from, to, since } = window;
-  const share = to > from ? (time - from) / (to - from) : 0;
-  const old = new Float32Array(early.length);
-  for (let i = 0; i < old.length; i++) {
-    const before = early[i] ?? 0;
-    old[i] = before + share * ((late[i] ?? 0) - before);
+  const { frames, raster, heat, pierces, properties } = plate;
+  const time = Math.min(frames.at(-1)?.time ?? 0, Math.max(frames[0]?.time ?? 0, at));
+  const i = frameAt(frames, time);
+  const before = frames[i];
+  if (!before) return null;
+  const after = frames[i + 1] ?? before;
+  // a frame may hold heat that is not let go yet: before that it does not count
+  const from = Math.max(before.time, after.since);
+  const share = after.time > from ? Math.min(1, Math.max(0, (time - from) / (after.time - from))) : 0;
+  const old = new Float32Array(before.temperatures.length);
+  for (let k = 0; k < old.length; k++) {
+    const first = before.temperatures[k] ?? 0;
+    old[k] = first + share * ((after.temperatures[k] ?? 0) - first);
   }
-  const young = heatPuffs(heat, since, time, grain, properties);
-  const deposits = pierces.filter((pierce) => pierce.time > since && pierce.time < time);
-  const puffs = new Float64Array(young.length + 5 * deposits.length);
-  puffs.set(young);
-  deposits.forEach((pierce, i) => {
-    puffs.set([pierce.at.x, pierce.at.y, pierce.time, pierce.heat, pierceSpread], young.length + 5 * i);
-  });
+  // what the later frame holds and the earlier does not counts as young, as far as the later one does not count yet
+  const between = Math.min(time, Math.max(before.since, after.since));
+  const fading = heatPuffs(heat, before.since, between, grain, properties);
+  for (let k = 3; k < fading.length; k += 5) fading[k] = (fading[k] ?? 0) * (1 - share);
+  const young = heatPuffs(heat, between, time, grain, properties);
+  const deposits = pierces
+    .filter((pierce) => pierce.time >= before.since && pierce.time < time)
+    .flatMap((pierce) => [
+      pierce.at.x,
+      pierce.at.y,
+      pierce.time,
+      pierce.time < between ? pierce.heat * (1 - share) : pierce.heat,
+      pierceSpread,
+    ]);
+  const puffs = new Float64Array(fading.length + young.length + deposits.length);
+  puffs.set(fading);
+  puffs.set(young, fading.length);
+  puffs.set(deposits, fading.length + young.length);
   return { time, raster, old, puffs, properties };
 }
 
@@ -121,13 +130,13 @@ function onRaster(old: Float32Array, { x: x0, y: y0, dx, dy, columns, rows }: Ra
 
 const clamp = (value: number, most: number): number => Math.min(Math.max(0, most), Math.max(0, value));
 
-/** The last window that has begun; the first before all. */
-function windowAt(windows: readonly HeatWindow[], time: number): number {
+/** The last frame that is not after a time; the first before all. */
+function frameAt(frames: readonly HeatFrame[], time: number): number {
   let low = 0;
-  let high = windows.length - 1;
+  let high = Math.max(0, frames.length - 2);
   while (low < high) {
     const middle = (low + high + 1) >> 1;
-    if ((windows[middle]?.from ?? 0) <= time) low = middle;
+    if ((frames[middle]?.time ?? 0) <= time) low = middle;
     else high = middle - 1;
   }
   return low;

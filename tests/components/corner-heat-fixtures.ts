@@ -8,9 +8,10 @@ export function plateHeatOf(): PlateHeat {
   const even = (kelvin: number) => new Float32Array(raster.columns * raster.rows).fill(kelvin);
   return {
     raster,
-    windows: [
-      { since: 0, from: 0, to: 10, early: even(293.15), late: even(303.15) },
-      { since: 5, from: 10, to: 20, early: even(303.15), late: even(313.15) },
+    frames: [
+      { time: 0, since: -6, temperatures: even(293.15) },
+      { time: 10, since: 4, temperatures: even(303.15) },
+      { time: 20, since: 14, temperatures: even(313.15) },
     ],
     heat: heatedPath([lineBetween({ x: 0, y: 0.05 }, { x: 0.1, y: 0.05 })], 0.005, 20, 6e4),
     pierces: [{ at: { x: 0, y: 0.05 }, time: 0.5, heat: 2e4 }],

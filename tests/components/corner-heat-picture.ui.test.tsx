@@ -2,6 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { heatMoment, temperatureAt, temperaturesOn } from '@/components/corners/heat-field.ts';
 import { heatLevels } from '@/components/corners/heat-levels.ts';
 import { levelLabels, paintHeat } from '@/components/corners/heat-paint.ts';
+import { addPuffs, heatPuffs } from '@/strategy/heat/heat-puffs.ts';
+import { pathRise } from '@/strategy/heat/index.ts';
 import { plateHeatOf } from './corner-heat-fixtures.ts';
 
 const heat = plateHeatOf();
@@ -13,7 +15,9 @@ const at = (time: number) => {
 
 describe('the plate at a moment', () => {
   it('is what lies on the raster between two of its times, and hotter near the front', () => {
-    expect(temperatureAt(at(5), { x: 0.09, y: 0.11 })).toBeCloseTo(298.15, 2);
+    // up to 14 s the frame of 20 s holds heat that is still to come
+    expect(temperatureAt(at(12), { x: 0.09, y: 0.11 })).toBeCloseTo(303.15, 2);
+    expect(temperatureAt(at(17), { x: 0.115, y: -0.015 })).toBeCloseTo(308.15, 2);
     expect(temperatureAt(at(15), { x: 0.073, y: 0.05 })).toBeGreaterThan(600);
     // ahead of the cut it is still cold
     expect(temperatureAt(at(15), { x: 0.115, y: 0.05 })).toBeLessThan(309);
@@ -22,7 +26,7 @@ describe('the plate at a moment', () => {
   it('is held before the cut and after it', () => {
     expect(at(-3).time).toBe(0);
     expect(at(1e6).time).toBe(20);
-    expect(heatMoment({ ...heat, windows: [] }, 3, 1e-3)).toBeNull();
+    expect(heatMoment({ ...heat, frames: [] }, 3, 1e-3)).toBeNull();
   });
 
   it('is the same on a finer raster as at each of its places', () => {
@@ -36,6 +40,32 @@ describe('the plate at a moment', () => {
       const place = { x: raster.x + column * raster.dx, y: raster.y + row * raster.dy };
       const there = temperatureAt(at(12), place);
       expect(Math.abs((found[row * 40 + column] ?? 0) - there)).toBeLessThan(0.05 + 2e-3 * (there - 293));
+    }
+  });
+});
+
+describe('the plate between two of its frames', () => {
+  it('does not jump where one frame takes over from the other', () => {
+    const { heat: pieces, properties, raster } = heat;
+    // frames as a field makes them: all heat older than 6 s, on cells that carry it well
+    const frame = (time: number) => {
+      const temperatures = new Float32Array(raster.columns * raster.rows).fill(293.15);
+      addPuffs(temperatures, raster, heatPuffs(pieces, 0, time - 6, 1e-4, properties), time, properties);
+      return { time, since: time - 6, temperatures };
+    };
+    const real = { ...heat, pierces: [], frames: [0, 6, 12, 18].map(frame) };
+    for (const place of [
+      { x: 0.03, y: 0.053 },
+      { x: 0.045, y: 0.06 },
+    ]) {
+      const [before, after] = [11.999, 12.001].map((time) => {
+        const moment = heatMoment(real, time, 1e-4);
+        return moment ? temperatureAt(moment, place) : Number.NaN;
+      });
+      expect(Math.abs((before ?? 0) - (after ?? 0))).toBeLessThan(0.5);
+      const exact = 293.15 + pathRise(pieces, place, 15, properties);
+      const moment = heatMoment(real, 15, 1e-4);
+      expect(Math.abs((moment ? temperatureAt(moment, place) : 0) - exact)).toBeLessThan(0.08 * (exact - 293.15));
     }
   });
 });

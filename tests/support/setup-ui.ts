@@ -1,8 +1,8 @@
 import { cleanup } from '@testing-library/react';
 import { afterEach } from 'vitest';
-import { ProposalWorker } from './proposal-worker.ts';
+import { PageWorker } from './page-worker.ts';
 
-Object.assign(globalThis, { Worker: ProposalWorker });
+Object.assign(globalThis, { Worker: PageWorker });
 
 afterEach(() => {
   cleanup();
