@@ -11,6 +11,11 @@ export const tableGrants: Readonly<Record<string, readonly string[]>> = {
   grades: ['SELECT', 'INSERT'],
   nozzles: ['SELECT', 'INSERT'],
   house_rules: ['SELECT', 'INSERT', 'UPDATE (expression, sentence, blocks, ended_at, version, changed_by, changed_at)'],
+  rates: [
+    'SELECT',
+    `UPDATE (currency, machine_hour, oxygen_kilogram, electricity_kilowatt_hour, wall_plug_efficiency, version, changed_by,
+      changed_at)`,
+  ],
   strategies: ['SELECT', 'INSERT', 'UPDATE (version)'],
   strategy_revisions: [
     'SELECT',

@@ -11,6 +11,7 @@ import { cornerPlanRoutes } from './corner-plans/routes.ts';
 import { AppError, errorHandler, notFound } from './errors.ts';
 import { gradeRoutes } from './grades/routes.ts';
 import { houseRuleRoutes } from './house-rules/routes.ts';
+import { rateRoutes } from './rates/routes.ts';
 import { layoutRoutes } from './layouts/routes.ts';
 import { machineRoutes } from './machines/routes.ts';
 import { nozzleRoutes } from './nozzles/routes.ts';
@@ -44,6 +45,7 @@ export function apiRouter(services: Services): Router {
   revisionRoutes(mount);
   reviewRoutes(mount);
   houseRuleRoutes(mount);
+  rateRoutes(mount);
   plateRoutes(mount);
   cardRoutes(mount);
   requestRoutes(mount);

@@ -8,6 +8,7 @@ import { partEndpoints } from './parts.ts';
 import { peopleEndpoints } from './people.ts';
 import { plateEndpoints } from './plates.ts';
 import { healthEndpoints, recordEndpoints } from './record.ts';
+import { rateEndpoints } from './rates.ts';
 import { reportEndpoints } from './reports.ts';
 import { sessionEndpoints } from './sessions.ts';
 import { reviewEndpoints, revisionEndpoints, strategyEndpoints } from './strategies.ts';
@@ -25,6 +26,7 @@ export const endpoints: Readonly<Record<string, Endpoint>> = Object.fromEntries(
     revision: revisionEndpoints,
     review: reviewEndpoints,
     houseRule: houseRuleEndpoints,
+    rate: rateEndpoints,
     plate: plateEndpoints,
     card: cardEndpoints,
     request: requestEndpoints,

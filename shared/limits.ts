@@ -18,6 +18,8 @@ export const limits = {
   ruleExpression: 200,
   ruleSentence: 300,
   rules: 50,
+  /** How a plant writes its currency, characters. */
+  currency: 12,
   /** The plant's own lines before the blocks of a path, and those after them, characters. */
   blockLines: 2000,
   /** A drawing's file, bytes. */

@@ -52,6 +52,9 @@ const byRole = {
   'review.decide': engineersUp,
   /** House rules: what every pierce of the plant must keep. Whoever reads strategies reads them. */
   'rule.write': leads,
+  /** What the plant pays for an hour, oxygen and energy; estimates say it in money. Whoever plans reads it. */
+  'rate.read': programmersUp,
+  'rate.write': leads,
   'people.manage': leads,
   'record.read': leads,
 } as const satisfies Record<string, readonly Role[]>;

@@ -55,6 +55,7 @@ function pageOf({ kind, id }: RecordEntry['subject']): Href | null {
     case 'report':
       return `/reports/${id}`;
     case 'houseRule':
+    case 'rates':
       return '/house-rules';
     default:
       return null;

@@ -27,6 +27,7 @@ const events: Readonly<Record<string, string>> = {
   'houseRule.added': 'added a house rule',
   'houseRule.changed': 'rewrote a house rule',
   'houseRule.ended': 'ended a house rule',
+  'rates.changed': 'wrote what the plant pays',
   'request.made': 'asked for a strategy',
 };
 

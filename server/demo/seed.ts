@@ -4,6 +4,7 @@ import pg from 'pg';
 import { pino } from 'pino';
 import { openDatabase } from '../../db/database.ts';
 import { demoHouseRules } from '../../db/demo/house-rules.ts';
+import { demoRates } from '../../db/demo/rates.ts';
 import { demoGrades, demoNozzles, demoPlates } from '../../db/demo/materials.ts';
 import { demoMachines } from '../../db/demo/machines.ts';
 import { demoLayout } from '../../db/demo/layouts.ts';
@@ -19,6 +20,7 @@ import { gradeEndpoints, machineEndpoints, nozzleEndpoints } from '../../shared/
 import { partEndpoints } from '../../shared/parts.ts';
 import { peopleEndpoints } from '../../shared/people.ts';
 import { plateEndpoints } from '../../shared/plates.ts';
+import { rateEndpoints } from '../../shared/rates.ts';
 import { reportEndpoints } from '../../shared/reports.ts';
 import { sessionEndpoints } from '../../shared/sessions.ts';
 import { revisionEndpoints, strategyEndpoints } from '../../shared/strategies.ts';
@@ -141,6 +143,10 @@ async function fillPlant(plant: Plant, base: string, password: string): Promise<
     );
     if (!known) await lead.call(houseRuleEndpoints.add, { body: rule });
   }
+  const paid = await lead.call(rateEndpoints.get);
+  const rates = demoRates[plant];
+  // Somebody who tries the demo may have written others: those stay.
+  if (rates && paid?.version === 1) await lead.call(rateEndpoints.change, { body: rates, version: paid.version });
   const engineer = await as('engineer@quay.example');
   await addMaterials(engineer, plant);
   for (const { id, revisionId, name, profile, note } of demoMachines[plant]) {

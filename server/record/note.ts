@@ -17,7 +17,8 @@ export type Subject = {
     | 'layout'
     | 'cornerPlan'
     | 'report'
-    | 'houseRule';
+    | 'houseRule'
+    | 'rates';
   readonly id: string;
 };
 

@@ -306,6 +306,7 @@ describe('what was said and done', () => {
     'approvals',
     'strategy_revisions',
     'house_rules',
+    'rates',
     'layouts',
     'layout_versions',
     'placements',

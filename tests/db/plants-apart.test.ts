@@ -41,7 +41,7 @@ test('row-level security is enabled and forced on every table', async () => {
        from pg_class where relnamespace = 'public'::regnamespace and relkind = 'r'`,
     ),
   );
-  expect(rows.length).toBe(27);
+  expect(rows.length).toBe(28);
   for (const { name, enabled, forced } of rows)
     expect({ name, enabled, forced }).toEqual({ name, enabled: true, forced: true });
 });

@@ -9,6 +9,7 @@ import { cornerPlanEndpoints } from '../../shared/corner-plans.ts';
 import type { Endpoint } from '../../shared/endpoint.ts';
 import { layoutEndpoints } from '../../shared/layouts.ts';
 import { houseRuleEndpoints } from '../../shared/house-rules.ts';
+import { rateEndpoints } from '../../shared/rates.ts';
 import { partEndpoints } from '../../shared/parts.ts';
 import { can, roles, type Role } from '../../shared/policy.ts';
 import { recordEndpoints } from '../../shared/record.ts';
@@ -366,6 +367,20 @@ const matrix: Readonly<Record<string, Cell>> = {
   'houseRule.add': () => ({ body: { id: newId(), ...newRule() } }),
   'houseRule.change': async ({ plant }) => ({ ...(await makeRule(plant)), body: newRule() }),
   'houseRule.end': ({ plant }) => makeRule(plant),
+  'rate.get': () => ({}),
+  'rate.change': async ({ plant }) => {
+    const { version } = (await made((await plant.as('lead')).call(rateEndpoints.get))).body;
+    return {
+      version,
+      body: {
+        currency: 'EUR',
+        machineHour: 100 + version,
+        oxygenKilogram: null,
+        electricityKilowattHour: 0.2,
+        wallPlugEfficiency: 0.3,
+      },
+    };
+  },
   'plate.list': () => ({}),
   'plate.get': ({ plant }) => ({ params: { plateId: plant.plateId } }),
   'plate.add': ({ plant }) => ({ body: { id: newId(), ...testPlate(plant.gradeId) } }),
