@@ -34,8 +34,8 @@ export const cellWindow = (): CellWindow => ({
   parted: false,
 });
 
-/** Half the width of a bell's window in its standard deviations: what lies beyond is 1e-5 of it. */
-const reach = 4.5;
+/** Half the width of a bell's window in its standard deviations: what lies beyond is 6e-5 of it. */
+const reach = 4;
 
 /**
  * Lays the window about a place, m, with bells of variances `varianceX` and `varianceY`, m². The window is at most 31 cells wide: false, and nothing else, when the bell
@@ -155,6 +155,7 @@ export function shareOf({ i0, i1, j0, j1, across, upwards }: CellWindow, cells: 
   let share = 0;
   for (let j = j0; j <= j1; j++) {
     const word = cells[j - j0] ?? 0;
+    if (word === 0) continue;
     let row = 0;
     for (let i = 0; i <= i1 - i0; i++) if ((word >>> i) & 1) row += across[i] ?? 0;
     share += row * (upwards[j - j0] ?? 0);

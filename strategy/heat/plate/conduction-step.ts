@@ -17,15 +17,16 @@ export type Conduction = {
 /** A cell at the border of the warm rectangle that is warmer than this lets it grow, K. */
 const warmth = 1e-10;
 /** Cells by which it grows. */
-const growth = 4;
+const growth = 8;
 
 /**
  * Conduction over the grid in steps of `time` s: each step goes over the rows and then over the columns, the next the other way round, by Crank and Nicolson's rule with
  * the mass of the compact scheme (1 + δ²/12), which makes it of fourth order in the cell and second in the step wherever no kerf is near (Mitchell and
- * Fairweather, Numer. Math. 6 (1964) 285). Ways that are cut carry nothing; whatever is cut, the heat of all cells together stays the same.
+ * Fairweather, Numer. Math. 6 (1964) 285). Ways that are cut carry nothing; whatever is cut, the heat of all cells together stays the same,
+ * but for the share `fade` to which every rise falls with each step.
  * Needs α·time/cell² above 1/4 in both directions: throws RangeError below.
  */
-export function conductionOver(grid: PlateGrid, alpha: number, time: number): Conduction {
+export function conductionOver(grid: PlateGrid, alpha: number, time: number, fade: number): Conduction {
   const { nx, ny, cellX, cellY } = grid;
   const rise = new Float64Array(nx * ny);
   const warm: Warm = { i0: nx, i1: -1, j0: ny, j1: -1 };
@@ -33,84 +34,10 @@ export function conductionOver(grid: PlateGrid, alpha: number, time: number): Co
   const columns = direction(rise.length, nx, ny, (alpha * time) / (cellY * cellY));
   for (let j = 0; j < ny; j++) rows.factor(j * nx);
   for (let i = 0; i < nx; i++) columns.factor(i);
-  const late = { rows: new Set<number>(), columns: new Set<number>() };
-  const swept = new Float64Array(nx * ny);
-  const line = new Float64Array(nx);
+  const lateRows = new Uint8Array(ny);
+  const lateColumns = new Uint8Array(nx);
+  const swept = new Float64Array(4 * Math.max(nx, ny));
   let rowsFirst = true;
-
-  const alongRows = (): void => {
-    const { ahead, pivot, gain } = rows;
-    const { i0, i1, j0, j1 } = warm;
-    const keep = 1 + gain;
-    let j = j0;
-    // four rows at a time: each sum waits for the one before it, four don't wait for each other
-    for (; j + 3 <= j1; j += 4) {
-      const [o0, o1, o2, o3] = [j * nx, (j + 1) * nx, (j + 2) * nx, (j + 3) * nx];
-      let [y0, y1, y2, y3] = [0, 0, 0, 0];
-      let [a0, a1, a2, a3] = [0, 0, 0, 0];
-      for (let i = i0; i <= i1; i++) {
-        y0 = (rise[o0 + i] ?? 0) + a0 * y0;
-        y1 = (rise[o1 + i] ?? 0) + a1 * y1;
-        y2 = (rise[o2 + i] ?? 0) + a2 * y2;
-        y3 = (rise[o3 + i] ?? 0) + a3 * y3;
-        a0 = ahead[o0 + i] ?? 0;
-        a1 = ahead[o1 + i] ?? 0;
-        a2 = ahead[o2 + i] ?? 0;
-        a3 = ahead[o3 + i] ?? 0;
-        swept[o0 + i] = y0;
-        swept[o1 + i] = y1;
-        swept[o2 + i] = y2;
-        swept[o3 + i] = y3;
-      }
-      y0 = y1 = y2 = y3 = 0;
-      for (let i = i1; i >= i0; i--) {
-        y0 = (swept[o0 + i] ?? 0) * (pivot[o0 + i] ?? 0) + (ahead[o0 + i] ?? 0) * y0;
-        y1 = (swept[o1 + i] ?? 0) * (pivot[o1 + i] ?? 0) + (ahead[o1 + i] ?? 0) * y1;
-        y2 = (swept[o2 + i] ?? 0) * (pivot[o2 + i] ?? 0) + (ahead[o2 + i] ?? 0) * y2;
-        y3 = (swept[o3 + i] ?? 0) * (pivot[o3 + i] ?? 0) + (ahead[o3 + i] ?? 0) * y3;
-        rise[o0 + i] = keep * y0 - gain * (rise[o0 + i] ?? 0);
-        rise[o1 + i] = keep * y1 - gain * (rise[o1 + i] ?? 0);
-        rise[o2 + i] = keep * y2 - gain * (rise[o2 + i] ?? 0);
-        rise[o3 + i] = keep * y3 - gain * (rise[o3 + i] ?? 0);
-      }
-    }
-    for (; j <= j1; j++) {
-      const o = j * nx;
-      let y = 0;
-      let a = 0;
-      for (let i = i0; i <= i1; i++) {
-        y = (rise[o + i] ?? 0) + a * y;
-        a = ahead[o + i] ?? 0;
-        swept[o + i] = y;
-      }
-      y = 0;
-      for (let i = i1; i >= i0; i--) {
-        y = (swept[o + i] ?? 0) * (pivot[o + i] ?? 0) + (ahead[o + i] ?? 0) * y;
-        rise[o + i] = keep * y - gain * (rise[o + i] ?? 0);
-      }
-    }
-  };
-
-  const alongColumns = (): void => {
-    const { ahead, pivot, gain } = columns;
-    const { i0, i1, j0, j1 } = warm;
-    const keep = 1 + gain;
-    for (let i = i0; i <= i1; i++) swept[j0 * nx + i] = rise[j0 * nx + i] ?? 0;
-    for (let j = j0 + 1; j <= j1; j++) {
-      const o = j * nx;
-      for (let k = o + i0; k <= o + i1; k++) swept[k] = (rise[k] ?? 0) + (ahead[k - nx] ?? 0) * (swept[k - nx] ?? 0);
-    }
-    line.fill(0);
-    for (let j = j1; j >= j0; j--) {
-      const o = j * nx;
-      for (let i = i0; i <= i1; i++) {
-        const k = o + i;
-        const y = (swept[k] ?? 0) * (pivot[k] ?? 0) + (ahead[k] ?? 0) * (line[i] ?? 0);
-        line[i] = y;
-        rise[k] = keep * y - gain * (rise[k] ?? 0);
-      }
-    }
-  };
 
   const grow = (): void => {
     const { i0, i1, j0, j1 } = warm;
@@ -132,21 +59,24 @@ export function conductionOver(grid: PlateGrid, alpha: number, time: number): Co
     rise,
     warm,
     step() {
-      for (const row of late.rows) rows.factor(row * nx);
-      for (const column of late.columns) columns.factor(column);
-      late.rows.clear();
-      late.columns.clear();
+      for (let j = 0; j < ny; j++) if (lateRows[j]) rows.factor(j * nx);
+      for (let i = 0; i < nx; i++) if (lateColumns[i]) columns.factor(i);
+      lateRows.fill(0);
+      lateColumns.fill(0);
       if (warm.i1 < warm.i0) return;
       grow();
+      const { i0, i1, j0, j1 } = warm;
+      const corner = j0 * nx + i0;
+      const alongRows = () => sweep(rise, swept, rows, corner, nx, j1 - j0 + 1, 1, i1 - i0 + 1, 1);
       if (rowsFirst) alongRows();
-      alongColumns();
+      sweep(rise, swept, columns, corner, 1, i1 - i0 + 1, nx, j1 - j0 + 1, fade);
       if (!rowsFirst) alongRows();
       rowsFirst = !rowsFirst;
     },
     cut({ index, upwards }) {
       (upwards ? columns : rows).closed[index] = 1;
-      if (upwards) late.columns.add(index % nx);
-      else late.rows.add(Math.floor(index / nx));
+      if (upwards) lateColumns[index % nx] = 1;
+      else lateRows[Math.floor(index / nx)] = 1;
     },
   };
 }
@@ -174,4 +104,84 @@ function direction(cells: number, stride: number, count: number, r: number) {
     }
   };
   return { ahead, pivot, closed, factor, gain: (r + 1 / 6) / (r - 1 / 6) };
+}
+
+/**
+ * One step along `lines` lines of `count` cells each, `across` and `along` apart in the arrays, the first from `corner` on: down the line L, up it D and Lᵀ. Four lines at
+ * a time: in a line each sum waits for the one before it, four lines don't wait for each other, and of columns four lie in one piece of memory.
+ */
+function sweep(
+  rise: Float64Array,
+  swept: Float64Array,
+  { ahead, pivot, gain }: ReturnType<typeof direction>,
+  corner: number,
+  across: number,
+  lines: number,
+  along: number,
+  count: number,
+  fade: number,
+): void {
+  const keep = (1 + gain) * fade;
+  const less = gain * fade;
+  let line = 0;
+  for (; line + 3 < lines; line += 4) {
+    let o0 = corner + line * across;
+    let o1 = o0 + across;
+    let o2 = o1 + across;
+    let o3 = o2 + across;
+    let [y0, y1, y2, y3] = [0, 0, 0, 0];
+    let [a0, a1, a2, a3] = [0, 0, 0, 0];
+    let at = 0;
+    for (let k = 0; k < count; k++) {
+      y0 = (rise[o0] ?? 0) + a0 * y0;
+      y1 = (rise[o1] ?? 0) + a1 * y1;
+      y2 = (rise[o2] ?? 0) + a2 * y2;
+      y3 = (rise[o3] ?? 0) + a3 * y3;
+      a0 = ahead[o0] ?? 0;
+      a1 = ahead[o1] ?? 0;
+      a2 = ahead[o2] ?? 0;
+      a3 = ahead[o3] ?? 0;
+      swept[at] = y0;
+      swept[at + 1] = y1;
+      swept[at + 2] = y2;
+      swept[at + 3] = y3;
+      at += 4;
+      o0 += along;
+      o1 += along;
+      o2 += along;
+      o3 += along;
+    }
+    y0 = y1 = y2 = y3 = 0;
+    for (let k = 0; k < count; k++) {
+      at -= 4;
+      o0 -= along;
+      o1 -= along;
+      o2 -= along;
+      o3 -= along;
+      y0 = (swept[at] ?? 0) * (pivot[o0] ?? 0) + (ahead[o0] ?? 0) * y0;
+      y1 = (swept[at + 1] ?? 0) * (pivot[o1] ?? 0) + (ahead[o1] ?? 0) * y1;
+      y2 = (swept[at + 2] ?? 0) * (pivot[o2] ?? 0) + (ahead[o2] ?? 0) * y2;
+      y3 = (swept[at + 3] ?? 0) * (pivot[o3] ?? 0) + (ahead[o3] ?? 0) * y3;
+      rise[o0] = keep * y0 - less * (rise[o0] ?? 0);
+      rise[o1] = keep * y1 - less * (rise[o1] ?? 0);
+      rise[o2] = keep * y2 - less * (rise[o2] ?? 0);
+      rise[o3] = keep * y3 - less * (rise[o3] ?? 0);
+    }
+  }
+  for (; line < lines; line++) {
+    let o = corner + line * across;
+    let y = 0;
+    let a = 0;
+    for (let k = 0; k < count; k++, o += along) {
+      y = (rise[o] ?? 0) + a * y;
+      a = ahead[o] ?? 0;
+      swept[k] = y;
+    }
+    y = 0;
+    for (let k = count - 1; k >= 0; k--) {
+      o -= along;
+      y = (swept[k] ?? 0) * (pivot[o] ?? 0) + (ahead[o] ?? 0) * y;
+      rise[o] = keep * y - less * (rise[o] ?? 0);
+    }
+  }
 }

@@ -87,6 +87,8 @@ export const usualLoss = 20;
 const roomTemperature = 293.15;
 /** Variance of the bell as which heat is laid on the grid, in cells²: narrower ones a grid of fourth order carries with errors above a per cent. */
 const laidVariance = 2;
+/** Length of a drop in widths of its bell (standard deviations): of a straight row of them the ripple is 5e-9. */
+const dropLength = 1;
 /** Variance that a step adds, in cells²: twice the Fourier number. */
 const stepVariance = 1;
 /** Variance that a reading adds, in cells², at least: narrower bells can't be summed over cells. */
@@ -103,7 +105,7 @@ const shortest = 1e-4;
 /** Times between two progress calls, in steps. */
 const progressEvery = 4;
 
-type Kept = Warm & { readonly time: number; readonly values: Float64Array; readonly sum: number };
+type Kept = Warm & { readonly time: number; readonly values: Float64Array };
 
 /**
  * The temperature, K, of a plate at every place and moment of its cut: two-dimensional conduction in a plate with insulated edge that loses heat from its faces (every rise
@@ -156,17 +158,15 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
   const step = steps < 8 ? longest : end / steps;
   const readAge = (readVariance * widest) / (2 * alpha);
 
-  const conduction = conductionOver(grid, alpha, step);
+  const conduction = conductionOver(grid, alpha, step, Math.exp(-step / coolingTime));
   const { rise, warm } = conduction;
-  const fade = Math.exp(-step / coolingTime);
   const bridged = Math.exp((-bridgeWidth * 2 * alpha * step) / (cellX * cellY));
   const perHeat = 1 / (capacity * cellX * cellY);
   const window = cellWindow();
   const left = new Int32Array(widestWindow);
   const right = new Int32Array(widestWindow);
-  const length = 0.8 * Math.sqrt(laidVariance * cellSquare);
+  const length = dropLength * Math.sqrt(laidVariance * cellSquare);
   const kept: Kept[] = [];
-  const hottest = { rise: 0, index: 0, time: 0 };
 
   const lay = (drop: HeatDrop, time: number): void => {
     const variance = 2 * alpha * (time - drop.time);
@@ -201,11 +201,18 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
   const addBell = (amount: number, reached: Int32Array | null): void => {
     const { i0, i1, j0, j1, across, upwards } = window;
     for (let j = j0; j <= j1; j++) {
+      const cells = reached ? (reached[j - j0] ?? 0) : (1 << (i1 - i0 + 1)) - 1;
+      if (cells === 0) continue;
       const weight = amount * (upwards[j - j0] ?? 0);
-      const o = j * nx;
-      const cells = reached ? (reached[j - j0] ?? 0) : -1;
-      for (let i = i0; i <= i1; i++)
-        if ((cells >>> (i - i0)) & 1) rise[o + i] = (rise[o + i] ?? 0) + weight * (across[i - i0] ?? 0);
+      const first = 31 - Math.clz32(cells & -cells);
+      const last = 31 - Math.clz32(cells);
+      const o = j * nx + i0;
+      if (cells >>> first === (1 << (last - first + 1)) - 1) {
+        for (let i = first; i <= last; i++) rise[o + i] = (rise[o + i] ?? 0) + weight * (across[i] ?? 0);
+      } else {
+        for (let i = first; i <= last; i++)
+          if ((cells >>> i) & 1) rise[o + i] = (rise[o + i] ?? 0) + weight * (across[i] ?? 0);
+      }
     }
   };
 
@@ -213,20 +220,8 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
     const { i0, i1, j0, j1 } = warm;
     const width = Math.max(0, i1 - i0 + 1);
     const values = new Float64Array(width * Math.max(0, j1 - j0 + 1));
-    let sum = 0;
-    for (let j = j0; j <= j1; j++) {
-      for (let i = i0; i <= i1; i++) {
-        const value = rise[j * nx + i] ?? 0;
-        values[(j - j0) * width + i - i0] = value;
-        sum += value;
-        if (value > hottest.rise) {
-          hottest.rise = value;
-          hottest.index = j * nx + i;
-          hottest.time = time;
-        }
-      }
-    }
-    kept.push({ i0, i1, j0, j1, time, values, sum });
+    for (let j = j0; j <= j1; j++) values.set(rise.subarray(j * nx + i0, j * nx + i1 + 1), (j - j0) * width);
+    kept.push({ i0, i1, j0, j1, time, values });
   };
 
   keep(0);
@@ -238,7 +233,6 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
     for (let cut = cuts[nextCut]; cut && cut.time <= time - step; cut = cuts[++nextCut]) conduction.cut(cut);
     conduction.step();
     for (const { cell, beyond, since } of sides.bridges) if (since <= time) exchange(rise, cell, beyond, bridged);
-    if (fade < 1) fadeBy(rise, warm, nx, fade);
     const until = time - age;
     const after = until - step;
     for (let piece = pieces[firstPiece]; piece && piece.to <= after; piece = pieces[++firstPiece]);
@@ -252,6 +246,8 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
       throw new PlateFieldCancelled('the plate’s field was given up');
   }
   const last = steps * step;
+
+  let hottest: ReturnType<typeof hottestOf> | null = null;
 
   const own = (time: number): number => ambient + (plateTemperature - ambient) * Math.exp(-time / coolingTime);
   const cadence = step * every;
@@ -372,15 +368,16 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
       const k = Math.min(kept.length - 1, Math.floor((time + age) / cadence + 1e-9));
       return k > 0 && time > 0 ? k * cadence - age : -Infinity;
     },
-    hottest: {
-      temperature: own(hottest.time) + hottest.rise,
-      at: cellMiddle(grid, hottest.index % nx, Math.floor(hottest.index / nx)),
-      time: hottest.time,
+    get hottest() {
+      hottest ??= hottestOf(grid, kept);
+      const { rise: most, at, time } = hottest;
+      return { temperature: own(time) + most, at, time };
     },
     mean(time) {
       if (!(time >= 0 && time <= last * (1 + 1e-12))) throw new RangeError(`time ${time} s is outside [0, ${last}] s`);
       const state = stateAt(time);
-      const settled = state ? (state.sum * cellX * cellY * Math.exp(-(time - state.time) / coolingTime)) / area : 0;
+      const sum = state ? state.values.reduce((all, one) => all + one, 0) : 0;
+      const settled = state ? (sum * cellX * cellY * Math.exp(-(time - state.time) / coolingTime)) / area : 0;
       return own(time) + settled + heatBetween(state ? state.time - age : -Infinity, time) / (capacity * area);
     },
     lost,
@@ -487,10 +484,21 @@ function exchange(rise: Float64Array, a: number, b: number, share: number): void
   rise[b] = mean - half;
 }
 
-function fadeBy(rise: Float64Array, { i0, i1, j0, j1 }: Warm, nx: number, share: number): void {
-  for (let j = j0; j <= j1; j++) {
-    for (let k = j * nx + i0; k <= j * nx + i1; k++) rise[k] = (rise[k] ?? 0) * share;
+/** The greatest rise among kept ones, K. */
+function hottestOf(grid: PlateGrid, kept: readonly Kept[]): { rise: number; at: Point; time: number } {
+  let found = { rise: -Infinity, at: cellMiddle(grid, 0, 0), time: 0 };
+  for (const { i0, i1, j0, time, values } of kept) {
+    let most = found.rise;
+    let index = -1;
+    for (let k = 0; k < values.length; k++) {
+      const value = values[k] ?? 0;
+      if (value > most) [most, index] = [value, k];
+    }
+    const width = i1 - i0 + 1;
+    if (index >= 0)
+      found = { rise: most, at: cellMiddle(grid, i0 + (index % width), j0 + Math.floor(index / width)), time };
   }
+  return found.rise === -Infinity ? { ...found, rise: 0 } : found;
 }
 
 /** Rise, K, at a place from a kept moment by a bell wider than a window: kerfs are left out, the plate's edges throw back. */
