@@ -28,6 +28,15 @@ export const cornerOptionSchema = z.object({
   /** Hottest at the measuring place afterwards, K, and how deep the ignition threshold is passed, m. */
   peak: z.number().nullish(),
   burnBack: z.number().nullish(),
+  /** How it would be done, in the few numbers its heat follows from: m, s; not in older plans, nor where it does not fit. */
+  form: z
+    .object({
+      loop: z.object({ shape: z.enum(['tangent', 'flat']), radius: z.number(), extension: z.number() }).optional(),
+      dwell: z.number().optional(),
+      ease: z.object({ length: z.number(), feedShare: z.number(), powerShare: z.number() }).optional(),
+      round: z.number().optional(), // radius of the path
+    })
+    .nullish(),
 });
 
 /** Where a figure lies with the calibration's certainty; in its own unit. */

@@ -40,6 +40,15 @@ export type CornerPlanRequest = {
   readonly overrides?: Readonly<Record<string, CornerTreatment>>;
 };
 
+/** How a treatment would be done, in the few numbers that its heat follows from; lengths in m. */
+export type OptionForm = {
+  readonly loop?: Pick<Loop, 'shape' | 'radius' | 'extension'>;
+  readonly dwell?: number; // s
+  readonly ease?: { readonly length: number; readonly feedShare: number; readonly powerShare: number };
+  /** Radius of the path. */
+  readonly round?: number;
+};
+
 /** What one treatment would give at a corner. */
 export type CornerOption = {
   readonly treatment: CornerTreatment;
@@ -49,6 +58,8 @@ export type CornerOption = {
   readonly why: string;
   /** Where the thing in the way is, m. */
   readonly at?: Point;
+  /** Of one that fits and is more than leaving the corner. */
+  readonly form?: OptionForm;
 };
 
 /** What all corners of a plan share; loops placed so far are obstacles to the next. */

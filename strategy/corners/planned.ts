@@ -12,6 +12,7 @@ import type {
   CornerPlanRequest,
   CornerTreatment,
   EasedPath,
+  OptionForm,
   Prospect,
 } from './case.ts';
 import { slugRise } from './slug-tip.ts';
@@ -113,7 +114,7 @@ export function plannedCorner(
     returnWith,
     excess: returnWith - straightEdge,
     addedTime: chosen.addedTime ?? 0,
-    options: candidates.map(optionOf),
+    options: candidates.map((candidate) => optionOf(candidate, cut.kerfWidth)),
     ...(loop ? { loop } : {}),
     ...(chosen.dwell === undefined ? {} : { dwell: { duration: chosen.dwell } }),
     ...(chosen.ease ? { ease: chosen.ease } : {}),
@@ -123,14 +124,18 @@ export function plannedCorner(
   };
 }
 
-const optionOf = ({ treatment, fits, returnWith, addedTime, why, at }: Candidate): CornerOption => ({
-  treatment,
-  fits,
-  returnWith,
-  addedTime,
-  why,
-  ...(at ? { at } : {}),
-});
+function optionOf(candidate: Candidate, kerfWidth: number): CornerOption {
+  const { treatment, fits, returnWith, addedTime, why, at } = candidate;
+  const form = fits ? formOf(candidate, kerfWidth) : null;
+  return { treatment, fits, returnWith, addedTime, why, ...(at ? { at } : {}), ...(form ? { form } : {}) };
+}
+
+function formOf({ loop, dwell, ease, round }: Candidate, kerfWidth: number): OptionForm | null {
+  if (loop) return { loop: { shape: loop.shape, radius: loop.radius, extension: loop.extension } };
+  if (ease) return { ease: { length: ease.before, feedShare: ease.feedShare, powerShare: ease.powerShare } };
+  if (round) return { round: round.radius + kerfWidth / 2 };
+  return dwell === undefined ? null : { dwell };
+}
 
 function plannedLoop(corner: LoopCorner, loop: Loop, kerfWidth: number): PlannedLoop {
   const { shape, radius, extension, length, reach, segments } = loop;
