@@ -75,7 +75,8 @@ function decideByRule(
   };
 }
 
-const whyNot = (candidates: readonly Candidate[]): string =>
+/** Why nothing does, of all that was tried. */
+export const whyNot = (candidates: readonly Candidate[]): string =>
   candidates
     .filter((c) => c.treatment !== 'leave' && !c.ruledOut)
     .map((c) => c.why)

@@ -13,16 +13,17 @@ import { refused, ruledOut } from './refused.ts';
 import type { CornerRules } from './rules.ts';
 
 /** Leaving the corner as it is. */
-export function leaveOption({ without }: Pick<Case, 'without'>, limit: number): Candidate {
-  const under = without <= limit;
-  return {
-    treatment: 'leave',
-    fits: true,
-    returnWith: without,
-    addedTime: 0,
-    why: `untreated the tip returns at ${celsius(without)}, ${under ? 'under' : 'over'} the limit of ${celsius(limit)}`,
-  };
-}
+export const leaveOption = ({ without }: Pick<Case, 'without'>, limit: number): Candidate => ({
+  treatment: 'leave',
+  fits: true,
+  returnWith: without,
+  addedTime: 0,
+  why: leaveSaid(without, limit),
+});
+
+/** The sentence about leaving a corner that returns at a temperature, K. */
+export const leaveSaid = (without: number, limit: number): string =>
+  `untreated the tip returns at ${celsius(without)}, ${without <= limit ? 'under' : 'over'} the limit of ${celsius(limit)}`;
 
 /** What is asked about the heat of a corner that is left as it is. */
 export const leftAlone = (found: Prospect): Way['asks'] => ({

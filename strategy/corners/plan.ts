@@ -46,7 +46,8 @@ export function cornerPlan(request: CornerPlanRequest): CornerPlan {
   return { limit: context.limit, corners, totals: totalsOf(corners, request) };
 }
 
-function planCorner(prospect: Prospect, context: Context): { planned: PlannedCorner; loop: Loop | undefined } {
+/** A corner on a plate of one temperature, and the loop it gets. */
+export function planCorner(prospect: Prospect, context: Context): { planned: PlannedCorner; loop: Loop | undefined } {
   const { request } = context;
   const { cut, plateTemperature, properties, rules, overrides } = request;
   const { id, contour, corner, onPath } = prospect;

@@ -1,0 +1,131 @@
+import type { Candidate } from '../case.ts';
+import type { PlannedCorner } from '../planned.ts';
+import { plannedCorner } from '../planned.ts';
+import type { CornerPlanTotals } from '../totals.ts';
+import { totalsOf } from '../totals.ts';
+import { planCorner } from '../plan.ts';
+import { bestAlone } from './choose.ts';
+import type { PlateWay } from './own-ways.ts';
+import type { DecidedPlate, PlanProgress } from './passes.ts';
+import { decidedPlate } from './passes.ts';
+import type { WayJudged } from './plate-model.ts';
+import { loopsNear } from './plate-model.ts';
+import type { PlateCorner, PlatePlanRequest, PreparedPlate } from './prepared.ts';
+import { isWay, preparedPlate } from './prepared.ts';
+import type { Limits, RunnerUp } from './tell.ts';
+import { candidateOn, runnerUpOf, told } from './tell.ts';
+
+/** A corner with what the plate's own heat does to it. */
+export type PlateCornerPlan = PlannedCorner & {
+  /** Temperature of the plate at the measuring place when the cut comes back, of all that was cut before the corner's own edge, K; null where no cut comes to it. */
+  readonly background: number | null;
+  /** When cutting along the second edge begins, s from the start of the cut; null likewise. */
+  readonly returnTime: number | null;
+  readonly runnerUp: RunnerUp;
+};
+
+export type PlatePlanTotals = CornerPlanTotals & {
+  /** K; null when there is no corner. */
+  readonly highestBackground: number | null;
+  /** Mean of the plate when the cut ends, K. */
+  readonly meanPlateTemperature: number;
+  /** When the last cut ends, s. */
+  readonly cutTime: number;
+};
+
+export type PlatePlan = {
+  /** The straight edge on the plate as it comes and the excess allowed over it, K. It does not rise with the heat of the cut. */
+  readonly limit: number;
+  /** In the order of the contours asked for. */
+  readonly corners: readonly PlateCornerPlan[];
+  readonly totals: PlatePlanTotals;
+};
+
+/**
+ * The corner plan of a whole cut in its order and in time: as `cornerPlan`, on the plate as everything cut before has warmed it, K, s and m.
+ *
+ * Fewest corners over a limit first, then the least added time; where nothing keeps a corner under its limits it gets what leaves it least over. The limit is that
+ * of the plate as it comes: what the cut itself warms is judged, not forgiven. Deterministic.
+ */
+export function platePlan(request: PlatePlanRequest, progress?: PlanProgress): PlatePlan {
+  const prepared = preparedPlate(request);
+  return planOf(prepared, decidedPlate(prepared, progress));
+}
+
+/** The plan of what was decided, told. */
+export function planOf(prepared: PreparedPlate, decided: DecidedPlate): PlatePlan {
+  const { request, context, legs, duration } = prepared;
+  const { ways, schedule, field } = decided;
+  const limits: Limits = { limit: context.limit, plateTemperature: request.plateTemperature, rules: request.rules };
+  const legOf = new Map(legs.legs.map(({ corner }, k) => [corner, k]));
+  const corners = prepared.corners.map((corner, i): PlateCornerPlan => {
+    const k = legOf.get(i);
+    const chosen = k === undefined ? undefined : ways[k];
+    // a contour that can't be cut warms nothing and is come to never
+    if (k === undefined || !chosen) return uncut(corner, prepared);
+    return cornerOf(corner, k, chosen, prepared, decided, limits);
+  });
+  const cutTime = duration + schedule.late;
+  return {
+    limit: context.limit,
+    corners,
+    totals: {
+      ...totalsOf(corners, request),
+      highestBackground: corners.reduce<number | null>(
+        (most, { background }) => (background === null ? most : Math.max(most ?? background, background)),
+        null,
+      ),
+      meanPlateTemperature: field.mean(cutTime),
+      cutTime,
+    },
+  };
+}
+
+function cornerOf(
+  corner: PlateCorner,
+  k: number,
+  chosen: WayJudged<PlateWay>,
+  { request, context }: PreparedPlate,
+  { model, before, schedule }: DecidedPlate,
+  limits: Limits,
+): PlateCornerPlan {
+  const { found, sharp, near, tried } = corner;
+  const wanted = request.overrides?.[found.id];
+  const state = before[k];
+  const lookedAt = state !== undefined && (sharp || (wanted !== undefined && wanted !== 'leave'));
+  const every = lookedAt ? model.everyWay(k, state) : [chosen];
+  const refusals = lookedAt ? tried(loopsNear(state, near)).filter((one): one is Candidate => !isWay(one)) : [];
+  const own = candidateOn(chosen, limits);
+  const candidates = orderOfOptions.flatMap((treatment) => {
+    if (treatment === chosen.way.treatment) return [own];
+    const fitting = bestOf(every.filter(({ way }) => way.treatment === treatment));
+    if (fitting) return [candidateOn(fitting, limits)];
+    return refusals.filter((one) => one.treatment === treatment);
+  });
+  const leave = every.find(({ way }) => way.treatment === 'leave') ?? chosen;
+  const { why, problem } = told(corner, chosen, candidates, every, wanted, limits);
+  return {
+    ...plannedCorner(found, { candidates, chosen: own, why, problem, without: leave.returnsAt }, context),
+    background: chosen.background,
+    returnTime: (schedule.arrives[k] ?? 0) + chosen.delay,
+    runnerUp: runnerUpOf(chosen, every, candidates, limits),
+  };
+}
+
+const orderOfOptions = ['leave', 'loop', 'dwell', 'ease', 'round'] as const;
+
+/** Of several ways of one treatment, as loops of two shapes, the one that is best alone. */
+const bestOf = (ways: readonly WayJudged<PlateWay>[]): WayJudged<PlateWay> | null =>
+  ways.length > 0 ? bestAlone(ways) : null;
+
+function uncut({ found }: PlateCorner, { context }: PreparedPlate): PlateCornerPlan {
+  const { planned } = planCorner(found, context);
+  const why = 'no cut comes to this corner: its contour is left out of the path';
+  return {
+    ...planned,
+    problem: planned.problem ?? why,
+    background: null,
+    returnTime: null,
+    runnerUp: { treatment: null, costsMore: null, why },
+  };
+}
