@@ -1,10 +1,7 @@
 import { contourContains } from '../../path/contour.ts';
 import type { Box, Point } from '../../path/point.ts';
-import { segmentBox, segmentPart } from '../../path/segment.ts';
-import { addPuffs, heatPuffs } from '../heat-puffs.ts';
-import { instantaneousLine } from '../line-source.ts';
+import { addPuffs } from '../heat-puffs.ts';
 import type { HeatedPiece } from '../path-heat.ts';
-import { pathRise } from '../path-heat.ts';
 import type { PlateProperties } from '../properties.ts';
 import { diffusionLength, diffusivity, midZoneProperties } from '../properties.ts';
 import { plateCoolingTime } from '../surface-loss.ts';
@@ -17,6 +14,7 @@ import { kerfLinks } from './kerf-links.ts';
 import { kerfSides } from './kerf-sides.ts';
 import type { PlateGrid, PlateShape } from './plate-grid.ts';
 import { cellMiddle, plateGrid, steelCells } from './plate-grid.ts';
+import { youngHeat } from './young-heat.ts';
 
 /** What a plate's field is computed from. */
 export type PlateQuestion = {
@@ -100,8 +98,8 @@ const bridgeWidth = 0.5;
 /** Values that are kept for readings, at most. */
 const keptValues = 8e6;
 const usualMoments = 60;
-/** Heat younger than this is left out, s: in the source itself a closed form is not finite. */
-const shortest = 1e-4;
+/** Length below which young heat is not told apart in a frame, m. */
+const frameGrain = 5e-4;
 /** Times between two progress calls, in steps. */
 const progressEvery = 4;
 
@@ -251,36 +249,7 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
 
   const own = (time: number): number => ambient + (plateTemperature - ambient) * Math.exp(-time / coolingTime);
   const cadence = step * every;
-  const boxes = pieces.map(({ segment }) => segmentBox(segment));
-
-  /** Rise, K, of the heat let go between two moments, without the grid; at the plate's straight edges mirrored. */
-  const youngRise = (point: Point, after: number, before: number, time: number): number => {
-    const until = Math.min(before, time - shortest);
-    if (!(until > after)) return 0;
-    const far = Math.sqrt(4 * alpha * (time - after) * 20);
-    const images = imagesOf(point, plate, far);
-    let sum = 0;
-    for (let n = firstAfter(pieces, after); n < pieces.length; n++) {
-      const piece = pieces[n];
-      const box = boxes[n];
-      if (!piece || !box || piece.from >= until) break;
-      let part: HeatedPiece | null = null;
-      for (const image of images) {
-        if (outside(box, image, far)) continue;
-        part ??= between(piece, after, until);
-        const middle = (part.from + Math.min(part.to, time)) / 2;
-        sum += pathRise([part], image, time, properties) * Math.exp(-(time - middle) / coolingTime);
-      }
-    }
-    for (const { at, time: when, heat } of spots) {
-      if (when < after || when >= until || when >= time) continue;
-      for (const { x, y } of images)
-        sum +=
-          instantaneousLine(heat / thickness, Math.hypot(at.x - x, at.y - y), time - when, properties) *
-          Math.exp(-(time - when) / coolingTime);
-    }
-    return sum;
-  };
+  const young = youngHeat({ plate, thickness, properties, coolingTime, pieces, pierces: spots });
 
   /** Rise, K, at a place `later` s after a kept moment, of what lay on the grid then. */
   const readRise = (state: Kept, point: Point, later: number): number => {
@@ -320,8 +289,8 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
     if (!(time >= 0 && Number.isFinite(time))) throw new RangeError(`time ${time} s is outside [0, ∞)`);
     if (!(since <= time)) throw new RangeError(`since ${since} s is after the time ${time} s`);
     const state = stateAt(Math.min(time - readAge, since + age));
-    if (!state) return own(time) + youngRise(point, -Infinity, since, time);
-    return own(time) + readRise(state, point, time - state.time) + youngRise(point, state.time - age, since, time);
+    if (!state) return own(time) + young.rise(point, -Infinity, since, time);
+    return own(time) + readRise(state, point, time - state.time) + young.rise(point, state.time - age, since, time);
   };
 
   const count = Math.max(1, Math.min(question.moments ?? usualMoments, kept.length));
@@ -356,7 +325,7 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
         columns: nx,
         rows: ny,
       };
-      addPuffs(temperatures, raster, heatPuffs(pieces, since, time, cellX / 4, properties), time, properties);
+      addPuffs(temperatures, raster, young.puffs(since, time, frameGrain), time, properties);
       return temperatures;
     },
     at: (point, time) => {
@@ -378,23 +347,10 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
       const state = stateAt(time);
       const sum = state ? state.values.reduce((all, one) => all + one, 0) : 0;
       const settled = state ? (sum * cellX * cellY * Math.exp(-(time - state.time) / coolingTime)) / area : 0;
-      return own(time) + settled + heatBetween(state ? state.time - age : -Infinity, time) / (capacity * area);
+      return own(time) + settled + young.heat(state ? state.time - age : -Infinity, time) / (capacity * area);
     },
     lost,
   };
-
-  /** Heat let go between two moments as far as it is still there at the second, J per metre of thickness. */
-  function heatBetween(after: number, time: number): number {
-    let sum = 0;
-    dropsBetween(pieces, firstAfter(pieces, after), after, time, Infinity, coolingTime / 100, (drop) => {
-      sum += drop.heat * Math.exp(-(time - drop.time) / coolingTime);
-    });
-    for (const spot of spots) {
-      if (spot.time >= after && spot.time < time)
-        sum += (spot.heat / thickness) * Math.exp(-(time - spot.time) / coolingTime);
-    }
-    return sum;
-  }
 }
 
 function checked({
@@ -445,36 +401,6 @@ function checked({
 
 const holdsPlace = ({ minX, minY, maxX, maxY }: Box, { x, y }: Point): boolean =>
   x >= minX && x <= maxX && y >= minY && y <= maxY;
-
-const outside = ({ minX, minY, maxX, maxY }: Box, { x, y }: Point, far: number): boolean =>
-  x < minX - far || x > maxX + far || y < minY - far || y > maxY + far;
-
-/** A place and, where heat that comes from as far as `far` may be thrown back by the plate's straight edges, its mirror images. */
-function imagesOf({ x, y }: Point, { minX, minY, maxX, maxY }: Box, far: number): Point[] {
-  const across = [x, ...(x - minX < far ? [2 * minX - x] : []), ...(maxX - x < far ? [2 * maxX - x] : [])];
-  const upwards = [y, ...(y - minY < far ? [2 * minY - y] : []), ...(maxY - y < far ? [2 * maxY - y] : [])];
-  return across.flatMap((u) => upwards.map((v) => ({ x: u, y: v })));
-}
-
-/** Number of the first piece that ends after a moment, s. */
-function firstAfter(pieces: readonly HeatedPiece[], time: number): number {
-  let [low, high] = [0, pieces.length];
-  while (low < high) {
-    const middle = (low + high) >>> 1;
-    if ((pieces[middle]?.to ?? Infinity) > time) high = middle;
-    else low = middle + 1;
-  }
-  return low;
-}
-
-/** A piece as far as the source is on it between two moments, s. */
-function between(piece: HeatedPiece, after: number, until: number): HeatedPiece {
-  const { segment, from, to } = piece;
-  if (from >= after && to <= until) return piece;
-  const [start, end] = [Math.max(from, after), Math.min(to, until)];
-  const part = segmentPart(segment, (start - from) / (to - from), (end - from) / (to - from));
-  return { ...piece, segment: part, from: start, to: end };
-}
 
 /** Brings two cells nearer to each other, to `share` of what parts them; their heat together stays. */
 function exchange(rise: Float64Array, a: number, b: number, share: number): void {
