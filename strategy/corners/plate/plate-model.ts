@@ -117,7 +117,7 @@ const remembered = 40;
 /** The plate's edge throws heat back over so many times its spread √(4αt). */
 const mirrored = 2;
 /** Waits longer than needed that are tried because they may cool what follows, s. */
-const longerWaits = [0.5, 1, 2, 4] as const;
+const longerWaits = [0.25, 0.5, 1, 1.5, 2, 3, 4] as const;
 
 /** The choice at the corners of a plate's cut, leg by leg: each finds what those before it left in the plate, and when. */
 export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): PlateModel<Way> {
@@ -196,11 +196,18 @@ export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): Pla
       return start * (1 - x) * (1 - 2 * x) + 4 * middle * x * (1 - x) + end * x * (2 * x - 1);
     };
     const rise = way.roughRise ?? way.rise;
-    const overAfter = (wait: number) => overBy(way, wait, warmth(wait) + rise(wait));
-    let wait = leastDwell(overAfter, 0, longest);
+    const overRough = (wait: number) =>
+      Math.max(
+        warmth(wait) + rise(wait) - limit,
+        way.toPeak ? warmth(wait) + rise(wait) + way.toPeak(wait) - ignition : -Infinity,
+      );
+    let wait = leastDwell(overRough, 0, longest);
     let found = judged(k, state, way, wait);
-    for (let tries = 0; tries < 4 && found.over > 0 && wait < longest; tries++) {
-      wait = Math.min(longest, wait + 2e-3 * 2 ** tries);
+    // what is kept of the cooling is off by some tenths of a kelvin: wait on by what they take
+    for (let tries = 0; tries < 8 && found.over > 0 && wait < longest; tries++) {
+      const slope = (overRough(wait) - overRough(wait + slopeStep)) / slopeStep;
+      const more = slope > 0 ? (1.1 * found.over) / slope : 0;
+      wait = Math.min(longest, wait + Math.max(leastMore * 2 ** tries, Math.min(more, longest / 8)));
       found = judged(k, state, way, wait);
     }
     return found;
@@ -257,6 +264,10 @@ export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): Pla
     reach: (k) => k + input.ahead,
   };
 }
+
+/** Step over which the cooling's slope is taken, and the least that a wait is made longer by, s. */
+const slopeStep = 0.01;
+const leastMore = 1e-3;
 
 /** What rounding leaves over a limit, K. */
 const rounding = 1e-9;
