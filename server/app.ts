@@ -7,6 +7,7 @@ import { pinoHttp } from 'pino-http';
 import { randomUUID } from 'node:crypto';
 import { refuseOtherSites } from './auth/same-site.ts';
 import { cardRoutes } from './cards/routes.ts';
+import { estimateRoutes } from './corner-plans/estimate-routes.ts';
 import { cornerPlanRoutes } from './corner-plans/routes.ts';
 import { AppError, errorHandler, notFound } from './errors.ts';
 import { gradeRoutes } from './grades/routes.ts';
@@ -52,6 +53,7 @@ export function apiRouter(services: Services): Router {
   partRoutes(mount);
   layoutRoutes(mount);
   cornerPlanRoutes(mount);
+  estimateRoutes(mount);
   takeAwayRoutes(mount);
   reportRoutes(mount);
   recordRoutes(mount);

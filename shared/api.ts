@@ -1,6 +1,7 @@
 import { cardEndpoints, requestEndpoints } from './cards.ts';
 import { cornerPlanEndpoints } from './corner-plans.ts';
 import type { Endpoint } from './endpoint.ts';
+import { estimateEndpoints } from './estimates.ts';
 import { houseRuleEndpoints } from './house-rules.ts';
 import { layoutEndpoints } from './layouts.ts';
 import { gradeEndpoints, machineEndpoints, nozzleEndpoints } from './machines.ts';
@@ -33,6 +34,7 @@ export const endpoints: Readonly<Record<string, Endpoint>> = Object.fromEntries(
     part: partEndpoints,
     layout: layoutEndpoints,
     cornerPlan: cornerPlanEndpoints,
+    estimate: estimateEndpoints,
     cutPath: cutPathEndpoints,
     blockFrame: blockFrameEndpoints,
     report: reportEndpoints,

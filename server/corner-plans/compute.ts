@@ -4,6 +4,7 @@ import type { StrategyContent } from '../../shared/strategies.ts';
 import {
   cornerInsert,
   type CornerPlan as Computed,
+  type CornerPlanRequest,
   type PlannedCorner as ComputedCorner,
 } from '../../strategy/corners/index.ts';
 import type { MachineProfile } from '../../strategy/machine.ts';
@@ -27,7 +28,24 @@ export async function computePlan(
   { planned, content, profile, nozzleDiameter }: PlanSource,
   choices: Choices,
 ): Promise<Pick<CornerPlan, 'limit' | 'corners' | 'totals'>> {
-  const plan = await drawings.plan({
+  const plan = await drawings.plan(planRequestOf({ planned, content, profile }, choices));
+  const chosen = new Set(Object.keys(choices.overrides));
+  return {
+    limit: plan.limit,
+    corners: plan.corners.map((corner) => presentCorner(corner, chosen)),
+    totals: presentTotals(
+      plan,
+      oxygenMassFlow(nozzleDiameter, content.cut.oxygenPressure, PIERCE_DEFAULTS.dischargeCoefficient),
+    ),
+  };
+}
+
+/** What the planner is asked. */
+export function planRequestOf(
+  { planned, content, profile }: Pick<PlanSource, 'planned' | 'content' | 'profile'>,
+  choices: Pick<Choices, 'thickness' | 'plateTemperature' | 'overrides'>,
+): CornerPlanRequest {
+  return {
     contours: planned.contours.map(({ id, role, segments, said }) => ({
       id,
       role,
@@ -41,19 +59,11 @@ export async function computePlan(
     thickness: choices.thickness,
     plateTemperature: choices.plateTemperature,
     overrides: choices.overrides,
-  });
-  const chosen = new Set(Object.keys(choices.overrides));
-  return {
-    limit: plan.limit,
-    corners: plan.corners.map((corner) => presentCorner(corner, chosen)),
-    totals: presentTotals(
-      plan,
-      oxygenMassFlow(nozzleDiameter, content.cut.oxygenPressure, PIERCE_DEFAULTS.dischargeCoefficient),
-    ),
   };
 }
 
-function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): PlannedCorner {
+/** A computed corner as it is kept and sent; chosen are the ids of those that a person decided. */
+export function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): PlannedCorner {
   const { loop, ease, round } = corner;
   const insert = cornerInsert(corner);
   return {
@@ -93,13 +103,14 @@ function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): Pla
           slug: [...(loop.slug?.contour.segments ?? [])],
         }
       : null,
-    options: corner.options.map(({ treatment, fits, returnWith, addedTime, why, at }) => ({
+    options: corner.options.map(({ treatment, fits, returnWith, addedTime, why, at, form }) => ({
       treatment,
       fits,
       returnTemperature: returnWith,
       addedTime,
       why,
       at: at ?? null,
+      form: form ?? null,
     })),
     trouble: corner.problem ?? null,
   };

@@ -1,27 +1,33 @@
 import { URL } from 'node:url';
+import type { PlanComparison } from '../../shared/estimates.ts';
 import type { DrawingAnswers, DrawingReadingWire } from '../../shared/parts.ts';
 import type { CornerPlan, CornerPlanRequest } from '../../strategy/corners/index.ts';
 import type { LayoutAsked, LayoutJudgement } from '../../strategy/path/plate/index.ts';
 import type { ProblemCode } from '../../shared/errors.ts';
+import type { EstimateAsked } from '../corner-plans/estimate.ts';
 import { AppError } from '../errors.ts';
 import { createPool, WorkerRefusal } from '../workers/pool.ts';
 
 export type DrawingQuestion =
   | { readonly kind: 'read'; readonly bytes: Uint8Array; readonly answers: DrawingAnswers }
   | { readonly kind: 'layout'; readonly asked: LayoutAsked }
-  | { readonly kind: 'plan'; readonly request: CornerPlanRequest };
+  | { readonly kind: 'plan'; readonly request: CornerPlanRequest }
+  | { readonly kind: 'estimate'; readonly asked: EstimateAsked };
 export type DrawingAnswer =
   | { readonly kind: 'reading'; readonly reading: DrawingReadingWire }
   | { readonly kind: 'none'; readonly why: string }
   | { readonly kind: 'layout'; readonly judgement: LayoutJudgement }
-  | { readonly kind: 'plan'; readonly plan: CornerPlan };
+  | { readonly kind: 'plan'; readonly plan: CornerPlan }
+  | { readonly kind: 'estimate'; readonly comparison: PlanComparison };
 
-/** Reads drawings, judges layouts and plans corners away from the thread that answers requests, within a time and a memory. */
+/** Reads drawings, judges layouts, plans corners and estimates plans away from the thread that answers requests, within a time and a memory. */
 export type DrawingReader = {
   /** 422 with a sentence when the file is no drawing that can be read. */
   read(bytes: Uint8Array, answers: DrawingAnswers): Promise<DrawingReadingWire>;
   layout(asked: LayoutAsked): Promise<LayoutJudgement>;
   plan(request: CornerPlanRequest): Promise<CornerPlan>;
+  /** What a plan costs, beside other ways to cut the same. */
+  estimate(asked: EstimateAsked): Promise<PlanComparison>;
   close(): Promise<void>;
 };
 
@@ -31,6 +37,8 @@ const readSeconds = 2;
 const layoutSeconds = 5;
 /** Time for one plan, s. */
 const planSeconds = 20;
+/** Time for one plan's estimate beside other ways to cut it, s: four plans with their paths and the heat of their plates. */
+const estimateSeconds = 40;
 
 export function createDrawingReader(): DrawingReader {
   const module = new URL('./drawing.worker.ts', import.meta.url);
@@ -39,6 +47,7 @@ export function createDrawingReader(): DrawingReader {
   const reads = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: readSeconds * 1000 });
   const layouts = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: layoutSeconds * 1000 });
   const plans = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: planSeconds * 1000 });
+  const estimates = createPool<DrawingQuestion, DrawingAnswer>({ ...common, deadline: estimateSeconds * 1000 });
   return {
     read: async (bytes, answers) => {
       const answer = await reads.ask({ kind: 'read', bytes, answers }).catch((error: unknown) => {
@@ -74,8 +83,19 @@ export function createDrawingReader(): DrawingReader {
       if (answer.kind !== 'plan') throw new Error('the drawing worker answered another question');
       return answer.plan;
     },
+    estimate: async (asked) => {
+      const answer = await estimates.ask({ kind: 'estimate', asked }).catch((error: unknown) => {
+        throw asRefusal(
+          error,
+          'unavailable',
+          `The plan could not be estimated within ${estimateSeconds} s: it has too much in it.`,
+        );
+      });
+      if (answer.kind !== 'estimate') throw new Error('the drawing worker answered another question');
+      return answer.comparison;
+    },
     close: async () => {
-      await Promise.all([reads.close(), layouts.close(), plans.close()]);
+      await Promise.all([reads.close(), layouts.close(), plans.close(), estimates.close()]);
     },
   };
 }

@@ -9,8 +9,15 @@ const sharpLimit = 10;
 
 const roleNames = { outer: 'outline', hole: 'hole', island: 'island' } as const;
 
+/** What a cut path follows from. */
+export type CutSource = {
+  readonly plan: Pick<TakenPlan['plan'], 'corners'>;
+  readonly planned: TakenPlan['planned'];
+  readonly revision: Pick<TakenPlan['revision'], 'content' | 'prediction'>;
+};
+
 /** What a stored plan asks of the cut path: its contours in their order, what its corners got, its strategy's kerf and pierce, its plate. */
-export function cutPathRequestOf({ plan, planned, revision }: TakenPlan): CutPathRequest {
+export function cutPathRequestOf({ plan, planned, revision }: CutSource): CutPathRequest {
   const { cut, cornerRules } = revision.content;
   return {
     contours: planned.contours.map(({ id, role, parent, segments, said }) => ({
@@ -81,7 +88,7 @@ function cornerIndex(id: string, contourId: string): number {
 }
 
 /** As the strategy's own check says; by the crater alone where the plate is too hot for any, or its heat was not kept. */
-function leadInLengthOf({ prediction }: TakenPlan['revision']): number {
+function leadInLengthOf({ prediction }: CutSource['revision']): number {
   const { craterRadius, heatPerThickness, routineTime, hot } = prediction;
   const needed = leadInNeeded({
     craterRadius,

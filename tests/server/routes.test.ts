@@ -420,6 +420,7 @@ const matrix: Readonly<Record<string, Cell>> = {
     const { version } = await made(programmer.call(cornerPlanEndpoints.get, { params: { planId } }));
     return { params: { planId }, body: { revisionId: approvedId, ...choices }, version };
   },
+  'estimate.plan': ({ planId }) => ({ params: { planId } }),
   'cutPath.show': ({ planId }) => ({ params: { planId } }),
   'cutPath.take': ({ planId }) => ({ params: { planId }, query: { as: 'dxf', unit: 'inch' } }),
   'blockFrame.get': ({ plant }) => ({ params: { machineId: plant.machineId } }),
