@@ -6,7 +6,8 @@ import type { Point } from '../path/point.ts';
 import { pointSubtract } from '../path/point.ts';
 import type { Segment } from '../path/segment.ts';
 import { lineBetween, segmentLength, segmentShift } from '../path/segment.ts';
-import type { CornerPlanRequest, PlanContour, Prospect } from './case.ts';
+import type { PlanContour, Prospect } from './case.ts';
+import type { CutConditions } from './rules.ts';
 
 /** Path before a corner whose heat is counted, m. */
 const countedPath = 0.3;
@@ -15,7 +16,10 @@ const countedPath = 0.3;
 const spike = 0.04;
 
 /** The corners of a contour in the order of travel. */
-export function prospectsOf(contour: PlanContour, { cut }: Pick<CornerPlanRequest, 'cut'>): Prospect[] {
+export function prospectsOf(
+  contour: PlanContour,
+  { cut }: { readonly cut: Pick<CutConditions, 'kerfWidth'> },
+): Prospect[] {
   const corners = contourCorners(contour.contour);
   if (corners.length === 0) return [];
   const starts: number[] = [];

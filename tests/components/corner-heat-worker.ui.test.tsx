@@ -34,7 +34,7 @@ describe('the heat of a plan’s cut', () => {
     };
     const end = last.heat.frames.at(-1)?.time ?? 0;
     expect(kelvin(0, 0.05, 0.05)).toBeCloseTo(293.15, 1);
-    expect(kelvin(end, 0.02, 0.05)).toBeGreaterThan(300);
+    expect(kelvin(end, 0.012, 0.05)).toBeGreaterThan(300);
     // 4 mm inside the last edge and the first
     expect(kelvin(end, 0.004, 0.03)).toBeGreaterThan(kelvin(end, 0.03, 0.004) + 20);
   });
