@@ -107,7 +107,8 @@ export const cornerRulesSchema = z.strictObject({
     .strictObject({
       judged: z.boolean(),
       limit: quantity(0.05 * mm, 20 * mm, '0.05 to 20 mm'),
-      ignition: quantity(900, 1800, '627 to 1527 °C'),
+      // between thin foil and bulk steel in oxygen
+      ignition: quantity(1233, 1644, '960 to 1370 °C'),
     })
     .optional(),
 }) satisfies z.ZodType<CornerRules>;

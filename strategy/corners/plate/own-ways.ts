@@ -11,12 +11,15 @@ import { pathLength } from '../../path/segment.ts';
 import type { CornerPlanRequest, CornerTreatment, Prospect, Way } from '../case.ts';
 import { leftAlone } from '../options.ts';
 import type { OwnWay } from './plate-model.ts';
+import type { TipKind } from './tip-peaks.ts';
 
 /** A treatment of a corner with its own heat, and what it puts on the plate. */
 export type PlateWay = OwnWay & {
   readonly treatment: CornerTreatment;
   /** Id of its corner. */
   readonly of: string;
+  /** What its peak follows from, after a wait, s; null for a notch, which nothing threatens. */
+  readonly tip: ((wait: number) => TipKind) | null;
   /** What fits; null for leaving and for waiting, of which nothing need fit. */
   readonly fits: Way | null;
 };
@@ -27,7 +30,7 @@ export type Approach = { readonly found: Prospect; readonly before: readonly Seg
 export type OwnHeat = Pick<CornerPlanRequest, 'cut' | 'rules'> & {
   readonly properties: PlateProperties;
   /** What the peak at the depth at which burn-back is judged is over the return temperature, K; null where it isn't judged. */
-  readonly toPeak: ((question: ReturnQuestion) => number) | null;
+  readonly toPeak: ((tip: TipKind) => number) | null;
 };
 
 /** Heat that a question is asked on top of, K: rises add up, so any does. */
@@ -81,15 +84,19 @@ function ownWay(
   const after = (wait: number): ReturnQuestion =>
     asks.treatment.kind === 'dwell' ? { ...question, treatment: { kind: 'dwell', duration: wait } } : question;
   const heat: readonly HeatedPiece[] = [];
+  const { angle, convex } = found.corner;
+  const kind = treatment === 'leave' || treatment === 'dwell' ? 'plain' : treatment;
+  const tip = convex ? (wait: number): TipKind => ({ angle, wait, treatment: kind }) : null;
   return {
     treatment,
     of: found.id,
+    tip,
     fits,
     addedTime,
     place: measuringPlace(found.onPath, cut.kerfWidth, asks.treatment.kind === 'loop' ? undefined : asks.round),
     delay: asks.treatment.kind === 'loop' ? returnDelay(question) : 0,
     rise: lastKept((wait) => returnOf(after(wait)) - anyPlate),
-    toPeak: toPeak && lastKept((wait) => toPeak(after(wait))),
+    toPeak: toPeak && tip && lastKept((wait) => toPeak(tip(wait))),
     isLoop: false,
     heat,
     puffs: nothing,

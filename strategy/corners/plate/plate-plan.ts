@@ -1,4 +1,5 @@
-import type { Candidate } from '../case.ts';
+import { ignitionThreshold } from '../../heat/burn-back.ts';
+import type { Candidate, CornerOption } from '../case.ts';
 import type { PlannedCorner } from '../planned.ts';
 import { plannedCorner } from '../planned.ts';
 import type { CornerPlanTotals } from '../totals.ts';
@@ -21,12 +22,21 @@ export type PlateCornerPlan = PlannedCorner & {
   readonly background: number | null;
   /** When cutting along the second edge begins, s from the start of the cut; null likewise. */
   readonly returnTime: number | null;
+  /** Hottest at the measuring place afterwards, K, and how deep inside the finished tip the ignition threshold is passed, m; null for a notch. */
+  readonly peak: number | null;
+  readonly burnBack: number | null;
   readonly runnerUp: RunnerUp;
+  readonly options: readonly PlateOption[];
 };
+
+export type PlateOption = CornerOption & { readonly peak: number | null; readonly burnBack: number | null };
 
 export type PlatePlanTotals = CornerPlanTotals & {
   /** K; null when there is no corner. */
   readonly highestBackground: number | null;
+  /** K and m; null when there is no tip. */
+  readonly hottestPeak: number | null;
+  readonly deepestBurnBack: number | null;
   /** Mean of the plate when the cut ends, K. */
   readonly meanPlateTemperature: number;
   /** When the last cut ends, s. */
@@ -71,24 +81,38 @@ export function planOf(prepared: PreparedPlate, decided: DecidedPlate): PlatePla
     corners,
     totals: {
       ...totalsOf(corners, request),
-      highestBackground: corners.reduce<number | null>(
-        (most, { background }) => (background === null ? most : Math.max(most ?? background, background)),
-        null,
-      ),
+      highestBackground: greatest(corners, ({ background }) => background),
+      hottestPeak: greatest(corners, ({ peak }) => peak),
+      deepestBurnBack: greatest(corners, ({ burnBack }) => burnBack),
       meanPlateTemperature: field.mean(cutTime),
       cutTime,
     },
   };
 }
 
+const greatest = (corners: readonly PlateCornerPlan[], of: (corner: PlateCornerPlan) => number | null): number | null =>
+  corners.reduce<number | null>((most, corner) => {
+    const value = of(corner);
+    return value === null ? most : Math.max(most ?? value, value);
+  }, null);
+
+/** What comes after a corner is come back to. */
+function afterwards({ peaks, request }: PreparedPlate, { way, wait, returnsAt }: WayJudged<PlateWay>) {
+  const tip = way.tip?.(wait);
+  if (!tip) return { peak: null, burnBack: null };
+  const ignition = request.rules.burnBack?.ignition ?? ignitionThreshold;
+  return { peak: returnsAt + peaks.over(tip), burnBack: peaks.burnBack(tip, returnsAt, ignition) };
+}
+
 function cornerOf(
   corner: PlateCorner,
   k: number,
   chosen: WayJudged<PlateWay>,
-  { request, context }: PreparedPlate,
+  prepared: PreparedPlate,
   { model, before, schedule }: DecidedPlate,
   limits: Limits,
 ): PlateCornerPlan {
+  const { request, context } = prepared;
   const { found, sharp, near, tried } = corner;
   const wanted = request.overrides?.[found.id];
   const state = before[k];
@@ -96,16 +120,23 @@ function cornerOf(
   const every = lookedAt ? model.everyWay(k, state) : [chosen];
   const refusals = lookedAt ? tried(loopsNear(state, near)).filter((one): one is Candidate => !isWay(one)) : [];
   const own = candidateOn(chosen, limits);
+  const after: ReturnType<typeof afterwards>[] = [];
   const candidates = orderOfOptions.flatMap((treatment) => {
-    if (treatment === chosen.way.treatment) return [own];
-    const fitting = bestOf(every.filter(({ way }) => way.treatment === treatment));
-    if (fitting) return [candidateOn(fitting, limits)];
-    return refusals.filter((one) => one.treatment === treatment);
+    const fitting =
+      treatment === chosen.way.treatment ? chosen : bestOf(every.filter(({ way }) => way.treatment === treatment));
+    const some = fitting
+      ? [fitting === chosen ? own : candidateOn(fitting, limits)]
+      : refusals.filter((one) => one.treatment === treatment);
+    for (const _ of some) after.push(fitting ? afterwards(prepared, fitting) : { peak: null, burnBack: null });
+    return some;
   });
   const leave = every.find(({ way }) => way.treatment === 'leave') ?? chosen;
   const { why, problem } = told(corner, chosen, candidates, every, wanted, limits);
+  const planned = plannedCorner(found, { candidates, chosen: own, why, problem, without: leave.returnsAt }, context);
   return {
-    ...plannedCorner(found, { candidates, chosen: own, why, problem, without: leave.returnsAt }, context),
+    ...planned,
+    options: planned.options.map((option, i) => ({ ...option, peak: null, burnBack: null, ...after[i] })),
+    ...afterwards(prepared, chosen),
     background: chosen.background,
     returnTime: (schedule.arrives[k] ?? 0) + chosen.delay,
     runnerUp: runnerUpOf(chosen, every, candidates, limits),
@@ -124,8 +155,11 @@ function uncut({ found }: PlateCorner, { context }: PreparedPlate): PlateCornerP
   return {
     ...planned,
     problem: planned.problem ?? why,
+    options: planned.options.map((option) => ({ ...option, peak: null, burnBack: null })),
     background: null,
     returnTime: null,
+    peak: null,
+    burnBack: null,
     runnerUp: { treatment: null, costsMore: null, why },
   };
 }

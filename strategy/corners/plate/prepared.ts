@@ -23,6 +23,8 @@ import { cutLegs } from './legs.ts';
 import type { Approach, OwnHeat, PlateWay } from './own-ways.ts';
 import { fittedWay, leaveWay, waitWay } from './own-ways.ts';
 import type { OwnCorner, PlacedWay } from './plate-model.ts';
+import type { TipPeaks } from './tip-peaks.ts';
+import { tipPeaks } from './tip-peaks.ts';
 
 export type PlatePlanRequest = CornerPlanRequest & {
   /** The untreated cut: what corners get is planned into it. */
@@ -52,6 +54,7 @@ export type PreparedPlate = {
   readonly box: Box;
   readonly legs: CutLegs;
   readonly corners: readonly PlateCorner[];
+  readonly peaks: TipPeaks;
   /** Duration of the untreated cut, s. */
   readonly duration: number;
 };
@@ -77,9 +80,16 @@ export function preparedPlate(request: PlatePlanRequest): PreparedPlate {
   const near = reachingEachOther(prospects.map((found) => reachOf(found, request)));
   const own: (readonly Segment[] | undefined)[] = [];
   for (const leg of legs.legs) own[leg.corner] = leg.own;
-  const ownHeat: OwnHeat = { cut, rules, properties, toPeak: null };
+  const peaks = tipPeaks({ cut, rules, properties });
+  const { burnBack } = rules;
+  const ownHeat: OwnHeat = {
+    cut,
+    rules,
+    properties,
+    toPeak: burnBack?.judged ? (tip) => peaks.over(tip, burnBack.limit) : null,
+  };
   const corners = prospects.map((found, i) => plateCorner(found, own[i], near[i] ?? none, context, ownHeat));
-  return { request, context, properties, box: boxOf(request), legs, corners, duration: clock.duration };
+  return { request, context, properties, box: boxOf(request), legs, corners, peaks, duration: clock.duration };
 }
 
 const none: ReadonlySet<number> = new Set();
