@@ -1,4 +1,4 @@
-// `npm run deep`: the long tier, the same tests of strategy/ with as many cases as an evening holds.
+// `npm run deep`: the long tier, the same tests of strategy/ and of the reference with as many cases as an evening holds.
 import { ensurePackages } from './packages.mjs';
 import { runCommand } from './say.mjs';
 
@@ -8,7 +8,7 @@ await runCommand(async () => {
   const chosen = process.argv.slice(2);
   process.exitCode = await runTool(
     'vitest',
-    ['run', '--project', 'node', '--testTimeout=3600000', ...(chosen.length > 0 ? chosen : ['tests/strategy'])],
+    ['run', '--project', 'node', '--testTimeout=3600000', ...(chosen.length > 0 ? chosen : ['tests/strategy', 'tests/reference'])],
     { CINDERPATH_DEEP: '1' },
   );
 });
