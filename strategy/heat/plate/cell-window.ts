@@ -1,4 +1,4 @@
-import type { KerfLinks } from './kerf-links.ts';
+import type { CellRoom, KerfLinks } from './kerf-links.ts';
 import type { PlateGrid } from './plate-grid.ts';
 
 /** Cells across a window at most: a row of it is a word of bits. */
@@ -150,14 +150,20 @@ function along(cells: number, toRight: number, column: number): number {
   return ahead | behind;
 }
 
-/** Share of the window's bell that lies in cells, 0..1. */
-export function shareOf({ i0, i1, j0, j1, across, upwards }: CellWindow, cells: Int32Array): number {
+/** Share of the window's bell that lies in cells, each counted by its room, 0..1 and a little. */
+export function shareOf(
+  { i0, i1, j0, j1, across, upwards }: CellWindow,
+  cells: Int32Array,
+  room: CellRoom,
+  nx: number,
+): number {
   let share = 0;
   for (let j = j0; j <= j1; j++) {
     const word = cells[j - j0] ?? 0;
     if (word === 0) continue;
+    const o = j * nx + i0;
     let row = 0;
-    for (let i = 0; i <= i1 - i0; i++) if ((word >>> i) & 1) row += across[i] ?? 0;
+    for (let i = 0; i <= i1 - i0; i++) if ((word >>> i) & 1) row += (across[i] ?? 0) * (room[o + i] ?? 0);
     share += row * (upwards[j - j0] ?? 0);
   }
   return share;

@@ -1,4 +1,5 @@
-import type { LinkCut } from './kerf-links.ts';
+import type { CellRoom, LinkCut } from './kerf-links.ts';
+import { roomGiven } from './kerf-links.ts';
 import type { PlateGrid } from './plate-grid.ts';
 
 /** The rectangle of cells that heat has come to: columns `i0..i1`, rows `j0..j1`, both included; empty while i1 < i0. */
@@ -7,6 +8,8 @@ export type Warm = { i0: number; i1: number; j0: number; j1: number };
 /** Conducts heat over a grid, step by step of equal length. Holds what it needs for that; `rise` is the temperature rise of the cells, K. */
 export type Conduction = {
   readonly rise: Float64Array;
+  /** What a cell holds per kelvin, in whole cells. */
+  readonly room: CellRoom;
   readonly warm: Warm;
   /** One step on. */
   step(): void;
@@ -29,15 +32,24 @@ const growth = 8;
 export function conductionOver(grid: PlateGrid, alpha: number, time: number, fade: number): Conduction {
   const { nx, ny, cellX, cellY } = grid;
   const rise = new Float64Array(nx * ny);
+  const room = new Float64Array(nx * ny).fill(1);
   const warm: Warm = { i0: nx, i1: -1, j0: ny, j1: -1 };
-  const rows = direction(rise.length, 1, nx, (alpha * time) / (cellX * cellX));
-  const columns = direction(rise.length, nx, ny, (alpha * time) / (cellY * cellY));
+  const rows = direction(room, 1, nx, (alpha * time) / (cellX * cellX));
+  const columns = direction(room, nx, ny, (alpha * time) / (cellY * cellY));
   for (let j = 0; j < ny; j++) rows.factor(j * nx);
   for (let i = 0; i < nx; i++) columns.factor(i);
   const lateRows = new Uint8Array(ny);
   const lateColumns = new Uint8Array(nx);
   const swept = new Float64Array(4 * Math.max(nx, ny));
   let rowsFirst = true;
+
+  /** Room goes from one cell to another with the heat that is in it. */
+  const hand = (from: number, to: number, given: number): void => {
+    const had = room[to] ?? 0;
+    rise[to] = (had * (rise[to] ?? 0) + given * (rise[from] ?? 0)) / (had + given);
+    room[to] = had + given;
+    room[from] = (room[from] ?? 0) - given;
+  };
 
   const grow = (): void => {
     const { i0, i1, j0, j1 } = warm;
@@ -57,6 +69,7 @@ export function conductionOver(grid: PlateGrid, alpha: number, time: number, fad
 
   return {
     rise,
+    room,
     warm,
     step() {
       for (let j = 0; j < ny; j++) if (lateRows[j]) rows.factor(j * nx);
@@ -67,36 +80,43 @@ export function conductionOver(grid: PlateGrid, alpha: number, time: number, fad
       grow();
       const { i0, i1, j0, j1 } = warm;
       const corner = j0 * nx + i0;
-      const alongRows = () => sweep(rise, swept, rows, corner, nx, j1 - j0 + 1, 1, i1 - i0 + 1, 1);
+      const alongRows = () => sweep(rise, room, swept, rows, corner, nx, j1 - j0 + 1, 1, i1 - i0 + 1, 1);
       if (rowsFirst) alongRows();
-      sweep(rise, swept, columns, corner, 1, i1 - i0 + 1, nx, j1 - j0 + 1, fade);
+      sweep(rise, room, swept, columns, corner, 1, i1 - i0 + 1, nx, j1 - j0 + 1, fade);
       if (!rowsFirst) alongRows();
       rowsFirst = !rowsFirst;
     },
-    cut({ index, upwards }) {
+    cut(link) {
+      const { index, upwards } = link;
       (upwards ? columns : rows).closed[index] = 1;
-      if (upwards) lateColumns[index % nx] = 1;
-      else lateRows[Math.floor(index / nx)] = 1;
+      const next = index + (upwards ? nx : 1);
+      const given = roomGiven(room, link, nx);
+      if (given > 0) hand(next, index, given);
+      else if (given < 0) hand(index, next, -given);
+      for (const cell of [index, next]) {
+        lateColumns[cell % nx] = 1;
+        lateRows[Math.floor(cell / nx)] = 1;
+      }
     },
   };
 }
 
 /**
- * One direction's tridiagonal systems (1 − cδ²), c = (r − 1/6)/2, each as L·D·Lᵀ: `ahead` of a cell is the share it hands to the next, `pivot` 1/D. A step is
- * (1 + gain)·(1 − cδ²)⁻¹ − gain with gain = (r + 1/6)/(r − 1/6), which is (1 − cδ²)⁻¹·(1 + (r + 1/6)/2·δ²) without a product of its own.
+ * One direction's tridiagonal systems (R − cδ²), R the room of the cells and c = (r − 1/6)/2, each as L·D·Lᵀ: `ahead` of a cell is the share it hands to the next, `pivot` 1/D. A step is
+ * (1 + gain)·(R − cδ²)⁻¹R − gain with gain = (r + 1/6)/(r − 1/6), which is (R − cδ²)⁻¹·(R + (r + 1/6)/2·δ²) without a product of its own.
  */
-function direction(cells: number, stride: number, count: number, r: number) {
+function direction(room: CellRoom, stride: number, count: number, r: number) {
   if (!(r > 0.25)) throw new RangeError(`step of ${r} cells² of spread is outside (0.25, ∞)`);
   const c = (r - 1 / 6) / 2;
-  const ahead = new Float64Array(cells);
-  const pivot = new Float64Array(cells);
-  const closed = new Uint8Array(cells);
+  const ahead = new Float64Array(room.length);
+  const pivot = new Float64Array(room.length);
+  const closed = new Uint8Array(room.length);
   const factor = (first: number): void => {
     let before = 0;
     let handed = 0;
     for (let k = 0, at = first; k < count; k++, at += stride) {
       const after = k < count - 1 && closed[at] === 0 ? c : 0;
-      const diagonal = 1 + before + after - before * handed;
+      const diagonal = (room[at] ?? 0) + before + after - before * handed;
       handed = after / diagonal;
       ahead[at] = handed;
       pivot[at] = 1 / diagonal;
@@ -112,6 +132,7 @@ function direction(cells: number, stride: number, count: number, r: number) {
  */
 function sweep(
   rise: Float64Array,
+  room: CellRoom,
   swept: Float64Array,
   { ahead, pivot, gain }: ReturnType<typeof direction>,
   corner: number,
@@ -133,10 +154,10 @@ function sweep(
     let [a0, a1, a2, a3] = [0, 0, 0, 0];
     let at = 0;
     for (let k = 0; k < count; k++) {
-      y0 = (rise[o0] ?? 0) + a0 * y0;
-      y1 = (rise[o1] ?? 0) + a1 * y1;
-      y2 = (rise[o2] ?? 0) + a2 * y2;
-      y3 = (rise[o3] ?? 0) + a3 * y3;
+      y0 = (rise[o0] ?? 0) * (room[o0] ?? 0) + a0 * y0;
+      y1 = (rise[o1] ?? 0) * (room[o1] ?? 0) + a1 * y1;
+      y2 = (rise[o2] ?? 0) * (room[o2] ?? 0) + a2 * y2;
+      y3 = (rise[o3] ?? 0) * (room[o3] ?? 0) + a3 * y3;
       a0 = ahead[o0] ?? 0;
       a1 = ahead[o1] ?? 0;
       a2 = ahead[o2] ?? 0;
@@ -173,7 +194,7 @@ function sweep(
     let y = 0;
     let a = 0;
     for (let k = 0; k < count; k++, o += along) {
-      y = (rise[o] ?? 0) + a * y;
+      y = (rise[o] ?? 0) * (room[o] ?? 0) + a * y;
       a = ahead[o] ?? 0;
       swept[k] = y;
     }

@@ -28,8 +28,8 @@ export type GridHeatOf = {
   readonly coolingTime: number; // s
 };
 
-/** Length of a drop in widths of its bell (standard deviations): of a straight row of them the ripple is 5e-9. */
-const dropLength = 1;
+/** Length of a drop in widths of its bell (standard deviations): of a straight row of them the ripple is 2e-6. */
+const dropLength = 1.2;
 /** How far from a kerf's middle it is looked which side a cell is on, m. */
 const beside = 1e-6;
 /** What a bridge between cells that only share a corner carries, as a share of a face. */
@@ -46,7 +46,7 @@ export function gridHeat(of: GridHeatOf, going: (share: number) => void): KeptRi
   const { nx, cellX, cellY } = grid;
   const { step, steps, every, age } = pace;
   const conduction = conductionOver(grid, alpha, step, Math.exp(-step / coolingTime));
-  const { rise, warm } = conduction;
+  const { rise, room, warm } = conduction;
   const bridged = Math.exp((-bridgeWidth * 2 * alpha * step) / (cellX * cellY));
   const perHeat = 1 / (capacity * cellX * cellY);
   const length = dropLength * laidWidth(grid);
@@ -65,7 +65,8 @@ export function gridHeat(of: GridHeatOf, going: (share: number) => void): KeptRi
     warm.j0 = Math.min(warm.j0, j0);
     warm.j1 = Math.max(warm.j1, j1);
     if (!window.parted) {
-      addBell(amount, null);
+      left.fill(-1);
+      addBell(amount / shareOf(window, left, room, nx), null);
       return;
     }
     const { x, y, tangent } = drop;
@@ -73,14 +74,17 @@ export function gridHeat(of: GridHeatOf, going: (share: number) => void): KeptRi
     const onLeft = sides.cellBeside(x + across, y + along, time);
     const onRight = tangent ? sides.cellBeside(x - across, y - along, time) : -1;
     const halves = (onLeft >= 0 ? 1 : 0) + (onRight >= 0 ? 1 : 0);
-    if (halves === 0) addBell(amount, null);
+    if (halves === 0) {
+      left.fill(-1);
+      addBell(amount / shareOf(window, left, room, nx), null);
+    }
     for (const [cell, reached] of [
       [onLeft, left],
       [onRight, right],
     ] as const) {
       if (cell < 0) continue;
       reachFrom(window, cell % nx, Math.floor(cell / nx), reached);
-      addBell(amount / halves / shareOf(window, reached), reached);
+      addBell(amount / halves / shareOf(window, reached, room, nx), reached);
     }
   };
 
@@ -120,7 +124,7 @@ export function gridHeat(of: GridHeatOf, going: (share: number) => void): KeptRi
     const time = n * step;
     for (let cut = cuts[nextCut]; cut && cut.time <= time - step; cut = cuts[++nextCut]) conduction.cut(cut);
     conduction.step();
-    for (const { cell, beyond, since } of sides.bridges) if (since <= time) exchange(rise, cell, beyond, bridged);
+    for (const { cell, beyond, since } of sides.bridges) if (since <= time) exchange(rise, room, cell, beyond, bridged);
     const until = time - age;
     const after = until - step;
     for (let piece = pieces[firstPiece]; piece && piece.to <= after; piece = pieces[++firstPiece]);
@@ -136,9 +140,9 @@ export function gridHeat(of: GridHeatOf, going: (share: number) => void): KeptRi
 }
 
 /** Brings two cells nearer to each other, to `share` of what parts them; their heat together stays. */
-function exchange(rise: Float64Array, a: number, b: number, share: number): void {
-  const mean = ((rise[a] ?? 0) + (rise[b] ?? 0)) / 2;
-  const half = (((rise[a] ?? 0) - (rise[b] ?? 0)) / 2) * share;
-  rise[a] = mean + half;
-  rise[b] = mean - half;
+function exchange(rise: Float64Array, room: Float64Array, a: number, b: number, share: number): void {
+  const [ra, rb] = [room[a] ?? 0, room[b] ?? 0];
+  const mean = (ra * (rise[a] ?? 0) + rb * (rise[b] ?? 0)) / (ra + rb);
+  rise[a] = mean + ((rise[a] ?? 0) - mean) * share;
+  rise[b] = mean + ((rise[b] ?? 0) - mean) * share;
 }

@@ -13,15 +13,15 @@ export type GridPace = {
 };
 
 /** Variance of the bell as which heat is laid on the grid, in cells²: narrower ones a grid of fourth order carries with errors above a per cent. */
-const laidVariance = 2;
+const laidVariance = 1;
 /** Variance that a step adds, in cells²: twice the Fourier number. */
 const stepVariance = 1;
 /** Shortest step in those: the compact scheme needs more than a half. */
 const leastVariance = 0.6;
 /** Variance that a reading adds, in cells², at least: narrower bells can't be summed over cells. */
 const readVariance = 0.5;
-/** Values that are kept for readings, at most: 64 MB. */
-const keptValues = 8e6;
+/** Values that are kept for readings, at most: 80 MB. */
+const keptValues = 1e7;
 /** Fewer steps aren't fitted to the cut's end but go beyond it: fitted, they could be too short. */
 const fewestFitted = 8;
 

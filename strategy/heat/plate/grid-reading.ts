@@ -1,7 +1,7 @@
 import type { Point } from '../../path/point.ts';
 import { cellWindow, layWindow, partWindow, reachFrom, shareOf, widestWindow } from './cell-window.ts';
 import type { KeptRise } from './grid-heat.ts';
-import type { KerfLinks } from './kerf-links.ts';
+import type { CellRoom, KerfLinks } from './kerf-links.ts';
 import type { KerfSides } from './kerf-sides.ts';
 import type { PlateGrid } from './plate-grid.ts';
 import { cellMiddle } from './plate-grid.ts';
@@ -10,7 +10,7 @@ import { cellMiddle } from './plate-grid.ts';
 export type GridReading = (state: KeptRise, point: Point, variance: number) => number;
 
 /** Readings of a grid's kept moments. */
-export function gridReading(grid: PlateGrid, links: KerfLinks, sides: KerfSides): GridReading {
+export function gridReading(grid: PlateGrid, links: KerfLinks, sides: KerfSides, room: CellRoom): GridReading {
   const { nx, ny, minX, minY, cellX, cellY } = grid;
   const window = cellWindow();
   const reached = new Int32Array(widestWindow);
@@ -44,11 +44,20 @@ export function gridReading(grid: PlateGrid, links: KerfLinks, sides: KerfSides)
       const o = (j - state.j0) * width - state.i0;
       let row = 0;
       for (let i = i0; i <= i1; i++)
-        if ((cells >>> (i - window.i0)) & 1) row += (across[i - window.i0] ?? 0) * (state.values[o + i] ?? 0);
+        if ((cells >>> (i - window.i0)) & 1)
+          row += (across[i - window.i0] ?? 0) * (room[j * nx + i] ?? 0) * (state.values[o + i] ?? 0);
       sum += row * (upwards[j - window.j0] ?? 0);
     }
-    return window.parted ? sum / shareOf(window, reached) : sum;
+    return sum / shareOf(window, reached, room, nx);
   };
+}
+
+/** What a kept moment's cells hold together, K times cells. */
+export function heatOn({ i0, i1, j0, j1, values }: KeptRise, room: CellRoom, nx: number): number {
+  let sum = 0;
+  let k = 0;
+  for (let j = j0; j <= j1; j++) for (let i = i0; i <= i1; i++) sum += (values[k++] ?? 0) * (room[j * nx + i] ?? 0);
+  return sum;
 }
 
 /** The greatest rise among kept ones, K. */

@@ -15,8 +15,17 @@ export type KerfLinks = {
   readonly upBy: Int32Array;
 };
 
+/** Room of cells: 1 for a whole one. A cell whose border with the next is a kerf reaches as far as that, and no further. */
+export type CellRoom = Float64Array;
+
 /** A way between two cells that is cut at a time: `index` of the first cell, to the right or upwards. */
-export type LinkCut = { readonly time: number; readonly index: number; readonly upwards: boolean };
+export type LinkCut = {
+  readonly time: number;
+  readonly index: number;
+  readonly upwards: boolean;
+  /** Room that the first cell gets from the second, as the kerf isn't half way between their middles. */
+  readonly room: number;
+};
 
 /**
  * Middles of cells are taken this share of a cell off, so that paths on round numbers, which often run exactly through middles, have a side; neither
@@ -38,24 +47,31 @@ export function kerfLinks(
   const startY = minY + (0.5 + offY) * cellY;
   const rightBy = new Int32Array(nx * ny).fill(-1);
   const upBy = new Int32Array(nx * ny).fill(-1);
-  const cut = (links: Float64Array, by: Int32Array, index: number, time: number, piece: number): void => {
-    if (!(time < (links[index] ?? 0))) return;
-    links[index] = time;
-    by[index] = piece;
-  };
+  const roomRight = new Float64Array(nx * ny);
+  const roomUp = new Float64Array(nx * ny);
   for (let piece = 0; piece < pieces.length; piece++) {
     const one = pieces[piece];
     if (!one) continue;
     const { segment, from, to } = one;
-    const lasts = to - from;
+    // a kerf askew crosses rows and columns: each counts by how square it is crossed, both together once
     // columns of middles: what crosses one cuts a way upwards
     crossings(segment, 'x', startX, cellX, nx, (column, share, y) => {
       const row = Math.floor((y - startY) / cellY);
-      if (row >= 0 && row < ny - 1) cut(up, upBy, row * nx + column, from + share * lasts, piece);
+      const index = row * nx + column;
+      const time = from + share * (to - from);
+      if (row < 0 || row >= ny - 1 || !(time < (up[index] ?? 0))) return;
+      up[index] = time;
+      upBy[index] = piece;
+      roomUp[index] = ((y - startY) / cellY - row - 0.5) * travelAlong(segment, 'x', share) ** 2;
     });
     crossings(segment, 'y', startY, cellY, ny, (row, share, x) => {
       const column = Math.floor((x - startX) / cellX);
-      if (column >= 0 && column < nx - 1) cut(right, rightBy, row * nx + column, from + share * lasts, piece);
+      const index = row * nx + column;
+      const time = from + share * (to - from);
+      if (column < 0 || column >= nx - 1 || !(time < (right[index] ?? 0))) return;
+      right[index] = time;
+      rightBy[index] = piece;
+      roomRight[index] = ((x - startX) / cellX - column - 0.5) * travelAlong(segment, 'y', share) ** 2;
     });
   }
   if (steel) {
@@ -67,8 +83,8 @@ export function kerfLinks(
   const cuts: LinkCut[] = [];
   for (let index = 0; index < nx * ny; index++) {
     const [toRight, upwards] = [right[index] ?? 0, up[index] ?? 0];
-    if (toRight < Infinity) cuts.push({ time: toRight, index, upwards: false });
-    if (upwards < Infinity) cuts.push({ time: upwards, index, upwards: true });
+    if (toRight < Infinity) cuts.push({ time: toRight, index, upwards: false, room: roomRight[index] ?? 0 });
+    if (upwards < Infinity) cuts.push({ time: upwards, index, upwards: true, room: roomUp[index] ?? 0 });
   }
   cuts.sort((a, b) => a.time - b.time);
   return { links: { right, up, rightBy, upBy }, cuts };
@@ -121,4 +137,38 @@ function arcCrossings(
       met(k, share, axis === 'x' ? centre.y + radius * Math.sin(angle) : centre.x + radius * Math.cos(angle));
     }
   }
+}
+
+/** How much of its travel a source makes along an axis, −1..1. */
+function travelAlong(segment: Segment, axis: 'x' | 'y', share: number): number {
+  if (segment.kind === 'arc') {
+    const angle = segment.startAngle + share * segment.sweep;
+    return axis === 'x' ? Math.sin(angle) : Math.cos(angle);
+  }
+  const { start, end } = segment;
+  return (end[axis] - start[axis]) / Math.hypot(end.x - start.x, end.y - start.y);
+}
+
+/** Least room of a cell: the compact scheme bears no smaller one beside whole ones. */
+const leastRoom = 0.3;
+
+/** What a cut changes of the room of the two cells it parts: what the first gets, as far as the second (or the first) has it to give. */
+export function roomGiven(room: CellRoom, { index, upwards, room: wanted }: LinkCut, nx: number): number {
+  const next = index + (upwards ? nx : 1);
+  const giver = wanted > 0 ? next : index;
+  const given = Math.min(Math.abs(wanted), Math.max(0, (room[giver] ?? 0) - leastRoom));
+  return wanted > 0 ? given : -given;
+}
+
+/** The room of the cells at a moment, s, with `cuts` in the order of time. */
+export function roomAt(cells: number, cuts: readonly LinkCut[], nx: number, time: number): CellRoom {
+  const room = new Float64Array(cells).fill(1);
+  for (const cut of cuts) {
+    if (cut.time > time) break;
+    const given = roomGiven(room, cut, nx);
+    const next = cut.index + (cut.upwards ? nx : 1);
+    room[cut.index] = (room[cut.index] ?? 0) + given;
+    room[next] = (room[next] ?? 0) - given;
+  }
+  return room;
 }

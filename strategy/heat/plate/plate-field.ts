@@ -6,9 +6,9 @@ import { plateCoolingTime } from '../surface-loss.ts';
 import { gridHeat } from './grid-heat.ts';
 import type { KeptRise } from './grid-heat.ts';
 import { gridPace } from './grid-pace.ts';
-import { gridReading, hottestOf } from './grid-reading.ts';
+import { gridReading, heatOn, hottestOf } from './grid-reading.ts';
 import { piecesInside } from './heat-drops.ts';
-import { kerfLinks } from './kerf-links.ts';
+import { kerfLinks, roomAt } from './kerf-links.ts';
 import { kerfSides } from './kerf-sides.ts';
 import type { PlateGrid } from './plate-grid.ts';
 import { plateGrid, steelCells } from './plate-grid.ts';
@@ -99,7 +99,7 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
       if (progress?.(share) === false) throw new PlateFieldCancelled('the plate’s field was given up');
     },
   );
-  const read = gridReading(grid, links, sides);
+  const read = gridReading(grid, links, sides, roomAt(nx * ny, cuts, nx, Infinity));
   const young = youngHeat({ plate, thickness, properties, coolingTime, pieces, pierces });
   let hottest: ReturnType<typeof hottestOf> | null = null;
 
@@ -174,7 +174,7 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
     mean(time) {
       within(time);
       const state = stateAt(time);
-      const sum = state ? state.values.reduce((all, one) => all + one, 0) : 0;
+      const sum = state ? heatOn(state, roomAt(nx * ny, cuts, nx, state.time - pace.step), nx) : 0;
       const settled = state ? (sum * cellX * cellY * Math.exp(-(time - state.time) / coolingTime)) / area : 0;
       return own(time) + settled + young.heat(state ? state.time - age : -Infinity, time) / (capacity * area);
     },
