@@ -8,7 +8,13 @@ await runCommand(async () => {
   const chosen = process.argv.slice(2);
   process.exitCode = await runTool(
     'vitest',
-    ['run', '--project', 'node', '--testTimeout=3600000', ...(chosen.length > 0 ? chosen : ['tests/strategy', 'tests/reference'])],
+    [
+      'run',
+      '--project',
+      'node',
+      '--testTimeout=3600000',
+      ...(chosen.length > 0 ? chosen : ['tests/strategy', 'tests/reference']),
+    ],
     { CINDERPATH_DEEP: '1' },
   );
 });

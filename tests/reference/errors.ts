@@ -1,4 +1,4 @@
-import { returnOf } from '../../strategy/heat/index.ts';
+import { peakAfter, returnOf } from '../../strategy/heat/index.ts';
 import { questionOf, type SetCase } from './corners.ts';
 import { type KeptResult, setWithResults } from './results.ts';
 
@@ -6,6 +6,13 @@ import { type KeptResult, setWithResults } from './results.ts';
 export function quickError(one: SetCase, kept: KeptResult): number {
   const rise = returnOf(questionOf(one)) - one.plateTemperature;
   return rise / kept.returnRise - 1;
+}
+
+/** Error of the quick model's peak at a depth inside the finished tip, relative to the reference's rise; the second edge's own heat included. */
+export function quickPeakError(one: SetCase, kept: KeptResult, depth: number): number {
+  const peak = kept.peaks.find((p) => Math.abs(p.depth - depth) < 1e-9);
+  if (!peak) throw new RangeError(`no peak was kept at ${depth} m`);
+  return (peakAfter(questionOf(one), depth).temperature - one.plateTemperature) / peak.rise - 1;
 }
 
 export type GroupErrors = {
@@ -44,16 +51,28 @@ export function quickErrors(): GroupErrors[] {
   ];
 }
 
-/** The errors as text: each case, then each group. */
+/** Depths whose peaks stand in the table, m. */
+const shownDepths = [0.5e-3, 1.5e-3, 3e-3] as const;
+
+/** The errors as text: each case, then each group; then those of the peaks at some depths, which no gate holds. */
 export function errorTable(): string {
   const percent = (value: number): string => `${(100 * value).toFixed(2)} %`.padStart(9);
-  const cases = setWithResults().map(({ one, kept }) => {
+  const whole = setWithResults();
+  const cases = whole.map(({ one, kept }) => {
     const rise = returnOf(questionOf(one)) - one.plateTemperature;
-    return `${one.name.padEnd(52)} reference ${kept.returnRise.toFixed(2).padStart(8)} K  quick ${rise.toFixed(2).padStart(8)} K ${percent(quickError(one, kept))}${one.gated ? '' : '  (no gate)'}`;
+    const [reference, quick] = [kept.returnRise, rise].map((k) => k.toFixed(2).padStart(7));
+    const peaks = shownDepths.map((depth) => percent(quickPeakError(one, kept, depth))).join('');
+    const gate = one.gated ? '' : '  (no gate)';
+    return `${one.name.padEnd(50)}${reference} K, quick ${quick} K ${percent(quickError(one, kept))}, peaks${peaks}${gate}`;
   });
-  const groups = quickErrors().map(
-    ({ group, count, mean, max }) =>
-      `${group.padEnd(16)}${String(count).padStart(4)}  mean ${percent(mean)}  max ${percent(max)}`,
+  const line = ({ group, count, mean, max }: GroupErrors): string =>
+    `${group.padEnd(24)}${String(count).padStart(4)}  mean ${percent(mean)}  max ${percent(max)}`;
+  const gated = whole.filter(({ one }) => one.gated);
+  const peaks = shownDepths.map((depth) =>
+    errorsOf(
+      `peak at ${depth * 1e3} mm, gated`,
+      gated.map(({ one, kept }) => quickPeakError(one, kept, depth)),
+    ),
   );
-  return [...cases, '', ...groups].join('\n');
+  return [...cases, '', ...quickErrors().map(line), ...peaks.map(line)].join('\n');
 }

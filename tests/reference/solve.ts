@@ -29,6 +29,10 @@ export type SolveOptions = {
   readonly secondEdge?: number;
   /** The kerf stays metal: for the comparison with exact line sources in a whole plate. */
   readonly uncut?: boolean;
+  /** Ends this length of way before the second edge begins, m, with all heat until then in both rises. */
+  readonly stopBefore?: number;
+  /** Another place than the measuring place, m. */
+  readonly place?: Point;
   /** Factor on the run-in and on the distance of the plate's rim, to show that neither shows. */
   readonly far?: number;
 };
@@ -148,13 +152,13 @@ export function solveCorner(one: CornerCase, options: SolveOptions = {}): Corner
   const { way, mesh, sizes, steel } = set;
   const plate = new Plate(mesh, steel);
   const kerf = new Kerf(plate, mesh, way, one.kerfWidth);
-  const atPlace = probe(set, plate, set.place);
+  const atPlace = probe(set, plate, options.place ?? set.place);
   const depths = peakDepths.map((depth) => ({
     depth,
     read: probe(set, plate, pointScale(set.inward, set.tip + depth)),
   }));
   const counted: Heat = plate.empty();
-  const out = way.arrival - leftOutStretch;
+  const out = way.arrival - (options.stopBefore ?? leftOutStretch);
   const pace = 0.8;
   let steps = 0;
   let releasedCounted = 0;
@@ -193,6 +197,11 @@ export function solveCorner(one: CornerCase, options: SolveOptions = {}): Corner
   let whole: Heat | null = null;
   let releasedWhole = 0;
   cut(0, out, [counted], [counted]);
+  if (options.stopBefore !== undefined) {
+    const rise = atPlace(counted);
+    const balance = counted.content.reduce((sum, e) => sum + e, 0) / releasedCounted;
+    return { returnRise: rise, wholeRise: rise, cooling: [], peaks: [], balance, nodes: plate.count, steps };
+  }
   whole = { content: counted.content.slice(), theta: counted.theta.slice() };
   releasedWhole = releasedCounted;
   cut(out, way.arrival, [counted, whole], [whole]);

@@ -181,6 +181,37 @@ describe('exact solutions', () => {
   });
 });
 
+describe('other grids', () => {
+  // Two finite-volume solvers on square cells of 0.4 and 0.2 mm, written apart from this one for the same question; unpublished.
+  const rows = [
+    [90, 3e-3, 214],
+    [120, 4e-3, 151],
+    [60, 5e-3, 215],
+    [45, 6e-3, 219],
+    [90, 6e-3, 163],
+  ] as const;
+
+  it.each(rows.slice(0, runs(2, 5)))(
+    'found the same 1.5 mm inside the path’s corner of %s° with a loop run on by %s m: %s °C',
+    (angle, extension, celsius) => {
+      const feed = 0.7 / 60;
+      const radius = extension * Math.tan((angle * degrees) / 2);
+      const one = corner(
+        angle,
+        { kind: 'loop', shape: 'tangent', radius },
+        { feed, kerfWidth: 0.8e-3, heatIntoPlate: 2500 / 0.019 / feed },
+      );
+      const middle = Math.PI - (angle * degrees) / 2;
+      const { returnRise } = solveCorner(one, {
+        stopBefore: 1e-3,
+        place: { x: 1.5e-3 * Math.cos(middle), y: 1.5e-3 * Math.sin(middle) },
+        properties: { conductivity: 32, density: 7850, specificHeat: 32 / 8e-6 / 7850 },
+      });
+      expect(Math.abs(20 + returnRise - celsius)).toBeLessThan(1.5);
+    },
+  );
+});
+
 describe('what must not show', () => {
   it('gives the same return rise with a longer run-in and a larger plate', () => {
     for (const one of [corner(60, tangent), corner(90, dwell)].slice(0, runs(1, 2))) {
