@@ -6,3 +6,4 @@ export const cardsRoot = ['cards'] as const;
 export const partsRoot = ['parts'] as const;
 export const layoutsRoot = ['layouts'] as const;
 export const cornerPlansRoot = ['corner-plans'] as const;
+export const estimatesRoot = ['estimates'] as const;

@@ -24,6 +24,7 @@ import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Heading, Small } from '@/components/ui/text.tsx';
 import type { HouseRule } from '@/shared/house-rules.ts';
 import { blankRule, HouseRuleForm } from './house-rule-form.tsx';
+import { RatesPanel } from './rates-panel.tsx';
 
 type Doing =
   | { readonly what: 'add' }
@@ -71,6 +72,7 @@ export function HouseRulesScreen() {
           </Rows>
         </Stack>
       )}
+      <RatesPanel />
       {doing?.what === 'end' ? (
         <RuleEndDialog key={doing.rule.id} rule={doing.rule} newest={newest} onDone={done} />
       ) : null}

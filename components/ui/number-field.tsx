@@ -16,6 +16,8 @@ export type NumberFieldProps = {
   readonly onBlur?: () => void;
   /** The unit of a number typed without one; else the usual one of the person's system. */
   readonly unit?: string;
+  /** What stands beside the number in place of the unit: of a plain number, what it is a number of. */
+  readonly unitShown?: string;
   readonly hint?: ReactNode;
   readonly error?: string;
   readonly optional?: boolean;
@@ -43,6 +45,7 @@ export function NumberField(props: NumberFieldProps) {
     disabled,
     name,
     large = false,
+    unitShown,
     ref,
   } = props;
   const id = useId();
@@ -94,7 +97,7 @@ export function NumberField(props: NumberFieldProps) {
         />
         <View style={styles.place}>
           <Text id={`${id}-unit`} style={styles.unit}>
-            {unit}
+            {unitShown ?? unit}
           </Text>
         </View>
       </View>
