@@ -72,7 +72,7 @@ export function HouseRulesScreen() {
           </Rows>
         </Stack>
       )}
-      <RatesPanel />
+      {rules.data === undefined ? null : <RatesPanel />}
       {doing?.what === 'end' ? (
         <RuleEndDialog key={doing.rule.id} rule={doing.rule} newest={newest} onDone={done} />
       ) : null}
