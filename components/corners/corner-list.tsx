@@ -1,5 +1,6 @@
-import { memo, useState } from 'react';
+import { memo, useMemo, useState } from 'react';
 import { cornerToolText } from '@/components/text/corner-preview.ts';
+import { summaryText } from '@/components/text/corner-summary.ts';
 import { cornerText, cornerWords, treatmentText } from '@/components/text/corners.ts';
 import { Button } from '@/components/ui/button.tsx';
 import { Choice } from '@/components/ui/choice.tsx';
@@ -9,10 +10,18 @@ import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import { treatments, type PlannedCorner, type Treatment } from '@/shared/corner-plans.ts';
+import { quantityText } from '@/strategy/units/index.ts';
 import { TemperatureFigure } from './temperature-scale.tsx';
 import { TreatmentBadge } from './treatment-badge.tsx';
 
-type CornerListProps = { corners: readonly PlannedCorner[]; chosen: string | null; onChoose: (id: string) => void };
+type CornerListProps = {
+  corners: readonly PlannedCorner[];
+  /** K */
+  limit: number;
+  chosen: string | null;
+  onChoose: (id: string) => void;
+};
+type Order = 'burn' | 'number';
 type Kind = 'every' | 'trouble' | Treatment;
 
 /** Rows shown at once: a plate of thousands of corners is turned through like a book. */
@@ -20,13 +29,20 @@ const pageRows = 40;
 /** Fewer corners than this are seen at a glance. */
 const fewCorners = 12;
 
-/** Every corner as a row: the same as the drawing says, for keyboard and ear as well. The page with the chosen one is open. */
-export function CornerList({ corners, chosen, onChoose }: CornerListProps) {
+/**
+ * Every corner as a row: the same as the drawing says, for keyboard and ear as well; what would burn most as drawn comes first. The page with the chosen one
+ * is open.
+ */
+export function CornerList({ corners, limit, chosen, onChoose }: CornerListProps) {
   const [kind, setKind] = useState<Kind>('every');
+  const [order, setOrder] = useState<Order>('burn');
   const [turned, setTurned] = useState<{ page: number; by: string | null } | null>(null);
+  const numbered = useMemo(() => {
+    const all = corners.map((corner, i) => ({ corner, number: i + 1 }));
+    return order === 'number' ? all : all.sort((a, b) => b.corner.untreated - a.corner.untreated);
+  }, [corners, order]);
   if (corners.length === 0) return <Body>{cornerText.none}</Body>;
 
-  const numbered = corners.map((corner, i) => ({ corner, number: i + 1 }));
   const shown = numbered.filter(({ corner }) => isOf(corner, kind));
   const pages = Math.max(1, Math.ceil(shown.length / pageRows));
   const chosenAt = shown.findIndex(({ corner }) => corner.id === chosen);
@@ -38,6 +54,18 @@ export function CornerList({ corners, chosen, onChoose }: CornerListProps) {
 
   return (
     <Stack gap="s">
+      {corners.length > 1 && (
+        <Choice
+          kind="segments"
+          label={summaryText.order}
+          options={[
+            { value: 'burn', label: summaryText.byBurn },
+            { value: 'number', label: summaryText.byNumber },
+          ]}
+          value={order}
+          onChange={setOrder}
+        />
+      )}
       {corners.length > fewCorners && (
         <Choice
           kind="list"
@@ -57,6 +85,7 @@ export function CornerList({ corners, chosen, onChoose }: CornerListProps) {
             key={corner.id}
             corner={corner}
             number={number}
+            limit={limit}
             chosen={corner.id === chosen}
             onChoose={onChoose}
           />
@@ -76,11 +105,13 @@ export function CornerList({ corners, chosen, onChoose }: CornerListProps) {
 const CornerRow = memo(function CornerRow({
   corner,
   number,
+  limit,
   chosen,
   onChoose,
 }: {
   corner: PlannedCorner;
   number: number;
+  limit: number;
   chosen: boolean;
   onChoose: (id: string) => void;
 }) {
@@ -99,6 +130,13 @@ const CornerRow = memo(function CornerRow({
         <Small>→</Small>
         <TemperatureFigure kelvin={corner.treated} />
       </Row>
+      <Small>
+        {corner.untreated > limit
+          ? summaryText.over(
+              quantityText(corner.untreated - limit, 'temperatureDifference', system, { decimals: 0 }).text,
+            )
+          : summaryText.under}
+      </Small>
     </PressRow>
   );
 });

@@ -10,6 +10,8 @@ import { Page } from '@/components/shell/page.tsx';
 import { common } from '@/components/text/common.ts';
 import { cornerToolText } from '@/components/text/corner-preview.ts';
 import { asSentence, cornerText } from '@/components/text/corners.ts';
+import { heatText } from '@/components/text/heat.ts';
+import { heatChartText } from '@/components/text/heat-charts.ts';
 import { stateText } from '@/components/text/pierce.ts';
 import { useLayout } from '@/components/theme/layout.ts';
 import { Button } from '@/components/ui/button.tsx';
@@ -27,18 +29,25 @@ import { BottomSheet } from './bottom-sheet.tsx';
 import { ChoiceBar } from './choice-bar.tsx';
 import { CornerList } from './corner-list.tsx';
 import { CornerSheet } from './corner-sheet.tsx';
+import { heatAsked } from './heat-asked.ts';
+import { HeatPanel } from './heat-panel.tsx';
+import { OrderSuggestions } from './order-suggestions.tsx';
 import { PlanDrawing } from './plan-drawing.tsx';
+import { PlanEstimate } from './plan-estimate.tsx';
 import { PlanForm } from './plan-form.tsx';
 import { planPath } from './plan-path.ts';
 import { planRun } from './plan-run.ts';
 import { PlanLegend } from './plan-legend.tsx';
+import { PlanSummary } from './plan-summary.tsx';
 import { PlanTotals } from './plan-totals.tsx';
 import { RedoTrouble } from './redo-trouble.tsx';
+import { returnPoints } from './return-points.ts';
+import { ReturnScatter } from './return-scatter.tsx';
 import { createRunClock } from './run-clock.ts';
 import { RunPanel } from './run-panel.tsx';
 import { TakeAway } from './take-away.tsx';
-import { TemperatureScale } from './temperature-scale.tsx';
 import { choicesOf, usePlanChoices } from './use-plan-choices.ts';
+import { usePlateHeat } from './use-plate-heat.ts';
 
 /** The part on its plate with what happens at each corner, and why. */
 export function CornerPlanScreen({ id }: { id: string }) {
@@ -73,6 +82,11 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
   const edges = useMemo(() => planPath(plan), [plan]);
   const path = shown.data ?? edges;
   const { timeline, dropped } = useMemo(() => planRun(plan, path), [plan, path]);
+  const heated = shown.data ?? (shown.isError ? edges : null);
+  const asked = useMemo(() => heated && heatAsked(plan, heated), [plan, heated]);
+  const heat = usePlateHeat(asked);
+  const [heatShown, setHeatShown] = useState(true);
+  const points = useMemo(() => returnPoints(plan, timeline), [plan, timeline]);
 
   const index = corners.findIndex(({ id }) => id === chosen);
   const corner = corners[index];
@@ -98,7 +112,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
     <CornerSheet
       corner={corner}
       number={index + 1}
-      limit={plan.limit}
+      plan={plan}
       onOverride={mayWrite ? (treatment) => choices.choose(corner.id, treatment) : null}
       busy={choices.busy}
       first={index === 0}
@@ -115,7 +129,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
       framed={wide}
     />
   );
-  const list = <CornerList corners={corners} chosen={chosen} onChoose={chooseAndShow} />;
+  const list = <CornerList corners={corners} limit={plan.limit} chosen={chosen} onChoose={chooseAndShow} />;
 
   return (
     <Page
@@ -157,6 +171,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
           <TextLink href={`/layouts/${plan.layout.id}`}>{cornerText.openLayout}</TextLink>
         </Body>
       )}
+      <PlanSummary plan={plan} duration={timeline.duration} />
       <View
         // on the web a view's host is the page's own element
         ref={(host: unknown) => {
@@ -176,8 +191,22 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
           timeline={timeline}
           dropped={dropped}
           clock={clock}
+          heat={heatShown ? heat.heat : null}
+          heatOld={heat.old || choices.busy}
           control={control}
-          steps={mayWrite && corners.length > 0 ? <ChoiceBar {...choices} /> : null}
+          steps={
+            <>
+              {heat.heat && (
+                <Button
+                  label={heatShown ? heatText.hide : heatText.show}
+                  expanded={heatShown}
+                  onPress={() => setHeatShown(!heatShown)}
+                />
+              )}
+              {mayWrite && corners.length > 0 && <ChoiceBar {...choices} />}
+            </>
+          }
+          keys={mayWrite && corners.length > 0}
           height={wide ? 520 : 360}
         />
       </View>
@@ -189,6 +218,7 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
         alongEdges={!shown.data}
         problems={shown.data?.problems.map(({ why }) => asSentence(why)) ?? []}
       />
+      <HeatPanel state={heat} />
       {!wide && corners.length > 0 && (
         <Button
           fill
@@ -201,9 +231,23 @@ function PlanOf({ plan, refetch }: { plan: CornerPlan; refetch: () => Promise<Co
       )}
       {!wide && trouble}
       <PlanLegend plan={plan} />
+      {points.length > 0 && (
+        <Panel title={heatChartText.scatterTitle}>
+          <ReturnScatter
+            points={points}
+            limit={plan.limit}
+            duration={timeline.duration}
+            clock={clock}
+            chosen={chosen}
+            onChoose={chooseAndShow}
+            height={wide ? 300 : 250}
+          />
+        </Panel>
+      )}
+      <OrderSuggestions plan={plan} mayWrite={mayWrite} />
       <PlanTotals plan={plan} />
+      {actor !== null && may(actor, 'rate.read') && <PlanEstimate plan={plan} />}
       {actor !== null && may(actor, 'cutPath.take') && <TakeAway planId={plan.id} approved={plan.revision.approved} />}
-      <TemperatureScale />
       <EstimateNote />
       {!wide && (corner ?? listed) && (
         <BottomSheet

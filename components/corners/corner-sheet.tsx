@@ -1,6 +1,6 @@
 import { View } from 'react-native';
 import { cornerToolText } from '@/components/text/corner-preview.ts';
-import { asSentence, cornerText, treatmentText } from '@/components/text/corners.ts';
+import { asSentence, cornerText, runnerUpWords, treatmentText } from '@/components/text/corners.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { space } from '@/components/theme/space.ts';
 import { Button } from '@/components/ui/button.tsx';
@@ -10,16 +10,16 @@ import { Panel } from '@/components/ui/panel.tsx';
 import { Cell, Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Figure, Heading, Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
-import type { PlannedCorner, Treatment } from '@/shared/corner-plans.ts';
+import type { CornerPlan, PlannedCorner, Treatment } from '@/shared/corner-plans.ts';
 import { quantityText } from '@/strategy/units/index.ts';
+import { CornerHeat } from './corner-heat.tsx';
 import { TemperatureFigure } from './temperature-scale.tsx';
 import { TreatmentBadge } from './treatment-badge.tsx';
 
 type CornerSheetProps = {
   corner: PlannedCorner;
   number: number;
-  /** K */
-  limit: number;
+  plan: Pick<CornerPlan, 'part' | 'cutting' | 'plateTemperature' | 'thickness' | 'limit'>;
   /** None for who only reads. */
   onOverride: ((treatment: Treatment | null) => void) | null;
   busy: boolean;
@@ -37,7 +37,7 @@ type CornerSheetProps = {
 export function CornerSheet({
   corner,
   number,
-  limit,
+  plan,
   onOverride,
   busy,
   onTurn,
@@ -50,12 +50,17 @@ export function CornerSheet({
   const system = useUnitSystem();
   const length = (metres: number) => quantityText(metres, 'length', system, { figures: 3 }).text;
   const seconds = (value: number) => quantityText(value, 'time', system, { figures: 3 }).text;
+  const hot = (kelvin: number) => quantityText(kelvin, 'temperature', system, { decimals: 0 }).text;
   const share = (value: number) => quantityText(value, 'ratio', system).text;
   const facts: { label: string; kelvin?: number; text?: string }[] = [
     { label: cornerText.without, kelvin: corner.untreated },
     { label: cornerText.with, kelvin: corner.treated },
     { label: cornerText.straight, kelvin: corner.straightEdge },
-    { label: cornerText.limit, kelvin: limit },
+    { label: cornerText.limit, kelvin: plan.limit },
+    ...(corner.background == null ? [] : [{ label: cornerText.background, kelvin: corner.background }]),
+    ...(corner.peak == null ? [] : [{ label: cornerText.peak, kelvin: corner.peak }]),
+    ...(corner.burnBack == null ? [] : [{ label: cornerText.burnBack, text: length(corner.burnBack) }]),
+    ...(corner.returnTime == null ? [] : [{ label: cornerText.returnTime, text: seconds(corner.returnTime) }]),
     { label: cornerText.added, text: seconds(corner.addedTime) },
     ...(corner.loop
       ? [
@@ -129,7 +134,9 @@ export function CornerSheet({
           </View>
         ))}
       </View>
+      <CornerHeat plan={plan} corner={corner} number={number} />
       <Heading level={3}>{cornerText.options}</Heading>
+      {corner.runnerUp && <Body>{runnerUpWords(corner.runnerUp, seconds)}</Body>}
       {corner.options.map((option) => (
         <Stack key={option.treatment} gap="xs">
           <Divider />
@@ -149,6 +156,11 @@ export function CornerSheet({
             </Row>
           </Row>
           <Body>{asSentence(option.why)}</Body>
+          {option.peak != null && (
+            <Small>
+              {cornerText.afterwards(hot(option.peak), option.burnBack == null ? null : length(option.burnBack))}
+            </Small>
+          )}
           {onOverride && option.treatment !== corner.treatment && (
             <Row>
               <Button

@@ -1,7 +1,6 @@
 import { useMemo, type ReactNode, type Ref } from 'react';
-import { View } from 'react-native';
+import { StyleSheet, View } from 'react-native';
 import Svg, { Circle, G, Path } from 'react-native-svg';
-import { pathsBox } from '@/components/parts/drawing-geometry.ts';
 import { dotsData } from '@/components/parts/drawing-marks.ts';
 import type { DrawingSpace } from '@/components/parts/drawing-space.ts';
 import { DrawingView, type DrawingControl, type DrawingMark } from '@/components/parts/drawing-view.tsx';
@@ -18,10 +17,14 @@ import { outlinePaths } from '@/shared/layouts.ts';
 import type { PlateClock } from '@/strategy/motion/index.ts';
 import type { Point } from '@/strategy/path/index.ts';
 import { cornersInward } from './corner-inward.ts';
+import type { PlateHeat } from './heat-field.ts';
+import { HeatLayer } from './heat-layer.tsx';
 import { MeasureLayer } from './measure-layer.tsx';
 import { MeasurePanel } from './measure-panel.tsx';
 import { RunLayer, type Dropped } from './run-layer.tsx';
 import type { RunClock } from './run-clock.ts';
+import { boxSegments, plateAround } from './plan-plate.ts';
+import { TipLayer } from './tip-layer.tsx';
 import { BadgeShape } from './treatment-badge.tsx';
 
 type PlanDrawingProps = {
@@ -36,9 +39,15 @@ type PlanDrawingProps = {
   timeline: PlateClock;
   dropped: readonly Dropped[];
   clock: RunClock;
+  /** The plate's heat, drawn behind; null while there is none, or it is not wanted. */
+  heat: PlateHeat | null;
+  /** It is not of this plan. */
+  heatOld: boolean;
   control: Ref<DrawingControl>;
-  /** Steps back and forth; none for who only reads. */
+  /** Beside the drawing's own buttons. */
   steps: ReactNode;
+  /** Choices can be taken back by keys. */
+  keys: boolean;
   height: number;
 };
 
@@ -53,8 +62,11 @@ export function PlanDrawing({
   timeline,
   dropped,
   clock,
+  heat,
+  heatOld,
   control,
   steps,
+  keys,
   height,
 }: PlanDrawingProps) {
   const { corners } = plan;
@@ -81,13 +93,10 @@ export function PlanDrawing({
   );
   const { layout } = plan;
   const outline = useMemo(() => layout && outlinePaths(layout.outline), [layout]);
-  const plate = useMemo(() => {
-    if (layout) return null;
-    const box = pathsBox(contours);
-    const { left, right, below, above } = plan.skeleton;
-    return { minX: box.minX - left, minY: box.minY - below, maxX: box.maxX + right, maxY: box.maxY + above };
-  }, [contours, layout, plan.skeleton]);
-  const marks = useMarks(plan, chosen);
+  const plate = useMemo(() => (layout ? null : plateAround(plan)), [layout, plan]);
+  const edge = useMemo(() => outline ?? (plate ? [{ segments: boxSegments(plate) }] : []), [outline, plate]);
+  const inward = useMemo(() => cornersInward(corners, contours), [corners, contours]);
+  const marks = useMarks(plan, inward, chosen);
 
   const index = corners.findIndex(({ id }) => id === chosen);
   const corner = corners[index];
@@ -117,11 +126,30 @@ export function PlanDrawing({
         chosen={chosen}
         onChoose={onChoose}
         onAim={measured ? aim : null}
-        over={(space) => (
+        under={
+          heat
+            ? (space, sheet) => (
+                <View style={heatOld ? styles.old : undefined}>
+                  <HeatLayer heat={heat} clock={clock} space={space} sheet={sheet} plate={edge} limit={plan.limit} />
+                </View>
+              )
+            : undefined
+        }
+        over={(space, sheet) => (
           <>
             <Pierces space={space} path={path} />
             <RunLayer space={space} timeline={timeline} dropped={dropped} clock={clock} />
             {corner && blocked && <InTheWay space={space} from={corner.at} at={blocked.at} />}
+            <TipLayer
+              corners={corners}
+              inward={inward}
+              chosen={chosen}
+              heat={heatOld ? null : heat}
+              clock={clock}
+              space={space}
+              sheet={sheet}
+              limit={plan.limit}
+            />
             {measured && <MeasureLayer space={space} places={measured} />}
           </>
         )}
@@ -135,7 +163,7 @@ export function PlanDrawing({
             {steps}
           </>
         }
-        ways={steps ? cornerToolText.keys : ''}
+        ways={keys ? cornerToolText.keys : ''}
         control={control}
         height={height}
       />
@@ -174,8 +202,11 @@ function Pierces({ space, path: { runs } }: { space: DrawingSpace; path: CutPath
 }
 
 /** A badge a corner. Choosing one changes that one and the one before, and leaves the others as they are. */
-function useMarks({ corners, part }: CornerPlan, chosen: string | null): readonly DrawingMark[] {
-  const inward = useMemo(() => cornersInward(corners, part.contours), [corners, part.contours]);
+function useMarks(
+  { corners }: CornerPlan,
+  inward: ReadonlyMap<string, Point>,
+  chosen: string | null,
+): readonly DrawingMark[] {
   const unchosen = useMemo(
     () => corners.map((corner) => markOf(corner, inward.get(corner.id), false)),
     [corners, inward],
@@ -234,3 +265,5 @@ function Obstacle() {
     </>
   );
 }
+
+const styles = StyleSheet.create({ old: { opacity: 0.4 } });

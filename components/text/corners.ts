@@ -26,6 +26,12 @@ export const cornerText = {
   without: 'without treatment',
   with: 'as planned',
   straight: 'straight edge beside it',
+  background: 'plate there when the cut comes back',
+  peak: 'hottest afterwards',
+  burnBack: 'burnt back, estimate',
+  returnTime: 'time of return in the cut',
+  afterwards: (peak: string, burnBack: string | null) =>
+    `Afterwards at most ${peak}${burnBack === null ? '' : `, hot enough to burn ${burnBack} in`}.`,
   added: 'added time',
   limit: 'limit',
   loopSize: 'loop',
@@ -112,4 +118,15 @@ export function cornerWords(corner: PlannedCorner, number: number, system: UnitS
   const hot = (kelvin: number) => quantityText(kelvin, 'temperature', system).text;
   const plan = `${treatmentText[corner.treatment].toLowerCase()}, back at ${hot(corner.treated)} instead of ${hot(corner.untreated)}`;
   return `Corner ${number}, ${cornerText.angle(corner.angle)}: ${plan}${corner.trouble === null ? '' : `. Trouble: ${corner.trouble}`}`;
+}
+
+/** The next best treatment, and what it costs more. */
+export function runnerUpWords(
+  { treatment, costsMore, why }: NonNullable<PlannedCorner['runnerUp']>,
+  seconds: (value: number) => string,
+): string {
+  if (treatment === null) return `Nothing else keeps the limits here: ${why}${/[.!?]$/.test(why) ? '' : '.'}`;
+  const cost =
+    costsMore === null ? '' : costsMore < 0 ? `, ${seconds(-costsMore)} less` : `, for ${seconds(costsMore)} more`;
+  return `Next best: ${treatmentText[treatment].toLowerCase()}${cost}. ${asSentence(why)}`;
 }

@@ -21,6 +21,7 @@ export const heatChartText = {
   ): string =>
     `Corner ${number}, back at ${time}: ${treated}${treatment === 'leave' ? '' : ` with a ${treatmentText[treatment].toLowerCase()}, ${untreated} untreated`}${over ? ', over the limit' : ''}.`,
   coolingTitle: 'How the tip cools',
+  noCurve: 'The model has no curve for this corner: its contour is not in the plan, or it is a spike without width.',
   cooling: (lines: readonly string[]): string => `Temperature at the tip against time. ${lines.join(' ')}`,
   sinceCorner: 'time since the cut was in the corner',
   atTip: 'at the tip',

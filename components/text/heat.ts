@@ -2,8 +2,11 @@ import { asSentence } from './corners.ts';
 
 /** Of the plate's heat behind the drawing. */
 export const heatText = {
-  show: 'Heat',
-  shown: 'Show the plate’s heat behind the drawing',
+  show: 'Show the heat',
+  hide: 'Hide the heat',
+  /** Drawn across what is not of the plan on the screen. */
+  oldMark: 'Heat of the plan before',
+  tips: (temperature: string) => `${temperature} now`,
   working: 'Working out the plate’s heat',
   stop: 'Stop',
   stopSpoken: 'Stop working out the plate’s heat',
@@ -13,6 +16,7 @@ export const heatText = {
   refused: (why: string) => `The plate’s heat can’t be worked out: ${asSentence(why)}`,
   crashed:
     'Working out the plate’s heat broke off on this device. Try again; with less open at once there is more room.',
+  aboutTitle: 'What is counted in the heat',
   keptOld: 'What is drawn is the last that was worked out.',
   legend:
     'Behind the drawing: the plate’s temperature at the slider’s moment, in the steel’s own colours. Lines with figures stand at named temperatures; hatched is hotter than the limit.',

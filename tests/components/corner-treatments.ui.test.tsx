@@ -67,7 +67,7 @@ const open = (number: number) =>
     <CornerSheet
       corner={treated[number - 1] ?? corner(0)}
       number={number}
-      limit={440}
+      plan={planOf()}
       onOverride={null}
       busy={false}
       onTurn={() => undefined}
