@@ -88,7 +88,7 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
   const { links, cuts } = kerfLinks(grid, kerfs, steel);
   const sides = kerfSides(grid, kerfs, links);
 
-  const end = Math.max(question.until ?? 0, pieces.at(-1)?.to ?? 0, pierces.at(-1)?.time ?? 0);
+  const end = Math.max(question.until ?? 0, question.heat.at(-1)?.to ?? 0, allPierces.at(-1)?.time ?? 0);
   const pace = gridPace(grid, alpha, end, question.step);
   const { age, readAge } = pace;
   const last = pace.steps * pace.step;
