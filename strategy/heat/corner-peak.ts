@@ -1,11 +1,11 @@
 import { pointAdd, pointDot, pointScale, pointSubtract } from '../path/point.ts';
 import { cornerInward } from '../path/corner.ts';
 import { segmentLength, segmentStart } from '../path/segment.ts';
-import { travelledAfter, travelledTo, withoutLast } from './corner-way.ts';
-import type { HeatedPiece } from './path-heat.ts';
-import { pathRise } from './path-heat.ts';
-import type { PlateProperties } from './properties.ts';
-import { diffusivity, midZoneProperties } from './properties.ts';
+import type { CornerHeat } from './corner-heat.ts';
+import { cornerHeat, cornerRise } from './corner-heat.ts';
+import { travelledAfter } from './corner-way.ts';
+import { diffusivity } from './properties.ts';
+import { frontLead } from './part-wall.ts';
 import type { ReturnQuestion } from './return-question.ts';
 import { checkReturnQuestion, measuringDepth, roundOf } from './return-question.ts';
 import { measuringPlace } from './return-temperature.ts';
@@ -15,15 +15,8 @@ import { edgeRise } from './tip-wedge.ts';
 /** A greatest temperature, K, and how long after cutting along the second edge began it is reached, s. */
 export type TipPeak = { readonly temperature: number; readonly time: number };
 
-/** A corner with all its heat, with times counted from the start of the path before it. */
-export type TipHistory = {
-  readonly question: ReturnQuestion;
-  readonly properties: PlateProperties;
-  readonly before: readonly HeatedPiece[];
-  /** When the second edge begins, s. */
-  readonly begins: number;
-  readonly edge: readonly EdgeStretch[];
-};
+/** A corner with all its heat. */
+export type TipHistory = { readonly heat: CornerHeat; readonly edge: readonly EdgeStretch[] };
 
 /**
  * How long after the front has come to the end of the first edge cutting along the second begins, s: the way of a loop at the cut's feed, a dwell, the
@@ -41,8 +34,8 @@ export function returnDelay(question: ReturnQuestion): number {
 
 /**
  * Highest temperature, K, that a place on the bisector, `depth` m inside the finished tip (where the return temperature is measured when left out), reaches
- * after cutting along the second edge has begun, and when, s. What was cut before spreads on as it did; the second edge heats the tip as a wedge with both
- * edges open, with all of its heat from where the front is full in steel. A stretch of 50 mm is followed. Throws RangeError as `returnOf` and for a
+ * after cutting along the second edge has begun, and when, s. What was cut before is shut in the tip as the second edge opens (`openTipRise`); the second edge heats the tip as a
+ * wedge with both edges open, with half of its heat, from where the finished tip begins. A stretch of 50 mm is followed. Throws RangeError as `returnOf` and for a
  * depth that is not positive.
  */
 export function peakAfter(question: ReturnQuestion, depth: number = measuringDepth): TipPeak {
@@ -56,57 +49,53 @@ export function peakAfter(question: ReturnQuestion, depth: number = measuringDep
  */
 export function coolingCurve(question: ReturnQuestion, times: readonly number[]): number[] {
   const history = historyOf(question);
-  const zero = history.begins - returnDelay(question);
+  const zero = history.heat.begins - returnDelay(question);
   return times.map((time) => temperatureAt(history, measuringDepth, zero + time));
 }
 
 /** All the heat a corner gets, before and after the second edge begins, for `temperatureAt`. Throws RangeError as `returnOf`. */
 export function historyOf(question: ReturnQuestion): TipHistory {
-  checkReturnQuestion(question);
-  const { corner, treatment, cut, properties = midZoneProperties } = question;
-  const { counted, arrival } = withoutLast(travelledTo(question), 0);
-  const begins = arrival + (treatment.kind === 'dwell' ? treatment.duration : 0);
-  const round = roundOf(question);
+  const heat = cornerHeat(question, 0);
+  const { corner, cut } = question;
   // the finished tip lies this much further along the second edge than the path's corner
   const tip = cut.kerfWidth / 2 / Math.tan(corner.angle / 2);
-  let time = begins;
+  const alpha = diffusivity(heat.properties);
+  let time = heat.begins;
   const edge: EdgeStretch[] = [];
   for (const { segment, feed, power } of travelledAfter(question)) {
     const length = segmentLength(segment);
-    const from = pointDot(pointSubtract(segmentStart(segment), corner.point), corner.outgoing) - tip;
-    const skipped = Math.min(length, Math.max(0, -from));
+    const start = pointDot(pointSubtract(segmentStart(segment), corner.point), corner.outgoing) - tip;
+    // before that the front is in the first edge's kerf and only partly in steel
+    const skipped = Math.min(length, Math.max(0, -start));
     const end = time + length / feed;
-    if (skipped < length)
-      edge.push({ from: from + skipped, to: from + length, start: time + skipped / feed, end, powerPerLength: power });
+    const lead = frontLead(cut.kerfWidth, feed, alpha);
+    const [from, to] = [start + skipped + lead, start + length + lead];
+    if (skipped < length) edge.push({ from, to, start: time + skipped / feed, end, powerPerLength: power });
     time = end;
   }
-  return {
-    question: round === undefined ? { ...question, round: undefined } : question,
-    properties,
-    before: counted,
-    begins,
-    edge,
-  };
+  return { heat, edge };
 }
 
 /** Temperature, K, on the bisector at a depth below the finished tip, m, at a time of the history, s. */
-export function temperatureAt(history: TipHistory, depth: number, time: number): number {
-  const { question, properties, before, edge } = history;
-  const { corner, cut, plateTemperature, round } = question;
+export function temperatureAt({ heat, edge }: TipHistory, depth: number, time: number): number {
+  const { corner, cut, plateTemperature } = heat.question;
   const deeper = pointScale(cornerInward(corner), depth - measuringDepth);
-  const place = pointAdd(measuringPlace(corner, cut.kerfWidth, round), deeper);
-  return (
-    plateTemperature +
-    pathRise(before, place, time, properties) +
-    edgeRise(edge, corner.angle, depth + sharpDepth(history), time, properties)
-  );
+  const place = pointAdd(measuringPlace(corner, cut.kerfWidth, roundOf(heat.question)), deeper);
+  const before = cornerRise(heat, place, time, edgeCut(edge, time));
+  return plateTemperature + before + edgeRise(edge, corner.angle, depth + sharpDepth(heat), time, heat.properties);
+}
+
+/** How much of the second edge is cut at a time, m. */
+function edgeCut(edge: readonly EdgeStretch[], time: number): number {
+  return edge.reduce((cut, { from, to, start, end }) => {
+    const share = Math.min(1, Math.max(0, (time - start) / (end - start)));
+    return cut + share * (to - from);
+  }, 0);
 }
 
 /** How far a rounded tip lies inside the one its edges would make, m. */
-function sharpDepth({ question: { corner, cut, round } }: TipHistory): number {
-  if (round === undefined) return 0;
-  const finished = Math.max(0, round - cut.kerfWidth / 2);
-  return finished / Math.sin(corner.angle / 2) - finished;
+function sharpDepth({ tip: { radius, angle } }: CornerHeat): number {
+  return radius / Math.sin(angle / 2) - radius;
 }
 
 /** Steps per factor of two in time in which the peak is looked for. */
@@ -115,9 +104,10 @@ const octave = 2;
 /** Highest temperature, K, on the bisector at a depth, m, after the second edge has begun; see `peakAfter`. */
 export function peakOf(history: TipHistory, depth: number): TipPeak {
   if (!(depth > 0 && depth < Infinity)) throw new RangeError(`depth ${depth} m is outside (0, ∞)`);
-  const { question, properties, begins, edge } = history;
+  const { heat, edge } = history;
+  const { question, properties, begins } = heat;
   const half = question.corner.angle / 2;
-  const place = depth + sharpDepth(history);
+  const place = depth + sharpDepth(heat);
   const aside = place * Math.sin(half);
   const alpha = diffusivity(properties);
   const first = edge[0];
@@ -142,21 +132,11 @@ export function peakOf(history: TipHistory, depth: number): TipPeak {
     } else fallen = best >= 0 ? fallen + 1 : fallen;
   }
   if (best < 0) return { temperature: highest, time: 0 };
-  let [low, high] = [timeOf(best - 1), timeOf(best + 1)];
-  // golden section, to a hundredth of the bracket
-  const ratio = (Math.sqrt(5) - 1) / 2;
-  let [c, d] = [high - ratio * (high - low), low + ratio * (high - low)];
-  let [atC, atD] = [at(c), at(d)];
-  for (let i = 0; i < 8; i++) {
-    if (atC > atD) {
-      [high, d, atD] = [d, c, atC];
-      c = high - ratio * (high - low);
-      atC = at(c);
-    } else {
-      [low, c, atC] = [c, d, atD];
-      d = low + ratio * (high - low);
-      atD = at(d);
-    }
-  }
-  return atC > atD ? { temperature: atC, time: c } : { temperature: atD, time: d };
+  // a parabola over the logarithm of the time through the highest and its neighbours, which lie a fixed factor apart
+  const [before, after] = [at(timeOf(best - 1)), at(timeOf(best + 1))];
+  const bend = before - 2 * highest + after;
+  const shift = bend < 0 && best > 0 ? Math.max(-1, Math.min(1, (before - after) / (2 * bend))) : 0;
+  const time = timeOf(best + shift);
+  const there = at(time);
+  return there > highest ? { temperature: there, time } : { temperature: highest, time: timeOf(best) };
 }

@@ -11,7 +11,7 @@ import { roundOf, straightRun } from './return-question.ts';
 /** A piece of path with its feed, m/s, and what it leaves, W per metre of thickness. */
 export type Travelled = { readonly segment: Segment; readonly feed: number; readonly power: number };
 
-/** All that is cut before the second edge begins, in order. */
+/** All that is cut before the second edge begins, in order; of a loop the way out of its extension only, which the part's side sees straight. */
 export function travelledTo(question: ReturnQuestion): Travelled[] {
   const { corner, treatment, cut, before } = question;
   const round = roundOf(question);
@@ -21,15 +21,7 @@ export function travelledTo(question: ReturnQuestion): Travelled[] {
   const edge = before ?? [
     lineBetween(pointSubtract(corner.point, pointScale(corner.incoming, straightRun)), corner.point),
   ];
-  if (treatment.kind === 'loop') {
-    const [out, ...far] = treatment.loop.segments.slice(0, -1);
-    const way = treatment.loop.segments.slice(-1);
-    return [
-      ...[...edge, ...(out ? [out] : [])].map(straight),
-      ...far.map((segment) => ({ segment, feed, power: power / 2 })),
-      ...way.map((segment) => ({ segment, feed, power: 0 })),
-    ];
-  }
+  if (treatment.kind === 'loop') return [...edge, treatment.loop.segments[0]].map(straight);
   const rounded = round === undefined ? edge : pathWithoutLast(edge, roundTangent(round, corner.angle));
   const arc = round === undefined ? [] : [arcRound(corner, round)];
   if (treatment.kind !== 'ease') return [...rounded, ...arc].map(straight);

@@ -1,8 +1,8 @@
 import { besselIScaled } from './special-functions.ts';
 
 /** Steps of the trapezoid rule over the diffracted part, and its reach in widths of the bell exp(−zu²/2). */
-const STEP = 0.5;
-const REACH = 6.2;
+const STEP = 0.9;
+const REACH = 5.8;
 
 /** So near to grazing the tip an image counts half and nothing is diffracted, rad. */
 const GRAZING = 1e-9;
@@ -20,6 +20,13 @@ export function wedgeKernelScaled(angle: number, theta: number, source: number, 
   const order = Math.PI / angle;
   return oneSided(order, theta - source, z) + oneSided(order, theta + source, z);
 }
+
+/**
+ * The same for a place on the bisector and a source on an edge, with the straight way between them counted: the rise is Q′/(4πkt)·e^(−d²/4αt) times this,
+ * dimensionless: 2π/β for small z, about 2 for large.
+ */
+export const bisectorKernel = (angle: number, z: number): number =>
+  2 * oneSided(Math.PI / angle, angle / 2, z) * Math.exp(2 * z * Math.sin(angle / 4) ** 2);
 
 /** ν·[I₀(z) + 2ΣI_mν(z)·cos(mνφ)]·e^(−z) for ν = π/β. */
 function oneSided(order: number, phi: number, z: number): number {
@@ -53,7 +60,7 @@ function diffracted(order: number, x: number, z: number): number {
   const halfSine = Math.sin(x / 2);
   const width = 1 / Math.sqrt(z);
   // the poles left over lie 2π/ν and more off the path, and past 16/ν nothing is left
-  const step = Math.min(STEP * width, 1.2 / order);
+  const step = Math.min(STEP * width, 2.5 / order);
   const reach = Math.min(REACH * width, 2 * Math.sinh(Math.min(10 / order, 3)));
   const near = poleAt(Math.abs(x), order);
   const far = poleAt(2 * Math.PI - Math.abs(x), order);

@@ -2,10 +2,14 @@ import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { HeatedPiece, ReturnTreatment } from '../../../strategy/heat/index.ts';
 import {
+  cornerFactor,
+  diffusivity,
+  frontLead,
   heatedPath,
   leftOutStretch,
   measuringPlace,
   movingLine,
+  partWall,
   pathRise,
   returnOf,
   returnTemperature,
@@ -64,22 +68,23 @@ describe('the return temperature', () => {
     }
   });
 
-  it('of a straight edge is the moving source with its last 2 mm taken off', () => {
+  it('of a straight edge is the moving source in the finished edge with its last 2 mm taken off', () => {
     const q = cut.heatIntoPlate * cut.feed;
-    const aside = cut.kerfWidth / 2 + 1.5e-3;
-    const alpha = properties.conductivity / (properties.density * properties.specificHeat);
+    const aside = 1.5e-3;
+    const alpha = diffusivity(properties);
+    const lead = frontLead(cut.kerfWidth, cut.feed, alpha);
     // what the last 2 mm add, by a plain sum
     let last = 0;
     const steps = 20_000;
     for (let i = 0; i < steps; i++) {
       const age = (((i + 0.5) / steps) * leftOutStretch) / cut.feed;
-      const square = (cut.feed * age) ** 2 + aside * aside;
+      const square = (cut.feed * age - lead) ** 2 + aside * aside;
       last +=
         ((q / (4 * Math.PI * properties.conductivity * age)) * Math.exp(-square / (4 * alpha * age)) * leftOutStretch) /
         cut.feed /
         steps;
     }
-    const whole = movingLine(q, cut.feed, { ahead: 0, aside }, properties);
+    const whole = movingLine(q, cut.feed, { ahead: -lead, aside }, properties);
     expect(straightEdgeReturn(cut, cold, properties)).toBeCloseTo(cold + whole - last, 3);
   });
 
@@ -186,43 +191,51 @@ describe('the return temperature', () => {
     expect([...flats].sort((a, b) => b - a)).toEqual(flats);
   });
 
-  it('round a corner is taken at the arc’s end without the last 2 mm, 1.5 mm inside the rounded tip', () => {
+  it('round a corner is hotter than its walls make half a plane, and cooler than a wedge that is shut to its end', () => {
     const [beta, radius] = [Math.PI / 3, 3e-3];
     const corner = tip(60);
+    const alpha = diffusivity(properties);
+    const lead = frontLead(cut.kerfWidth, cut.feed, alpha);
     const taken = radius / Math.tan(beta / 2);
     const arc = arcOf({ x: -taken, y: radius }, radius, -Math.PI / 2, Math.PI - beta);
     const kept = segmentPart(arc, 0, 1 - leftOutStretch / segmentLength(arc));
     const q = cut.heatIntoPlate * cut.feed;
-    const pieces = heatedPath([lineBetween({ x: -0.3, y: 0 }, { x: -taken, y: 0 }), kept], cut.feed, 0, q);
+    const path = [lineBetween({ x: -0.3, y: 0 }, { x: -taken, y: 0 }), kept];
+    const walls = heatedPath(path, cut.feed, 0, q).map((piece) => ({
+      ...piece,
+      segment: partWall(piece.segment, cut.kerfWidth, lead),
+    }));
     // the arc's nearest place to the corner, then half a kerf and 1.5 mm towards its centre
     const apex = radius / Math.sin(beta / 2) - radius;
     const place = pointScale(cornerInward(corner), apex + cut.kerfWidth / 2 + 1.5e-3);
-    const expected = cold + pathRise(pieces, place, leftOutStretch / cut.feed, properties);
     const question = { corner, cut, plateTemperature: cold, properties, round: radius };
-    expect(returnOf({ ...question, treatment: { kind: 'leave' } })).toBeCloseTo(expected, 6);
-    const waited = returnOf({ ...question, treatment: { kind: 'dwell', duration: 2 } });
-    expect(waited).toBeCloseTo(cold + pathRise(pieces, place, leftOutStretch / cut.feed + 2, properties), 6);
+    for (const duration of [0, 2]) {
+      const half = pathRise(walls, place, leftOutStretch / cut.feed + duration, properties);
+      const got = returnOf({ ...question, treatment: { kind: 'dwell', duration } }) - cold;
+      expect(got).toBeGreaterThan(half);
+      expect(got).toBeLessThan(half * cornerFactor(beta));
+    }
   });
 
-  it('of an eased corner is that of the same path run in steps of feed and power', () => {
+  it('of an eased corner is that of the same walls run in steps of feed and power', () => {
     const [length, share] = [8e-3, 0.4];
     const corner = tip(90);
+    const alpha = diffusivity(properties);
     const q = cut.heatIntoPlate * cut.feed;
     const steps = 8;
     const step = length / steps;
     let time = 0;
+    const wall = (from: number, to: number, feed: number) =>
+      partWall(lineBetween({ x: from, y: 0 }, { x: to, y: 0 }), cut.kerfWidth, frontLead(cut.kerfWidth, feed, alpha));
     const eased: HeatedPiece[] = Array.from({ length: steps }, (_, i) => {
       const by = 1 - ((i + 0.5) / steps) * (1 - share);
       const from = time;
       time += step / (cut.feed * by);
-      const segment = lineBetween({ x: -length + i * step, y: 0 }, { x: -length + (i + 1) * step, y: 0 });
+      const segment = wall(-length + i * step, -length + (i + 1) * step, cut.feed * by);
       return { segment, from, to: time, powerPerLength: q * by };
     });
     // 2 mm are the last two steps
-    const pieces = [
-      ...heatedPath([lineBetween({ x: -0.3, y: 0 }, { x: -length, y: 0 })], cut.feed, 0, q),
-      ...eased.slice(0, -2),
-    ];
+    const pieces = [...heatedPath([wall(-0.3, -length, cut.feed)], cut.feed, 0, q), ...eased.slice(0, -2)];
     const expected = cold + pathRise(pieces, measuringPlace(corner, cut.kerfWidth), time, properties);
     const treatment = { kind: 'ease', length, feedShare: share, powerShare: share } as const;
     expect(returnOf({ corner, treatment, cut, plateTemperature: cold, properties })).toBeCloseTo(expected, 6);

@@ -1,0 +1,79 @@
+import { cornerInward } from '../path/corner.ts';
+import type { LoopCorner } from '../path/loop.ts';
+import type { Point } from '../path/point.ts';
+import { pointAdd, pointScale } from '../path/point.ts';
+import { bisectorShare, bisectorTable } from './bisector-table.ts';
+import type { HeatedPiece } from './path-heat.ts';
+import { pathRise, weightedPathRise } from './path-heat.ts';
+import type { PlateProperties } from './properties.ts';
+import { diffusivity } from './properties.ts';
+import { erfc } from './special-functions.ts';
+
+/** A tip between two finished edges, the first one cut and the second as far as `open` m from where the two would meet. */
+export type OpenTip = {
+  readonly angle: number; // rad
+  /** Where the finished edges would meet, m. */
+  readonly apex: Point;
+  /** Radius of the finished arc, m; 0 for a sharp tip. */
+  readonly radius: number;
+  /** From the apex to where the second edge begins, m. */
+  readonly start: number;
+};
+
+/** The tip of a corner of the path, rounded on an arc of `round` m or sharp. */
+export function openTip(corner: LoopCorner, round: number | undefined, kerfWidth: number): OpenTip {
+  const half = corner.angle / 2;
+  const radius = round === undefined ? 0 : Math.max(0, round - kerfWidth / 2);
+  return {
+    angle: corner.angle,
+    apex: pointAdd(corner.point, pointScale(cornerInward(corner), kerfWidth / 2 / Math.sin(half))),
+    radius,
+    start: radius / Math.tan(half),
+  };
+}
+
+/**
+ * Temperature rise, K, on the bisector of a tip at a time, s, from what was left in the walls of its first edge and of its arc before the second edge began, at
+ * `begins`, of which `cut` m have been cut since.
+ *
+ * While nothing of the second edge is open that is half a plane. Once it is open as far as l from the apex it keeps heat in the tip, a share of what a wedge (Carslaw and Jaeger,
+ * ch. 14) gives more than half a plane: ½(1 + erf(b/√4αt)), with which the image in a straight mirror is seen past its end, b from the foot of the place on it (Sommerfeld's penumbra,
+ * same chapter), times 1 − exp(−3·l²/4αt) for what has not got out past the end since (own choice). Of heat that lay too near to the tip to be all within the wedge
+ * when the second edge began only the wedge's part of the half plane is kept. An arc, hollow towards the part, adds (√π/8)·√(4αt)/R to what a straight wall would
+ * give, the first term for a bent wall (see `loopTurnRise`), fading once heat has spread over its radius, when the wedge says it all.
+ */
+export function openTipRise(
+  walls: readonly HeatedPiece[],
+  { angle, apex, radius, start }: OpenTip,
+  at: Point,
+  time: number,
+  begins: number,
+  cut: number,
+  plate: PlateProperties,
+): number {
+  const open = start + cut;
+  if (open === 0 || angle >= Math.PI) return pathRise(walls, at, time, plate);
+  const table = bisectorTable(angle);
+  const alpha4 = 4 * diffusivity(plate);
+  const depth = Math.hypot(at.x - apex.x, at.y - apex.y);
+  // how far the second edge is open past the place's foot on it
+  const opposite = open - depth * Math.cos(angle / 2);
+  const outside = 1 - angle / Math.PI;
+  const since = Math.max(0, time - begins);
+  return weightedPathRise(walls, at, time, plate, (place, age, segment) => {
+    const [dx, dy] = [place.x - apex.x, place.y - apex.y];
+    const square = dx * dx + dy * dy;
+    const wedge = bisectorShare(table, (2 * depth * Math.sqrt(square)) / (alpha4 * age)) / 2;
+    // what the half plane already had outside the wedge when the second edge began, for a tip without an arc
+    const lost = radius > 0 || since === 0 ? 0 : outside * Math.exp(-square / (alpha4 * (age - since)));
+    const width = Math.sqrt(alpha4 * age);
+    const inSight = 1 - erfc(opposite / width) / 2;
+    const kept = -inSight * Math.expm1((-3 * open * open) / (alpha4 * age));
+    let weight = 1 + (wedge * (1 - lost) - 1) * kept;
+    if (radius > 0 && segment.kind === 'arc') {
+      const spread = width / radius;
+      weight += (Math.sqrt(Math.PI) / 8) * spread * Math.exp(-spread);
+    }
+    return weight;
+  });
+}
