@@ -1,50 +1,66 @@
 import type { z } from 'zod';
 import type { CornerPlan, cornerPlanEndpoints, PlannedCorner } from '../../shared/corner-plans.ts';
-import type { StrategyContent } from '../../shared/strategies.ts';
+import type { Prediction, StrategyContent } from '../../shared/strategies.ts';
 import {
   cornerInsert,
-  type CornerPlan as Computed,
-  type CornerPlanRequest,
-  type PlannedCorner as ComputedCorner,
+  platePlan,
+  type PlateCornerPlan,
+  type PlatePlan,
+  type PlatePlanRequest,
 } from '../../strategy/corners/index.ts';
-import type { MachineProfile } from '../../strategy/machine.ts';
+import type { MachineProfile, Nozzle } from '../../strategy/machine.ts';
+import { cutPathOf } from '../../strategy/path/compensation/index.ts';
 import { oxygenMassFlow, PIERCE_DEFAULTS } from '../../strategy/pierce/index.ts';
-import type { DrawingReader } from '../drawings/reader.ts';
+import { cutPathRequestOf } from '../take-away/cut-path.ts';
+import { cuttingOf } from './cutting.ts';
 import type { Planned } from './planned.ts';
 
 /** What the programmer chose. */
 export type Choices = Omit<z.output<NonNullable<(typeof cornerPlanEndpoints.redo)['body']>>, 'revisionId'>;
 
+/** What is planned, and the strategy revision with what it runs on. */
 export type PlanSource = {
   readonly planned: Planned;
   readonly content: StrategyContent;
+  readonly prediction: Prediction;
   readonly profile: MachineProfile;
-  readonly nozzleDiameter: number; // m
+  readonly nozzle: Nozzle;
 };
 
-/** The corners planned with a strategy's rules and cut, on what plate there is. */
-export async function computePlan(
-  drawings: DrawingReader,
-  { planned, content, profile, nozzleDiameter }: PlanSource,
-  choices: Choices,
-): Promise<Pick<CornerPlan, 'limit' | 'corners' | 'totals'>> {
-  const plan = await drawings.plan(planRequestOf({ planned, content, profile }, choices));
+/** What the planner decides from. */
+export type PlanChoices = Pick<Choices, 'thickness' | 'plateTemperature' | 'overrides'>;
+
+export type PlanAsked = { readonly source: PlanSource; readonly choices: PlanChoices };
+
+/** The corners as they are kept and sent. */
+export type PlannedPlate = Pick<CornerPlan, 'limit' | 'corners' | 'totals'>;
+
+/**
+ * The corners planned with a strategy's rules and cut on what plate there is, in their order and time. Takes seconds for thousands of corners: for a worker. Throws RangeError with
+ * a sentence for what can't be planned.
+ */
+export function plannedPlate({ source, choices }: PlanAsked): PlannedPlate {
+  const { content, nozzle } = source;
+  const plan = platePlan(planRequestOf(source, choices));
   const chosen = new Set(Object.keys(choices.overrides));
   return {
     limit: plan.limit,
     corners: plan.corners.map((corner) => presentCorner(corner, chosen)),
     totals: presentTotals(
       plan,
-      oxygenMassFlow(nozzleDiameter, content.cut.oxygenPressure, PIERCE_DEFAULTS.dischargeCoefficient),
+      oxygenMassFlow(nozzle.diameter, content.cut.oxygenPressure, PIERCE_DEFAULTS.dischargeCoefficient),
     ),
   };
 }
 
 /** What the planner is asked. */
 export function planRequestOf(
-  { planned, content, profile }: Pick<PlanSource, 'planned' | 'content' | 'profile'>,
-  choices: Pick<Choices, 'thickness' | 'plateTemperature' | 'overrides'>,
-): CornerPlanRequest {
+  { planned, content, prediction, profile, nozzle }: PlanSource,
+  { thickness, plateTemperature, overrides }: PlanChoices,
+): PlatePlanRequest {
+  const cutting = cuttingOf(content, profile, { thickness, plateTemperature, nozzle });
+  // where each contour begins when no corner gets anything: a loop may push its pierce a little aside
+  const untreated = cutPathRequestOf({ planned, plan: { corners: [] }, revision: { content, prediction } });
   return {
     contours: planned.contours.map(({ id, role, segments, said }) => ({
       id,
@@ -56,14 +72,18 @@ export function planRequestOf(
     rules: content.cornerRules,
     cut: content.cut,
     profile: { axes: profile.axes, smallestArc: profile.smallestArc },
-    thickness: choices.thickness,
-    plateTemperature: choices.plateTemperature,
-    overrides: choices.overrides,
+    thickness,
+    plateTemperature,
+    overrides,
+    cutPath: cutPathOf(untreated).path,
+    drive: cutting,
+    pierceHeat: cutting.pierceHeat ?? 0,
+    lossCoefficient: cutting.lossCoefficient,
   };
 }
 
 /** A computed corner as it is kept and sent; chosen are the ids of those that a person decided. */
-export function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string>): PlannedCorner {
+export function presentCorner(corner: PlateCornerPlan, chosen: ReadonlySet<string>): PlannedCorner {
   const { loop, ease, round } = corner;
   const insert = cornerInsert(corner);
   return {
@@ -103,7 +123,7 @@ export function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string
           slug: [...(loop.slug?.contour.segments ?? [])],
         }
       : null,
-    options: corner.options.map(({ treatment, fits, returnWith, addedTime, why, at, form }) => ({
+    options: corner.options.map(({ treatment, fits, returnWith, addedTime, why, at, form, peak, burnBack }) => ({
       treatment,
       fits,
       returnTemperature: returnWith,
@@ -111,13 +131,21 @@ export function presentCorner(corner: ComputedCorner, chosen: ReadonlySet<string
       why,
       at: at ?? null,
       form: form ?? null,
+      peak,
+      burnBack,
     })),
     trouble: corner.problem ?? null,
+    background: corner.background,
+    returnTime: corner.returnTime,
+    peak: corner.peak,
+    burnBack: corner.burnBack,
+    intervals: null,
+    runnerUp: corner.runnerUp,
   };
 }
 
 /** `oxygenFlow` in kg/s: the jet burns on through loops and blows on through dwells. A round that saves time saves oxygen. */
-function presentTotals({ totals }: Computed, oxygenFlow: number): CornerPlan['totals'] {
+function presentTotals({ totals }: PlatePlan, oxygenFlow: number): CornerPlan['totals'] {
   return {
     corners: totals.corners,
     loops: totals.loops,
@@ -130,6 +158,11 @@ function presentTotals({ totals }: Computed, oxygenFlow: number): CornerPlan['to
     addedOxygen: totals.addedTime * oxygenFlow,
     hottestUntreated: totals.hottestUntreated,
     hottestTreated: totals.hottestReturn,
+    highestBackground: totals.highestBackground,
+    meanPlateTemperature: totals.meanPlateTemperature,
+    hottestPeak: totals.hottestPeak,
+    deepestBurnBack: totals.deepestBurnBack,
+    cutTime: totals.cutTime,
   };
 }
 

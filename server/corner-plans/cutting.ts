@@ -2,7 +2,7 @@ import type { CornerPlan } from '../../shared/corner-plans.ts';
 import type { StrategyContent } from '../../shared/strategies.ts';
 import type { MachineProfile, Nozzle } from '../../strategy/machine.ts';
 import { usualLoss } from '../../strategy/heat/plate/index.ts';
-import { heightDefaults } from '../../strategy/motion/index.ts';
+import { heightMoves } from '../../strategy/motion/index.ts';
 import {
   oxygenMassFlow,
   PIERCE_DEFAULTS,
@@ -32,11 +32,11 @@ export function cuttingOf(content: StrategyContent, profile: MachineProfile, on:
     kerfWidth: cut.kerfWidth,
     restart: cornerRules.dwell.restart,
     heights: {
-      ...heightDefaults,
-      ...profile.heights,
-      pierceFrom: first?.from.standoff ?? cut.standoff,
-      pierceTo: last?.to.standoff ?? cut.standoff,
-      cut: cut.standoff,
+      ...heightMoves(profile, {
+        pierceFrom: first?.from.standoff ?? cut.standoff,
+        pierceTo: last?.to.standoff ?? cut.standoff,
+        cut: cut.standoff,
+      }),
       jerk: axes.jerk,
     },
     heatIntoPlate: cut.heatIntoPlate,

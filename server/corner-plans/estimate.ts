@@ -1,11 +1,11 @@
 import type { CornerPlan, PlannedCorner } from '../../shared/corner-plans.ts';
 import type { PlanComparison } from '../../shared/estimates.ts';
 import type { Prediction, StrategyContent } from '../../shared/strategies.ts';
-import { cornerPlan } from '../../strategy/corners/index.ts';
+import { platePlan } from '../../strategy/corners/index.ts';
 import { planEstimate, type CornersFare, type PlanVariant, type Rates } from '../../strategy/estimate/index.ts';
 import { plateField, type PlateField, type PlateQuestion } from '../../strategy/heat/plate/index.ts';
 import type { MachineProfile, Nozzle } from '../../strategy/machine.ts';
-import { heatOfClock, loadingDefaults, plateClock, type PlateClock } from '../../strategy/motion/index.ts';
+import { heatOfClock, loadingOf, plateClock, type PlateClock } from '../../strategy/motion/index.ts';
 import { cutPathOf } from '../../strategy/path/compensation/index.ts';
 import { contourBox } from '../../strategy/path/index.ts';
 import { cutPathRequestOf } from '../take-away/cut-path.ts';
@@ -92,11 +92,12 @@ const loopsAsked = ({ corners, overrides }: EstimateAsked['plan']): Choices['ove
 
 function plannedAnew(
   { planned, plan }: EstimateAsked,
-  { content, profile }: RevisionOn,
+  { content, prediction, profile, nozzle }: RevisionOn,
   overrides: Choices['overrides'],
 ): Corners {
   const { thickness, plateTemperature } = plan;
-  const found = cornerPlan(planRequestOf({ planned, content, profile }, { thickness, plateTemperature, overrides }));
+  const source = { planned, content, prediction, profile, nozzle };
+  const found = platePlan(planRequestOf(source, { thickness, plateTemperature, overrides }));
   return { limit: found.limit, corners: found.corners.map((corner) => presentCorner(corner, new Set())) };
 }
 
@@ -123,7 +124,7 @@ function variantOf(
     cut: cutting,
     thickness,
     plateTemperature,
-    loading: { ...loadingDefaults, ...profile.loading, shuttleTable: profile.bed.shuttleTable },
+    loading: loadingOf(profile),
     ...(field ? { field } : {}),
     rates,
   });

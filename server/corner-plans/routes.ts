@@ -6,7 +6,7 @@ import { namesOf } from '../people/names.ts';
 import { note } from '../record/note.ts';
 import type { Mount } from '../route.ts';
 import type { Services } from '../services.ts';
-import { computePlan, unknownOverrides, type Choices, type PlanSource } from './compute.ts';
+import { unknownOverrides, type Choices, type PlanSource } from './compute.ts';
 import { cuttingOf } from './cutting.ts';
 import {
   addCornerPlan,
@@ -155,13 +155,15 @@ async function sourceOf(tx: Transaction, of: PlanOf, choices: Choices, revisionI
   return {
     planned,
     content: revision.content,
+    prediction: revision.prediction,
     profile,
-    nozzleDiameter: nozzle.diameter,
+    nozzle,
   };
 }
 
 async function computedFor(services: Services, source: PlanSource, choices: Choices) {
-  const computed = await computePlan(services.drawings, source, choices);
+  const { thickness, plateTemperature, overrides } = choices;
+  const computed = await services.drawings.plan({ source, choices: { thickness, plateTemperature, overrides } });
   const unknown = unknownOverrides(computed.corners, choices.overrides);
   if (unknown.length > 0) {
     throw new AppError('invalid-fields', 'The part has no such corner.', {

@@ -1,7 +1,7 @@
 import { URL } from 'node:url';
 import type { PlanComparison } from '../../shared/estimates.ts';
 import type { DrawingAnswers, DrawingReadingWire } from '../../shared/parts.ts';
-import type { CornerPlan, CornerPlanRequest } from '../../strategy/corners/index.ts';
+import type { PlanAsked, PlannedPlate } from '../corner-plans/compute.ts';
 import type { LayoutAsked, LayoutJudgement } from '../../strategy/path/plate/index.ts';
 import type { ProblemCode } from '../../shared/errors.ts';
 import type { EstimateAsked } from '../corner-plans/estimate.ts';
@@ -11,13 +11,13 @@ import { createPool, WorkerRefusal } from '../workers/pool.ts';
 export type DrawingQuestion =
   | { readonly kind: 'read'; readonly bytes: Uint8Array; readonly answers: DrawingAnswers }
   | { readonly kind: 'layout'; readonly asked: LayoutAsked }
-  | { readonly kind: 'plan'; readonly request: CornerPlanRequest }
+  | { readonly kind: 'plan'; readonly asked: PlanAsked }
   | { readonly kind: 'estimate'; readonly asked: EstimateAsked };
 export type DrawingAnswer =
   | { readonly kind: 'reading'; readonly reading: DrawingReadingWire }
   | { readonly kind: 'none'; readonly why: string }
   | { readonly kind: 'layout'; readonly judgement: LayoutJudgement }
-  | { readonly kind: 'plan'; readonly plan: CornerPlan }
+  | { readonly kind: 'plan'; readonly plan: PlannedPlate }
   | { readonly kind: 'estimate'; readonly comparison: PlanComparison };
 
 /** Reads drawings, judges layouts, plans corners and estimates plans away from the thread that answers requests, within a time and a memory. */
@@ -25,7 +25,8 @@ export type DrawingReader = {
   /** 422 with a sentence when the file is no drawing that can be read. */
   read(bytes: Uint8Array, answers: DrawingAnswers): Promise<DrawingReadingWire>;
   layout(asked: LayoutAsked): Promise<LayoutJudgement>;
-  plan(request: CornerPlanRequest): Promise<CornerPlan>;
+  /** 409 with a sentence when the corners can't be planned: the plan that is kept stays as it was. */
+  plan(asked: PlanAsked): Promise<PlannedPlate>;
   /** What a plan costs, beside other ways to cut the same. */
   estimate(asked: EstimateAsked): Promise<PlanComparison>;
   close(): Promise<void>;
@@ -72,14 +73,17 @@ export function createDrawingReader(): DrawingReader {
       if (answer.kind !== 'layout') throw new Error('the drawing worker answered another question');
       return answer.judgement;
     },
-    plan: async (request) => {
-      const answer = await plans.ask({ kind: 'plan', request }).catch((error: unknown) => {
+    plan: async (asked) => {
+      const answer = await plans.ask({ kind: 'plan', asked }).catch((error: unknown) => {
         throw asRefusal(
           error,
           'unavailable',
           `The corners could not be planned within ${planSeconds} s: the part has too many of them for one plan.`,
         );
       });
+      if (answer.kind === 'none') {
+        throw new AppError('wrong-state', `These corners can’t be planned: ${answer.why}.`);
+      }
       if (answer.kind !== 'plan') throw new Error('the drawing worker answered another question');
       return answer.plan;
     },

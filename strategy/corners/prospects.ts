@@ -71,12 +71,13 @@ export function pathBefore({ segments }: Contour, corner: Corner, onPath: Point)
     length += segmentLength(edge);
     if (length > 0) before.push(segmentShift(edge, shift));
   }
-  const [first, own] = [fillet?.first ?? corner.index, fillet?.pieces ?? 0];
-  for (let back = 1; back < segments.length - own && length < countedPath; back++) {
+  const [first, pieces] = [fillet?.first ?? corner.index, fillet?.pieces ?? 0];
+  for (let back = 1; back < segments.length - pieces && length < countedPath; back++) {
     const segment = segments[(first + segments.length - back) % segments.length];
     if (!segment) break;
-    before.unshift(segmentShift(segment, shift));
-    length += segmentLength(segment);
+    const own = segmentLength(segment);
+    if (own > 0) before.unshift(segmentShift(segment, shift));
+    length += own;
   }
   return before;
 }

@@ -1,5 +1,11 @@
 import type { PlateField } from '../../heat/plate/index.ts';
 import { plateField } from '../../heat/plate/index.ts';
+import { roomTemperature, usualLoss } from '../../heat/plate/plate-question.ts';
+import { diffusionLength } from '../../heat/properties.ts';
+import { plateCoolingTime } from '../../heat/surface-loss.ts';
+import { contourBox } from '../../path/contour.ts';
+import type { Box } from '../../path/point.ts';
+import { boxGrow, boxUnion, emptyBox } from '../../path/point.ts';
 import { choose } from './choose.ts';
 import type { PlateWay } from './own-ways.ts';
 import type { OldHeat, PlateModel, PlateState, WayJudged } from './plate-model.ts';
@@ -17,6 +23,8 @@ export type DecidedPlate = {
   readonly field: PlateField;
   /** How often the plate's heat was computed. */
   readonly fields: number;
+  /** Mean temperature of the whole plate when the cut ends, K. */
+  readonly meanAtEnd: number;
 };
 
 /** A share of the work that is done, 0..1. Answering false ends it. */
@@ -41,11 +49,12 @@ const sameWait = 0.02;
  * chosen where it keeps every limit.
  */
 export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): DecidedPlate {
-  const { request, legs, context, properties, box } = prepared;
+  const { request, legs, context, properties } = prepared;
   const { plateTemperature, thickness, ambient, lossCoefficient, plate } = request;
   const going = (share: number): void => {
     if (progress?.(Math.min(1, share)) === false) throw new PlatePlanCancelled('the plan was given up');
   };
+  const box = heatedBox(prepared);
   const pass = (old: OldHeat | null, held?: readonly WayJudged<PlateWay>[]) => {
     const model = plateModel<PlateWay>({
       legs: legs.legs,
@@ -72,6 +81,7 @@ export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): 
       properties,
       ...scheduledHeat(legs, ways, schedule),
       until: prepared.duration + schedule.late,
+      ...cellOf(box),
     });
 
   let chosen = pass(null);
@@ -85,9 +95,47 @@ export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): 
     if (!settled && fields < mostFields) continue;
     going(1);
     const { model, ways, before } = chosen;
-    return { model, ways, before, schedule: scheduleOf(legs, ways), field, fields };
+    const meanAtEnd = meanOf(prepared, box, field, prepared.duration + schedule.late);
+    return { model, ways, before, schedule: scheduleOf(legs, ways), field, fields, meanAtEnd };
   }
 }
 
 const same = (a: WayJudged<PlateWay>, b: WayJudged<PlateWay> | undefined): boolean =>
   a.way === b?.way && Math.abs(a.wait - b.wait) < sameWait;
+
+/** Beyond so many times the length over which heat spreads in a cut, √(4αt), the plate is cold. */
+const coldBeyond = 3;
+
+/** The plate as far as the cut can warm it: a part lies in a skeleton that may be much larger. */
+function heatedBox({ box, request: { contours, plate }, properties, duration }: PreparedPlate): Box {
+  if (contours.length === 0 || (plate !== null && !('min' in plate))) return box;
+  // treatments may make the cut longer, seldom twice as long
+  const reach = coldBeyond * diffusionLength(properties, 2 * duration + 60);
+  const cut = boxGrow(
+    contours.reduce((all, { contour }) => boxUnion(all, contourBox(contour)), emptyBox),
+    reach,
+  );
+  return {
+    minX: Math.max(box.minX, Math.min(cut.minX, box.maxX)),
+    minY: Math.max(box.minY, Math.min(cut.minY, box.maxY)),
+    maxX: Math.min(box.maxX, Math.max(cut.maxX, box.minX)),
+    maxY: Math.min(box.maxY, Math.max(cut.maxY, box.minY)),
+  };
+}
+
+const areaOf = ({ minX, minY, maxX, maxY }: Box): number => (maxX - minX) * (maxY - minY);
+
+/** Cells of a field at most; its own choice of them is finer. */
+const mostCells = 5e5;
+const usualCell = 0.01;
+
+const cellOf = (box: Box): { readonly cell?: number } =>
+  areaOf(box) > mostCells * usualCell ** 2 ? { cell: Math.sqrt(areaOf(box) / mostCells) } : {};
+
+/** Mean of the whole plate, K, at a time of the field, which may be of a part of it. */
+function meanOf({ box: whole, request, properties }: PreparedPlate, box: Box, field: PlateField, time: number): number {
+  const { plateTemperature, thickness, ambient = roomTemperature, lossCoefficient = usualLoss } = request;
+  const cooling = lossCoefficient > 0 ? time / plateCoolingTime(thickness, lossCoefficient, properties) : 0;
+  const cold = ambient + (plateTemperature - ambient) * Math.exp(-cooling);
+  return cold + ((field.mean(time) - cold) * areaOf(box)) / areaOf(whole);
+}

@@ -17,7 +17,7 @@ import type { Limits, RunnerUp } from './tell.ts';
 import { candidateOn, runnerUpOf, told } from './tell.ts';
 
 /** A corner with what the plate's own heat does to it. */
-export type PlateCornerPlan = PlannedCorner & {
+export type PlateCornerPlan = Omit<PlannedCorner, 'options'> & {
   /** Temperature of the plate at the measuring place when the cut comes back, of all that was cut before the corner's own edge, K; null where no cut comes to it. */
   readonly background: number | null;
   /** When cutting along the second edge begins, s from the start of the cut; null likewise. */
@@ -65,7 +65,7 @@ export function platePlan(request: PlatePlanRequest, progress?: PlanProgress): P
 /** The plan of what was decided, told. */
 export function planOf(prepared: PreparedPlate, decided: DecidedPlate): PlatePlan {
   const { request, context, legs, duration } = prepared;
-  const { ways, schedule, field } = decided;
+  const { ways, schedule } = decided;
   const limits: Limits = { limit: context.limit, plateTemperature: request.plateTemperature, rules: request.rules };
   const legOf = new Map(legs.legs.map(({ corner }, k) => [corner, k]));
   const corners = prepared.corners.map((corner, i): PlateCornerPlan => {
@@ -84,7 +84,7 @@ export function planOf(prepared: PreparedPlate, decided: DecidedPlate): PlatePla
       highestBackground: greatest(corners, ({ background }) => background),
       hottestPeak: greatest(corners, ({ peak }) => peak),
       deepestBurnBack: greatest(corners, ({ burnBack }) => burnBack),
-      meanPlateTemperature: field.mean(cutTime),
+      meanPlateTemperature: decided.meanAtEnd,
       cutTime,
     },
   };
