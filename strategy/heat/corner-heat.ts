@@ -32,10 +32,13 @@ export function cornerHeat(question: ReturnQuestion, leftOut: number): CornerHea
   const alpha = diffusivity(properties);
   // of a loop the last stretch is its way back, whose walls are the slug's and the skeleton's
   const { counted, arrival } = withoutLast(travelledTo(question), treatment.kind === 'loop' ? 0 : leftOut);
-  const walls = counted.map((piece) => ({
-    ...piece,
-    segment: partWall(piece.segment, kerfWidth, frontLead(kerfWidth, speedOf(piece), alpha)),
-  }));
+  // a piece of no length has no direction, and no heat
+  const walls = counted
+    .filter(({ from, to }) => to > from)
+    .map((piece) => ({
+      ...piece,
+      segment: partWall(piece.segment, kerfWidth, frontLead(kerfWidth, speedOf(piece), alpha)),
+    }));
   const loop = treatment.kind === 'loop' ? (treatment.loop.length - treatment.loop.extension) / feed : 0;
   const wait = treatment.kind === 'dwell' ? treatment.duration : 0;
   return {
