@@ -73,18 +73,18 @@ export const machineProfileSchema = z.strictObject({
     width: quantity(0.1, 20, '0.1 to 20 m'),
     shuttleTable: z.boolean(),
   }),
-  // not in profiles that were kept before there were these two
+  // not in profiles that were kept before there were these two; null where nobody knows
   heights: z
     .strictObject({
-      travel: quantity(0, 0.5, '0 to 500 mm'),
-      speed: quantity(1 * mm, 5, '0.06 to 300 m/min'),
-      acceleration: quantity(0.01, 100, '0.01 to 100 m/s²'),
+      travel: quantity(0, 0.5, '0 to 500 mm').nullish(),
+      speed: quantity(1 * mm, 5, '0.06 to 300 m/min').nullish(),
+      acceleration: quantity(0.01, 100, '0.01 to 100 m/s²').nullish(),
     })
     .optional(),
   loading: z
     .strictObject({
-      time: quantity(0, 36_000, '0 to 10 h'),
-      exchange: quantity(0, 3600, '0 to 1 h'),
+      time: quantity(0, 36_000, '0 to 10 h').nullish(),
+      exchange: quantity(0, 3600, '0 to 1 h').nullish(),
     })
     .optional(),
   smallestArc: quantity(0, 50 * mm, '0 to 50 mm'),

@@ -29,9 +29,13 @@ export type MachineProfile = {
   };
   readonly bed: { readonly length: number; readonly width: number; readonly shuttleTable: boolean }; // m
   /** How the head moves up and down: its height above the plate while it travels, m, and how fast. An own default where it is not known. */
-  readonly heights?: { readonly travel: number; readonly speed: number; readonly acceleration: number } | undefined; // m, m/s, m/s²
+  readonly heights?: {
+    readonly travel?: number | null | undefined; // m
+    readonly speed?: number | null | undefined; // m/s
+    readonly acceleration?: number | null | undefined; // m/s²
+  };
   /** How a plate gets onto the machine: clearing and loading a table, s, and with a second one the swap, s. An own default likewise. */
-  readonly loading?: { readonly time: number; readonly exchange: number } | undefined;
+  readonly loading?: { readonly time?: number | null | undefined; readonly exchange?: number | null | undefined };
   /** Smallest arc the machine follows at cutting feed, m. */
   readonly smallestArc: number;
 };

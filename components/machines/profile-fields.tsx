@@ -3,6 +3,7 @@ import { profileText } from '@/components/text/machines.ts';
 import { Columns } from '@/components/ui/columns.tsx';
 import { FormNumber, FormTick } from '@/components/ui/form-fields.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
+import { Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { Dimension } from '@/strategy/units/index.ts';
 import type { MachineFormIn, MachineFormOut } from './machine-form.tsx';
@@ -16,9 +17,10 @@ type Row = {
   readonly hint?: string;
   /** Where it is never given in the person's usual one. */
   readonly unit?: string;
+  readonly optional?: boolean;
 };
 
-const { source, optics, standoff, oxygen, axes, bed } = profileText;
+const { source, optics, standoff, oxygen, axes, bed, heights, loading } = profileText;
 
 const sourceRows: readonly Row[] = [
   { name: 'profile.source.maxPower', dimension: 'power', ...source.maxPower },
@@ -54,6 +56,14 @@ const bedRows = (metres: 'm' | 'ft'): readonly Row[] => [
   { name: 'profile.bed.width', dimension: 'length', unit: metres, ...bed.width },
 ];
 
+const heightRows: readonly Row[] = [
+  { name: 'profile.heights.travel', dimension: 'length', optional: true, ...heights.travel },
+  { name: 'profile.heights.speed', dimension: 'speed', unit: 'm/min', optional: true, ...heights.speed },
+  { name: 'profile.heights.acceleration', dimension: 'acceleration', optional: true, ...heights.acceleration },
+  { name: 'profile.loading.time', dimension: 'time', optional: true, ...loading.time },
+  { name: 'profile.loading.exchange', dimension: 'time', optional: true, ...loading.exchange },
+];
+
 /** Every number of the profile but the focus dial's, in groups from the source to the bed. */
 export function ProfileFields({ control }: Bound) {
   const metres = useUnitSystem() === 'metric' ? 'm' : 'ft';
@@ -76,6 +86,10 @@ export function ProfileFields({ control }: Bound) {
       <Panel title={bed.title}>
         <Columns>{numbers(bedRows(metres))}</Columns>
         <FormTick control={control} name="profile.bed.shuttleTable" label={bed.shuttleTable.label} />
+      </Panel>
+      <Panel title={heights.title}>
+        <Small>{heights.words}</Small>
+        <Columns>{numbers(heightRows)}</Columns>
       </Panel>
     </>
   );

@@ -13,7 +13,11 @@ export function ProfileView({ profile }: { readonly profile: MachineProfile }) {
   const shown = (value: number, dimension: Dimension, unit?: string) =>
     quantityText(value, dimension, system, unit === undefined ? {} : { unit }).text;
   const metres = system === 'metric' ? 'm' : 'ft';
-  const { source, optics, focusScale, standoff, oxygen, axes, bed } = profileText;
+  const { source, optics, focusScale, standoff, oxygen, axes, bed, heights, loading } = profileText;
+  const given = (label: string, value: number | null | undefined, dimension: Dimension, unit?: string) => ({
+    label,
+    value: value === undefined || value === null ? profileText.notGiven : shown(value, dimension, unit),
+  });
   return (
     <Columns least={340}>
       <Panel title={focusScale.title}>
@@ -88,6 +92,17 @@ export function ProfileView({ profile }: { readonly profile: MachineProfile }) {
               label: bed.tables,
               value: profile.bed.shuttleTable ? machinesText.shuttle : machinesText.noShuttle,
             },
+          ]}
+        />
+      </Panel>
+      <Panel title={heights.title}>
+        <Facts
+          items={[
+            given(heights.travel.label, profile.heights?.travel, 'length'),
+            given(heights.speed.label, profile.heights?.speed, 'speed', 'm/min'),
+            given(heights.acceleration.label, profile.heights?.acceleration, 'acceleration'),
+            given(loading.time.label, profile.loading?.time, 'time'),
+            given(loading.exchange.label, profile.loading?.exchange, 'time'),
           ]}
         />
       </Panel>

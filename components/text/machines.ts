@@ -111,6 +111,18 @@ export const profileText = {
     width: { label: 'Width' },
     shuttleTable: { label: 'A second table is loaded while the first is cut' },
   },
+  notGiven: 'not given',
+  heights: {
+    title: 'Head up and down, and loading',
+    words: 'Only estimates of time need these. Left empty, own assumptions stand for them.',
+    travel: { label: 'Height while it travels', hint: 'Nozzle above the plate; 15 mm where nothing is given' },
+    speed: { label: 'Speed up and down', hint: '9 m/min where nothing is given' },
+    acceleration: { label: 'Acceleration up and down', hint: '2 m/s² where nothing is given' },
+  },
+  loading: {
+    time: { label: 'Clearing a table and loading it', hint: '300 s where nothing is given' },
+    exchange: { label: 'Swapping the tables', hint: '30 s where nothing is given' },
+  },
 } as const;
 
 export const nozzleText = {

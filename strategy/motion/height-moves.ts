@@ -1,3 +1,4 @@
+import type { MachineProfile } from '../machine.ts';
 import { sCurveMove } from './rest-to-rest.ts';
 
 /** How the head moves up and down between cuts. Heights of the nozzle above the plate's top, m. */
@@ -19,6 +20,20 @@ export type HeightMoves = {
  * as it feels for the plate on its way down. Own choice, no source.
  */
 export const heightDefaults = { travel: 15e-3, speed: 0.15, acceleration: 2 } as const;
+
+/** How a machine moves its head, m, m/s, m/s² and m/s³: as its profile says, else as `heightDefaults`; its jerk is that of its axes. */
+export function heightMoves(
+  { heights, axes }: Pick<MachineProfile, 'heights' | 'axes'>,
+  standoffs: Pick<HeightMoves, 'pierceFrom' | 'pierceTo' | 'cut'>,
+): HeightMoves {
+  return {
+    travel: heights?.travel ?? heightDefaults.travel,
+    speed: heights?.speed ?? heightDefaults.speed,
+    acceleration: heights?.acceleration ?? heightDefaults.acceleration,
+    jerk: axes.jerk,
+    ...standoffs,
+  };
+}
 
 /** Time from one height to another, s, from rest to rest. Throws RangeError for a speed or an acceleration that is not positive. */
 export const heightTime = (from: number, to: number, { speed, acceleration, jerk }: HeightMoves): number =>

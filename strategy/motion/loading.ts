@@ -1,3 +1,5 @@
+import type { MachineProfile } from '../machine.ts';
+
 /** How a plate gets onto the machine and off it. */
 export type Loading = {
   /** Clearing a table of what was cut and laying the next plate on it, s. */
@@ -10,6 +12,13 @@ export type Loading = {
 
 /** Some minutes with a crane, and a swap of the tables in half a minute. Own choice, no source: plants differ by far more. */
 export const loadingDefaults = { time: 300, exchange: 30 } as const;
+
+/** How a machine is loaded, s: as its profile says, else as `loadingDefaults`. */
+export const loadingOf = ({ loading, bed }: Pick<MachineProfile, 'loading' | 'bed'>): Loading => ({
+  time: loading?.time ?? loadingDefaults.time,
+  exchange: loading?.exchange ?? loadingDefaults.exchange,
+  shuttleTable: bed.shuttleTable,
+});
 
 /** What loading costs a plate, s: how much of it hides behind the cut, and how much the machine stands for it. */
 export type LoadingCost = { readonly hidden: number; readonly added: number };
