@@ -58,18 +58,22 @@ describe('the form of a machine', () => {
         }}
       />,
     );
-    const type = async (label: string, text: string) => {
+    const type = async (label: string | RegExp, text: string) => {
       await userEvent.clear(field(label));
       await userEvent.type(field(label), text);
     };
     await type('Greatest peak power', '6000 W');
     await type('Greatest pressure', '87 psi');
     await type('Greatest standoff', '1 1/2 in');
+    await type(/^Height while it travels/, '20');
     await userEvent.click(screen.getByRole('button', { name: 'Add' }));
     await waitFor(() => expect(given).not.toBeNull());
     expect(given).toHaveProperty('profile.source.maxPower', 6000);
     expect(given).toHaveProperty('profile.standoff.max', expect.closeTo(0.0381, 12));
     expect(given).toHaveProperty('profile.oxygen.maxPressure', expect.closeTo(599_844, -1));
+    // what only estimates need may stay empty
+    expect(given).toHaveProperty('profile.heights.travel', expect.closeTo(0.02, 12));
+    expect(given).not.toHaveProperty('profile.loading.time', expect.anything());
   });
 
   it('puts what the server said on its fields, and keeps what was typed', async () => {

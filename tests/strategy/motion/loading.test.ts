@@ -1,6 +1,6 @@
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { loadingCost } from '../../../strategy/motion/index.ts';
+import { heightDefaults, heightMoves, loadingCost, loadingDefaults, loadingOf } from '../../../strategy/motion/index.ts';
 
 describe('loading a plate', () => {
   it('costs all of its time without a second table', () => {
@@ -26,5 +26,25 @@ describe('loading a plate', () => {
       }),
     );
     expect(() => loadingCost(-1, { time: 1, exchange: 1, shuttleTable: true })).toThrow(/cut -1 s/);
+  });
+});
+
+describe('what a machine’s profile says', () => {
+  const bed = { length: 3, width: 1.5, shuttleTable: true };
+  const axes = { maxFeed: 1, acceleration: 8, jerk: 80 };
+  const standoffs = { pierceFrom: 0.01, pierceTo: 0.004, cut: 0.001 };
+
+  it('of loading and of the head’s moves goes before what is assumed, number by number', () => {
+    expect(loadingOf({ bed })).toEqual({ ...loadingDefaults, shuttleTable: true });
+    expect(loadingOf({ bed, loading: { time: 120, exchange: null } })).toEqual({
+      time: 120,
+      exchange: loadingDefaults.exchange,
+      shuttleTable: true,
+    });
+    expect(heightMoves({ axes }, standoffs)).toEqual({ ...heightDefaults, ...standoffs, jerk: 80 });
+    expect(heightMoves({ axes, heights: { travel: null, speed: 0.3 } }, standoffs)).toMatchObject({
+      travel: heightDefaults.travel,
+      speed: 0.3,
+    });
   });
 });
