@@ -1,6 +1,12 @@
 import * as fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { heightDefaults, heightMoves, loadingCost, loadingDefaults, loadingOf } from '../../../strategy/motion/index.ts';
+import {
+  heightDefaults,
+  heightMoves,
+  loadingCost,
+  loadingDefaults,
+  loadingOf,
+} from '../../../strategy/motion/index.ts';
 
 describe('loading a plate', () => {
   it('costs all of its time without a second table', () => {
