@@ -59,9 +59,9 @@ export type SetCase = CornerCase & {
 const degrees = Math.PI / 180;
 const perMinute = 1 / 60;
 
-/** The seeded set: corners from 30° to 150°, plates of 10 to 30 mm, feeds of 0.4 to 2 m/min, every treatment, cold and preheated. Always the same. */
-export function cornerSet(): SetCase[] {
-  const random = seededNumbers(20261201);
+/** The seeded set: corners from 30° to 150°, plates of 10 to 30 mm, feeds of 0.4 to 2 m/min, every treatment, cold and preheated. The same for the same seed. */
+export function cornerSet(seed = 20261201): SetCase[] {
+  const random = seededNumbers(seed);
   const between = (low: number, high: number): number => low + (high - low) * random();
   const rounded = (value: number, step: number): number => Number((Math.round(value / step) * step).toPrecision(9));
   const set: SetCase[] = [];

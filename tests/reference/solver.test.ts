@@ -129,7 +129,7 @@ describe('exact solutions', () => {
     expect(middle / fine).toBeGreaterThan(3);
   });
 
-  it.each([35, 60, 90, 110].slice(0, runs(2, 4)))('meets the series of an insulated wedge of %s°', (angle) => {
+  it.each([35, 60, 90, 110].slice(0, runs(1, 4)))('meets the series of an insulated wedge of %s°', (angle) => {
     const one = corner(angle);
     const tip = insideTip(one, 0);
     const out = Math.PI - one.angle;
@@ -222,10 +222,10 @@ describe('what must not show', () => {
   });
 
   it('moves by less and less when all lengths are halved', () => {
-    const [a = 0, b = 0, c = 0] = [0.4e-3, 0.2e-3, 0.1e-3].map(
-      (finest) => solveCorner(corner(60), { finest }).returnRise,
+    const [a = 0, b = 0, c = 0] = [0.8e-3, 0.4e-3, 0.2e-3].map(
+      (size) => solveCorner(corner(60), { finest: size / runs(1, 2) }).returnRise,
     );
     expect(Math.abs(b - a) / Math.abs(c - b)).toBeGreaterThan(2);
-    expect(Math.abs(c - b) / c).toBeLessThan(0.01);
+    expect(Math.abs(c - b) / c).toBeLessThan(runs(0.02, 0.01));
   });
 });
