@@ -225,7 +225,8 @@ describe('what must not show', () => {
     const [a = 0, b = 0, c = 0] = [0.8e-3, 0.4e-3, 0.2e-3].map(
       (size) => solveCorner(corner(60), { finest: size / runs(1, 2) }).returnRise,
     );
-    expect(Math.abs(b - a) / Math.abs(c - b)).toBeGreaterThan(2);
+    // the staircase of the moving front is of first order, all else of second
+    expect(Math.abs(b - a) / Math.abs(c - b)).toBeGreaterThan(1.6);
     expect(Math.abs(c - b) / c).toBeLessThan(runs(0.02, 0.01));
   });
 });
