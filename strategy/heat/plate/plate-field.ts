@@ -29,8 +29,10 @@ export type PlateField = {
   at(point: Point, time: number): number;
   /** Temperature, K, at a place at `time` of the plate's own and of all heat let go before `since`, s; nothing after counts. */
   background(point: Point, since: number, time: number): number;
-  /** The latest `since` up to a time for which `background` needs nothing but the grid once some seconds are gone; −∞ when there is none. */
+  /** The latest `since` up to a time for which `background` needs nothing but the grid once `settles` is gone; −∞ when there is none. */
   splitBefore(time: number): number;
+  /** How long before a time `since` must be for `background` to need nothing but the grid, s; a little more as moments are kept. */
+  readonly settles: number;
   /** Where and when the settled heat was hottest. */
   readonly hottest: { readonly temperature: number; readonly at: Point; readonly time: number };
   /** Mean temperature of the plate, K. */
@@ -166,6 +168,7 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
       const k = Math.min(kept.length - 1, Math.floor((time + age) / cadence + 1e-9));
       return k > 0 && time > 0 ? k * cadence - age : -Infinity;
     },
+    settles: age + readAge,
     get hottest() {
       hottest ??= hottestOf(grid, kept);
       const { rise: most, at, time } = hottest;
