@@ -1,5 +1,6 @@
 import { dialForFocus, focusForDial } from '../beam/index.ts';
 import type { MachineProfile } from '../machine.ts';
+import { COLD_PLATE_TEMPERATURE, kerfConductionHeat } from '../steel/index.ts';
 import type { CornerRules, CutConditions } from './rules.ts';
 
 /** Share of the laser's power that the cut takes up; own choice, to be fitted by test cuts. */
@@ -8,12 +9,10 @@ const ABSORBED = 0.6;
 const MELT_ENERGY = 12e9;
 /** Above this the oxidation front lags behind, m/s (about 2 m/min). */
 const FASTEST = 2 / 60;
-/** Heat left in the plate per area of cut face, J/m²: conduction out of a 0.6 mm kerf in 20 mm plate at 1 m/min. */
-const HEAT_INTO_PLATE = 6.5e6;
 
 /**
  * Conditions of the straight cut to start a new strategy from, SI, for a thickness in m, within the machine's limits. The feed follows
- * from the energy to melt the kerf, v = P / (e·w·d); pressure, standoff and focus are common practice, no source. RangeError for a
+ * from the energy to melt the kerf, v = P / (e·w·d), and the heat into the plate from what such a kerf loses by conduction (`kerfConductionHeat`); pressure, standoff and focus are common practice, no source. RangeError for a
  * thickness that is not positive.
  */
 export function cutConditionDefaults(profile: MachineProfile, thickness: number): CutConditions {
@@ -26,6 +25,7 @@ export function cutConditionDefaults(profile: MachineProfile, thickness: number)
     Math.min(FASTEST, profile.axes.maxFeed),
   );
   const standoff = within(1.2e-3, profile.standoff.min, profile.standoff.max);
+  const heat = kerfConductionHeat({ feed, kerfWidth, plateTemperature: COLD_PLATE_TEMPERATURE });
   return {
     feed: rounded(feed, 10e-3 / 60),
     peakPower,
@@ -35,7 +35,7 @@ export function cutConditionDefaults(profile: MachineProfile, thickness: number)
     standoff,
     focusPosition: reachable(profile, 3e-3, standoff),
     kerfWidth,
-    heatIntoPlate: HEAT_INTO_PLATE,
+    heatIntoPlate: rounded(heat, 0.1e6),
   };
 }
 

@@ -4,8 +4,8 @@ import { segmentLength, segmentStart } from '../path/segment.ts';
 import type { CornerHeat } from './corner-heat.ts';
 import { cornerHeat, cornerRise } from './corner-heat.ts';
 import { travelledAfter } from './corner-way.ts';
-import { diffusivity } from './properties.ts';
 import { frontLead } from './part-wall.ts';
+import { diffusivity } from './properties.ts';
 import type { ReturnQuestion } from './return-question.ts';
 import { checkReturnQuestion, measuringDepth, roundOf } from './return-question.ts';
 import { measuringPlace } from './return-temperature.ts';
@@ -59,6 +59,7 @@ export function historyOf(question: ReturnQuestion): TipHistory {
   const { corner, cut } = question;
   // the finished tip lies this much further along the second edge than the path's corner
   const tip = cut.kerfWidth / 2 / Math.tan(corner.angle / 2);
+  const coming = Math.max(0, tip - heat.tip.start);
   const alpha = diffusivity(heat.properties);
   let time = heat.begins;
   const edge: EdgeStretch[] = [];
@@ -68,7 +69,8 @@ export function historyOf(question: ReturnQuestion): TipHistory {
     // before that the front is in the first edge's kerf and only partly in steel
     const skipped = Math.min(length, Math.max(0, -start));
     const end = time + length / feed;
-    const lead = frontLead(cut.kerfWidth, feed, alpha);
+    // what carries the heat of a straight cut ahead begins at the tip itself
+    const lead = Math.max(0, frontLead(cut.kerfWidth, feed, alpha) - coming);
     const [from, to] = [start + skipped + lead, start + length + lead];
     if (skipped < length) edge.push({ from, to, start: time + skipped / feed, end, powerPerLength: power });
     time = end;

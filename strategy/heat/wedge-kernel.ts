@@ -7,7 +7,7 @@ const REACH = 5.8;
 /** So near to grazing the tip an image counts half and nothing is diffracted, rad. */
 const GRAZING = 1e-9;
 
-/** Below this argument the series of Bessel functions needs few terms. */
+/** Below this argument, more for a sharp wedge, the series of Bessel functions needs few terms. */
 const SMALL = 0.6;
 
 /**
@@ -30,7 +30,7 @@ export const bisectorKernel = (angle: number, z: number): number =>
 
 /** ν·[I₀(z) + 2ΣI_mν(z)·cos(mνφ)]·e^(−z) for ν = π/β. */
 function oneSided(order: number, phi: number, z: number): number {
-  if (z < SMALL) return smallSeries(order, phi, z);
+  if (z < Math.max(SMALL, (order * order) / 40)) return smallSeries(order, phi, z);
   const period = (2 * Math.PI) / order; // 2β
   let seen = 0;
   const first = Math.ceil((-Math.PI - phi) / period - 1e-9);
@@ -59,9 +59,9 @@ function diffracted(order: number, x: number, z: number): number {
   const sine = Math.sin(x);
   const halfSine = Math.sin(x / 2);
   const width = 1 / Math.sqrt(z);
-  // the poles left over lie 2π/ν and more off the path, and past 16/ν nothing is left
-  const step = Math.min(STEP * width, 2.5 / order);
-  const reach = Math.min(REACH * width, 2 * Math.sinh(Math.min(10 / order, 3)));
+  // the poles left over lie 2π/ν and more off the path, the branch points of sinh⁻¹ 2
+  const step = Math.min(STEP * width, 0.75, 1.6 / order);
+  const reach = REACH * width;
   const near = poleAt(Math.abs(x), order);
   const far = poleAt(2 * Math.PI - Math.abs(x), order);
   const weight = (2 / order) * Math.sign(x);
@@ -70,13 +70,16 @@ function diffracted(order: number, x: number, z: number): number {
     const u = i * step;
     const s = Math.sinh(order * Math.asinh(u / 2));
     const whole = sine / (2 * (s * s + halfSine * halfSine)) / Math.sqrt(1 + (u * u) / 4);
-    const poles = weight * (near / (u * u + near * near) - (far > 0 ? far / (u * u + far * far) : 0));
+    const poles = weight * (lorentz(near, u) - lorentz(far, u));
     sum += (i === 0 ? 0.5 : 1) * Math.exp((-z * u * u) / 2) * (whole - poles);
   }
   // ∫₀^∞ e^(−zu²/2)/(u² + a²) du = π/(2a)·e^(za²/2)·erfc(a√(z/2))
-  const atPole = (a: number) => (Math.PI / 2) * erfcScaled(a * Math.sqrt(z / 2));
-  return step * sum + weight * (atPole(near) - (far > 0 ? atPole(far) : 0));
+  const atPole = (a: number) => (a > 0 ? (Math.PI / 2) * erfcScaled(a * Math.sqrt(z / 2)) : 0);
+  return step * sum + weight * (atPole(near) - atPole(far));
 }
+
+/** a/(u² + a²), or nothing for a pole that is left where it is. */
+const lorentz = (a: number, u: number): number => (a > 0 ? a / (u * u + a * a) : 0);
 
 /** Place of a pole on the imaginary axis of u = 2 sinh(y/2), for the angle it stands for; 0 for one so far off that it does not matter. */
 const poleAt = (x: number, order: number): number => (x < Math.PI * order ? 2 * Math.sin(x / (2 * order)) : 0);

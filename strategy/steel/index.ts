@@ -1,4 +1,5 @@
 export { carbonEquivalentCet, carbonEquivalentCev, type SteelAnalysis } from './carbon-equivalent.ts';
+export { coolingTimes, type CoolingTimes, cutEdgeCoolingTime, type HeatLine } from './cooling-time.ts';
 export { LEDGER_BURNT_SHARE, LEDGER_LASER, LEDGER_TOTAL } from './energy-ledger.ts';
 export {
   COLD_PLATE_TEMPERATURE,
