@@ -138,5 +138,14 @@ export function cornerSet(seed = 20261201): SetCase[] {
   put('standard', 90, tangent(90), standard);
   put('standard', 90, { kind: 'dwell', duration: 2 }, standard);
   put('standard', 180, { kind: 'leave' }, standard);
+  // an ease that leaves less, or more, per metre than the straight cut, and a wait at a rounded corner
+  for (const [angle, feedShare, powerShare] of [
+    [45, 0.6, 0.3],
+    [80, 0.5, 0.35],
+    [115, 0.3, 0.5],
+  ] as const) {
+    put('ease', angle, { kind: 'ease', length: mm(3, 8), feedShare, powerShare });
+  }
+  for (const angle of [50, 95]) put('round', angle, { kind: 'dwell', duration: 1.5 }, { round: mm(1, 2) });
   return set;
 }
