@@ -1,5 +1,13 @@
-import type { PlateProperties } from '../../strategy/heat/index.ts';
-import { cutEndWake, heatedPath, pathRise, returnOf } from '../../strategy/heat/index.ts';
+import type { PlateProperties, ReturnQuestion, ReturnTreatment } from '../../strategy/heat/index.ts';
+import {
+  cornerFactor,
+  cutEndWake,
+  cutWakePeak,
+  heatedPath,
+  pathRise,
+  returnOf,
+  straightEdgeReturn,
+} from '../../strategy/heat/index.ts';
 import type { LoopCorner, Point } from '../../strategy/path/index.ts';
 import {
   cornerInward,
@@ -212,6 +220,107 @@ outsideChecks('heat of a corner in a plate without a kerf', [
     expected,
     tolerance: { rel: 1e-4 },
     source: SUPERPOSED,
+    standing: FORMULA,
+  })),
+]);
+
+const BULK =
+  'Di Pietro and Yao, ICALEO 1996, abstract: corners and cutting up to an earlier kerf heat the bulk; power that follows the front helps';
+const shopCut = { feed: v, kerfWidth: 6e-4, heatIntoPlate: 6.5e6 };
+const risesAt = (
+  degrees: number,
+  more: Pick<ReturnQuestion, 'before'> & { treatment?: ReturnTreatment } = {},
+): number =>
+  returnOf({
+    corner: tip(degrees),
+    treatment: { kind: 'leave' },
+    cut: shopCut,
+    plateTemperature: 293.15,
+    ...more,
+  }) - 293.15;
+/** How far from a cut its peak reaches a rise, m. */
+function reachOf(rise: number): number {
+  let [low, high] = [1e-6, 1];
+  for (let i = 0; i < 60; i++) {
+    const middle = Math.sqrt(low * high);
+    if (cutWakePeak(6e6, middle, plate).rise > rise) low = middle;
+    else high = middle;
+  }
+  return low;
+}
+
+outsideChecks('heat of a corner, bulk and preheat', [
+  ...(
+    [
+      [180, 40.9306312811],
+      [90, 81.8612625623],
+      [60, 122.791893843],
+      [45, 163.722525125],
+    ] as const
+  ).map(([degrees, expected]): OutsideCheck => ({
+    id: `K06-${degrees}`,
+    what: `tip of ${degrees}° with both edges open, 2 s after the front came to it`,
+    unit: 'K',
+    got: () =>
+      cornerFactor(rad(degrees)) *
+      pathRise(heatedPath([lineBetween({ x: -0.1, y: 0 }, { x: 0, y: 0 })], v, -2, q), { x: 0, y: 0 }, 0, plate),
+    expected,
+    tolerance: { rel: 1e-5 },
+    source: `${SUPERPOSED}, times π/β`,
+    standing: FORMULA,
+  })),
+  {
+    id: 'K09-corner',
+    what: 'a corner of 60° returns hotter than a straight edge: ratio of the rises',
+    unit: '',
+    got: () => risesAt(60) / (straightEdgeReturn(shopCut, 293.15) - 293.15),
+    expected: 1,
+    tolerance: { bound: 'at least' },
+    source: BULK,
+    standing: 'published',
+  },
+  {
+    id: 'K09-strip',
+    what: 'a corner 5 mm from an edge just cut returns hotter than a lone one: ratio of the rises',
+    unit: '',
+    got: () =>
+      risesAt(90, {
+        before: [
+          lineBetween({ x: -0.2, y: 5e-3 }, { x: -5e-3, y: 5e-3 }),
+          lineBetween({ x: -5e-3, y: 5e-3 }, { x: -5e-3, y: 0 }),
+          lineBetween({ x: -5e-3, y: 0 }, { x: 0, y: 0 }),
+        ],
+      }) / risesAt(90, { before: [lineBetween({ x: -5e-3, y: 0 }, { x: 0, y: 0 })] }),
+    expected: 1,
+    tolerance: { bound: 'at least' },
+    source: BULK,
+    standing: 'published',
+  },
+  {
+    id: 'K09-power',
+    what: 'power that falls towards the corner with the feed leaves the tip cooler: ratio of the rises',
+    unit: '',
+    got: () =>
+      risesAt(60, { treatment: { kind: 'ease', length: 5e-3, feedShare: 0.4, powerShare: 0.4 } }) / risesAt(60),
+    expected: 1,
+    tolerance: { bound: 'at most' },
+    source: BULK,
+    standing: 'published',
+  },
+  ...(
+    [
+      [960, 200, 1.23684210526],
+      [960, 400, 1.67857142857],
+      [1371, 400, 1.39134912461],
+    ] as const
+  ).map(([ignition, preheat, expected]): OutsideCheck => ({
+    id: `K10-${ignition}-${preheat}`,
+    what: `zone above ${ignition} °C beside a fast cut of a plate at ${preheat} °C against one at 20 °C`,
+    unit: '',
+    got: () => reachOf(ignition - preheat) / reachOf(ignition - 20),
+    expected,
+    tolerance: { rel: 1e-6 },
+    source: 'peak beside a fast cut falls as one over the distance: Rykalin, from the plane source',
     standing: FORMULA,
   })),
 ]);

@@ -1,6 +1,8 @@
 import {
   carbonEquivalentCet,
   carbonEquivalentCev,
+  coolingTimes,
+  cutEdgeCoolingTime,
   IRON_FUSION_HEAT,
   IRON_LIQUID_ENTHALPY,
   IRON_MELTING_TEMPERATURE,
@@ -172,6 +174,16 @@ outsideChecks('melting of iron', [
     unit: 'K',
     got: () => IRON_MELTING_TEMPERATURE,
     expected: 1811,
+    tolerance: { rel: 0.005 },
+    source: CRC,
+    standing: 'memory',
+  },
+  {
+    id: 'M10-fusion',
+    what: 'latent heat of fusion of iron per mole (55.845 g/mol)',
+    unit: 'kJ/mol',
+    got: () => IRON_FUSION_HEAT * 55.845e-6,
+    expected: 13.81,
     tolerance: { rel: 0.005 },
     source: CRC,
     standing: 'memory',
@@ -371,6 +383,66 @@ outsideChecks('heat a kerf leaves in the plate', [
   },
   ...(
     [
+      [0.2, 1.712],
+      [0.5, 2.112],
+      [1, 2.514],
+      [2, 3.037],
+      [3, 3.411],
+      [5, 3.969],
+    ] as const
+  ).map(([peclet, expected]): OutsideCheck => ({
+    id: `H30-${peclet}`,
+    what: `net heat of a moving kerf at Pe ${peclet}`,
+    unit: '',
+    got: () => kerfConductionFactor(peclet),
+    expected,
+    tolerance: { rel: 0.01 },
+    source:
+      'front half-circle at melting, insulated walls: own finite volumes on two grids, extrapolated; the table is kept',
+    standing: FORMULA,
+  })),
+  ...(
+    [
+      [0.2, 1.19],
+      [0.5, 1.61],
+      [1, 2.057],
+      [2, 2.636],
+      [5, 3.648],
+      [10, 4.647],
+    ] as const
+  ).map(([peclet, expected]): OutsideCheck => ({
+    id: `H31-${peclet}`,
+    what: `at Pe ${peclet} more than a whole moving cylinder held at melting leaves, whose walls behind take heat back`,
+    unit: '',
+    got: () => kerfConductionFactor(peclet),
+    expected,
+    tolerance: { bound: 'at least' },
+    source: 'separation of variables, series of Bessel functions: Carslaw and Jaeger, ch. 13',
+    standing: FORMULA,
+  })),
+  ...(
+    [
+      [100, 0.947229551451],
+      [200, 0.881266490765],
+      [300, 0.815303430079],
+      [400, 0.749340369393],
+    ] as const
+  ).map(([celsius, expected]): OutsideCheck => {
+    const heat = (t: number) =>
+      kerfConductionHeat({ feed: 1 / 60, kerfWidth: 0.6e-3, plateTemperature: kelvinFromCelsius(t) });
+    return {
+      id: `K04-${celsius}`,
+      what: `conduction out of the kerf of a plate at ${celsius} °C against one at 20 °C`,
+      unit: '',
+      got: () => heat(celsius) / heat(20),
+      expected,
+      tolerance: { rel: 1e-4 },
+      source: '(Tm − Tp)/(Tm − T0) with melting at 1536 °C; conduction is linear',
+      standing: FORMULA,
+    };
+  }),
+  ...(
+    [
       [0.5, 2.42838976879],
       [1, 3.11665831864],
       [2, 4],
@@ -422,3 +494,46 @@ outsideChecks(
     },
   ]),
 );
+
+const EN_COOLING = 'EN 1011-2:2001, annex D, formulas seen through a calculator and a public program';
+
+outsideChecks('cooling from 800 to 500 °C', [
+  ...(
+    [
+      ['W01a', 1, 20, 5.28846153846, 2.84089158037, 14.6586052756],
+      ['W01b', 2, 15, 10.5769230769, 20.2018956827, 20.7303983862],
+    ] as const
+  ).flatMap(([id, input, thickness, thick, thin, transition]): OutsideCheck[] => {
+    const times = () =>
+      coolingTimes({
+        heatPerLength: input * 1e6,
+        plateTemperature: kelvinFromCelsius(20),
+        thickness: thickness * 1e-3,
+      });
+    const row = (what: string, unit: string, got: () => number, expected: number): OutsideCheck => ({
+      id: `${id}-${what.replaceAll(' ', '-')}`,
+      what: `${input} kJ/mm in ${thickness} mm: ${what}`,
+      unit,
+      got,
+      expected,
+      tolerance: { rel: 1e-4 },
+      source: EN_COOLING,
+      standing: FORMULA,
+    });
+    return [
+      row('heat flow in three directions', 's', () => times().thick, thick),
+      row('heat flow in two directions', 's', () => times().thin, thin),
+      row('transition thickness', 'mm', () => times().transition * 1e3, transition),
+    ];
+  }),
+  {
+    id: 'W03',
+    what: 'edge of a 20 mm cut that leaves 2158 W at 1 m/min',
+    unit: 's',
+    got: () => cutEdgeCoolingTime(2158 / (0.02 / 60), kelvinFromCelsius(20)),
+    expected: 0.0476277473437,
+    tolerance: { rel: 1e-3 },
+    source: `${EN_COOLING}; its constants are fitted to arc welds`,
+    standing: FORMULA,
+  },
+]);

@@ -77,9 +77,17 @@ describe('heat a straight cut leaves in the plate', () => {
     );
   });
 
-  it('keeps the last solved value beyond the table', () => {
-    expect(kerfConductionFactor(0.001)).toBe(1.712);
-    expect(kerfConductionFactor(100)).toBe(3.969);
+  it('goes on beyond the table without a step, growing with the Péclet number', () => {
+    for (const [end, factor] of [
+      [0.2, 1.712],
+      [5, 3.969],
+    ] as const) {
+      expect(kerfConductionFactor(end)).toBeCloseTo(factor, 9);
+      for (const by of [0.999999, 1.000001]) expect(kerfConductionFactor(end * by)).toBeCloseTo(factor, 4);
+    }
+    const factors = [1e-3, 0.05, 0.1, 0.2, 1, 5, 8, 20].map((peclet) => kerfConductionFactor(peclet));
+    expect([...factors].sort((one, other) => one - other)).toEqual(factors);
+    expect(new Set(factors).size).toBe(factors.length);
   });
 
   it('is less for a faster cut, a narrower kerf and a hotter plate', () => {
