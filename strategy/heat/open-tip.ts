@@ -38,10 +38,10 @@ export function openTip(corner: LoopCorner, round: number | undefined, kerfWidth
  *
  * While nothing of the second edge is open that is half a plane. Once it is open as far as l from the apex it keeps heat in the tip, a share of what a wedge (Carslaw and Jaeger,
  * ch. 14) gives more than half a plane: ½(1 + erf(b/√4αt)), with which the image in a straight mirror is seen past its end, b from the foot of the place on it (Sommerfeld's penumbra,
- * same chapter), times 1 − exp(−(3π/4β)·l²/4αt) for what has not got out past the end
- * since, the longer the sharper the tip (own choice, like the fading of what an arc adds: both tried on corners other than those of the reference). Of heat that lay too near to the tip to be all within the wedge
- * when the second edge began only the wedge's part of the half plane is kept. An arc, hollow towards the part, adds (√π/8)·√(4αt)/R to what a straight wall would
- * give, the first term for a bent wall (see `loopTurnRise`), fading once heat has spread over its radius, when the wedge says it all.
+ * same chapter), times 1 − exp(−(0.6π/β·l²/4αt)^0.6) for what has not got out past the end since, the longer the sharper the tip. Of heat that lay too near to the tip to be all within
+ * the wedge when the second edge began only the wedge's part of the half plane is kept. An arc, hollow towards the part, adds (√π/8)·√(4αt)/R to what a straight wall would give,
+ * the first term for a bent wall (see `loopTurnRise`), fading as e^(−√(4αt)/2R), when the wedge says it all. The two fadings are own choices, tried on rounds from 20° to 150° of an own
+ * finite-volume solution that is not the reference.
  */
 export function openTipRise(
   walls: readonly HeatedPiece[],
@@ -59,7 +59,7 @@ export function openTipRise(
   const depth = Math.hypot(at.x - apex.x, at.y - apex.y);
   // how far the second edge is open past the place's foot on it
   const opposite = open - depth * Math.cos(angle / 2);
-  const keeping = (0.75 * Math.PI) / angle;
+  const keeping = (0.6 * Math.PI) / angle;
   const outside = 1 - angle / Math.PI;
   const since = Math.max(0, time - begins);
   return weightedPathRise(walls, at, time, plate, (place, age, segment) => {
@@ -70,7 +70,7 @@ export function openTipRise(
     const lost = radius > 0 || since === 0 ? 0 : outside * Math.exp(-square / (alpha4 * (age - since)));
     const width = Math.sqrt(alpha4 * age);
     const inSight = 1 - erfc(opposite / width) / 2;
-    const kept = -inSight * Math.expm1((-keeping * open * open) / (alpha4 * age));
+    const kept = -inSight * Math.expm1(-(((keeping * open * open) / (alpha4 * age)) ** 0.6));
     let weight = 1 + (wedge * (1 - lost) - 1) * kept;
     if (radius > 0 && segment.kind === 'arc') {
       const spread = width / radius;
