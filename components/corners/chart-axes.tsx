@@ -128,19 +128,19 @@ function ScaleBar({ left, from, to, y }: { left: number; from: number; to: numbe
   );
 }
 
-/** The limit: a heavy dashed line with its words above it, out of the way of what is drawn on the left. */
+/** The limit: a heavy dashed line; what it is stands above the chart, out of the way of all that is drawn. */
 export function LimitLine({ space, kelvin, words }: { space: ChartSpace; kelvin: number; words: string }) {
   const { left, right, y, top } = space;
   const at = y(kelvin);
   if (at < top) return null;
+  const dashed = { stroke: roles.hot, strokeWidth: 2, strokeDasharray: '10 4' };
   return (
     <>
-      <Line x1={left} x2={right} y1={at} y2={at} stroke={roles.hot} strokeWidth={2} strokeDasharray="10 4" />
-      {letteringWidth(words) < right - left && (
-        <Lettering x={right} y={at - 6} anchor="end" colour={roles.hot}>
-          {words}
-        </Lettering>
-      )}
+      <Line x1={left} x2={right} y1={at} y2={at} {...dashed} />
+      <Line x1={right - letteringWidth(words) - 42} x2={right - letteringWidth(words) - 6} y1={9} y2={9} {...dashed} />
+      <Lettering x={right} y={14} anchor="end" colour={roles.hot}>
+        {words}
+      </Lettering>
     </>
   );
 }

@@ -2,7 +2,6 @@ import { useMemo, useState } from 'react';
 import { View } from 'react-native';
 import Svg, { Circle, G, Line, Path } from 'react-native-svg';
 import { polylineData } from '@/components/pierce/section-layout.ts';
-import { Lettering } from '@/components/pierce/still-shapes.tsx';
 import { heatChartText } from '@/components/text/heat-charts.ts';
 import { treatmentText } from '@/components/text/corners.ts';
 import { roles } from '@/components/theme/roles.ts';
@@ -48,28 +47,30 @@ export function CoolingChart({ curves, limit, height }: CoolingChartProps) {
       time(curve.back.time),
       hot(curve.back.kelvin),
       hot(curve.peak.kelvin),
-      quantityText(curve.burnBack, 'length', system, { figures: 2 }).text,
+      // less than a hundredth of a millimetre is nothing
+      curve.burnBack < 1e-5 ? null : quantityText(curve.burnBack, 'length', system, { figures: 2 }).text,
     );
   return (
     <Stack gap="xs">
       <View onLayout={(event) => setWidth(Math.round(event.nativeEvent.layout.width) || 360)}>
-        <Svg width={width} height={height} role="img" aria-label={heatChartText.cooling(curves.map(words))}>
+        <Svg
+          width={width}
+          height={height}
+          role="img"
+          aria-label={heatChartText.cooling([...inOrder].reverse().map(words))}
+        >
           <ChartAxes space={space} acrossLabel={heatChartText.sinceCorner} upLabel={heatChartText.atTip} />
           <LimitLine space={space} kelvin={limit} words={heatChartText.limit(hot(limit))} />
           <Line x1={space.x(0)} x2={space.x(0)} y1={space.top} y2={space.bottom} stroke={roles.rule} strokeWidth={1} />
-          <Lettering x={space.x(0) + 4} y={space.top + 12} colour={roles.softInk}>
-            {heatChartText.inCorner}
-          </Lettering>
           {inOrder.map((curve) => (
             <Curve key={curve.treatment} curve={curve} space={space} />
           ))}
-          {inOrder.map((curve) => (
-            <G
-              key={curve.treatment}
-              testID={`cooling-back-${curve.treatment}`}
-              transform={`translate(${space.x(curve.back.time)} ${space.y(curve.back.kelvin)}) scale(0.72)`}
-            >
-              <BadgeShape treatment={curve.treatment} chosen={curve.chosen} />
+          {spread(inOrder, space).map(({ curve, x, y, at }) => (
+            <G key={curve.treatment}>
+              {at !== x && <Path d={`M${at} ${y}H${x}`} stroke={roles.ink} strokeWidth={1} />}
+              <G testID={`cooling-back-${curve.treatment}`} transform={`translate(${x} ${y}) scale(0.72)`}>
+                <BadgeShape treatment={curve.treatment} chosen={curve.chosen} />
+              </G>
             </G>
           ))}
         </Svg>
@@ -90,6 +91,24 @@ export function CoolingChart({ curves, limit, height }: CoolingChartProps) {
       <Small>{heatChartText.coolingNote}</Small>
     </Stack>
   );
+}
+
+/** Room of a shape, px. */
+const shapeRoom = 19;
+
+type Placed = { readonly curve: CoolingCurve; readonly x: number; readonly y: number; readonly at: number };
+
+/** The shapes at the moments of return, those that would lie on another moved along; `at` is where each belongs. The chosen one is drawn last and stays. */
+function spread(curves: readonly CoolingCurve[], space: ChartSpace): readonly Placed[] {
+  const placed: Placed[] = [];
+  for (const curve of [...curves].reverse()) {
+    const [at, y] = [space.x(curve.back.time), space.y(curve.back.kelvin)];
+    let x = at;
+    const lies = (other: Placed) => Math.abs(other.x - x) < shapeRoom && Math.abs(other.y - y) < shapeRoom;
+    while (placed.some(lies) && x < space.right) x += shapeRoom / 2;
+    placed.push({ curve, x, y, at });
+  }
+  return placed.reverse();
 }
 
 function spaceOf(

@@ -49,6 +49,7 @@ export function CornerSheet({
 }: CornerSheetProps) {
   const system = useUnitSystem();
   const length = (metres: number) => quantityText(metres, 'length', system, { figures: 3 }).text;
+  const burnt = (metres: number) => (metres < 1e-5 ? cornerText.notBurnt : length(metres));
   const seconds = (value: number) => quantityText(value, 'time', system, { figures: 3 }).text;
   const hot = (kelvin: number) => quantityText(kelvin, 'temperature', system, { decimals: 0 }).text;
   const share = (value: number) => quantityText(value, 'ratio', system).text;
@@ -59,7 +60,7 @@ export function CornerSheet({
     { label: cornerText.limit, kelvin: plan.limit },
     ...(corner.background == null ? [] : [{ label: cornerText.background, kelvin: corner.background }]),
     ...(corner.peak == null ? [] : [{ label: cornerText.peak, kelvin: corner.peak }]),
-    ...(corner.burnBack == null ? [] : [{ label: cornerText.burnBack, text: length(corner.burnBack) }]),
+    ...(corner.burnBack == null ? [] : [{ label: cornerText.burnBack, text: burnt(corner.burnBack) }]),
     ...(corner.returnTime == null ? [] : [{ label: cornerText.returnTime, text: seconds(corner.returnTime) }]),
     { label: cornerText.added, text: seconds(corner.addedTime) },
     ...(corner.loop
@@ -158,7 +159,10 @@ export function CornerSheet({
           <Body>{asSentence(option.why)}</Body>
           {option.peak != null && (
             <Small>
-              {cornerText.afterwards(hot(option.peak), option.burnBack == null ? null : length(option.burnBack))}
+              {cornerText.afterwards(
+                hot(option.peak),
+                option.burnBack == null || option.burnBack < 1e-5 ? null : length(option.burnBack),
+              )}
             </Small>
           )}
           {onOverride && option.treatment !== corner.treatment && (

@@ -1,6 +1,6 @@
-import { useCallback, useLayoutEffect, useRef, useState } from 'react';
-import { StyleSheet, View } from 'react-native';
-import Svg, { G, Rect } from 'react-native-svg';
+import { useCallback, useLayoutEffect, useRef } from 'react';
+import { G, Rect } from 'react-native-svg';
+import { pathsBox } from '@/components/parts/drawing-geometry.ts';
 import type { DrawingSpace, DrawnSheet } from '@/components/parts/drawing-space.ts';
 import { letteringWidth } from '@/components/pierce/section-layout.ts';
 import { Lettering } from '@/components/pierce/still-shapes.tsx';
@@ -12,7 +12,8 @@ import { quantityText } from '@/strategy/units/index.ts';
 import { HeatCanvas, type HeatPicture } from './heat-canvas.web.tsx';
 import { heatMoment, temperaturesOn, type PlateHeat } from './heat-field.ts';
 import { heatLevels } from './heat-levels.ts';
-import { levelLabels, type LevelLabel } from './heat-paint.ts';
+import { useHeatLabels, type HeatLabels, type PlacedLabel } from './heat-labels.ts';
+import { levelLabels } from './heat-paint.ts';
 import type { RunClock } from './run-clock.ts';
 
 type HeatLayerProps = {
@@ -24,6 +25,8 @@ type HeatLayerProps = {
   plate: readonly { readonly segments: readonly Segment[] }[];
   /** K */
   limit: number;
+  /** Where the figures of its lines are handed to. */
+  labels: HeatLabels;
 };
 
 /** Size of a point of the picture while the time runs and once it rests, px, and what a picture has of them at most. */
@@ -35,13 +38,10 @@ const restTime = 140;
  * The plate's temperature under the lines of the drawing. It has one picture a moment, moved and enlarged with the drawing; a new moment is drawn in the next
  * frame, coarse at first, and none of the page with it.
  */
-export function HeatLayer({ heat, clock, space, sheet, plate, limit }: HeatLayerProps) {
+export function HeatLayer({ heat, clock, space, sheet, plate, limit, labels }: HeatLayerProps) {
   const { name: theme } = useTheme();
   const system = useUnitSystem();
   const picture = useRef<HeatPicture>(null);
-  const [labels, setLabels] = useState<{ of: DrawnSheet; space: DrawingSpace; at: readonly PlacedLabel[] } | null>(
-    null,
-  );
 
   const draw = useCallback(
     (point: number): PlacedLabel[] => {
@@ -69,13 +69,14 @@ export function HeatLayer({ heat, clock, space, sheet, plate, limit }: HeatLayer
         { data: clip, x: sheet.x / across, y: sheet.y / down, scaleX: space.zoom / across, scaleY: space.zoom / down },
       );
       if (point > resting) return [];
-      // the frame is the sheet's middle half; figures keep off its edges
-      const inset = 40 / across;
+      // the frame is the sheet's middle half; figures keep off its edges and the plate's
+      const edge = pathsBox(plate);
+      const [low, high] = [space.at({ x: edge.minX, y: edge.minY }), space.at({ x: edge.maxX, y: edge.maxY })];
       const inside = {
-        left: Math.round(columns / 4 + inset),
-        right: Math.round((3 * columns) / 4 - inset),
-        top: Math.round(rows / 4 + inset / 2),
-        bottom: Math.round((3 * rows) / 4 - inset / 2),
+        left: Math.round(Math.max(sheet.width / 4, low.x + sheet.x) / across + 24 / across),
+        right: Math.round(Math.min((3 * sheet.width) / 4, high.x + sheet.x) / across - 24 / across),
+        top: Math.round(Math.max(sheet.height / 4, high.y + sheet.y) / down + 12 / down),
+        bottom: Math.round(Math.min((3 * sheet.height) / 4, low.y + sheet.y) / down - 12 / down),
       };
       return levelLabels(temperatures, columns, levels, inside, 70 / across).map(({ kelvin, column, row }) => ({
         kelvin,
@@ -92,10 +93,10 @@ export function HeatLayer({ heat, clock, space, sheet, plate, limit }: HeatLayer
     let timer: number | undefined;
     const rest = () => {
       window.clearTimeout(timer);
-      timer = window.setTimeout(() => setLabels({ of: sheet, space, at: draw(resting) }), restTime);
+      timer = window.setTimeout(() => labels.set({ of: sheet, at: draw(resting) }), restTime);
     };
     const change = () => {
-      setLabels(null);
+      labels.set(null);
       frame ??= requestAnimationFrame(() => {
         frame = null;
         draw(running);
@@ -107,28 +108,33 @@ export function HeatLayer({ heat, clock, space, sheet, plate, limit }: HeatLayer
     const leave = clock.subscribe(change);
     return () => {
       leave();
+      labels.set(null);
       window.clearTimeout(timer);
       if (frame !== null) cancelAnimationFrame(frame);
     };
-  }, [draw, clock, space, sheet, theme]);
+  }, [draw, clock, labels, sheet, theme]);
 
+  return <HeatCanvas ref={picture} width={sheet.width} height={sheet.height} />;
+}
+
+/** The figures of the picture's lines, over all other lines. */
+export function HeatFigures({ labels, sheet }: { labels: HeatLabels; sheet: DrawnSheet }) {
+  const system = useUnitSystem();
+  const placed = useHeatLabels(labels);
+  if (placed?.of !== sheet) return null;
   return (
     <>
-      <HeatCanvas ref={picture} width={sheet.width} height={sheet.height} />
-      {labels?.of === sheet && labels.space === space && (
-        <View style={styles.labels}>
-          <Svg width={sheet.width} height={sheet.height} aria-hidden>
-            {labels.at.map(({ kelvin, x, y }) => (
-              <Figure key={`${kelvin} ${x} ${y}`} x={x} y={y} text={quantityText(kelvin, 'temperature', system).text} />
-            ))}
-          </Svg>
-        </View>
-      )}
+      {placed.at.map(({ kelvin, x, y }) => (
+        <Figure
+          key={`${kelvin} ${x} ${y}`}
+          x={x - sheet.x}
+          y={y - sheet.y}
+          text={quantityText(kelvin, 'temperature', system).text}
+        />
+      ))}
     </>
   );
 }
-
-type PlacedLabel = Pick<LevelLabel, 'kelvin'> & { readonly x: number; readonly y: number };
 
 function Figure({ x, y, text }: { x: number; y: number; text: string }) {
   const width = letteringWidth(text) + 6;
@@ -141,5 +147,3 @@ function Figure({ x, y, text }: { x: number; y: number; text: string }) {
     </G>
   );
 }
-
-const styles = StyleSheet.create({ labels: { position: 'absolute', left: 0, top: 0 } });

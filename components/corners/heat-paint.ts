@@ -25,13 +25,13 @@ const table = (() => {
   for (let celsius = 0; celsius <= hottest; celsius++) {
     const opacity = Math.min(1, Math.max(0, (celsius - clear) / (full - clear)));
     // cold steel is light: drawn darker on the way to its first colour, so that a warm plate is seen on paper
-    const channels = temperatureChannels(celsius + zeroCelsius).map((value) => value * (0.82 + 0.18 * opacity));
+    const channels = temperatureChannels(celsius + zeroCelsius).map((value) => value * (0.62 + 0.38 * opacity));
     entries.set([...channels, 235 * opacity], 4 * celsius);
   }
   return entries;
 })();
 
-/** Lines nearer to their neighbours than this can't be told apart and are left out, px. */
+/** Lines nearer to their neighbours than this can't be told apart and are left out, px; up to twice as far they are faint. */
 const closest = 5;
 /** Half the width of a line, px. */
 const half = 0.8;
@@ -63,8 +63,9 @@ export function paintHeat(
       const below = row + 1 < rows ? (temperatures[at + columns] ?? kelvin) : (temperatures[at - columns] ?? kelvin);
       const slope = Math.hypot(right - kelvin, below - kelvin);
       let drawn = 0;
-      if (slope > 1e-4 && (gap[celsius] ?? 0) > closest * slope) {
-        drawn = Math.min(1, Math.max(0, half + 0.5 - Math.abs(kelvin - (level[celsius] ?? Infinity)) / slope));
+      if (slope > 1e-4) {
+        const line = Math.min(1, Math.max(0, half + 0.5 - Math.abs(kelvin - (level[celsius] ?? Infinity)) / slope));
+        drawn = line * Math.min(1, Math.max(0, (gap[celsius] ?? 0) / (closest * slope) - 1));
       }
       if (kelvin > limit && (row + column) % hatch === 0) drawn = Math.max(drawn, 0.55);
       if (drawn > 0) {

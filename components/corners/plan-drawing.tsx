@@ -1,4 +1,4 @@
-import { useMemo, type ReactNode, type Ref } from 'react';
+import { useMemo, useState, type ReactNode, type Ref } from 'react';
 import { StyleSheet, View } from 'react-native';
 import Svg, { Circle, G, Path } from 'react-native-svg';
 import { dotsData } from '@/components/parts/drawing-marks.ts';
@@ -18,7 +18,8 @@ import type { PlateClock } from '@/strategy/motion/index.ts';
 import type { Point } from '@/strategy/path/index.ts';
 import { cornersInward } from './corner-inward.ts';
 import type { PlateHeat } from './heat-field.ts';
-import { HeatLayer } from './heat-layer.tsx';
+import { createHeatLabels } from './heat-labels.ts';
+import { HeatFigures, HeatLayer } from './heat-layer.tsx';
 import { MeasureLayer } from './measure-layer.tsx';
 import { MeasurePanel } from './measure-panel.tsx';
 import { RunLayer, type Dropped } from './run-layer.tsx';
@@ -97,6 +98,7 @@ export function PlanDrawing({
   const edge = useMemo(() => outline ?? (plate ? [{ segments: boxSegments(plate) }] : []), [outline, plate]);
   const inward = useMemo(() => cornersInward(corners, contours), [corners, contours]);
   const marks = useMarks(plan, inward, chosen);
+  const [labels] = useState(createHeatLabels);
 
   const index = corners.findIndex(({ id }) => id === chosen);
   const corner = corners[index];
@@ -130,7 +132,15 @@ export function PlanDrawing({
           heat
             ? (space, sheet) => (
                 <View style={heatOld ? styles.old : undefined}>
-                  <HeatLayer heat={heat} clock={clock} space={space} sheet={sheet} plate={edge} limit={plan.limit} />
+                  <HeatLayer
+                    heat={heat}
+                    clock={clock}
+                    space={space}
+                    sheet={sheet}
+                    plate={edge}
+                    limit={plan.limit}
+                    labels={labels}
+                  />
                 </View>
               )
             : undefined
@@ -140,6 +150,7 @@ export function PlanDrawing({
             <Pierces space={space} path={path} />
             <RunLayer space={space} timeline={timeline} dropped={dropped} clock={clock} />
             {corner && blocked && <InTheWay space={space} from={corner.at} at={blocked.at} />}
+            {heat && <HeatFigures labels={labels} sheet={sheet} />}
             <TipLayer
               corners={corners}
               inward={inward}

@@ -2,6 +2,7 @@ import { useId, useState, type ReactNode } from 'react';
 import { View } from 'react-native';
 import Svg, { Defs, G, Path, Rect } from 'react-native-svg';
 import { HatchPattern } from '@/components/pierce/hatch.tsx';
+import { unbroken } from '@/components/text/common.ts';
 import { summaryText } from '@/components/text/corner-summary.ts';
 import { roles } from '@/components/theme/roles.ts';
 import { Panel } from '@/components/ui/panel.tsx';
@@ -47,7 +48,8 @@ export function PlanSummary({ plan, duration }: PlanSummaryProps) {
   const { corners, burning, cured, trouble } = planSummary(plan);
   if (corners === 0) return null;
   const { addedTime } = plan.totals;
-  const cost = `${addedTime < 0 ? '−' : '+'}${quantityText(Math.abs(addedTime), 'time', system, { figures: 3 }).text}`;
+  const time = unbroken(quantityText(Math.abs(addedTime), 'time', system, { figures: 3 }).text);
+  const cost = `${addedTime < 0 ? '−' : '+'}${time}`;
   const limit = quantityText(plan.limit, 'temperature', system).text;
   const done = treatments.filter((treatment) => treatment !== 'leave' && cured[treatment] > 0);
   return (
@@ -82,7 +84,9 @@ export function PlanSummary({ plan, duration }: PlanSummaryProps) {
         />
       </Row>
       <SummaryBar cured={cured} trouble={trouble} corners={corners} />
-      <Body>{summaryText.sentence({ corners, burning, cured, trouble, cost, limit })}</Body>
+      <Body>
+        {summaryText.sentence({ corners, burning, cured, trouble, limit, cost: summaryText.more(time, addedTime < 0) })}
+      </Body>
     </Panel>
   );
 }

@@ -28,6 +28,7 @@ export function TemperatureScale() {
             <ScaleStep
               from={stop.colour}
               to={named[index + 1]?.colour ?? stop.colour}
+              faint={index === 0}
               name={stop.name}
               figure={quantityText(kelvinFromCelsius(stop.celsius), 'temperature', system).text}
             />
@@ -38,14 +39,23 @@ export function TemperatureScale() {
   );
 }
 
-function ScaleStep({ from, to, name, figure }: { from: string; to: string; name: string; figure: string }) {
+type ScaleStepProps = {
+  from: string;
+  to: string;
+  /** Cold steel leaves the paper as it is, behind a drawing as well. */
+  faint: boolean;
+  name: string;
+  figure: string;
+};
+
+function ScaleStep({ from, to, faint, name, figure }: ScaleStepProps) {
   const id = useId().replace(/\W/g, '');
   return (
     <>
       <Svg width="100%" height={16} aria-hidden>
         <Defs>
           <LinearGradient id={id}>
-            <Stop offset="0" stopColor={from} />
+            <Stop offset="0" stopColor={from} stopOpacity={faint ? 0.15 : 1} />
             <Stop offset="1" stopColor={to} />
           </LinearGradient>
         </Defs>

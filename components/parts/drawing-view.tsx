@@ -466,7 +466,7 @@ const styles = StyleSheet.create({
     borderTopWidth: 1,
     borderTopColor: roles.rule,
   },
-  tools: { flexDirection: 'row', flexWrap: 'wrap', flexGrow: 1, gap: 8 },
+  tools: { flexDirection: 'row', flexWrap: 'wrap', flexGrow: 1, flexShrink: 1, gap: 8 },
   zoom: { flexDirection: 'row', gap: 8 },
   ways: { paddingHorizontal: 12, paddingBottom: 8 },
 });

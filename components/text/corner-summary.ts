@@ -27,6 +27,7 @@ export const summaryText = {
   left: 'still in trouble',
   cost: 'more time',
   costOf: (percent: number) => `more time, ${numberText(percent, 1)} % of the cut as drawn`,
+  more: (time: string, less: boolean) => `${time} ${less ? 'less' : 'more'}`,
   part: (kind: Treatment | 'trouble', corners: number): string =>
     kind === 'trouble'
       ? `${corners} in trouble`

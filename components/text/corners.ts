@@ -29,9 +29,10 @@ export const cornerText = {
   background: 'plate there when the cut comes back',
   peak: 'hottest afterwards',
   burnBack: 'burnt back, estimate',
+  notBurnt: 'not at all',
   returnTime: 'time of return in the cut',
   afterwards: (peak: string, burnBack: string | null) =>
-    `Afterwards at most ${peak}${burnBack === null ? '' : `, hot enough to burn ${burnBack} in`}.`,
+    `Afterwards at most ${peak}${burnBack === null ? '' : `, hot enough to burn ${burnBack} in from the tip`}.`,
   added: 'added time',
   limit: 'limit',
   loopSize: 'loop',

@@ -25,9 +25,8 @@ export const heatChartText = {
   cooling: (lines: readonly string[]): string => `Temperature at the tip against time. ${lines.join(' ')}`,
   sinceCorner: 'time since the cut was in the corner',
   atTip: 'at the tip',
-  inCorner: 'in the corner',
-  curve: (treatment: string, back: string, at: string, peak: string, burnBack: string): string =>
-    `${treatment}: back after ${back} at ${at}; then at most ${peak}, hot enough to burn ${burnBack} in.`,
+  curve: (treatment: string, back: string, at: string, peak: string, burnBack: string | null): string =>
+    `${treatment}: back after ${back} at ${at}; then at most ${peak}${burnBack === null ? '' : `, hot enough to burn ${burnBack} in from the tip`}.`,
   coolingNote:
     'Shapes: the moment of return, with the return temperature, which leaves out the last 2 mm of path. Faint: with the heat of the second edge, up to its peak (small ring). At the place 1.5 mm inside the tip.',
 } as const;

@@ -26,7 +26,7 @@ class HeldWorker {
   }
 }
 const worker = async () => {
-  await waitFor(() => expect(HeldWorker.made.length).toBeGreaterThan(0));
+  await waitFor(() => expect(HeldWorker.made.length).toBeGreaterThan(0), { timeout: 10_000 });
   const last = HeldWorker.made.at(-1);
   if (!last) throw new Error('no worker was made');
   return last;
@@ -101,7 +101,9 @@ describe('what a plan comes to, in one glance', () => {
     opened();
     expect(
       await screen.findByText(
-        'Cut as drawn, 2 of 4 corners come back hotter than 250 °C and would burn. Done about it: 1 loop, 1 dwell, for +3.8 s. 1 is still in trouble.',
+        'Cut as drawn, 2 of 4 corners come back hotter than 250 °C and would burn. Done about it: 1 loop, 1 dwell, for 3.8 s more. 1 is still in trouble.',
+        undefined,
+        { timeout: 10_000 },
       ),
     ).toBeTruthy();
     expect(screen.getByRole('img', { name: /loop 1, dwell 1, ease 0, round 0, leave 1, in trouble 1/ })).toBeTruthy();
