@@ -1,7 +1,6 @@
 import type { CornerPlan, PlannedCorner } from '../../shared/corner-plans.ts';
 import type { PlanComparison } from '../../shared/estimates.ts';
 import type { Prediction, StrategyContent } from '../../shared/strategies.ts';
-import { platePlan } from '../../strategy/corners/index.ts';
 import { planEstimate, type CornersFare, type PlanVariant, type Rates } from '../../strategy/estimate/index.ts';
 import { plateField, type PlateField, type PlateQuestion } from '../../strategy/heat/plate/index.ts';
 import type { MachineProfile, Nozzle } from '../../strategy/machine.ts';
@@ -9,7 +8,7 @@ import { heatOfClock, loadingOf, plateClock, type PlateClock } from '../../strat
 import { cutPathOf } from '../../strategy/path/compensation/index.ts';
 import { contourBox } from '../../strategy/path/index.ts';
 import { cutPathRequestOf } from '../take-away/cut-path.ts';
-import { planRequestOf, presentCorner, type Choices } from './compute.ts';
+import { plannedPlate, type Choices } from './compute.ts';
 import { cuttingOf } from './cutting.ts';
 import type { Planned } from './planned.ts';
 
@@ -97,8 +96,7 @@ function plannedAnew(
 ): Corners {
   const { thickness, plateTemperature } = plan;
   const source = { planned, content, prediction, profile, nozzle };
-  const found = platePlan(planRequestOf(source, { thickness, plateTemperature, overrides }));
-  return { limit: found.limit, corners: found.corners.map((corner) => presentCorner(corner, new Set())) };
+  return plannedPlate({ source, choices: { thickness, plateTemperature, overrides } });
 }
 
 function variantOf(
@@ -166,6 +164,9 @@ function plateOf({ plate }: Planned): Pick<PlateQuestion, 'plate' | 'shape'> {
   return { plate: contourBox(shape.edge), shape };
 }
 
+/** A wait ends when the tip is at the limit, to rounding, K. */
+const rounding = 1e-3;
+
 function fareOf(corners: readonly PlannedCorner[], limit: number): CornersFare {
   const of = (wanted: PlannedCorner['treatment']) => corners.filter(({ treatment }) => treatment === wanted).length;
   return {
@@ -173,7 +174,7 @@ function fareOf(corners: readonly PlannedCorner[], limit: number): CornersFare {
     dwells: of('dwell'),
     eases: of('ease'),
     rounds: of('round'),
-    overLimit: corners.filter(({ convex, treated }) => convex && treated > limit).length,
+    overLimit: corners.filter(({ convex, treated }) => convex && treated > limit + rounding).length,
     hottestReturn: corners.reduce<number | null>((most, { treated }) => Math.max(most ?? treated, treated), null),
   };
 }
