@@ -18,7 +18,7 @@ export const rates = pgTable(
     machineHour: doublePrecision(),
     oxygenKilogram: doublePrecision(),
     electricityKilowattHour: doublePrecision(),
-    /** Light out of the laser over electrical energy into it. */
+    /** Light out of the laser over electrical energy into it: a third for a usual fibre laser without its cooler; common practice, no source. */
     wallPlugEfficiency: doublePrecision().notNull().default(0.33),
     version: integer().notNull().default(1),
     /** Null for what the plant was founded with. */

@@ -3,7 +3,7 @@ export { cutSpent } from './spent.ts';
 export type { CutLedger } from './ledger.ts';
 export { cutLedger } from './ledger.ts';
 export type { Money, Rates } from './money.ts';
-export { moneyOf, usualWallPlugEfficiency } from './money.ts';
+export { moneyOf } from './money.ts';
 export type { Background, CutFigures, EstimateInput, PlanEstimate } from './plan-estimate.ts';
 export { planEstimate } from './plan-estimate.ts';
 export type { ComparedFigure, ComparedRow, CornersFare, PlanVariant, VariantEstimate } from './compare.ts';

@@ -10,9 +10,6 @@ export type Rates = {
   readonly wallPlugEfficiency: number;
 };
 
-/** A usual fibre laser: a third of what it draws becomes light, its cooler not counted. Common practice, no source. */
-export const usualWallPlugEfficiency = 0.33;
-
 /** Amounts in the plant's currency; null where it gives no rate. */
 export type Money =
   | {
