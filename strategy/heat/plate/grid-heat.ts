@@ -28,8 +28,8 @@ export type GridHeatOf = {
   readonly coolingTime: number; // s
 };
 
-/** Length of a drop in widths of its bell (standard deviations): of a straight row of them the ripple is 2e-6. */
-const dropLength = 1.2;
+/** Length of a drop in widths of its bell (standard deviations): longer ones are lumps to a kerf beside them. */
+const dropLength = 0.8;
 /** How far from a kerf's middle it is looked which side a cell is on, m. */
 const beside = 1e-6;
 /** What a bridge between cells that only share a corner carries, as a share of a face. */

@@ -72,7 +72,7 @@ const layouts: Record<string, HeatedPiece[]> = {
 
 describe('the plate’s field beside kerfs, against a plate of 1.25 mm cells', () => {
   for (const [name, heat] of Object.entries(layouts).slice(0, runs(2, 4))) {
-    it(`stays within 3 % of the greatest rise on average and 35 % anywhere: ${name}`, () => {
+    it(`stays within 3 % of the greatest rise on average and 30 % anywhere: ${name}`, () => {
       const field = fieldOf(heat);
       const end = endOf(heat);
       for (const [since, time] of [
@@ -94,7 +94,7 @@ describe('the plate’s field beside kerfs, against a plate of 1.25 mm cells', (
         }
         expect(count).toBeGreaterThan(400);
         expect(sum / count / greatest).toBeLessThan(0.03);
-        expect(worst / greatest).toBeLessThan(0.35);
+        expect(worst / greatest).toBeLessThan(0.3);
       }
     });
   }
