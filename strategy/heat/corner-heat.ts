@@ -1,15 +1,19 @@
 import type { Point } from '../path/point.ts';
-import { pathLength } from '../path/segment.ts';
+import { pointDot, pointSubtract } from '../path/point.ts';
+import { pathLength, segmentStart } from '../path/segment.ts';
+import type { BeforeCorner } from './before-corner.ts';
+import { beforeCorner, beforeWeight } from './before-corner.ts';
 import { travelledTo, withoutLast } from './corner-way.ts';
 import { loopTurnRise } from './loop-turn.ts';
 import { frontLead, partWall } from './part-wall.ts';
-import type { HeatedPiece } from './path-heat.ts';
+import type { HeatedPiece, HeatWeight } from './path-heat.ts';
+import { pathRise, weightedPathRise } from './path-heat.ts';
 import type { PlateProperties } from './properties.ts';
 import { diffusivity, midZoneProperties } from './properties.ts';
 import type { ReturnQuestion } from './return-question.ts';
 import { checkReturnQuestion, roundOf } from './return-question.ts';
 import type { OpenTip } from './open-tip.ts';
-import { openTip, openTipRise } from './open-tip.ts';
+import { openTip, openTipWeight } from './open-tip.ts';
 
 /** What heats the part's side of a corner before the second edge is cut; times in s from the start of the path before it. */
 export type CornerHeat = {
@@ -22,6 +26,8 @@ export type CornerHeat = {
   /** When cutting along the second edge begins. */
   readonly begins: number;
   readonly tip: OpenTip;
+  /** The tip before this one on the path, and when the front turned there. */
+  readonly before: { readonly corner: BeforeCorner; readonly turned: number } | null;
 };
 
 /** The heat of a corner, without that of the last `leftOut` m of path. Throws RangeError for a question that has no answer. */
@@ -41,6 +47,7 @@ export function cornerHeat(question: ReturnQuestion, leftOut: number): CornerHea
     }));
   const loop = treatment.kind === 'loop' ? (treatment.loop.length - treatment.loop.extension) / feed : 0;
   const wait = treatment.kind === 'dwell' ? treatment.duration : 0;
+  const earlier = question.before ? beforeCorner(corner, question.before, kerfWidth) : null;
   return {
     question,
     properties,
@@ -48,17 +55,46 @@ export function cornerHeat(question: ReturnQuestion, leftOut: number): CornerHea
     turns: arrival,
     begins: arrival + loop + wait,
     tip: openTip(corner, roundOf(question), kerfWidth),
+    before: earlier && { corner: earlier, turned: timeBefore(walls, corner.point, earlier.length) },
   };
 }
 
 const speedOf = ({ segment, from, to }: HeatedPiece): number => pathLength([segment]) / (to - from);
 
+/** When the first piece begins that lies wholly within `length` m of a place, s. */
+function timeBefore(walls: readonly HeatedPiece[], place: Point, length: number): number {
+  const within = walls.find(({ segment }) => {
+    const start = segmentStart(segment);
+    return Math.hypot(start.x - place.x, start.y - place.y) < length * 1.05;
+  });
+  return within?.from ?? 0;
+}
+
 /** Temperature rise, K, at a place on the bisector at a time, s, from all that, when `edgeCut` m of the second edge have been cut. */
 export function cornerRise(heat: CornerHeat, at: Point, time: number, edgeCut: number): number {
   const { question, properties, walls, turns, begins, tip } = heat;
   const { corner, treatment, cut } = question;
-  const rise = openTipRise(walls, tip, at, time, begins, edgeCut, properties);
+  const alpha4 = 4 * diffusivity(properties);
+  const closing = openTipWeight(tip, at, time - begins, edgeCut, alpha4);
+  const shut = shutIn(heat, at, time, alpha4);
+  const weight: HeatWeight | null = closing && shut ? (...of) => closing(...of) * shut(...of) : (closing ?? shut);
+  const rise = weight ? weightedPathRise(walls, at, time, properties, weight) : pathRise(walls, at, time, properties);
   if (treatment.kind !== 'loop') return rise;
   const power = cut.heatIntoPlate * cut.feed;
   return rise + loopTurnRise(corner, treatment.loop, cut.kerfWidth, cut.feed, power, at, time - turns, properties);
+}
+
+/** Past this exponent heat from the tip before no longer comes to the corner. */
+const negligible = 9;
+
+/** What the tip before the corner adds, or null where it is too far to matter. */
+function shutIn({ question, before }: CornerHeat, at: Point, time: number, alpha4: number): HeatWeight | null {
+  if (!before || time <= before.turned) return null;
+  const { corner: tip, turned } = before;
+  if (tip.length * tip.length > negligible * alpha4 * (time - turned)) return null;
+  const { corner, treatment } = question;
+  const ahead = corner.incoming;
+  const foot = pointDot(pointSubtract(at, corner.point), ahead);
+  const open = (treatment.kind === 'loop' ? treatment.loop.extension : 0) - foot;
+  return (place, age) => beforeWeight(tip, ahead, at, open, place, time - age >= turned, age, time - turned, alpha4);
 }

@@ -34,7 +34,7 @@ export function returnDelay(question: ReturnQuestion): number {
 
 /**
  * Highest temperature, K, that a place on the bisector, `depth` m inside the finished tip (where the return temperature is measured when left out), reaches
- * after cutting along the second edge has begun, and when, s. What was cut before is shut in the tip as the second edge opens (`openTipRise`); the second edge heats the tip as a
+ * after cutting along the second edge has begun, and when, s. What was cut before is shut in the tip as the second edge opens (`openTipWeight`); the second edge heats the tip as a
  * wedge with both edges open, with half of its heat, from where the finished tip begins. A stretch of 50 mm is followed. Throws RangeError as `returnOf` and for a
  * depth that is not positive.
  */

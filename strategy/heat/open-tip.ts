@@ -3,10 +3,7 @@ import type { LoopCorner } from '../path/loop.ts';
 import type { Point } from '../path/point.ts';
 import { pointAdd, pointScale } from '../path/point.ts';
 import { bisectorShare, bisectorTable } from './bisector-table.ts';
-import type { HeatedPiece } from './path-heat.ts';
-import { pathRise, weightedPathRise } from './path-heat.ts';
-import type { PlateProperties } from './properties.ts';
-import { diffusivity } from './properties.ts';
+import type { HeatWeight } from './path-heat.ts';
 import { erfc } from './special-functions.ts';
 
 /** A tip between two finished edges, the first one cut and the second as far as `open` m from where the two would meet. */
@@ -33,8 +30,8 @@ export function openTip(corner: LoopCorner, round: number | undefined, kerfWidth
 }
 
 /**
- * Temperature rise, K, on the bisector of a tip at a time, s, from what was left in the walls of its first edge and of its arc before the second edge began, at
- * `begins`, of which `cut` m have been cut since.
+ * What counts of heat left in the walls of a tip's first edge and of its arc before the second edge began, dimensionless, against half a plane, for a place on the bisector; `cut` m of the second edge
+ * have been cut in the `sinceBegun` s since. Null where it is half a plane.
  *
  * While nothing of the second edge is open that is half a plane. Once it is open as far as l from the apex it keeps heat in the tip, a share of what a wedge (Carslaw and Jaeger,
  * ch. 14) gives more than half a plane: ½(1 + erf(b/√4αt)), with which the image in a straight mirror is seen past its end, b from the foot of the place on it (Sommerfeld's penumbra,
@@ -43,31 +40,27 @@ export function openTip(corner: LoopCorner, round: number | undefined, kerfWidth
  * the first term for a bent wall (see `loopTurnRise`), fading as e^(−√(4αt)/2R), when the wedge says it all. The two fadings are own choices, tried on rounds from 20° to 150° of an own
  * finite-volume solution that is not the reference.
  */
-export function openTipRise(
-  walls: readonly HeatedPiece[],
+export function openTipWeight(
   { angle, apex, radius, start }: OpenTip,
   at: Point,
-  time: number,
-  begins: number,
+  sinceBegun: number,
   cut: number,
-  plate: PlateProperties,
-): number {
+  alpha4: number,
+): HeatWeight | null {
   const open = start + cut;
-  if (open === 0 || angle >= Math.PI) return pathRise(walls, at, time, plate);
+  if (open === 0 || angle >= Math.PI) return null;
   const table = bisectorTable(angle);
-  const alpha4 = 4 * diffusivity(plate);
   const depth = Math.hypot(at.x - apex.x, at.y - apex.y);
   // how far the second edge is open past the place's foot on it
   const opposite = open - depth * Math.cos(angle / 2);
   const keeping = (0.6 * Math.PI) / angle;
   const outside = 1 - angle / Math.PI;
-  const since = Math.max(0, time - begins);
-  return weightedPathRise(walls, at, time, plate, (place, age, segment) => {
+  return (place, age, segment) => {
     const [dx, dy] = [place.x - apex.x, place.y - apex.y];
     const square = dx * dx + dy * dy;
     const wedge = bisectorShare(table, (2 * depth * Math.sqrt(square)) / (alpha4 * age)) / 2;
     // what the half plane already had outside the wedge when the second edge began, for a tip without an arc
-    const lost = radius > 0 || since === 0 ? 0 : outside * Math.exp(-square / (alpha4 * (age - since)));
+    const lost = radius > 0 || sinceBegun <= 0 ? 0 : outside * Math.exp(-square / (alpha4 * (age - sinceBegun)));
     const width = Math.sqrt(alpha4 * age);
     const inSight = 1 - erfc(opposite / width) / 2;
     const kept = -inSight * Math.expm1(-(((keeping * open * open) / (alpha4 * age)) ** 0.6));
@@ -77,5 +70,5 @@ export function openTipRise(
       weight += (Math.sqrt(Math.PI) / 8) * spread * Math.exp(-spread / 2);
     }
     return weight;
-  });
+  };
 }

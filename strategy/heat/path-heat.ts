@@ -18,6 +18,9 @@ export type HeatedPiece = {
 /** Past this exponent a contribution is below 1e-12 of what it could be. */
 const negligible = 28;
 
+/** What counts of heat left at a place, m, `age` s ago, on a segment; dimensionless. The place is only valid during the call. */
+export type HeatWeight = (place: Point, age: number, segment: Segment) => number;
+
 /** Widest panel over the logarithm of the age, and how many widths of the bell over the path one may span. */
 const widest = 2;
 const bells = 4;
@@ -34,13 +37,13 @@ export function pathRise(pieces: readonly HeatedPiece[], at: Point, time: number
   return rise;
 }
 
-/** The same with each place's heat counted by a weight that may depend on the place, m, the heat's age, s, and the segment it lies on. */
+/** The same with each place's heat counted by a weight. */
 export function weightedPathRise(
   pieces: readonly HeatedPiece[],
   at: Point,
   time: number,
   plate: PlateProperties,
-  weight: (place: Point, age: number, segment: Segment) => number,
+  weight: HeatWeight,
 ): number {
   let rise = 0;
   for (const piece of pieces) rise += pieceRise(piece, at, time, plate, weight);
@@ -52,7 +55,7 @@ function pieceRise(
   at: Point,
   time: number,
   plate: PlateProperties,
-  weight: ((place: Point, age: number, segment: Segment) => number) | null,
+  weight: HeatWeight | null,
 ): number {
   const duration = end - from;
   const to = Math.min(end, time);
