@@ -1,11 +1,13 @@
 import { useImperativeHandle, useRef, type Ref } from 'react';
 import { paintHeat } from './heat-paint.ts';
 
-/** Temperatures, K, row by row, and how they become a picture. */
+/** Temperatures, K, row by row, of the picture of so many columns and rows without those skipped on each side, and how they are drawn. */
 type Painted = {
   readonly temperatures: Float32Array;
   readonly columns: number;
   readonly rows: number;
+  readonly skipped: number;
+  readonly above: number;
   readonly levels: readonly number[];
   readonly limit: number;
 };
@@ -28,32 +30,37 @@ export function HeatCanvas({ width, height, ref }: { width: number; height: numb
   useImperativeHandle(
     ref,
     () => ({
-      paint: ({ temperatures, columns, rows, levels, limit }, clip) => {
+      paint: ({ temperatures, columns, rows, skipped, above, levels, limit }, clip) => {
         const shown = canvas.current;
         const context = shown?.getContext('2d');
         const behind = (beside.current ??= document.createElement('canvas'));
         const points = behind.getContext('2d');
         // no canvas here? Then the numbers stand beside the drawing alone
         if (!shown || !context || !points) return;
-        const picture = paintHeat(temperatures, columns, rows, { ink: inkOf(shown), levels, limit });
-        for (const one of [shown, behind]) {
-          if (one.width !== columns) one.width = columns;
-          if (one.height !== rows) one.height = rows;
-        }
-        points.putImageData(new ImageData(picture, columns, rows), 0, 0);
+        const [wide, high] = [columns - 2 * skipped, rows - 2 * above];
+        const picture = paintHeat(temperatures, wide, high, { ink: inkOf(shown), levels, limit });
+        sized(shown, columns, rows);
+        sized(behind, wide, high);
+        points.putImageData(new ImageData(picture, wide, high), 0, 0);
         context.setTransform(1, 0, 0, 1, 0, 0);
         context.clearRect(0, 0, columns, rows);
         context.save();
         context.setTransform(clip.scaleX, 0, 0, clip.scaleY, clip.x, clip.y);
         context.clip(new Path2D(clip.data), 'evenodd');
         context.setTransform(1, 0, 0, 1, 0, 0);
-        context.drawImage(behind, 0, 0);
+        context.drawImage(behind, skipped, above);
         context.restore();
       },
     }),
     [],
   );
   return <canvas ref={canvas} data-testid="heat" aria-hidden style={{ display: 'block', width, height }} />;
+}
+
+/** Giving a canvas its size clears it and costs time: only where it differs. */
+function sized(canvas: HTMLCanvasElement, width: number, height: number): void {
+  if (canvas.width !== width) canvas.width = width;
+  if (canvas.height !== height) canvas.height = height;
 }
 
 /** The theme's ink as red, green and blue. */

@@ -31,6 +31,8 @@ type HeatLayerProps = {
 
 /** Size of a point of the picture while the time runs and once it rests, px, and what a picture has of them at most. */
 const [running, resting, most] = [3, 1.5, 700_000];
+/** Share of the sheet on each side that is left out while the time runs. */
+const runningMargin = 0.2;
 /** After so long without a change the picture is drawn finer, with its figures, ms. */
 const restTime = 140;
 
@@ -49,15 +51,18 @@ export function HeatLayer({ heat, clock, space, sheet, plate, limit, labels }: H
       const columns = Math.max(1, Math.round(sheet.width / size));
       const rows = Math.max(1, Math.round(sheet.height / size));
       const [across, down] = [sheet.width / columns, sheet.height / rows];
+      // while the time runs little more than the frame, which is the sheet's middle half
+      const margin = point > resting ? runningMargin : 0;
+      const [skipped, above] = [Math.round(columns * margin), Math.round(rows * margin)];
       const origin = space.at({ x: 0, y: 0 });
       // the place of the first point's middle, m; rows run down
       const raster = {
-        x: (across / 2 - sheet.x - origin.x) / space.scale,
-        y: (origin.y + sheet.y - down / 2) / space.scale,
+        x: ((skipped + 0.5) * across - sheet.x - origin.x) / space.scale,
+        y: (origin.y + sheet.y - (above + 0.5) * down) / space.scale,
         dx: across / space.scale,
         dy: -down / space.scale,
-        columns,
-        rows,
+        columns: columns - 2 * skipped,
+        rows: rows - 2 * above,
       };
       const moment = heatMoment(heat, clock.time(), Math.max(5e-4, raster.dx / 2));
       if (!moment) return [];
@@ -65,7 +70,7 @@ export function HeatLayer({ heat, clock, space, sheet, plate, limit, labels }: H
       const levels = heatLevels(system);
       const clip = plate.map(({ segments }) => `${space.write(segments)}Z`).join('');
       picture.current?.paint(
-        { temperatures, columns, rows, levels, limit },
+        { temperatures, columns, rows, skipped, above, levels, limit },
         { data: clip, x: sheet.x / across, y: sheet.y / down, scaleX: space.zoom / across, scaleY: space.zoom / down },
       );
       if (point > resting) return [];

@@ -31,6 +31,9 @@ const table = (() => {
   return entries;
 })();
 
+/** The same, four bytes a colour. */
+const colours = new Uint32Array(table.buffer);
+
 /** Lines nearer to their neighbours than this can't be told apart and are left out, px; up to twice as far they are faint. */
 const closest = 5;
 /** Half the width of a line, px. */
@@ -49,35 +52,35 @@ export function paintHeat(
   { ink, levels, limit }: HeatPalette,
 ): Uint8ClampedArray<ArrayBuffer> {
   const picture = new Uint8ClampedArray(4 * columns * rows);
+  // a point's four bytes at once: most points are a colour of the table as it is
+  const points = new Uint32Array(picture.buffer);
   const { level, gap } = levelTable(levels);
+  const widest = (half + 0.5) ** 2;
   for (let row = 0, at = 0; row < rows; row++) {
+    const down = row + 1 < rows ? columns : -columns;
     for (let column = 0; column < columns; column++, at++) {
       const kelvin = temperatures[at] ?? 0;
-      const celsius = Math.min(hottest, Math.max(0, Math.round(kelvin - zeroCelsius)));
-      const colour = 4 * celsius;
-      let red = table[colour] ?? 0;
-      let green = table[colour + 1] ?? 0;
-      let blue = table[colour + 2] ?? 0;
-      let opacity = table[colour + 3] ?? 0;
-      const right = column + 1 < columns ? (temperatures[at + 1] ?? kelvin) : (temperatures[at - 1] ?? kelvin);
-      const below = row + 1 < rows ? (temperatures[at + columns] ?? kelvin) : (temperatures[at - columns] ?? kelvin);
-      const slope = Math.hypot(right - kelvin, below - kelvin);
+      const celsius = kelvin <= zeroCelsius ? 0 : Math.min(hottest, (kelvin - zeroCelsius + 0.5) | 0);
+      points[at] = colours[celsius] ?? 0;
+      const across = (temperatures[column + 1 < columns ? at + 1 : at - 1] ?? kelvin) - kelvin;
+      const downwards = (temperatures[at + down] ?? kelvin) - kelvin;
+      const steep = across * across + downwards * downwards;
+      const off = kelvin - (level[celsius] ?? Infinity);
       let drawn = 0;
-      if (slope > 1e-4) {
-        const line = Math.min(1, Math.max(0, half + 0.5 - Math.abs(kelvin - (level[celsius] ?? Infinity)) / slope));
+      if (off * off < widest * steep) {
+        const slope = Math.sqrt(steep);
+        const line = Math.min(1, half + 0.5 - Math.abs(off) / slope);
         drawn = line * Math.min(1, Math.max(0, (gap[celsius] ?? 0) / (closest * slope) - 1));
       }
       if (kelvin > limit && (row + column) % hatch === 0) drawn = Math.max(drawn, 0.55);
-      if (drawn > 0) {
-        red += drawn * (ink[0] - red);
-        green += drawn * (ink[1] - green);
-        blue += drawn * (ink[2] - blue);
-        opacity += drawn * (220 - opacity);
+      if (drawn === 0) continue;
+      const byte = 4 * at;
+      for (let channel = 0; channel < 3; channel++) {
+        const colour = picture[byte + channel] ?? 0;
+        picture[byte + channel] = colour + drawn * ((ink[channel] ?? 0) - colour);
       }
-      picture[4 * at] = red;
-      picture[4 * at + 1] = green;
-      picture[4 * at + 2] = blue;
-      picture[4 * at + 3] = opacity;
+      const opacity = picture[byte + 3] ?? 0;
+      picture[byte + 3] = opacity + drawn * (220 - opacity);
     }
   }
   return picture;
