@@ -5,6 +5,10 @@ import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { PlanComparison } from '@/shared/estimates.ts';
 import { comparePlans, type PlanVariant } from '@/strategy/estimate/compare.ts'; // not the folder's face: that one brings the plate's heat along
 
+/** Below half of the third figure a value is the same as the other: the rest is rounding. */
+const differs = (value: number, difference: number): boolean =>
+  Math.abs(difference) > 5e-4 * Math.max(Math.abs(value), Math.abs(value - difference));
+
 type TableProps = {
   readonly variants: PlanComparison['variants'];
   /** What the differences are from. */
@@ -35,10 +39,10 @@ export function EstimateTable({ variants, against }: TableProps) {
           cells: columns.map(({ variant }, i) => {
             const value = values[i] ?? null;
             const difference = differences[i] ?? null;
-            const more = variant === against || difference === null ? '' : show(difference, system, true);
+            const seen = variant !== against && difference !== null && value !== null && differs(value, difference);
+            const more = seen ? show(difference, system, true) : '';
             return {
               figure: value === null ? estimateText.noFigure : show(value, system, false),
-              // what is no different as it is shown says nothing
               ...(/[1-9]/.test(more) ? { below: more } : {}),
             };
           }),

@@ -3,19 +3,23 @@ import { numberText, quantityText, type QuantityTextOptions, type UnitSystem } f
 
 type Shown = (value: number, system: UnitSystem, sign: boolean) => string;
 
-/** A figure to three places, as estimates deserve. */
-const figures = (more: QuantityTextOptions = {}): QuantityTextOptions => ({ figures: 3, ...more });
+/** A figure to three places, as estimates deserve, and a difference to two. */
+const figures = (sign: boolean, more: QuantityTextOptions = {}): QuantityTextOptions => ({
+  figures: sign ? 2 : 3,
+  sign,
+  ...more,
+});
 
-const time: Shown = (value, system, sign) => quantityText(value, 'time', system, figures({ sign })).text;
+const time: Shown = (value, system, sign) => quantityText(value, 'time', system, figures(sign)).text;
 const energy =
   (unit: string): Shown =>
   (value, system, sign) =>
-    quantityText(value, 'energy', system, figures({ unit, sign })).text;
+    quantityText(value, 'energy', system, figures(sign, { unit })).text;
 const kelvin: Shown = (value, system, sign) =>
   quantityText(value, sign ? 'temperatureDifference' : 'temperature', system, { sign, decimals: 0 }).text;
 const signed = (text: string, value: number, sign: boolean) => (sign && value > 0 ? `+${text}` : text);
 const count: Shown = (value, _system, sign) => signed(numberText(value, 0), value, sign);
-const mass: Shown = (value, system, sign) => quantityText(value, 'mass', system, figures({ sign })).text;
+const mass: Shown = (value, system, sign) => quantityText(value, 'mass', system, figures(sign)).text;
 /** At 0 °C and 1.013 bar. */
 const volume: Shown = (value, _system, sign) => {
   const decimals = Math.abs(value) < 10 ? 2 : 1;
@@ -45,12 +49,12 @@ export const figureText: Readonly<
   oxygenVolume: { label: 'at 0 °C, 1.013 bar', show: volume, part: true },
   laser: { label: 'laser energy', show: energy('kWh') },
   heat: { label: 'heat left in the plate', show: energy('MJ') },
-  meanBackground: { label: 'plate when all is cut', show: kelvin },
+  meanBackground: { label: 'plate’s mean when all is cut', show: kelvin },
   highestBackground: { label: 'plate where hottest', show: kelvin },
   machine: { label: 'machine', show: money, part: true },
   oxygenMoney: { label: 'oxygen', show: money, part: true },
   electricity: { label: 'electricity', show: money, part: true },
-  money: { label: 'in money', show: money },
+  money: { label: 'cost', show: money },
 };
 
 export const estimateText = {
@@ -93,7 +97,7 @@ export const estimateText = {
   table: 'Plans side by side',
   figure: 'figure',
   noFigure: '–',
-  currency: (currency: string) => `in money, ${currency}`,
+  currency: (currency: string) => `cost, ${currency}`,
   hidden: (seconds: number, system: UnitSystem) =>
     `${time(seconds, system, false)} of loading is hidden behind the cut by the second table.`,
   noMoney: 'No rates given: a lead writes what the plant pays for an hour, oxygen and electricity under House rules.',

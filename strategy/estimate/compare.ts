@@ -39,10 +39,10 @@ export const comparedFigures = [
   'heat',
   'meanBackground',
   'highestBackground',
+  'money',
   'machine',
   'oxygenMoney',
   'electricity',
-  'money',
 ] as const;
 export type ComparedFigure = (typeof comparedFigures)[number];
 

@@ -73,6 +73,8 @@ describe('what a plan costs', () => {
     expect(screen.getByRole('columnheader', { name: 'Planned' })).toBeTruthy();
     // a tip over the limit is three fewer than untreated
     expect(cells('tips over the limit').join(' ')).toContain('1−3');
+    // as many pierces take as long, to rounding: no word of a difference
+    expect(cells('piercing')).toEqual(['1.5 s', '1.5 s', '1.5 s']);
     expect(screen.getByText(/Revision before: This is the strategy’s first revision/)).toBeTruthy();
     expect(screen.getByText(/No rates given/)).toBeTruthy();
     expect(screen.queryByRole('radio', { name: 'Money' })).toBeNull();
@@ -85,7 +87,7 @@ describe('what a plan costs', () => {
     await userEvent.click(await screen.findByRole('radio', { name: 'Money' }));
     const bars = screen.getByRole('list', { name: 'Money' });
     expect(within(bars).getAllByText(/^\d+\.\d\d EUR$/)).toHaveLength(3);
-    expect(screen.getByRole('rowheader', { name: 'in money, EUR' })).toBeTruthy();
+    expect(screen.getByRole('rowheader', { name: 'cost, EUR' })).toBeTruthy();
     expect(screen.queryByText(/No rates given/)).toBeNull();
   });
 
