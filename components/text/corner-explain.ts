@@ -58,7 +58,7 @@ export function returnExplained(
     value: hot(treated),
     what: `What waits at the tip when cutting along the second edge begins: on the line that halves the corner, ${length(measuringDepth)} inside the finished tip. It is left there by the plate’s own temperature and by everything cut before the last ${length(leftOutStretch)} of path.`,
     formula:
-      'Each metre of cut lets go the same heat, evenly through the thickness, and that heat spreads in the plate: the rise from each moment of the cut is q′/(4πk·t)·e^(−r²/(4αt)), with r the distance and t the time since, added up along the path. An open kerf carries no heat, so what is let go beside it stays on its side; the narrower the tip, the less steel takes it.',
+      'Each metre of cut lets go the same heat, evenly through the thickness, and that heat spreads in the plate: the rise from each moment of the cut is q′/(4πk·t)·e^(−r²/(4αt)), with r the distance and t the time since, added up along the path. An open kerf carries no heat: what is let go beside the first edge stays on its side and counts there as if thrown back by a mirror; once both edges are open the tip is a wedge, and the narrower it is, the less steel takes the heat.',
     terms: [
       { label: 'plate before the cut', value: hot(plan.plateTemperature) },
       ...(background === null
@@ -98,6 +98,7 @@ export function returnExplained(
     ],
     sources: [
       'Line sources along a path: Carslaw and Jaeger, Conduction of Heat in Solids, 2nd edition 1959, chapter 10 (chapter from memory).',
+      'The closed form is held against a slow solver of our own, in which the kerf opens as the cut passes: within 3 % of the rise on average and 10 % at most for corners of 30° to 150°.',
       'Conductivity and specific heat of carbon steel: EN 1993-1-2:2005, 3.4.1, taken as constant at 450 °C.',
       'Heat into the plate: of the strategy revision; where nobody has fitted it, what a moving kerf loses by conduction, by a finite-volume solution of our own.',
       'Place, moment and the stretch left out: our own definition, the same for every corner.',

@@ -88,8 +88,14 @@ describe('the preview of a corner plan', () => {
     await page.mouse.click(track.x + track.width * 0.6, track.y + track.height / 2);
     expect(await slider.getAttribute('aria-valuetext')).toMatch(/^[\d.]+ s of [\d.]+ s, (59|60|61) %/);
     await page.getByTestId('run-head').waitFor();
+    // Behind it the plate's heat is another at each moment.
+    const heat = page.getByTestId('heat');
+    await heat.waitFor({ state: 'attached' });
+    await expect.poll(() => warmPoints(heat)).toBeGreaterThan(0);
+    const then = await warmPoints(heat);
     await page.keyboard.press('End');
     expect(await slider.getAttribute('aria-valuetext')).toContain('100 %, all is cut');
+    await expect.poll(() => warmPoints(heat)).not.toBe(then);
     await page.keyboard.press('Home');
     await page.getByRole('button', { name: 'Run the cut' }).click();
     await expect.poll(async () => Number(await slider.getAttribute('aria-valuenow'))).toBeGreaterThan(0);
@@ -228,6 +234,16 @@ const scaleOf = (page: Page) =>
 
 /** Where the drawing's middle is drawn. */
 const drawnAt = (page: Page) => frameOf(page).locator('svg > g').first().getAttribute('transform');
+
+/** How many points of the heat's picture are warm enough to be seen, weighed by how much. */
+const warmPoints = (heat: Locator) =>
+  heat.evaluate((canvas) => {
+    if (!(canvas instanceof HTMLCanvasElement)) throw new Error('the heat is no canvas');
+    const { data } = canvas.getContext('2d')?.getImageData(0, 0, canvas.width, canvas.height) ?? { data: [] };
+    let sum = 0;
+    for (let i = 3; i < data.length; i += 4) sum += data[i] ?? 0;
+    return sum;
+  });
 
 /** How far what is drawn is pushed. */
 const pushOf = (page: Page) =>
