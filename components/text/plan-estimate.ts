@@ -107,7 +107,7 @@ export const estimateText = {
     'Oxygen: flow through the nozzle at the cut’s pressure, an ideal gas with a discharge coefficient, while the beam cuts and while the cut waits; over a pierce as its prediction says. Shut between cuts.',
     'Laser energy: mean power while it cuts, less where a corner is eased; a pierce as its stages say.',
     'Heat: what the strategy says a cut leaves per area of cut face, and what the pierce model leaves. Loops leave theirs in slugs, in part: those fall.',
-    'Plate: heat conducted on a grid through plate and open kerfs, with losses to the air. The tips themselves are hotter; the drawing has them.',
+    'Plate: heat conducted on a grid through plate and open kerfs, with losses to the air. Where it is hottest is often within a loop, before its slug falls, or between two cuts. The tips themselves are hotter; the drawing has them.',
     'All loops: a loop at every corner that is treated or in trouble, where the rules allow one and it fits.',
   ],
   ledger: 'Energy of the planned cut, pierces left out',

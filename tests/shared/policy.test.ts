@@ -16,6 +16,7 @@ const added: Readonly<Record<Role, readonly Action[]>> = {
     'cornerPlan.write',
     'cutPath.take',
     'strategy.read',
+    'rate.read',
   ],
   engineer: [
     'strategy.write',
@@ -26,7 +27,7 @@ const added: Readonly<Record<Role, readonly Action[]>> = {
     'request.read',
     'review.read',
   ],
-  lead: ['review.decide', 'rule.write', 'people.manage', 'record.read'],
+  lead: ['review.decide', 'rule.write', 'rate.write', 'people.manage', 'record.read'],
 };
 
 describe('a role', () => {
