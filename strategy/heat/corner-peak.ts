@@ -100,8 +100,8 @@ function sharpDepth({ tip: { radius, angle } }: CornerHeat): number {
   return radius / Math.sin(angle / 2) - radius;
 }
 
-/** Steps per factor of two in time in which the peak is looked for. */
-const octave = 2;
+/** Steps of √2 in time that a peak is followed at most either way. */
+const mostSteps = 24;
 
 /** Highest temperature, K, on the bisector at a depth, m, after the second edge has begun; see `peakAfter`. */
 export function peakOf(history: TipHistory, depth: number): TipPeak {
@@ -117,28 +117,23 @@ export function peakOf(history: TipHistory, depth: number): TipPeak {
   const passes = first
     ? first.start - begins + Math.max(0, place * Math.cos(half) - first.from) / question.cut.feed
     : 0;
-  const shortest = (0.05 * aside * aside) / alpha;
-  const longest = (4 * place * place) / alpha + (4 * place) / question.cut.feed;
   const at = (time: number) => temperatureAt(history, depth, begins + time);
-  const steps = Math.ceil(octave * Math.log2(longest / shortest));
-  const timeOf = (i: number) => (i < 0 ? 0 : passes + shortest * 2 ** (i / octave));
-  let best = -1;
-  let highest = at(0);
-  let fallen = 0;
-  for (let i = 0; i <= steps && fallen < 3; i++) {
-    const temperature = at(timeOf(i));
-    if (temperature > highest) {
-      highest = temperature;
-      best = i;
-      fallen = 0;
-    } else fallen = best >= 0 ? fallen + 1 : fallen;
-  }
-  if (best < 0) return { temperature: highest, time: 0 };
+  // the peak of a fast cut beside its path follows the front by aside²/2α, at a tip somewhat later: from there uphill in steps of √2
+  const expected = (0.8 * aside * aside) / alpha;
+  const timeOf = (i: number) => passes + expected * 2 ** (i / 2);
+  let [best, highest] = [0, at(timeOf(0))];
+  let [before, after] = [at(timeOf(-1)), at(timeOf(1))];
+  for (let i = 0; i < mostSteps && before > highest; i++)
+    [best, after, highest, before] = [best - 1, highest, before, at(timeOf(best - 2))];
+  for (let i = 0; i < mostSteps && after > highest; i++)
+    [best, before, highest, after] = [best + 1, highest, after, at(timeOf(best + 2))];
   // a parabola over the logarithm of the time through the highest and its neighbours, which lie a fixed factor apart
-  const [before, after] = [at(timeOf(best - 1)), at(timeOf(best + 1))];
   const bend = before - 2 * highest + after;
-  const shift = bend < 0 && best > 0 ? Math.max(-1, Math.min(1, (before - after) / (2 * bend))) : 0;
-  const time = timeOf(best + shift);
-  const there = at(time);
-  return there > highest ? { temperature: there, time } : { temperature: highest, time: timeOf(best) };
+  const shift = bend < 0 ? Math.max(-1, Math.min(1, (before - after) / (2 * bend))) : 0;
+  const there = at(timeOf(best + shift));
+  const peak =
+    there > highest ? { temperature: there, time: timeOf(best + shift) } : { temperature: highest, time: timeOf(best) };
+  // what was left before can be hotter than what the second edge brings
+  const atOnce = at(0);
+  return atOnce > peak.temperature ? { temperature: atOnce, time: 0 } : peak;
 }
