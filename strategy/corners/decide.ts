@@ -89,14 +89,19 @@ function least<T>(items: readonly T[], measure: (item: T) => number): T | undefi
   );
 }
 
+/** A corner that has no width is left, and said to be. */
+export const doubledBack = (corner: Corner, leave: Candidate): Decision => ({
+  chosen: leave,
+  ...doubledBackSaid(corner),
+});
+
 /** What is said of a corner that has no width. */
-export function doubledBack({ convex }: Corner, leave: Candidate): Decision {
+export function doubledBackSaid({ convex }: Pick<Corner, 'convex'>): {
+  readonly why: string;
+  readonly problem: string;
+} {
   const why = convex
     ? 'the contour doubles back in a spike without width'
     : 'the contour doubles back in a slit without width';
-  return {
-    chosen: leave,
-    why,
-    problem: `${why}: no path goes round it, and nothing can be said of its heat; mend the drawing`,
-  };
+  return { why, problem: `${why}: no path goes round it, and nothing can be said of its heat; mend the drawing` };
 }

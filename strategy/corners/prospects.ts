@@ -59,6 +59,12 @@ export const treated = (corner: Corner, belowAngle: number): boolean =>
 /** A spike or a slit without width. */
 export const doublesBack = ({ angle }: Corner): boolean => angle < spike || angle > 2 * Math.PI - spike;
 
+/** Way to the nearer of the corners beside it, m, when that is less than the kerf is wide; otherwise null: one kerf takes both. */
+export function tooNear({ room }: Prospect, kerfWidth: number): number | null {
+  const way = 2 * Math.min(room.before, room.after);
+  return way < kerfWidth ? way : null;
+}
+
 /** The path cut before a corner: back along the contour for `countedPath`, but not into the second edge, which is still to be cut. */
 export function pathBefore({ segments }: Contour, corner: Corner, onPath: Point): Segment[] {
   const shift = pointSubtract(onPath, corner.point);

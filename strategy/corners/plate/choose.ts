@@ -17,10 +17,10 @@ export type ChoiceModel<Way extends Judged, State> = {
   /** The state behind a corner. */
   then(corner: number, state: State, way: Way): State;
   /**
-   * Ways that cost more at a corner than what is chosen for it alone, and still may pay: longer waits, less heat. Each is tried with all that follows up
-   * to `reach`, so what is hopeless should not be among them.
+   * Ways that cost more at a corner than what is chosen for it alone, and still may pay: longer waits, less heat. `after` is what the corners behind it would get up
+   * to `reach`. Each way is tried with all of them, so what is hopeless should not be among the answer.
    */
-  dearer(corner: number, state: State, chosen: Way, open: readonly Way[]): readonly Way[];
+  dearer(corner: number, own: Step<Way, State>, after: readonly Step<Way, State>[]): readonly Way[];
   /** Number of the last corner whose heat a choice here matters to. */
   reach(corner: number): number;
 };
@@ -74,7 +74,7 @@ export function choose<Way extends Judged, State>(model: ChoiceModel<Way, State>
     let chosen = own.way;
     let best = ahead;
     if (own.way.over === 0 && after.some(({ way }) => way.addedTime > 0 || way.over > 0)) {
-      for (const way of model.dearer(corner, own.before, own.way, own.open)) {
+      for (const way of model.dearer(corner, own, after)) {
         const saved = after.reduce((sum, one) => sum + Math.max(0, one.way.addedTime), 0);
         const hopeless = after.every((one) => one.way.over === 0) && way.addedTime - own.way.addedTime >= saved;
         if (hopeless) continue;
@@ -99,7 +99,8 @@ export function choose<Way extends Judged, State>(model: ChoiceModel<Way, State>
   return { ways, open, before };
 }
 
-type Step<Way, State> = { readonly before: State; readonly open: readonly Way[]; readonly way: Way };
+/** A corner decided for itself: what was done before it, what is open there, and what it gets. */
+export type Step<Way, State> = { readonly before: State; readonly open: readonly Way[]; readonly way: Way };
 /** Corners decided each for itself, one after another, and the state behind the last. */
 type Ahead<Way, State> = { readonly corners: readonly Step<Way, State>[]; readonly behind: State };
 

@@ -6,8 +6,8 @@ import type { ClockHeat, PierceDeposit, PlateClock } from '../../motion/index.ts
 import { timeOfSegments } from '../../motion/index.ts';
 import { shareAt } from '../../path/compensation/share.ts';
 import { segmentPointDistance } from '../../path/distance.ts';
-import type { Point } from '../../path/point.ts';
-import { pointDistance } from '../../path/point.ts';
+import type { Box, Point } from '../../path/point.ts';
+import { boxUnion, emptyBox, pointDistance } from '../../path/point.ts';
 import type { Segment } from '../../path/segment.ts';
 import { segmentEnd, segmentPart, segmentStart } from '../../path/segment.ts';
 
@@ -28,6 +28,10 @@ export type Leg = {
   readonly puffs: HeatPuffs;
   /** What of that is not on the corner's own path: the rest of a contour before, a pierce. */
   readonly apart: HeatPuffs;
+  /** When the leg begins, s: the corner before, or the cut. */
+  readonly begins: number;
+  /** Around its puffs, m. */
+  readonly box: Box;
   /** The same heat before it became puffs. */
   readonly heat: readonly HeatedPiece[];
   readonly pierces: readonly PierceDeposit[];
@@ -82,7 +86,9 @@ export function cutLegs(
   let piece = 0;
   let pierce = 0;
   let rest: HeatedPiece | null = null;
-  const legs = passed.map(({ corner, time }): Leg => {
+  const legs = passed.map(({ corner, time }, k): Leg => {
+    // a leg's heat is first asked about at the next corner: no sooner need its puffs be told apart
+    const asked = Math.max(time + puffAge, passed[k + 1]?.time ?? 0);
     const pieces: HeatedPiece[] = rest && rest.to > rest.from ? [rest] : [];
     rest = null;
     for (let next = heat[piece]; next && next.from < time; next = heat[++piece]) {
@@ -99,16 +105,20 @@ export function cutLegs(
     for (let next = pierces[pierce]; next && next.time <= time; next = pierces[++pierce]) spots.push(next);
     const first = firstOfOwn(pieces);
     const [other, last] = [pieces.slice(0, first), pieces.slice(first)];
-    const asPuffs = (some: readonly HeatedPiece[]) =>
-      heatPuffs(some, -Infinity, time + puffAge, puffLength, properties);
+    const asPuffs = (some: readonly HeatedPiece[], when: number) =>
+      heatPuffs(some, -Infinity, when, puffLength, properties);
     const pierced = spots.flatMap(({ at, time: when, heat: amount }) => [at.x, at.y, when, amount / thickness, 0]);
-    const apart = Float64Array.from([...asPuffs(other), ...pierced]);
+    // what is not on the corner's own path it meets itself, a little older
+    const apart = Float64Array.from([...asPuffs(other, time + puffAge), ...pierced]);
+    const puffs = Float64Array.from([...asPuffs(last, asked), ...apart]);
     return {
       corner,
       arrives: time,
       ownFrom: last[0]?.from ?? time,
       own: last.map(({ segment }) => segment),
-      puffs: Float64Array.from([...asPuffs(last), ...apart]),
+      puffs,
+      begins: passed[k - 1]?.time ?? 0,
+      box: puffsBox(puffs),
       apart,
       heat: pieces,
       pierces: spots,
@@ -117,6 +127,16 @@ export function cutLegs(
   const after: HeatedPiece[] = rest ? [rest] : [];
   const tail = { heat: [...after, ...heat.slice(piece)], pierces: pierces.slice(pierce) };
   return { legs, tail, missed: places.flatMap((_, i) => (found.has(i) ? [] : [i])) };
+}
+
+/** The box around puffs, m. */
+export function puffsBox(puffs: HeatPuffs): Box {
+  let box = emptyBox;
+  for (let i = 0; i < puffs.length; i += 5) {
+    const [x, y] = [puffs[i] ?? 0, puffs[i + 1] ?? 0];
+    box = boxUnion(box, { minX: x, minY: y, maxX: x, maxY: y });
+  }
+  return box;
 }
 
 /** Rounding of times that were added up, s. */

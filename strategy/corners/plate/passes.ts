@@ -17,6 +17,8 @@ import { scheduledHeat, scheduleOf } from './schedule.ts';
 /** What was decided leg by leg, the cut that it makes, and the plate's heat while that is cut. */
 export type DecidedPlate = {
   readonly ways: readonly WayJudged<PlateWay>[];
+  /** What was open at each corner, and what was done before it. */
+  readonly open: readonly (readonly WayJudged<PlateWay>[])[];
   readonly before: readonly PlateState<PlateWay>[];
   readonly model: PlateModel<PlateWay>;
   readonly schedule: Schedule;
@@ -40,8 +42,11 @@ const mostFields = 4;
 const freeFields = 2;
 /** Corners ahead that a dearer way is tried with. */
 const ahead = 8;
-/** Waits that differ by less are the same, s: the heat they leave differs by less than the field is sure of. */
-const sameWait = 0.02;
+/**
+ * Share of the cut's time by which its treatments may change all in all without the plate's heat being computed again. What was cut lately counts as it was decided
+ * anyway; of older heat a second more or less is some tenths of a kelvin.
+ */
+const sameCut = 3e-3;
 
 /**
  * The treatments of a plate's cut: decided in the order of cutting with the heat of what is cut before, on a field of the plate for the treatments of the time before,
@@ -90,18 +95,18 @@ export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): 
     const schedule = scheduleOf(legs, chosen.ways);
     const field = fieldFor(chosen.ways, schedule);
     const next = pass({ field, ...schedule }, fields > freeFields ? chosen.ways : undefined);
-    const settled = next.ways.every((way, k) => same(way, chosen.ways[k]));
+    const changed = next.ways.reduce(
+      (sum, way, k) => sum + Math.abs(way.addedTime - (chosen.ways[k]?.addedTime ?? 0)),
+      0,
+    );
     chosen = next;
-    if (!settled && fields < mostFields) continue;
+    if (changed > sameCut * prepared.duration && fields < mostFields) continue;
     going(1);
-    const { model, ways, before } = chosen;
+    const { model, ways, open, before } = chosen;
     const meanAtEnd = meanOf(prepared, box, field, prepared.duration + schedule.late);
-    return { model, ways, before, schedule: scheduleOf(legs, ways), field, fields, meanAtEnd };
+    return { model, ways, open, before, schedule: scheduleOf(legs, ways), field, fields, meanAtEnd };
   }
 }
-
-const same = (a: WayJudged<PlateWay>, b: WayJudged<PlateWay> | undefined): boolean =>
-  a.way === b?.way && Math.abs(a.wait - b.wait) < sameWait;
 
 /** Beyond so many times the length over which heat spreads in a cut, √(4αt), the plate is cold. */
 const coldBeyond = 3;

@@ -5,7 +5,7 @@ import type { PlateField } from '../../heat/plate/index.ts';
 import type { PlateProperties } from '../../heat/properties.ts';
 import { diffusionLength } from '../../heat/properties.ts';
 import type { Box, Point } from '../../path/point.ts';
-import type { ChoiceModel, Judged } from './choose.ts';
+import type { ChoiceModel, Judged, Step } from './choose.ts';
 import { leastDwell } from '../dwell.ts';
 import type { Leg } from './legs.ts';
 
@@ -106,14 +106,20 @@ export type PlateModelInput<Way extends OwnWay> = {
 
 /** The choice at the corners of a plate, and how each way would turn out that need not be looked at for it. */
 export type PlateModel<Way extends OwnWay> = ChoiceModel<WayJudged<Way>, PlateState<Way>> & {
-  /** All ways at a corner, one asked for or not, leaving it first. */
-  everyWay(corner: number, state: PlateState<Way>): readonly WayJudged<Way>[];
+  /**
+   * What else fits a corner that needs nothing, or got what was asked for, on the plate as warm as the one chosen found it; no waits. Seconds later or sooner the plate
+   * there differs by little.
+   */
+  beside(corner: number, state: PlateState<Way>, chosen: WayJudged<Way>): readonly WayJudged<Way>[];
 };
 
 /** Heat younger than this is taken straight from the path, s: the field would not be read from its grid alone. */
 const settled = 16;
 /** Without a field heat counts for so long, s. */
 const remembered = 40;
+/** Heat that is taken from the path is no older, s; and comes no further than so many times its spread √(4αt). */
+const longestYoung = 30;
+const puffReach = 2.5;
 /** The plate's edge throws heat back over so many times its spread √(4αt). */
 const mirrored = 2;
 /** Waits longer than needed that are tried because they may cool what follows, s. */
@@ -123,6 +129,7 @@ const longerWaits = [0.25, 0.5, 1, 1.5, 2, 3, 4] as const;
 export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): PlateModel<Way> {
   const { legs, corners, limit, ignition, plateTemperature, properties, plate, old } = input;
   const far = mirrored * diffusionLength(properties, settled);
+  const reach = (puffReach * diffusionLength(properties, old ? longestYoung : remembered)) ** 2;
 
   const ownOf = (k: number): { leg: Leg; own: OwnCorner<Way> } => {
     const leg = legs[k];
@@ -131,43 +138,56 @@ export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): Pla
     return { leg, own };
   };
 
+  // the field's clock, as it was when its cut came here
+  const then = (j: number) => old?.arrives[j] ?? 0;
+
+  /** Rise, K, that puffs in a box leave at a place and its images behind the edges; those let go before `since` don't count. */
+  const rise = (puffs: HeatPuffs, box: Box | null, since: number, images: readonly Point[], time: number): number => {
+    if (puffs.length === 0) return 0;
+    let sum = 0;
+    // puffs beyond four times their width add nothing: √(2·alpha·age), the oldest of them as old as what is remembered
+    for (const { x, y } of images) {
+      if (box && distanceSquared(box, x, y) > reach) continue;
+      sum += puffsRise(since === -Infinity ? puffs : partAfter(puffs, since), x, y, time, properties);
+    }
+    return sum;
+  };
+
   /** Temperature, K, at a place at a time of all that was cut before a corner's own path. */
   const background = (k: number, state: PlateState<Way>, place: Point, time: number): number => {
     const { leg } = ownOf(k);
     if (!contains(plate, place)) return plateTemperature;
     const images = imagesOf(place, plate, far);
-    const rise = (puffs: HeatPuffs, at: number): number =>
-      images.reduce((sum, { x, y }) => sum + puffsRise(puffs, x, y, at, properties), 0);
-    // the field's clock, as it was when its cut came here
-    const then = (j: number) => old?.arrives[j] ?? 0;
     const since = old
       ? Math.min(
           old.field.splitBefore(then(k) + time - leg.arrives - state.late - settled),
           then(k) - (leg.arrives - leg.ownFrom),
         )
       : -Infinity;
+    /** What of a leg's heat is after `since`: all of it, or from when on by the leg's own clock. */
+    const from = (j: number, begins: number, arrives: number) =>
+      since <= then(j) - (arrives - begins) ? -Infinity : since - (then(j) - arrives);
 
-    let recent = rise(partAfter(leg.apart, since - (then(k) - leg.arrives)), time - state.late);
+    let recent = rise(leg.apart, null, from(k, leg.begins, leg.arrives), images, time - state.late);
     /** What is `since` on the clock of this cut. */
     let split = leg.arrives + state.late - (then(k) - since);
     for (let done = state.done; done; done = done.before) {
       const { leg: j, judged, arrives } = done;
       const addedThen = old?.addedTime[j] ?? 0;
       if (old ? then(j) + addedThen <= since : time - arrives - judged.addedTime > remembered) break;
-      recent += rise(partAfter(judged.way.puffs, since - then(j)), time - arrives);
+      const treated = since <= then(j) ? -Infinity : since - then(j);
+      recent += rise(judged.way.puffs, null, treated, images, time - arrives);
       if (then(j) <= since) {
         split = arrives + Math.min(since - then(j), judged.addedTime);
         break;
       }
       const own = legs[j];
       if (!own) break;
-      recent += rise(partAfter(own.puffs, since - (then(j) - own.arrives)), time - (arrives - own.arrives));
+      recent += rise(own.puffs, own.box, from(j, own.begins, own.arrives), images, time - (arrives - own.arrives));
       split = arrives - (then(j) - since);
     }
-    return (
-      recent +
-      (old ? old.field.background(place, since, since === -Infinity ? time : since + time - split) : plateTemperature)
-    );
+    if (!old) return plateTemperature + recent;
+    return recent + old.field.background(place, since, since === -Infinity ? time : since + time - split);
   };
 
   const overBy = (way: Way, wait: number, returnsAt: number): number => {
@@ -236,10 +256,17 @@ export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): Pla
       }
       return [leave, ...own.others(near).map((way) => asked(k, state, way))];
     },
-    everyWay(k, state) {
+    beside(k, state, chosen) {
       const { own } = ownOf(k);
       const near = own.near.size > 0 ? loopsNear(state, own.near) : [];
-      return [judged(k, state, own.leave, 0), ...own.others(near).map((way) => asked(k, state, way))];
+      return own
+        .others(near)
+        .filter(({ longestWait }) => longestWait === undefined)
+        .map((way) => {
+          const returnsAt = chosen.background + way.rise(0);
+          const over = own.counts ? overBy(way, 0, returnsAt) : 0;
+          return { ...chosen, way, wait: 0, delay: way.delay, addedTime: way.addedTime, returnsAt, over };
+        });
     },
     then(k, { late, done, loops }, way) {
       const { leg } = ownOf(k);
@@ -250,14 +277,38 @@ export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): Pla
         loops: way.way.isLoop ? { placed, before: loops } : loops,
       };
     },
-    dearer(k, state, chosen, open) {
-      const under = open.filter((way) => way.over === 0 && way !== chosen && way.addedTime > chosen.addedTime);
-      const longer = open.flatMap((way) => {
-        const longest = way.way.longestWait;
-        if (way.over > 0 || longest === undefined) return [];
-        return longerWaits.flatMap((more) =>
-          way.wait + more <= longest ? [judged(k, state, way.way, way.wait + more)] : [],
-        );
+    dearer(k, { before: state, way: chosen, open }, after) {
+      const { leg } = ownOf(k);
+      const passed = leg.arrives + state.late;
+      const near = after.flatMap((step, i): Near<Way>[] => {
+        const later = ownOf(k + 1 + i);
+        const { x, y } = step.way.way.place;
+        if (Math.hypot(x - chosen.way.place.x, y - chosen.way.place.y) > influence) return [];
+        return [{ step, time: later.leg.arrives + step.before.late - passed }];
+      });
+      if (near.length === 0) return [];
+      const inTrouble = near.some(({ step }) => step.way.over > 0);
+      /** What a way could save at most at the corners near by, s. */
+      const saves = (heat: HeatPuffs, wait: number): number =>
+        near.reduce((sum, { step, time }) => {
+          const { x, y } = step.way.way.place;
+          const less =
+            puffsRise(chosen.way.puffs, x, y, time, properties) -
+            puffsRise(heat, x, y, time, properties) +
+            ((step.way.background - plateTemperature) * wait) / (time + wait);
+          return less > 0 ? sum + savedBy(step, less) : sum;
+        }, 0);
+      const pays = (way: Way, addedTime: number): boolean => {
+        const more = addedTime - chosen.addedTime;
+        return more > 0 && (inTrouble || saves(way.puffs, more) > more);
+      };
+      const under = open.filter((way) => way.over === 0 && way !== chosen && pays(way.way, way.addedTime));
+      const longer = open.flatMap(({ way, wait, over }) => {
+        const longest = way.longestWait;
+        if (over > 0 || longest === undefined) return [];
+        return longerWaits
+          .filter((more) => wait + more <= longest && pays(way, way.addedTime + wait + more))
+          .map((more) => judged(k, state, way, wait + more));
       });
       return [...under, ...longer].sort((a, b) => a.addedTime - b.addedTime);
     },
@@ -268,6 +319,30 @@ export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): Pla
 /** Step over which the cooling's slope is taken, and the least that a wait is made longer by, s. */
 const slopeStep = 0.01;
 const leastMore = 1e-3;
+
+/** Heat of a treatment is felt no farther away within the corners looked ahead, m. */
+const influence = 0.08;
+
+type Near<Way> = {
+  readonly step: Step<WayJudged<Way>, PlateState<Way>>;
+  /** From one corner to the other, s. */
+  readonly time: number;
+};
+
+/** Time that a corner could save at most if it were cooler by so much, K: by something quicker that is only just too hot, or by a shorter wait. */
+function savedBy<Way extends OwnWay>({ way, open }: Near<Way>['step'], cooler: number): number {
+  const quicker = open.filter((one) => one.addedTime < way.addedTime && one.over <= cooler);
+  const least = Math.min(way.addedTime, ...quicker.map(({ addedTime }) => addedTime));
+  const rise = way.way.roughRise;
+  if (!rise || way.wait === 0) return way.addedTime - least;
+  const shorter = Math.max(0, way.wait - steadyStep);
+  const slope = (rise(shorter) - rise(way.wait)) / (way.wait - shorter);
+  const shortened = slope > 0 ? Math.min(way.wait, cooler / slope) : way.wait;
+  return Math.max(way.addedTime - least, shortened);
+}
+
+/** Step over which the cooling at the end of a wait is taken, s. */
+const steadyStep = 0.1;
 
 /** What rounding leaves over a limit, K. */
 const rounding = 1e-9;
@@ -297,8 +372,16 @@ const puffFields = 5;
 const contains = ({ minX, minY, maxX, maxY }: Box, { x, y }: Point): boolean =>
   x >= minX && x <= maxX && y >= minY && y <= maxY;
 
+/** Square of the distance from a box to a place, m². */
+function distanceSquared({ minX, minY, maxX, maxY }: Box, x: number, y: number): number {
+  const dx = Math.max(minX - x, 0, x - maxX);
+  const dy = Math.max(minY - y, 0, y - maxY);
+  return dx * dx + dy * dy;
+}
+
 /** A place and its mirror images behind the plate's edges that are nearer than `far`, m. */
 function imagesOf({ x, y }: Point, { minX, minY, maxX, maxY }: Box, far: number): Point[] {
+  if (x - minX >= far && maxX - x >= far && y - minY >= far && maxY - y >= far) return [{ x, y }];
   const across = [x, ...(x - minX < far ? [2 * minX - x] : []), ...(maxX - x < far ? [2 * maxX - x] : [])];
   const upwards = [y, ...(y - minY < far ? [2 * minY - y] : []), ...(maxY - y < far ? [2 * maxY - y] : [])];
   return across.flatMap((u) => upwards.map((v) => ({ x: u, y: v })));

@@ -109,7 +109,7 @@ function cornerOf(
   k: number,
   chosen: WayJudged<PlateWay>,
   prepared: PreparedPlate,
-  { model, before, schedule }: DecidedPlate,
+  { model, open, before, schedule }: DecidedPlate,
   limits: Limits,
 ): PlateCornerPlan {
   const { request, context } = prepared;
@@ -117,7 +117,9 @@ function cornerOf(
   const wanted = request.overrides?.[found.id];
   const state = before[k];
   const lookedAt = state !== undefined && (sharp || (wanted !== undefined && wanted !== 'leave'));
-  const every = lookedAt ? model.everyWay(k, state) : [chosen];
+  const judged = open[k] ?? [chosen];
+  // what was asked for, or needs nothing, was not compared when it was decided
+  const every = lookedAt && judged.length === 1 ? [chosen, ...model.beside(k, state, chosen)] : judged;
   const refusals = lookedAt ? tried(loopsNear(state, near)).filter((one): one is Candidate => !isWay(one)) : [];
   const own = candidateOn(chosen, limits);
   const after: ReturnType<typeof afterwards>[] = [];

@@ -13,10 +13,12 @@ import type { Segment } from '../../path/segment.ts';
 import { pathLength, segmentEnd } from '../../path/segment.ts';
 import type { Candidate, Context, CornerPlanRequest, Prospect, Way } from '../case.ts';
 import { contextOf } from '../context.ts';
+import { doubledBackSaid } from '../decide.ts';
+import { hundredths } from '../hundredths.ts';
 import { loopWays, mostReach } from '../loop-option.ts';
 import { easeWay, roundWay } from '../options.ts';
 import { drawnOf } from '../planned.ts';
-import { doublesBack, pathAfter, pathBefore, prospectsOf, treated } from '../prospects.ts';
+import { doublesBack, pathAfter, pathBefore, prospectsOf, tooNear, treated } from '../prospects.ts';
 import { ruledOut } from '../refused.ts';
 import type { CutLegs } from './legs.ts';
 import { cutLegs } from './legs.ts';
@@ -42,6 +44,8 @@ export type PlateCorner = OwnCorner<PlateWay> & {
   readonly found: Prospect;
   /** Whether the rules would treat it. */
   readonly sharp: boolean;
+  /** Why nothing can be said or done: it has no width, or shares a kerf with the next. */
+  readonly useless: { readonly why: string; readonly problem: string } | null;
   /** Everything that was tried next to the loops placed so far: what fits as a way, what does not with its reason. Leaving is not among it. */
   readonly tried: (near: readonly PlacedWay<PlateWay>[]) => readonly (PlateWay | Candidate)[];
 };
@@ -141,7 +145,7 @@ function plateCorner(
 ): PlateCorner {
   const { request } = context;
   const { corner, contour, onPath, id } = found;
-  const usable = !doublesBack(corner);
+  const usable = !doublesBack(corner) && tooNear(found, request.cut.kerfWidth) === null;
   const sharp = treated(corner, request.rules.treatBelowAngle);
   const wanted = usable ? request.overrides?.[id] : undefined;
   const along = pathBefore(contour.contour, corner, onPath.point);
@@ -182,7 +186,8 @@ function plateCorner(
   const leave = () => (left ??= leaveWay(at, heat));
   return {
     found,
-    sharp,
+    sharp: usable && sharp,
+    useless: usable ? null : uselessSaid(found, request.cut.kerfWidth),
     near,
     get leave() {
       return leave();
@@ -200,6 +205,16 @@ function plateCorner(
               : (tried(placed)
                   .filter(isWay)
                   .find(({ treatment }) => treatment === wanted) ?? null),
+  };
+}
+
+function uselessSaid(found: Prospect, kerfWidth: number): PlateCorner['useless'] {
+  const way = tooNear(found, kerfWidth);
+  if (way === null || doublesBack(found.corner)) return doubledBackSaid(found.corner);
+  const why = `the next corner is ${hundredths(way)} away, less than the kerf is wide`;
+  return {
+    why,
+    problem: `${why}: one kerf takes both, and no return temperature holds for either; draw them as one`,
   };
 }
 

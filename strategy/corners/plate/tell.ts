@@ -1,9 +1,8 @@
 import { celsius, degrees, millimetres, seconds } from '../../units/said.ts';
 import type { Candidate, CornerTreatment } from '../case.ts';
-import { doubledBack, whyNot } from '../decide.ts';
+import { whyNot } from '../decide.ts';
 import { candidateOf } from '../heated.ts';
 import { dwellSaid, leaveSaid } from '../options.ts';
-import { doublesBack } from '../prospects.ts';
 import type { CornerRules } from '../rules.ts';
 import type { PlateWay } from './own-ways.ts';
 import type { WayJudged } from './plate-model.ts';
@@ -69,10 +68,7 @@ export function told(
   const { found, sharp } = corner;
   const leave = every[0] ?? chosen;
   const own = candidateOn(chosen, limits);
-  if (doublesBack(found.corner)) {
-    const { why, problem } = doubledBack(found.corner, own);
-    return { chosen: own, why, problem };
-  }
+  if (corner.useless) return { chosen: own, ...corner.useless };
   const followed = wanted !== undefined && chosen.way.treatment === wanted;
   const automatic = byRule(corner, chosen, leave, own, candidates, every, limits);
   if (wanted === undefined) return automatic;

@@ -28,6 +28,8 @@ export type TipConditions = Pick<CornerPlanRequest, 'cut' | 'rules'> & { readonl
 /** Steps of the angle, of the wait and of the depth between which values are interpolated: even in the logarithm. */
 const angleStep = 0.15;
 const [leastAngle, mostAngle] = [0.04, 3.05];
+const angleSteps = Math.ceil(Math.log(mostAngle / leastAngle) / angleStep);
+const kinds = ['plain', 'loop', 'ease', 'round'] as const;
 const waits = [0, 0.4, 1.5, 5] as const;
 const depths: readonly number[] = [
   1e-5, 5e-5, 1.2e-4, 2.2e-4, 3.5e-4, 5.5e-4, 8e-4, 1.1e-3, 1.5e-3, 2.2e-3, 3.2e-3, 5e-3, 8e-3, 1.4e-2,
@@ -41,16 +43,44 @@ const anyPlate = 300;
  * them against `peakAfter` and `burnBack` themselves.
  */
 export function tipPeaks({ cut, rules, properties }: TipConditions): TipPeaks {
-  const known = new Map<string, number>();
-  const valueAt = (treatment: TipKind['treatment'], angle: number, wait: number, depth: number): number => {
-    const key = `${treatment} ${angle} ${wait} ${depth}`;
-    let value = known.get(key);
-    if (value === undefined) {
-      const question = standardQuestion(treatment, angle, wait);
-      value = peakAfter(question, depth).temperature - returnOf(question);
-      known.set(key, value);
-    }
-    return value;
+  const { feed, kerfWidth, heatIntoPlate } = cut;
+  const key = JSON.stringify([
+    feed,
+    kerfWidth,
+    heatIntoPlate,
+    rules.loop,
+    rules.ease,
+    rules.round,
+    rules.burnBack?.limit,
+    properties,
+  ]);
+  let peaks = lately.get(key);
+  if (!peaks) {
+    peaks = peaksOf({ cut, rules, properties });
+    if (lately.size >= mostKept) lately.delete(lately.keys().next().value ?? '');
+    lately.set(key, peaks);
+  }
+  return peaks;
+}
+
+/** Of the strategies planned with last: the next plan is most often the same with another choice. */
+const lately = new Map<string, TipPeaks>();
+const mostKept = 6;
+
+function peaksOf({ cut, rules, properties }: TipConditions): TipPeaks {
+  const asked = rules.burnBack?.limit;
+  const kept = asked === undefined || depths.includes(asked) ? depths : [...depths, asked];
+  // NaN for what was not asked about yet
+  const known = new Float64Array(kinds.length * (angleSteps + 1) * waits.length * kept.length).fill(Number.NaN);
+  const valueAt = (treatment: TipKind['treatment'], step: number, wait: number, depth: number): number => {
+    const place = ((kinds.indexOf(treatment) * (angleSteps + 1) + step) * waits.length + wait) * kept.length + depth;
+    const value = known[place] ?? Number.NaN;
+    if (!Number.isNaN(value)) return value;
+    const angle = Math.min(mostAngle, leastAngle * Math.exp(step * angleStep));
+    const question = standardQuestion(treatment, angle, waits[wait] ?? 0);
+    const found = peakAfter(question, kept[depth]).temperature - returnOf(question);
+    known[place] = found;
+    return found;
   };
   const standardQuestion = (kind: TipKind['treatment'], angle: number, wait: number): ReturnQuestion => {
     const turn = Math.PI - angle;
@@ -83,27 +113,25 @@ export function tipPeaks({ cut, rules, properties }: TipConditions): TipPeaks {
     const sizes = loopRadii(angle, { ...rules.loop, smallestArc: 0 });
     return sizes.kind === 'none' ? rules.loop.radius : Math.max(...sizes.radii);
   };
-  const over = ({ angle, wait, treatment }: TipKind, depth: number): number => {
+  const overAt = ({ angle, wait, treatment }: TipKind, depth: number): number => {
     const held = Math.min(mostAngle, Math.max(leastAngle, angle));
-    return cubic(
-      Math.log(held / leastAngle) / angleStep,
-      Math.ceil(Math.log(mostAngle / leastAngle) / angleStep),
-      (i) => {
-        const node = Math.min(mostAngle, leastAngle * Math.exp(i * angleStep));
-        // an ease and a round are one each; of waits the longest kept stands for longer ones
-        if (treatment !== 'plain') return valueAt(treatment, node, 0, depth);
-        return cubic(placeAmong(waits, wait, shortWait), waits.length - 1, (n) =>
-          valueAt('plain', node, waits[n] ?? 0, depth),
-        );
-      },
-    );
+    return cubic(Math.log(held / leastAngle) / angleStep, angleSteps, (i) => {
+      // loops, eases and rounds are one each; of waits the longest kept stands for longer ones
+      if (treatment !== 'plain') return valueAt(treatment, i, 0, depth);
+      return cubic(placeAmong(waits, wait, shortWait), waits.length - 1, (n) => valueAt('plain', i, n, depth));
+    });
+  };
+  const over = (kind: TipKind, depth: number): number => {
+    const known_ = kept.indexOf(depth);
+    if (known_ < 0) throw new RangeError(`depth ${depth} m is none of those kept`);
+    return overAt(kind, known_);
   };
   return {
     over: (kind, depth = measuringDepth) => over(kind, depth),
     burnBack(kind, returnsAt, ignition) {
       const needed = ignition - returnsAt;
       if (!(needed > 0)) return depths.at(-1) ?? 0;
-      const at = (i: number) => over(kind, depths[i] ?? 0);
+      const at = (i: number) => overAt(kind, i);
       // the peak falls with the depth, but for the first hundredths of a millimetre
       let [low, high] = [0, depths.length];
       while (high - low > 1) {

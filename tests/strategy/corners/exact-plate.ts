@@ -125,7 +125,7 @@ export function exactModel(
       late: late + chosen.addedTime,
       done: [...done, { chosen, arrives: (legs[k]?.arrives ?? 0) + late }],
     }),
-    dearer(k, state, chosen, open) {
+    dearer(k, { before: state, way: chosen, open }) {
       const more = open.flatMap(({ way, wait, over }) =>
         over > 0 || way.longestWait === undefined
           ? []

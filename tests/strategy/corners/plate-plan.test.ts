@@ -1,0 +1,333 @@
+import { describe, expect, it } from 'vitest';
+import type { PlatePlanRequest } from '../../../strategy/corners/index.ts';
+import { cornerPlan, platePlan, PlatePlanCancelled } from '../../../strategy/corners/index.ts';
+import { choose, outcomeOf } from '../../../strategy/corners/plate/choose.ts';
+import { decidedPlate } from '../../../strategy/corners/plate/passes.ts';
+import { preparedPlate } from '../../../strategy/corners/plate/prepared.ts';
+import { tipPeaks } from '../../../strategy/corners/plate/tip-peaks.ts';
+import { burnBackDefaults } from '../../../strategy/corners/rules.ts';
+import { burnBack, ignitionThreshold, midZoneProperties, peakAfter, returnOf } from '../../../strategy/heat/index.ts';
+import { cutPathOf } from '../../../strategy/path/compensation/index.ts';
+import type { Point } from '../../../strategy/path/index.ts';
+import { lineBetween, loopAt } from '../../../strategy/path/index.ts';
+import { seededNumbers } from '../../bench/line.ts';
+import { runs } from '../../support/runs.ts';
+import { bruteForce, exactModel } from './exact-plate.ts';
+
+const kerfWidth = 8e-4;
+const polygon = (points: readonly Point[]) => ({
+  segments: points.map((p, i) => lineBetween(p, points[(i + 1) % points.length] ?? p)),
+});
+
+type Change = Partial<Omit<PlatePlanRequest, 'cutPath' | 'drive'>>;
+
+/** A plate's cut of the contours given, in their order, far from the plate's edge when nothing else is said. */
+function cutOf(outlines: readonly (readonly Point[])[], change: Change = {}): PlatePlanRequest {
+  const contours = outlines.map((points, i) => ({
+    id: String(i + 1),
+    role: 'outer' as const,
+    contour: polygon(points),
+  }));
+  const cut = {
+    feed: 0.7 / 60,
+    peakPower: 4000,
+    duty: 1,
+    pulseFrequency: null,
+    oxygenPressure: 7e4,
+    standoff: 1e-3,
+    focusPosition: 5e-3,
+    kerfWidth,
+    heatIntoPlate: 1.1e7,
+  };
+  const { path } = cutPathOf({
+    contours: contours.map((one) => ({ ...one, name: `part ${one.id}`, parent: null })),
+    inserts: [],
+    kerfWidth,
+    outside: { kind: 'sharp', limit: 10 },
+    leadIn: { shape: { kind: 'line' }, needed: 4e-3, craterRadius: 1e-3, clearance: 1e-3 },
+    plate: null,
+  });
+  const asked = { ...cut, ...change.cut };
+  return {
+    contours,
+    plate: { min: { x: -0.5, y: -0.5 }, max: { x: 1.2, y: 0.8 } },
+    rules: {
+      treatBelowAngle: (100 * Math.PI) / 180,
+      returnExcessLimit: 90,
+      loop: { allowed: true, radius: 4e-3, minExtension: 2e-3, maxExtension: 0.02, clearance: 1e-3 },
+      dwell: { allowed: true, maxDuration: 6, restart: 0.5 },
+    },
+    profile: { axes: { maxFeed: 1, acceleration: 2, jerk: 50 }, smallestArc: 1e-3 },
+    thickness: 0.019,
+    plateTemperature: 293.15,
+    cutPath: path,
+    drive: { feed: asked.feed, acceleration: 2, jerk: 50, travel: 1, pierce: 1.5, restart: 0.5 },
+    pierceHeat: 4000,
+    lossCoefficient: 0,
+    ...change,
+    cut: asked,
+  };
+}
+
+const square = (x: number, y: number, side: number): Point[] => [
+  { x, y },
+  { x: x + side, y },
+  { x: x + side, y: y + side },
+  { x, y: y + side },
+];
+
+/** Small parts close together whose corners warm each other, under rules of all kinds: the same for a seed. */
+function randomCut(next: () => number): PlatePlanRequest {
+  const outlines: Point[][] = [];
+  let x = 0;
+  let corners = 0;
+  while (corners < 4) {
+    const count = 3 + Math.floor(next() * 2);
+    const radius = 0.01 + 0.02 * next();
+    const turn = 2 * Math.PI * next();
+    outlines.push(
+      Array.from({ length: count }, (_, i) => {
+        const angle = turn + (2 * Math.PI * (i + 0.6 * next())) / count;
+        return { x: x + radius * Math.cos(angle), y: radius * Math.sin(angle) };
+      }),
+    );
+    corners += count;
+    x += 2 * radius + 0.026;
+  }
+  const restart = 2 * next();
+  return cutOf(outlines, {
+    rules: {
+      treatBelowAngle: 3.1,
+      returnExcessLimit: 60 + 80 * next(),
+      loop: { allowed: true, radius: 2e-3 + 3e-3 * next(), minExtension: 2e-3, maxExtension: 0.03, clearance: 1e-3 },
+      dwell: { allowed: next() < 0.8, maxDuration: 6, restart },
+      ease: { allowed: next() < 0.7, length: 5e-3, feedShare: 0.4, powerShare: 0.3 + 0.1 * next() },
+      round: { allowed: next() < 0.5, radius: 1e-3, tolerance: 0.4e-3 },
+    },
+    cut: { ...cutOf([]).cut, feed: 0.011 + 0.01 * next(), heatIntoPlate: 6.5e6 + 5e6 * next() },
+  });
+}
+
+describe('the plan of a small plate', () => {
+  it('comes within 2 % of the best of all combinations, with no more corners over the limit', () => {
+    const next = seededNumbers(20_261_201);
+    const gaps: number[] = [];
+    for (let n = 0; n < runs(8, 120); n++) {
+      const prepared = preparedPlate(randomCut(next));
+      const exact = exactModel(prepared);
+      const best = bruteForce(exact, 0.06);
+      const decided = decidedPlate(prepared);
+      // judged by the direct sum of all heat, whatever the plan took the plate for
+      let state = exact.start;
+      const judged = decided.ways.map(({ way, wait }, k) => {
+        const one = exact.exactly(k, state, way, wait);
+        state = exact.then(k, state, one);
+        return { way: one };
+      });
+      const plainlyOver = judged.filter(({ way }) => way.over > 1.5).length;
+      expect(plainlyOver).toBeLessThanOrEqual(best.over);
+      if (best.addedTime > 0.2) gaps.push(outcomeOf(judged).addedTime / best.addedTime - 1);
+    }
+    expect(Math.max(...gaps)).toBeLessThan(0.02);
+    expect(gaps.reduce((sum, gap) => sum + gap, 0) / gaps.length).toBeLessThan(0.005);
+  });
+
+  it('decides as the best of all combinations where it sums up the heat directly itself', () => {
+    const next = seededNumbers(77);
+    for (let n = 0; n < runs(4, 60); n++) {
+      const exact = exactModel(preparedPlate(randomCut(next)), { sacrifices: true });
+      const best = bruteForce(exact, 0.06);
+      const chosen = outcomeOf(choose(exact).ways.map((way) => ({ way })));
+      expect(chosen.over).toBe(best.over);
+      expect(chosen.addedTime).toBeLessThan(best.addedTime * 1.02 + 0.01);
+    }
+  });
+
+  it('is the same each time, and survives being stored as JSON', () => {
+    const request = randomCut(seededNumbers(5));
+    const once = platePlan(request);
+    expect(platePlan(request)).toEqual(once);
+    expect(JSON.parse(JSON.stringify(once))).toEqual(once);
+  });
+
+  it('knows of each corner how warm the plate had become, when the cut is back, and the next best', () => {
+    const plan = platePlan(cutOf([square(0, 0, 0.04), square(0.045, 0, 0.04), square(0.09, 0, 0.04)]));
+    const times = plan.corners.map(({ returnTime }) => returnTime ?? -1);
+    expect(Math.min(...times)).toBeGreaterThan(0);
+    expect(Math.max(...times)).toBeLessThan(plan.totals.cutTime);
+    // the first corner is on a plate that is cold but for its own pierce; those of later parts are not
+    const warmth = (id: string) =>
+      Math.max(...plan.corners.filter((c) => c.contourId === id).map((c) => c.background ?? 0));
+    expect(plan.corners[0]?.background).toBeLessThan(warmth('3'));
+    expect(warmth('3')).toBeGreaterThan(warmth('1'));
+    expect(plan.totals.highestBackground).toBe(Math.max(warmth('1'), warmth('2'), warmth('3')));
+    const treated = plan.corners.filter(({ treatment }) => treatment !== 'leave');
+    expect(treated.length).toBeGreaterThan(0);
+    for (const { returnWith, runnerUp, treatment, problem } of treated) {
+      expect(problem === undefined).toBe(returnWith <= plan.limit + 1e-9);
+      expect(runnerUp.treatment).not.toBe(treatment);
+      if (runnerUp.treatment !== null) expect(runnerUp.costsMore).toBeGreaterThan(-1e-9);
+      expect(runnerUp.why.length).toBeGreaterThan(10);
+    }
+    expect(plan.corners.some(({ why }) => /the plate there has warmed to \d+ °C by then/.test(why))).toBe(true);
+  });
+
+  it('judges against the plate as it comes: what the cut itself warms is not forgiven', () => {
+    const request = cutOf([square(0, 0, 0.03), square(0.034, 0, 0.03), square(0.068, 0, 0.03), square(0.102, 0, 0.03)]);
+    const cold = cornerPlan(request);
+    const warm = platePlan(request);
+    expect(warm.limit).toBeCloseTo(cold.limit, 9);
+    expect(warm.totals.addedTime).toBeGreaterThan(cold.totals.addedTime);
+  });
+
+  it('loses to the plan on the cold plate nothing where nothing is warm yet', () => {
+    const request = cutOf([square(0, 0, 0.3)]);
+    const [cold, warm] = [cornerPlan(request), platePlan(request)];
+    expect(warm.corners.map(({ treatment }) => treatment)).toEqual(cold.corners.map(({ treatment }) => treatment));
+  });
+
+  it('keeps to what the programmer asked for, and says when it does not fit', () => {
+    const plain = platePlan(cutOf([square(0, 0, 0.05)]));
+    const ids = plain.corners.map(({ id }) => id);
+    const asked = { [ids[0] ?? '']: 'leave', [ids[1] ?? '']: 'loop', [ids[2] ?? '']: 'ease' } as const;
+    const plan = platePlan(cutOf([square(0, 0, 0.05)], { overrides: asked }));
+    expect(plan.corners.slice(0, 2).map(({ treatment }) => treatment)).toEqual(['leave', 'loop']);
+    expect(plan.corners[0]?.why).toContain('asked for by the programmer');
+    expect(plan.corners[0]?.problem).toContain('over the limit');
+    expect(plan.corners[2]?.problem).toContain('ease asked for by the programmer is refused');
+  });
+
+  it('keeps loops of neighbouring parts clear of each other', () => {
+    const gap = 0.012;
+    const plan = platePlan(
+      cutOf([square(0, 0, 0.05), square(0.05 + gap, 0.05 + gap, 0.05)], {
+        overrides: { 'c1-2': 'loop', 'c2-0': 'loop' },
+      }),
+    );
+    const [first, second] = ['c1-2', 'c2-0'].map((id) => plan.corners.find((c) => c.id === id));
+    const largest = 4e-3;
+    expect(Math.min(first?.loop?.radius ?? 0, second?.loop?.radius ?? 0)).toBeLessThan(largest - 1e-6);
+  });
+});
+
+describe('burn-back in the plan', () => {
+  const needle = [
+    { x: 0, y: 0 },
+    { x: 0.12, y: 0 },
+    { x: 0.12, y: 0.035 },
+  ];
+
+  it('is judged with the peak at the depth allowed, beside the return temperature', () => {
+    const rules = { ...cutOf([]).rules, returnExcessLimit: 1000 };
+    const anchor = { limit: 0.3e-3, ignition: 1233 };
+    const free = platePlan(cutOf([needle], { rules: { ...rules, burnBack: { ...anchor, judged: false } } }));
+    const strict = platePlan(cutOf([needle], { rules: { ...rules, burnBack: { ...anchor, judged: true } } }));
+    const tip = (plan: typeof free) => plan.corners.reduce((a, b) => (a.angle < b.angle ? a : b));
+    expect(tip(free).treatment).toBe('leave');
+    expect(tip(free).burnBack).toBeGreaterThan(0);
+    expect(tip(strict).problem ?? tip(strict).why).toMatch(/burn back|for \d/);
+    expect(tip(strict).burnBack ?? 1).toBeLessThanOrEqual((tip(free).burnBack ?? 0) + 1e-9);
+  });
+
+  it('starts from the threshold that the heat model starts from', () => {
+    expect(burnBackDefaults.ignition).toBe(ignitionThreshold);
+  });
+
+  it('is told from values at steps as from the tip itself', () => {
+    const next = seededNumbers(3);
+    const { cut, rules } = cutOf([]);
+    const peaks = tipPeaks({ cut, rules, properties: midZoneProperties });
+    for (let n = 0; n < runs(6, 60); n++) {
+      const angle = 0.3 + 2.5 * next();
+      const turn = Math.PI - angle;
+      const corner = {
+        point: { x: 0, y: 0 },
+        incoming: { x: 1, y: 0 },
+        outgoing: { x: Math.cos(turn), y: Math.sin(turn) },
+        angle,
+      };
+      const wait = n % 3 === 1 ? 4 * next() : 0;
+      const loop = loopAt(corner, Math.min(4e-3, 0.02 * Math.tan(angle / 2)));
+      const treatment =
+        n % 3 === 2
+          ? ({ kind: 'loop', loop } as const)
+          : wait > 0
+            ? ({ kind: 'dwell', duration: wait } as const)
+            : ({ kind: 'leave' } as const);
+      const length = 0.03 + 0.05 * next();
+      const question = {
+        corner,
+        before: [lineBetween({ x: -length, y: 0 }, { x: 0, y: 0 })],
+        treatment,
+        cut,
+        plateTemperature: 293.15 + 40 * next(),
+      };
+      const kind = { angle, wait, treatment: n % 3 === 2 ? 'loop' : 'plain' } as const;
+      const returnsAt = returnOf(question);
+      const { temperature } = peakAfter(question);
+      expect(Math.abs(returnsAt + peaks.over(kind) - temperature)).toBeLessThan(0.02 * (temperature - 293.15) + 3);
+      const deep = burnBack(question, 1300);
+      if (deep > 1e-4) expect(Math.abs(peaks.burnBack(kind, returnsAt, 1300) - deep)).toBeLessThan(0.08 * deep + 3e-5);
+    }
+  });
+});
+
+describe('what is of no use to a plan', () => {
+  it('is said in a sentence: no feed, no thickness, a plate smaller than heat spreads in a moment', () => {
+    const request = cutOf([square(0, 0, 0.05)]);
+    expect(() => platePlan({ ...request, drive: { ...request.drive, feed: 0 } })).toThrow(/feed/);
+    expect(() => platePlan({ ...request, thickness: 0 })).toThrow(/thickness/);
+    const tiny = cutOf([square(0, 0, 1.5e-3)], { plate: { min: { x: -1e-3, y: -1e-3 }, max: { x: 3e-3, y: 3e-3 } } });
+    expect(() => platePlan(tiny)).toThrow(/heat spreads/);
+  });
+
+  it('is a part without corners: a plan of none, on a plate that warms all the same', () => {
+    const round = Array.from({ length: 40 }, (_, i) => {
+      const angle = (2 * Math.PI * i) / 40;
+      return { x: 0.05 * Math.cos(angle), y: 0.05 * Math.sin(angle) };
+    });
+    const plan = platePlan(cutOf([round]));
+    expect(plan.corners).toEqual([]);
+    expect(plan.totals.meanPlateTemperature).toBeGreaterThan(293.15);
+    expect(plan.totals.highestBackground).toBeNull();
+  });
+
+  it('is a cut that was given up: it ends with a word of its own', () => {
+    expect(() => platePlan(cutOf([square(0, 0, 0.05)]), () => false)).toThrow(PlatePlanCancelled);
+    const shares: number[] = [];
+    platePlan(cutOf([square(0, 0, 0.05)]), (share) => void shares.push(share));
+    expect(shares.at(-1)).toBe(1);
+    expect(shares).toEqual([...shares].sort((a, b) => a - b));
+  });
+
+  it('is a corner nearer to the next than the kerf is wide: it is pointed out and left', () => {
+    const step = 0.5e-3;
+    const plan = platePlan(
+      cutOf([
+        [
+          { x: 0, y: 0 },
+          { x: 0.05, y: 0 },
+          { x: 0.05, y: 0.05 },
+          { x: 0.025, y: 0.05 },
+          { x: 0.025, y: 0.05 - step },
+          { x: 0, y: 0.05 - step },
+        ],
+      ]),
+    );
+    const close = plan.corners.filter(({ problem }) => problem?.includes('than the kerf is wide'));
+    expect(close.length).toBeGreaterThan(0);
+    for (const { treatment } of close) expect(treatment).toBe('leave');
+  });
+
+  it('is a contour that no cut comes to: its corners are planned alone and pointed out', () => {
+    const request = cutOf([square(0, 0, 0.05), square(0.1, 0, 0.05)]);
+    const runsLeft = request.cutPath.runs.filter(({ contourId }) => contourId === '1');
+    const plan = platePlan({ ...request, cutPath: { runs: runsLeft } });
+    const uncut = plan.corners.filter(({ contourId }) => contourId === '2');
+    expect(uncut).toHaveLength(4);
+    for (const { background, returnTime, problem } of uncut) {
+      expect([background, returnTime]).toEqual([null, null]);
+      expect(problem).toBeDefined();
+    }
+  });
+});
