@@ -181,6 +181,25 @@ describe('the return temperature', () => {
     expect(ask(strip)).toBeGreaterThan(ask(strip.slice(2)));
   });
 
+  it('is shut in by a tip close before: the more the shorter the edge, and not at all by a bend, a notch or a far one', () => {
+    const from = (length: number, direction: { x: number; y: number }) => [
+      lineBetween({ x: -length - 0.2 * direction.x, y: -0.2 * direction.y }, { x: -length, y: 0 }),
+      lineBetween({ x: -length, y: 0 }, { x: 0, y: 0 }),
+    ];
+    const rises = (before: readonly Segment[], treatment: ReturnTreatment) =>
+      returnOf({ corner: tip(90), before, treatment, cut, plateTemperature: cold, properties }) - cold;
+    const down = { x: 0, y: -1 };
+    for (const treatment of [{ kind: 'leave' }, { kind: 'dwell', duration: 2 }, loop(90, 3e-3)] as const) {
+      const lone = rises(from(0.3, { x: 1, y: 0 }), treatment);
+      const near = [4e-3, 8e-3, 15e-3, 30e-3].map((length) => rises(from(length, down), treatment));
+      expect([...near].sort((a, b) => b - a)).toEqual(near);
+      expect(near[0]).toBeGreaterThan(1.3 * lone);
+      expect(rises(from(0.15, down), treatment)).toBeCloseTo(lone, 3);
+      // the same edges the other way round a notch: what they leave on its far side stays there
+      expect(rises(from(8e-3, { x: 0, y: 1 }), treatment)).toBeLessThan(near[1] ?? 0);
+    }
+  });
+
   it('of a flat loop that is nearly the one of a single arc is that of the single arc, and falls with its extension', () => {
     const [beta, r] = [Math.PI / 3, 3e-3];
     const nearly = flatLoopAt(tip(60), r, loopExtension(r, beta) * (1 + 1e-6));
