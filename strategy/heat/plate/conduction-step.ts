@@ -11,6 +11,8 @@ export type Conduction = {
   /** What a cell holds per kelvin, in whole cells. */
   readonly room: CellRoom;
   readonly warm: Warm;
+  /** Heat comes to cells: the warm rectangle takes them in, with room about them. */
+  warmed(cells: Warm): void;
   /** One step on. */
   step(): void;
   /** From now on no heat goes this way. */
@@ -21,6 +23,8 @@ export type Conduction = {
 const warmth = 1e-10;
 /** Cells by which it grows. */
 const growth = 8;
+/** Steps between two looks at the border: heat crosses fewer cells in a step than the border has room. */
+const lookEvery = 4;
 
 /**
  * Conduction over the grid in steps of `time` s: each step goes over the rows and then over the columns, the next the other way round, by Crank and Nicolson's rule with
@@ -42,6 +46,7 @@ export function conductionOver(grid: PlateGrid, alpha: number, time: number, fad
   const lateColumns = new Uint8Array(nx);
   const swept = new Float64Array(4 * Math.max(nx, ny));
   let rowsFirst = true;
+  let steps = 0;
 
   /** Room goes from one cell to another with the heat that is in it. */
   const hand = (from: number, to: number, given: number): void => {
@@ -71,13 +76,19 @@ export function conductionOver(grid: PlateGrid, alpha: number, time: number, fad
     rise,
     room,
     warm,
+    warmed({ i0, i1, j0, j1 }) {
+      warm.i0 = Math.min(warm.i0, Math.max(0, i0 - growth));
+      warm.i1 = Math.max(warm.i1, Math.min(nx - 1, i1 + growth));
+      warm.j0 = Math.min(warm.j0, Math.max(0, j0 - growth));
+      warm.j1 = Math.max(warm.j1, Math.min(ny - 1, j1 + growth));
+    },
     step() {
       for (let j = 0; j < ny; j++) if (lateRows[j]) rows.factor(j * nx);
       for (let i = 0; i < nx; i++) if (lateColumns[i]) columns.factor(i);
       lateRows.fill(0);
       lateColumns.fill(0);
       if (warm.i1 < warm.i0) return;
-      grow();
+      if (steps++ % lookEvery === 0) grow();
       const { i0, i1, j0, j1 } = warm;
       const corner = j0 * nx + i0;
       const alongRows = () => sweep(rise, room, swept, rows, corner, nx, j1 - j0 + 1, 1, i1 - i0 + 1, 1);

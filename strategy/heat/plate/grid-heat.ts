@@ -34,6 +34,8 @@ const dropLength = 0.8;
 const beside = 1e-6;
 /** What a bridge between cells that only share a corner carries, as a share of a face. */
 const bridgeWidth = 0.5;
+/** Values that are kept in one piece of memory: many small ones make more work than what is in them. */
+const storeSize = 1 << 19;
 /** Times between two progress calls, in steps. */
 const progressEvery = 4;
 
@@ -58,12 +60,8 @@ export function gridHeat(of: GridHeatOf, going: (share: number) => void): KeptRi
     const variance = 2 * alpha * (time - drop.time);
     layWindow(window, grid, drop.x, drop.y, variance + drop.alongX, variance + drop.alongY);
     partWindow(window, links, nx, time);
-    const { i0, i1, j0, j1 } = window;
+    conduction.warmed(window);
     const amount = drop.heat * perHeat * Math.exp(-(time - drop.time) / coolingTime);
-    warm.i0 = Math.min(warm.i0, i0);
-    warm.i1 = Math.max(warm.i1, i1);
-    warm.j0 = Math.min(warm.j0, j0);
-    warm.j1 = Math.max(warm.j1, j1);
     if (!window.parted) {
       left.fill(-1);
       addBell(amount / shareOf(window, left, room, nx), null);
@@ -108,10 +106,15 @@ export function gridHeat(of: GridHeatOf, going: (share: number) => void): KeptRi
   };
 
   const kept: KeptRise[] = [];
+  let store = new Float64Array(0);
+  let used = 0;
   const keep = (time: number): void => {
     const { i0, i1, j0, j1 } = warm;
     const width = Math.max(0, i1 - i0 + 1);
-    const values = new Float64Array(width * Math.max(0, j1 - j0 + 1));
+    const size = width * Math.max(0, j1 - j0 + 1);
+    if (used + size > store.length) [store, used] = [new Float64Array(Math.max(storeSize, size)), 0];
+    const values = store.subarray(used, used + size);
+    used += size;
     for (let j = j0; j <= j1; j++) values.set(rise.subarray(j * nx + i0, j * nx + i1 + 1), (j - j0) * width);
     kept.push({ i0, i1, j0, j1, time, values });
   };

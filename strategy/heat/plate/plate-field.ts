@@ -8,6 +8,7 @@ import type { KeptRise } from './grid-heat.ts';
 import { gridPace } from './grid-pace.ts';
 import { gridReading, heatOn, hottestOf } from './grid-reading.ts';
 import { piecesInside } from './heat-drops.ts';
+import { joinedPieces } from './joined-pieces.ts';
 import { kerfLinks, roomAt } from './kerf-links.ts';
 import { kerfSides } from './kerf-sides.ts';
 import type { PlateGrid } from './plate-grid.ts';
@@ -53,6 +54,8 @@ export class PlateFieldCancelled extends Error {
 const usualMoments = 60;
 /** Length below which young heat is not told apart in a frame, m. */
 const frameGrain = 5e-4;
+/** By how much the source of joined pieces may be too soon or too late, as a share of the age at which heat is laid on the grid. */
+const joinedWithin = 0.01;
 /** By what a time may be past the end, as a share of it: rounding. */
 const rounding = 1e-12;
 
@@ -83,16 +86,20 @@ export function plateField(question: PlateQuestion, progress?: PlateProgress): P
     ? (p: Point) => contourContains(shape.edge, p) && !shape.openings.some((opening) => contourContains(opening, p))
     : null;
   const holds = (p: Point): boolean => holdsPlace(plate, p) && (!steelAt || steelAt(p));
-  const { inside: pieces, lost: lostPerLength } = piecesInside(question.heat, plate, steelAt);
+  const end = Math.max(question.until ?? 0, question.heat.at(-1)?.to ?? 0, allPierces.at(-1)?.time ?? 0);
+  const pace = gridPace(grid, alpha, end, question.step);
+  const { age, readAge } = pace;
+  const { inside: pieces, lost: lostPerLength } = piecesInside(
+    joinedPieces(question.heat, joinedWithin * age),
+    plate,
+    steelAt,
+  );
   const pierces = allPierces.filter(({ at }) => holds(at));
   const lost = lostPerLength * thickness + allPierces.reduce((sum, { at, heat }) => sum + (holds(at) ? 0 : heat), 0);
   const kerfs = question.kerfs ?? pieces;
   const { links, cuts } = kerfLinks(grid, kerfs, steel);
   const sides = kerfSides(grid, kerfs, links);
 
-  const end = Math.max(question.until ?? 0, question.heat.at(-1)?.to ?? 0, allPierces.at(-1)?.time ?? 0);
-  const pace = gridPace(grid, alpha, end, question.step);
-  const { age, readAge } = pace;
   const last = pace.steps * pace.step;
   const cadence = pace.every * pace.step;
   const kept = gridHeat(
