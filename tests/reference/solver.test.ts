@@ -214,10 +214,12 @@ describe('other grids', () => {
 
 describe('what must not show', () => {
   it('gives the same return rise with a longer run-in and a larger plate', () => {
+    // another plate is another mesh: what is left is that difference, which goes with the cells
+    const finest = runs(0.2e-3, 0.1e-3);
     for (const one of [corner(60, tangent), corner(90, dwell)].slice(0, runs(1, 2))) {
-      const usual = solveCorner(one, { finest: 0.2e-3 }).returnRise;
-      const larger = solveCorner(one, { finest: 0.2e-3, far: 1.5 }).returnRise;
-      expect(Math.abs(larger / usual - 1)).toBeLessThan(0.004);
+      const usual = solveCorner(one, { finest }).returnRise;
+      const larger = solveCorner(one, { finest, far: 1.5 }).returnRise;
+      expect(Math.abs(larger / usual - 1)).toBeLessThan(runs(0.008, 0.002));
     }
   });
 
