@@ -22,7 +22,7 @@ export type PlateField = {
   readonly grid: PlateGrid;
   /** Moments of `frame`, s, even from the beginning to the end. */
   readonly times: Float64Array;
-  /** Temperatures of the cells' middles at `times[i]`, K, row by row; what is no steel is at the ambient temperature. */
+  /** Temperatures of the cells' middles at `times[i]`, K, row by row; what is no steel as the plate were had nothing been cut. */
   frame(i: number): Float32Array;
   /** As `frame`, but without what was let go at `since`, s, and after, for whoever draws that finer than the grid is. */
   settledFrame(i: number): { readonly since: number; readonly temperatures: Float32Array };
