@@ -1,4 +1,4 @@
-import { useQuery } from '@tanstack/react-query';
+import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { planEstimateQuery } from '@/components/data/estimates.ts';
 import { estimateText, figureText } from '@/components/text/plan-estimate.ts';
@@ -10,7 +10,7 @@ import { Fold } from '@/components/ui/fold.tsx';
 import { Notice } from '@/components/ui/notice.tsx';
 import { Panel } from '@/components/ui/panel.tsx';
 import { Progress } from '@/components/ui/progress.tsx';
-import { Stack } from '@/components/ui/stack.tsx';
+import { Row, Stack } from '@/components/ui/stack.tsx';
 import { Body, Heading, Small } from '@/components/ui/text.tsx';
 import { useUnitSystem } from '@/components/ui/unit-system.ts';
 import type { CornerPlan } from '@/shared/corner-plans.ts';
@@ -25,9 +25,16 @@ const mostUnasked = 600;
 
 /** What a plan costs beside the same plate cut in other ways. */
 export function PlanEstimate({ plan }: { plan: Pick<CornerPlan, 'id' | 'version' | 'corners'> }) {
-  const [asked, setAsked] = useState(false);
-  const wanted = asked || plan.corners.length <= mostUnasked;
-  const estimate = useQuery({ ...planEstimateQuery(plan.id, plan.version), enabled: wanted });
+  const client = useQueryClient();
+  const [asked, setAsked] = useState<boolean | null>(null);
+  const large = plan.corners.length > mostUnasked;
+  const wanted = asked ?? !large;
+  const query = planEstimateQuery(plan.id, plan.version);
+  const estimate = useQuery({ ...query, enabled: wanted });
+  const stop = () => {
+    setAsked(false);
+    void client.cancelQueries({ queryKey: query.queryKey });
+  };
   // the last good figures stay while the plan's next ones are worked out, or when they can't be
   const [last, setLast] = useState<PlanComparison | null>(null);
   if (estimate.data && estimate.data !== last) setLast(estimate.data);
@@ -35,13 +42,20 @@ export function PlanEstimate({ plan }: { plan: Pick<CornerPlan, 'id' | 'version'
   return (
     <Panel title={estimateText.title}>
       <Body>{estimateText.words}</Body>
-      {!wanted && (
-        <>
-          <Small>{estimateText.large(plan.corners.length)}</Small>
+      {!wanted && !estimate.data && (
+        <Row>
           <Button label={estimateText.ask} onPress={() => setAsked(true)} />
+          {large && <Small>{estimateText.large(plan.corners.length)}</Small>}
+        </Row>
+      )}
+      {wanted && estimate.isPending && (
+        <>
+          <Progress label={shown ? estimateText.again : estimateText.fetching} />
+          <Row>
+            <Button kind="quiet" label={estimateText.stop} onPress={stop} />
+          </Row>
         </>
       )}
-      {wanted && estimate.isPending && <Progress label={shown ? estimateText.again : estimateText.fetching} />}
       {estimate.isError && <ErrorNotice error={estimate.error} onRetry={() => void estimate.refetch()} />}
       {shown && !estimate.data && <Small strong>{estimateText.old}</Small>}
       {shown && <Comparison comparison={shown} />}

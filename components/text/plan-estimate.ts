@@ -64,6 +64,7 @@ export const estimateText = {
   again: 'Working it out for the plan as it is now',
   old: 'These figures are of the plan as it was before.',
   ask: 'Work out what it costs',
+  stop: 'Don’t wait for it',
   large: (corners: number) => `${corners} corners: working it out takes some seconds.`,
   variant: (variant: PlanVariant, revision: number) =>
     variant === 'previous' ? `Revision ${revision}` : estimateText.variants[variant],

@@ -127,6 +127,22 @@ describe('what a plan costs', () => {
     expect(asked.map(({ path }) => path)).toEqual([`/api/corner-plans/${ids.report}/estimate`]);
   });
 
+  it('need not be waited for, and can be asked for again', async () => {
+    let asked = 0;
+    serveWith(() => {
+      asked += 1;
+      return asked === 1 ? new Promise<Response>(() => undefined) : json(comparison());
+    });
+    show(<PlanEstimate plan={plan} />, 'programmer');
+    await screen.findByRole('progressbar');
+    await userEvent.click(screen.getByRole('button', { name: 'Don’t wait for it' }));
+    expect(screen.queryByRole('progressbar')).toBeNull();
+    expect(screen.queryByRole('alert')).toBeNull();
+    await userEvent.click(screen.getByRole('button', { name: 'Work out what it costs' }));
+    await screen.findByRole('list', { name: 'Time' });
+    expect(asked).toBe(2);
+  });
+
   it('says when the server can’t be reached', async () => {
     serveWith(() => offline());
     show(<PlanEstimate plan={plan} />, 'programmer');
