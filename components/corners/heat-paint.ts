@@ -121,12 +121,16 @@ export function levelLabels(
   const placed: LevelLabel[] = [];
   const stride = 3;
   for (const kelvin of [...levels].sort((a, b) => b - a)) {
+    const room = Math.min(...levels.map((other) => (other === kelvin ? Infinity : Math.abs(other - kelvin))));
     const found: { column: number; row: number }[] = [];
     for (let row = inside.top; row < inside.bottom; row += stride) {
       for (let column = inside.left; column + stride < inside.right; column += stride) {
         const here = temperatures[row * columns + column] ?? 0;
         const there = temperatures[row * columns + column + stride] ?? 0;
-        if (here < kelvin === there < kelvin || Math.abs(there - here) > kelvin) continue;
+        if (here < kelvin === there < kelvin) continue;
+        // where lines crowd none is drawn: a figure would stand on nothing
+        const below = temperatures[(row + stride) * columns + column] ?? here;
+        if (room < 2 * closest * (Math.hypot(there - here, below - here) / stride)) continue;
         found.push({ column: column + (stride * (kelvin - here)) / (there - here), row });
       }
     }

@@ -37,7 +37,7 @@ const beyondBadge = 46;
 
 /**
  * Temperatures at corners' tips: before the cut runs what each returns at as planned, while it runs what it is at that moment. The chosen one and the hottest, and
- * all where few are in view. A heavy frame is over the limit.
+ * all where few are in view. A heavy frame returns over the limit: while it runs every tip is hotter for as long as the front is near.
  */
 export function TipLayer({ corners, inward, chosen, heat, clock, space, sheet, limit }: TipLayerProps) {
   const time = useRunTime(clock);
@@ -75,34 +75,36 @@ export function TipLayer({ corners, inward, chosen, heat, clock, space, sheet, l
 
   return (
     <>
-      {apart(all.map((tip) => labelOf(tip, kelvinOf(tip, moment), space, system))).map(
-        ({ id, x, y, text, width, kelvin }) => (
-          <G key={id} testID="tip" transform={`translate(${x.toFixed(1)} ${y.toFixed(1)})`}>
-            <Rect
-              x={-width / 2}
-              y={-11}
-              width={width}
-              height={22}
-              rx={2}
-              fill={roles.sheet}
-              stroke={kelvin > limit ? roles.hot : roles.rule}
-              strokeWidth={kelvin > limit ? 2.4 : 1}
-            />
-            <Rect
-              x={-width / 2 + 4}
-              y={-7}
-              width={8}
-              height={14}
-              fill={temperatureColour(kelvin)}
-              stroke={roles.ink}
-              strokeWidth={0.8}
-            />
-            <Lettering x={7} y={5} anchor="middle" figure>
-              {text}
-            </Lettering>
-          </G>
+      {apart(
+        all.map((tip) =>
+          labelOf(tip, kelvinOf(tip, moment), moment === null && tip.corner.treated > limit, space, system),
         ),
-      )}
+      ).map(({ id, x, y, text, width, kelvin, over }) => (
+        <G key={id} testID="tip" transform={`translate(${x.toFixed(1)} ${y.toFixed(1)})`}>
+          <Rect
+            x={-width / 2}
+            y={-11}
+            width={width}
+            height={22}
+            rx={2}
+            fill={roles.sheet}
+            stroke={over ? roles.hot : roles.rule}
+            strokeWidth={over ? 2.4 : 1}
+          />
+          <Rect
+            x={-width / 2 + 4}
+            y={-7}
+            width={8}
+            height={14}
+            fill={temperatureColour(kelvin)}
+            stroke={roles.ink}
+            strokeWidth={0.8}
+          />
+          <Lettering x={7} y={5} anchor="middle" figure>
+            {text}
+          </Lettering>
+        </G>
+      ))}
     </>
   );
 }
@@ -112,11 +114,12 @@ type Tip = { readonly corner: PlannedCorner; readonly into: Point; readonly at: 
 const kelvinOf = ({ corner, at }: Tip, moment: HeatMoment | null): number =>
   moment ? temperatureAt(moment, at) : corner.treated;
 
-type Label = { id: string; x: number; y: number; text: string; width: number; kelvin: number };
+type Label = { id: string; x: number; y: number; text: string; width: number; kelvin: number; over: boolean };
 
 function labelOf(
   { corner, into }: Tip,
   kelvin: number,
+  over: boolean,
   space: DrawingSpace,
   system: Parameters<typeof quantityText>[2],
 ): Label {
@@ -129,6 +132,7 @@ function labelOf(
     text,
     width: letteringWidth(text) + 26,
     kelvin,
+    over,
   };
 }
 

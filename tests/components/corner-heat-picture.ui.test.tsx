@@ -103,11 +103,15 @@ describe('the picture of the plate', () => {
     expect(along(40)).toBeGreaterThan(1);
   });
 
-  it('has a figure on each line that lies in the frame, apart from each other', () => {
+  it('has a figure on each line that lies in the frame, apart from each other, and none where lines crowd', () => {
     const levels = heatLevels('metric');
-    const inside = { left: 0, top: 0, right: columns, bottom: 8 };
-    const labels = levelLabels(slope, columns, levels, inside, 4);
-    for (const { kelvin, column } of labels) expect(293.15 + 10 * column).toBeCloseTo(kelvin, 3);
+    const wide = 400;
+    const gentle = Float32Array.from({ length: wide * 8 }, (_, i) => 293.15 + (i % wide));
+    const inside = { left: 0, top: 0, right: wide, bottom: 5 };
+    const labels = levelLabels(gentle, wide, levels, inside, 4);
+    for (const { kelvin, column } of labels) expect(293.15 + column).toBeCloseTo(kelvin, 3);
+    const crowded = levelLabels(slope, columns, levels, { ...inside, right: columns }, 4);
+    expect(crowded.every(({ kelvin }) => kelvin > 600)).toBe(true);
     expect(new Set(labels.map(({ kelvin }) => kelvin)).size).toBeGreaterThan(5);
     labels.forEach((one, i) =>
       labels.slice(i + 1).forEach((other) => {
