@@ -1,10 +1,13 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { returnOf } from '../../strategy/heat/index.ts';
 import { runs } from '../support/runs.ts';
 import { cornerSet, questionOf } from './corners.ts';
 import { errorsOf, quickError, quickErrors } from './errors.ts';
 import { setWithResults } from './results.ts';
 import { solveCorner } from './solve.ts';
+
+// a solver takes seconds, and many on a busy machine
+vi.setConfig({ testTimeout: runs(120_000, 3_600_000) });
 
 describe('the quick return temperature against the reference solver', () => {
   const gated = setWithResults().filter(({ one }) => one.gated);

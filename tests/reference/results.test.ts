@@ -1,8 +1,11 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { runs } from '../support/runs.ts';
 import { cornerSet } from './corners.ts';
 import { firstFinest, keptResults, resultOf, setWithResults } from './results.ts';
 import { solveCorner, solverVersion } from './solve.ts';
+
+// a solver takes seconds, and many on a busy machine
+vi.setConfig({ testTimeout: runs(120_000, 3_600_000) });
 
 const kept = keptResults();
 const whole = setWithResults();

@@ -1,4 +1,4 @@
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { midZoneProperties, pathRise, straightEdgeRise, wedgeRise } from '../../strategy/heat/index.ts';
 import { STEEL_DENSITY, steelEnthalpy } from '../../strategy/steel/index.ts';
 import type { Point } from '../../strategy/path/point.ts';
@@ -11,6 +11,9 @@ import { Plate } from './plate.ts';
 import { insideTip, solveCorner } from './solve.ts';
 import { constantHeat, standardHeat } from './steel-heat.ts';
 import { wayOf } from './way.ts';
+
+// a solver takes seconds, and many on a busy machine
+vi.setConfig({ testTimeout: runs(120_000, 3_600_000) });
 
 const degrees = Math.PI / 180;
 
