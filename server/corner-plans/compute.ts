@@ -4,12 +4,14 @@ import type { Prediction, StrategyContent } from '../../shared/strategies.ts';
 import {
   cornerInsert,
   platePlan,
+  platePlanWithOrders,
   type PlateCornerPlan,
   type PlatePlan,
   type PlatePlanRequest,
 } from '../../strategy/corners/index.ts';
 import type { MachineProfile, Nozzle } from '../../strategy/machine.ts';
 import { cutPathOf } from '../../strategy/path/compensation/index.ts';
+import { cutOrderFault } from '../../strategy/path/plate/index.ts';
 import { oxygenMassFlow, PIERCE_DEFAULTS } from '../../strategy/pierce/index.ts';
 import { cutPathRequestOf } from '../take-away/cut-path.ts';
 import { cuttingOf } from './cutting.ts';
@@ -40,17 +42,36 @@ export type PlannedPlate = Pick<CornerPlan, 'limit' | 'corners' | 'totals'>;
  * a sentence for what can't be planned.
  */
 export function plannedPlate({ source, choices }: PlanAsked): PlannedPlate {
-  const { content, nozzle } = source;
-  const plan = platePlan(planRequestOf(source, choices));
+  const { content, nozzle, planned } = source;
+  const { plan, orders } = ordered(planRequestOf(source, choices), planned);
   const chosen = new Set(Object.keys(choices.overrides));
   return {
     limit: plan.limit,
     corners: plan.corners.map((corner) => presentCorner(corner, chosen)),
-    totals: presentTotals(
-      plan,
-      oxygenMassFlow(nozzle.diameter, content.cut.oxygenPressure, PIERCE_DEFAULTS.dischargeCoefficient),
-    ),
+    totals: {
+      ...presentTotals(
+        plan,
+        oxygenMassFlow(nozzle.diameter, content.cut.oxygenPressure, PIERCE_DEFAULTS.dischargeCoefficient),
+      ),
+      orderSuggestions: orders.map(({ order, ...one }) => ({ ...one, order: [...order] })),
+    },
   };
+}
+
+/** Corners up to which other orders are tried: each is planned whole. */
+const mostForOrders = 600;
+
+/** The plan, of a layout with orders that would spare treatments; the order of a part's contours follows from how they lie in each other. */
+function ordered(
+  request: PlatePlanRequest,
+  { layout, placed, contours }: Planned,
+): ReturnType<typeof platePlanWithOrders> {
+  const corners = contours.reduce((sum, { segments }) => sum + segments.length, 0);
+  if (!layout || !placed || corners > mostForOrders) return { plan: platePlan(request), orders: [] };
+  return platePlanWithOrders(request, {
+    pieceOf: (contourId) => contourId.slice(0, contourId.indexOf('.')),
+    allowed: (order) => cutOrderFault(placed, order) === null,
+  });
 }
 
 /** What the planner is asked. */

@@ -2,6 +2,7 @@ import type { CornerPlan } from '../../shared/corner-plans.ts';
 import { laidOut } from '../../shared/layouts.ts';
 import { drawingReadingSchema } from '../../shared/parts.ts';
 import type { CornerPlanRequest } from '../../strategy/corners/index.ts';
+import type { PlacedPart } from '../../strategy/path/plate/index.ts';
 import { laidPartOf, outlineFrom, wireOutlineOf } from '../layouts/present.ts';
 import type { PartGeometry, WholeLayout } from '../layouts/repository.ts';
 
@@ -15,6 +16,8 @@ export type Planned = {
   readonly contours: readonly (WireContour & { readonly said?: string })[];
   readonly plate: NonNullable<CornerPlanRequest['plate']>;
   readonly layout: Omit<NonNullable<CornerPlan['layout']>, 'newest'> | null;
+  /** The pieces of a layout as they lie; null for a part. */
+  readonly placed: readonly PlacedPart[] | null;
 };
 
 export function plannedPart({ id, name, reading }: PartGeometry, skeleton: CornerPlan['skeleton']): Planned {
@@ -29,6 +32,7 @@ export function plannedPart({ id, name, reading }: PartGeometry, skeleton: Corne
       max: { x: bounds.max.x + skeleton.right, y: bounds.max.y + skeleton.above },
     },
     layout: null,
+    placed: null,
   };
 }
 
@@ -36,10 +40,9 @@ export function plannedLayout(whole: WholeLayout): Planned {
   const { layout, version } = whole;
   const parts = whole.parts.map(laidPartOf);
   const drawn = new Map(parts.flatMap((part) => part.contours.map((one) => [`${part.id} ${one.id}`, one] as const)));
+  const placed = laidOut(parts, whole.placements);
   const lies = new Map(
-    laidOut(parts, whole.placements).flatMap(({ partId, contours }) =>
-      contours.map((one) => [one.id, { ...one, partId }] as const),
-    ),
+    placed.flatMap(({ partId, contours }) => contours.map((one) => [one.id, { ...one, partId }] as const)),
   );
   return {
     id: layout.id,
@@ -52,6 +55,7 @@ export function plannedLayout(whole: WholeLayout): Planned {
       return [{ id, depth, role, parent, layer, segments: [...contour.segments], said: name }];
     }),
     plate: outlineFrom(whole),
+    placed,
     layout: { id: layout.id, version: version.version, outline: wireOutlineOf(whole) },
   };
 }

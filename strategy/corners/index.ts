@@ -12,5 +12,7 @@ export type { PlatePlanRequest } from './plate/prepared.ts';
 export type { PlanProgress } from './plate/passes.ts';
 export { PlatePlanCancelled } from './plate/passes.ts';
 export type { PlateCornerPlan, PlatePlan, PlatePlanTotals } from './plate/plate-plan.ts';
-export { platePlan } from './plate/plate-plan.ts';
+export { platePlan, platePlanWithOrders } from './plate/plate-plan.ts';
 export type { RunnerUp } from './plate/tell.ts';
+export type { OrderQuestion, OrderSuggestion } from './plate/order.ts';
+export { orderSuggestions } from './plate/order.ts';

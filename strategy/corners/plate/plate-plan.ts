@@ -6,6 +6,8 @@ import type { CornerPlanTotals } from '../totals.ts';
 import { totalsOf } from '../totals.ts';
 import { planCorner } from '../plan.ts';
 import { bestAlone } from './choose.ts';
+import type { OrderQuestion, OrderSuggestion } from './order.ts';
+import { orderSuggestions } from './order.ts';
 import type { PlateWay } from './own-ways.ts';
 import type { DecidedPlate, PlanProgress } from './passes.ts';
 import { decidedPlate } from './passes.ts';
@@ -60,6 +62,17 @@ export type PlatePlan = {
 export function platePlan(request: PlatePlanRequest, progress?: PlanProgress): PlatePlan {
   const prepared = preparedPlate(request);
   return planOf(prepared, decidedPlate(prepared, progress));
+}
+
+/** The plan with other orders of its cut that come back later to what is hot; as `platePlan` and `orderSuggestions`. */
+export function platePlanWithOrders(
+  request: PlatePlanRequest,
+  question: OrderQuestion,
+  progress?: PlanProgress,
+): { readonly plan: PlatePlan; readonly orders: readonly OrderSuggestion[] } {
+  const prepared = preparedPlate(request);
+  const decided = decidedPlate(prepared, progress);
+  return { plan: planOf(prepared, decided), orders: orderSuggestions(prepared, decided, question) };
 }
 
 /** The plan of what was decided, told. */

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { PlatePlanRequest } from '../../../strategy/corners/index.ts';
-import { cornerPlan, platePlan, PlatePlanCancelled } from '../../../strategy/corners/index.ts';
+import { cornerPlan, platePlan, PlatePlanCancelled, platePlanWithOrders } from '../../../strategy/corners/index.ts';
 import { choose, outcomeOf } from '../../../strategy/corners/plate/choose.ts';
 import { decidedPlate } from '../../../strategy/corners/plate/passes.ts';
 import { preparedPlate } from '../../../strategy/corners/plate/prepared.ts';
@@ -207,6 +207,40 @@ describe('the plan of a small plate', () => {
     const [first, second] = ['c1-2', 'c2-0'].map((id) => plan.corners.find((c) => c.id === id));
     const largest = 4e-3;
     expect(Math.min(first?.loop?.radius ?? 0, second?.loop?.radius ?? 0)).toBeLessThan(largest - 1e-6);
+  });
+});
+
+describe('another cut order', () => {
+  const row = cutOf(Array.from({ length: 6 }, (_, i) => square(0.031 * i, 0, 0.028)));
+  const question = { pieceOf: (id: string) => id, allowed: () => true };
+
+  it('is suggested where it spares more than its ways take, and is then what it says', () => {
+    const { plan, orders } = platePlanWithOrders(row, question);
+    const [best] = orders;
+    if (!best) throw new Error('a row of parts that warm each other has a better order');
+    expect([...best.order].sort()).toEqual(['1', '2', '3', '4', '5', '6']);
+    expect(best.order).not.toEqual(['1', '2', '3', '4', '5', '6']);
+    const place = (id: string) => best.order.indexOf(id);
+    const again = platePlan({
+      ...row,
+      contours: [...row.contours].sort((a, b) => place(a.id) - place(b.id)),
+      cutPath: { runs: [...row.cutPath.runs].sort((a, b) => place(a.contourId) - place(b.contourId)) },
+    });
+    expect(plan.totals.addedTime - again.totals.addedTime).toBeCloseTo(best.addedTime, 6);
+    const longer = again.totals.cutTime - again.totals.addedTime - (plan.totals.cutTime - plan.totals.addedTime);
+    expect(longer).toBeCloseTo(best.rapidTime, 6);
+    expect(best.overLimit > 0 || best.addedTime > best.rapidTime + 0.9).toBe(true);
+    expect(best.why).toMatch(/is come back to on a plate of \d+ °C instead of \d+ °C/);
+    for (const { why } of orders) expect(why).toContain('the order is set in the layout');
+  });
+
+  it('is none that may not be cut, and the same each time', () => {
+    const keeps = (order: readonly string[]) =>
+      order.indexOf('1') < order.indexOf('2') && order.indexOf('2') < order.indexOf('3');
+    const { orders } = platePlanWithOrders(row, { ...question, allowed: keeps });
+    for (const { order } of orders) expect(keeps(order)).toBe(true);
+    expect(platePlanWithOrders(row, { ...question, allowed: keeps }).orders).toEqual(orders);
+    expect(platePlanWithOrders(row, { ...question, allowed: () => false }).orders).toEqual([]);
   });
 });
 
