@@ -64,7 +64,10 @@ export function returnExplained(
       ...(background === null
         ? []
         : [
-            { label: 'warmed by all that was cut and pierced before', value: rise(background - plan.plateTemperature) },
+            {
+              label: 'what was cut and pierced before, less what the air took',
+              value: rise(background - plan.plateTemperature),
+            },
           ]),
       { label: 'first edge of this corner, cut as drawn', value: rise(untreated - plate) },
       ...(treatment === 'leave'
