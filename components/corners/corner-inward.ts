@@ -35,3 +35,7 @@ const cellOf = ({ x, y }: Point) => `${Math.round(x / cellSize)} ${Math.round(y 
 /** The cell of a place first, then those that it may have been rounded into. */
 const cellsAround = ({ x, y }: Point) =>
   [0, 1, -1].flatMap((i) => [0, 1, -1].map((j) => cellOf({ x: x + i * cellSize, y: y + j * cellSize })));
+
+/** How many times as far as usual a corner's badge stands in: the narrower the tip the further, so that it lies on the steel. */
+export const badgeStretch = (angle: number): number =>
+  Math.min(2, Math.max(1, Math.SQRT1_2 / Math.sin(Math.min(angle, Math.PI) / 2)));

@@ -16,7 +16,7 @@ import type { CornerPlan, PlannedCorner } from '@/shared/corner-plans.ts';
 import { outlinePaths } from '@/shared/layouts.ts';
 import type { PlateClock } from '@/strategy/motion/index.ts';
 import type { Point } from '@/strategy/path/index.ts';
-import { cornersInward } from './corner-inward.ts';
+import { badgeStretch, cornersInward } from './corner-inward.ts';
 import type { PlateHeat } from './heat-field.ts';
 import { createHeatLabels } from './heat-labels.ts';
 import { HeatFigures, HeatLayer } from './heat-layer.tsx';
@@ -241,9 +241,8 @@ const markOf = (
   draw: <BadgeShape treatment={treatment} trouble={trouble !== null} chosen={chosen} />,
 });
 
-/** The narrower the tip, the further in its badge stands, so that it lies on the steel; within twice the usual distance. */
 function badgeOff(inward: Point | undefined, angle: number): Point | undefined {
-  const further = Math.min(2, Math.max(1, Math.SQRT1_2 / Math.sin(Math.min(angle, Math.PI) / 2)));
+  const further = badgeStretch(angle);
   return inward && { x: inward.x * further, y: inward.y * further };
 }
 

@@ -1,5 +1,6 @@
 import { useMemo } from 'react';
 import { G, Rect } from 'react-native-svg';
+import { markOff } from '@/components/parts/drawing-view.tsx';
 import type { DrawingSpace, DrawnSheet } from '@/components/parts/drawing-space.ts';
 import { letteringWidth } from '@/components/pierce/section-layout.ts';
 import { Lettering } from '@/components/pierce/still-shapes.tsx';
@@ -10,6 +11,7 @@ import type { PlannedCorner } from '@/shared/corner-plans.ts';
 import { measuringDepth } from '@/strategy/heat/index.ts';
 import type { Point } from '@/strategy/path/index.ts';
 import { quantityText } from '@/strategy/units/index.ts';
+import { badgeStretch } from './corner-inward.ts';
 import { heatMoment, temperatureAt, type HeatMoment, type PlateHeat } from './heat-field.ts';
 import { useRunTime, type RunClock } from './run-clock.ts';
 
@@ -32,8 +34,8 @@ const [hottest, few] = [4, 14];
 const lookedUpEvery = 2;
 /** What a tip's temperature is told to, m. */
 const grain = 4e-4;
-/** From the corner along its bisector to its figure's middle, px: beyond its badge. */
-const beyondBadge = 46;
+/** From the badge's middle to the figure's, across and up, px: beside it or above it there is room. */
+const beside = { across: 48, up: 25 } as const;
 
 /**
  * Temperatures at corners' tips: before the cut runs what each returns at as planned, while it runs what it is at that moment. The chosen one and the hottest, and
@@ -125,10 +127,13 @@ function labelOf(
 ): Label {
   const at = space.at(corner.at);
   const text = quantityText(kelvin, 'temperature', system, { decimals: 0 }).text;
+  // along the bisector as far beyond the badge as one of the two asks for
+  const beyond = Math.min(beside.across / Math.abs(into.x), beside.up / Math.abs(into.y));
+  const off = markOff * badgeStretch(corner.angle) + beyond;
   return {
     id: corner.id,
-    x: at.x + into.x * beyondBadge,
-    y: at.y - into.y * beyondBadge,
+    x: at.x + into.x * off,
+    y: at.y - into.y * off,
     text,
     width: letteringWidth(text) + 26,
     kelvin,

@@ -78,7 +78,8 @@ type DrawingViewProps = {
   height: number;
 };
 
-const markOff = 22;
+/** How far a mark stands off from its place along its unit vector, px. */
+export const markOff = 22;
 const fingerReach = 30;
 /** A tap nearer than this means the mark, and not what lies under it. */
 const markReach = 16;
