@@ -277,6 +277,16 @@ describe('a corner plan of a layout', () => {
     const pieces = new Set(body.corners.map(({ contourId }) => contourId.split('.')[0]));
     expect([...pieces]).toEqual(['1', '2', '3']);
     expect(body.corners.some(({ treatment }) => treatment !== 'leave')).toBe(true);
+    // each corner on the plate as it is by then
+    const times = body.corners.map(({ returnTime }) => returnTime ?? 0);
+    expect(Math.min(...times)).toBeGreaterThan(0);
+    expect(Math.max(...times)).toBeLessThan(body.totals.cutTime ?? 0);
+    expect(body.totals.highestBackground).toBe(Math.max(...body.corners.map(({ background }) => background ?? 0)));
+    // 27 °C when the cut begins, in air of 20 °C
+    expect(body.totals.meanPlateTemperature).toBeGreaterThan(293.15);
+    for (const { order } of body.totals.orderSuggestions ?? []) {
+      expect([...order].sort()).toEqual([...layout.order].sort());
+    }
     const { body: again } = await made(programmer.call(layoutEndpoints.get, { params: { layoutId: layout.id } }));
     expect(again.cornerPlans).toMatchObject([{ id: body.id, layoutVersion: 1 }]);
   });

@@ -24,6 +24,8 @@ export type Leg = {
   readonly ownFrom: number;
   /** Path of the corner's own contour since the corner before or the lead-in's start, in order of travel, m. */
   readonly own: readonly Segment[];
+  /** What was cut without a break right before that: its own contour's path to the corner before; empty behind a lead-in. */
+  readonly earlier: readonly Segment[];
   /** All its heat as puffs, pierces too, with times as they are on the untreated path. */
   readonly puffs: HeatPuffs;
   /** What of that is not on the corner's own path: the rest of a contour before, a pierce. */
@@ -86,6 +88,7 @@ export function cutLegs(
   let piece = 0;
   let pierce = 0;
   let rest: HeatedPiece | null = null;
+  let ownBefore: readonly HeatedPiece[] = [];
   const legs = passed.map(({ corner, time }, k): Leg => {
     // a leg's heat is first asked about at the next corner: no sooner need its puffs be told apart
     const asked = Math.max(time + puffAge, passed[k + 1]?.time ?? 0);
@@ -105,6 +108,9 @@ export function cutLegs(
     for (let next = pierces[pierce]; next && next.time <= time; next = pierces[++pierce]) spots.push(next);
     const first = firstOfOwn(pieces);
     const [other, last] = [pieces.slice(0, first), pieces.slice(first)];
+    const [goneOn, goesOn] = [ownBefore.at(-1), last[0]];
+    const earlier = first === 0 && goneOn && goesOn && follows(goneOn, goesOn) ? ownBefore : [];
+    ownBefore = last;
     const asPuffs = (some: readonly HeatedPiece[], when: number) =>
       heatPuffs(some, -Infinity, when, puffLength, properties);
     const pierced = spots.flatMap(({ at, time: when, heat: amount }) => [at.x, at.y, when, amount / thickness, 0]);
@@ -116,6 +122,7 @@ export function cutLegs(
       arrives: time,
       ownFrom: last[0]?.from ?? time,
       own: last.map(({ segment }) => segment),
+      earlier: earlier.map(({ segment }) => segment),
       puffs,
       begins: passed[k - 1]?.time ?? 0,
       box: puffsBox(puffs),
@@ -146,12 +153,13 @@ const tick = 1e-9;
 function firstOfOwn(pieces: readonly HeatedPiece[]): number {
   for (let i = pieces.length - 1; i > 0; i--) {
     const [before, after] = [pieces[i - 1], pieces[i]];
-    if (!before || !after || after.from - before.to > tick || !joins(before.segment, after.segment)) return i;
+    if (!before || !after || !follows(before, after)) return i;
   }
   return 0;
 }
 
-const joins = (a: Segment, b: Segment): boolean => pointDistance(segmentEnd(a), segmentStart(b)) < samePlace;
+const follows = (a: HeatedPiece, b: HeatedPiece): boolean =>
+  b.from - a.to <= tick && pointDistance(segmentEnd(a.segment), segmentStart(b.segment)) < samePlace;
 
 type OnPath = { readonly corner: number; readonly segment: number; readonly share: number };
 

@@ -24,8 +24,13 @@ export type PlateWay = OwnWay & {
   readonly fits: Way | null;
 };
 
-/** A corner and the path cut before it since the corner before, ending in it. */
-export type Approach = { readonly found: Prospect; readonly before: readonly Segment[] };
+/** A corner, the path cut before it since the corner before, ending in it, and what was cut right before that. */
+export type Approach = {
+  readonly found: Prospect;
+  readonly before: readonly Segment[];
+  /** Its heat is the plate's. */
+  readonly earlier: readonly Segment[];
+};
 
 export type OwnHeat = Pick<CornerPlanRequest, 'cut' | 'rules'> & {
   readonly properties: PlateProperties;
@@ -66,7 +71,7 @@ export function fittedWay(at: Approach, heat: OwnHeat, fits: Way): PlateWay {
 }
 
 function ownWay(
-  { found, before }: Approach,
+  { found, before, earlier }: Approach,
   { cut, properties, toPeak }: OwnHeat,
   treatment: CornerTreatment,
   asks: Way['asks'],
@@ -76,6 +81,7 @@ function ownWay(
   const question: ReturnQuestion = {
     corner: found.onPath,
     before,
+    earlier,
     ...asks,
     cut,
     plateTemperature: anyPlate,

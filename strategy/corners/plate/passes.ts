@@ -1,7 +1,8 @@
 import type { PlateField } from '../../heat/plate/index.ts';
 import { plateField } from '../../heat/plate/index.ts';
 import { roomTemperature, usualLoss } from '../../heat/plate/plate-question.ts';
-import { diffusionLength } from '../../heat/properties.ts';
+import type { PlateProperties } from '../../heat/properties.ts';
+import { diffusionLength, diffusivity } from '../../heat/properties.ts';
 import { plateCoolingTime } from '../../heat/surface-loss.ts';
 import { contourBox } from '../../path/contour.ts';
 import type { Box } from '../../path/point.ts';
@@ -86,7 +87,7 @@ export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): 
       properties,
       ...scheduledHeat(legs, ways, schedule),
       until: prepared.duration + schedule.late,
-      ...cellOf(box),
+      ...cellOf(box, prepared.duration),
     });
 
   let chosen = pass(null);
@@ -94,7 +95,10 @@ export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): 
     going(fields / (mostFields + 1));
     const schedule = scheduleOf(legs, chosen.ways);
     const field = fieldFor(chosen.ways, schedule);
-    const next = pass({ field, ...schedule }, fields > freeFields ? chosen.ways : undefined);
+    const next = pass(
+      { field, settled: settledAfter(field, properties), ...schedule },
+      fields > freeFields ? chosen.ways : undefined,
+    );
     const changed = next.ways.reduce(
       (sum, way, k) => sum + Math.abs(way.addedTime - (chosen.ways[k]?.addedTime ?? 0)),
       0,
@@ -130,12 +134,25 @@ function heatedBox({ box, request: { contours, plate }, properties, duration }: 
 
 const areaOf = ({ minX, minY, maxX, maxY }: Box): number => (maxX - minX) * (maxY - minY);
 
-/** Cells of a field at most; its own choice of them is finer. */
-const mostCells = 5e5;
+/**
+ * Area times duration, m² s, up to which a field takes its own cell of 10 mm: a plate of 4 × 2.5 m and a cut of 20 minutes. Beyond, its cells grow with the fourth root, so that the work
+ * (cells times steps, as the cell to the power −4) grows no faster than the plate.
+ */
+const usualWork = 12_000;
 const usualCell = 0.01;
 
-const cellOf = (box: Box): { readonly cell?: number } =>
-  areaOf(box) > mostCells * usualCell ** 2 ? { cell: Math.sqrt(areaOf(box) / mostCells) } : {};
+function cellOf(box: Box, duration: number): { readonly cell?: number } {
+  const work = areaOf(box) * duration;
+  return work > usualWork ? { cell: usualCell * (work / usualWork) ** 0.25 } : {};
+}
+
+/** Least age, s, from which on heat is read from the grid; and the variance, in cells², that it then has when it was laid and is read. */
+const leastSettled = 16;
+const readVariance = 2.5;
+
+function settledAfter({ grid: { cellX, cellY } }: PlateField, properties: PlateProperties): number {
+  return Math.max(leastSettled, (readVariance * Math.max(cellX, cellY) ** 2) / (2 * diffusivity(properties)));
+}
 
 /** Mean of the whole plate, K, at a time of the field, which may be of a part of it. */
 function meanOf({ box: whole, request, properties }: PreparedPlate, box: Box, field: PlateField, time: number): number {

@@ -81,6 +81,8 @@ export type PlateState<Way> = {
 /** The cut that a field was computed for: when the front was in each corner, leg by leg, and what each treatment added, s. */
 export type OldHeat = {
   readonly field: Pick<PlateField, 'background' | 'splitBefore'>;
+  /** Heat younger than this, s, is taken straight from the path: the field would not be read from its grid alone. */
+  readonly settled: number;
   readonly arrives: Float64Array;
   readonly addedTime: Float64Array;
 };
@@ -113,12 +115,10 @@ export type PlateModel<Way extends OwnWay> = ChoiceModel<WayJudged<Way>, PlateSt
   beside(corner: number, state: PlateState<Way>, chosen: WayJudged<Way>): readonly WayJudged<Way>[];
 };
 
-/** Heat younger than this is taken straight from the path, s: the field would not be read from its grid alone. */
-const settled = 16;
 /** Without a field heat counts for so long, s. */
 const remembered = 40;
-/** Heat that is taken from the path is no older, s; and comes no further than so many times its spread √(4αt). */
-const longestYoung = 30;
+/** Heat that is taken from the path is older than `settled` by no more, s: a step of the field. And it comes no further than so many times its spread √(4αt). */
+const oneStep = 14;
 const puffReach = 2.5;
 /** The plate's edge throws heat back over so many times its spread √(4αt). */
 const mirrored = 2;
@@ -128,8 +128,9 @@ const longerWaits = [0.25, 0.5, 1, 1.5, 2, 3, 4] as const;
 /** The choice at the corners of a plate's cut, leg by leg: each finds what those before it left in the plate, and when. */
 export function plateModel<Way extends OwnWay>(input: PlateModelInput<Way>): PlateModel<Way> {
   const { legs, corners, limit, ignition, plateTemperature, properties, plate, old } = input;
+  const settled = old?.settled ?? remembered;
   const far = mirrored * diffusionLength(properties, settled);
-  const reach = (puffReach * diffusionLength(properties, old ? longestYoung : remembered)) ** 2;
+  const reach = (puffReach * diffusionLength(properties, settled + oneStep)) ** 2;
 
   const ownOf = (k: number): { leg: Leg; own: OwnCorner<Way> } => {
     const leg = legs[k];

@@ -20,7 +20,7 @@ import { easeWay, roundWay } from '../options.ts';
 import { drawnOf } from '../planned.ts';
 import { doublesBack, pathAfter, pathBefore, prospectsOf, tooNear, treated } from '../prospects.ts';
 import { ruledOut } from '../refused.ts';
-import type { CutLegs } from './legs.ts';
+import type { CutLegs, Leg } from './legs.ts';
 import { cutLegs } from './legs.ts';
 import type { Approach, OwnHeat, PlateWay } from './own-ways.ts';
 import { fittedWay, leaveWay, waitWay } from './own-ways.ts';
@@ -82,8 +82,8 @@ export function preparedPlate(request: PlatePlanRequest): PreparedPlate {
   const legs = cutLegs(clock, heat, places, thickness, properties);
   const context = contextOf(request, () => []);
   const near = reachingEachOther(prospects.map((found) => reachOf(found, request)));
-  const own: (readonly Segment[] | undefined)[] = [];
-  for (const leg of legs.legs) own[leg.corner] = leg.own;
+  const own: (Leg | undefined)[] = [];
+  for (const leg of legs.legs) own[leg.corner] = leg;
   const peaks = tipPeaks({ cut, rules, properties });
   const { burnBack } = rules;
   const ownHeat: OwnHeat = {
@@ -138,7 +138,7 @@ function reachingEachOther(places: readonly ReturnType<typeof reachOf>[]): Set<n
 
 function plateCorner(
   found: Prospect,
-  own: readonly Segment[] | undefined,
+  leg: Leg | undefined,
   near: ReadonlySet<number>,
   context: Context,
   heat: OwnHeat,
@@ -149,7 +149,7 @@ function plateCorner(
   const sharp = treated(corner, request.rules.treatBelowAngle);
   const wanted = usable ? request.overrides?.[id] : undefined;
   const along = pathBefore(contour.contour, corner, onPath.point);
-  const at: Approach = { found, before: approachOf(found, own, along) };
+  const at = approachOf(found, leg, along);
   const asWay = (one: Way | Candidate): PlateWay | Candidate => ('fits' in one ? one : fittedWay(at, heat, one));
 
   let apart: readonly (PlateWay | Candidate)[] | null = null;
@@ -221,15 +221,18 @@ function uselessSaid(found: Prospect, kerfWidth: number): PlateCorner['useless']
 /** What fits is a way with its heat; what does not is a reason. */
 export const isWay = (one: PlateWay | Candidate): one is PlateWay => 'rise' in one;
 
-/** The path before a corner since the corner before or the lead-in, ending in the path's corner even where the cut goes round it. */
-function approachOf(
-  { onPath }: Prospect,
-  own: readonly Segment[] | undefined,
-  along: readonly Segment[],
-): readonly Segment[] {
-  if (!own) return along;
+/** The path before a corner since the corner before or the lead-in, ending in the path's corner even where the cut goes round it; and what was cut right before. */
+function approachOf(found: Prospect, leg: Leg | undefined, along: readonly Segment[]): Approach {
+  if (!leg) return { found, before: along, earlier: [] };
+  const { own, earlier } = leg;
   const last = own.at(-1);
-  if (last && pointDistance(segmentEnd(last), onPath.point) < samePlace) return own;
+  if (last && pointDistance(segmentEnd(last), found.onPath.point) < samePlace) return { found, before: own, earlier };
   const whole = pathLength(along);
-  return pathPart(along, whole - Math.min(whole, pathLength(own)), Infinity);
+  const begins = Math.max(0, whole - pathLength(own));
+  const beginsEarlier = Math.max(0, begins - pathLength(earlier));
+  return {
+    found,
+    before: pathPart(along, begins, Infinity),
+    earlier: begins > beginsEarlier ? pathPart(along, beginsEarlier, begins) : [],
+  };
 }
