@@ -65,7 +65,6 @@ export const summaryText = {
   under: 'as drawn under the limit',
   suggestions: {
     title: 'Another order of cutting',
-    none: 'No other order was found that spares more time than it costs.',
     costs: (time: string) => `costs ${time} more between the cuts`,
     spares: (time: string) => `spares ${time} of treatments`,
     fewer: (corners: number) => `${count(corners, 'corner')} fewer over a limit`,

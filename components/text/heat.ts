@@ -4,9 +4,6 @@ import { asSentence } from './corners.ts';
 export const heatText = {
   show: 'Show the heat',
   hide: 'Hide the heat',
-  /** Drawn across what is not of the plan on the screen. */
-  oldMark: 'Heat of the plan before',
-  tips: (temperature: string) => `${temperature} now`,
   working: 'Working out the plate’s heat',
   stop: 'Stop',
   stopSpoken: 'Stop working out the plate’s heat',
