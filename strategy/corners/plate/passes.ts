@@ -47,7 +47,7 @@ const ahead = 8;
  * Share of the cut's time by which its treatments may change all in all without the plate's heat being computed again. What was cut lately counts as it was decided
  * anyway; of older heat a second more or less is some tenths of a kelvin.
  */
-const sameCut = 3e-3;
+const sameCut = 1e-2;
 
 /**
  * The treatments of a plate's cut: decided in the order of cutting with the heat of what is cut before, on a field of the plate for the treatments of the time before,
