@@ -2,7 +2,7 @@ import type { LoopCorner } from '../path/loop.ts';
 import type { Point } from '../path/point.ts';
 import { pointAdd, pointCross, pointDot, pointLeft, pointScale, pointSubtract } from '../path/point.ts';
 import type { Segment } from '../path/segment.ts';
-import { segmentEnd, segmentLength, segmentStart, segmentTangentAt } from '../path/segment.ts';
+import { pathLength, segmentEnd, segmentLength, segmentStart, segmentTangentAt } from '../path/segment.ts';
 import { erfc } from './special-functions.ts';
 
 /** The tip of the part cut before a corner: with the first edge it shuts the heat of both in. */
@@ -12,6 +12,8 @@ export type BeforeCorner = {
   readonly angle: number;
   /** From the apex to the end of the first edge along it, m. */
   readonly length: number;
+  /** Path before the corner that was cut when the front turned into the first edge, m. */
+  readonly cut: number;
 };
 
 /** So far behind a break the direction of the edge before is taken, m: past the largest fillet that still counts as a corner. */
@@ -33,6 +35,7 @@ export function beforeCorner(corner: LoopCorner, before: readonly Segment[], ker
     if (!segment || segmentLength(segment) === 0) continue;
     if (segment.kind === 'arc' || Math.abs(pointCross(segmentTangentAt(segment, 0), ahead)) > straightness) break;
   }
+  const cut = pathLength(before.slice(0, i + 1));
   let back = 0;
   for (; i >= 0; i--) {
     const segment = before[i];
@@ -51,7 +54,7 @@ export function beforeCorner(corner: LoopCorner, before: readonly Segment[], ker
     // where the wall before meets the wall of the first edge
     const behind = pointCross(pointSubtract(here, there), direction) / pointCross(ahead, direction);
     if (!(behind > 0)) return null;
-    return { apex: pointSubtract(here, pointScale(ahead, behind)), angle: Math.PI - turn, length: behind };
+    return { apex: pointSubtract(here, pointScale(ahead, behind)), angle: Math.PI - turn, length: behind, cut };
   }
   return null;
 }

@@ -27,6 +27,11 @@ export type ReturnQuestion = {
   readonly round?: number;
   /** Path cut before the corner, in order of travel, ending in it; a straight cut when left out. */
   readonly before?: readonly Segment[];
+  /**
+   * Path cut right before `before` and ending where that begins, whose heat is in the plate's temperature already, as `pathRise` counts it: from the kerf's middle, in an open
+   * plate. Here it makes the tip between both, and what its walls and that tip keep of its heat besides is added.
+   */
+  readonly earlier?: readonly Segment[];
   readonly treatment: ReturnTreatment;
   readonly cut: Pick<CutConditions, 'feed' | 'kerfWidth' | 'heatIntoPlate'>;
   readonly plateTemperature: number; // K

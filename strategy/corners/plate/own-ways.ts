@@ -70,6 +70,11 @@ export function fittedWay(at: Approach, heat: OwnHeat, fits: Way): PlateWay {
   return { ...way, isLoop: true, heat: pieces, puffs };
 }
 
+/**
+ * The heat of the path since the corner before is the way's own; older heat is the plate's. With the path right before that (`earlier`) the closed form adds what the tip there keeps of both,
+ * so that together they are the closed form of the whole path: exact where the corner before was left as it is. Where that got a loop or a wait its edge's heat is older than taken here, and
+ * what is kept of it told somewhat too high. Edges still older count as in an open plate.
+ */
 function ownWay(
   { found, before, earlier }: Approach,
   { cut, properties, toPeak }: OwnHeat,

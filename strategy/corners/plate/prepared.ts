@@ -37,6 +37,8 @@ export type PlatePlanRequest = CornerPlanRequest & {
   /** Of the air, K, and what each face of the plate gives off, W/(m² K): as the plate's field takes them when left out. */
   readonly ambient?: number;
   readonly lossCoefficient?: number;
+  /** False takes the plate as if no kerf kept heat on its side, as a plain sum of heat does; otherwise they do. */
+  readonly kerfsStayOpen?: boolean;
 };
 
 /** A corner with the ways to treat it. */

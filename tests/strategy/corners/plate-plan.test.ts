@@ -9,7 +9,7 @@ import { burnBackDefaults } from '../../../strategy/corners/rules.ts';
 import { burnBack, ignitionThreshold, midZoneProperties, peakAfter, returnOf } from '../../../strategy/heat/index.ts';
 import { cutPathOf } from '../../../strategy/path/compensation/index.ts';
 import type { Point } from '../../../strategy/path/index.ts';
-import { lineBetween, loopAt } from '../../../strategy/path/index.ts';
+import { lineBetween, loopAt, pathLength } from '../../../strategy/path/index.ts';
 import { seededNumbers } from '../../bench/line.ts';
 import { runs } from '../../support/runs.ts';
 import { bruteForce, exactModel } from './exact-plate.ts';
@@ -363,5 +363,59 @@ describe('what is of no use to a plan', () => {
       expect([background, returnTime]).toEqual([null, null]);
       expect(problem).toBeDefined();
     }
+  });
+});
+
+describe('a corner behind a short edge', () => {
+  /** A strip leaning by an angle, so wide between its long edges. */
+  const strip = (width: number, lean: number): Point[] => {
+    const over = width / Math.tan(lean);
+    return [
+      { x: 0, y: 0 },
+      { x: 0.1, y: 0 },
+      { x: 0.1 - over, y: width },
+      { x: -over, y: width },
+    ];
+  };
+  const alone = { pierceHeat: 0, rules: { ...cutOf([]).rules, returnExcessLimit: 900 } };
+
+  it('returns as hot as the closed form has it with all that was cut before', () => {
+    for (const lean of [60, 90, 120])
+      for (const width of [4e-3, 6e-3, 10e-3, 15e-3]) {
+        const request = cutOf([strip(width, (lean * Math.PI) / 180)], alone);
+        const { legs, corners } = preparedPlate(request);
+        const plan = platePlan(request);
+        const behind = legs.legs.filter(({ own, earlier }) => earlier.length > 0 && pathLength(own) < 0.03);
+        expect(behind).toHaveLength(2);
+        for (const leg of behind) {
+          const found = corners[leg.corner]?.found;
+          const told = plan.corners[leg.corner];
+          if (!found || !told) throw new Error('there is no such corner');
+          const rise =
+            returnOf({
+              corner: found.onPath,
+              before: [...leg.earlier, ...leg.own],
+              treatment: { kind: 'leave' },
+              cut: request.cut,
+              plateTemperature: request.plateTemperature,
+            }) - request.plateTemperature;
+          expect(Math.abs((told.returnWithout - request.plateTemperature) / rise - 1)).toBeLessThan(0.02);
+        }
+      }
+  });
+
+  it('knows no tip before it where the cut has only just begun', () => {
+    const { legs } = preparedPlate(cutOf([strip(6e-3, 1.2), strip(6e-3, 1.2).map(({ x, y }) => ({ x, y: y + 0.1 }))]));
+    // the first of each strip comes behind its lead-in, the others behind the corner before
+    expect(legs.legs.map(({ earlier }) => earlier.length > 0)).toEqual([
+      false,
+      true,
+      true,
+      true,
+      false,
+      true,
+      true,
+      true,
+    ]);
   });
 });

@@ -200,6 +200,53 @@ describe('the return temperature', () => {
     }
   });
 
+  it('is the same whether the edges before the last heat the plate or are told with it', () => {
+    const wide = { ...cut, kerfWidth: 0.8e-3 };
+    for (const [length, across] of [
+      [4e-3, { x: 0, y: -1 }],
+      [9e-3, { x: Math.cos(-2), y: Math.sin(-2) }],
+      [7e-3, { x: Math.cos(-1), y: Math.sin(-1) }],
+    ] as const) {
+      const turn = { x: -length, y: 0 };
+      const earlier = [lineBetween({ x: turn.x - 0.08 * across.x, y: turn.y - 0.08 * across.y }, turn)];
+      const before = [lineBetween(turn, { x: 0, y: 0 })];
+      for (const treatment of [{ kind: 'leave' }, { kind: 'dwell', duration: 1.5 }, loop(90, 3e-3)] as const) {
+        const question = { corner: tip(90), treatment, cut: wide, plateTemperature: cold, properties };
+        const away = length / cut.feed + (treatment.kind === 'dwell' ? treatment.duration : 0);
+        const back = treatment.kind === 'loop' ? away + treatment.loop.length / cut.feed : away;
+        const plate = pathRise(
+          heatedPath(earlier, cut.feed, 0, cut.heatIntoPlate * cut.feed),
+          measuringPlace(tip(90), wide.kerfWidth),
+          back,
+          properties,
+        );
+        const whole = returnOf({ ...question, before: [...earlier, ...before] });
+        expect(plate + returnOf({ ...question, before, earlier })).toBeCloseTo(whole, 6);
+        expect(plate + returnOf({ ...question, before })).toBeLessThan(whole - 5);
+      }
+    }
+  });
+
+  it('does not change with how the path before is parted', () => {
+    const [side, third] = [0.01, Math.PI / 3];
+    const apex = { x: -side, y: 0 };
+    const from = { x: apex.x + 2 * side * Math.cos(third), y: 2 * side * Math.sin(third) };
+    const long = lineBetween(from, apex);
+    const ask = (...first: Segment[]) =>
+      returnOf({
+        corner: tip(60),
+        before: [...first, lineBetween(apex, { x: 0, y: 0 })],
+        treatment: { kind: 'leave' },
+        cut,
+        plateTemperature: cold,
+        properties,
+      });
+    expect(ask(segmentPart(long, 0, 0.5), segmentPart(long, 0.5, 0.9), segmentPart(long, 0.9, 1))).toBeCloseTo(
+      ask(long),
+      1,
+    );
+  });
+
   it('of a flat loop that is nearly the one of a single arc is that of the single arc, and falls with its extension', () => {
     const [beta, r] = [Math.PI / 3, 3e-3];
     const nearly = flatLoopAt(tip(60), r, loopExtension(r, beta) * (1 + 1e-6));
