@@ -1,6 +1,8 @@
+import { useQuery } from '@tanstack/react-query';
 import { usePathname } from 'expo-router';
 import { useEffect, useRef, useState, type ReactNode } from 'react';
 import { Pressable, View } from 'react-native';
+import { cornerPlanQuery } from '@/components/data/corner-plans.ts';
 import { actorOf } from '@/components/data/sessions.ts';
 import { common } from '@/components/text/common.ts';
 import { roleNames, shell } from '@/components/text/shell.ts';
@@ -100,12 +102,21 @@ function Bar({ session, pathname }: Around) {
   );
 }
 
+/** The address that says where in the pages one is: a corner plan is of a part or of a layout, which only the plan itself knows. */
+function useStandsFor(pathname: string): string {
+  const planId = /^\/corner-plans\/([^/]+)/.exec(pathname)?.[1] ?? '';
+  // the page asks for the plan; here it is only looked at
+  const { data: plan } = useQuery({ ...cornerPlanQuery(planId), enabled: false });
+  return plan?.layout ? `/layouts/${plan.layout.id}` : pathname;
+}
+
 function Places({ session, pathname, onGo }: Around & { readonly onGo?: () => void }) {
+  const standsFor = useStandsFor(pathname);
   return (
     <View role="navigation" aria-label={shell.navigation}>
       <View role="list">
         {placesOf(actorOf(session)).map((place) => {
-          const here = isWithin(pathname, place.path);
+          const here = isWithin(standsFor, place.path);
           return (
             <View key={place.path} role="listitem">
               <PlainLink href={place.href} current={here} onFollow={onGo} look="row" style={styles.place}>

@@ -4,6 +4,7 @@ import { userEvent } from '@testing-library/user-event';
 import { useState } from 'react';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { cardQuery } from '@/components/data/cards.ts';
+import { cornerPlanQuery } from '@/components/data/corner-plans.ts';
 import { setExpired } from '@/components/data/expiry.ts';
 import { machinesQuery } from '@/components/data/machines.ts';
 import { sessionQuery } from '@/components/data/sessions.ts';
@@ -14,6 +15,7 @@ import { TextField } from '@/components/ui/text-field.tsx';
 import { cardOf } from '../support/cards.ts';
 import { place } from '../support/expo-router.tsx';
 import { ids, json, offline, problem, serveWith, sessionOf, show } from '../support/page.tsx';
+import { planOf } from './corner-plan-fixtures.ts';
 
 const actorOf = (role: Parameters<typeof sessionOf>[0]) => ({
   userId: ids.user,
@@ -27,6 +29,25 @@ beforeEach(() => {
   place.pathname = '/machines';
 });
 afterEach(() => vi.unstubAllGlobals());
+
+describe('the list of pages beside a corner plan', () => {
+  const current = () => document.querySelector('[aria-current]')?.textContent ?? '';
+  const outline = { edge: [], openings: [], width: 3, height: 1.5, of: null };
+
+  it('stands at the layouts for the plan of a layout, at the parts for that of a part', async () => {
+    const laid = planOf({ layout: { id: ids.plant, version: 1, newest: 1, outline } });
+    place.pathname = `/corner-plans/${laid.id}`;
+    const shown = show(<Frame>{null}</Frame>, 'programmer', (client) =>
+      client.setQueryData(cornerPlanQuery(laid.id).queryKey, laid),
+    );
+    await waitFor(() => expect(current()).toContain('layouts'));
+    shown.unmount();
+    show(<Frame>{null}</Frame>, 'programmer', (client) =>
+      client.setQueryData(cornerPlanQuery(laid.id).queryKey, { ...laid, layout: null }),
+    );
+    await waitFor(() => expect(current()).toContain('Parts'));
+  });
+});
 
 describe('a page behind the door', () => {
   it('sends a stranger to sign in, and remembers where they were going', async () => {
