@@ -86,6 +86,7 @@ export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): 
       ...(lossCoefficient === undefined ? {} : { lossCoefficient }),
       properties,
       ...scheduledHeat(legs, ways, schedule),
+      ...(request.kerfsStayOpen === false ? { kerfs: [] } : {}),
       until: prepared.duration + schedule.late,
       ...cellOf(box, prepared.duration),
     });
