@@ -22,11 +22,17 @@ export function CornerExplainDialog({ told, onClose }: { told: ReturnExplained |
           </Stack>
           <Body>{told.formula}</Body>
           <Stack gap="xs">
+            <Heading level={3}>{cornerExplainText.edge}</Heading>
+            <Facts items={rows(told.edge)} />
+            <Small>{told.edgeNote}</Small>
+          </Stack>
+          <Stack gap="xs">
             <Heading level={3}>{cornerExplainText.inputs}</Heading>
             <Facts items={rows(told.inputs)} />
           </Stack>
           <Stack gap="xs">
             <Heading level={3}>{cornerExplainText.standing}</Heading>
+            <Facts items={rows([told.range])} />
             <Body>{told.standing}</Body>
           </Stack>
           <Stack gap="xs">

@@ -14,7 +14,7 @@ import { CornerExplainDialog } from './corner-explain.tsx';
 import { cornerQuestions } from './corner-questions.ts';
 
 type CornerHeatProps = {
-  plan: Pick<CornerPlan, 'part' | 'cutting' | 'plateTemperature' | 'thickness' | 'limit'>;
+  plan: Pick<CornerPlan, 'part' | 'cutting' | 'plateTemperature' | 'corners' | 'thickness' | 'limit'>;
   corner: PlannedCorner;
   number: number;
 };

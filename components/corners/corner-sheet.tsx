@@ -19,7 +19,7 @@ import { TreatmentBadge } from './treatment-badge.tsx';
 type CornerSheetProps = {
   corner: PlannedCorner;
   number: number;
-  plan: Pick<CornerPlan, 'part' | 'cutting' | 'plateTemperature' | 'thickness' | 'limit'>;
+  plan: Pick<CornerPlan, 'part' | 'cutting' | 'plateTemperature' | 'corners' | 'thickness' | 'limit'>;
   /** None for who only reads. */
   onOverride: ((treatment: Treatment | null) => void) | null;
   busy: boolean;

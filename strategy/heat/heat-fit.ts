@@ -85,6 +85,9 @@ export type CornerHeatInterval =
     }
   | { readonly kind: 'none'; readonly why: string };
 
+/** Why there is no interval where nobody has fitted anything. */
+export const notFitted = 'No test cuts have been fitted: how sure the figures are is not known.';
+
 /** Step of u for the slope, small against any spread that matters and large against the error of a search. */
 const STEP = 0.05;
 /** A variance this much below nothing is rounding. */
@@ -97,8 +100,7 @@ const ROUNDING = 1e-9;
  * RangeError for a fit that is none, and as from `returnOf`.
  */
 export function cornerHeatInterval(question: ReturnQuestion, fit: HeatFit | null): CornerHeatInterval {
-  if (fit === null)
-    return { kind: 'none', why: 'No test cuts have been fitted: how sure the figures are is not known.' };
+  if (fit === null) return { kind: 'none', why: notFitted };
   mustBeFit(fit);
   const fitted = heatParameters(fit);
   const atEnd = fit.names.find((name) => !(fitted[name] > rowOf(name).min && fitted[name] < rowOf(name).max));

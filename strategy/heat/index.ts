@@ -24,4 +24,4 @@ export type { TipPeak } from './corner-peak.ts';
 export { coolingCurve, peakAfter, returnDelay } from './corner-peak.ts';
 export { burnBack, ignitionRange, ignitionThreshold, straightEdgeBurnBack } from './burn-back.ts';
 export type { CornerHeatInterval, HeatFit, HeatParameterName, HeatParameters, HeatRange } from './heat-fit.ts';
-export { cornerHeatInterval, heatParameters, heatParameterTable, withParameters } from './heat-fit.ts';
+export { cornerHeatInterval, heatParameters, heatParameterTable, notFitted, withParameters } from './heat-fit.ts';

@@ -11,6 +11,7 @@ import { createRunClock } from '@/components/corners/run-clock.ts';
 import type { PlannedCorner } from '@/shared/corner-plans.ts';
 import { returnOf } from '@/strategy/heat/index.ts';
 import { plateClock } from '@/strategy/motion/index.ts';
+import { lineBetween } from '@/strategy/path/index.ts';
 import { corner, pathOf, planOf } from './corner-plan-fixtures.ts';
 
 const limit = 523.15;
@@ -140,6 +141,27 @@ describe('how a tip cools', () => {
     const [leave, loop, dwell] = questions.map(({ question }) => returnOf(question));
     expect(loop ?? 0).toBeLessThan(leave ?? 0);
     expect(dwell ?? 0).toBeLessThan(leave ?? 0);
+  });
+
+  it('counts the tip of the corner before, where the cut came by it first', () => {
+    const short = [
+      { x: 0, y: 0 },
+      { x: 0.1, y: 0 },
+      { x: 0.1, y: 6e-3 },
+      { x: 0, y: 6e-3 },
+    ];
+    const strip = planOf();
+    const contour = strip.part.contours[0];
+    if (!contour) throw new Error('the plan has a contour');
+    const segments = short.map((start, i) => lineBetween(start, short[(i + 1) % 4] ?? start));
+    const asked = (first: number, second: number) => {
+      const behind = corner(2, { options, treatment: 'dwell', dwell: 1.2, background: 320, returnTime: second });
+      const corners = [corner(1, { returnTime: first }), behind];
+      const part = { ...strip.part, contours: [{ ...contour, segments }] };
+      return cornerQuestions({ ...strip, part, corners }, behind).map(({ question }) => returnOf(question));
+    };
+    const [known, unknown] = [asked(10, 11), asked(30, 11)];
+    for (const i of [0, 1, 2]) expect(known[i] ?? 0).toBeGreaterThan((unknown[i] ?? 0) + 5);
   });
 
   it('falls from the corner until the cut comes back, and peaks after that', () => {

@@ -1,4 +1,4 @@
-import { act, fireEvent, screen, waitFor } from '@testing-library/react';
+import { act, fireEvent, screen, waitFor, within } from '@testing-library/react';
 import { userEvent } from '@testing-library/user-event';
 import { afterEach, describe, expect, it, vi } from 'vitest';
 import { CornerPlanScreen } from '@/components/corners/corner-plan-screen.tsx';
@@ -167,7 +167,38 @@ describe('a corner chosen among all', () => {
     ]) {
       expect(said).toContain(words);
     }
+    expect(said).toContain('range that test cuts leave opennone yetNo test cuts have been fitted');
     expect(said).toContain('An estimate until a test cut on this machine confirms it');
     expect(said).toContain('Class 4 laser radiation');
+  });
+
+  it('opens what the finished edge gets: its burn-back beside a straight edge’s, and how fast it cools', async () => {
+    const burning = corner(1, { treated: 900, background: 330, peak: 1750, burnBack: 7e-4 });
+    opened(planOf({ corners: [corner(0), burning] }));
+    fireEvent.click(await screen.findByRole('button', { name: /^Corner 2,/ }));
+    fireEvent.click(screen.getByRole('button', { name: /Return temperature as planned/ }));
+    const sheet = screen.getByRole('dialog', { name: 'Return temperature at corner 2' });
+    const told = (label: RegExp) =>
+      within(within(sheet).getByText(label).closest('[role="listitem"]') as HTMLElement) // the rows are elements
+        .getByRole('definition')
+        .textContent.replaceAll('\u00a0', ' ');
+    expect(told(/^burnt back at this tip/)).toBe('0.7 mm');
+    const beside = Number.parseFloat(told(/^burnt back beside a straight edge, where 1\W?371 °C burns/));
+    expect(beside).toBeGreaterThan(0.01);
+    expect(beside).toBeLessThan(0.7);
+    // EN 1011-2 with 6.5 kJ per m and mm of thickness at 20 °C: (4300 − 4.3·20)·10⁵·0.0065²·(1/480² − 1/780²) s
+    expect(told(/^a cut edge cools from 800 °C to 500 °C/)).toBe('0.05 s');
+    const said = sheet.textContent.replaceAll('\u00a0', ' ');
+    for (const words of ['an order of magnitude only', 'arc welds', 'EN 1011-2', '1 to 35 % higher'])
+      expect(said).toContain(words);
+  });
+
+  it('says nothing of what is burnt at a notch, whose plan does not know it', async () => {
+    opened(planOf({ corners: [corner(0), corner(1, { convex: false, peak: null, burnBack: null })] }));
+    fireEvent.click(await screen.findByRole('button', { name: /^Corner 2,/ }));
+    fireEvent.click(screen.getByRole('button', { name: /Return temperature as planned/ }));
+    const sheet = screen.getByRole('dialog', { name: 'Return temperature at corner 2' });
+    expect(within(sheet).queryByText(/^burnt back at this tip/)).toBeNull();
+    expect(within(sheet).getByText(/^burnt back beside a straight edge/)).toBeTruthy();
   });
 });
