@@ -1,3 +1,5 @@
+import type { ParameterFit } from '../calibrate/index.ts';
+import { fitAtEnd, likeliestWay, movedInRange, mustBeFit } from '../calibrate/index.ts';
 import { burnBack, ignitionRange, ignitionThreshold } from './burn-back.ts';
 import { peakAfter } from './corner-peak.ts';
 import type { PlateProperties } from './properties.ts';
@@ -57,20 +59,8 @@ export const heatParameterTable: readonly HeatParameterRow[] = [
   },
 ];
 
-/** What test cuts on a machine say of some parameters. Plain JSON: whoever fits test cuts makes it. */
-export type HeatFit = {
-  /** Fitted values; the others stay at their defaults. */
-  readonly parameters: Partial<HeatParameters>;
-  /** The fitted ones, in the order of the covariance. */
-  readonly names: readonly HeatParameterName[];
-  /**
-   * Covariance, row by row and without unit, of u = ln((x − min)/(max − x)) of each: the coordinate in which a parameter that cannot leave
-   * its range has no end to run into.
-   */
-  readonly covariance: readonly (readonly number[])[];
-  /** Standard deviations that the interval reaches to either side, as a fit with its degrees of freedom asks for. */
-  readonly coverage: number;
-};
+/** What test cuts on a machine say of the heat of its cuts. */
+export type HeatFit = ParameterFit<HeatParameterName>;
 
 /** The fitted value with the least and the most that the fit leaves open. */
 export type HeatRange = { readonly value: number; readonly least: number; readonly most: number };
@@ -90,8 +80,6 @@ export const notFitted = 'No test cuts have been fitted: how sure the figures ar
 
 /** Step of u for the slope, small against any spread that matters and large against the error of a search. */
 const STEP = 0.05;
-/** A variance this much below nothing is rounding. */
-const ROUNDING = 1e-9;
 
 /**
  * Return temperature, K, peak, K, and burn-back, m, of a corner with the interval that a fit leaves open; without a fit a reason why there is none. In the
@@ -104,11 +92,10 @@ export function cornerHeatInterval(question: ReturnQuestion, fit: HeatFit | null
   mustBeFit(fit);
   const fitted = heatParameters(fit);
   const atEnd = fit.names.find((name) => !(fitted[name] > rowOf(name).min && fitted[name] < rowOf(name).max));
-  if (atEnd !== undefined)
-    return { kind: 'none', why: `The fit took ${atEnd} to the end of its range, so it does not say how sure it is.` };
+  if (atEnd !== undefined) return { kind: 'none', why: fitAtEnd(atEnd) };
   const at = (moved: readonly number[]): HeatParameters =>
     fit.names.reduce(
-      (parameters, name, i) => ({ ...parameters, [name]: movedBy(name, fitted[name], moved[i] ?? 0) }),
+      (parameters, name, i) => ({ ...parameters, [name]: movedInRange(fitted[name], rowOf(name), moved[i] ?? 0) }),
       fitted,
     );
   return {
@@ -159,40 +146,14 @@ function rangeOf({ covariance, coverage, names }: HeatFit, figure: (moved: reado
     const step = (by: number) => figure(still.map((zero, i) => (i === k ? by : zero)));
     return (step(STEP) - step(-STEP)) / (2 * STEP);
   });
-  const way = covariance.map((row) => row.reduce((sum, entry, i) => sum + entry * (slopes[i] ?? 0), 0));
-  const variance = way.reduce((sum, entry, i) => sum + entry * (slopes[i] ?? 0), 0);
-  const size = way.reduce((sum, entry, i) => sum + Math.abs(entry * (slopes[i] ?? 0)), 0);
-  if (variance < -ROUNDING * size) throw new RangeError(`covariance gives a variance of ${variance}`);
-  if (!(variance > 0)) return { value, least: value, most: value };
-  const end = (deviations: number) => figure(way.map((entry) => (deviations * entry) / Math.sqrt(variance)));
+  const way = likeliestWay(covariance, slopes);
+  if (!way) return { value, least: value, most: value };
+  const end = (deviations: number) => figure(way.map((step) => deviations * step));
   return { value, least: Math.min(value, end(-coverage)), most: Math.max(value, end(coverage)) };
-}
-
-/** A value moved by `by` in its coordinate u. */
-function movedBy(name: HeatParameterName, value: number, by: number): number {
-  const { min, max } = rowOf(name);
-  return by === 0 ? value : min + (max - min) / (1 + ((max - value) / (value - min)) * Math.exp(-by));
 }
 
 function rowOf(name: HeatParameterName): HeatParameterRow {
   const row = heatParameterTable.find((candidate) => candidate.name === name);
   if (row === undefined) throw new RangeError(`${name} is no parameter`);
   return row;
-}
-
-function mustBeFit({ parameters, names, covariance, coverage }: HeatFit): void {
-  if (new Set(names).size !== names.length) throw new RangeError('a fit names a parameter twice');
-  const missing = names.find((name) => parameters[name] === undefined);
-  if (missing !== undefined) throw new RangeError(`the fit has no value for ${missing}`);
-  const square = covariance.length === names.length && covariance.every((row) => row.length === names.length);
-  if (!square) throw new RangeError(`covariance is not ${names.length} by ${names.length}`);
-  covariance.forEach((row, i) => {
-    row.forEach((entry, j) => {
-      const across = covariance[j]?.[i] ?? Number.NaN;
-      if (!(Math.abs(entry - across) <= 1e-9 * (Math.abs(entry) + Math.abs(across))))
-        throw new RangeError(`covariance ${entry} and ${across} of ${names[i]} and ${names[j]} differ`);
-    });
-    if (!((row[i] ?? Number.NaN) >= 0)) throw new RangeError(`variance ${row[i]} of ${names[i]} is negative`);
-  });
-  if (!(coverage > 0 && coverage <= 100)) throw new RangeError(`coverage ${coverage} is outside (0, 100]`);
 }

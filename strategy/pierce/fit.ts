@@ -1,21 +1,12 @@
+import type { ParameterFit } from '../calibrate/index.ts';
+import { fitAtEnd, likeliestWay, movedInRange, mustBeFit } from '../calibrate/index.ts';
 import { pierceParameterTable, type PierceParameterName, type PierceParameters } from './parameters.ts';
 import { pierceOutline, type PierceInput } from './predict.ts';
 import { routineTime } from './stage-math.ts';
 import { toleranceFactor } from './tolerance-factor.ts';
 
-/** What test cuts on a machine say of some parameters. Plain JSON: whoever fits test cuts makes it. */
-export type PierceFit = {
-  /** Fitted values; the others stay at their defaults. */
-  readonly parameters: Partial<PierceParameters>;
-  /** The fitted ones, in the order of the covariance. */
-  readonly names: readonly PierceParameterName[];
-  /**
-   * Covariance, row by row and without unit, of u = ln((x − min)/(max − x)) of each: the coordinate in which a parameter that cannot leave
-   * its range has no end to run into.
-   */
-  readonly covariance: readonly (readonly number[])[];
-  /** Standard deviations that the interval reaches to either side, as a fit with its degrees of freedom asks for. */
-  readonly coverage: number;
+/** What test cuts on a machine say of its pierces. */
+export type PierceFit = ParameterFit<PierceParameterName> & {
   /** Pierces that were tried, and the standard deviation of ln(time) of theirs about the fitted model; null where there is none. */
   readonly trials: { readonly count: number; readonly scatter: number } | null;
 };
@@ -38,8 +29,6 @@ export type PierceInterval =
 
 /** Step of u for the slope, small against any spread that matters and large against the rounding of a prediction. */
 const STEP = 1e-3;
-/** A variance this much below nothing is rounding. */
-const ROUNDING = 1e-9;
 
 /**
  * The interval of breakthrough and reserve that a fit leaves open. In the coordinates u the time is taken as straight about the fitted
@@ -70,12 +59,8 @@ export function pierceInterval(input: PierceInput, fit: PierceFit): PierceInterv
     // Does the hole close at one side? Then the slope of the other side stands for both.
     slopes.push(((more ?? time) - (less ?? time)) / (less === null || more === null ? STEP : 2 * STEP));
   }
-  const way = fit.covariance.map((row) => row.reduce((sum, entry, i) => sum + entry * (slopes[i] ?? 0), 0));
-  const variance = way.reduce((sum, entry, i) => sum + entry * (slopes[i] ?? 0), 0);
-  const size = way.reduce((sum, entry, i) => sum + Math.abs(entry * (slopes[i] ?? 0)), 0);
-  if (variance < -ROUNDING * size) throw new RangeError(`covariance gives a variance of ${variance} s²`);
-  const end = (deviations: number): number | null =>
-    variance > 0 ? timeAt(way.map((entry) => (deviations * entry) / Math.sqrt(variance))) : time;
+  const way = likeliestWay(fit.covariance, slopes);
+  const end = (deviations: number): number | null => (way ? timeAt(way.map((step) => deviations * step)) : time);
 
   const reserve = (breakthrough: number | null) => (breakthrough === null ? null : routine / breakthrough);
   const [soonest, latest] = [end(-fit.coverage), end(fit.coverage)];
@@ -101,22 +86,14 @@ function coordinatesOf(
   | { readonly kind: 'ok'; readonly at: (moved: readonly number[]) => Partial<PierceParameters> }
   | { readonly kind: 'none'; readonly why: string } {
   mustBeFit(fit);
+  mustBeTrials(fit.trials);
   const all = fit.names.map((name) => ({ ...rowOf(name), value: fit.parameters[name] ?? Number.NaN }));
   const atEnd = all.find(({ value, min, max }) => !(value > min && value < max));
   if (atEnd !== undefined) {
-    return {
-      kind: 'none',
-      why: `The fit took ${atEnd.name} to the end of its range, so it does not say how sure it is.`,
-    };
+    return { kind: 'none', why: fitAtEnd(atEnd.name) };
   }
   const at = (moved: readonly number[]) =>
-    Object.fromEntries(
-      all.map(({ name, value, min, max }, i) => {
-        const by = moved[i] ?? 0;
-        // Unmoved it is the fitted value to the last bit.
-        return [name, by === 0 ? value : min + (max - min) / (1 + ((max - value) / (value - min)) * Math.exp(-by))];
-      }),
-    );
+    Object.fromEntries(all.map((row, i) => [row.name, movedInRange(row.value, row, moved[i] ?? 0)]));
   return { kind: 'ok', at };
 }
 
@@ -126,23 +103,7 @@ function rowOf(name: PierceParameterName) {
   return row;
 }
 
-function mustBeFit({ parameters, names, covariance, coverage, trials }: PierceFit): void {
-  const once = new Set(names).size === names.length;
-  if (!once) throw new RangeError('a fit names a parameter twice');
-  const missing = names.find((name) => parameters[name] === undefined);
-  if (missing !== undefined) throw new RangeError(`the fit has no value for ${missing}`);
-  const square = covariance.length === names.length && covariance.every((row) => row.length === names.length);
-  if (!square) throw new RangeError(`covariance is not ${names.length} by ${names.length}`);
-  covariance.forEach((row, i) => {
-    row.forEach((entry, j) => {
-      const across = covariance[j]?.[i] ?? Number.NaN;
-      if (!(Math.abs(entry - across) <= 1e-9 * (Math.abs(entry) + Math.abs(across)))) {
-        throw new RangeError(`covariance ${entry} and ${across} of ${names[i]} and ${names[j]} differ`);
-      }
-    });
-    if (!((row[i] ?? Number.NaN) >= 0)) throw new RangeError(`variance ${row[i]} of ${names[i]} is negative`);
-  });
-  if (!(coverage > 0 && coverage <= 100)) throw new RangeError(`coverage ${coverage} is outside (0, 100]`);
+function mustBeTrials(trials: PierceFit['trials']): void {
   if (trials !== null && !(trials.scatter >= 0 && trials.scatter <= 10)) {
     throw new RangeError(`scatter ${trials.scatter} is outside [0, 10]`);
   }
