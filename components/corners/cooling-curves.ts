@@ -1,5 +1,5 @@
 import type { Treatment } from '@/shared/corner-plans.ts';
-import { burnBack, coolingCurve, peakAfter, returnDelay } from '@/strategy/heat/index.ts';
+import { answered, burnBack, coolingCurve, peakAfter, returnDelay } from '@/strategy/heat/index.ts';
 import type { CornerQuestion } from './corner-questions.ts';
 
 /** A corner's tip against time with one treatment. Times in s from when the front is at the end of the first edge. */
@@ -56,14 +56,4 @@ function timesOf(delay: number, last: number): number[] {
   const even = Array.from({ length: steps + 1 }, (_, i) => -before + ((before + last) * i) / steps);
   const near = [0, delay].flatMap((time) => [-0.2, -0.1, -0.05, 0, 0.05, 0.1, 0.2, 0.35, 0.5].map((by) => time + by));
   return [...new Set([...even, ...near].filter((time) => time >= -before && time <= last))].sort((a, b) => a - b);
-}
-
-/** Null where the model refuses the question: a spike without an angle, a feed of zero. */
-function answered<T>(ask: () => T): T | null {
-  try {
-    return ask();
-  } catch (error) {
-    if (error instanceof RangeError) return null;
-    throw error;
-  }
 }

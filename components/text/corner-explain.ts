@@ -1,5 +1,6 @@
 import type { CornerPlan, PlannedCorner } from '@/shared/corner-plans.ts';
 import {
+  answered,
   cornerHeatInterval,
   diffusivity,
   ignitionThreshold,
@@ -174,14 +175,4 @@ function certaintyOf(
   const interval = question && cornerHeatInterval(question, null);
   const why = interval?.kind === 'none' ? interval.why : notFitted;
   return { range: { label, value: 'none yet' }, standing: `${why} ${estimate}` };
-}
-
-/** Null where the model refuses: a cut that leaves no heat, a plate as hot as its own cooling. */
-function answered<T>(ask: () => T): T | null {
-  try {
-    return ask();
-  } catch (error) {
-    if (error instanceof RangeError) return null;
-    throw error;
-  }
 }

@@ -1,3 +1,4 @@
+export { answered } from './answered.ts';
 export type { PlateProperties } from './properties.ts';
 export { diffusionLength, diffusivity, midZoneProperties } from './properties.ts';
 export { besselIScaled, besselK0, besselK0Scaled, erfc, exponentialIntegral, logGamma } from './special-functions.ts';
