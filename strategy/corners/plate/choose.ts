@@ -60,14 +60,20 @@ export type Chosen<Way, State> = {
 /**
  * Ways for all corners in their order, such that few corners stay over a limit and the time added by all is small: fewest corners over first, then the time. Where
  * nothing keeps a corner under its limits it gets what leaves it least over. Each corner takes what is best for it alone, unless a dearer way there saves more at
- * the corners after it, as far as it reaches, when those take what is best for them alone. Deterministic.
+ * the corners after it, as far as it reaches, when those take what is best for them alone. Deterministic. With what was chosen before (`known`) only the corners `from` on
+ * are decided: the same as all of them where no corner up to the reach of those before `from` has changed.
  */
-export function choose<Way extends Judged, State>(model: ChoiceModel<Way, State>): Chosen<Way, State> {
-  const ways: Way[] = [];
-  const open: (readonly Way[])[] = [];
-  const before: State[] = [];
-  let ahead: Ahead<Way, State> = { corners: [], behind: model.start };
-  for (let corner = 0; corner < model.corners; corner++) {
+export function choose<Way extends Judged, State>(
+  model: ChoiceModel<Way, State>,
+  known?: Chosen<Way, State>,
+  from = 0,
+): Chosen<Way, State> {
+  if (known && from >= model.corners) return known;
+  const ways: Way[] = known ? known.ways.slice(0, from) : [];
+  const open: (readonly Way[])[] = known ? known.open.slice(0, from) : [];
+  const before: State[] = known ? known.before.slice(0, from) : [];
+  let ahead: Ahead<Way, State> = { corners: [], behind: known?.before[from] ?? model.start };
+  for (let corner = ways.length; corner < model.corners; corner++) {
     ahead = lookedAhead(model, corner, ahead, model.reach(corner));
     const [own, ...after] = ahead.corners;
     if (!own) break;

@@ -7,6 +7,7 @@ import { plateCoolingTime } from '../../heat/surface-loss.ts';
 import { contourBox } from '../../path/contour.ts';
 import type { Box } from '../../path/point.ts';
 import { boxGrow, boxUnion, emptyBox } from '../../path/point.ts';
+import type { Chosen } from './choose.ts';
 import { choose } from './choose.ts';
 import type { PlateWay } from './own-ways.ts';
 import type { OldHeat, PlateModel, PlateState, WayJudged } from './plate-model.ts';
@@ -24,6 +25,10 @@ export type DecidedPlate = {
   readonly model: PlateModel<PlateWay>;
   readonly schedule: Schedule;
   readonly field: PlateField;
+  /** The cut that the field was computed for. */
+  readonly heat: OldHeat;
+  /** Whether what was chosen before was held to where it could be. */
+  readonly held: boolean;
   /** How often the plate's heat was computed. */
   readonly fields: number;
   /** Mean temperature of the whole plate when the cut ends, K. */
@@ -55,27 +60,79 @@ const sameCut = 1e-2;
  * chosen where it keeps every limit.
  */
 export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): DecidedPlate {
-  const { request, legs, context, properties } = prepared;
-  const { plateTemperature, thickness, ambient, lossCoefficient, plate } = request;
-  const going = (share: number): void => {
-    if (progress?.(Math.min(1, share)) === false) throw new PlatePlanCancelled('the plan was given up');
+  return settled(prepared, passFor(prepared)(null), progress);
+}
+
+/**
+ * The treatments once more when corners from leg `changed` on ask for something else than when `kept` was decided: on its field as long as the cut stays the one that was
+ * computed for, by the same measure as between two passes; what is decided before the changed corners come into sight stays.
+ */
+export function decidedAgain(
+  prepared: PreparedPlate,
+  kept: DecidedPlate,
+  changed: number,
+  progress?: PlanProgress,
+): DecidedPlate {
+  going(progress, 0);
+  // what is held to where it can be is decided anew as a whole: what was free before may be held no more
+  const from = kept.held ? 0 : Math.max(0, changed - ahead);
+  const chosen = passFor(prepared)(kept.heat, undefined, kept, from);
+  if (changedBy(chosen, kept.heat) > sameCut * prepared.duration) return settled(prepared, chosen, progress);
+  going(progress, 1);
+  const { field, heat, meanAtEnd } = kept;
+  return {
+    ...chosen,
+    schedule: scheduleOf(prepared.legs, chosen.ways),
+    field,
+    heat,
+    held: false,
+    fields: 0,
+    meanAtEnd,
   };
+}
+
+function going(progress: PlanProgress | undefined, share: number): void {
+  if (progress?.(Math.min(1, share)) === false) throw new PlatePlanCancelled('the plan was given up');
+}
+
+type Pass = Chosen<WayJudged<PlateWay>, PlateState<PlateWay>> & { readonly model: PlateModel<PlateWay> };
+
+/** By how much treatments were changed all in all, s. */
+const changedBy = ({ ways }: Pass, { addedTime }: Pick<OldHeat, 'addedTime'>): number =>
+  ways.reduce((sum, way, k) => sum + Math.abs(way.addedTime - (addedTime[k] ?? 0)), 0);
+
+/** One choice at all corners, or at those `from` on, on a field's heat. */
+function passFor(prepared: PreparedPlate) {
+  const { request, legs, context, properties } = prepared;
   const box = heatedBox(prepared);
-  const pass = (old: OldHeat | null, held?: readonly WayJudged<PlateWay>[]) => {
+  return (
+    old: OldHeat | null,
+    held?: readonly WayJudged<PlateWay>[],
+    known?: Chosen<WayJudged<PlateWay>, PlateState<PlateWay>>,
+    from?: number,
+  ): Pass => {
     const model = plateModel<PlateWay>({
       legs: legs.legs,
       corners: prepared.corners,
       limit: context.limit,
       ignition: request.rules.burnBack?.ignition ?? Infinity,
-      plateTemperature,
+      plateTemperature: request.plateTemperature,
       properties,
       plate: box,
       old,
       ahead,
       ...(held ? { held } : {}),
     });
-    return { model, ...choose(model) };
+    return { model, ...choose(model, known, from) };
   };
+}
+
+/** Choices and fields by turns from a choice on, until the field is that of the choice. */
+function settled(prepared: PreparedPlate, first: Pass, progress?: PlanProgress): DecidedPlate {
+  const { request, legs, properties } = prepared;
+  const { plateTemperature, thickness, ambient, lossCoefficient, plate } = request;
+  const box = heatedBox(prepared);
+  const pass = passFor(prepared);
   const fieldFor = (ways: readonly WayJudged<PlateWay>[], schedule: Schedule): PlateField =>
     plateField({
       plate: box,
@@ -91,25 +148,18 @@ export function decidedPlate(prepared: PreparedPlate, progress?: PlanProgress): 
       ...cellOf(box, prepared.duration),
     });
 
-  let chosen = pass(null);
+  let chosen = first;
   for (let fields = 1; ; fields++) {
-    going(fields / (mostFields + 1));
+    going(progress, fields / (mostFields + 1));
     const schedule = scheduleOf(legs, chosen.ways);
     const field = fieldFor(chosen.ways, schedule);
-    const next = pass(
-      { field, settled: settledAfter(field, properties), ...schedule },
-      fields > freeFields ? chosen.ways : undefined,
-    );
-    const changed = next.ways.reduce(
-      (sum, way, k) => sum + Math.abs(way.addedTime - (chosen.ways[k]?.addedTime ?? 0)),
-      0,
-    );
-    chosen = next;
-    if (changed > sameCut * prepared.duration && fields < mostFields) continue;
-    going(1);
-    const { model, ways, open, before } = chosen;
+    const heat: OldHeat = { field, settled: settledAfter(field, properties), ...schedule };
+    const held = fields > freeFields;
+    chosen = pass(heat, held ? chosen.ways : undefined);
+    if (changedBy(chosen, heat) > sameCut * prepared.duration && fields < mostFields) continue;
+    going(progress, 1);
     const meanAtEnd = meanOf(prepared, box, field, prepared.duration + schedule.late);
-    return { model, ways, open, before, schedule: scheduleOf(legs, ways), field, fields, meanAtEnd };
+    return { ...chosen, schedule: scheduleOf(legs, chosen.ways), field, heat, held, fields, meanAtEnd };
   }
 }
 

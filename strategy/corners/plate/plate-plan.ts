@@ -10,11 +10,12 @@ import type { OrderQuestion, OrderSuggestion } from './order.ts';
 import { orderSuggestions } from './order.ts';
 import type { PlateWay } from './own-ways.ts';
 import type { DecidedPlate, PlanProgress } from './passes.ts';
-import { decidedPlate } from './passes.ts';
-import type { WayJudged } from './plate-model.ts';
+import { decidedAgain, decidedPlate } from './passes.ts';
+import type { PlacedWay, WayJudged } from './plate-model.ts';
 import { loopsNear } from './plate-model.ts';
 import type { PlateCorner, PlatePlanRequest, PreparedPlate } from './prepared.ts';
-import { isWay, preparedPlate } from './prepared.ts';
+import { isWay, preparedAgain, preparedPlate } from './prepared.ts';
+import type { Schedule } from './schedule.ts';
 import type { Limits, RunnerUp } from './tell.ts';
 import { candidateOn, runnerUpOf, told } from './tell.ts';
 
@@ -60,8 +61,36 @@ export type PlatePlan = {
  * of the plate as it comes: what the cut itself warms is judged, not forgiven. Deterministic.
  */
 export function platePlan(request: PlatePlanRequest, progress?: PlanProgress): PlatePlan {
+  return keptPlan(request, progress).plan;
+}
+
+/** A plan with what it was decided from, to plan again from. */
+export type KeptPlan = {
+  readonly plan: PlatePlan;
+  readonly prepared: PreparedPlate;
+  readonly decided: DecidedPlate;
+  readonly told: readonly ToldCorner[];
+};
+
+/** As `platePlan`, the plan kept with what it was decided from: tens of MB for thousands of corners. */
+export function keptPlan(request: PlatePlanRequest, progress?: PlanProgress): KeptPlan {
   const prepared = preparedPlate(request);
-  return planOf(prepared, decidedPlate(prepared, progress));
+  const decided = decidedPlate(prepared, progress);
+  return { ...toldPlan(prepared, decided), prepared, decided };
+}
+
+/**
+ * The plan of the same cut with other treatments asked for, K, s and m: what `platePlan` decides from scratch, from the heat that the kept plan was decided on as long as
+ * the cut stays within a hundredth of its time, and the kept plan itself when nothing else is asked for. What a few other treatments leave as it was is neither computed nor told again. Throws as
+ * `platePlan`. Deterministic.
+ */
+export function planAgain(kept: KeptPlan, overrides: PlatePlanRequest['overrides'], progress?: PlanProgress): KeptPlan {
+  const { prepared, changed } = preparedAgain(kept.prepared, overrides);
+  if (changed.length === 0) return kept;
+  const others = new Set(changed);
+  const first = prepared.legs.legs.findIndex(({ corner }) => others.has(corner));
+  const decided = decidedAgain(prepared, kept.decided, first < 0 ? prepared.legs.legs.length + 1 : first, progress);
+  return { ...toldPlan(prepared, decided, kept), prepared, decided };
 }
 
 /** The plan with other orders of its cut that come back later to what is hot; as `platePlan` and `orderSuggestions`. */
@@ -76,20 +105,62 @@ export function platePlanWithOrders(
 }
 
 /** The plan of what was decided, told. */
-export function planOf(prepared: PreparedPlate, decided: DecidedPlate): PlatePlan {
+export const planOf = (prepared: PreparedPlate, decided: DecidedPlate): PlatePlan => toldPlan(prepared, decided).plan;
+
+/** A corner as it was told, and what it was told of. */
+type ToldCorner = {
+  readonly of: PlateCorner;
+  readonly judged: readonly WayJudged<PlateWay>[];
+  readonly loops: readonly PlacedWay<PlateWay>[];
+  readonly plan: PlateCornerPlan;
+};
+
+/** K and s below which nothing is told anew: what rounding leaves where the whole cut is later. */
+const rounding = 1e-6;
+
+const sameJudged = (a: WayJudged<PlateWay>, b: WayJudged<PlateWay> | undefined): boolean =>
+  a === b ||
+  (b !== undefined &&
+    a.way === b.way &&
+    a.over > 0 === b.over > 0 &&
+    Math.abs(a.wait - b.wait) < rounding &&
+    Math.abs(a.returnsAt - b.returnsAt) < rounding &&
+    Math.abs(a.background - b.background) < rounding);
+
+const sameLoop = (a: PlacedWay<PlateWay>, b: PlacedWay<PlateWay> | undefined): boolean =>
+  a === b || (b !== undefined && a.corner === b.corner && a.way === b.way);
+
+const allSame = <T>(a: readonly T[], b: readonly T[], same: (x: T, y: T | undefined) => boolean): boolean =>
+  a === b || (a.length === b.length && a.every((x, i) => same(x, b[i])));
+
+function toldPlan(
+  prepared: PreparedPlate,
+  decided: DecidedPlate,
+  known?: KeptPlan,
+): { readonly plan: PlatePlan; readonly told: readonly ToldCorner[] } {
   const { request, context, legs, duration } = prepared;
   const { ways, schedule } = decided;
   const limits: Limits = { limit: context.limit, plateTemperature: request.plateTemperature, rules: request.rules };
   const legOf = new Map(legs.legs.map(({ corner }, k) => [corner, k]));
-  const corners = prepared.corners.map((corner, i): PlateCornerPlan => {
+  const told = prepared.corners.map((corner, i): ToldCorner => {
     const k = legOf.get(i);
     const chosen = k === undefined ? undefined : ways[k];
+    const state = k === undefined ? undefined : decided.before[k];
+    const judged = k === undefined || !chosen ? [] : [chosen, ...(decided.open[k] ?? [])];
+    const loops = state && corner.near.size > 0 ? loopsNear(state, corner.near) : [];
+    const before = known?.told[i];
+    if (before?.of === corner && allSame(judged, before.judged, sameJudged) && allSame(loops, before.loops, sameLoop))
+      return k === undefined || !chosen
+        ? before
+        : { ...before, plan: cutAt(before.plan, returnTimeOf(schedule, k, chosen)) };
     // a contour that can't be cut warms nothing and is come to never
-    if (k === undefined || !chosen) return uncut(corner, prepared);
-    return cornerOf(corner, k, chosen, prepared, decided, limits);
+    const plan =
+      k === undefined || !chosen ? uncut(corner, prepared) : cornerOf(corner, k, chosen, prepared, decided, limits);
+    return { of: corner, judged, loops, plan };
   });
+  const corners = told.map(({ plan }) => plan);
   const cutTime = duration + schedule.late;
-  return {
+  const plan: PlatePlan = {
     limit: context.limit,
     corners,
     totals: {
@@ -101,7 +172,15 @@ export function planOf(prepared: PreparedPlate, decided: DecidedPlate): PlatePla
       cutTime,
     },
   };
+  return { plan, told };
 }
+
+/** When cutting along a corner's second edge begins, s. */
+const returnTimeOf = ({ arrives }: Schedule, k: number, { delay }: WayJudged<PlateWay>): number =>
+  (arrives[k] ?? 0) + delay;
+
+const cutAt = (plan: PlateCornerPlan, returnTime: number): PlateCornerPlan =>
+  plan.returnTime === returnTime ? plan : { ...plan, returnTime };
 
 const greatest = (corners: readonly PlateCornerPlan[], of: (corner: PlateCornerPlan) => number | null): number | null =>
   corners.reduce<number | null>((most, corner) => {
@@ -153,7 +232,7 @@ function cornerOf(
     options: planned.options.map((option, i) => ({ ...option, peak: null, burnBack: null, ...after[i] })),
     ...afterwards(prepared, chosen),
     background: chosen.background,
-    returnTime: (schedule.arrives[k] ?? 0) + chosen.delay,
+    returnTime: returnTimeOf(schedule, k, chosen),
     runnerUp: runnerUpOf(chosen, every, candidates, limits),
   };
 }

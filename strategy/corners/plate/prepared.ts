@@ -11,7 +11,7 @@ import type { Box } from '../../path/point.ts';
 import { boxGrow, boxUnion, emptyBox, pointDistance } from '../../path/point.ts';
 import type { Segment } from '../../path/segment.ts';
 import { pathLength, segmentEnd } from '../../path/segment.ts';
-import type { Candidate, Context, CornerPlanRequest, Prospect, Way } from '../case.ts';
+import type { Candidate, Context, CornerPlanRequest, CornerTreatment, Prospect, Way } from '../case.ts';
 import { contextOf } from '../context.ts';
 import { doubledBackSaid } from '../decide.ts';
 import { hundredths } from '../hundredths.ts';
@@ -100,6 +100,40 @@ export function preparedPlate(request: PlatePlanRequest): PreparedPlate {
 
 const none: ReadonlySet<number> = new Set();
 
+/** The same cut with other treatments asked for, and the numbers of the corners that this changes something for. All other corners stay the same objects. */
+export function preparedAgain(
+  prepared: PreparedPlate,
+  overrides: PlatePlanRequest['overrides'],
+): { readonly prepared: PreparedPlate; readonly changed: readonly number[] } {
+  const { request: asked, corners: known } = prepared;
+  const request: PlatePlanRequest = { ...asked, overrides };
+  const otherwise = (id: string) => asked.overrides?.[id] !== overrides?.[id];
+  const reachesOtherwise = known.some(
+    ({ found }) => otherwise(found.id) && reachOf(found, asked).reach !== reachOf(found, request).reach,
+  );
+  const near = reachesOtherwise ? reachingEachOther(known.map(({ found }) => reachOf(found, request))) : null;
+  const changed: number[] = [];
+  const corners = known.map((corner, i) => {
+    const nearNow = near?.[i] ?? corner.near;
+    const sameNear = nearNow === corner.near || [...nearNow].join() === [...corner.near].join();
+    if (sameNear && !otherwise(corner.found.id)) return corner;
+    changed.push(i);
+    return { ...corner, near: nearNow, asked: askedOf(corner, overrides?.[corner.found.id]) };
+  });
+  if (changed.length === 0) return { prepared, changed };
+  return { prepared: { ...prepared, request, context: { ...prepared.context, request }, corners }, changed };
+}
+
+/** The way asked for at a corner, next to the loops placed so far. */
+function askedOf(
+  corner: Pick<PlateCorner, 'useless' | 'leave' | 'others'>,
+  wanted: CornerTreatment | undefined,
+): PlateCorner['asked'] {
+  if (wanted === undefined || corner.useless) return null;
+  if (wanted === 'leave') return () => corner.leave;
+  return (near) => corner.others(near).find(({ treatment }) => treatment === wanted) ?? null;
+}
+
 function boxOf({ plate, contours }: PlatePlanRequest): Box {
   if (plate === null) {
     const box = contours.reduce((all, { contour }) => boxUnion(all, contourBox(contour)), emptyBox);
@@ -149,7 +183,6 @@ function plateCorner(
   const { corner, contour, onPath, id } = found;
   const usable = !doublesBack(corner) && tooNear(found, request.cut.kerfWidth) === null;
   const sharp = treated(corner, request.rules.treatBelowAngle);
-  const wanted = usable ? request.overrides?.[id] : undefined;
   const along = pathBefore(contour.contour, corner, onPath.point);
   const at = approachOf(found, leg, along);
   const asWay = (one: Way | Candidate): PlateWay | Candidate => ('fits' in one ? one : fittedWay(at, heat, one));
@@ -186,7 +219,7 @@ function plateCorner(
   const tried = (placed: readonly PlacedWay<PlateWay>[]) => [...loopsNextTo(placed), ...withoutLoops()];
   let left: PlateWay | null = null;
   const leave = () => (left ??= leaveWay(at, heat));
-  return {
+  const planned: PlateCorner = {
     found,
     sharp: usable && sharp,
     useless: usable ? null : uselessSaid(found, request.cut.kerfWidth),
@@ -198,16 +231,11 @@ function plateCorner(
     counts: usable && corner.convex,
     tried,
     others: (placed) => tried(placed).filter(isWay),
-    asked:
-      wanted === undefined
-        ? null
-        : (placed) =>
-            wanted === 'leave'
-              ? leave()
-              : (tried(placed)
-                  .filter(isWay)
-                  .find(({ treatment }) => treatment === wanted) ?? null),
+    asked: null,
   };
+  const wanted = request.overrides?.[id];
+  // a copy would compute the leaving at once
+  return wanted === undefined ? planned : { ...planned, asked: askedOf(planned, wanted) };
 }
 
 function uselessSaid(found: Prospect, kerfWidth: number): PlateCorner['useless'] {
