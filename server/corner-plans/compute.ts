@@ -1,10 +1,14 @@
+import { createHash } from 'node:crypto';
 import type { z } from 'zod';
 import type { CornerPlan, cornerPlanEndpoints, PlannedCorner } from '../../shared/corner-plans.ts';
 import type { Prediction, StrategyContent } from '../../shared/strategies.ts';
 import {
   cornerInsert,
+  keptPlan,
+  planAgain,
   platePlan,
   platePlanWithOrders,
+  type KeptPlan,
   type PlateCornerPlan,
   type PlatePlan,
   type PlatePlanRequest,
@@ -41,9 +45,34 @@ export type PlannedPlate = Pick<CornerPlan, 'limit' | 'corners' | 'totals'>;
  * The corners planned with a strategy's rules and cut on what plate there is, in their order and time. Takes seconds for thousands of corners: for a worker. Throws RangeError with
  * a sentence for what can't be planned.
  */
-export function plannedPlate({ source, choices }: PlanAsked): PlannedPlate {
-  const { content, nozzle, planned } = source;
-  const { plan, orders } = ordered(planRequestOf(source, choices), planned);
+export const plannedPlate = ({ source, choices }: PlanAsked): PlannedPlate =>
+  presentPlate({ source, choices }, ordered(planRequestOf(source, choices), source.planned));
+
+/** Corners up to which a plan is kept: some 15 kB each, of the 384 MB that a worker has. */
+const mostKept = 6000;
+
+/**
+ * As `plannedPlate`, which keeps the last plan with what it was decided from: asked again with other treatments for the same plate, only what they change is planned anew. One plan
+ * is kept, and let go before another plate is planned.
+ */
+export function platePlanner(): (asked: PlanAsked) => PlannedPlate {
+  let last: { readonly asked: string; readonly kept: KeptPlan } | null = null;
+  return ({ source, choices }) => {
+    if (triesOrders(source.planned)) return plannedPlate({ source, choices });
+    const asked = createHash('sha256')
+      .update(JSON.stringify([source, { ...choices, overrides: null }]))
+      .digest('base64');
+    const before = last?.asked === asked ? last.kept : null;
+    last = null;
+    const kept = before ? planAgain(before, choices.overrides) : keptPlan(planRequestOf(source, choices));
+    if (kept.plan.corners.length <= mostKept) last = { asked, kept };
+    return presentPlate({ source, choices }, { plan: kept.plan, orders: [] });
+  };
+}
+
+/** A plan as it is kept and sent. */
+function presentPlate({ source, choices }: PlanAsked, { plan, orders }: Ordered): PlannedPlate {
+  const { content, nozzle } = source;
   const chosen = new Set(Object.keys(choices.overrides));
   return {
     limit: plan.limit,
@@ -61,13 +90,18 @@ export function plannedPlate({ source, choices }: PlanAsked): PlannedPlate {
 /** Corners up to which other orders are tried: each is planned whole. */
 const mostForOrders = 600;
 
+/** Whether other orders are tried: those of a layout that isn't too large. */
+const triesOrders = ({ layout, placed, contours }: Planned): boolean =>
+  layout !== null &&
+  placed !== null &&
+  contours.reduce((sum, { segments }) => sum + segments.length, 0) <= mostForOrders;
+
+type Ordered = ReturnType<typeof platePlanWithOrders>;
+
 /** The plan, of a layout with orders that would spare treatments; the order of a part's contours follows from how they lie in each other. */
-function ordered(
-  request: PlatePlanRequest,
-  { layout, placed, contours }: Planned,
-): ReturnType<typeof platePlanWithOrders> {
-  const corners = contours.reduce((sum, { segments }) => sum + segments.length, 0);
-  if (!layout || !placed || corners > mostForOrders) return { plan: platePlan(request), orders: [] };
+function ordered(request: PlatePlanRequest, planned: Planned): Ordered {
+  const { placed } = planned;
+  if (!placed || !triesOrders(planned)) return { plan: platePlan(request), orders: [] };
   return platePlanWithOrders(request, {
     pieceOf: (contourId) => contourId.slice(0, contourId.indexOf('.')),
     allowed: (order) => cutOrderFault(placed, order) === null,

@@ -1,15 +1,17 @@
 import { drawingRead } from '../../strategy/path/drawing/index.ts';
 import { layoutJudged } from '../../strategy/path/plate/index.ts';
-import { plannedPlate } from '../corner-plans/compute.ts';
+import { platePlanner } from '../corner-plans/compute.ts';
 import { planComparison } from '../corner-plans/estimate.ts';
 import { answerQuestions } from '../workers/answer.ts';
 import type { DrawingAnswer, DrawingQuestion } from './reader.ts';
 import { wireReading } from './wire.ts';
 
+const planned = platePlanner();
+
 answerQuestions<DrawingQuestion, DrawingAnswer>((question) => {
   if (question.kind === 'plan') {
     try {
-      return { kind: 'plan', plan: plannedPlate(question.asked) };
+      return { kind: 'plan', plan: planned(question.asked) };
     } catch (error) {
       // what can't be planned the planner says in a sentence; anything else is a fault
       if (error instanceof RangeError) return { kind: 'none', why: error.message };

@@ -1,5 +1,5 @@
 import process from 'node:process';
-import { platePlan } from '../../strategy/corners/index.ts';
+import { keptPlan, planAgain, platePlan } from '../../strategy/corners/index.ts';
 import { cutOfPlate } from './cut-plate.ts';
 import { sayLine } from './line.ts';
 
@@ -23,9 +23,29 @@ function planned(corners: number, rounds: number): { readonly corners: number; r
   return { corners: found, time: least };
 }
 
+/** The processor's time, ms, for planning the plate again when one corner is asked for: the least and the most of some corners all over it, each the least of three. */
+function plannedAgain(corners: number, rounds: number): { readonly least: number; readonly most: number } {
+  const kept = keptPlan(cutOfPlate(corners / 10));
+  const waits = kept.plan.corners.filter(({ treatment }) => treatment === 'dwell');
+  const times = Array.from({ length: rounds }, (_, round) => {
+    const id = waits[Math.floor((round * waits.length) / rounds)]?.id ?? '';
+    return Math.min(
+      ...Array.from({ length: 3 }, () => {
+        const start = process.cpuUsage();
+        const again = planAgain(kept, { [id]: 'leave' });
+        const used = process.cpuUsage(start);
+        if (again.plan.totals.treated >= kept.plan.totals.treated) throw new Error(`${id} is not left`);
+        return (used.user + used.system) / 1000;
+      }),
+    );
+  });
+  return { least: Math.min(...times), most: Math.max(...times) };
+}
+
 // The whole plan: what fits, the plate's heat, the choice, and what is said of it. The path is given.
 const small = planned(few, 8);
 const middle = planned(usual, 5);
+const again = plannedAgain(usual, 12);
 const large = planned(many, 1);
 const evenly = (small.time * large.corners) / small.corners;
 sayLine({
@@ -40,3 +60,6 @@ sayLine({
   errorMax: null,
   exponent: Math.log(large.time / small.time) / Math.log(large.corners / small.corners),
 });
+process.stderr.write(
+  `plan-growth: the plate of ${middle.corners} corners again with one of them asked for: ${again.least.toFixed(0)} to ${again.most.toFixed(0)} ms\n`,
+);

@@ -296,6 +296,26 @@ describe('a corner plan', () => {
     expect(redone.body.totals.addedTime).toBeLessThan(body.totals.addedTime);
     const { body: part } = await made(programmer.call(partEndpoints.get, { params: { partId } }));
     expect(part.cornerPlans.map(({ id }) => id)).toContain(planId);
+
+    // planned again from what is kept: asked for no longer, as it was; on a warmer plate nothing of the colder one's
+    const redo = (more: object, of: typeof version) =>
+      made(
+        programmer.call(cornerPlanEndpoints.redo, {
+          params: { planId },
+          body: { revisionId, ...choices, ...more },
+          version: of,
+        }),
+      );
+    const back = await redo({}, redone.version);
+    const decided = (plan: typeof body) =>
+      plan.corners.map(({ id, treatment, chosenBy }) => ({ id, treatment, chosenBy }));
+    expect(decided(back.body)).toEqual(decided(body));
+    expect(back.body.totals.addedTime).toBeCloseTo(body.totals.addedTime, 1);
+    const warm = await redo({ plateTemperature: 380 }, back.version);
+    expect(warm.body.limit).toBeGreaterThan(body.limit + 50);
+    warm.body.corners.forEach(({ background }, i) =>
+      expect(background).toBeGreaterThan((back.body.corners[i]?.background ?? 0) + 30),
+    );
   });
 
   test('refuses a choice for a corner the part does not have', async () => {
