@@ -172,6 +172,8 @@ describe('the preview of a corner plan', () => {
   it('draws nothing anew while 2,000 corners are pushed about, and shows them as dots until they can be told apart', async () => {
     const { page, context, noise } = await opened('wide', 200);
     const frame = frameOf(page);
+    // the plate's heat comes from a worker: only once it stands behind the drawing is there nothing to draw
+    await page.getByTestId('heat').waitFor({ state: 'attached' });
     expect(await page.getByTestId('drawing-mark').count()).toBeLessThan(20);
     expect(await page.getByTestId('drawing-dots').count()).toBeGreaterThan(0);
     const box = await boxOf(frame);
